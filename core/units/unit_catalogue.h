@@ -1,0 +1,95 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/problem.h"
+
+#include <optional>
+#include <span>
+#include <string>
+#include <string_view>
+#include <vector>
+
+/// What may be typed behind a number, and exactly what it means. Files, screens and the command line
+/// share this one list; a new unit is one line of it.
+namespace evenstroke {
+
+/// What a unit measures. Two units convert into each other only within one dimension.
+enum class Dimension {
+    number,               ///< a bare number, a code, a mark
+    share,                ///< per cent, fraction
+    temperature,          ///< a point on a thermometer
+    pressure,
+    rotation,             ///< revolutions over time
+    power,
+    torque,
+    mass_flow,
+    volume_flow,          ///< becomes a mass flow only with a density
+    specific_energy,      ///< heating value
+    specific_consumption, ///< fuel over work
+    length,               ///< heights, draughts, rack marks
+    angle,
+    duration,
+    velocity,
+    density,
+    viscosity,
+    mass,
+};
+
+enum class PressureKind { none, gauge, absolute, difference };
+
+/// Index of a unit in the catalogue.
+using UnitId = int;
+
+/// One unit: `si = factor * typed + offset`.
+struct Unit
+{
+    std::string_view symbol;     ///< as the program writes it: "kgf/cm²", "°C"
+    Dimension dimension;
+    double factor;               ///< exact, see the source named at the catalogue
+    double offset;               ///< only temperatures have one
+    std::vector<std::string_view> spellings; ///< further accepted spellings
+
+    double to_si(double typed) const { return factor * typed + offset; }
+    double from_si(double value_si) const { return (value_si - offset) / factor; }
+    /// Differences never take the offset: 10 °C warmer is 10 K warmer.
+    double difference_to_si(double typed) const { return factor * typed; }
+    double difference_from_si(double difference_si) const { return difference_si / factor; }
+};
+
+const Unit& unit(UnitId id);
+std::span<const Unit> all_units();
+
+/// A unit as somebody wrote it, with the kind of pressure if the text ends in `abs` or `gauge`.
+struct WrittenUnit
+{
+    UnitId id;
+    PressureKind kind; ///< none where the text does not say
+};
+
+/// Finds "bar", "kgf/cm2", "bar abs", "°C", "mmWC", "t/24h" and the like. ASCII and typographic forms
+/// are alike; upper and lower case as in the SI (mPa is not MPa).
+/// @par Problems invalid_input with the text, and the spellings known for its likeliest dimension
+Result<WrittenUnit> find_unit(std::string_view text);
+
+/// The number of a typed value: decimal point or comma, an optional sign, digits, an optional exponent.
+///
+/// Refused in words: "1.234.567" and "1,234.5" (grouping could mean two things), "NaN", "-", "1e999",
+/// blanks inside, anything that is not wholly a number. One separator is always the decimal sign:
+/// "1.250" is one and a quarter here, because files and log sheets do not group.
+Result<double> parse_number(std::string_view text);
+
+/// A value as typed with its unit, such as "7,5 kgf/cm2", "112 bar abs", "385 °C".
+struct TypedValue
+{
+    double number;   ///< in the typed unit
+    WrittenUnit unit;
+    double value_si; ///< in SI, of the typed kind (a gauge pressure stays over the barometer)
+};
+/// @par Problems invalid_input: no number, no unit, unknown unit, below absolute zero
+Result<TypedValue> parse_typed_value(std::string_view text);
+
+/// Whether the number can exist at all: not below absolute zero for temperatures and absolute pressures,
+/// and finite. @par Problems invalid_input naming value and unit
+Result<double> to_si_checked(double number, WrittenUnit unit);
+
+} // namespace evenstroke
