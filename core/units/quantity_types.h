@@ -16,36 +16,39 @@ namespace evenstroke {
 
 namespace si = boost::units::si;
 using boost::units::absolute;
-using boost::units::quantity;
 
-using Ratio = quantity<si::dimensionless>;
-using Length = quantity<si::length>;
-using Area = quantity<si::area>;
-using Volume = quantity<si::volume>;
-using Mass = quantity<si::mass>;
-using Duration = quantity<si::time>;
-using Velocity = quantity<si::velocity>;
-using Frequency = quantity<si::frequency>; ///< revolutions a second, never radians a second
-using Power = quantity<si::power>;
-using Energy = quantity<si::energy>;
-using Torque = quantity<si::torque>;
-using Density = quantity<si::mass_density>;
-using MassFlow = quantity<boost::units::unit<
+/// A number of SI units, checked by the compiler. (`quantity` itself is the word for what a reading holds.)
+template <typename SiUnit>
+using Measured = boost::units::quantity<SiUnit>;
+
+using Ratio = Measured<si::dimensionless>;
+using Length = Measured<si::length>;
+using Area = Measured<si::area>;
+using Volume = Measured<si::volume>;
+using Mass = Measured<si::mass>;
+using Duration = Measured<si::time>;
+using Velocity = Measured<si::velocity>;
+using Frequency = Measured<si::frequency>; ///< revolutions a second, never radians a second
+using Power = Measured<si::power>;
+using Energy = Measured<si::energy>;
+using Torque = Measured<si::torque>;
+using Density = Measured<si::mass_density>;
+using MassFlow = Measured<boost::units::unit<
     boost::units::derived_dimension<boost::units::mass_base_dimension, 1, boost::units::time_base_dimension, -1>::type,
     si::system>>;
-using SpecificEnergy = quantity<boost::units::unit<
+using SpecificEnergy = Measured<boost::units::unit<
     boost::units::derived_dimension<boost::units::length_base_dimension, 2, boost::units::time_base_dimension, -2>::type,
     si::system>>; ///< joule a kilogram, the unit of heating values
-using SpecificConsumption = quantity<boost::units::unit<
+using SpecificConsumption = Measured<boost::units::unit<
     boost::units::derived_dimension<boost::units::length_base_dimension, -2, boost::units::time_base_dimension, 2>::type,
     si::system>>; ///< kilogram a joule, the unit of fuel over work
-using KinematicViscosity = quantity<si::kinematic_viscosity>;
-using PlaneAngle = quantity<si::plane_angle>;
+using KinematicViscosity = Measured<si::kinematic_viscosity>;
+using PlaneAngle = Measured<si::plane_angle>;
 
-using Temperature = quantity<absolute<si::temperature>>;
-using TemperatureDifference = quantity<si::temperature>;
-using PressureDifference = quantity<si::pressure>;
-using AbsolutePressure = quantity<absolute<si::pressure>>;
+using Temperature = Measured<absolute<si::temperature>>;
+using TemperatureDifference = Measured<si::temperature>;
+using PressureDifference = Measured<si::pressure>;
+using AbsolutePressure = Measured<absolute<si::pressure>>;
 
 /// A pressure over the barometer. Becomes an absolute one only where the barometer is named.
 class GaugePressure
