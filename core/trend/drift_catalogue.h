@@ -1,0 +1,52 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include <optional>
+#include <span>
+#include <string>
+#include <string_view>
+#include <vector>
+
+/// Which quantities are watched for drift, how they scatter, and what faults do to them, as data:
+/// resources/catalogue/drift_channels.csv, drift_signatures.csv and drift_correlations.csv.
+namespace evenstroke::drift {
+
+enum class Subject { cylinder, engine, cylinder_median };
+enum class DeviationForm { difference, percent };
+
+struct CatalogueChannel
+{
+    std::string quantity;       ///< name in the quantity catalogue, or of a derived quantity
+    std::string typed_quantity; ///< the typed value a doubt names where `quantity` is derived; else the same
+    Subject subject;            ///< cylinder_median: the median over the cylinders, watched at engine level
+    double noise;               ///< prior one sigma, in `unit`
+    double offset_spread;       ///< prior one sigma between cylinders; 0 at engine level
+    DeviationForm form;         ///< percent: 100 (corrected / expected - 1)
+    std::string unit;           ///< of the deviation
+    bool row_check;             ///< a whole row in another unit is looked for
+    bool counted;               ///< among those the thresholds were calibrated for; others raise them a little
+};
+
+/// What one fault moves, in noise units. A quantity that is not named is not expected to move.
+struct Signature
+{
+    std::string name;  ///< "blow_by"
+    std::string title; ///< "blow-by (rings or exhaust valve)"
+    Subject subject;   ///< cylinder or engine
+    struct Move
+    {
+        std::string quantity;
+        bool median; ///< engine level: the median over the cylinders
+        double amount;
+    };
+    std::vector<Move> moves;
+};
+
+std::span<const CatalogueChannel> channel_catalogue();
+const CatalogueChannel* find_channel(std::string_view quantity, Subject subject);
+std::span<const Signature> signature_catalogue();
+const Signature* find_signature(std::string_view name);
+/// Correlation of the noise of two quantities of one cylinder; 1 for the same, 0 where none is listed.
+double noise_correlation(std::string_view quantity, std::string_view other);
+
+} // namespace evenstroke::drift
