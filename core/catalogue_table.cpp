@@ -2,6 +2,7 @@
 #include "core/catalogue_table.h"
 
 #include <algorithm>
+#include <charconv>
 #include <stdexcept>
 
 namespace evenstroke {
@@ -63,6 +64,18 @@ const std::string& CatalogueTable::cell(std::size_t row, std::string_view column
     if (found == columns_.end())
         throw std::logic_error("catalogue has no column '" + std::string(column) + "'");
     return rows_.at(row)[static_cast<std::size_t>(found - columns_.begin())];
+}
+
+std::optional<double> CatalogueTable::number(std::size_t row, std::string_view column) const
+{
+    const std::string& text = cell(row, column);
+    if (text.empty())
+        return std::nullopt;
+    double value = 0.0;
+    const auto [end, problem] = std::from_chars(text.data(), text.data() + text.size(), value);
+    if (problem != std::errc() || end != text.data() + text.size())
+        throw std::logic_error("not a number in a catalogue: " + text);
+    return value;
 }
 
 std::vector<std::string> split_list(std::string_view cell, char separator)

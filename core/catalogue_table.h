@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
@@ -19,6 +20,8 @@ public:
     std::size_t rows() const { return rows_.size(); }
     bool has_column(std::string_view column) const;
     const std::string& cell(std::size_t row, std::string_view column) const;
+    /// The number in a cell; nothing where it is empty. @throws std::logic_error where it is no number
+    std::optional<double> number(std::size_t row, std::string_view column) const;
 
 private:
     std::vector<std::string> columns_;

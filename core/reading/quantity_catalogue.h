@@ -35,8 +35,6 @@ enum class Need { required, recommended, optional };
 
 /// How the ambient correction of methods treats a quantity.
 enum class CorrectionForm { none, pressure, temperature, turbocharger_speed, coolant_difference };
-/// How a deviation is formed from corrected and expected.
-enum class DeviationForm { difference, percent };
 
 struct Range
 {
@@ -64,7 +62,6 @@ struct Quantity
 
     CorrectionForm correction_form = CorrectionForm::none;
     std::string correction_like; ///< takes this quantity's coefficients where it has none of its own
-    DeviationForm deviation_form = DeviationForm::difference;
     int decimals = 1;       ///< as the instrument shows, for printing
 
     Range usual(bool two_stroke) const { return two_stroke ? usual_two_stroke : usual_four_stroke; }
