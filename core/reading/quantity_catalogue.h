@@ -47,7 +47,7 @@ struct Quantity
     std::string name;       ///< identifier as in files: "maximum_pressure"
     std::string title;      ///< on screen: "Maximum pressure"
     std::string short_title;///< in narrow headings: "p_max"
-    std::string group;      ///< heading, control, ship_weather, cylinder, turbocharger, cooler, cooling_lube, fuel
+    std::string group;      ///< heading, control, quick_line, ship_weather, cylinder, turbocharger, cooler, cooling_lube, fuel
     Place::Kind per;        ///< what it repeats over
     ValueType type = ValueType::number;
     std::vector<std::string> choices;
