@@ -2,6 +2,7 @@
 #pragma once
 
 #include "app/desk/selection.h"
+#include "app/fleet/fleet_summary.h"
 #include "core/problem.h"
 #include "core/trend/judgement.h"
 
@@ -18,11 +19,11 @@ namespace storage {
 class History;
 }
 struct WorkplaceState;
+struct JudgingOutcome;
 
 struct EngineChoice
 {
     QString id, name;
-    int cylinders = 0;
 };
 struct VesselChoice
 {
@@ -34,19 +35,8 @@ struct VesselChoice
 struct FleetRow
 {
     QString vessel_id, vessel_name, engine_id, engine_name;
-    Level level = Level::no_data;
-    std::optional<TimePoint> last_reading;
-    int readings = 0;
-    QString sentence;        ///< the one that matters; empty where the engine is quiet
-    bool out_of_date = false; ///< judged before the newest readings came in; a judgement is under way
-    struct Strip
-    {
-        QString group; ///< heading: "compression", "combustion", ...
-        Level level = Level::no_data;
-        std::vector<double> values;      ///< the place that stands out most, in its own standard deviations
-        std::optional<double> low, high; ///< usual range in the same measure
-    };
-    std::vector<Strip> strips;
+    FleetSummary summary;
+    bool out_of_date = false; ///< newer readings are there than were judged; a judgement is under way
 };
 
 /// The history that is open, what is looked at, and what is known about it. All pages share the one.
@@ -71,6 +61,8 @@ public:
     QString path() const;
     /// The window thread's own connection, for stores that read or write; null while nothing is open.
     storage::History* history();
+    /// The file can only be read: it is on a medium or has rights that allow no writing.
+    bool read_only() const;
     /// Call after writing anything to the history: what is judged is brought up to date and
     /// `history_changed` is sent. Changes made by another window are noticed without it.
     void changed();
@@ -83,6 +75,8 @@ public:
     const Selection& selection() const;
     /// Looks at something else. What was looked at before can be had back with `go_back`.
     void select(const Selection& selection);
+    /// The same for steps by arrow keys, which leave no trace in what `go_back` walks through.
+    void step_to(const Selection& selection);
     const QString& page() const; ///< name of the page that is up
     void open_page(const QString& name);
     /// Both at once, so that one step back undoes both.
@@ -101,7 +95,7 @@ public:
     bool judging(const QString& engine_id) const;
     /// What stood in the way of reading or judging, in words.
     std::optional<Problem> problem() const;
-    /// From stored judgements, worst first.
+    /// From stored judgements, worst first (`trouble_rank`).
     const std::vector<FleetRow>& fleet() const;
     /// Judges every engine whose stored judgement is out of date, in the background.
     void judge_fleet();
@@ -118,6 +112,12 @@ signals:
     void activity_changed();
 
 private:
+    std::optional<Problem> start_with(std::unique_ptr<storage::History> history);
+    void look_for_changes();
+    void take_outcome(const JudgingOutcome& outcome);
+    void settle_selection();
+    void announce(const QString& page_before, const Selection& selection_before);
+
     std::unique_ptr<WorkplaceState> state_;
 };
 
