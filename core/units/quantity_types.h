@@ -36,6 +36,9 @@ using Density = Measured<si::mass_density>;
 using MassFlow = Measured<boost::units::unit<
     boost::units::derived_dimension<boost::units::mass_base_dimension, 1, boost::units::time_base_dimension, -1>::type,
     si::system>>;
+using VolumeFlow = Measured<boost::units::unit<
+    boost::units::derived_dimension<boost::units::length_base_dimension, 3, boost::units::time_base_dimension, -1>::type,
+    si::system>>;
 using SpecificEnergy = Measured<boost::units::unit<
     boost::units::derived_dimension<boost::units::length_base_dimension, 2, boost::units::time_base_dimension, -2>::type,
     si::system>>; ///< joule a kilogram, the unit of heating values
@@ -91,6 +94,13 @@ inline double in_bar(AbsolutePressure pressure) { return pressure.value() / 1e5;
 inline double in_celsius(Temperature temperature) { return temperature.value() - 273.15; }
 inline Power kilowatts(double kilowatt) { return kilowatt * 1e3 * si::watts; }
 inline Frequency per_minute(double revolutions) { return revolutions / 60.0 * si::hertz; }
+inline MassFlow kilograms_per_hour(double flow) { return MassFlow::from_value(flow / 3600.0); }
+inline SpecificEnergy megajoules_per_kilogram(double energy) { return SpecificEnergy::from_value(energy * 1e6); }
+inline SpecificConsumption grams_per_kilowatt_hour(double consumption)
+{
+    return SpecificConsumption::from_value(consumption / 3.6e9);
+}
+inline double in_grams_per_kilowatt_hour(SpecificConsumption consumption) { return consumption.value() * 3.6e9; }
 inline Length millimetres(double length) { return length / 1000.0 * si::metres; }
 
 } // namespace evenstroke
