@@ -23,8 +23,9 @@ struct AuditEntry
 struct AuditFindings
 {
     qint64 entries = 0, readings = 0, values = 0;
-    std::string last_hash;               ///< of the newest row; printed in reports
-    std::vector<std::string> sentences;  ///< what does not fit, one sentence each; empty: all is as it was written
+    std::string last_hash; ///< of the newest row; printed in reports
+    std::vector<std::string>
+        sentences; ///< what does not fit, one sentence each; empty: all is as it was written
     bool sound() const { return sentences.empty(); }
 };
 
@@ -33,7 +34,8 @@ struct AuditFindings
 Result<AuditFindings> verify(History& history, const Progress& progress = {});
 
 /// Newest first; `subject_id` empty: of everything.
-Result<std::vector<AuditEntry>> audit_entries(History& history, const std::string& subject_id = {}, int at_most = 1000);
+Result<std::vector<AuditEntry>> audit_entries(History& history, const std::string& subject_id = {},
+                                              int at_most = 1000);
 /// The hash of the newest row, and how many there are.
 Result<AuditFindings> audit_state(History& history);
 

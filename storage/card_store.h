@@ -14,10 +14,10 @@ namespace evenstroke::storage {
 /// An indicator-diagram trace as its file says it. Firing dead centre is 0 degrees.
 struct CardTrace
 {
-    std::vector<int> cycle;             ///< empty where the file has one cycle
+    std::vector<int> cycle; ///< empty where the file has one cycle
     std::vector<double> crank_angle_deg;
     std::vector<double> pressure_bar;
-    bool gauge = false;                 ///< the header said so; else absolute
+    bool gauge = false; ///< the header said so; else absolute
 };
 
 /// Reads `crank_angle_deg,pressure_bar` or `cycle,crank_angle_deg,pressure_bar`.
@@ -40,12 +40,14 @@ class CardStore
 public:
     explicit CardStore(History& history) : history_(history) {}
 
-    Result<std::vector<CardEntry>> list(const std::string& engine_id) const; ///< by time of reading, then cylinder
+    Result<std::vector<CardEntry>>
+    list(const std::string& engine_id) const; ///< by time of reading, then cylinder
     /// @par Problems not_found
     Result<CardTrace> load(const std::string& card_id) const;
     /// Adds a cylinder's card to a reading. Answers its id; the same card again is the same id.
     /// @par Problems invalid_input: the reading has another card of this cylinder
-    Result<std::string> add(const std::string& reading_id, int cylinder, const CardTrace& trace, const Signature& by);
+    Result<std::string> add(const std::string& reading_id, int cylinder, const CardTrace& trace,
+                            const Signature& by);
 
 private:
     History& history_;

@@ -14,7 +14,10 @@ namespace evenstroke::storage {
 
 /// Done, or the Problem that stood in its way.
 using Done = Result<void>;
-inline Done done() { return BOOST_OUTCOME_V2_NAMESPACE::success(); }
+inline Done done()
+{
+    return BOOST_OUTCOME_V2_NAMESPACE::success();
+}
 
 /// Called now and then during long work. Answer false to stop: then nothing is changed.
 using Progress = std::function<bool(qint64 done, qint64 total)>;
@@ -23,7 +26,8 @@ using Progress = std::function<bool(qint64 done, qint64 total)>;
 using Clock = std::function<TimePoint()>;
 TimePoint system_time();
 
-/// Who changed something, and why. Both go into the audit trail; `why` may be empty where nothing is corrected.
+/// Who changed something, and why. Both go into the audit trail; `why` may be empty where nothing is
+/// corrected.
 struct Signature
 {
     std::string who; ///< a person's name as he signs it

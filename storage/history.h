@@ -16,8 +16,9 @@ enum class OpenMode { read_only, read_write };
 struct HistorySettings
 {
     Clock clock = system_time;
-    bool automatic_backups = true; ///< before each migration, and on the first opening for writing of a day
+    bool automatic_backups = true; ///< before each migration, and before the first change of a day
     int backups_kept = 7;          ///< in the folder `<name> backups` beside the history
+    bool check_whole = true; ///< read every page before trusting the file; done once for a state of the file
 };
 
 /// One connection to one history. A History belongs to the thread that made it; to read in a worker
@@ -32,9 +33,11 @@ public:
     /// What is refused is not touched.
     /// @par Problems not_found; damaged_file: not a history or torn; newer_file: of a later program;
     ///      invalid_input: of an older version and opened for reading only; storage
-    static Result<std::unique_ptr<History>> open(const QString& path, OpenMode mode, HistorySettings settings = {});
+    static Result<std::unique_ptr<History>> open(const QString& path, OpenMode mode,
+                                                 HistorySettings settings = {});
     /// Opens the history, or makes it where there is none.
-    static Result<std::unique_ptr<History>> open_or_create(const QString& path, HistorySettings settings = {});
+    static Result<std::unique_ptr<History>> open_or_create(const QString& path,
+                                                           HistorySettings settings = {});
     /// A history that is gone when closed, for tests and for trying things.
     static Result<std::unique_ptr<History>> in_memory(HistorySettings settings = {});
     /// The schema version that this program writes.
@@ -63,12 +66,22 @@ public:
     Names& names();
 
 private:
-    friend class HistoryOpener;
-    History();
+    friend class Transaction;
+    friend class ReadTransaction;
+    friend Result<QString> back_up_daily(History& history);
+    History(QString path, OpenMode mode, HistorySettings settings);
+    Done connect();
+    Done check();
+    Done bring_up_to_date();
+    Done fill_new();
+    static Result<std::unique_ptr<History>> make(const QString& path, HistorySettings settings);
+
     QString path_, connection_;
-    OpenMode mode_ = OpenMode::read_write;
+    OpenMode mode_;
     HistorySettings settings_;
     bool made_now_ = false;
+    int transaction_depth_ = 0;
+    qint64 backed_up_day_ = -1; ///< days since 1970, so that the folder is looked at once a day
     std::unique_ptr<Names> names_;
 };
 

@@ -17,16 +17,16 @@ struct StoredJudgement
     int method_version = 0;
     qint64 input_revision = 0; ///< of the engine when it was read
     TimePoint computed_at{};
-    int worst_level = 0;       ///< the caller's numbering
-    QByteArray summary;        ///< little: what the fleet page shows
-    QByteArray detail;         ///< the whole; may be empty
+    int worst_level = 0; ///< the caller's numbering
+    QByteArray summary;  ///< little: what the fleet page shows
+    QByteArray detail;   ///< the whole; may be empty
 };
 
 struct JudgementEntry
 {
     std::string engine_id, engine_name, vessel_id, vessel_name;
-    bool stored = false;  ///< false: nothing kept yet, the rest is empty
-    bool current = false; ///< of this method version and of the engine's present revision
+    bool stored = false;       ///< false: nothing kept yet, the rest is empty
+    bool current = false;      ///< of this method version and of the engine's present revision
     StoredJudgement judgement; ///< without `detail`
 };
 

@@ -28,7 +28,8 @@ public:
 
     /// Other remembered choices, by a name of the caller's; `engine_id` empty: of the whole history.
     Result<std::optional<std::string>> choice(const std::string& engine_id, const std::string& name) const;
-    Done set_choice(const std::string& engine_id, const std::string& name, const std::optional<std::string>& value);
+    Done set_choice(const std::string& engine_id, const std::string& name,
+                    const std::optional<std::string>& value);
 
 private:
     History& history_;

@@ -54,8 +54,8 @@ inline constexpr std::chrono::hours shared_within{6};
 
 /// Readings and their values: a draft changes freely, a closed one only by a correction that keeps the old.
 ///
-/// A value stands at the place its quantity repeats over; quantities of the ship stand at {Place::Kind::ship, 0}
-/// wherever they were written; a turbocharger's or cooler's value without number stands at the engine.
+/// A value stands at the place its quantity repeats over; quantities of the ship stand at {Place::Kind::ship,
+/// 0} wherever they were written; a turbocharger's or cooler's value without number stands at the engine.
 /// Values of quantities that this program does not know stay in the file and are not handed out.
 class ReadingStore
 {
@@ -74,23 +74,26 @@ public:
     Result<std::vector<Correction>> corrections_of(const Owner& owner) const; ///< in order of time
 
     /// Begins a draft. @par Problems invalid_input: a reading of this name is there
-    Result<Reading> make_draft(const Owner& owner, const std::string& name, StampedTime taken_at, const Signature& by);
+    Result<Reading> make_draft(const Owner& owner, const std::string& name, StampedTime taken_at,
+                               const Signature& by);
     /// Name and time of a draft.
     Done rename_draft(const std::string& reading_id, const std::string& name, StampedTime taken_at);
-    /// Keeps one value of a draft at once, so that nothing typed is lost. A value with neither text, words nor
-    /// reason empties the place.
+    /// Keeps one value of a draft at once, so that nothing typed is lost. A value with neither text, words
+    /// nor reason empties the place.
     Done save_value(const std::string& reading_id, const Value& value);
     /// Replaces name, time and all values of a draft.
     Done save_draft(const Reading& draft);
     Done discard_draft(const std::string& reading_id, const Signature& by);
-    /// Closes a draft: from here on it changes only by corrections. @par Problems invalid_input: no value at all
+    /// Closes a draft: from here on it changes only by corrections. @par Problems invalid_input: no value at
+    /// all
     Done close(const std::string& reading_id, const Signature& by);
 
     /// Changes a value of a closed reading, or adds one that was forgotten. The old value, who, when and why
     /// stay. @par Problems invalid_input: no name or no reason given, or nothing changes
     Done correct(const std::string& reading_id, const Value& new_value, const Signature& by);
     /// Marks that the engineer read the value again and it stands.
-    Done set_confirmed(const std::string& reading_id, const ValuePlace& place, bool confirmed, const Signature& by);
+    Done set_confirmed(const std::string& reading_id, const ValuePlace& place, bool confirmed,
+                       const Signature& by);
     /// Takes a closed reading out of use with a reason; it stays in the file. And back.
     Done withdraw(const std::string& reading_id, const Signature& by);
     Done restore(const std::string& reading_id, const Signature& by);

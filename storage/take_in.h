@@ -15,17 +15,17 @@ struct TakeOptions
 {
     bool keep_good = false; ///< leave out bad rows, name them, and take the rest
     Signature by{"taken in from files", ""};
-    Progress progress;      ///< in bytes read; false: the whole taking-in leaves the history as it was
+    Progress progress; ///< in bytes read; false: the whole taking-in leaves the history as it was
 };
 
 /// One row that cannot be taken.
 struct RefusedRow
 {
-    std::string file;     ///< as found under the folder: "engine-04/readings.csv"
-    qint64 line = 0;      ///< counts from 1; 0: the file as a whole
-    std::string value;    ///< the text in question, shortened
-    std::string reason;   ///< one sentence
-    std::string expected; ///< what would be right
+    std::string file;         ///< as found under the folder: "engine-04/readings.csv"
+    qint64 line = 0;          ///< counts from 1; 0: the file as a whole
+    std::string value;        ///< the text in question, shortened
+    std::string reason;       ///< one sentence
+    std::string expected;     ///< what would be right
     std::string text() const; ///< "engine-04/readings.csv, line 12: ..."
 };
 
@@ -38,12 +38,12 @@ struct TakeCounts
 /// One engine's folder, or the files of a ship beside the engines' folders.
 struct FolderReport
 {
-    std::string folder;      ///< as given, or below what was given
+    std::string folder; ///< as given, or below what was given
     std::string vessel_name, engine_name;
-    std::string engine_id;   ///< empty for a ship's files
-    bool taken = false;      ///< false: refused whole, nothing of it is in the history
+    std::string engine_id; ///< empty for a ship's files
+    bool taken = false;    ///< false: refused whole, nothing of it is in the history
     TakeCounts values, events, cards;
-    std::vector<RefusedRow> refused; ///< at most the first 1000 of a file; the counts hold all
+    std::vector<RefusedRow> refused;  ///< at most the first 1000 of a file; the counts hold all
     std::vector<std::string> remarks; ///< files ignored, keys kept unread, a former revision
     bool anything_refused() const { return !taken || values.refused + events.refused + cards.refused > 0; }
 };

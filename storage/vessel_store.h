@@ -15,7 +15,8 @@ struct EngineEntry
 {
     std::string id, name;
     std::string vessel_id, vessel_name;
-    qint64 input_revision = 0; ///< grows with every change of what is judged: engine, readings, events, ship's readings
+    qint64 input_revision =
+        0; ///< grows with every change of what is judged: engine, readings, events, ship's readings
 };
 
 /// An engine as it is in force.
@@ -41,7 +42,12 @@ struct SavedEngine
 {
     std::string engine_id, vessel_id;
     int revision = 1;
-    enum class Outcome { made, changed, same, earlier } outcome = Outcome::made; ///< earlier: the text is a former revision, the newer stays in force
+    enum class Outcome {
+        made,
+        changed,
+        same,
+        earlier
+    } outcome = Outcome::made; ///< earlier: the text is a former revision, the newer stays in force
 };
 
 /// Vessels and their engines. Identity is the vessel's name with the engine's name.
@@ -56,7 +62,8 @@ public:
     Result<std::vector<EngineEntry>> engines() const;
     Result<std::vector<EngineEntry>> engines_of(const std::string& vessel_id) const;
     /// The one engine of this name. @par Problems not_found; invalid_input: several, the candidates are named
-    Result<EngineEntry> find_engine(const std::string& engine_name, const std::optional<std::string>& vessel_name = {}) const;
+    Result<EngineEntry> find_engine(const std::string& engine_name,
+                                    const std::optional<std::string>& vessel_name = {}) const;
     /// @par Problems not_found, with the vessels there are
     Result<Vessel> find_vessel(const std::string& vessel_name) const;
     Result<StoredEngine> engine(const std::string& engine_id) const;

@@ -46,6 +46,8 @@ struct Value
     std::string words;               ///< for choices and words
     MissingReason missing = MissingReason::none;
     bool confirmed = false;          ///< the engineer read it again: no longer doubted
+    std::string unit_typed;          ///< the unit as it was written ("degC"); empty: as the catalogue writes it
+    std::string place_typed;         ///< the place as it was written, where that is not `cylinder_name`; else empty
 };
 
 struct Reading

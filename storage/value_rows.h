@@ -1,0 +1,88 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "storage/names.h"
+#include "storage/reading_store.h"
+#include "storage/sql.h"
+
+#include <optional>
+#include <string>
+#include <tuple>
+#include <vector>
+
+/// Values and readings as the file holds them, before names and units are given their meaning.
+namespace evenstroke::storage {
+
+/// One row of the table `value`.
+struct ValueRow
+{
+    int quantity_key = 0;
+    int place = 0; ///< place_code
+    int phase = 1;
+    int unit_key = 0; ///< 0: none
+    int missing = 0;
+    bool confirmed = false;
+    std::optional<double> value_si;
+    std::string typed, words, place_typed;
+
+    auto where() const { return std::tuple(quantity_key, place, phase); }
+};
+
+/// One row of the table `reading`.
+struct ReadingRow
+{
+    qint64 key = 0;
+    std::string id, name;
+    StampedTime taken_at;
+    ReadingState state = ReadingState::closed;
+    TimePoint changed_at{};
+};
+
+/// Keys of whoever owns readings; `engine` 0 for the ship's.
+struct OwnerKeys
+{
+    qint64 vessel = 0, engine = 0;
+};
+Result<OwnerKeys> owner_keys(History& history, const Owner& owner);
+
+/// What a row means; none where this program does not know the quantity or the unit.
+std::optional<Value> value_of(const History::Names& names, const ValueRow& row);
+/// How a value is stored. Gives new names a number, so it needs a transaction.
+Result<ValueRow> row_of(History::Names& names, const Value& value);
+
+/// All of an owner's readings in order of time.
+Result<std::vector<ReadingRow>> load_reading_rows(History& history, const OwnerKeys& owner);
+Result<ReadingRow> load_reading_row(History& history, const std::string& reading_id);
+/// In the order of the file's own numbering.
+Result<std::vector<ValueRow>> load_value_rows(History& history, qint64 reading_key);
+
+/// Adds values many at a time: one statement takes a hundred rows.
+class ValueInserter
+{
+public:
+    explicit ValueInserter(History& history) : history_(history) {}
+    Done add(qint64 reading_key, const ValueRow& row);
+    /// Writes what still waits. Without it the last values are lost.
+    Done flush();
+
+private:
+    static constexpr int columns = 11;
+    static constexpr int rows_a_statement = 100;
+    Done write(std::size_t first, int count, Query& statement);
+
+    History& history_;
+    std::optional<Query> full_;
+    std::vector<std::pair<qint64, ValueRow>> waiting_;
+};
+
+/// Adds the row of a reading; answers its key.
+Result<qint64> insert_reading(History& history, const OwnerKeys& owner, const ReadingRow& reading);
+
+/// Hash of everything that a reading holds, for the audit trail. Sorts the rows.
+std::string reading_hash(const History::Names& names, const ReadingRow& reading,
+                         std::vector<const ValueRow*> rows);
+
+/// What was judged has changed: counts up the revision of the engine, or of all engines of the vessel.
+Done count_change(History& history, const OwnerKeys& owner);
+
+} // namespace evenstroke::storage
