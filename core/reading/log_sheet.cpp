@@ -56,8 +56,7 @@ const std::vector<SectionPlan>& plans()
     return loaded;
 }
 
-template <typename T>
-bool contains(const std::vector<T>& all, const T& wanted)
+template <typename T> bool contains(const std::vector<T>& all, const T& wanted)
 {
     return std::find(all.begin(), all.end(), wanted) != all.end();
 }
@@ -75,11 +74,19 @@ std::vector<Place> places_of(const Quantity& quantity, const Engine& engine, Eng
 {
     int count = 0;
     switch (quantity.per) {
-    case Place::Kind::cylinder: count = engine.cylinders; break;
-    case Place::Kind::turbocharger: count = layout.turbochargers; break;
-    case Place::Kind::cooler: count = layout.coolers; break;
-    case Place::Kind::ship: return {Place{Place::Kind::ship, 0}};
-    case Place::Kind::engine: return {Place::engine()};
+    case Place::Kind::cylinder:
+        count = engine.cylinders;
+        break;
+    case Place::Kind::turbocharger:
+        count = layout.turbochargers;
+        break;
+    case Place::Kind::cooler:
+        count = layout.coolers;
+        break;
+    case Place::Kind::ship:
+        return {Place{Place::Kind::ship, 0}};
+    case Place::Kind::engine:
+        return {Place::engine()};
     }
     if (count == 0)
         return {Place::engine()};
@@ -148,10 +155,17 @@ std::string places_words(const Engine& engine, const std::vector<LogBox>& boxes)
                                                                   : std::to_string(box.place.number));
     const char* what = nullptr;
     switch (boxes.front().place.kind) {
-    case Place::Kind::cylinder: what = "cylinder"; break;
-    case Place::Kind::turbocharger: what = "turbocharger"; break;
-    case Place::Kind::cooler: what = "cooler"; break;
-    default: return {};
+    case Place::Kind::cylinder:
+        what = "cylinder";
+        break;
+    case Place::Kind::turbocharger:
+        what = "turbocharger";
+        break;
+    case Place::Kind::cooler:
+        what = "cooler";
+        break;
+    default:
+        return {};
     }
     return std::string(" of ") + what + (boxes.size() > 1 ? "s " : " ") + joined(numbers);
 }
@@ -245,7 +259,7 @@ std::vector<std::string> missing_words(const Engine& engine, const std::vector<L
 std::optional<Problem> find_problem_with_closing(const Reading& reading)
 {
     static const std::vector<const char*> load_figures{"load_percent", "shaft_power", "generator_power",
-                                                       "fuel_index",   "shaft_torque"};
+                                                       "fuel_index", "shaft_torque"};
     for (const char* name : load_figures) {
         const auto figure = find_quantity(name, Place::Kind::engine);
         const Value* value = figure ? reading.find(*figure, Place::engine()) : nullptr;

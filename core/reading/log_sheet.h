@@ -9,8 +9,9 @@
 #include <string>
 #include <vector>
 
-/// The log sheet of one engine in walking order: what the grid on the screen and the blank sheet on paper show.
-/// Sections come from resources/catalogue/log_sheet.csv, rows and their order from the quantity catalogue.
+/// The log sheet of one engine in walking order: what the grid on the screen and the blank sheet on paper
+/// show. Sections come from resources/catalogue/log_sheet.csv, rows and their order from the quantity
+/// catalogue.
 namespace evenstroke {
 
 /// One box to write in.
@@ -32,8 +33,8 @@ struct LogRow
 
 struct LogSection
 {
-    std::string name;  ///< "engine_stand"
-    std::string title; ///< "Engine, cylinder by cylinder"
+    std::string name;                 ///< "engine_stand"
+    std::string title;                ///< "Engine, cylinder by cylinder"
     std::vector<std::string> columns; ///< heads of the columns; empty strings where there is one box a row
     std::vector<LogRow> rows;
 };

@@ -72,7 +72,8 @@ std::optional<double> power_kw(const Engine& engine, const Numbers& numbers)
 
 } // namespace relations_detail
 
-std::vector<Relation> check_relations(const Engine& engine, const Reading& reading, const ReadingContext& context)
+std::vector<Relation> check_relations(const Engine& engine, const Reading& reading,
+                                      const ReadingContext& context)
 {
     const relations_detail::Numbers numbers(reading);
     std::vector<Relation> found;

@@ -11,19 +11,21 @@ namespace {
 
 /// Closer than this the peak is no higher than the compression. Common practice, no source.
 constexpr double firing_margin_bar = 2.0;
-/// Common practice: a sound cylinder keeps its ratio of absolute compression to scavenge pressure within this.
+/// Common practice: a sound cylinder keeps its ratio of absolute compression to scavenge pressure within
+/// this.
 constexpr double ratio_room = 0.05;
 /// Fewer earlier ratios than this are no habit; more than the last twelve are another engine. Invented.
 constexpr std::size_t ratios_needed = 5, ratios_kept = 12;
 
 std::string pair_words(const char* what, double first, const char* than, double second)
 {
-    return std::string(what) + " " + plain_number(first, 1) + " bar" + than + plain_number(second, 1) + " bar";
+    return std::string(what) + " " + plain_number(first, 1) + " bar" + than + plain_number(second, 1) +
+           " bar";
 }
 
 /// "maximum pressure is below compression pressure (98.0 and 110.0 bar)"; several cylinders give no values.
-std::string peak_sentence(const Engine& engine, const std::vector<int>& cylinders, double peak, double compression,
-                          const char* short_words, const char* advice)
+std::string peak_sentence(const Engine& engine, const std::vector<int>& cylinders, double peak,
+                          double compression, const char* short_words, const char* advice)
 {
     std::string sentence = cylinders_words(engine, cylinders) + ": ";
     if (cylinders.size() == 1)
@@ -48,7 +50,8 @@ void check_peaks(const Engine& engine, const Numbers& numbers, std::vector<Relat
         (lower ? below_peak : equal_peak) = peak;
         (lower ? below_compression : equal_compression) = *compression;
     }
-    const auto report = [&](const char* name, const std::vector<int>& cylinders, const std::string& sentence) {
+    const auto report = [&](const char* name, const std::vector<int>& cylinders,
+                            const std::string& sentence) {
         Relation relation{name, sentence, {}, false};
         for (const int cylinder : cylinders) {
             relation.concerned.push_back({peak_id, Place::cylinder(cylinder)});
@@ -58,13 +61,15 @@ void check_peaks(const Engine& engine, const Numbers& numbers, std::vector<Relat
     };
     if (!below.empty())
         report("maximum_below_compression", below,
-               peak_sentence(engine, below, below_peak, below_compression, " is lower than ",
-                             "Without firing the two are equal, never the peak lower: look whether each stands in "
-                             "the other's box."));
+               peak_sentence(
+                   engine, below, below_peak, below_compression, " is lower than ",
+                   "Without firing the two are equal, never the peak lower: look whether each stands in "
+                   "the other's box."));
     if (!equal.empty())
         report("maximum_equals_compression", equal,
-               peak_sentence(engine, equal, equal_peak, equal_compression, " is no more than 2 bar from ",
-                             "This is how a cylinder looks that does not fire or fires very late: read it again."));
+               peak_sentence(
+                   engine, equal, equal_peak, equal_compression, " is no more than 2 bar from ",
+                   "This is how a cylinder looks that does not fire or fires very late: read it again."));
 }
 
 bool is_setting(const std::string& name)
@@ -87,11 +92,12 @@ void check_identical(const Engine& engine, const Numbers& numbers, std::vector<R
                                        [&](const auto& cell) { return cell.second == row.front().second; });
         if (!alike)
             continue;
-        Relation relation{"cylinders_identical",
-                          quantity.title + " is " + with_own_unit(quantity.id, row.front().second) +
-                              " at every cylinder. Measured values differ a little: was one of them written for all?",
-                          {},
-                          false};
+        Relation relation{
+            "cylinders_identical",
+            quantity.title + " is " + with_own_unit(quantity.id, row.front().second) +
+                " at every cylinder. Measured values differ a little: was one of them written for all?",
+            {},
+            false};
         for (const auto& [place, value] : row)
             relation.concerned.push_back({quantity.id, place});
         found.push_back(std::move(relation));
@@ -100,9 +106,12 @@ void check_identical(const Engine& engine, const Numbers& numbers, std::vector<R
 
 std::optional<double> ratio_at(const Numbers& numbers, Place cylinder)
 {
-    const auto compression = numbers.absolute_at(id_of("compression_pressure", Place::Kind::cylinder), cylinder);
-    const auto scavenge = numbers.absolute_at(id_of("scavenge_pressure", Place::Kind::engine), Place::engine());
-    return compression && scavenge && *scavenge > 0.0 ? std::optional(*compression / *scavenge) : std::nullopt;
+    const auto compression =
+        numbers.absolute_at(id_of("compression_pressure", Place::Kind::cylinder), cylinder);
+    const auto scavenge =
+        numbers.absolute_at(id_of("scavenge_pressure", Place::Kind::engine), Place::engine());
+    return compression && scavenge && *scavenge > 0.0 ? std::optional(*compression / *scavenge)
+                                                      : std::nullopt;
 }
 
 double median(std::vector<double> values)
@@ -155,22 +164,27 @@ void check_compression_ratio(const Engine& engine, const Numbers& numbers, const
     if (off.empty())
         return;
     const ConcernedValue scavenge{id_of("scavenge_pressure", Place::Kind::engine), Place::engine()};
-    const std::string change = "from its usual " + plain_number(usual_off, 1) + " to " + plain_number(ratio_off, 1);
+    const std::string change =
+        "from its usual " + plain_number(usual_off, 1) + " to " + plain_number(ratio_off, 1);
     if (2 * static_cast<int>(off.size()) > compared && compared > 1) {
-        found.push_back({"compression_ratio_of_all",
-                         "Compression over scavenge pressure went " + change +
-                             " at most cylinders. Look at scavenge pressure and barometer first: gauge or absolute, and "
-                             "which unit?",
-                         {scavenge},
-                         false});
+        found.push_back(
+            {"compression_ratio_of_all",
+             "Compression over scavenge pressure went " + change +
+                 " at most cylinders. Look at scavenge pressure and barometer first: gauge or absolute, and "
+                 "which unit?",
+             {scavenge},
+             false});
         return;
     }
-    Relation relation{"compression_ratio",
-                      cylinders_words(engine, off) + ": compression over scavenge pressure is more than 5 % off its "
-                          "usual ratio" + (off.size() == 1 ? ", " + change : std::string()) +
-                          ". Read the compression pressure again; if it stays, rings or exhaust valve come to mind.",
-                      {},
-                      false};
+    Relation relation{
+        "compression_ratio",
+        cylinders_words(engine, off) +
+            ": compression over scavenge pressure is more than 5 % off its "
+            "usual ratio" +
+            (off.size() == 1 ? ", " + change : std::string()) +
+            ". Read the compression pressure again; if it stays, rings or exhaust valve come to mind.",
+        {},
+        false};
     for (const int cylinder : off)
         relation.concerned.push_back({compression_id, Place::cylinder(cylinder)});
     found.push_back(std::move(relation));

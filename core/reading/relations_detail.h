@@ -1,8 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/reading/typed_number.h"
 #include "core/reading/relations.h"
+#include "core/reading/typed_number.h"
 
 #include <string_view>
 
@@ -42,6 +42,7 @@ void check_compression_ratio(const Engine& engine, const Numbers& numbers, const
                              std::vector<Relation>& found);
 void check_air_and_water(const Engine& engine, const Numbers& numbers, std::vector<Relation>& found);
 void check_power_and_fuel(const Engine& engine, const Numbers& numbers, std::vector<Relation>& found);
-void check_against_earlier(const Numbers& numbers, const ReadingContext& context, std::vector<Relation>& found);
+void check_against_earlier(const Numbers& numbers, const ReadingContext& context,
+                           std::vector<Relation>& found);
 
 } // namespace evenstroke::relations_detail

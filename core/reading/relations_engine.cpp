@@ -8,7 +8,8 @@
 namespace evenstroke::relations_detail {
 namespace {
 
-/// Instruments may differ by so much before a temperature below the coolant's becomes impossible. Common practice.
+/// Instruments may differ by so much before a temperature below the coolant's becomes impossible. Common
+/// practice.
 constexpr double cooler_instrument_room = 5.0;
 /// Below this the compressor hardly heats its air. Common practice, bar over the barometer.
 constexpr double compressor_at_work_bar = 0.3;
@@ -66,13 +67,14 @@ void check_cooler(const Numbers& numbers, std::vector<Relation>& found)
     if (*scavenge >= coldest.second)
         return;
     const bool impossible = *scavenge < coldest.second - cooler_instrument_room;
-    found.push_back({"scavenge_below_coolant",
-                     "Scavenge temperature " + with_own_unit(scavenge_id, *scavenge) + " is below the coolant's " +
-                         with_own_unit(coolant_id, coldest.second) + " at the cooler inlet" +
-                         (impossible ? ", more than two thermometers can differ. No cooler can do that: read both again."
-                                     : ". A cooler cannot cool below its coolant: read both again."),
-                     {{scavenge_id, Place::engine()}, {coolant_id, coldest.first}},
-                     impossible});
+    found.push_back(
+        {"scavenge_below_coolant",
+         "Scavenge temperature " + with_own_unit(scavenge_id, *scavenge) + " is below the coolant's " +
+             with_own_unit(coolant_id, coldest.second) + " at the cooler inlet" +
+             (impossible ? ", more than two thermometers can differ. No cooler can do that: read both again."
+                         : ". A cooler cannot cool below its coolant: read both again."),
+         {{scavenge_id, Place::engine()}, {coolant_id, coldest.first}},
+         impossible});
 }
 
 void check_jacket(const Engine& engine, const Numbers& numbers, std::vector<Relation>& found)
@@ -179,14 +181,15 @@ void check_indicated(const Engine& engine, const Numbers& numbers, std::vector<R
     const double from_cylinders = indicated->first * *engine.mechanical_efficiency;
     if (std::abs(from_cylinders - *shaft) <= indicated_against_shaft * *shaft * (1.0 + rounding_room))
         return;
-    Relation relation{"indicated_against_shaft",
-                      "The cylinders together give " + plain_number(indicated->first, 0) + " kW, at " +
-                          plain_number(100.0 * *engine.mechanical_efficiency, 0) + " % mechanical efficiency " +
-                          plain_number(from_cylinders, 0) + " kW, but shaft power says " + plain_number(*shaft, 0) +
-                          " kW. More than 5 % apart: look at unit and dead centre of the indicator, and at the torsion "
-                          "meter's zero.",
-                      {{id_of("shaft_power", Place::Kind::engine), Place::engine()}},
-                      false};
+    Relation relation{
+        "indicated_against_shaft",
+        "The cylinders together give " + plain_number(indicated->first, 0) + " kW, at " +
+            plain_number(100.0 * *engine.mechanical_efficiency, 0) + " % mechanical efficiency " +
+            plain_number(from_cylinders, 0) + " kW, but shaft power says " + plain_number(*shaft, 0) +
+            " kW. More than 5 % apart: look at unit and dead centre of the indicator, and at the torsion "
+            "meter's zero.",
+        {{id_of("shaft_power", Place::Kind::engine), Place::engine()}},
+        false};
     for (const auto& [place, value] : numbers.all(indicated->second))
         relation.concerned.push_back({indicated->second, place});
     found.push_back(std::move(relation));
@@ -208,18 +211,22 @@ void check_consumption(const Engine& engine, const Numbers& numbers, std::vector
     if (specific * room >= consumption_low * scale && specific <= consumption_high * scale * room)
         return;
     const bool impossible = specific * room < all_heat;
-    std::string sentence = "Fuel consumption " + plain_number(*fuel, 0) + " kg/h at " + plain_number(*power, 0) +
-                           " kW is " + plain_number(specific, 0) + " g/kWh, ";
-    sentence += impossible ? "less than the " + plain_number(all_heat, 0) +
-                                 " g/kWh at which all heat would become work. No engine can do that: look at the unit "
-                                 "and at the measuring time."
-                           : "outside the usual " + plain_number(consumption_low * scale, 0) + " to " +
-                                 plain_number(consumption_high * scale, 0) +
-                                 " g/kWh. Look at the unit, the measuring time and the power.";
+    std::string sentence = "Fuel consumption " + plain_number(*fuel, 0) + " kg/h at " +
+                           plain_number(*power, 0) + " kW is " + plain_number(specific, 0) + " g/kWh, ";
+    sentence +=
+        impossible
+            ? "less than the " + plain_number(all_heat, 0) +
+                  " g/kWh at which all heat would become work. No engine can do that: look at the unit "
+                  "and at the measuring time."
+            : "outside the usual " + plain_number(consumption_low * scale, 0) + " to " +
+                  plain_number(consumption_high * scale, 0) +
+                  " g/kWh. Look at the unit, the measuring time and the power.";
     if (!noted_value)
         sentence += " (Heating value not noted; reckoned with 42.7 MJ/kg.)";
-    Relation relation{"fuel_against_power", std::move(sentence),
-                      {{id_of("fuel_consumption", Place::Kind::engine), Place::engine()}}, impossible};
+    Relation relation{"fuel_against_power",
+                      std::move(sentence),
+                      {{id_of("fuel_consumption", Place::Kind::engine), Place::engine()}},
+                      impossible};
     const char* power_name = numbers.engine("shaft_power") ? "shaft_power" : "load_percent";
     relation.concerned.push_back({id_of(power_name, Place::Kind::engine), Place::engine()});
     found.push_back(std::move(relation));

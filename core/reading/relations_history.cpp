@@ -17,8 +17,9 @@ void check_time(const Reading& reading, const ReadingContext& context, std::vect
     const TimePoint taken = reading.taken_at.utc;
     if (context.now && taken > *context.now)
         found.push_back({"time_in_future",
-                         "The reading's time, " + utc_text(taken) + ", is still to come. Check date, hour and the "
-                         "ship's offset from UTC.",
+                         "The reading's time, " + utc_text(taken) +
+                             ", is still to come. Check date, hour and the "
+                             "ship's offset from UTC.",
                          {},
                          false});
     if (context.earlier.empty())
@@ -94,15 +95,17 @@ void check_copied(const Numbers& numbers, const ReadingContext& context, std::ve
     if (common < boxes_needed || 2 * equal <= common)
         return;
     found.push_back({"copied_from_previous",
-                     std::to_string(equal) + " of " + std::to_string(common) + " values are the same to the last digit as on " +
-                         short_date(last.taken_at.utc) + ". Was last time's sheet copied?",
+                     std::to_string(equal) + " of " + std::to_string(common) +
+                         " values are the same to the last digit as on " + short_date(last.taken_at.utc) +
+                         ". Was last time's sheet copied?",
                      {},
                      false});
 }
 
 } // namespace
 
-void check_against_earlier(const Numbers& numbers, const ReadingContext& context, std::vector<Relation>& found)
+void check_against_earlier(const Numbers& numbers, const ReadingContext& context,
+                           std::vector<Relation>& found)
 {
     check_time(numbers.reading(), context, found);
     check_running_hours(numbers, context, found);

@@ -19,13 +19,13 @@ namespace {
 struct Criterion
 {
     enum class Form {
-        relative,  ///< change between the lines in % of the first
-        absolute,  ///< change between the lines in the quantity's unit
-        at_least,  ///< the value itself, a lower limit
-        at_most,   ///< the value itself, an upper limit
-        walk,      ///< minutes between the clock times of the two lines
-        draughts,  ///< a depth in mean draughts of the ship; must be greater
-        same,      ///< words that must not differ between the lines
+        relative, ///< change between the lines in % of the first
+        absolute, ///< change between the lines in the quantity's unit
+        at_least, ///< the value itself, a lower limit
+        at_most,  ///< the value itself, an upper limit
+        walk,     ///< minutes between the clock times of the two lines
+        draughts, ///< a depth in mean draughts of the ship; must be greater
+        same,     ///< words that must not differ between the lines
     };
     QuantityId quantity = 0;
     Form form = Form::relative;
@@ -67,9 +67,11 @@ std::vector<Criterion> load_criteria()
     std::vector<Criterion> criteria;
     for (std::size_t row = 0; row < table.rows(); ++row) {
         Criterion criterion;
-        const auto found = find_quantity(table.cell(row, "quantity"), place_kind_named(table.cell(row, "per")));
+        const auto found =
+            find_quantity(table.cell(row, "quantity"), place_kind_named(table.cell(row, "per")));
         if (!found)
-            throw std::logic_error("steadiness.csv names an unknown quantity: " + table.cell(row, "quantity"));
+            throw std::logic_error("steadiness.csv names an unknown quantity: " +
+                                   table.cell(row, "quantity"));
         criterion.quantity = *found;
         criterion.form = form_named(table.cell(row, "form"));
         criterion.steady = table.number(row, "steady");
@@ -110,7 +112,8 @@ std::optional<std::pair<double, double>> pair_of(const Reading& reading, Quantit
         for (const Value& after : reading.values) {
             if (after.quantity != wanted || after.phase != Phase::after || after.place != before.place)
                 continue;
-            const auto first = number_in_own_unit(before, barometer), second = number_in_own_unit(after, barometer);
+            const auto first = number_in_own_unit(before, barometer),
+                       second = number_in_own_unit(after, barometer);
             if (first && second) {
                 before_sum += *first;
                 after_sum += *second;
@@ -131,7 +134,10 @@ const Value* find_words(const Reading& reading, QuantityId wanted, Phase phase)
     return nullptr;
 }
 
-std::string words_of(const Value& value) { return value.words.empty() ? value.typed : value.words; }
+std::string words_of(const Value& value)
+{
+    return value.words.empty() ? value.typed : value.words;
+}
 
 /// Rounding of decimal fractions to binary must not put a value that stands exactly on a limit beyond it.
 constexpr double rounding_room = 1e-9;
@@ -145,7 +151,8 @@ Steadiness grade(double amount, double steady, double care)
 
 std::string lower_first(std::string text)
 {
-    if (!text.empty() && text[0] >= 'A' && text[0] <= 'Z' && (text.size() < 2 || text[1] < 'A' || text[1] > 'Z'))
+    if (!text.empty() && text[0] >= 'A' && text[0] <= 'Z' &&
+        (text.size() < 2 || text[1] < 'A' || text[1] > 'Z'))
         text[0] = static_cast<char>(text[0] - 'A' + 'a');
     return text;
 }
@@ -174,10 +181,12 @@ Finding judge_change(const Criterion& criterion, const Reading& reading, double 
     finding.verdict = grade(amount, steady, care);
     finding.severity = amount / (finding.verdict == Steadiness::unsteady ? care : steady);
     finding.words = lower_first(meant.title) + " was " + plain_number(pair->first, meant.decimals) +
-                    " before and " + with_own_unit(criterion.quantity, pair->second) + " after, a change of " +
-                    plain_number(amount, relative ? 2 : meant.decimals) + unit_words + " (" +
+                    " before and " + with_own_unit(criterion.quantity, pair->second) +
+                    " after, a change of " + plain_number(amount, relative ? 2 : meant.decimals) +
+                    unit_words + " (" +
                     limit_words(plain_number(steady, 0) + unit_words, plain_number(care, 0) + unit_words,
-                                finding.verdict) + ")";
+                                finding.verdict) +
+                    ")";
     return finding;
 }
 
@@ -195,7 +204,8 @@ Finding judge_settled(const Criterion& criterion, const Reading& reading, double
     const double limit = finding.verdict == Steadiness::unsteady ? care : steady;
     finding.severity = *waited > 0.0 ? limit / *waited : 1e6;
     finding.words = "the setting had been unchanged for " + plain_number(*waited, 0) + " min (steady from " +
-                    plain_number(steady, 0) + " min, usable with care from " + plain_number(care, 0) + " min)";
+                    plain_number(steady, 0) + " min, usable with care from " + plain_number(care, 0) +
+                    " min)";
     return finding;
 }
 
@@ -211,7 +221,8 @@ Finding judge_condition(const Criterion& criterion, const Reading& reading, doub
     finding.severity = *met / (finding.verdict == Steadiness::unsteady ? care : steady);
     finding.words = lower_first(meant.title) + " was " + with_own_unit(criterion.quantity, *met) + " (" +
                     limit_words(plain_number(steady, meant.decimals) + behind,
-                                plain_number(care, meant.decimals) + behind, finding.verdict) + ")";
+                                plain_number(care, meant.decimals) + behind, finding.verdict) +
+                    ")";
     return finding;
 }
 
@@ -241,9 +252,10 @@ Finding judge_depth(const Criterion& criterion, const Reading& reading, double s
                       : ratio > care ? Steadiness::usable_with_care
                                      : Steadiness::unsteady;
     finding.severity = (finding.verdict == Steadiness::unsteady ? care : steady) / std::max(ratio, 1e-6);
-    finding.words = "the water was " + with_own_unit(criterion.quantity, *depth) + " deep at a mean draught of " +
-                    plain_number(draught, 1) + " m, " + plain_number(ratio, 1) + " times (steady above " +
-                    plain_number(steady, 0) + " times, usable with care above " + plain_number(care, 0) + " times)";
+    finding.words = "the water was " + with_own_unit(criterion.quantity, *depth) +
+                    " deep at a mean draught of " + plain_number(draught, 1) + " m, " +
+                    plain_number(ratio, 1) + " times (steady above " + plain_number(steady, 0) +
+                    " times, usable with care above " + plain_number(care, 0) + " times)";
     return finding;
 }
 
@@ -277,9 +289,10 @@ Finding judge_walk(const Criterion& criterion, const Reading& reading, double st
     Finding finding;
     finding.verdict = grade(minutes, steady, care);
     finding.severity = minutes / (finding.verdict == Steadiness::unsteady ? care : steady);
-    finding.words = "the walk took " + std::to_string(minutes) + " min, from " + words_of(*before) + " to " +
-                    words_of(*after) + " (" +
-                    limit_words(plain_number(steady, 0) + " min", plain_number(care, 0) + " min", finding.verdict) + ")";
+    finding.words =
+        "the walk took " + std::to_string(minutes) + " min, from " + words_of(*before) + " to " +
+        words_of(*after) + " (" +
+        limit_words(plain_number(steady, 0) + " min", plain_number(care, 0) + " min", finding.verdict) + ")";
     return finding;
 }
 
@@ -309,17 +322,23 @@ Finding judge_criterion(const Criterion& criterion, const Reading& reading, bool
     if (!steady || !care)
         return {};
     switch (criterion.form) {
-    case Criterion::Form::at_least: return judge_settled(criterion, reading, *steady, *care);
-    case Criterion::Form::at_most: return judge_condition(criterion, reading, *steady, *care);
-    case Criterion::Form::walk: return judge_walk(criterion, reading, *steady, *care);
-    case Criterion::Form::draughts: return judge_depth(criterion, reading, *steady, *care);
-    default: return judge_change(criterion, reading, *steady, *care);
+    case Criterion::Form::at_least:
+        return judge_settled(criterion, reading, *steady, *care);
+    case Criterion::Form::at_most:
+        return judge_condition(criterion, reading, *steady, *care);
+    case Criterion::Form::walk:
+        return judge_walk(criterion, reading, *steady, *care);
+    case Criterion::Form::draughts:
+        return judge_depth(criterion, reading, *steady, *care);
+    default:
+        return judge_change(criterion, reading, *steady, *care);
     }
 }
 
 bool decides_over(const Finding& finding, const Finding& other)
 {
-    return finding.verdict != other.verdict ? finding.verdict > other.verdict : finding.severity > other.severity;
+    return finding.verdict != other.verdict ? finding.verdict > other.verdict
+                                            : finding.severity > other.severity;
 }
 
 /// What was asked for beside the two lines and was not noted; it is said, never guessed.
@@ -327,9 +346,10 @@ std::string not_noted(bool settled_known, bool walk_known)
 {
     if (settled_known && walk_known)
         return {};
-    return settled_known   ? " How long the walk took was not noted."
-           : walk_known    ? " How long the setting had been unchanged was not noted."
-                           : " How long the setting had been unchanged and how long the walk took were not noted.";
+    return settled_known ? " How long the walk took was not noted."
+           : walk_known
+               ? " How long the setting had been unchanged was not noted."
+               : " How long the setting had been unchanged and how long the walk took were not noted.";
 }
 
 } // namespace
@@ -337,10 +357,14 @@ std::string not_noted(bool settled_known, bool walk_known)
 std::string steadiness_word(Steadiness steadiness)
 {
     switch (steadiness) {
-    case Steadiness::steady: return "steady";
-    case Steadiness::usable_with_care: return "usable with care";
-    case Steadiness::unsteady: return "unsteady";
-    default: return "not judged";
+    case Steadiness::steady:
+        return "steady";
+    case Steadiness::usable_with_care:
+        return "usable with care";
+    case Steadiness::unsteady:
+        return "unsteady";
+    default:
+        return "not judged";
     }
 }
 

@@ -14,7 +14,8 @@ namespace evenstroke {
 std::optional<AbsolutePressure> barometer_of(const Reading& reading);
 
 /// The number of a value in `quantity(value.quantity).unit`, gauge or absolute as the quantity is kept.
-/// @return none for words, for a missing value, and where gauge and absolute differ and the barometer is not known
+/// @return none for words, for a missing value, and where gauge and absolute differ and the barometer is not
+/// known
 std::optional<double> number_in_own_unit(const Value& value, std::optional<AbsolutePressure> barometer);
 
 /// The same pressure over vacuum, in the quantity's unit.

@@ -14,7 +14,8 @@ namespace {
 
 const LogSection* find_section(const std::vector<LogSection>& sheet, std::string_view name)
 {
-    const auto found = std::find_if(sheet.begin(), sheet.end(), [&](const LogSection& s) { return s.name == name; });
+    const auto found =
+        std::find_if(sheet.begin(), sheet.end(), [&](const LogSection& s) { return s.name == name; });
     return found == sheet.end() ? nullptr : &*found;
 }
 
@@ -30,8 +31,8 @@ TEST(LogSheet, FollowsTheWalk)
     std::vector<std::string> names;
     for (const LogSection& section : make_log_sheet(invented_engine(), {}))
         names.push_back(section.name);
-    EXPECT_EQ(names, (std::vector<std::string>{"quick_lines", "control", "ship_weather", "engine_stand", "turbochargers",
-                                               "coolers", "cooling_lube", "fuel"}));
+    EXPECT_EQ(names, (std::vector<std::string>{"quick_lines", "control", "ship_weather", "engine_stand",
+                                               "turbochargers", "coolers", "cooling_lube", "fuel"}));
 }
 
 TEST(LogSheet, HoldsEveryQuantityOfATwoStrokeEngineOnce)
@@ -89,8 +90,9 @@ TEST(LogSheet, HasBoxesForEachTurbochargerAndCoolerOrOneForAll)
 
 TEST(LogSheet, LearnsTheLayoutFromEarlierReadings)
 {
-    const std::vector<Reading> readings{ReadingMaker().number("turbocharger_speed", 9000, at_turbocharger(2)).done(),
-                                        ReadingMaker().number("cooler_pressure_drop", 12, at_cooler(1)).done()};
+    const std::vector<Reading> readings{
+        ReadingMaker().number("turbocharger_speed", 9000, at_turbocharger(2)).done(),
+        ReadingMaker().number("cooler_pressure_drop", 12, at_cooler(1)).done()};
     EXPECT_EQ(find_layout(readings), (EngineLayout{2, 1}));
     EXPECT_EQ(find_layout({}), (EngineLayout{0, 0}));
 }
@@ -118,10 +120,15 @@ TEST(LogSheet, HasTheEightQuickLineRowsBeforeAndAfter)
 
 TEST(LogSheet, RemembersWhatWasEverRead)
 {
-    const std::vector<Reading> readings{ReadingMaker().number("liner_temperature", 150, Place::cylinder(1))
-                                            .missing("oil_mist_level", MissingReason::not_fitted)
-                                            .missing("thrust_bearing_temperature", MissingReason::out_of_order).done()};
-    EXPECT_EQ(quantities_used(readings), (std::set<QuantityId>{*find_quantity("liner_temperature"), *find_quantity("thrust_bearing_temperature")}));
+    const std::vector<Reading> readings{
+        ReadingMaker()
+            .number("liner_temperature", 150, Place::cylinder(1))
+            .missing("oil_mist_level", MissingReason::not_fitted)
+            .missing("thrust_bearing_temperature", MissingReason::out_of_order)
+            .done()};
+    EXPECT_EQ(quantities_used(readings),
+              (std::set<QuantityId>{*find_quantity("liner_temperature"),
+                                    *find_quantity("thrust_bearing_temperature")}));
 }
 
 TEST(Completeness, CountsRequiredBoxesAndTakesAReasonForAnAnswer)
@@ -130,8 +137,11 @@ TEST(Completeness, CountsRequiredBoxesAndTakesAReasonForAnAnswer)
     const Completeness empty = find_completeness(sheet, Reading{});
     EXPECT_EQ(empty.answered, 0);
     EXPECT_EQ(empty.missing.size(), static_cast<std::size_t>(empty.required));
-    const Completeness some = find_completeness(sheet, ReadingMaker().cylinders("exhaust_temperature", {350, 351})
-                                  .missing("exhaust_temperature", MissingReason::out_of_order, Place::cylinder(3)).done());
+    const Completeness some = find_completeness(
+        sheet, ReadingMaker()
+                   .cylinders("exhaust_temperature", {350, 351})
+                   .missing("exhaust_temperature", MissingReason::out_of_order, Place::cylinder(3))
+                   .done());
     EXPECT_EQ(some.required, empty.required);
     EXPECT_EQ(some.answered, 3);
 }
@@ -140,9 +150,11 @@ TEST(Completeness, ListsWhatIsMissingARowALine)
 {
     Engine engine = invented_engine();
     const QuantityId exhaust = *find_quantity("exhaust_temperature"), speed = *find_quantity("speed");
-    std::vector<LogBox> missing{{speed, Place::engine(), Phase::reading}, {exhaust, Place::cylinder(3), Phase::reading},
+    std::vector<LogBox> missing{{speed, Place::engine(), Phase::reading},
+                                {exhaust, Place::cylinder(3), Phase::reading},
                                 {exhaust, Place::cylinder(4), Phase::reading}};
-    EXPECT_EQ(missing_words(engine, missing), (std::vector<std::string>{"Speed", "Exhaust temperature of cylinders 3 and 4"}));
+    EXPECT_EQ(missing_words(engine, missing),
+              (std::vector<std::string>{"Speed", "Exhaust temperature of cylinders 3 and 4"}));
     missing.clear();
     for (int cylinder = 1; cylinder <= engine.cylinders; ++cylinder)
         missing.push_back({exhaust, Place::cylinder(cylinder), Phase::reading});
@@ -153,8 +165,11 @@ TEST(Closing, NeedsOneFigureOfLoadAndNothingElse)
 {
     EXPECT_TRUE(find_problem_with_closing(ReadingMaker().number("speed", 98).done()).has_value());
     for (const char* figure : {"load_percent", "shaft_power", "generator_power", "fuel_index"})
-        EXPECT_FALSE(find_problem_with_closing(ReadingMaker().number(figure, 60).done()).has_value()) << figure;
-    EXPECT_TRUE(find_problem_with_closing(ReadingMaker().missing("load_percent", MissingReason::not_read).done()).has_value());
+        EXPECT_FALSE(find_problem_with_closing(ReadingMaker().number(figure, 60).done()).has_value())
+            << figure;
+    EXPECT_TRUE(
+        find_problem_with_closing(ReadingMaker().missing("load_percent", MissingReason::not_read).done())
+            .has_value());
 }
 
 } // namespace

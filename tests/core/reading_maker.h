@@ -16,7 +16,8 @@ public:
     explicit ReadingMaker(TimePoint taken = {}) { reading_.taken_at.utc = taken; }
 
     /// A number in the quantity's own unit and kind.
-    ReadingMaker& number(std::string_view name, double own, Place place = Place::engine(), Phase phase = Phase::reading)
+    ReadingMaker& number(std::string_view name, double own, Place place = Place::engine(),
+                         Phase phase = Phase::reading)
     {
         Value value = empty(name, place, phase);
         value.unit = quantity(value.quantity).unit;
@@ -33,7 +34,8 @@ public:
         const auto parsed = parse_typed_value(text).value();
         value.typed = text;
         value.unit = parsed.unit.id;
-        value.kind = parsed.unit.kind == PressureKind::none ? quantity(value.quantity).kind : parsed.unit.kind;
+        value.kind =
+            parsed.unit.kind == PressureKind::none ? quantity(value.quantity).kind : parsed.unit.kind;
         value.number = parsed.number;
         value.value_si = parsed.value_si;
         reading_.values.push_back(value);
@@ -82,9 +84,18 @@ private:
     Reading reading_;
 };
 
-inline Place at_ship() { return {Place::Kind::ship, 0}; }
-inline Place at_turbocharger(int number) { return {Place::Kind::turbocharger, number}; }
-inline Place at_cooler(int number) { return {Place::Kind::cooler, number}; }
+inline Place at_ship()
+{
+    return {Place::Kind::ship, 0};
+}
+inline Place at_turbocharger(int number)
+{
+    return {Place::Kind::turbocharger, number};
+}
+inline Place at_cooler(int number)
+{
+    return {Place::Kind::cooler, number};
+}
 
 /// A six-cylinder crosshead engine, invented.
 inline Engine invented_engine()
