@@ -11,8 +11,8 @@
 /// resources/catalogue/drift_channels.csv, drift_signatures.csv and drift_correlations.csv.
 namespace evenstroke::drift {
 
-enum class Subject { cylinder, engine, cylinder_median };
 enum class DeviationForm { difference, percent };
+enum class Subject { cylinder, engine, cylinder_median };
 
 struct CatalogueChannel
 {
@@ -23,7 +23,8 @@ struct CatalogueChannel
     double offset_spread;       ///< prior one sigma between cylinders; 0 at engine level
     DeviationForm form;         ///< percent: 100 (corrected / expected - 1)
     std::string unit;           ///< of the deviation
-    bool row_check;             ///< a whole row in another unit is looked for
+    /// Median of typed over expected outside which a whole row must be in another unit; 0 and 1e9: not looked for.
+    double row_ratio_low, row_ratio_high;
     bool counted;               ///< among those the thresholds were calibrated for; others raise them a little
 };
 

@@ -1,0 +1,33 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include <cstddef>
+#include <vector>
+
+namespace evenstroke::drift {
+
+/// One sigma of a quantity on this engine: the catalogue's figure, taken over by the engine's own.
+///
+/// Successive differences leave slow changes out; their median leaves typing errors out. A difference has
+/// twice the variance of a value. The catalogue's figure counts like `prior_weight` differences.
+class NoiseEstimate
+{
+public:
+    NoiseEstimate(double prior, double prior_weight) : prior_(prior), weight_(prior_weight), value_(prior) {}
+
+    void add_difference(double difference) { differences_.push_back(difference < 0.0 ? -difference : difference); }
+    /// Takes what has come in since into account. Between renewals the value stands still, so that two
+    /// readings in a row are judged by one measure.
+    void renew();
+    double value() const { return value_; }
+
+private:
+    double prior_, weight_, value_;
+    std::vector<double> differences_;
+};
+
+/// Prior sigma of a value against the mean of the others: their mean has noise of its own, the 10 % over
+/// 1 / (N - 1) is for the pulling in (common_mode).
+double noise_against_others(double noise, std::size_t cylinders);
+
+} // namespace evenstroke::drift
