@@ -11,7 +11,7 @@
 
 namespace evenstroke {
 
-/// What the worker threads of one run share. A stopped run keeps its own, so that late workers end quietly.
+/// What the worker threads share with the window's.
 struct Judging::Shared
 {
     std::atomic<bool> stopped{false};
@@ -87,9 +87,16 @@ Judging::~Judging()
 
 void Judging::stop()
 {
+    stop_fleet();
     shared_->stopped = true;
-    shared_ = std::make_shared<Shared>();
-    asked_.clear();
+}
+
+void Judging::stop_fleet()
+{
+    {
+        const std::lock_guard lock(shared_->mutex);
+        shared_->waiting.clear();
+    }
     fleet_done_ = fleet_total_ = 0;
     emit progress();
 }
@@ -118,7 +125,7 @@ void Judging::run_one(const QString& engine_id)
         if (run->stopped)
             return;
         // The page first; keeping the summary may wait for another writer.
-        QMetaObject::invokeMethod(this, [this, run, outcome] { take_delivery(run, outcome, false); },
+        QMetaObject::invokeMethod(this, [this, outcome] { take_delivery(outcome, false); },
                                   Qt::QueuedConnection);
         if (keep && outcome.judgement) {
             std::vector<storage::StoredJudgement> one{stored_form(outcome, history.value()->now())};
@@ -169,24 +176,19 @@ void Judging::run_fleet_worker()
                 waiting_to_be_kept.push_back(stored_form(outcome, history.value()->now()));
             if (waiting_to_be_kept.size() >= kept_at_once)
                 store(*history.value(), waiting_to_be_kept);
-            QMetaObject::invokeMethod(this, [this, run, outcome] { take_delivery(run, outcome, true); },
+            QMetaObject::invokeMethod(this, [this, outcome] { take_delivery(outcome, true); },
                                       Qt::QueuedConnection);
         }
         if (history)
             store(*history.value(), waiting_to_be_kept);
-        QMetaObject::invokeMethod(this, [this, run] {
-            if (run == shared_)
-                emit fleet_finished();
-        }, Qt::QueuedConnection);
+        QMetaObject::invokeMethod(this, [this] { emit fleet_finished(); }, Qt::QueuedConnection);
     }));
 }
 
-void Judging::take_delivery(const std::shared_ptr<Shared>& run, JudgingOutcome outcome, bool of_fleet)
+void Judging::take_delivery(const JudgingOutcome& outcome, bool of_fleet)
 {
-    if (run != shared_)
-        return; // stopped, or another history, in the meantime
     if (of_fleet)
-        ++fleet_done_;
+        fleet_done_ = std::min(fleet_done_ + 1, fleet_total_);
     else
         asked_.removeAll(outcome.engine_id);
     deliver_(outcome);

@@ -28,7 +28,7 @@ struct JudgingOutcome
 };
 
 /// Judges engines on worker threads, each with a connection of its own, keeps the summaries in the history,
-/// and hands the outcome to the thread this object lives on. Nothing is delivered after `stop`.
+/// and hands the outcome to the thread this object lives on. Nothing is delivered once it is gone.
 class Judging : public QObject
 {
     Q_OBJECT
@@ -44,7 +44,8 @@ public:
     bool busy_with(const QString& engine_id) const { return asked_.contains(engine_id); }
     /// Engine after engine in the background.
     void ask_all(const QStringList& engine_ids);
-    void stop();
+    /// The engines still waiting are left as they are; a page's own question is always answered.
+    void stop_fleet();
     bool busy() const { return !asked_.isEmpty() || fleet_done_ < fleet_total_; }
     int fleet_done() const { return fleet_done_; }
     int fleet_total() const { return fleet_total_; }
@@ -55,9 +56,10 @@ signals:
 
 private:
     struct Shared;
+    void stop();
     void run_one(const QString& engine_id);
     void run_fleet_worker();
-    void take_delivery(const std::shared_ptr<Shared>& run, JudgingOutcome outcome, bool of_fleet);
+    void take_delivery(const JudgingOutcome& outcome, bool of_fleet);
 
     QString path_;
     bool may_store_;

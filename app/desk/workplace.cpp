@@ -87,8 +87,11 @@ std::optional<Problem> Workplace::open(const QString& path)
         if (reading)
             history = std::move(reading);
     }
-    if (!history)
+    if (!history) {
+        if (!is_open())
+            state_->problem = history.error();
         return history.error();
+    }
     return start_with(std::move(history.value()));
 }
 
@@ -112,6 +115,7 @@ std::optional<Problem> Workplace::start_with(std::unique_ptr<storage::History> h
     if (before)
         state_->trail.remember(before->path());
     state_->known.clear();
+    state_->refused.clear();
     state_->problem.reset();
     state_->judging = std::make_unique<Judging>(this->path(), !read_only(),
                                                 [this](const JudgingOutcome& o) { take_outcome(o); });
@@ -186,8 +190,10 @@ void Workplace::look_for_changes()
 void Workplace::take_outcome(const JudgingOutcome& outcome)
 {
     state_->wrote_summaries = true;
-    if (outcome.problem)
+    if (outcome.problem) {
         state_->problem = outcome.problem;
+        state_->refused[outcome.engine_id] = state_->revisions[outcome.engine_id];
+    }
     if (outcome.judgement) {
         const bool wanted = outcome.engine_id == selection().engine || state_->find(outcome.engine_id);
         if (wanted)
@@ -230,7 +236,9 @@ std::shared_ptr<const Judgement> Workplace::judgement(const QString& engine_id) 
     if (!state_->judging || revision == state_->revisions.end())
         return nullptr;
     const KnownJudgement* known = state_->find(engine_id);
-    if (!known || known->revision != revision->second)
+    const auto refused = state_->refused.find(engine_id);
+    const bool known_to_fail = refused != state_->refused.end() && refused->second == revision->second;
+    if ((!known || known->revision != revision->second) && !known_to_fail)
         state_->judging->ask(engine_id);
     return known ? known->judgement : nullptr;
 }
@@ -256,7 +264,7 @@ void Workplace::judge_fleet()
 void Workplace::stop_work()
 {
     if (state_->judging)
-        state_->judging->stop();
+        state_->judging->stop_fleet();
 }
 
 QString Workplace::activity() const

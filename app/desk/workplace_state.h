@@ -33,6 +33,7 @@ struct WorkplaceState
     std::vector<FleetRow> fleet;
     std::list<KnownJudgement> known; ///< newest use first
     std::optional<Problem> problem;
+    std::map<QString, qint64> refused; ///< engines whose readings could not be read at this revision: not asked again
     Trail trail;
     qint64 seen_change = 0;
     bool wrote_summaries = false; ///< our own workers committed since the last look

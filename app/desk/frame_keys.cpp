@@ -1,0 +1,140 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/desk/foot_line.h"
+#include "app/desk/frame.h"
+#include "app/desk/number_text.h"
+#include "app/desk/rail.h"
+#include "app/desk/sentence_bar.h"
+#include "app/desk/workplace.h"
+
+#include <QApplication>
+#include <QDateTime>
+#include <QFileInfo>
+#include <QKeyEvent>
+#include <QPrintDialog>
+#include <QPrinter>
+#include <QShortcut>
+
+namespace evenstroke {
+
+namespace {
+
+/// "history saved 09:41", or the day where it was not today.
+QString saved_text(const Workplace& workplace)
+{
+    if (!workplace.is_open())
+        return Frame::tr("no history open");
+    if (workplace.read_only())
+        return Frame::tr("history, for reading only");
+    const QDateTime saved = QFileInfo(workplace.path()).lastModified();
+    return saved.date() == QDate::currentDate()
+               ? Frame::tr("history saved %1").arg(saved.time().toString(QStringLiteral("HH:mm")))
+               : Frame::tr("history saved %1").arg(day_text(TimePoint(std::chrono::seconds(saved.toSecsSinceEpoch()))));
+}
+
+/// "reference 25 °C inlet air, 25 °C coolant, 1000 mbar"
+QString reference_text(const Workplace& workplace)
+{
+    const auto judgement = workplace.judgement();
+    if (!judgement || !judgement->record)
+        return {};
+    const ReferenceConditions& reference = judgement->record->engine.reference;
+    return Frame::tr("reference %1 °C inlet air, %2 °C coolant, %3 mbar")
+        .arg(number_text(in_celsius(reference.inlet_air), 0), number_text(in_celsius(reference.cooler_coolant), 0),
+             number_text(1000.0 * in_bar(reference.barometer), 0));
+}
+
+} // namespace
+
+void Frame::refresh_frame()
+{
+    for (const Entry& entry : entries_)
+        if (entry.about.count_new)
+            rail_->set_count(entry.about.name, workplace_.is_open() ? entry.about.count_new(workplace_) : 0);
+    const QString activity = workplace_.activity();
+    const QString draft = current_ ? current_->draft_text() : QString();
+    foot_->set_state(!activity.isEmpty() ? activity : !draft.isEmpty() ? draft : saved_text(workplace_));
+    foot_->set_stoppable(!activity.isEmpty());
+    QStringList middle;
+    for (const QString& text : {reference_text(workplace_), current_ ? current_->foot_text() : QString()})
+        if (!text.isEmpty())
+            middle.append(text);
+    foot_->set_middle(middle.join(QStringLiteral(" · ")));
+    foot_->set_theme_word(theme().kind == ThemeKind::night ? tr("night") : tr("day"));
+    sentence_->show_sentence(current_ ? current_->sentence() : QString());
+    const VesselChoice* vessel = workplace_.find_vessel(workplace_.selection().vessel);
+    setWindowTitle(vessel ? tr("%1 – Evenstroke").arg(vessel->name) : QStringLiteral("Evenstroke"));
+}
+
+void Frame::add_keys()
+{
+    const auto key = [this](const QKeySequence& sequence, auto action) {
+        connect(new QShortcut(sequence, this), &QShortcut::activated, this, action);
+    };
+    key(QKeySequence(Qt::ALT | Qt::Key_Left), [this] { workplace_.go_back(); });
+    key(QKeySequence(Qt::ALT | Qt::Key_Right), [this] { workplace_.go_forward(); });
+    key(QKeySequence(Qt::Key_F8),
+        [this] { use_theme(theme().kind == ThemeKind::day ? ThemeKind::night : ThemeKind::day); });
+    key(QKeySequence(Qt::Key_F6), [this] { walk_focus(); });
+    key(QKeySequence::Print, [this] { print_page(); });
+    qApp->installEventFilter(this);
+}
+
+/// Letters change the page or open a chooser unless they are being typed somewhere.
+bool Frame::eventFilter(QObject* watched, QEvent* event)
+{
+    if (event->type() != QEvent::KeyPress || !watched->isWidgetType() || !isActiveWindow()
+        || QApplication::activePopupWidget() || QApplication::activeModalWidget())
+        return QWidget::eventFilter(watched, event);
+    auto* widget = static_cast<QWidget*>(watched);
+    if (widget->window() != this)
+        return QWidget::eventFilter(watched, event);
+    const auto* key = static_cast<QKeyEvent*>(event);
+    const bool with_alt = key->modifiers() == Qt::AltModifier;
+    if (key->matches(QKeySequence::Copy) && current_ && !widget->testAttribute(Qt::WA_InputMethodEnabled)) {
+        current_->copy();
+        return true;
+    }
+    if (!with_alt && (key->modifiers() & ~Qt::ShiftModifier) != Qt::NoModifier)
+        return QWidget::eventFilter(watched, event);
+    const bool typing = widget->testAttribute(Qt::WA_InputMethodEnabled) || (current_ && current_->takes_letters());
+    if (typing && !with_alt)
+        return QWidget::eventFilter(watched, event);
+    if (key->key() >= Qt::Key_A && key->key() <= Qt::Key_Z && take_letter(QChar(key->key())))
+        return true;
+    return QWidget::eventFilter(watched, event);
+}
+
+bool Frame::take_letter(QChar letter)
+{
+    for (const Entry& entry : entries_)
+        if (entry.about.key == letter && (workplace_.is_open() || entry.about.without_history)) {
+            workplace_.open_page(entry.about.name);
+            return true;
+        }
+    return sentence_->open_by_letter(letter);
+}
+
+/// F6: page, sentence, rail, and round again.
+void Frame::walk_focus()
+{
+    QWidget* focus = QApplication::focusWidget();
+    if (focus && sentence_->isAncestorOf(focus))
+        rail_->nextInFocusChain()->setFocus(Qt::TabFocusReason);
+    else if (focus && rail_->isAncestorOf(focus) && current_)
+        current_->first_focus()->setFocus(Qt::TabFocusReason);
+    else
+        sentence_->nextInFocusChain()->setFocus(Qt::TabFocusReason);
+}
+
+void Frame::print_page()
+{
+    if (!current_ || !current_->can_print())
+        return;
+    QPrinter printer(QPrinter::HighResolution);
+    printer.setPageOrientation(QPageLayout::Landscape);
+    QPrintDialog dialog(&printer, this);
+    if (dialog.exec() == QDialog::Accepted)
+        current_->print(printer);
+}
+
+} // namespace evenstroke

@@ -1,0 +1,35 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/desk/snapshot.h"
+
+#include "app/desk/frame.h"
+#include "app/desk/workplace.h"
+
+#include <QApplication>
+#include <QElapsedTimer>
+#include <QPixmap>
+#include <QTextStream>
+#include <QThread>
+
+namespace evenstroke {
+
+int take_snapshot(Frame& frame, Workplace& workplace, const QString& file)
+{
+    constexpr int quiet_milliseconds = 300, longest_milliseconds = 120'000;
+    frame.show();
+    QElapsedTimer all, quiet;
+    all.start();
+    quiet.start();
+    while (quiet.elapsed() < quiet_milliseconds && all.elapsed() < longest_milliseconds) {
+        QApplication::processEvents(QEventLoop::AllEvents, 20);
+        QThread::msleep(5);
+        if (!workplace.activity().isEmpty())
+            quiet.restart();
+    }
+    if (frame.grab().save(file))
+        return 0;
+    QTextStream(stderr) << QStringLiteral("The picture %1 could not be written. Choose a folder that allows writing.").arg(file)
+                        << Qt::endl;
+    return 3;
+}
+
+} // namespace evenstroke
