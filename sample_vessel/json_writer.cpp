@@ -1,0 +1,158 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "sample_vessel/decimal_text.h"
+#include "sample_vessel/file_writer.h"
+
+#include <map>
+
+namespace evenstroke::sample {
+namespace {
+
+const std::string invented = "invented for the sample vessel";
+
+std::string quoted(const std::string& text)
+{
+    std::string json = "\"";
+    for (const char letter : text) {
+        if (letter == '"' || letter == '\\')
+            json += '\\';
+        json += letter;
+    }
+    return json + "\"";
+}
+
+/// As few places as the number needs, at most `decimals`.
+std::string number(double value, int decimals = 4)
+{
+    std::string text = decimal_text(value, decimals);
+    while (text.find('.') != std::string::npos && (text.back() == '0' || text.back() == '.')) {
+        const bool point = text.back() == '.';
+        text.pop_back();
+        if (point)
+            break;
+    }
+    return text;
+}
+
+std::string key(const std::string& name)
+{
+    return quoted(name) + ": ";
+}
+
+std::string source_entry()
+{
+    return key("source") + quoted(invented);
+}
+
+/// Members of an object or array, one a line.
+std::string joined(const std::vector<std::string>& members, const std::string& indent)
+{
+    std::string json;
+    for (std::size_t i = 0; i < members.size(); ++i)
+        json += indent + members[i] + (i + 1 < members.size() ? ",\n" : "\n");
+    return json;
+}
+
+std::string vessel(const Scenario& scenario)
+{
+    return key("vessel") + "{" + key("name") + quoted(scenario.vessel) + ", " + key("imo") + quoted(scenario.imo) + ", "
+           + key("flag") + quoted(scenario.flag) + ", " + key("class") + quoted(scenario.class_society) + ", "
+           + key("class_number") + quoted(scenario.class_number) + "}";
+}
+
+std::string firing_order(const EngineDesign& engine)
+{
+    std::string json = key("firing_order") + "[";
+    for (std::size_t i = 0; i < engine.firing_order.size(); ++i)
+        json += (i > 0 ? ", " : "") + std::to_string(engine.firing_order[i]);
+    return json + "]";
+}
+
+std::string reference()
+{
+    return key("reference") + "{" + key("inlet_air_c") + number(reference_inlet_air_c) + ", " + key("cooler_coolant_c")
+           + number(reference_coolant_c) + ", " + key("barometric_mbar") + number(reference_barometer_mbar) + ", "
+           + source_entry() + "}";
+}
+
+std::string correction(const EngineDesign& engine)
+{
+    std::vector<std::string> members;
+    for (const auto& [quantity, pair] : engine.correction)
+        members.push_back(key(quantity) + "{" + key("per_inlet_air") + number(pair.per_inlet_air) + ", "
+                          + key("per_coolant") + number(pair.per_coolant) + ", " + source_entry() + "}");
+    return key("correction") + "{\n" + joined(members, "    ") + "  }";
+}
+
+std::string limits(const EngineDesign& engine)
+{
+    std::vector<std::string> members;
+    for (const DesignLimit& limit : engine.limits) {
+        const std::string low = limit.low ? key("low") + number(*limit.low) + ", " : "";
+        const std::string high = limit.high ? key("high") + number(*limit.high) + ", " : "";
+        members.push_back(key(limit.quantity) + "{" + low + high + source_entry() + "}");
+    }
+    return key("limits") + "{\n" + joined(members, "    ") + "  }";
+}
+
+std::string instruments(const EngineDesign& engine)
+{
+    std::vector<std::string> members;
+    for (const DesignInstrument& one : engine.instruments)
+        members.push_back("{" + key("quantity") + quoted(one.quantity) + ", " + key("serial") + quoted(one.serial) + ", "
+                          + key("calibrated") + quoted(one.calibrated) + ", " + key("uncertainty") + number(one.uncertainty)
+                          + ", " + source_entry() + "}");
+    return key("instruments") + "[\n" + joined(members, "    ") + "  ]";
+}
+
+std::string baseline(const EngineDesign& engine)
+{
+    std::vector<std::string> members;
+    for (const DesignPoint& point : engine.baseline) {
+        std::string member = "{" + key("load_percent") + number(point.load_percent);
+        for (const auto& [quantity, value] : point.values)
+            member += ", " + key(quantity) + number(value);
+        members.push_back(member + "}");
+    }
+    return key("baseline") + "[\n" + joined(members, "    ") + "  ]";
+}
+
+std::vector<std::string> particulars(const EngineDesign& engine)
+{
+    std::vector<std::string> members{
+        key("engine") + quoted(engine.name),
+        key("cycle") + quoted(engine.two_stroke ? "two-stroke" : "four-stroke"),
+        key("cylinders") + std::to_string(engine.cylinders),
+        key("bore_mm") + number(engine.bore_mm),
+        key("stroke_mm") + number(engine.stroke_mm),
+        key("rod_length_mm") + number(engine.rod_length_mm),
+        key("rated_power_kw") + number(engine.rated_power_kw),
+        key("rated_speed_rpm") + number(engine.rated_speed_rpm),
+        key("maximum_pressure_controlled") + "false",
+        firing_order(engine),
+        key("compression_ratio") + number(engine.compression_ratio),
+        key("cylinder_closes_deg") + number(engine.cylinder_closes_deg),
+        key("cylinder_opens_deg") + number(engine.cylinder_opens_deg),
+        key("mechanical_efficiency") + number(engine.mechanical_efficiency),
+    };
+    if (engine.propeller_pitch_m)
+        members.push_back(key("propeller_pitch_m") + number(*engine.propeller_pitch_m));
+    return members;
+}
+
+} // namespace
+
+std::string engine_json(const Scenario& scenario, const EngineDesign& engine)
+{
+    std::vector<std::string> members{vessel(scenario)};
+    for (const std::string& member : particulars(engine))
+        members.push_back(member);
+    members.push_back(reference());
+    members.push_back(correction(engine));
+    members.push_back(limits(engine));
+    members.push_back(instruments(engine));
+    members.push_back(key("baseline_source") + quoted(invented));
+    members.push_back(baseline(engine));
+    return "{\n" + joined(members, "  ") + "}\n";
+}
+
+} // namespace evenstroke::sample
