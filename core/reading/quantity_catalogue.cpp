@@ -152,10 +152,10 @@ std::optional<QuantityId> find_quantity(std::string_view name, Place::Kind place
     if (found == catalogue().by_name.end())
         return std::nullopt;
     for (QuantityId id : found->second)
-        if (quantity(id).per == place)
+        if (quantity(id).per == place && !quantity(id).derived())
             return id;
     for (QuantityId id : found->second)
-        if (may_stand_at(quantity(id), place))
+        if (!quantity(id).derived() && may_stand_at(quantity(id), place))
             return id;
     return std::nullopt;
 }

@@ -57,6 +57,7 @@ struct Quantity
     std::optional<double> uncertainty_absolute; ///< half-width at 95 %, in `unit`
     std::optional<double> uncertainty_percent;  ///< of the reading
     Need need = Need::optional;
+    bool derived() const { return group == "derived"; } ///< worked out by the program, never typed
     std::string only_for;   ///< "two-stroke", "four-stroke" or empty
     std::string source;
 
@@ -73,7 +74,8 @@ const Quantity& quantity(QuantityId id);
 /// The quantity of this name at this kind of place. Turbocharger and cooler quantities are also found
 /// for the engine (the engine has one, or the value stands for all); `fuel_index` exists twice.
 std::optional<QuantityId> find_quantity(std::string_view name, Place::Kind place);
-/// As above, whatever the place; the first in walking order.
+/// Derived quantities are not found here: nobody types them.
+/// As above, whatever the place, derived ones too; the first in walking order.
 std::optional<QuantityId> find_quantity(std::string_view name);
 /// The nearest known names to a misspelt one, for the sentence that refuses it.
 std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count = 3);

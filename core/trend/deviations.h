@@ -1,0 +1,50 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/trend/conditions.h"
+#include "core/trend/judgement.h"
+
+#include <optional>
+#include <vector>
+
+/// From the typed value to the deviation. Every step is affine in the typed number, so that the typing
+/// check can ask what a deviation would be had the number been another.
+namespace evenstroke {
+
+/// `corrected = scale * own + shift`, the ambient correction of one quantity at one reading.
+struct Correction
+{
+    double scale = 1.0, shift = 0.0;
+    Applied applied = Applied::none;
+    std::string missing_input; ///< set where the correction could not be made; then nothing was corrected
+    double per_inlet_air = 0.0, per_coolant = 0.0; ///< own unit per kelvin at this value, for the uncertainty
+    bool known() const { return missing_input.empty() && applied != Applied::not_correctable; }
+};
+
+/// How the ambient correction treats `own` of this quantity at these conditions.
+/// A quantity that ambient air does not move has scale 1 and applied none. The maximum pressure of an engine
+/// whose control holds it is not corrected.
+Correction find_correction(const Engine& engine, const Quantity& quantity, double own, const Conditions& conditions);
+
+/// Half-width at 95 % of one instrument, own unit; nothing where neither engine nor catalogue states one.
+std::optional<double> instrument_uncertainty(const Engine& engine, const Quantity& quantity, double own);
+
+/// All numeric values of a reading, judged but for `doubtful`; walking order.
+std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& baseline, const Reading& reading,
+                                      const Conditions& conditions);
+
+/// Specific fuel consumption in g/kWh at the usual reference heating value of 42.7 MJ/kg (common practice, as
+/// ISO 3046-1 from memory), and how it changes with the fuel flow. The entered heating value is used, 42.7
+/// where none was entered. Nothing without fuel and power.
+struct SpecificConsumptionNow
+{
+    double value = 0.0;          ///< g/kWh
+    double per_fuel_flow = 0.0;  ///< g/kWh per kg/h
+};
+std::optional<SpecificConsumptionNow> specific_consumption(const Engine& engine, const Reading& reading,
+                                                           const Conditions& conditions);
+
+/// The heating value to which consumption is brought, MJ/kg (common practice).
+inline constexpr double reference_heating_value = 42.7;
+
+} // namespace evenstroke

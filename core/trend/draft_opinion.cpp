@@ -1,0 +1,145 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/trend/drift_catalogue.h"
+#include "core/trend/drift_input.h"
+#include "core/trend/drift_results.h"
+#include "core/trend/flag_text.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace evenstroke {
+namespace {
+
+/// The record with the draft as its last reading; readings taken after the draft are left out.
+std::shared_ptr<EngineRecord> with_draft(const EngineRecord& record, const Reading& draft)
+{
+    auto extended = std::make_shared<EngineRecord>(record);
+    auto& readings = extended->readings;
+    readings.erase(std::remove_if(readings.begin(), readings.end(),
+                                  [&](const Reading& r) {
+                                      return r.taken_at.utc >= draft.taken_at.utc || (!r.id.empty() && r.id == draft.id);
+                                  }),
+                   readings.end());
+    readings.push_back(draft);
+    return extended;
+}
+
+const drift::UsualBand* find_band(const drift::Input& input, const drift::ReadingCheck& check, const Quantity& q,
+                                  const Place& place, const drift::CatalogueChannel** channel)
+{
+    if (place.kind == Place::Kind::cylinder) {
+        for (std::size_t k = 0; k < input.channels.size() && k < check.cylinder_bands.size(); ++k) {
+            const auto& row = check.cylinder_bands[k];
+            const std::size_t j = static_cast<std::size_t>(place.number) - 1;
+            if (drift_quantity(input.channels[k].quantity) == q.id && j < row.size() && row[j]) {
+                *channel = drift::find_channel(input.channels[k].quantity, drift::Subject::cylinder);
+                return &*row[j];
+            }
+        }
+        return nullptr;
+    }
+    for (std::size_t k = 0; k < input.engine_channels.size() && k < check.engine_bands.size(); ++k)
+        if (input.engine_channels[k].quantity == q.name && check.engine_bands[k]) {
+            *channel = drift::find_channel(q.name, drift::Subject::engine);
+            return &*check.engine_bands[k];
+        }
+    return nullptr;
+}
+
+std::string range_text(const Range& range, const Quantity& q)
+{
+    const std::string symbol = " " + std::string(unit(q.unit).symbol);
+    if (range.low && range.high)
+        return two_digits(*range.low) + " to " + two_digits(*range.high) + symbol;
+    return range.low ? "above " + two_digits(*range.low) + symbol : "below " + two_digits(*range.high) + symbol;
+}
+
+bool outside(const Range& range, double value)
+{
+    return (range.low && value < *range.low) || (range.high && value > *range.high);
+}
+
+void judge_ranges(ValueOpinion& opinion, const Quantity& q, double own)
+{
+    if (outside(q.hard, own)) {
+        opinion.verdict = ValueOpinion::Verdict::impossible;
+        opinion.sentence = q.title + " cannot be outside " + range_text(q.hard, q) +
+                           ". It is kept as typed, and used for nothing until you change or confirm it.";
+    } else if (outside(q.soft, own)) {
+        opinion.verdict = ValueOpinion::Verdict::unlikely;
+        opinion.sentence = q.title + " is seldom outside " + range_text(q.soft, q) + ". Please read it again or confirm it.";
+    } else {
+        opinion.verdict = ValueOpinion::Verdict::usual;
+    }
+}
+
+/// The last value at the same place, in the quantity's own unit.
+std::optional<double> previous_value(const std::vector<Reading>& readings, const Engine& engine, const Value& at)
+{
+    for (auto reading = readings.rbegin() + 1; reading != readings.rend(); ++reading) {
+        const Value* value = reading->find(at.quantity, at.place);
+        if (!value)
+            continue;
+        const auto own = own_value(*value, find_conditions(engine, *reading));
+        return own ? std::optional<double>(own->value) : std::nullopt;
+    }
+    return std::nullopt;
+}
+
+} // namespace
+
+DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
+{
+    DraftOpinion opinion;
+    const auto record = with_draft(*history.record, draft);
+    const Engine& engine = record->engine;
+    const Baseline baseline(engine);
+    std::vector<PreparedReading> prepared;
+    for (const Reading& reading : record->readings)
+        prepared.push_back(prepare_reading(engine, baseline, reading));
+    const std::vector<char> unsteady(prepared.size(), 0);
+    const drift::Input input = make_drift_input(*record, baseline, prepared, unsteady);
+    const drift::ReadingCheck check = drift::check_last_reading(input);
+    const Conditions& conditions = prepared.back().conditions;
+    const Reading& last = record->readings.back();
+    opinion.doubts = translate_doubts(engine, last, check.doubts);
+
+    for (const Value& value : draft.values) {
+        ValueOpinion one;
+        const Quantity& q = quantity(value.quantity);
+        if (q.type != ValueType::number) {
+            opinion.values.push_back(std::move(one));
+            continue;
+        }
+        one.previous = previous_value(record->readings, engine, value);
+        const auto own = own_value(value, conditions);
+        if (own && value.phase == Phase::reading)
+            judge_ranges(one, q, own->value);
+        const drift::CatalogueChannel* channel = nullptr;
+        if (const drift::UsualBand* band = find_band(input, check, q, value.place, &channel); band && channel) {
+            const double at = own ? own->value : one.previous.value_or(0.0);
+            const auto form = deviation_form(engine, baseline, q, at, conditions,
+                                             channel->form == drift::DeviationForm::percent, std::nullopt);
+            if (form && form->scale != 0.0) {
+                one.expected = form->own(band->centre);
+                one.usual_low = std::min(form->own(band->low), form->own(band->high));
+                one.usual_high = std::max(form->own(band->low), form->own(band->high));
+            }
+        }
+        for (const Doubt& doubt : opinion.doubts) {
+            const bool here = doubt.quantity == std::optional<QuantityId>(q.id) && doubt.place == std::optional<Place>(value.place);
+            if (!here || value.confirmed || value.phase != Phase::reading)
+                continue;
+            one.verdict = one.verdict == ValueOpinion::Verdict::impossible ? one.verdict : ValueOpinion::Verdict::doubtful;
+            one.suggestion = doubt.suggestion;
+            one.sentence = doubt.sentence;
+        }
+        opinion.values.push_back(std::move(one));
+    }
+    const SteadinessVerdict steadiness = judge_steadiness(draft, !engine.two_stroke());
+    opinion.steadiness = steadiness.verdict;
+    opinion.steadiness_sentence = steadiness.sentence;
+    return opinion;
+}
+
+} // namespace evenstroke

@@ -1,0 +1,245 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/trend/drift_input.h"
+
+#include "core/trend/drift_catalogue.h"
+#include "core/trend/robust.h"
+#include "core/trend/work_marks.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace evenstroke {
+namespace {
+
+constexpr double days_in_month = 30.4375;
+
+bool is_percent(const drift::CatalogueChannel& channel) { return channel.form == drift::DeviationForm::percent; }
+
+drift::Cell make_cell(const Value& typed, const JudgedValue& value, const OwnValue& own, const DeviationForm& form)
+{
+    drift::Cell cell;
+    cell.present = std::isfinite(value.raw);
+    cell.deviation = form.of(value.raw);
+    cell.scale = form.scale * own.scale;
+    cell.typed_number = *typed.number;
+    cell.typed_text = typed.typed;
+    cell.confirmed = typed.confirmed;
+    cell.held_out = own.outside_hard && !typed.confirmed;
+    return cell;
+}
+
+/// Median over the cylinders of the corrected values of one quantity at one reading.
+std::optional<double> corrected_median(const Engine& engine, const PreparedReading& prepared, QuantityId id)
+{
+    std::vector<double> row;
+    for (const JudgedValue& value : prepared.values) {
+        if (value.quantity != id || value.place.kind != Place::Kind::cylinder)
+            continue;
+        const Correction c = find_correction(engine, quantity(id), value.raw, prepared.conditions);
+        row.push_back(c.scale * value.raw + c.shift);
+    }
+    return drift::median(std::move(row));
+}
+
+class InputMaker
+{
+public:
+    InputMaker(const EngineRecord& record, const Baseline& baseline, const std::vector<PreparedReading>& prepared)
+        : record_(record), baseline_(baseline), prepared_(prepared)
+    {
+        cylinders_ = static_cast<std::size_t>(record.engine.cylinders);
+    }
+
+    drift::Channel cylinder_channel(const drift::CatalogueChannel& from, QuantityId id) const
+    {
+        drift::Channel channel;
+        channel.quantity = from.quantity;
+        channel.noise = from.noise;
+        channel.offset_spread = from.offset_spread;
+        channel.cells.resize(prepared_.size() * cylinders_);
+        channel.expected_typed.resize(prepared_.size());
+        for (std::size_t i = 0; i < prepared_.size(); ++i) {
+            const auto row_median = is_percent(from) && !baseline_.has(from.quantity)
+                                        ? corrected_median(record_.engine, prepared_[i], id)
+                                        : std::nullopt;
+            for (const JudgedValue& value : prepared_[i].values)
+                if (value.quantity == id && value.place.kind == Place::Kind::cylinder)
+                    put(channel, i, value, is_percent(from), row_median);
+        }
+        return channel;
+    }
+
+    drift::EngineChannel engine_channel(const drift::CatalogueChannel& from) const
+    {
+        drift::EngineChannel channel;
+        channel.quantity = from.quantity;
+        channel.typed_quantity = from.typed_quantity;
+        channel.noise = from.noise;
+        channel.cells.resize(prepared_.size());
+        for (std::size_t i = 0; i < prepared_.size(); ++i)
+            channel.cells[i] = engine_cell(from, i);
+        return channel;
+    }
+
+private:
+    void put(drift::Channel& channel, std::size_t reading, const JudgedValue& value, bool percent,
+             std::optional<double> row_median) const
+    {
+        const PreparedReading& prepared = prepared_[reading];
+        const Value& typed = record_.readings[reading].values[value.value_index];
+        const auto own = own_value(typed, prepared.conditions);
+        const auto form = deviation_form(record_.engine, baseline_, quantity(value.quantity), value.raw,
+                                         prepared.conditions, percent, row_median);
+        if (!own || !form)
+            return;
+        const std::size_t cylinder = static_cast<std::size_t>(value.place.number) - 1;
+        channel.cells[reading * cylinders_ + cylinder] = make_cell(typed, value, *own, *form);
+        if (value.expected && own->scale != 0.0) // own = scale * typed + shift
+            channel.expected_typed[reading] = *typed.number + (*value.expected - own->value) / own->scale;
+    }
+
+    /// The one value of the engine, or the mean over turbochargers or coolers.
+    drift::Cell engine_cell(const drift::CatalogueChannel& from, std::size_t reading) const
+    {
+        if (from.quantity == "specific_fuel_consumption")
+            return consumption_cell(reading);
+        if (from.quantity == "cooler_temperature_difference")
+            return temperature_difference_cell(reading);
+        if (!baseline_.has(from.quantity))
+            return {};
+        return mean_cell(from.quantity, reading, [&](const Quantity& q, double own) {
+            return deviation_form(record_.engine, baseline_, q, own, prepared_[reading].conditions, is_percent(from),
+                                  std::nullopt);
+        });
+    }
+
+    template <typename Form>
+    drift::Cell mean_cell(std::string_view name, std::size_t reading, const Form& form_of) const
+    {
+        drift::Cell mean;
+        int count = 0;
+        for (const JudgedValue& value : prepared_[reading].values) {
+            const Quantity& q = quantity(value.quantity);
+            if (q.name != name || value.place.kind == Place::Kind::cylinder || value.place.kind == Place::Kind::ship)
+                continue;
+            const Value& typed = record_.readings[reading].values[value.value_index];
+            const auto own = own_value(typed, prepared_[reading].conditions);
+            const auto form = form_of(q, value.raw);
+            if (!own || !form)
+                continue;
+            const drift::Cell cell = make_cell(typed, value, *own, *form);
+            if (value.place.kind == Place::Kind::engine)
+                return cell;
+            ++count;
+            mean = count == 1 ? cell : merged(mean, cell, count);
+        }
+        return mean;
+    }
+
+    /// Several parallel values: their mean; there is no one text in which a digit could be exchanged.
+    static drift::Cell merged(drift::Cell mean, const drift::Cell& next, int count)
+    {
+        mean.deviation += (next.deviation - mean.deviation) / count;
+        mean.typed_number += (next.typed_number - mean.typed_number) / count;
+        mean.typed_text.clear();
+        mean.confirmed = mean.confirmed && next.confirmed;
+        mean.held_out = mean.held_out || next.held_out;
+        return mean;
+    }
+
+    drift::Cell temperature_difference_cell(std::size_t reading) const
+    {
+        const auto coolant = prepared_[reading].conditions.cooler_coolant;
+        if (!coolant)
+            return {};
+        return mean_cell("scavenge_temperature", reading, [&](const Quantity&, double) {
+            return std::optional<DeviationForm>({1.0, -*coolant});
+        });
+    }
+
+    drift::Cell consumption_cell(std::size_t reading) const
+    {
+        const Conditions& conditions = prepared_[reading].conditions;
+        const auto now = specific_consumption(record_.engine, record_.readings[reading], conditions);
+        const BaselineCurve* curve = baseline_.curve(conditions.mode, "specific_fuel_consumption");
+        if (!now || !curve || !conditions.load_percent)
+            return {};
+        const auto expected = curve->at(*conditions.load_percent);
+        if (!expected)
+            return {};
+        return mean_cell("fuel_consumption", reading, [&](const Quantity&, double) {
+            return std::optional<DeviationForm>({now->per_fuel_flow, -*expected});
+        });
+    }
+
+    const EngineRecord& record_;
+    const Baseline& baseline_;
+    const std::vector<PreparedReading>& prepared_;
+    std::size_t cylinders_ = 0;
+};
+
+/// Whether any reading has a value of the quantity at a cylinder.
+bool ever_read(const std::vector<PreparedReading>& prepared, QuantityId id)
+{
+    return std::any_of(prepared.begin(), prepared.end(), [&](const PreparedReading& p) {
+        return std::any_of(p.values.begin(), p.values.end(), [&](const JudgedValue& v) { return v.quantity == id; });
+    });
+}
+
+bool any_present(const drift::EngineChannel& channel)
+{
+    return std::any_of(channel.cells.begin(), channel.cells.end(), [](const drift::Cell& c) { return c.present; });
+}
+
+} // namespace
+
+double months_of(TimePoint time)
+{
+    return static_cast<double>(time.time_since_epoch().count()) / 86400.0 / days_in_month;
+}
+
+std::optional<DeviationForm> deviation_form(const Engine& engine, const Baseline& baseline, const Quantity& q,
+                                            double own, const Conditions& conditions, bool percent,
+                                            std::optional<double> row_median)
+{
+    const Correction c = find_correction(engine, q, own, conditions);
+    std::optional<double> expected;
+    if (const BaselineCurve* curve = baseline.curve(conditions.mode, q.name); curve && conditions.load_percent)
+        expected = curve->at(*conditions.load_percent);
+    if (!expected && baseline.has(q.name))
+        return std::nullopt;
+    const std::optional<double> whole = expected ? expected : row_median;
+    if (!percent)
+        return DeviationForm{c.scale, c.shift - expected.value_or(0.0)};
+    if (!whole || !(std::abs(*whole) > 0.0))
+        return std::nullopt;
+    return DeviationForm{100.0 * c.scale / *whole, 100.0 * (c.shift / *whole - 1.0)};
+}
+
+drift::Input make_drift_input(const EngineRecord& record, const Baseline& baseline,
+                              const std::vector<PreparedReading>& prepared, const std::vector<char>& unsteady)
+{
+    drift::Input input;
+    input.cylinders = static_cast<std::size_t>(record.engine.cylinders);
+    for (std::size_t i = 0; i < prepared.size(); ++i) {
+        input.months.push_back(months_of(record.readings[i].taken_at.utc));
+        input.load_percent.push_back(prepared[i].conditions.load_percent);
+        input.excluded.push_back(unsteady[i] || prepared[i].outside_baseline ? 1 : 0);
+    }
+    const InputMaker maker(record, baseline, prepared);
+    for (const drift::CatalogueChannel& channel : drift::channel_catalogue()) {
+        if (channel.subject == drift::Subject::cylinder) {
+            const auto id = find_quantity(channel.quantity, Place::Kind::cylinder);
+            if (id && ever_read(prepared, *id))
+                input.channels.push_back(maker.cylinder_channel(channel, *id));
+        } else if (channel.subject == drift::Subject::engine) {
+            drift::EngineChannel made = maker.engine_channel(channel);
+            if (any_present(made))
+                input.engine_channels.push_back(std::move(made));
+        }
+    }
+    mark_recorded_work(record, input);
+    return input;
+}
+
+} // namespace evenstroke
