@@ -20,9 +20,11 @@ struct Surroundings
 double correction_factor(const Coefficients& coefficients, const Surroundings& surroundings);
 
 /// Gauge pressures in bar; the factor acts on the absolute pressure.
-double pressure_as_read(double at_reference, const Coefficients& coefficients, const Surroundings& surroundings);
+double pressure_as_read(double at_reference, const Coefficients& coefficients,
+                        const Surroundings& surroundings);
 /// °C; the factor acts on the absolute temperature.
-double temperature_as_read(double at_reference, const Coefficients& coefficients, const Surroundings& surroundings);
+double temperature_as_read(double at_reference, const Coefficients& coefficients,
+                           const Surroundings& surroundings);
 /// Similarity of turbomachines: speed goes with the root of the absolute inlet temperature.
 double turbocharger_speed_as_read(double at_reference, const Surroundings& surroundings);
 /// Charge air follows the coolant degree by degree.

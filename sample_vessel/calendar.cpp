@@ -28,15 +28,15 @@ std::string ShipTime::text() const
     const auto date = std::chrono::floor<std::chrono::days>(local);
     const auto minute = static_cast<unsigned>(std::chrono::floor<std::chrono::minutes>(local - date).count());
     const auto shift = static_cast<unsigned>(offset_minutes < 0 ? -offset_minutes : offset_minutes);
-    return day_text(date) + "T" + padded(minute / 60, 2) + ":" + padded(minute % 60, 2)
-           + (offset_minutes < 0 ? "-" : "+") + padded(shift / 60, 2) + ":" + padded(shift % 60, 2);
+    return day_text(date) + "T" + padded(minute / 60, 2) + ":" + padded(minute % 60, 2) +
+           (offset_minutes < 0 ? "-" : "+") + padded(shift / 60, 2) + ":" + padded(shift % 60, 2);
 }
 
 Day first_day(int month)
 {
     const int months = first_month - 1 + month;
-    return Day(std::chrono::year(first_year + months / 12)
-               / std::chrono::month(static_cast<unsigned>(months % 12 + 1)) / 1);
+    return Day(std::chrono::year(first_year + months / 12) /
+               std::chrono::month(static_cast<unsigned>(months % 12 + 1)) / 1);
 }
 
 std::string month_name(int month)
@@ -51,16 +51,17 @@ int month_number(std::string_view name)
 
 Day day(std::string_view text)
 {
-    return Day(std::chrono::year(number_at(text, 0, 4))
-               / std::chrono::month(static_cast<unsigned>(number_at(text, 5, 2)))
-               / std::chrono::day(static_cast<unsigned>(number_at(text, 8, 2))));
+    return Day(std::chrono::year(number_at(text, 0, 4)) /
+               std::chrono::month(static_cast<unsigned>(number_at(text, 5, 2))) /
+               std::chrono::day(static_cast<unsigned>(number_at(text, 8, 2))));
 }
 
 std::string day_text(Day when)
 {
     const std::chrono::year_month_day date(when);
-    return padded(static_cast<unsigned>(static_cast<int>(date.year())), 4) + "-"
-           + padded(static_cast<unsigned>(date.month()), 2) + "-" + padded(static_cast<unsigned>(date.day()), 2);
+    return padded(static_cast<unsigned>(static_cast<int>(date.year())), 4) + "-" +
+           padded(static_cast<unsigned>(date.month()), 2) + "-" +
+           padded(static_cast<unsigned>(date.day()), 2);
 }
 
 double months_between(Day from, std::chrono::sys_seconds to)

@@ -20,11 +20,11 @@ struct ShipTime
 
 inline constexpr int month_count = 48; ///< December 2022 to November 2026
 
-Day first_day(int month);              ///< of the month with this number, counted from December 2022
-std::string month_name(int month);     ///< "2022-12"
+Day first_day(int month);          ///< of the month with this number, counted from December 2022
+std::string month_name(int month); ///< "2022-12"
 /// Number of the month with this name; the scenario's own tables only.
 int month_number(std::string_view name);
-Day day(std::string_view text);        ///< "2023-03-14"; the scenario's own tables only
+Day day(std::string_view text); ///< "2023-03-14"; the scenario's own tables only
 std::string day_text(Day day);
 /// Months of 30.4375 days, the measure of slopes.
 double months_between(Day from, std::chrono::sys_seconds to);

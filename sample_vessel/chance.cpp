@@ -30,8 +30,8 @@ double to_unit_interval(std::uint64_t bits)
     return static_cast<double>(bits >> 11U) * 0x1.0p-53;
 }
 
-constexpr double lasting_share = 0.15;  // of the variance
-constexpr double lasting_factor = 0.6;  // from one month to the next
+constexpr double lasting_share = 0.15; // of the variance
+constexpr double lasting_factor = 0.6; // from one month to the next
 
 } // namespace
 
@@ -66,10 +66,12 @@ double Chance::scatter(const ChanceKey& key) const
     double lasting = 0.0;
     for (int month = 0; month <= key.month; ++month) {
         const double fresh = standard_normal({key.what, key.engine, key.place, month}, 1);
-        lasting = month == 0 ? fresh
-                             : lasting_factor * lasting + std::sqrt(1.0 - lasting_factor * lasting_factor) * fresh;
+        lasting = month == 0
+                      ? fresh
+                      : lasting_factor * lasting + std::sqrt(1.0 - lasting_factor * lasting_factor) * fresh;
     }
-    return scale_ * (std::sqrt(1.0 - lasting_share) * standard_normal(key, 0) + std::sqrt(lasting_share) * lasting);
+    return scale_ *
+           (std::sqrt(1.0 - lasting_share) * standard_normal(key, 0) + std::sqrt(lasting_share) * lasting);
 }
 
 } // namespace evenstroke::sample

@@ -41,7 +41,8 @@ std::vector<Work> with_fuel_changes(const Scenario& scenario, int engine)
     for (const FuelBatch& batch : scenario.fuel)
         if (day(batch.from) >= first_day(0))
             events.push_back({engine, batch.from, 0, "fuel_changed", batch.kind, "third engineer", "", {}});
-    std::stable_sort(events.begin(), events.end(), [](const Work& a, const Work& b) { return a.date < b.date; });
+    std::stable_sort(events.begin(), events.end(),
+                     [](const Work& a, const Work& b) { return a.date < b.date; });
     return events;
 }
 
@@ -70,8 +71,9 @@ std::string events_csv(const Scenario& scenario, int engine)
 {
     std::string csv = "date,cylinder,kind,note,running_hours,done_by,part\n";
     for (const Work& work : with_fuel_changes(scenario, engine))
-        add_row(csv, {work.date, work.cylinder == 0 ? "" : std::to_string(work.cylinder), work.kind, work.note,
-                      decimal_text(running_hours(engine, day(work.date)), 0), work.done_by, work.part});
+        add_row(csv,
+                {work.date, work.cylinder == 0 ? "" : std::to_string(work.cylinder), work.kind, work.note,
+                 decimal_text(running_hours(engine, day(work.date)), 0), work.done_by, work.part});
     return csv;
 }
 

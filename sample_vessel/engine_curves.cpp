@@ -9,7 +9,8 @@ namespace evenstroke::sample {
 namespace {
 
 constexpr double compression_exponent = 0.286; // of air, (kappa - 1) / kappa, trade practice
-// Heat capacity of air over that of the gas, with 2 % of fuel in it; a little more for heat lost by the casing.
+// Heat capacity of air over that of the gas, with 2 % of fuel in it; a little more for heat lost by the
+// casing.
 constexpr double air_to_gas = 1.005 / 1.09 / 1.02 * 1.06;
 
 double square(double value)
@@ -26,8 +27,8 @@ double air_temperature_rise(double pressure_ratio, double efficiency)
 /// Mean effective pressure of the shaft, bar.
 double effective_pressure(const EngineDesign& engine, double load)
 {
-    const double at_full = engine.rated_power_kw * 1e-2
-                           / (engine.cylinders * engine.swept_volume_m3() * engine.rated_cycles_per_second());
+    const double at_full = engine.rated_power_kw * 1e-2 /
+                           (engine.cylinders * engine.swept_volume_m3() * engine.rated_cycles_per_second());
     return at_full * (engine.two_stroke ? std::cbrt(square(load)) : load);
 }
 
@@ -36,16 +37,17 @@ void add_air_side(DesignPoint& point, const CurveShape& shape, double load)
     const double scavenge = shape.scavenge_at_full * std::pow(load, shape.scavenge_power);
     const double ratio = scavenge + 1.0, ratio_at_full = shape.scavenge_at_full + 1.0;
     const double rise = air_temperature_rise(ratio, shape.compressor_efficiency);
-    const double before = point.values["exhaust_temperature"] + shape.turbine_over_exhaust
-                          + shape.turbine_over_exhaust_slope * load;
+    const double before = point.values["exhaust_temperature"] + shape.turbine_over_exhaust +
+                          shape.turbine_over_exhaust_slope * load;
     point.values["scavenge_pressure"] = rounded(scavenge, 3);
-    point.values["turbocharger_speed"] = rounded(
-        shape.turbocharger_speed_at_full
-            * std::sqrt(rise / air_temperature_rise(ratio_at_full, shape.compressor_efficiency)),
-        0);
+    point.values["turbocharger_speed"] =
+        rounded(shape.turbocharger_speed_at_full *
+                    std::sqrt(rise / air_temperature_rise(ratio_at_full, shape.compressor_efficiency)),
+                0);
     point.values["exhaust_before_turbine"] = rounded(before, 1);
     point.values["exhaust_after_turbine"] = rounded(before - air_to_gas * rise, 1);
-    // The engine takes air like a nozzle: flow goes with the pressure, and the drop with flow squared over density.
+    // The engine takes air like a nozzle: flow goes with the pressure, and the drop with flow squared over
+    // density.
     point.values["cooler_pressure_drop"] = rounded(shape.cooler_drop_at_full * ratio / ratio_at_full, 2);
     const double approach = shape.approach_at_full * (0.4 + 0.6 * load);
     point.values["cooler_temperature_difference"] = rounded(approach, 1);
@@ -65,13 +67,14 @@ DesignPoint point_at(const EngineDesign& engine, const CurveShape& shape, double
     point.values["compression_pressure"] = rounded(compression, 1);
     point.values["maximum_pressure"] = rounded(compression + rise, 1);
     point.values["mean_indicated_pressure"] = rounded(effective_pressure(engine, load) + shape.friction, 2);
-    point.values["exhaust_temperature"] = rounded(shape.exhaust_least + shape.exhaust_rise * square(warmth), 1);
+    point.values["exhaust_temperature"] =
+        rounded(shape.exhaust_least + shape.exhaust_rise * square(warmth), 1);
     point.values["fuel_index"] =
-        rounded(shape.fuel_index_at_full
-                    * (shape.fuel_index_idle_share + (1.0 - shape.fuel_index_idle_share) * fuel_share),
+        rounded(shape.fuel_index_at_full *
+                    (shape.fuel_index_idle_share + (1.0 - shape.fuel_index_idle_share) * fuel_share),
                 1);
-    point.values["specific_fuel_consumption"] =
-        rounded(shape.consumption_least + shape.consumption_curvature * square(load - shape.consumption_load), 1);
+    point.values["specific_fuel_consumption"] = rounded(
+        shape.consumption_least + shape.consumption_curvature * square(load - shape.consumption_load), 1);
     add_air_side(point, shape, load);
     return point;
 }

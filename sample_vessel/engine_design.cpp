@@ -10,30 +10,48 @@ namespace evenstroke::sample {
 namespace {
 
 constexpr CurveShape two_stroke_curves{
-    .scavenge_at_full = 2.75, .scavenge_power = 1.5,
+    .scavenge_at_full = 2.75,
+    .scavenge_power = 1.5,
     .compression_ratio_of_pressures = 34.5,
-    .rise_top = 42.0, .rise_curvature = 82.0, .rise_load = 0.72,
-    .exhaust_least = 268.0, .exhaust_rise = 77.0, .exhaust_load = 0.35,
-    .turbine_over_exhaust = 58.0, .turbine_over_exhaust_slope = 8.0,
+    .rise_top = 42.0,
+    .rise_curvature = 82.0,
+    .rise_load = 0.72,
+    .exhaust_least = 268.0,
+    .exhaust_rise = 77.0,
+    .exhaust_load = 0.35,
+    .turbine_over_exhaust = 58.0,
+    .turbine_over_exhaust_slope = 8.0,
     .compressor_efficiency = 0.84,
     .turbocharger_speed_at_full = 13600.0,
-    .consumption_least = 168.5, .consumption_curvature = 36.0, .consumption_load = 0.8,
-    .fuel_index_idle_share = 0.12, .fuel_index_at_full = 76.0,
+    .consumption_least = 168.5,
+    .consumption_curvature = 36.0,
+    .consumption_load = 0.8,
+    .fuel_index_idle_share = 0.12,
+    .fuel_index_at_full = 76.0,
     .friction = 1.0,
     .cooler_drop_at_full = 18.0,
     .approach_at_full = 14.0,
 };
 
 constexpr CurveShape four_stroke_curves{
-    .scavenge_at_full = 2.95, .scavenge_power = 1.35,
+    .scavenge_at_full = 2.95,
+    .scavenge_power = 1.35,
     .compression_ratio_of_pressures = 35.0,
-    .rise_top = 44.0, .rise_curvature = 60.0, .rise_load = 0.7,
-    .exhaust_least = 345.0, .exhaust_rise = 35.0, .exhaust_load = 0.4,
-    .turbine_over_exhaust = 90.0, .turbine_over_exhaust_slope = 8.0,
+    .rise_top = 44.0,
+    .rise_curvature = 60.0,
+    .rise_load = 0.7,
+    .exhaust_least = 345.0,
+    .exhaust_rise = 35.0,
+    .exhaust_load = 0.4,
+    .turbine_over_exhaust = 90.0,
+    .turbine_over_exhaust_slope = 8.0,
     .compressor_efficiency = 0.80,
     .turbocharger_speed_at_full = 34500.0,
-    .consumption_least = 196.0, .consumption_curvature = 45.0, .consumption_load = 0.85,
-    .fuel_index_idle_share = 0.25, .fuel_index_at_full = 78.0,
+    .consumption_least = 196.0,
+    .consumption_curvature = 45.0,
+    .consumption_load = 0.85,
+    .fuel_index_idle_share = 0.25,
+    .fuel_index_at_full = 78.0,
     .friction = 2.3,
     .cooler_drop_at_full = 22.0,
     .approach_at_full = 15.0,
@@ -75,12 +93,9 @@ EngineDesign auxiliary(int number)
         {"exhaust_temperature", {-0.0021, -0.0006}},
     };
     engine.limits = {
-        {"maximum_pressure", {}, 195.0},
-        {"exhaust_temperature", {}, 460.0},
-        {"exhaust_before_turbine", {}, 560.0},
-        {"turbocharger_speed", {}, 38000.0},
-        {"jacket_outlet_temperature", {}, 95.0},
-        {"lube_oil_inlet_pressure", 3.0, {}},
+        {"maximum_pressure", {}, 195.0},         {"exhaust_temperature", {}, 460.0},
+        {"exhaust_before_turbine", {}, 560.0},   {"turbocharger_speed", {}, 38000.0},
+        {"jacket_outlet_temperature", {}, 95.0}, {"lube_oil_inlet_pressure", 3.0, {}},
     };
     return engine;
 }
@@ -105,7 +120,7 @@ EngineDesign main_engine()
     engine.rated_power_kw = 9600.0;
     engine.rated_speed_rpm = 104.0;
     engine.mechanical_efficiency = 0.94;
-    engine.compression_ratio = 18.4;
+    engine.compression_ratio = 18.7;
     engine.cylinder_closes_deg = -92.0;
     engine.cylinder_opens_deg = 112.0;
     engine.firing_order = {1, 5, 3, 4, 2, 6};
@@ -117,14 +132,10 @@ EngineDesign main_engine()
         {"exhaust_temperature", {-0.0024, -0.0004}},
     };
     engine.limits = {
-        {"maximum_pressure", {}, 178.0},
-        {"exhaust_temperature", {}, 430.0},
-        {"exhaust_before_turbine", {}, 500.0},
-        {"turbocharger_speed", {}, 14600.0},
-        {"jacket_outlet_temperature", {}, 92.0},
-        {"piston_coolant_outlet_temperature", {}, 72.0},
-        {"scavenge_box_temperature", {}, 80.0},
-        {"lube_oil_inlet_pressure", 1.8, {}},
+        {"maximum_pressure", {}, 178.0},         {"exhaust_temperature", {}, 430.0},
+        {"exhaust_before_turbine", {}, 500.0},   {"turbocharger_speed", {}, 14600.0},
+        {"jacket_outlet_temperature", {}, 92.0}, {"piston_coolant_outlet_temperature", {}, 72.0},
+        {"scavenge_box_temperature", {}, 80.0},  {"lube_oil_inlet_pressure", 1.8, {}},
     };
     engine.instruments = instruments("ME", "2022");
     engine.baseline = baseline_points(engine, two_stroke_curves);

@@ -37,7 +37,7 @@ struct DesignInstrument
 
 struct EngineDesign
 {
-    int number = 0;           ///< 0 main engine, 1 and 2 the auxiliary engines
+    int number = 0; ///< 0 main engine, 1 and 2 the auxiliary engines
     std::string folder, name;
     bool two_stroke = true;
     int cylinders = 0;
@@ -52,7 +52,7 @@ struct EngineDesign
     std::vector<DesignInstrument> instruments;
     std::vector<DesignPoint> baseline; ///< 25 to 110 % in steps of 5
 
-    double swept_volume_m3() const;    ///< of one cylinder
+    double swept_volume_m3() const; ///< of one cylinder
     /// Work strokes a second and cylinder at the rated speed.
     double rated_cycles_per_second() const { return rated_speed_rpm / 60.0 / (two_stroke ? 1.0 : 2.0); }
 };

@@ -10,9 +10,9 @@
 namespace evenstroke::sample {
 namespace {
 
-constexpr double generator_efficiency = 0.95;   // common practice, no source
+constexpr double generator_efficiency = 0.95;         // common practice, no source
 constexpr double mm_water_per_mbar = 10.0 / 0.980665; // conventional millimetre of water, 9.80665 Pa
-constexpr double bar_per_kgf_cm2 = 0.980665;    // exact
+constexpr double bar_per_kgf_cm2 = 0.980665;          // exact
 
 /// A value without a curve: a usual level and its scatter.
 double about(const SheetInputs& in, const char* what, double level, double spread)
@@ -51,10 +51,11 @@ double hours_since_overhaul(const EngineMoment& moment, int cylinder)
     const Day today = std::chrono::floor<std::chrono::days>(moment.time.utc);
     const int engine = moment.engine->number;
     // Before the first reading: opened one after the other in the years before (invented).
-    double since = running_hours(engine, today) - running_hours(engine, first_day(0))
-                   + (engine == 0 ? 1900.0 : 1300.0) * (1.0 + 0.7 * cylinder);
+    double since = running_hours(engine, today) - running_hours(engine, first_day(0)) +
+                   (engine == 0 ? 1900.0 : 1300.0) * (1.0 + 0.7 * cylinder);
     for (const Work& work : moment.scenario->work) {
-        const bool opened = work.engine == engine && work.kind == "overhaul" && (work.cylinder == cylinder || work.cylinder == 0);
+        const bool opened = work.engine == engine && work.kind == "overhaul" &&
+                            (work.cylinder == cylinder || work.cylinder == 0);
         if (opened && day(work.date) < today)
             since = running_hours(engine, today) - running_hours(engine, day(work.date));
     }
@@ -104,7 +105,9 @@ void write_control(Sheet& sheet, const SheetInputs& in)
     } else {
         sheet.words("power_source", "switchboard");
     }
-    const double settled = 60.0 + 10.0 * std::floor(7.0 * in.moment.chance->even({"settled", engine.number, 0, in.moment.month}));
+    const double settled =
+        60.0 +
+        10.0 * std::floor(7.0 * in.moment.chance->even({"settled", engine.number, 0, in.moment.month}));
     sheet.number("settled_minutes", settled, {"min", 0});
     if (!engine.two_stroke) {
         sheet.number("generator_power", in.typed_power_kw * generator_efficiency, {"kW", 0});
@@ -120,12 +123,21 @@ void write_control(Sheet& sheet, const SheetInputs& in)
 
 void write_cylinders(Sheet& sheet, const SheetInputs& in)
 {
-    struct Column { const char* quantity; Writing writing; bool two_stroke_only; };
+    struct Column
+    {
+        const char* quantity;
+        Writing writing;
+        bool two_stroke_only;
+    };
     constexpr std::array<Column, 8> columns{{
-        {"maximum_pressure", {"bar", 1}, false}, {"compression_pressure", {"bar", 1}, false},
-        {"mean_indicated_pressure", {"bar", 2}, false}, {"exhaust_temperature", {"°C", 0}, false},
-        {"fuel_index", {"%", 1}, false}, {"jacket_outlet_temperature", {"°C", 1}, false},
-        {"piston_coolant_outlet_temperature", {"°C", 1}, true}, {"scavenge_box_temperature", {"°C", 0}, true},
+        {"maximum_pressure", {"bar", 1}, false},
+        {"compression_pressure", {"bar", 1}, false},
+        {"mean_indicated_pressure", {"bar", 2}, false},
+        {"exhaust_temperature", {"°C", 0}, false},
+        {"fuel_index", {"%", 1}, false},
+        {"jacket_outlet_temperature", {"°C", 1}, false},
+        {"piston_coolant_outlet_temperature", {"°C", 1}, true},
+        {"scavenge_box_temperature", {"°C", 0}, true},
     }};
     const EngineDesign& engine = *in.moment.engine;
     for (int cylinder = 1; cylinder <= engine.cylinders; ++cylinder)
@@ -133,7 +145,8 @@ void write_cylinders(Sheet& sheet, const SheetInputs& in)
     for (const Column& column : columns)
         for (int cylinder = 1; cylinder <= engine.cylinders; ++cylinder)
             if (engine.two_stroke || !column.two_stroke_only)
-                sheet.number(column.quantity, cylinder_as_read(in, column.quantity, cylinder), column.writing, cylinder);
+                sheet.number(column.quantity, cylinder_as_read(in, column.quantity, cylinder), column.writing,
+                             cylinder);
 }
 
 void write_air_side(Sheet& sheet, const SheetInputs& in)
@@ -150,11 +163,13 @@ void write_air_side(Sheet& sheet, const SheetInputs& in)
     sheet.number("exhaust_before_turbine", as_read(in, "exhaust_before_turbine"), {"°C", 0});
     sheet.number("exhaust_after_turbine", as_read(in, "exhaust_after_turbine"), {"°C", 0});
     sheet.number("exhaust_receiver_pressure", 0.925 * (scavenge + barometer) - barometer, {"bar", 2});
-    sheet.number("exhaust_back_pressure", about(in, "back pressure", 11.0, 0.6) * flow * mm_water_per_mbar, {"mmH2O", 0});
+    sheet.number("exhaust_back_pressure", about(in, "back pressure", 11.0, 0.6) * flow * mm_water_per_mbar,
+                 {"mmH2O", 0});
     sheet.number("air_filter_pressure_drop", filter * mm_water_per_mbar, {"mmH2O", 0});
     sheet.number("compressor_outlet_temperature",
                  in.around.inlet_air_c + inlet_k * (std::pow(ratio, 0.286) - 1.0) / efficiency, {"°C", 0});
-    sheet.number("turbocharger_oil_outlet_temperature", about(in, "turbocharger oil", 66.0 + 0.15 * load_over_75(in), 1.2), {"°C", 0});
+    sheet.number("turbocharger_oil_outlet_temperature",
+                 about(in, "turbocharger oil", 66.0 + 0.15 * load_over_75(in), 1.2), {"°C", 0});
     const double air = as_read(in, "scavenge_temperature");
     if (two_stroke)
         sheet.number("scavenge_pressure", scavenge, {"bar", 2});
@@ -165,25 +180,31 @@ void write_air_side(Sheet& sheet, const SheetInputs& in)
     sheet.number("cooler_pressure_drop", drop * mm_water_per_mbar, {"mmH2O", 0});
     sheet.number("cooler_coolant_inlet_temperature", in.around.coolant_c, {"°C", 1});
     sheet.number("cooler_coolant_outlet_temperature",
-                 in.around.coolant_c + about(in, "coolant rise", 9.5 + 0.12 * load_over_75(in), 0.5), {"°C", 1});
+                 in.around.coolant_c + about(in, "coolant rise", 9.5 + 0.12 * load_over_75(in), 0.5),
+                 {"°C", 1});
 }
 
 void write_cooling_and_oil(Sheet& sheet, const SheetInputs& in)
 {
     const bool two_stroke = in.moment.engine->two_stroke;
-    sheet.number("jacket_inlet_temperature", about(in, "jacket in", two_stroke ? 72.0 : 75.0, 0.8), {"°C", 1});
+    sheet.number("jacket_inlet_temperature", about(in, "jacket in", two_stroke ? 72.0 : 75.0, 0.8),
+                 {"°C", 1});
     sheet.number("jacket_inlet_pressure", about(in, "jacket pressure", 3.4, 0.06), {"kgf/cm2", 1});
     if (two_stroke) {
         sheet.number("piston_coolant_inlet_temperature", about(in, "piston in", 45.0, 0.7), {"°C", 1});
-        sheet.number("piston_coolant_inlet_pressure", about(in, "piston pressure", 2.9, 0.05), {"kgf/cm2", 1});
+        sheet.number("piston_coolant_inlet_pressure", about(in, "piston pressure", 2.9, 0.05),
+                     {"kgf/cm2", 1});
     }
-    sheet.number("lube_oil_inlet_pressure", about(in, "oil pressure", two_stroke ? 2.8 : 4.6, 0.06), {"kgf/cm2", 1});
+    sheet.number("lube_oil_inlet_pressure", about(in, "oil pressure", two_stroke ? 2.8 : 4.6, 0.06),
+                 {"kgf/cm2", 1});
     const double oil = about(in, "oil in", two_stroke ? 44.5 : 62.0, 0.7);
     sheet.number("lube_oil_inlet_temperature", oil, {"°C", 1});
     sheet.number("lube_oil_outlet_temperature",
-                 oil + about(in, "oil rise", (two_stroke ? 8.0 : 11.0) + 0.05 * load_over_75(in), 0.4), {"°C", 1});
+                 oil + about(in, "oil rise", (two_stroke ? 8.0 : 11.0) + 0.05 * load_over_75(in), 0.4),
+                 {"°C", 1});
     if (two_stroke) {
-        sheet.number("thrust_bearing_temperature", about(in, "thrust", 53.0 + 0.08 * load_over_75(in), 0.8), {"°C", 0});
+        sheet.number("thrust_bearing_temperature", about(in, "thrust", 53.0 + 0.08 * load_over_75(in), 0.8),
+                     {"°C", 0});
         sheet.number("oil_mist_level", about(in, "mist", 4.0, 0.7), {"%", 0});
     } else {
         sheet.number("crankcase_pressure", about(in, "crankcase", 14.0, 1.2), {"mmH2O", 0});
@@ -193,15 +214,17 @@ void write_cooling_and_oil(Sheet& sheet, const SheetInputs& in)
 void write_fuel(Sheet& sheet, const SheetInputs& in)
 {
     const EngineDesign& engine = *in.moment.engine;
-    const double specific = consumption_as_read(engine_value(in.moment, "specific_fuel_consumption"),
-                                                engine.mechanical_efficiency, in.fuel.heating_value_mj_kg, in.around);
+    const double specific =
+        consumption_as_read(engine_value(in.moment, "specific_fuel_consumption"),
+                            engine.mechanical_efficiency, in.fuel.heating_value_mj_kg, in.around);
     sheet.number("fuel_consumption", specific * in.typed_power_kw / 1000.0, {"kg/h", 1});
     sheet.number("fuel_meter_interval", engine.two_stroke ? 60.0 : 45.0, {"min", 0});
     sheet.words("fuel_kind", in.fuel.kind);
     sheet.number("fuel_lower_heating_value", in.fuel.heating_value_mj_kg, {"MJ/kg", 2});
     sheet.number("fuel_density_15", in.fuel.density_15, {"kg/m3", 1});
     sheet.number("fuel_temperature", about(in, "fuel temperature", in.fuel.temperature_c, 1.0), {"°C", 0});
-    sheet.number("fuel_viscosity", about(in, "fuel viscosity", in.fuel.viscosity_at_engine, 0.25), {"cSt", 1});
+    sheet.number("fuel_viscosity", about(in, "fuel viscosity", in.fuel.viscosity_at_engine, 0.25),
+                 {"cSt", 1});
     sheet.number("fuel_sulphur", in.fuel.sulphur_percent, {"%", 2});
     sheet.number("fuel_inlet_pressure", about(in, "fuel pressure", 7.6, 0.12), {"kgf/cm2", 1});
 }

@@ -54,9 +54,9 @@ std::string joined(const std::vector<std::string>& members, const std::string& i
 
 std::string vessel(const Scenario& scenario)
 {
-    return key("vessel") + "{" + key("name") + quoted(scenario.vessel) + ", " + key("imo") + quoted(scenario.imo) + ", "
-           + key("flag") + quoted(scenario.flag) + ", " + key("class") + quoted(scenario.class_society) + ", "
-           + key("class_number") + quoted(scenario.class_number) + "}";
+    return key("vessel") + "{" + key("name") + quoted(scenario.vessel) + ", " + key("imo") +
+           quoted(scenario.imo) + ", " + key("flag") + quoted(scenario.flag) + ", " + key("class") +
+           quoted(scenario.class_society) + ", " + key("class_number") + quoted(scenario.class_number) + "}";
 }
 
 std::string firing_order(const EngineDesign& engine)
@@ -69,17 +69,17 @@ std::string firing_order(const EngineDesign& engine)
 
 std::string reference()
 {
-    return key("reference") + "{" + key("inlet_air_c") + number(reference_inlet_air_c) + ", " + key("cooler_coolant_c")
-           + number(reference_coolant_c) + ", " + key("barometric_mbar") + number(reference_barometer_mbar) + ", "
-           + source_entry() + "}";
+    return key("reference") + "{" + key("inlet_air_c") + number(reference_inlet_air_c) + ", " +
+           key("cooler_coolant_c") + number(reference_coolant_c) + ", " + key("barometric_mbar") +
+           number(reference_barometer_mbar) + ", " + source_entry() + "}";
 }
 
 std::string correction(const EngineDesign& engine)
 {
     std::vector<std::string> members;
     for (const auto& [quantity, pair] : engine.correction)
-        members.push_back(key(quantity) + "{" + key("per_inlet_air") + number(pair.per_inlet_air) + ", "
-                          + key("per_coolant") + number(pair.per_coolant) + ", " + source_entry() + "}");
+        members.push_back(key(quantity) + "{" + key("per_inlet_air") + number(pair.per_inlet_air) + ", " +
+                          key("per_coolant") + number(pair.per_coolant) + ", " + source_entry() + "}");
     return key("correction") + "{\n" + joined(members, "    ") + "  }";
 }
 
@@ -98,9 +98,9 @@ std::string instruments(const EngineDesign& engine)
 {
     std::vector<std::string> members;
     for (const DesignInstrument& one : engine.instruments)
-        members.push_back("{" + key("quantity") + quoted(one.quantity) + ", " + key("serial") + quoted(one.serial) + ", "
-                          + key("calibrated") + quoted(one.calibrated) + ", " + key("uncertainty") + number(one.uncertainty)
-                          + ", " + source_entry() + "}");
+        members.push_back("{" + key("quantity") + quoted(one.quantity) + ", " + key("serial") +
+                          quoted(one.serial) + ", " + key("calibrated") + quoted(one.calibrated) + ", " +
+                          key("uncertainty") + number(one.uncertainty) + ", " + source_entry() + "}");
     return key("instruments") + "[\n" + joined(members, "    ") + "  ]";
 }
 

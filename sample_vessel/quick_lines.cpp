@@ -29,7 +29,8 @@ double distance(const SheetInputs& in, const Wander& wander, int side)
 {
     const EngineMoment& moment = in.moment;
     const int place = side > 0 ? 2 : 1;
-    const double normal = moment.chance->normal({wander.quantity, moment.engine->number, 100 + place, moment.month});
+    const double normal =
+        moment.chance->normal({wander.quantity, moment.engine->number, 100 + place, moment.month});
     if (moment.unsteady)
         return side * wander.unsteady * (1.0 + 0.1 * normal);
     return (in.rough ? 3.0 : 1.0) * wander.steady * normal;
@@ -44,9 +45,11 @@ void write_quick_lines(Sheet& sheet, const SheetInputs& in)
     for (const int side : {-1, 1}) {
         const char* phase = side < 0 ? "before" : "after";
         for (const Wander& wander : wanders) {
-            const bool constant_speed = !in.moment.engine->two_stroke && std::string(wander.quantity) == "speed";
+            const bool constant_speed =
+                !in.moment.engine->two_stroke && std::string(wander.quantity) == "speed";
             const double middle = as_read(in, wander.quantity);
-            const double moved = distance(in, wander, side) * (wander.share ? middle : 1.0) * (constant_speed ? 0.3 : 1.0);
+            const double moved =
+                distance(in, wander, side) * (wander.share ? middle : 1.0) * (constant_speed ? 0.3 : 1.0);
             sheet.quick(phase, wander.quantity, middle + moved, wander.writing);
         }
     }

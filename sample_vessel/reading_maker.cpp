@@ -29,16 +29,22 @@ const FuelBatch& batch_in_use(const Scenario& scenario, Day when)
 /// The torsion meter shows whole kilowatts, and so does the switchboard behind the generator.
 double power_as_shown(const EngineMoment& moment)
 {
-    const double meter = 1.0 + 0.004 * moment.chance->normal({"power meter", moment.engine->number, 0, moment.month});
+    const double meter =
+        1.0 + 0.004 * moment.chance->normal({"power meter", moment.engine->number, 0, moment.month});
     return rounded(moment.engine->rated_power_kw * moment.load_percent / 100.0 * meter, 0);
 }
 
-SheetInputs inputs_of(const Scenario& scenario, const Chance& weather, const Chance& chance, int engine, int month)
+SheetInputs inputs_of(const Scenario& scenario, const Chance& weather, const Chance& chance, int engine,
+                      int month)
 {
     const ShipDay ship = ship_day(scenario, weather, month, engine == 2);
     SheetInputs in;
-    in.moment = {&scenario, &scenario.engines[static_cast<std::size_t>(engine)], &chance, month,
-                 reading_time(ship, weather, engine), load_of(weather, engine, month),
+    in.moment = {&scenario,
+                 &scenario.engines[static_cast<std::size_t>(engine)],
+                 &chance,
+                 month,
+                 reading_time(ship, weather, engine),
+                 load_of(weather, engine, month),
                  listed(scenario.unsteady, engine, month_name(month))};
     in.around = surroundings_of(ship, weather, engine);
     in.typed_power_kw = power_as_shown(in.moment);
@@ -74,16 +80,21 @@ void add_human_touch(Sheet& sheet, const Scenario& scenario, int engine)
 }
 
 /// Speed from the turns of the propeller and its slip; the log reads a little differently from the fix.
-void write_speeds(Sheet& sheet, const Scenario& scenario, const Chance& weather, const Chance& chance, const ShipDay& ship)
+void write_speeds(Sheet& sheet, const Scenario& scenario, const Chance& weather, const Chance& chance,
+                  const ShipDay& ship)
 {
     const EngineDesign& engine = scenario.engines.front();
-    const EngineMoment moment{&scenario, &engine, &chance, ship.month, ship.time, load_of(weather, 0, ship.month), false};
+    const EngineMoment moment{
+        &scenario, &engine, &chance, ship.month, ship.time, load_of(weather, 0, ship.month), false};
     const double turns = expected(engine, "speed", moment.load_percent) * (1.0 + light_running(moment));
     const double slip = 0.055 - 1.6 * (light_running(moment) - 0.015) + 0.0015 * ship.wind_kn;
-    const double through_water = engine.propeller_pitch_m.value_or(0.0) * turns * 60.0 / 1852.0 * (1.0 - slip);
+    const double through_water =
+        engine.propeller_pitch_m.value_or(0.0) * turns * 60.0 / 1852.0 * (1.0 - slip);
     const double current = 0.6 * weather.normal({"current", 0, ship.second ? 1 : 0, ship.month});
     sheet.number("speed_over_ground", through_water + current, {"kn", 1});
-    sheet.number("speed_through_water", through_water + 0.1 * weather.normal({"log", 0, ship.second ? 1 : 0, ship.month}), {"kn", 1});
+    sheet.number("speed_through_water",
+                 through_water + 0.1 * weather.normal({"log", 0, ship.second ? 1 : 0, ship.month}),
+                 {"kn", 1});
 }
 
 Sheet ship_sheet(const Scenario& scenario, const Chance& weather, const Chance& chance, const ShipDay& ship)
@@ -109,7 +120,8 @@ Sheet ship_sheet(const Scenario& scenario, const Chance& weather, const Chance& 
 
 void sort_by_time(std::vector<Sheet>& sheets)
 {
-    std::sort(sheets.begin(), sheets.end(), [](const Sheet& a, const Sheet& b) { return a.time.utc < b.time.utc; });
+    std::sort(sheets.begin(), sheets.end(),
+              [](const Sheet& a, const Sheet& b) { return a.time.utc < b.time.utc; });
 }
 
 } // namespace
@@ -118,7 +130,8 @@ double running_hours(int engine, Day when)
 {
     constexpr double counter[] = {41230.0, 18410.0, 17120.0}, hours_a_day[] = {14.9, 10.2, 9.6};
     const auto index = static_cast<std::size_t>(engine);
-    return rounded(counter[index] + hours_a_day[index] * static_cast<double>((when - first_day(0)).count()), 0);
+    return rounded(counter[index] + hours_a_day[index] * static_cast<double>((when - first_day(0)).count()),
+                   0);
 }
 
 std::vector<Sheet> engine_sheets(const Scenario& scenario, std::uint64_t seed, int engine)
@@ -142,7 +155,8 @@ std::vector<Sheet> ship_sheets(const Scenario& scenario, std::uint64_t seed)
     for (int month = 0; month < month_count; ++month) {
         const std::string name = month_name(month);
         if (!listed(scenario.missed, 0, name) || !listed(scenario.missed, 1, name))
-            sheets.push_back(ship_sheet(scenario, weather, chance, ship_day(scenario, weather, month, false)));
+            sheets.push_back(
+                ship_sheet(scenario, weather, chance, ship_day(scenario, weather, month, false)));
         if (!listed(scenario.missed, 2, name))
             sheets.push_back(ship_sheet(scenario, weather, chance, ship_day(scenario, weather, month, true)));
     }

@@ -26,17 +26,17 @@ struct SampleFault
 {
     std::string vessel, engine;
     int cylinder = 0;
-    std::string cause;         ///< "ring_blow_by", "nozzle_wear"
-    std::string onset;         ///< date, "2025-12-20": the last sound day
+    std::string cause; ///< "ring_blow_by", "nozzle_wear"
+    std::string onset; ///< date, "2025-12-20": the last sound day
 };
 
 /// A slip of the pen that was put into the readings.
 struct SampleTypingError
 {
     std::string vessel, engine, reading;
-    std::string quantity;      ///< empty where all quantities are affected
-    std::string cylinder;      ///< empty: of the engine, or all cylinders; two exchanged: two entries
-    std::string verdict;       ///< the word `evenstroke-batch doubts` has for it
+    std::string quantity; ///< empty where all quantities are affected
+    std::string cylinder; ///< empty: of the engine, or all cylinders; two exchanged: two entries
+    std::string verdict;  ///< the word `evenstroke-batch doubts` has for it
 };
 
 /// A reading whose quick lines lie far apart and whose values scatter.

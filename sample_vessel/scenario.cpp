@@ -52,10 +52,19 @@ Differences auxiliary_engine_2_differences()
 std::vector<Fault> developing_faults()
 {
     return {
-        {0, 4, "ring_blow_by", "2025-12-20",
-         {{"compression_pressure", -0.6}, {"maximum_pressure", -0.6}, {"exhaust_temperature", 1.2},
-          {"mean_indicated_pressure", -0.22}, {"scavenge_box_temperature", 0.5}}},
-        {1, 2, "nozzle_wear", "2026-03-27",
+        {0,
+         4,
+         "ring_blow_by",
+         "2025-12-20",
+         {{"compression_pressure", -0.6},
+          {"maximum_pressure", -0.6},
+          {"exhaust_temperature", 1.2},
+          {"mean_indicated_pressure", -0.28},
+          {"scavenge_box_temperature", 0.5}}},
+        {1,
+         2,
+         "nozzle_wear",
+         "2026-03-27",
          {{"exhaust_temperature", 2.8}, {"maximum_pressure", -0.8}, {"mean_indicated_pressure", -0.38}}},
     };
 }
@@ -105,9 +114,10 @@ Scenario sample_scenario()
     scenario.work = recorded_work();
     scenario.faults = developing_faults();
     scenario.typing_errors = typing_errors();
-    scenario.missed = {{0, "2023-08"}, {0, "2025-02"}, {1, "2023-05"}, {1, "2024-10"}, {2, "2023-03"},
-                       {2, "2024-07"}, {2, "2026-01"}};
+    scenario.missed = {{0, "2023-08"}, {0, "2025-02"}, {1, "2023-05"}, {1, "2024-10"},
+                       {2, "2023-03"}, {2, "2024-07"}, {2, "2026-01"}};
     scenario.unsteady = {{0, "2024-02"}, {2, "2025-12"}};
+    scenario.cards = {{0, "2025-06"}, {0, "2026-10"}}; // before the rings began to leak, and near the end
     scenario.out_of_order = {
         {0, "2024-04", "piston_coolant_outlet_temperature", 6, "out_of_order"},
         {0, "2024-05", "piston_coolant_outlet_temperature", 6, "out_of_order"},
@@ -143,10 +153,14 @@ Scenario plain_scenario()
 std::string verdict_of(Slip slip)
 {
     switch (slip) {
-    case Slip::decimal_slip: return "decimal_slip";
-    case Slip::digits_swapped: return "digits_swapped";
-    case Slip::unit_slip: return "unit_slip";
-    case Slip::cylinders_swapped: return "cylinders_swapped";
+    case Slip::decimal_slip:
+        return "decimal_slip";
+    case Slip::digits_swapped:
+        return "digits_swapped";
+    case Slip::unit_slip:
+        return "unit_slip";
+    case Slip::cylinders_swapped:
+        return "cylinders_swapped";
     }
     return {};
 }

@@ -22,7 +22,7 @@ struct Work
 {
     int engine = 0;
     std::string date;
-    int cylinder = 0;        ///< 0: the whole engine or no cylinder
+    int cylinder = 0; ///< 0: the whole engine or no cylinder
     std::string kind, note, done_by, part;
     std::map<std::string, double> change;
 };
@@ -31,8 +31,8 @@ struct Work
 struct Fault
 {
     int engine = 0, cylinder = 0;
-    std::string cause, onset;                  ///< the last sound day
-    std::map<std::string, double> per_month;   ///< quantity's unit; mean indicated pressure in %
+    std::string cause, onset;                ///< the last sound day
+    std::map<std::string, double> per_month; ///< quantity's unit; mean indicated pressure in %
 };
 
 enum class Slip { decimal_slip, digits_swapped, unit_slip, cylinders_swapped };
@@ -72,12 +72,14 @@ struct Scenario
 {
     std::string vessel, imo, flag, class_society, class_number;
     std::vector<EngineDesign> engines;
-    /// Lasting difference of each cylinder from the mean, by engine and quantity (mean indicated pressure in %).
+    /// Lasting difference of each cylinder from the mean, by engine and quantity (mean indicated pressure in
+    /// %).
     std::vector<std::map<std::string, std::vector<double>>> differences;
     std::vector<Work> work;
     std::vector<Fault> faults;
     std::vector<TypingError> typing_errors;
     std::vector<MonthOf> missed, unsteady;
+    std::vector<MonthOf> cards; ///< readings of which the indicator cards were kept
     std::vector<OutOfOrder> out_of_order;
     std::vector<FuelBatch> fuel;
     std::string yard_from, yard_to; ///< no readings in the docking yard

@@ -15,7 +15,8 @@ std::string cylinder_text(int cylinder)
 
 void Sheet::number(const std::string& quantity, double value, Writing writing, int cylinder)
 {
-    lines.push_back({quantity, cylinder_text(cylinder), decimal_text(value, writing.decimals), writing.unit, "", "", ""});
+    lines.push_back(
+        {quantity, cylinder_text(cylinder), decimal_text(value, writing.decimals), writing.unit, "", "", ""});
 }
 
 void Sheet::quick(const char* phase, const std::string& quantity, double value, Writing writing)

@@ -78,7 +78,8 @@ void make_slip(Sheet& sheet, const TypingError& error)
     if (error.slip == Slip::unit_slip)
         return write_row_in_megapascal(sheet, error.quantity);
     if (Line* line = sheet.find(error.quantity, error.cylinder))
-        line->value = error.slip == Slip::decimal_slip ? with_lost_place(line->value) : with_digits_exchanged(line->value);
+        line->value = error.slip == Slip::decimal_slip ? with_lost_place(line->value)
+                                                       : with_digits_exchanged(line->value);
 }
 
 } // namespace evenstroke::sample

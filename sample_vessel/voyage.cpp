@@ -18,9 +18,17 @@ struct Waypoint
 
 /// Deep open water on an invented round between a cool north, the tropics and a mild south.
 constexpr std::array<Waypoint, 11> waypoints{{
-    {47.6, -9.4, 205, 4300}, {36.4, -14.8, 200, 4100}, {21.3, -20.6, 190, 3300}, {4.2, -15.1, 170, 4600},
-    {-9.6, -14.9, 230, 3600}, {-27.4, 7.9, 215, 4700}, {-34.1, -46.3, 20, 3900}, {-12.5, -30.4, 10, 4900},
-    {9.8, -34.2, 320, 4200}, {27.9, -58.7, 60, 5300}, {43.2, -38.9, 75, 4700},
+    {47.6, -9.4, 205, 4300},
+    {36.4, -14.8, 200, 4100},
+    {21.3, -20.6, 190, 3300},
+    {4.2, -15.1, 170, 4600},
+    {-9.6, -14.9, 230, 3600},
+    {-27.4, 7.9, 215, 4700},
+    {-34.1, -46.3, 20, 3900},
+    {-12.5, -30.4, 10, 4900},
+    {9.8, -34.2, 320, 4200},
+    {27.9, -58.7, 60, 5300},
+    {43.2, -38.9, 75, 4700},
 }};
 
 /// The ship is somewhere else on her round every month.
@@ -70,12 +78,15 @@ void set_weather(ShipDay& ship, const Scenario& scenario, const Chance& chance)
     const double wind = 5.0 + 8.5 * chance.even({"wind", 0, place, ship.month});
     ship.wind_kn = rough ? 20.0 : rounded(wind, 0);
     ship.sea_state = rough ? 5.0 : (wind < 7.0 ? 2.0 : wind < 11.0 ? 3.0 : 4.0);
-    ship.wind_off_bow = 10.0 * rounded(-17.0 + 35.0 * chance.even({"wind direction", 0, place, ship.month}), 0);
-    ship.sea_water_c =
-        std::clamp(usual_sea_temperature(ship.latitude, when) + 0.7 * chance.normal({"sea", 0, place, ship.month}), 4.0, 31.0);
+    ship.wind_off_bow =
+        10.0 * rounded(-17.0 + 35.0 * chance.even({"wind direction", 0, place, ship.month}), 0);
+    ship.sea_water_c = std::clamp(usual_sea_temperature(ship.latitude, when) +
+                                      0.7 * chance.normal({"sea", 0, place, ship.month}),
+                                  4.0, 31.0);
     ship.outside_air_c = ship.sea_water_c - 0.8 + 1.2 * chance.normal({"air", 0, place, ship.month});
     ship.barometer_mbar = 1014.0 + 5.0 * chance.normal({"barometer", 0, place, ship.month});
-    ship.humidity_percent = std::clamp(76.0 + 6.0 * chance.normal({"humidity", 0, place, ship.month}), 55.0, 94.0);
+    ship.humidity_percent =
+        std::clamp(76.0 + 6.0 * chance.normal({"humidity", 0, place, ship.month}), 55.0, 94.0);
 }
 
 void set_draught(ShipDay& ship, const Chance& chance)
@@ -97,9 +108,12 @@ ShipDay ship_day(const Scenario& scenario, const Chance& chance, int month, bool
     const int place = second ? 1 : 0;
     const Waypoint& waypoint = waypoint_of(month);
     ship.latitude = rounded(waypoint.latitude + 2.5 * (chance.even({"latitude", 0, place, month}) - 0.5), 2);
-    ship.longitude = rounded(waypoint.longitude + 2.5 * (chance.even({"longitude", 0, place, month}) - 0.5), 2);
-    ship.course = std::fmod(waypoint.course + rounded(8.0 * (chance.even({"course", 0, place, month}) - 0.5), 0), 360.0);
-    ship.water_depth = rounded(waypoint.depth / 10.0 + 40.0 * chance.even({"depth", 0, place, month}), 0) * 10.0;
+    ship.longitude =
+        rounded(waypoint.longitude + 2.5 * (chance.even({"longitude", 0, place, month}) - 0.5), 2);
+    ship.course = std::fmod(
+        waypoint.course + rounded(8.0 * (chance.even({"course", 0, place, month}) - 0.5), 0), 360.0);
+    ship.water_depth =
+        rounded(waypoint.depth / 10.0 + 40.0 * chance.even({"depth", 0, place, month}), 0) * 10.0;
     ship.time.offset_minutes = 60 * static_cast<int>(std::lround(ship.longitude / 15.0));
     const Day when = second ? second_day(scenario, chance, month) : round_day(scenario, chance, month);
     const int minutes = 9 * 60 + 5 * static_cast<int>(chance.even({"hour", 0, place, month}) * 18.0);
@@ -123,7 +137,8 @@ Surroundings surroundings_of(const ShipDay& day, const Chance& chance, int engin
     around.barometer_mbar = rounded(day.barometer_mbar, 0);
     around.humidity_percent = rounded(day.humidity_percent, 0);
     const double warmed = day.outside_air_c + (engine == 0 ? 7.0 : 9.0);
-    around.inlet_air_c = rounded(std::max(14.0, warmed) + 0.9 * chance.normal({"inlet air", engine, 0, day.month}), 1);
+    around.inlet_air_c =
+        rounded(std::max(14.0, warmed) + 0.9 * chance.normal({"inlet air", engine, 0, day.month}), 1);
     // The fresh-water circuit is kept at 24 °C while the sea is cold and floats over the sea when it is warm.
     const double coolant = std::max(24.0, day.sea_water_c + 4.4) + (engine == 0 ? 0.0 : 0.7);
     around.coolant_c = rounded(coolant + 0.4 * chance.normal({"coolant", engine, 0, day.month}), 1);

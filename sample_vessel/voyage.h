@@ -13,9 +13,9 @@ namespace evenstroke::sample {
 /// One occasion on which the bridge writes down what all engines share.
 struct ShipDay
 {
-    std::string name;      ///< of the ship's own reading: "2023-03", "2023-03-b"
+    std::string name; ///< of the ship's own reading: "2023-03", "2023-03-b"
     int month = 0;
-    bool second = false;   ///< the later or earlier day on which the second auxiliary engine is read
+    bool second = false; ///< the later or earlier day on which the second auxiliary engine is read
     ShipTime time;
     double latitude = 0.0, longitude = 0.0;
     double course = 0.0, draught_forward = 0.0, draught_aft = 0.0, water_depth = 0.0;

@@ -35,10 +35,12 @@ inline std::vector<CsvLine> csv_lines(const std::string& text)
 /// "2023-03-14T09:40+09:00" as minutes since 1970 in UTC.
 inline long long minutes_utc(const std::string& text)
 {
-    const auto number = [&](std::size_t from, std::size_t count) { return std::stoi(text.substr(from, count)); };
-    const std::chrono::sys_days date(std::chrono::year(number(0, 4))
-                                     / std::chrono::month(static_cast<unsigned>(number(5, 2)))
-                                     / std::chrono::day(static_cast<unsigned>(number(8, 2))));
+    const auto number = [&](std::size_t from, std::size_t count) {
+        return std::stoi(text.substr(from, count));
+    };
+    const std::chrono::sys_days date(std::chrono::year(number(0, 4)) /
+                                     std::chrono::month(static_cast<unsigned>(number(5, 2))) /
+                                     std::chrono::day(static_cast<unsigned>(number(8, 2))));
     const int offset = (text[16] == '-' ? -1 : 1) * (number(17, 2) * 60 + number(20, 2));
     return date.time_since_epoch().count() * 1440LL + number(11, 2) * 60 + number(14, 2) - offset;
 }

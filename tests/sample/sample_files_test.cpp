@@ -15,7 +15,8 @@ using namespace evenstroke::sample;
 
 namespace {
 
-const std::filesystem::path kept_files = std::filesystem::path(EVENSTROKE_SOURCE_DIR) / "sample_vessel" / "files";
+const std::filesystem::path kept_files =
+    std::filesystem::path(EVENSTROKE_SOURCE_DIR) / "sample_vessel" / "files";
 
 std::string text_of(const std::filesystem::path& path)
 {
@@ -51,7 +52,8 @@ TEST(SampleVessel, MakesTheFilesThatAreKeptWithTheSources)
 {
     for (const SampleFile& file : files())
         EXPECT_TRUE(text_of(kept_files / file.relative_path) == file.content)
-            << file.relative_path << " differs from the kept file: run make_sample_vessel sample_vessel/files";
+            << file.relative_path
+            << " differs from the kept file: run make_sample_vessel sample_vessel/files";
 }
 
 TEST(SampleVessel, KeepsNoOtherFileThanThoseItMakes)
@@ -89,7 +91,8 @@ TEST(SampleVessel, GivesOtherReadingsOfTheSameEnginesForAnotherSeed)
 TEST(SampleVessel, WritesTheColumnsOfThePublicFormat)
 {
     EXPECT_EQ(csv_lines(content_of(files(), "main_engine/readings.csv")).front(),
-              (CsvLine{"reading", "taken_at", "quantity", "cylinder", "value", "unit", "phase", "text", "missing_reason"}));
+              (CsvLine{"reading", "taken_at", "quantity", "cylinder", "value", "unit", "phase", "text",
+                       "missing_reason"}));
     EXPECT_EQ(csv_lines(content_of(files(), "ship_readings.csv")).front(),
               (CsvLine{"reading", "taken_at", "quantity", "value", "unit"}));
     EXPECT_EQ(csv_lines(content_of(files(), "auxiliary_engine_2/events.csv")).front(),
@@ -113,7 +116,8 @@ TEST(SampleVessel, WritesEachPlaceOnceInEachReading)
     const std::vector<CsvLine> lines = csv_lines(content_of(files(), "main_engine/readings.csv"));
     std::set<CsvLine> places;
     for (std::size_t i = 1; i < lines.size(); ++i)
-        EXPECT_TRUE(places.insert({lines[i][0], lines[i][2], lines[i][3], lines[i][6]}).second) << "line " << i + 1;
+        EXPECT_TRUE(places.insert({lines[i][0], lines[i][2], lines[i][3], lines[i][6]}).second)
+            << "line " << i + 1;
 }
 
 TEST(SampleVessel, GivesANumberWordsOrAReasonInEveryLine)
@@ -143,7 +147,8 @@ TEST(SampleVessel, TakesReadingsOneAfterAnother)
             times.push_back(minutes_utc(line[1]));
         }
         EXPECT_GE(times.size(), 44U) << file.relative_path;
-        EXPECT_TRUE(std::adjacent_find(times.begin(), times.end(), std::greater_equal<>()) == times.end()) << file.relative_path;
+        EXPECT_TRUE(std::adjacent_find(times.begin(), times.end(), std::greater_equal<>()) == times.end())
+            << file.relative_path;
     }
 }
 
@@ -159,8 +164,8 @@ TEST(SampleVessel, HasASharedReadingWithinSixHoursOfEveryReading)
                 continue;
             const long long time = minutes_utc(line[1]);
             const auto next = shared.lower_bound(time);
-            const bool near = (next != shared.end() && *next - time <= 360)
-                              || (next != shared.begin() && time - *std::prev(next) <= 360);
+            const bool near = (next != shared.end() && *next - time <= 360) ||
+                              (next != shared.begin() && time - *std::prev(next) <= 360);
             ASSERT_TRUE(near) << engine << " " << line[1];
         }
 }

@@ -36,7 +36,8 @@ std::map<std::string, Values> readings_of(const std::vector<SampleFile>& files, 
                 continue;
             Values& values = readings[line[0]];
             if (values.empty())
-                values = std::prev(shared.upper_bound(minutes_utc(line[1])))->second; // the round begins on the bridge
+                values = std::prev(shared.upper_bound(minutes_utc(line[1])))
+                             ->second; // the round begins on the bridge
             values[line[3].empty() ? line[2] : line[2] + "/" + line[3]] = std::stod(line[4]);
         }
     }
@@ -47,18 +48,16 @@ std::map<std::string, Values> readings_of(const std::vector<SampleFile>& files, 
 double corrected_pressure(double typed, double per_air, double per_coolant, const Values& values)
 {
     const double barometer = values.at("barometric_pressure") / 1000.0;
-    return (typed + barometer)
-               * (1.0 + per_air * (values.at("inlet_air_temperature") - 25.0)
-                  + per_coolant * (values.at("cooler_coolant_inlet_temperature") - 25.0))
-           - barometer;
+    return (typed + barometer) * (1.0 + per_air * (values.at("inlet_air_temperature") - 25.0) +
+                                  per_coolant * (values.at("cooler_coolant_inlet_temperature") - 25.0)) -
+           barometer;
 }
 
 double corrected_temperature(double typed, double per_air, double per_coolant, const Values& values)
 {
-    return (typed + 273.15)
-               * (1.0 + per_air * (values.at("inlet_air_temperature") - 25.0)
-                  + per_coolant * (values.at("cooler_coolant_inlet_temperature") - 25.0))
-           - 273.15;
+    return (typed + 273.15) * (1.0 + per_air * (values.at("inlet_air_temperature") - 25.0) +
+                               per_coolant * (values.at("cooler_coolant_inlet_temperature") - 25.0)) -
+           273.15;
 }
 
 } // namespace
@@ -75,27 +74,36 @@ TEST(SampleModel, CorrectsBackToItsOwnBaselineWhenNothingIsWrongAndNothingScatte
             const double load = values.at("load_percent");
             // Half a digit of the value, and half a digit of the typed load (0.05 %) along the curve.
             const auto slack = [&](const std::string& quantity, double half_digit) {
-                return 1.1 * half_digit + std::abs(expected(engine, quantity, load + 0.05) - expected(engine, quantity, load - 0.05));
+                return 1.1 * half_digit + std::abs(expected(engine, quantity, load + 0.05) -
+                                                   expected(engine, quantity, load - 0.05));
             };
-            const Coefficients p_max = engine.correction.at("maximum_pressure"), p_comp = engine.correction.at("compression_pressure"),
+            const Coefficients p_max = engine.correction.at("maximum_pressure"),
+                               p_comp = engine.correction.at("compression_pressure"),
                                exhaust = engine.correction.at("exhaust_temperature");
             for (int cylinder = 1; cylinder <= engine.cylinders; ++cylinder) {
                 const std::string place = "/" + std::to_string(cylinder);
-                EXPECT_NEAR(corrected_pressure(values.at("maximum_pressure" + place), p_max.per_inlet_air, p_max.per_coolant, values),
+                EXPECT_NEAR(corrected_pressure(values.at("maximum_pressure" + place), p_max.per_inlet_air,
+                                               p_max.per_coolant, values),
                             expected(engine, "maximum_pressure", load), slack("maximum_pressure", 0.05));
-                EXPECT_NEAR(corrected_pressure(values.at("compression_pressure" + place), p_comp.per_inlet_air, p_comp.per_coolant, values),
-                            expected(engine, "compression_pressure", load), slack("compression_pressure", 0.05));
-                EXPECT_NEAR(corrected_temperature(values.at("exhaust_temperature" + place), exhaust.per_inlet_air, exhaust.per_coolant, values),
+                EXPECT_NEAR(corrected_pressure(values.at("compression_pressure" + place),
+                                               p_comp.per_inlet_air, p_comp.per_coolant, values),
+                            expected(engine, "compression_pressure", load),
+                            slack("compression_pressure", 0.05));
+                EXPECT_NEAR(corrected_temperature(values.at("exhaust_temperature" + place),
+                                                  exhaust.per_inlet_air, exhaust.per_coolant, values),
                             expected(engine, "exhaust_temperature", load), slack("exhaust_temperature", 0.5));
-                EXPECT_NEAR(values.at("mean_indicated_pressure" + place), expected(engine, "mean_indicated_pressure", load),
+                EXPECT_NEAR(values.at("mean_indicated_pressure" + place),
+                            expected(engine, "mean_indicated_pressure", load),
                             slack("mean_indicated_pressure", 0.005));
             }
-            EXPECT_NEAR(corrected_temperature(values.at("exhaust_after_turbine"), exhaust.per_inlet_air, exhaust.per_coolant, values),
+            EXPECT_NEAR(corrected_temperature(values.at("exhaust_after_turbine"), exhaust.per_inlet_air,
+                                              exhaust.per_coolant, values),
                         expected(engine, "exhaust_after_turbine", load), slack("exhaust_after_turbine", 0.5));
-            EXPECT_NEAR(values.at("turbocharger_speed") * std::sqrt(298.15 / (values.at("inlet_air_temperature") + 273.15)),
+            EXPECT_NEAR(values.at("turbocharger_speed") *
+                            std::sqrt(298.15 / (values.at("inlet_air_temperature") + 273.15)),
                         expected(engine, "turbocharger_speed", load), slack("turbocharger_speed", 0.5));
-            EXPECT_NEAR(values.at("cooler_pressure_drop") * 0.0980665, expected(engine, "cooler_pressure_drop", load),
-                        slack("cooler_pressure_drop", 0.05));
+            EXPECT_NEAR(values.at("cooler_pressure_drop") * 0.0980665,
+                        expected(engine, "cooler_pressure_drop", load), slack("cooler_pressure_drop", 0.05));
         }
     }
 }
@@ -114,9 +122,11 @@ TEST(SampleModel, IsItsOwnReferenceAtReferenceConditions)
 TEST(SampleModel, GivesTheShaftThePowerThatItsMeanPressuresLeave)
 {
     for (const EngineDesign& engine : sample_scenario().engines) {
-        const double volume = std::numbers::pi / 4.0 * engine.bore_mm * engine.bore_mm * engine.stroke_mm * 1e-9;
+        const double volume =
+            std::numbers::pi / 4.0 * engine.bore_mm * engine.bore_mm * engine.stroke_mm * 1e-9;
         const double strokes = engine.rated_speed_rpm / 60.0 / (engine.two_stroke ? 1.0 : 2.0);
-        const double indicated_kw = expected(engine, "mean_indicated_pressure", 100.0) * 100.0 * volume * strokes * engine.cylinders;
+        const double indicated_kw =
+            expected(engine, "mean_indicated_pressure", 100.0) * 100.0 * volume * strokes * engine.cylinders;
         // The mechanical efficiency of the particulars is rounded to a hundredth.
         EXPECT_NEAR(engine.rated_power_kw / indicated_kw, engine.mechanical_efficiency, 0.01) << engine.name;
     }
@@ -133,8 +143,8 @@ TEST(SampleModel, TakesAsMuchWorkOutOfTheGasAsTheCompressorNeeds)
             const double receiver = 0.925 * ratio; // the pressure the readings give before the turbine
             // Turbocharger efficiency after CIMAC recommendation 27 with c = 0.904; credible turbochargers
             // lie between 0.55 and 0.72 (common practice).
-            const double efficiency = 0.904 * 298.15 * (std::pow(ratio, 0.286) - 1.0)
-                                      / (before_k * (1.0 - std::pow(1.0 / receiver, 0.265)));
+            const double efficiency = 0.904 * 298.15 * (std::pow(ratio, 0.286) - 1.0) /
+                                      (before_k * (1.0 - std::pow(1.0 / receiver, 0.265)));
             EXPECT_GT(efficiency, 0.55) << engine.name << " " << point.load_percent;
             EXPECT_LT(efficiency, 0.72) << engine.name << " " << point.load_percent;
         }

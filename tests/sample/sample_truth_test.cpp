@@ -62,12 +62,14 @@ TEST(SampleTruth, LetsAFaultBeginOnlyAfterTwelveReadingsWithoutWorkAndLeavesItAl
             if (event[1] == std::to_string(fault.cylinder))
                 last_work = std::max(last_work, event[0]);
         EXPECT_LT(last_work, fault.onset) << fault.engine;
-        const std::vector<std::string> dates = reading_dates(files.at(folder_of(fault.engine) + "/readings.csv"));
+        const std::vector<std::string> dates =
+            reading_dates(files.at(folder_of(fault.engine) + "/readings.csv"));
         const auto between = std::count_if(dates.begin(), dates.end(), [&](const std::string& date) {
             return date > last_work && date <= fault.onset;
         });
         EXPECT_GE(between, 12) << fault.engine;
-        const auto after = std::count_if(dates.begin(), dates.end(), [&](const std::string& date) { return date > fault.onset; });
+        const auto after = std::count_if(dates.begin(), dates.end(),
+                                         [&](const std::string& date) { return date > fault.onset; });
         EXPECT_GE(after, 8) << fault.engine;
     }
 }
@@ -78,8 +80,8 @@ TEST(SampleTruth, NamesReadingsThatAreInTheFiles)
     for (const SampleTypingError& error : sample_truth().typing_errors) {
         const std::vector<CsvLine>& lines = files.at(folder_of(error.engine) + "/readings.csv");
         const bool found = std::any_of(lines.begin(), lines.end(), [&](const CsvLine& line) {
-            return line[0] == error.reading && (error.quantity.empty() || line[2] == error.quantity)
-                   && (error.cylinder.empty() || line[3] == error.cylinder) && !line[4].empty();
+            return line[0] == error.reading && (error.quantity.empty() || line[2] == error.quantity) &&
+                   (error.cylinder.empty() || line[3] == error.cylinder) && !line[4].empty();
         });
         EXPECT_TRUE(found) << error.engine << " " << error.reading << " " << error.quantity;
     }
