@@ -80,6 +80,22 @@ std::vector<MovedQuantity> moved_quantities(const drift::Flag::View& view, bool 
     return moved;
 }
 
+/// In a pattern the quantity that the fault moves most leads the sentence, unless it hardly moved here.
+void lead_with_the_pattern(std::vector<MovedQuantity>& moved, const std::string& pattern)
+{
+    const drift::Signature* signature = drift::find_signature(pattern);
+    if (!signature || moved.empty() || signature->moves.empty())
+        return;
+    const auto main = std::max_element(signature->moves.begin(), signature->moves.end(), [](const auto& a, const auto& b) {
+        return std::abs(a.amount) < std::abs(b.amount);
+    });
+    const auto found = std::find_if(moved.begin(), moved.end(), [&](const MovedQuantity& one) {
+        return one.quantity == drift_quantity(main->quantity);
+    });
+    if (found != moved.end() && std::abs(found->strength) >= 0.5 * std::abs(moved.front().strength))
+        std::rotate(moved.begin(), found, found + 1);
+}
+
 TimePoint time_of(const Judgement& judgement, std::size_t reading)
 {
     const auto& readings = judgement.record->readings;
@@ -141,6 +157,7 @@ Flag translate_flag(const Judgement& judgement, const drift::Input& input, const
     flag.evidence = view.evidence;
     flag.threshold = from.cylinder ? output.cylinder_threshold : output.engine_threshold;
     flag.moved = moved_quantities(view, from.cylinder.has_value());
+    lead_with_the_pattern(flag.moved, flag.pattern);
     if (!flag.moved.empty())
         flag.quantity = flag.moved.front().quantity;
     else if (!view.is_signature && !view.candidate.empty())
