@@ -26,7 +26,7 @@ struct Heading
     std::string text;
 };
 
-/// Names and values in two columns.
+/// Names and values. Short ones may stand in two columns beside each other.
 struct FieldList
 {
     struct Field
@@ -34,6 +34,7 @@ struct FieldList
         std::string name, value;
     };
     std::vector<Field> fields;
+    bool short_ones = false;
 };
 
 struct Column
@@ -112,6 +113,27 @@ struct Plot
     std::optional<Band> band;
     std::vector<FlagMark> flags;
     std::vector<Stretch> learning;  ///< hatched: no flag is possible there yet
+    bool from_zero = false;         ///< the scale shows zero
+};
+
+/// Small multiples: one column a cylinder, one row a quantity.
+struct Strips
+{
+    struct Cell
+    {
+        PlotLine line;
+        std::optional<Plot::Band> band;
+        Level level = Level::no_data;
+        std::string newest, remark; ///< "+0.3"; "watch", "learning 4 of 8"
+    };
+    struct Row
+    {
+        std::string title, unit;
+        std::vector<Cell> cells; ///< one a column
+    };
+    double from = 0.0, to = 0.0;
+    std::vector<std::string> columns;
+    std::vector<Row> rows;
 };
 
 /// A block to be signed by hand; fields that are empty stay blank for the pen.
@@ -121,7 +143,7 @@ struct SignOff
     std::vector<FieldList::Field> fields;
 };
 
-using Block = std::variant<Paragraph, Heading, FieldList, Table, Plot, SignOff>;
+using Block = std::variant<Paragraph, Heading, FieldList, Table, Plot, Strips, SignOff>;
 
 struct Section
 {

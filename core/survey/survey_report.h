@@ -64,8 +64,8 @@ struct ReportSummary
     std::size_t usable = 0; ///< of these: steady enough, with a load
     std::vector<MonthState> months;
     std::vector<std::string> standing;     ///< a line for each flag that stands at the end of the period
-    std::vector<std::string> began;        ///< flags that started in the period
-    std::vector<std::string> closed;       ///< flags of the period that no longer stand
+    std::size_t began = 0;                 ///< flags and questions that started in the period
+    std::vector<std::string> closed;       ///< a line for each of these that no longer stands
     std::size_t doubts = 0;
 };
 

@@ -1,5 +1,4 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "core/reading/relations.h"
 #include "core/trend/drift_catalogue.h"
 #include "core/trend/drift_input.h"
 #include "core/trend/drift_results.h"
@@ -11,10 +10,6 @@
 namespace evenstroke {
 namespace {
 
-/// Readings that a draft is compared with: three years of monthly ones. The usual band looks back over the last
-/// twelve; more serve the noise only, and typing must not wait for them.
-constexpr std::size_t draft_memory = 36;
-
 /// The record with the draft as its last reading; readings taken after the draft are left out.
 std::shared_ptr<EngineRecord> with_draft(const EngineRecord& record, const Reading& draft)
 {
@@ -25,8 +20,6 @@ std::shared_ptr<EngineRecord> with_draft(const EngineRecord& record, const Readi
                                       return r.taken_at.utc >= draft.taken_at.utc || (!r.id.empty() && r.id == draft.id);
                                   }),
                    readings.end());
-    if (readings.size() > draft_memory)
-        readings.erase(readings.begin(), readings.end() - static_cast<std::ptrdiff_t>(draft_memory));
     readings.push_back(draft);
     return extended;
 }
@@ -146,9 +139,6 @@ DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
     const SteadinessVerdict steadiness = judge_steadiness(draft, !engine.two_stroke());
     opinion.steadiness = steadiness.verdict;
     opinion.steadiness_sentence = steadiness.sentence;
-    ReadingContext context{std::span<const Reading>(record->readings).first(record->readings.size() - 1), record->events, {}};
-    for (const Relation& relation : check_relations(engine, draft, context))
-        opinion.between.push_back(relation.sentence);
     return opinion;
 }
 

@@ -1,0 +1,185 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/survey/rounding.h"
+#include "core/survey/survey_context.h"
+
+#include <algorithm>
+#include <set>
+
+namespace evenstroke::report {
+namespace {
+
+std::string effect_words(const EventKind* kind)
+{
+    if (!kind)
+        return "mark only";
+    switch (kind->effect) {
+    case EventKind::Effect::new_segment: return "comparison starts anew";
+    case EventKind::Effect::new_offset: return "what the instrument reads starts anew";
+    case EventKind::Effect::mark_only:
+    case EventKind::Effect::other: break;
+    }
+    return "mark only";
+}
+
+Table months_table(const Context& context)
+{
+    Table table{"Months of the period without a usable reading",
+                {{"Month", Column::Kind::words}, {"State", Column::Kind::words}, {"Why", Column::Kind::remark}}, {}, 1, {}};
+    for (const MonthState& month : context.summary.months) {
+        if (month.state == MonthState::State::usable)
+            continue;
+        const std::string number = (month.month < 10 ? "0" : "") + std::to_string(month.month);
+        table.rows.push_back({{std::to_string(month.year) + "-" + number,
+                               month.state == MonthState::State::missing ? "missing" : "not usable", month.reason}, true});
+    }
+    return table;
+}
+
+Table states_table(const Context& context)
+{
+    Table table{"Every reading of the period",
+                {{"Reading", Column::Kind::words}, {"Date", Column::Kind::words}, {"Load", Column::Kind::number},
+                 {"State", Column::Kind::words}, {"What decided", Column::Kind::remark}}, {}, 1, {}};
+    for (const std::size_t i : context.readings) {
+        const Reading& reading = context.record.readings[i];
+        const ReadingJudgement& judged = context.judgement.readings[i];
+        table.rows.push_back({{reading.name, date_text(reading.taken_at.utc), load_words(judged.load_percent),
+                               state_words(judged), judged.steadiness_sentence}, true});
+    }
+    return table;
+}
+
+Table doubts_table(const Context& context)
+{
+    Table table{"Values that looked mistyped",
+                {{"Reading", Column::Kind::words}, {"Value", Column::Kind::words}, {"What is the matter", Column::Kind::remark}}, {}, 1,
+                "A doubted value is printed as typed and takes no part in the comparison until it is corrected or confirmed."};
+    for (const Doubt& doubt : context.judgement.doubts) {
+        if (doubt.reading >= context.record.readings.size() || !context.contains(context.record.readings[doubt.reading].taken_at.utc))
+            continue;
+        std::string subject = doubt.quantity ? quantity(*doubt.quantity).title : std::string("all quantities");
+        if (doubt.place && doubt.place->number > 0)
+            subject += ", " + place_words(context.engine, *doubt.place);
+        table.rows.push_back({{context.record.readings[doubt.reading].name, subject, doubt.sentence}, true});
+    }
+    return table;
+}
+
+Table corrections_table(const Context& context)
+{
+    Table table{"Values corrected after a reading was closed",
+                {{"When", Column::Kind::words}, {"What", Column::Kind::words}, {"Old", Column::Kind::number},
+                 {"New", Column::Kind::number}, {"By", Column::Kind::words}, {"Why", Column::Kind::remark}}, {}, 1, {}};
+    for (const CorrectionLine& line : context.details.corrections)
+        table.rows.push_back({{date_text(line.when), line.what, line.old_value, line.new_value, line.who, line.reason}, true});
+    return table;
+}
+
+void add_or_say(Section& section, Table table, const std::string& otherwise)
+{
+    if (table.rows.empty())
+        section.blocks.push_back(Paragraph{otherwise, {}});
+    else
+        section.blocks.push_back(std::move(table));
+}
+
+/// Thresholds that the evidence was held against, as the judgement carries them.
+std::string threshold_words(const Judgement& judgement)
+{
+    std::set<std::string> cylinders, engine;
+    for (const Evidence& evidence : judgement.evidence)
+        (evidence.place.kind == Place::Kind::cylinder ? cylinders : engine).insert(rounded_text(evidence.threshold, 2));
+    std::string words;
+    for (const std::string& text : cylinders)
+        words += (words.empty() ? "" : " and ") + text + " for cylinders";
+    for (const std::string& text : engine)
+        words += (words.empty() ? "" : ", ") + text + " for the engine as a whole";
+    return words.empty() ? "not reached: nothing could be judged" : words;
+}
+
+} // namespace
+
+Section events_section(const Context& context)
+{
+    Section section{"Overhauls, adjustments and other events", false, {}};
+    Table table{"Of the period, in order of time",
+                {{"Date", Column::Kind::words}, {"Part", Column::Kind::words}, {"Event", Column::Kind::words},
+                 {"Hours", Column::Kind::number}, {"Comparison", Column::Kind::words}, {"Note, done by, parts", Column::Kind::remark}},
+                {}, 1, {}};
+    bool record_book = false;
+    for (const Event* event : context.events) {
+        const EventKind* kind = find_event_kind(event->kind);
+        record_book = record_book || (kind && kind->record_book);
+        std::string remark = event->note;
+        for (const std::string& more : {event->done_by, event->part})
+            if (!more.empty())
+                remark += (remark.empty() ? "" : "; ") + more;
+        table.rows.push_back({{date_text(event->date.utc), place_words(context.engine, event->place),
+                               event_title(*event) + (kind && kind->record_book ? " *" : ""),
+                               event->running_hours ? rounded_text(*event->running_hours, 0) : "not given", effect_words(kind), remark}, true});
+    }
+    if (record_book)
+        table.note = "* touches a setting or part of the engine's technical file: the entry belongs in the engine's own record "
+                     "book of parameters. Evenstroke is no approved record book.";
+    add_or_say(section, std::move(table), "No event was recorded in this period.");
+    return section;
+}
+
+Section gaps_section(const Context& context)
+{
+    Section section{"Missing and unsteady readings, doubts and corrections", false, {}};
+    add_or_say(section, months_table(context), "Every month of the period has a usable reading.");
+    if (!context.readings.empty())
+        section.blocks.push_back(states_table(context));
+    add_or_say(section, doubts_table(context), "No value of the period looked mistyped.");
+    add_or_say(section, corrections_table(context), "No value was corrected after its reading was closed.");
+    return section;
+}
+
+Section method_section(const Context& context)
+{
+    Section section{"Method, false alarms, units and rounding", false, {}};
+    section.blocks.push_back(Paragraph{
+        "Method version " + std::to_string(context.judgement.version) + ". Readings are corrected to reference conditions and "
+        "compared with the engine's baseline at the same load; what all cylinders share is taken out; a change is flagged when "
+        "the evidence of several readings together passes a threshold (" + threshold_words(context.judgement) + "). After "
+        "recorded work the comparison starts anew and needs eight usable readings.", {}});
+    section.blocks.push_back(Paragraph{
+        "The thresholds were set by simulation so that a sound engine read once a month raises about one flag by chance in five "
+        "years, with one overhaul in ten not recorded; questions about work that was not recorded are not counted. Invented "
+        "engines were simulated: on this engine the rate may be higher or lower.", {}});
+    section.blocks.push_back(Paragraph{
+        "Units are printed beside the values; a pressure is a gauge pressure, an absolute pressure or a difference as it says. "
+        "Values as read are printed as they were typed. All others are computed unrounded and rounded only for print, half away "
+        "from zero, to the decimals that the instrument shows. Dates are in UTC, written year-month-day.", {}});
+    return section;
+}
+
+Section integrity_section(const Context& context)
+{
+    const ReportDetails& details = context.details;
+    FieldList fields;
+    fields.fields = {{"Data set, SHA-256", details.data_hash.empty() ? "not given" : details.data_hash},
+                     {"Audit log, SHA-256", details.audit_hash.empty() ? "not given" : details.audit_hash},
+                     {"Audit log, lines", details.revisions ? std::to_string(*details.revisions) : "not given"}};
+    Section section{"Integrity of the data", false, {fields}};
+    section.blocks.push_back(Paragraph{
+        "The first is of the data set: this engine's readings, events and particulars as Evenstroke hands them out as files; anybody can hand "
+        "them out again from the same history, compute the SHA-256 and compare. A closed reading changes only by a correction "
+        "that keeps the old value; the second is of the last line of the audit log, which is only added to, each line carrying the hash of the one before.", {}});
+    return section;
+}
+
+Section sign_off_section(const Context& context)
+{
+    const ReportDetails& details = context.details;
+    Section section{"Signatures", false, {}};
+    section.blocks.push_back(SignOff{"Chief engineer", "The readings were taken on board as stated.",
+                                     {{"Name", details.chief_engineer}, {"Licence", details.chief_licence}, {"Date", ""}, {"Signature", ""}}});
+    section.blocks.push_back(SignOff{"Superintendent", "Seen.",
+                                     {{"Name", details.superintendent}, {"Date", ""}, {"Signature", ""}}});
+    section.blocks.push_back(SignOff{"Surveyor", "Seen / credited / remarks:", {{"Name", ""}, {"Date", ""}, {"Signature", ""}}});
+    return section;
+}
+
+} // namespace evenstroke::report

@@ -1,0 +1,159 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/survey/survey_context.h"
+
+#include "core/survey/rounding.h"
+
+#include <algorithm>
+#include <cctype>
+
+namespace evenstroke::report {
+
+Context::Context(const Judgement& whole, const ReportPeriod& wanted_period, const ReportDetails& report_details)
+    : judgement(whole), record(*whole.record), engine(whole.record->engine), period(wanted_period),
+      details(report_details), summary(summarize(whole, wanted_period))
+{
+    for (std::size_t i = 0; i < record.readings.size(); ++i) {
+        if (!contains(record.readings[i].taken_at.utc))
+            continue;
+        readings.push_back(i);
+        auto& row = cells.emplace_back();
+        for (const Value& value : record.readings[i].values)
+            if (value.phase == Phase::reading)
+                row.try_emplace({value.quantity, value.place}, ValueCell{&value, nullptr});
+        if (i < judgement.readings.size())
+            for (const JudgedValue& judged : judgement.readings[i].values)
+                row[{judged.quantity, judged.place}].judged = &judged;
+    }
+    for (const Event& event : record.events)
+        if (contains(event.date.utc))
+            events.push_back(&event);
+    for (const Flag& flag : judgement.flags) {
+        const bool began_here = flag.reading < record.readings.size() && contains(record.readings[flag.reading].taken_at.utc);
+        if (began_here || flag.level_now >= Level::note)
+            flags.push_back(&flag);
+    }
+}
+
+bool Context::contains(TimePoint time) const
+{
+    return time >= period.from && time <= end_of_day(period.to);
+}
+
+std::vector<std::size_t> Context::printed_readings() const
+{
+    const std::size_t most = details.depth == ReportDepth::full ? readings.size() : 12;
+    std::vector<std::size_t> wanted;
+    for (std::size_t i = readings.size() > most ? readings.size() - most : 0; i < readings.size(); ++i)
+        wanted.push_back(i);
+    return wanted;
+}
+
+TimePoint end_of_day(TimePoint day)
+{
+    return std::chrono::floor<std::chrono::days>(day) + std::chrono::days(1) - std::chrono::seconds(1);
+}
+
+std::string place_words(const Engine& engine, const Place& place)
+{
+    return place.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(place.number) : place_text(place);
+}
+
+std::string capitalized(std::string text)
+{
+    if (!text.empty())
+        text.front() = static_cast<char>(std::toupper(static_cast<unsigned char>(text.front())));
+    return text;
+}
+
+std::string unit_words(UnitId id, PressureKind kind)
+{
+    const Unit& known = unit(id);
+    if (known.dimension == Dimension::number)
+        return {};
+    std::string words(known.symbol);
+    if (known.dimension == Dimension::pressure && kind == PressureKind::gauge)
+        words += " gauge";
+    if (known.dimension == Dimension::pressure && kind == PressureKind::absolute)
+        words += " absolute";
+    return words;
+}
+
+std::string unit_of(const Quantity& quantity)
+{
+    return quantity.type == ValueType::number ? unit_words(quantity.unit, quantity.kind) : std::string();
+}
+
+std::string deviation_unit(const Quantity& quantity)
+{
+    return unit_words(quantity.unit, PressureKind::none);
+}
+
+std::string months_words(double months)
+{
+    const std::string number = rounded_text(months, months < 10.0 ? 1 : 0);
+    return number + (number == "1" || number == "1.0" ? " month" : " months");
+}
+
+std::string load_words(const std::optional<double>& load_percent)
+{
+    return load_percent ? rounded_text(*load_percent, 0) + " %" : "load not known";
+}
+
+std::string missing_words(MissingReason reason)
+{
+    switch (reason) {
+    case MissingReason::not_fitted: return "not fitted";
+    case MissingReason::out_of_order: return "out of order";
+    case MissingReason::none:
+    case MissingReason::not_read: break;
+    }
+    return "not read";
+}
+
+std::string source_words(const std::string& source)
+{
+    return source.empty() ? "source not given" : source;
+}
+
+std::string event_title(const Event& event)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    return kind ? kind->title : event.kind;
+}
+
+bool usable(const ReadingJudgement& reading)
+{
+    return reading.steadiness != Steadiness::unsteady && !reading.poor && reading.load_percent.has_value();
+}
+
+std::string state_words(const ReadingJudgement& reading)
+{
+    std::string words = steadiness_word(reading.steadiness);
+    if (reading.poor)
+        words += ", but the values scatter more than usual";
+    if (!reading.load_percent)
+        words += ", load not known";
+    return words;
+}
+
+std::string in_sentence(std::string title)
+{
+    if (title.size() > 1 && !std::isupper(static_cast<unsigned char>(title[1])))
+        title.front() = static_cast<char>(std::tolower(static_cast<unsigned char>(title.front())));
+    return title;
+}
+
+std::string flag_subject(const Judgement& judgement, const Flag& flag)
+{
+    return capitalized(place_words(judgement.record->engine, flag.subject)) + ", " + in_sentence(quantity(flag.quantity).title);
+}
+
+std::string flag_line(const Judgement& judgement, const Flag& flag)
+{
+    const TimePoint start = judgement.record->readings[flag.reading].taken_at.utc;
+    const bool stands = flag.level_now >= Level::note;
+    return level_word(stands ? flag.level_now : flag.severity) + " since " + date_text(start)
+           + (stands ? ": " : ", no longer standing: ") + flag.sentence;
+}
+
+} // namespace evenstroke::report
