@@ -13,7 +13,7 @@
 namespace evenstroke::sample {
 
 /// The seed of the files that are kept with the sources.
-inline constexpr std::uint64_t default_seed = 20221207;
+inline constexpr std::uint64_t default_seed = 20223158;
 
 struct SampleFile
 {

@@ -58,7 +58,7 @@ std::vector<Fault> developing_faults()
          "2025-12-20",
          {{"compression_pressure", -0.6},
           {"maximum_pressure", -0.6},
-          {"exhaust_temperature", 1.2},
+          {"exhaust_temperature", 1.3},
           {"mean_indicated_pressure", -0.28},
           {"scavenge_box_temperature", 0.5}}},
         {1,
@@ -72,7 +72,7 @@ std::vector<Fault> developing_faults()
 std::vector<TypingError> typing_errors()
 {
     return {
-        {0, "2023-10", "exhaust_temperature", 3, 0, Slip::digits_swapped},
+        {0, "2023-10", "exhaust_temperature", 1, 0, Slip::digits_swapped},
         {0, "2024-07", "compression_pressure", 0, 0, Slip::unit_slip},
         {0, "2025-09", "", 2, 5, Slip::cylinders_swapped},
         {1, "2024-03", "maximum_pressure", 5, 0, Slip::decimal_slip},
