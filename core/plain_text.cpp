@@ -122,4 +122,11 @@ std::string number_text(double number)
     return std::string(buffer, written.ptr);
 }
 
+std::string short_number_text(double number)
+{
+    char buffer[64];
+    const auto written = std::to_chars(buffer, buffer + sizeof buffer, number, std::chars_format::general, 6);
+    return std::string(buffer, written.ptr);
+}
+
 } // namespace evenstroke

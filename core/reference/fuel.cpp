@@ -40,15 +40,15 @@ Result<Density> density_at_temperature(Density at_15, Temperature temperature)
     const double celsius_degrees = in_celsius(temperature);
     if (!(density >= lightest && density <= heaviest)) {
         return invalid_input(
-            "A fuel density of " + number_text(density) +
+            "A fuel density of " + short_number_text(density) +
                 " kg/m³ at 15 °C is outside 653 to 1075 kg/m³, for which its expansion is known.",
             "Check the density on the bunker delivery note and its unit.");
     }
     if (!(celsius_degrees >= coldest && celsius_degrees <= hottest(density))) {
-        return invalid_input(
-            "The density of this fuel at " + number_text(std::round(celsius_degrees * 100.0) / 100.0) +
-                " °C is not known; the tables go from -18 to " + number_text(hottest(density)) + " °C.",
-            "Check the temperature at the fuel meter and its unit.");
+        return invalid_input("The density of this fuel at " + short_number_text(celsius_degrees) +
+                                 " °C is not known; the tables go from -18 to " +
+                                 short_number_text(hottest(density)) + " °C.",
+                             "Check the temperature at the fuel meter and its unit.");
     }
     const double expansion = expansion_at_15(density) * (celsius_degrees - 15.0);
     return at_15 * std::exp(-expansion * (1.0 + 0.8 * expansion));
@@ -57,7 +57,8 @@ Result<Density> density_at_temperature(Density at_15, Temperature temperature)
 Result<MassFlow> fuel_mass_flow(VolumeFlow metered, Density at_15, Temperature temperature)
 {
     if (!(metered.value() >= 0.0 && std::isfinite(metered.value()))) {
-        return invalid_input("A fuel flow of " + number_text(metered.value() * 3.6e6) + " l/h cannot be.",
+        return invalid_input("A fuel flow of " + short_number_text(metered.value() * 3.6e6) +
+                                 " l/h cannot be.",
                              "Check the meter readings and the time between them.");
     }
     const Result<Density> density = density_at_temperature(at_15, temperature);
@@ -70,12 +71,13 @@ Result<MassFlow> fuel_mass_flow(VolumeFlow metered, Density at_15, Temperature t
 Result<SpecificConsumption> specific_fuel_consumption(MassFlow fuel, Power power)
 {
     if (!(fuel.value() >= 0.0 && std::isfinite(fuel.value()))) {
-        return invalid_input("A fuel flow of " + number_text(fuel.value() * 3600.0) + " kg/h cannot be.",
+        return invalid_input("A fuel flow of " + short_number_text(fuel.value() * 3600.0) +
+                                 " kg/h cannot be.",
                              "Check the meter readings and the time between them.");
     }
     if (!(power.value() > 0.0 && std::isfinite(power.value()))) {
         return invalid_input("The specific consumption is not known at a power of " +
-                                 number_text(power.value() / 1000.0) + " kW.",
+                                 short_number_text(power.value() / 1000.0) + " kW.",
                              "Enter the power of the engine during the fuel measurement.");
     }
     return SpecificConsumption::from_value(fuel.value() / power.value());
@@ -91,7 +93,7 @@ Result<SpecificConsumption> at_usual_heating_value(SpecificConsumption consumpti
 {
     const double value = lower_heating_value.value();
     if (!(value >= 10e6 && value <= 130e6)) {
-        return invalid_input("A lower heating value of " + number_text(value / 1e6) +
+        return invalid_input("A lower heating value of " + short_number_text(value / 1e6) +
                                  " MJ/kg is outside 10 to 130 MJ/kg, so it is no fuel's.",
                              "Check the heating value and its unit.");
     }

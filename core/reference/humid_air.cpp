@@ -45,8 +45,9 @@ Result<AbsolutePressure> saturation_pressure(Temperature temperature)
 {
     const double kelvin = temperature.value();
     if (!(kelvin >= coldest && kelvin <= hottest)) {
-        return invalid_input("The saturation pressure of water at " + number_text(kelvin) +
-                                 " K is not known; it is worked out from 273.15 K (0 °C) to 647.096 K.",
+        return invalid_input("The saturation pressure of water at " +
+                                 short_number_text(in_celsius(temperature)) +
+                                 " °C is not known; it is worked out from 0 °C to 373.946 °C.",
                              "Check the temperature and its unit.");
     }
     return AbsolutePressure::from_value(saturation_pascal(kelvin));
@@ -56,7 +57,7 @@ Result<Temperature> saturation_temperature(AbsolutePressure pressure)
 {
     const double pascal = pressure.value();
     if (!(pascal >= lowest && pascal <= highest)) {
-        return invalid_input("The saturation temperature of water at " + number_text(in_bar(pressure)) +
+        return invalid_input("The saturation temperature of water at " + short_number_text(in_bar(pressure)) +
                                  " bar abs is not known; it is worked out from 0.00611213 to 220.64 bar abs.",
                              "Check the pressure and its unit.");
     }
@@ -67,7 +68,7 @@ Result<AbsolutePressure> vapour_pressure(Temperature air, Ratio relative_humidit
 {
     const double humidity = relative_humidity.value();
     if (!(humidity >= 0.0 && humidity <= 1.0)) {
-        return invalid_input("A relative humidity of " + number_text(100.0 * humidity) + "% cannot be.",
+        return invalid_input("A relative humidity of " + short_number_text(100.0 * humidity) + "% cannot be.",
                              "Enter a humidity from 0 to 100%.");
     }
     const Result<AbsolutePressure> saturated = saturation_pressure(air);
@@ -81,8 +82,8 @@ Result<Ratio> mixing_ratio(AbsolutePressure vapour, AbsolutePressure air)
 {
     const double steam = vapour.value(), all = air.value();
     if (!(steam >= 0.0 && steam < all && std::isfinite(all))) {
-        return invalid_input("Air of " + number_text(all / 100.0) + " mbar abs cannot hold steam of " +
-                                 number_text(steam / 100.0) + " mbar.",
+        return invalid_input("Air of " + short_number_text(all / 100.0) + " mbar abs cannot hold steam of " +
+                                 short_number_text(steam / 100.0) + " mbar.",
                              "Check the pressure, whether it is gauge or absolute, and the temperature.");
     }
     return Ratio(molar_mass_ratio * steam / (all - steam));
@@ -101,7 +102,8 @@ Result<Temperature> dew_point(Ratio mixing_ratio, AbsolutePressure air)
 {
     const double water = mixing_ratio.value();
     if (!(water > 0.0 && std::isfinite(water))) {
-        return invalid_input("Air with " + number_text(1000.0 * water) + " g water per kg has no dew point.",
+        return invalid_input("Air with " + short_number_text(1000.0 * water) +
+                                 " g water per kg has no dew point.",
                              "Check the humidity.");
     }
     return saturation_temperature(

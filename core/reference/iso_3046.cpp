@@ -28,21 +28,23 @@ std::optional<Problem> find_problem(const Iso3046Ambient& ambient, const Iso3046
 {
     if (!is_positive(ambient.barometer.value())) {
         return invalid_input("The barometer " + where + " is " +
-                                 number_text(ambient.barometer.value() / 100.0) +
+                                 short_number_text(ambient.barometer.value() / 100.0) +
                                  " mbar, which is not above 0.",
                              "Check the barometer and its unit.");
     }
     if (!is_positive(ambient.inlet_air.value())) {
-        return invalid_input("The inlet air " + where + " is " + number_text(ambient.inlet_air.value()) +
-                                 " K, which is not above absolute zero.",
+        return invalid_input("The inlet air " + where + " is " +
+                                 short_number_text(in_celsius(ambient.inlet_air)) +
+                                 " °C, which is not above absolute zero.",
                              "Check the inlet air temperature and its unit.");
     }
     if (exponents.s != 0.0 && !ambient.coolant) {
         return not_read("coolant temperature into the air cooler " + where);
     }
     if (exponents.s != 0.0 && !is_positive(ambient.coolant->value())) {
-        return invalid_input("The coolant " + where + " is " + number_text(ambient.coolant->value()) +
-                                 " K, which is not above absolute zero.",
+        return invalid_input("The coolant " + where + " is " +
+                                 short_number_text(in_celsius(*ambient.coolant)) +
+                                 " °C, which is not above absolute zero.",
                              "Check the coolant temperature and its unit.");
     }
     if (exponents.a != 0.0 && !ambient.water_vapour) {
@@ -50,11 +52,11 @@ std::optional<Problem> find_problem(const Iso3046Ambient& ambient, const Iso3046
     }
     if (exponents.a != 0.0 && !(ambient.water_vapour->value() >= 0.0 &&
                                 ambient.water_vapour->value() < ambient.barometer.value())) {
-        return invalid_input("The steam in the air " + where + " has " +
-                                 number_text(ambient.water_vapour->value() / 100.0) +
-                                 " mbar of the barometer's " +
-                                 number_text(ambient.barometer.value() / 100.0) + " mbar, which cannot be.",
-                             "Check humidity, air temperature and barometer.");
+        return invalid_input(
+            "The steam in the air " + where + " has " +
+                short_number_text(ambient.water_vapour->value() / 100.0) + " mbar of the barometer's " +
+                short_number_text(ambient.barometer.value() / 100.0) + " mbar, which cannot be.",
+            "Check humidity, air temperature and barometer.");
     }
     return std::nullopt;
 }
@@ -93,7 +95,7 @@ Result<Iso3046Adjustment> adjust_iso_3046(AspirationClass aspiration, const Iso3
         return *std::move(problem);
     }
     if (!(mechanical_efficiency > 0.0 && mechanical_efficiency <= 1.0)) {
-        return invalid_input("A mechanical efficiency of " + number_text(mechanical_efficiency) +
+        return invalid_input("A mechanical efficiency of " + short_number_text(mechanical_efficiency) +
                                  " is not above 0 and at most 1.",
                              "Enter it as a fraction, such as 0.9.");
     }
@@ -108,8 +110,8 @@ Result<Iso3046Adjustment> adjust_iso_3046(AspirationClass aspiration, const Iso3
     result.beta = result.k / result.alpha;
     if (!(result.k >= smallest_k && result.k <= largest_k && result.alpha > 0.0)) {
         return Problem{Problem::Kind::not_found,
-                       "The adjustment to ISO 3046-1 is not known: k would be " + number_text(result.k) +
-                           ", and it is good from 0.6 to 1.1 only.",
+                       "The adjustment to ISO 3046-1 is not known: k would be " +
+                           short_number_text(result.k) + ", and it is good from 0.6 to 1.1 only.",
                        "Check barometer and temperatures, or compare at ambients that are nearer."};
     }
     return result;

@@ -34,7 +34,7 @@ Result<LinearFactor> factor_of(const AmbientDifference& difference,
                                               difference.coolant.value_or(TemperatureDifference()).value());
     if (!(factor.factor > 0.0 && std::isfinite(factor.factor))) {
         return invalid_input(
-            "The correction factor for this reading would be " + number_text(factor.factor) +
+            "The correction factor for this reading would be " + short_number_text(factor.factor) +
                 ", which is not above 0.",
             "Check the engine's correction coefficients and the temperatures of air and coolant.");
     }
@@ -78,8 +78,8 @@ Result<Corrected<GaugePressure>> correct_linearly(GaugePressure measured, Absolu
 {
     const Result<Corrected<double>> corrected =
         correct_number(to_absolute(measured, barometer).value(),
-                       number_text(in_bar(measured)) + " bar gauge over a barometer of " +
-                           number_text(in_bar(barometer)) + " bar",
+                       short_number_text(in_bar(measured)) + " bar gauge over a barometer of " +
+                           short_number_text(in_bar(barometer)) + " bar",
                        difference, coefficients);
     if (!corrected) {
         return corrected.error();
@@ -94,7 +94,7 @@ Result<Corrected<AbsolutePressure>> correct_linearly(AbsolutePressure measured,
                                                      const CorrectionCoefficients& coefficients)
 {
     const Result<Corrected<double>> corrected = correct_number(
-        measured.value(), number_text(in_bar(measured)) + " bar abs", difference, coefficients);
+        measured.value(), short_number_text(in_bar(measured)) + " bar abs", difference, coefficients);
     if (!corrected) {
         return corrected.error();
     }
@@ -105,8 +105,8 @@ Result<Corrected<AbsolutePressure>> correct_linearly(AbsolutePressure measured,
 Result<Corrected<Temperature>> correct_linearly(Temperature measured, const AmbientDifference& difference,
                                                 const CorrectionCoefficients& coefficients)
 {
-    const Result<Corrected<double>> corrected =
-        correct_number(measured.value(), number_text(measured.value()) + " K", difference, coefficients);
+    const Result<Corrected<double>> corrected = correct_number(
+        measured.value(), short_number_text(in_celsius(measured)) + " °C", difference, coefficients);
     if (!corrected) {
         return corrected.error();
     }
@@ -119,7 +119,7 @@ Result<Corrected<SpecificConsumption>> correct_linearly(SpecificConsumption meas
                                                         const CorrectionCoefficients& coefficients)
 {
     const Result<Corrected<double>> corrected =
-        correct_number(measured.value(), number_text(in_grams_per_kilowatt_hour(measured)) + " g/kWh",
+        correct_number(measured.value(), short_number_text(in_grams_per_kilowatt_hour(measured)) + " g/kWh",
                        difference, coefficients);
     if (!corrected) {
         return corrected.error();
@@ -132,13 +132,13 @@ Result<Corrected<Frequency>> correct_turbocharger_speed(Frequency measured, Temp
                                                         Temperature reference_inlet_air)
 {
     if (!(measured.value() >= 0.0 && std::isfinite(measured.value()))) {
-        return cannot_be("A turbocharger speed of " + number_text(measured.value() * 60.0) +
+        return cannot_be("A turbocharger speed of " + short_number_text(measured.value() * 60.0) +
                          " r/min cannot be");
     }
     for (const Temperature& temperature : {inlet_air, reference_inlet_air}) {
         if (!(temperature.value() > 0.0 && std::isfinite(temperature.value()))) {
-            return cannot_be("The inlet air temperature of " + number_text(temperature.value()) +
-                             " K for the turbocharger speed is not above absolute zero");
+            return cannot_be("The inlet air temperature of " + short_number_text(in_celsius(temperature)) +
+                             " °C for the turbocharger speed is not above absolute zero");
         }
     }
     const double ratio = reference_inlet_air.value() / inlet_air.value();

@@ -42,23 +42,27 @@ private:
     /// Takes one character (or blank) and says how many bytes it had.
     std::size_t take(std::string_view text, std::size_t position)
     {
-        if (const std::size_t blank = blank_length(text, position)) {
-            return blank;
-        }
         const char letter = text[position];
-        if (letter == '*' || letter == '^' || letter == '.') { // kN*m, cm^2, "kN.m", "deg."
+        if (static_cast<unsigned char>(letter) < 0x80) {
+            const bool dropped = letter == '*' || letter == '^' ||
+                                 letter == '.' || // kN*m, cm^2, "kN.m", "deg."
+                                 blank_length(text.substr(0, position + 1), position) != 0;
+            if (!dropped) {
+                append({&letter, 1});
+            }
             return 1;
         }
-        if (static_cast<unsigned char>(letter) >= 0x80) {
-            for (const Replacement& replacement : replacements) {
-                if (text.substr(position, replacement.written.size()) == replacement.written) {
-                    append(replacement.plain);
-                    return replacement.written.size();
-                }
+        for (const Replacement& replacement : replacements) {
+            if (text.substr(position, replacement.written.size()) == replacement.written) {
+                append(replacement.plain);
+                return replacement.written.size();
             }
         }
-        append({&letter, 1});
-        return 1;
+        const std::size_t blank = blank_length(text, position);
+        if (blank == 0) {
+            append({&letter, 1}); // kept, so that the text stays unknown
+        }
+        return blank == 0 ? 1 : blank;
     }
 
     void append(std::string_view plain)

@@ -137,10 +137,12 @@ constexpr char lower(char letter)
     return letter >= 'A' && letter <= 'Z' ? static_cast<char>(letter + 32) : letter;
 }
 
+/// Empty is all zeros: g++ 12 writes other default values of a constant array's untouched elements as zeros.
 struct Spelling
 {
     std::string_view text;
-    UnitId id = unit_list::no_unit;
+    UnitId id = 0;
+    bool used = false;
 };
 
 /// FNV-1a over the letters, in lower case where case is not to count.
@@ -168,37 +170,32 @@ public:
     {
         for (UnitId id = 0; id < unit_count; ++id) {
             const Unit& entry = table[id];
-            add({entry.symbol, id});
+            add({entry.symbol, id, true});
             for (const std::string_view spelling : entry.spellings) {
-                add({spelling, id});
+                add({spelling, id, true});
             }
         }
     }
 
-    constexpr const Spelling* find(std::string_view text) const
-    {
-        for (std::uint32_t slot = hash_of<any_case>(text) % slots;; slot = (slot + 1) % slots) {
-            if (slots_[slot].id == unit_list::no_unit) {
-                return nullptr;
-            }
-            if (alike<any_case>(slots_[slot].text, text)) {
-                return &slots_[slot];
-            }
-        }
-    }
+    /// The spelling, or an unused one where it is not in the table.
+    constexpr const Spelling& find(std::string_view text) const { return slots_[slot_of(text)]; }
 
 private:
+    /// Where the text is, or where it would go.
+    constexpr std::uint32_t slot_of(std::string_view text) const
+    {
+        std::uint32_t slot = hash_of<any_case>(text) % slots;
+        while (slots_[slot].used && !alike<any_case>(slots_[slot].text, text)) {
+            slot = (slot + 1) % slots;
+        }
+        return slot;
+    }
+
     constexpr void add(Spelling spelling)
     {
-        if (const Spelling* const same = find(spelling.text)) {
-            if (same->id != spelling.id) {
-                throw std::logic_error("one spelling for two units"); // does not compile
-            }
-            return;
-        }
-        std::uint32_t slot = hash_of<any_case>(spelling.text) % slots;
-        while (slots_[slot].id != unit_list::no_unit) {
-            slot = (slot + 1) % slots;
+        const std::uint32_t slot = slot_of(spelling.text);
+        if (slots_[slot].used && slots_[slot].id != spelling.id) {
+            throw std::logic_error("one spelling for two units"); // does not compile
         }
         slots_[slot] = spelling;
     }
@@ -301,20 +298,20 @@ namespace unit_list {
 
 UnitId find_exact(std::string_view spelling)
 {
-    const Spelling* const found = exact_spellings.find(spelling);
-    return found != nullptr ? found->id : no_unit;
+    const Spelling& found = exact_spellings.find(spelling);
+    return found.used ? found.id : no_unit;
 }
 
 UnitId find_other_case(std::string_view spelling)
 {
-    const Spelling* const found = spellings_in_any_case.find(spelling);
-    return found != nullptr && other_case_is_safe(spelling, found->text) ? found->id : no_unit;
+    const Spelling& found = spellings_in_any_case.find(spelling);
+    return found.used && other_case_is_safe(spelling, found.text) ? found.id : no_unit;
 }
 
 UnitId find_any_case(std::string_view spelling)
 {
-    const Spelling* const found = spellings_in_any_case.find(spelling);
-    return found != nullptr ? found->id : no_unit;
+    const Spelling& found = spellings_in_any_case.find(spelling);
+    return found.used ? found.id : no_unit;
 }
 
 UnitId find_nearest(std::string_view spelling)
