@@ -52,7 +52,7 @@ double hours_since_overhaul(const EngineMoment& moment, int cylinder)
     const int engine = moment.engine->number;
     // Before the first reading: opened one after the other in the years before (invented).
     double since = running_hours(engine, today) - running_hours(engine, first_day(0)) +
-                   (engine == 0 ? 1900.0 : 1300.0) * (1.0 + 0.7 * cylinder);
+                   (engine == 0 ? 1900.0 : 800.0) * (1.0 + 0.7 * cylinder);
     for (const Work& work : moment.scenario->work) {
         const bool opened = work.engine == engine && work.kind == "overhaul" &&
                             (work.cylinder == cylinder || work.cylinder == 0);
