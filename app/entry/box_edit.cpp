@@ -1,0 +1,193 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/entry/box_edit.h"
+
+#include "app/desk/theme.h"
+#include "app/entry/log_sheet_model.h"
+
+#include <QKeyEvent>
+#include <QPainter>
+
+namespace evenstroke {
+namespace {
+
+constexpr int mark_width = 14, side_room = 5;
+
+void paint_heading(QPainter& painter, const QRect& area, const QModelIndex& index)
+{
+    painter.setFont(type(TypeSize::label));
+    painter.setPen(theme().muted);
+    painter.drawText(area.adjusted(0, 0, -side_room, -4), Qt::AlignRight | Qt::AlignBottom,
+                     index.data().toString());
+    painter.setPen(QPen(theme().muted, 1));
+    painter.drawLine(area.bottomLeft(), area.bottomRight());
+}
+
+void paint_mark(QPainter& painter, const QRect& area, BoxMark mark)
+{
+    const QRectF place(area.left() + 2, area.center().y() - 5, 11, 11);
+    if (mark == BoxMark::asked)
+        draw_mark(painter, place, Level::ask);
+    else if (mark == BoxMark::impossible || mark == BoxMark::unreadable)
+        draw_mark(painter, place, Level::act);
+    else if (mark == BoxMark::confirmed) {
+        painter.setFont(type(TypeSize::label));
+        painter.setPen(theme().muted);
+        painter.drawText(place, Qt::AlignCenter, QStringLiteral("✓"));
+    }
+}
+
+/// The row and the column a user of keys may be typing in must be seen without hunting for the frame.
+QColor background_of(const QStyleOptionViewItem& option, bool lent)
+{
+    if (option.state & QStyle::State_Selected)
+        return theme().band;
+    return lent ? theme().page : theme().sheet;
+}
+
+} // namespace
+
+BoxEdit::BoxEdit(QWidget* parent) : QLineEdit(parent)
+{
+    setFrame(false);
+    setAttribute(Qt::WA_InputMethodEnabled, true);
+}
+
+void BoxEdit::begin_typing(const QString& first)
+{
+    typing_ = true;
+    setText(first);
+    setCursorPosition(static_cast<int>(first.size()));
+    emit textEdited(first);
+}
+
+bool BoxEdit::event(QEvent* event)
+{
+    // Tab would move the focus before keyPressEvent sees it.
+    if (event->type() == QEvent::KeyPress) {
+        auto* key = static_cast<QKeyEvent*>(event);
+        if (key->key() == Qt::Key_Tab || key->key() == Qt::Key_Backtab) {
+            keyPressEvent(key);
+            return true;
+        }
+    }
+    return QLineEdit::event(event);
+}
+
+void BoxEdit::keyPressEvent(QKeyEvent* event)
+{
+    switch (event->key()) {
+    case Qt::Key_Escape:
+        emit give_up();
+        return;
+    case Qt::Key_Return:
+    case Qt::Key_Enter:
+    case Qt::Key_Tab:
+    case Qt::Key_Backtab:
+    case Qt::Key_Up:
+    case Qt::Key_Down:
+    case Qt::Key_PageUp:
+    case Qt::Key_PageDown:
+        emit leave(event->key(), event->modifiers());
+        return;
+    case Qt::Key_Left:
+    case Qt::Key_Right:
+        if (typing_ && event->modifiers() == Qt::NoModifier) {
+            emit leave(event->key(), event->modifiers());
+            return;
+        }
+        break;
+    case Qt::Key_F2:
+        typing_ = false;
+        return;
+    default:
+        break;
+    }
+    QLineEdit::keyPressEvent(event);
+}
+
+void BoxDelegate::paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const
+{
+    painter->save();
+    if (index.data(LogSheetModel::heading_role).toBool())
+        paint_heading(*painter, option.rect, index);
+    else if (index.flags() & Qt::ItemIsEditable)
+        paint_box(*painter, option, index);
+    painter->restore();
+}
+
+void BoxDelegate::paint_box(QPainter& painter, const QStyleOptionViewItem& option,
+                            const QModelIndex& index) const
+{
+    const bool lent = index.data(LogSheetModel::lent_role).toBool();
+    const bool missing = index.data(LogSheetModel::missing_role).toBool();
+    const auto mark = static_cast<BoxMark>(index.data(LogSheetModel::mark_role).toInt());
+    const QRect box = option.rect.adjusted(1, 1, -1, -1);
+    painter.fillRect(box, background_of(option, lent));
+    painter.setPen(QPen(theme().rule, 1));
+    painter.drawRect(box.adjusted(0, 0, -1, -1));
+    if (option.state & QStyle::State_HasFocus) {
+        painter.setPen(QPen(theme().line, 2));
+        painter.drawRect(box.adjusted(1, 1, -1, -1));
+    }
+    paint_mark(painter, box, mark);
+    painter.setFont(type(missing ? TypeSize::label : TypeSize::body));
+    painter.setPen(mark == BoxMark::unreadable ? theme().act : missing || lent ? theme().muted : theme().ink);
+    const QRect text_area = box.adjusted(mark == BoxMark::none ? side_room : mark_width, 0, -side_room, 0);
+    const bool words = index.data(LogSheetModel::words_role).toBool();
+    const QString text = painter.fontMetrics().elidedText(
+        index.data().toString(), words ? Qt::ElideRight : Qt::ElideLeft, text_area.width());
+    painter.drawText(text_area, (words ? Qt::AlignLeft : Qt::AlignRight) | Qt::AlignVCenter, text);
+}
+
+QSize BoxDelegate::sizeHint(const QStyleOptionViewItem&, const QModelIndex&) const
+{
+    return {56, 24};
+}
+
+QWidget* BoxDelegate::createEditor(QWidget* parent, const QStyleOptionViewItem&,
+                                   const QModelIndex& index) const
+{
+    auto* editor = new BoxEdit(parent);
+    editor->index = index;
+    editor->setFont(type(TypeSize::body));
+    const bool words = index.data(LogSheetModel::words_role).toBool();
+    editor->setAlignment((words ? Qt::AlignLeft : Qt::AlignRight) | Qt::AlignVCenter);
+    editor->setAccessibleName(index.data(Qt::AccessibleTextRole).toString());
+    emit editor_made(editor);
+    return editor;
+}
+
+void BoxDelegate::setEditorData(QWidget* editor, const QModelIndex& index) const
+{
+    auto* edit = qobject_cast<BoxEdit*>(editor);
+    // Also called whenever the model changes: what is being typed must not be written over.
+    if (!edit || edit->isModified() || !edit->text().isEmpty())
+        return;
+    const bool reason = index.data(LogSheetModel::missing_role).toBool();
+    edit->setText(reason ? QString() : index.data(Qt::EditRole).toString());
+    edit->selectAll();
+}
+
+void BoxDelegate::setModelData(QWidget* editor, QAbstractItemModel* model, const QModelIndex& index) const
+{
+    // A reason is shown as words but edited as an empty box: leaving it untouched keeps it.
+    const auto* edit = qobject_cast<BoxEdit*>(editor);
+    if (!edit || (edit->text().isEmpty() && index.data(LogSheetModel::missing_role).toBool()))
+        return;
+    model->setData(index, edit->text());
+}
+
+void BoxDelegate::updateEditorGeometry(QWidget* editor, const QStyleOptionViewItem& option,
+                                       const QModelIndex&) const
+{
+    editor->setGeometry(option.rect.adjusted(0, 0, 0, 0));
+}
+
+bool BoxDelegate::eventFilter(QObject* object, QEvent* event)
+{
+    if (event->type() == QEvent::KeyPress || event->type() == QEvent::ShortcutOverride)
+        return false; // BoxEdit knows its keys; Enter and Tab go where the walk goes
+    return QStyledItemDelegate::eventFilter(object, event);
+}
+
+} // namespace evenstroke
