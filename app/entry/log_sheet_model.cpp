@@ -63,6 +63,21 @@ bool LogSheetModel::unfolded(const LogRow& row) const
     });
 }
 
+std::vector<LogSection> LogSheetModel::shown_sections() const
+{
+    std::vector<LogSection> shown;
+    for (int r = 0; r < rowCount(); ++r) {
+        if (const LogRow* in_row = row(r)) {
+            shown.back().rows.push_back(*in_row);
+            continue;
+        }
+        LogSection section = sheet_.sections()[static_cast<std::size_t>(section_of(r))];
+        section.rows.clear();
+        shown.push_back(std::move(section));
+    }
+    return shown;
+}
+
 void LogSheetModel::show_all(bool all)
 {
     if (all == all_rows_)

@@ -58,6 +58,8 @@ public:
     bool shows_all() const { return all_rows_; }
     void show_all(bool all);
     int folded_rows() const { return folded_; }
+    /// The sections with the rows that are not folded away.
+    std::vector<LogSection> shown_sections() const;
 
     void set_marks(std::map<LogBox, BoxMark> marks);
     /// Texts that could not be read and wait to be put right.

@@ -253,7 +253,7 @@ bool LogSheetView::sheet_key(QKeyEvent* event)
 /// first.
 bool LogSheetView::leave_for_key(int key)
 {
-    if (key == Qt::Key_F6 || key == Qt::Key_F7 || key == Qt::Key_F8) {
+    if (key == Qt::Key_F5 || key == Qt::Key_F7 || key == Qt::Key_F9) {
         if (const auto box = model_->box(editor_->index))
             model_->forget_unreadable(*box);
         close_editor();
@@ -278,13 +278,13 @@ void LogSheetView::keyPressEvent(QKeyEvent* event)
     case Qt::Key_F4:
         emit confirm_wanted();
         return;
-    case Qt::Key_F6:
+    case Qt::Key_F5:
         set_reason(MissingReason::not_read);
         return;
     case Qt::Key_F7:
         set_reason(MissingReason::not_fitted);
         return;
-    case Qt::Key_F8:
+    case Qt::Key_F9:
         set_reason(MissingReason::out_of_order);
         return;
     case Qt::Key_Delete:

@@ -1,0 +1,267 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/entry/blank_sheet.h"
+
+#include "app/desk/number_text.h"
+#include "app/desk/theme.h"
+#include "core/explanation/cautions.h"
+
+#include <QCoreApplication>
+#include <QPainter>
+#include <QPrinter>
+
+#include <algorithm>
+
+namespace evenstroke {
+namespace {
+
+QString tr_(const char* text)
+{
+    return QCoreApplication::translate("evenstroke::blank_sheet", text);
+}
+
+// All lengths in points (1/72 inch).
+constexpr double margin = 34, label_width = 158, unit_width = 44, row_height = 17, heading_height = 22;
+constexpr double widest_box = 62, narrowest_box = 26;
+const QColor ink(Qt::black), grey(0x70, 0x70, 0x70), light(0xB0, 0xB0, 0xB0);
+
+QFont face(int points, bool bold = false)
+{
+    QFont font(QStringLiteral("DejaVu Sans"));
+    font.setPixelSize(points); // the painter counts in points
+    font.setBold(bold);
+    return font;
+}
+
+/// What the walk takes people to. Fires and mist are alarm matters, but they must be known at the engine.
+std::vector<const Caution*> cautions_of_the_walk(bool two_stroke)
+{
+    std::vector<const Caution*> found;
+    for (const char* name : {"indicator_cocks", "high_pressure_fuel", "hot_surfaces", "overload",
+                             "starting_air", "scavenge_fire", "crankcase"}) {
+        const Caution* caution = find_caution(name);
+        if (caution && (two_stroke || caution->name != "scavenge_fire"))
+            found.push_back(caution);
+    }
+    return found;
+}
+
+/// Lays the sheet out from top to bottom; measuring and drawing are the same pass, so that they cannot
+/// differ.
+class SheetPrinter
+{
+public:
+    SheetPrinter(const BlankSheet& sheet, QPrinter* printer, QPainter& painter, QSizeF page, int pages)
+        : sheet_(sheet), printer_(printer), painter_(painter), page_(page), pages_(pages)
+    {
+    }
+    int run();
+
+private:
+    bool draws() const { return printer_ != nullptr; }
+    double bottom() const { return page_.height() - margin - 12; }
+    void begin_page();
+    void make_room(double height, const LogSection* continued = nullptr);
+    void cautions();
+    void section(const LogSection& section, bool again);
+    void row(const LogSection& section, const LogRow& row);
+    void boxes(const LogRow& row, std::size_t from, std::size_t count, double width);
+    void box(const LogBox& box, const QRectF& area);
+    void text(const QRectF& area, int flags, const QString& words, const QFont& font, const QColor& colour);
+    double box_width(const LogSection& section) const;
+    std::size_t boxes_a_line(const LogSection& section) const;
+    double room() const { return page_.width() - 2 * margin - label_width - unit_width; }
+
+    const BlankSheet& sheet_;
+    QPrinter* printer_;
+    QPainter& painter_;
+    QSizeF page_;
+    int pages_, page_number_ = 0;
+    double y_ = 0.0;
+};
+
+void SheetPrinter::text(const QRectF& area, int flags, const QString& words, const QFont& font,
+                        const QColor& colour)
+{
+    if (!draws())
+        return;
+    painter_.setFont(font);
+    painter_.setPen(colour);
+    painter_.drawText(area, flags, words);
+}
+
+int SheetPrinter::run()
+{
+    begin_page();
+    cautions();
+    for (const LogSection& each : sheet_.rows) {
+        make_room(heading_height + 2 * row_height);
+        section(each, false);
+        for (const LogRow& each_row : each.rows) {
+            const auto lines = (each_row.boxes.size() + boxes_a_line(each) - 1) / boxes_a_line(each);
+            make_room(row_height * static_cast<double>(lines), &each);
+            row(each, each_row);
+        }
+        y_ += 6;
+    }
+    return page_number_;
+}
+
+void SheetPrinter::begin_page()
+{
+    if (draws() && page_number_ > 0)
+        printer_->newPage();
+    ++page_number_;
+    y_ = margin;
+    const double width = page_.width() - 2 * margin;
+    const QString title = tr_("Log sheet: %1 of %2").arg(to_qstring(sheet_.engine->name), sheet_.vessel);
+    text({margin, y_, width, 18}, Qt::AlignLeft | Qt::AlignVCenter, title, face(13, true), ink);
+    y_ += 20;
+    text({margin, y_, width, 18}, Qt::AlignLeft | Qt::AlignBottom,
+         tr_("Date ____________   Ship's time ________   UTC %1 ________   Taken by "
+             "______________________________")
+             .arg(QChar(0x00B1)),
+         face(9), ink);
+    QString foot = tr_("Page %1 of %2").arg(page_number_).arg(pages_);
+    if (sheet_.last)
+        foot += QStringLiteral("  ·  ") + tr_("small grey: %1").arg(day_text(sheet_.last->taken_at.utc));
+    foot +=
+        QStringLiteral("  ·  ") + tr_("leave a box empty rather than guess; write – where nothing is fitted");
+    text({margin, page_.height() - margin - 8, width, 12}, Qt::AlignLeft | Qt::AlignVCenter, foot, face(7),
+         grey);
+    y_ += 24;
+}
+
+void SheetPrinter::make_room(double height, const LogSection* continued)
+{
+    if (y_ + height <= bottom())
+        return;
+    begin_page();
+    if (continued)
+        section(*continued, true);
+}
+
+void SheetPrinter::cautions()
+{
+    const double width = page_.width() - 2 * margin;
+    const double top = y_;
+    y_ += 4;
+    text({margin + 6, y_, width - 12, 12}, Qt::AlignLeft | Qt::AlignVCenter, tr_("Before you go"),
+         face(9, true), ink);
+    y_ += 13;
+    const QFontMetricsF metrics(face(7));
+    const auto paragraph = [&](const QString& words) {
+        const QRectF area(margin + 6, y_, width - 12, 200);
+        const double height = metrics.boundingRect(area, Qt::TextWordWrap, words).height();
+        text({area.left(), area.top(), area.width(), height + 2}, Qt::TextWordWrap, words, face(7), ink);
+        y_ += height + 2;
+    };
+    const auto all = cautions_of_the_walk(sheet_.engine->two_stroke());
+    for (const Caution* caution : all)
+        paragraph(to_qstring(caution->title) + QStringLiteral(". ") + to_qstring(caution->short_text));
+    if (!all.empty())
+        paragraph(to_qstring(all.front()->authority));
+    y_ += 3;
+    if (draws()) {
+        painter_.setPen(QPen(ink, 1));
+        painter_.setBrush(Qt::NoBrush);
+        painter_.drawRect(QRectF(margin, top, width, y_ - top));
+    }
+    y_ += 8;
+}
+
+std::size_t SheetPrinter::boxes_a_line(const LogSection& section) const
+{
+    const auto fitting = static_cast<std::size_t>(room() / narrowest_box);
+    return std::max<std::size_t>(1, std::min(section.columns.size(), fitting));
+}
+
+double SheetPrinter::box_width(const LogSection& section) const
+{
+    return std::min(widest_box, room() / static_cast<double>(boxes_a_line(section)));
+}
+
+void SheetPrinter::section(const LogSection& section, bool again)
+{
+    const double width = page_.width() - 2 * margin;
+    const QString title = to_qstring(section.title);
+    text({margin, y_, width, heading_height - 4}, Qt::AlignLeft | Qt::AlignBottom,
+         again ? tr_("%1, continued").arg(title) : title, face(10, true), ink);
+    const double each = box_width(section);
+    double x = margin + label_width + unit_width;
+    if (section.columns.size() <= boxes_a_line(section))
+        for (const std::string& column : section.columns) {
+            text({x, y_, each, heading_height - 4}, Qt::AlignHCenter | Qt::AlignBottom, to_qstring(column),
+                 face(8), ink);
+            x += each;
+        }
+    y_ += heading_height - 2;
+    if (draws()) {
+        painter_.setPen(QPen(ink, 0.8));
+        painter_.drawLine(QPointF(margin, y_), QPointF(margin + width, y_));
+    }
+    y_ += 2;
+}
+
+void SheetPrinter::row(const LogSection& section, const LogRow& row)
+{
+    const Quantity& meant = quantity(row.quantity);
+    QString label = to_qstring(meant.title);
+    if (row.shared)
+        label += QStringLiteral(" *");
+    text({margin, y_, label_width - 4, row_height}, Qt::AlignLeft | Qt::AlignVCenter, label, face(8), ink);
+    text({margin + label_width, y_, unit_width - 5, row_height}, Qt::AlignRight | Qt::AlignVCenter,
+         to_qstring(row_unit_text(row.quantity, sheet_.row_unit(row.quantity))), face(7), grey);
+    if (row.boxes.size() == 1) {
+        const double wide =
+            meant.type == ValueType::words ? room() : widest_box * (meant.type == ValueType::choice ? 2 : 1);
+        boxes(row, 0, 1, wide);
+        y_ += row_height;
+        return;
+    }
+    const std::size_t a_line = boxes_a_line(section);
+    for (std::size_t from = 0; from < row.boxes.size(); from += a_line) {
+        boxes(row, from, std::min(a_line, row.boxes.size() - from), box_width(section));
+        y_ += row_height;
+    }
+}
+
+void SheetPrinter::boxes(const LogRow& row, std::size_t from, std::size_t count, double width)
+{
+    double x = margin + label_width + unit_width;
+    for (std::size_t i = from; i < from + count; ++i) {
+        box(row.boxes[i], {x, y_, width, row_height});
+        x += width;
+    }
+}
+
+void SheetPrinter::box(const LogBox& box, const QRectF& area)
+{
+    if (!draws())
+        return;
+    painter_.setPen(QPen(ink, 0.5));
+    painter_.setBrush(Qt::NoBrush);
+    painter_.drawRect(area.adjusted(1, 1, -1, -1));
+    const Value* before =
+        sheet_.last && box.phase == Phase::reading ? sheet_.last->find(box.quantity, box.place) : nullptr;
+    if (!before || quantity(box.quantity).type != ValueType::number || before->missing != MissingReason::none)
+        return;
+    text(area.adjusted(3, 2, -3, -2), Qt::AlignLeft | Qt::AlignBottom,
+         to_qstring(box_text(*before, sheet_.row_unit(box.quantity))), face(6), grey);
+}
+
+} // namespace
+
+int print_blank_sheet(const BlankSheet& sheet, QPrinter& printer)
+{
+    const double dots_a_point = printer.resolution() / 72.0;
+    const QRectF paper = printer.paperRect(QPrinter::Point), printable = printer.pageRect(QPrinter::Point);
+    QPainter painter(&printer);
+    if (!painter.isActive())
+        return 0;
+    painter.scale(dots_a_point, dots_a_point);
+    painter.translate(-printable.topLeft()); // counted from the paper's corner, so that the margins are ours
+    const int pages = SheetPrinter(sheet, nullptr, painter, paper.size(), 0).run();
+    return SheetPrinter(sheet, &printer, painter, paper.size(), pages).run();
+}
+
+} // namespace evenstroke

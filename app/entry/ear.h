@@ -1,0 +1,50 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "app/entry/entry_opinions.h"
+
+#include <QWidget>
+
+#include <memory>
+
+namespace Ui {
+class Ear;
+}
+
+namespace evenstroke {
+
+/// Beside the log sheet: for the box in hand last time's value, the expected one, the usual band with the
+/// typed value on it, and one sentence where it doubts. It proposes; the engineer decides.
+class Ear : public QWidget
+{
+    Q_OBJECT
+
+public:
+    explicit Ear(QWidget* parent = nullptr);
+    ~Ear() override;
+
+    /// What is known of a box. `typing` is the text while it is being written, before it is taken.
+    void show_box(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
+                  const std::optional<QString>& typing = {});
+    void show_nothing();
+    /// The reading as a whole: steadiness, how many required boxes are answered.
+    void show_whole(const EntrySheet& sheet, const EntryOpinions& opinions);
+
+    /// What F3 would type; empty where nothing is offered.
+    const QString& suggestion() const { return suggestion_; }
+    QString sentence() const;
+
+signals:
+    void take_suggestion();
+    void confirm();
+
+private:
+    void show_numbers(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
+                      std::optional<double> typed);
+    void show_doubt(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions);
+
+    std::unique_ptr<Ui::Ear> ui_;
+    QString suggestion_;
+};
+
+} // namespace evenstroke

@@ -1,0 +1,98 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "app/desk/page.h"
+#include "app/entry/block_text.h"
+#include "app/entry/entry_opinions.h"
+#include "app/entry/entry_session.h"
+#include "app/entry/log_sheet_model.h"
+#include "app/entry/walk.h"
+
+#include <QTimer>
+
+#include <memory>
+
+class QMenu;
+
+namespace Ui {
+class EntryPage;
+}
+
+namespace evenstroke {
+
+class LogSheetView;
+class Ear;
+class NoteLines;
+
+/// Where a reading is written down: the log sheet in walking order with the ear beside it.
+class EntryPage : public Page
+{
+    Q_OBJECT
+
+public:
+    explicit EntryPage(Workplace& workplace, QWidget* parent = nullptr);
+    ~EntryPage() override;
+
+    QString name() const override { return QStringLiteral("enter"); }
+    QString title() const override { return tr("Enter"); }
+    QString sentence() const override;
+    void refresh() override;
+    QString foot_text() const override;
+    QString draft_text() const override;
+    bool takes_letters() const override;
+    QWidget* first_focus() override;
+    bool may_leave() override;
+    bool can_print() const override;
+    void print(QPrinter& printer) override; ///< the blank sheet
+    void copy() override;
+
+    EntrySession& session() { return session_; }
+    LogSheetModel& model() { return model_; }
+    LogSheetView& view();
+    Ear& ear();
+    const NoteLines& notes() const;
+    /// What the core says of the sheet, asked now instead of a moment later.
+    const EntryOpinions& judge_now();
+
+    void correct(const QString& reading_id);
+    void close_reading();
+    void take_suggestion();
+    void confirm_boxes();
+    void take_paste_that_can_be_read();
+    void copy_all() const;
+    void set_walk_order(WalkOrder order);
+    bool save_blank_sheet(const QString& path);
+    void set_time(const QString& date, const QString& clock, const QString& offset);
+
+protected:
+    void hideEvent(QHideEvent* event) override;
+
+private:
+    void connect_sheet();
+    void connect_actions();
+    void show_state();
+    void show_head();
+    void show_box();
+    void show_notes();
+    void show_words();
+    void show_closed();
+    void read_time_fields();
+    void read_signature();
+    void choose_unit(int row);
+    void fill_readings_menu(QMenu& menu);
+    void fill_layout_menu(QMenu& menu);
+    void ask_blank_sheet(QMenu& menu);
+    void recall_walk_order();
+    void go_to_unreadable();
+
+    std::unique_ptr<Ui::EntryPage> ui_;
+    EntrySession session_;
+    LogSheetModel model_;
+    EntryOpinions opinions_;
+    QTimer judge_soon_;
+    std::optional<PastePlan> paste_plan_;
+    std::optional<Problem> time_problem_, close_problem_;
+    QString shown_history_;
+};
+
+} // namespace evenstroke
