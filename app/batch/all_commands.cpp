@@ -1,0 +1,40 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/batch/command.h"
+#include "app/batch/history_commands.h"
+#include "app/batch/judging_commands.h"
+#include "app/batch/report_command.h"
+
+namespace evenstroke::batch {
+
+const std::vector<Command>& all_commands()
+{
+    static const Option history{"history", "H", "the history file", true};
+    static const Option vessel{"vessel", "V", "only this vessel"};
+    static const Option engine{"engine", "E", "only this engine"};
+    static const Option format{"format", "csv|json", "how rows are written; csv where nothing is said"};
+    static const std::vector<Command> commands = {
+        {"take", "takes folders of engines, ships and fleets into a history; made where there is none",
+         "FOLDER...",
+         {history, {"keep-good", nullptr, "take the good rows of files that hold bad ones"}},
+         run_take},
+        {"evaluate", "every value: typed, corrected, expected, deviation, apart, uncertainty",
+         nullptr,
+         {history, vessel, engine, {"reading", "R", "only this reading"},
+          {"derived", nullptr, "computed quantities too"}, format},
+         run_evaluate},
+        {"flags", "a row each time a flag or a question starts", nullptr, {history, vessel, engine, format}, run_flags},
+        {"doubts", "what looks mistyped", nullptr, {history, vessel, engine, format}, run_doubts},
+        {"report", "the survey report of one engine as PDF",
+         nullptr,
+         {history, {"engine", "E", "the engine", true}, vessel, {"from", "D", "first day, 2026-01-31", true},
+          {"to", "D", "last day", true}, {"out", "FILE.pdf", "the file to write", true},
+          {"date", "D", "date of the report; the last day where nothing is said"}},
+         run_report},
+        {"verify", "checks file and audit chain", nullptr, {history}, run_verify},
+        {"backup", "writes a whole copy", nullptr, {history, {"to", "FILE", "the copy", true}}, run_backup},
+        {"sample", "writes the invented sample vessel's files", nullptr, {{"out", "FOLDER", "where to", true}}, run_sample},
+    };
+    return commands;
+}
+
+} // namespace evenstroke::batch

@@ -1,0 +1,144 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/batch/history_commands.h"
+
+#include "app/batch/engines.h"
+#include "app/batch/long_work.h"
+#include "sample_vessel/sample_vessel.h"
+#include "storage/audit.h"
+#include "storage/backup.h"
+#include "storage/take_in.h"
+
+#include <QDir>
+#include <QFile>
+#include <QSaveFile>
+
+namespace evenstroke::batch {
+namespace {
+
+void print_folder(const storage::FolderReport& folder, Streams& streams)
+{
+    const QString name = QString::fromStdString(folder.folder);
+    const QString who = QString::fromStdString(
+        folder.vessel_name + (folder.engine_name.empty() ? "" : ", " + folder.engine_name));
+    streams.out << name << ": ";
+    if (!folder.taken)
+        streams.out << "refused, nothing of it was taken; " << folder.values.fresh + folder.values.same
+                    << " rows were good, " << folder.values.refused << " not";
+    else
+        streams.out << who << ": " << folder.values.fresh << " values new, " << folder.values.same << " known, "
+                    << folder.values.refused << " left out; " << folder.events.fresh << " events new, "
+                    << folder.events.same << " known, " << folder.events.refused << " left out";
+    streams.out << "\n";
+    for (const storage::RefusedRow& row : folder.refused)
+        streams.err << QString::fromStdString(row.text()) << "\n";
+    for (const std::string& remark : folder.remarks)
+        streams.err << name << ": " << QString::fromStdString(remark) << "\n";
+}
+
+/// Writes one file of the sample vessel; leaves an equal one as it is, refuses to write over another.
+Result<bool> write_sample_file(const QDir& folder, const sample::SampleFile& file)
+{
+    const QString path = folder.filePath(QString::fromStdString(file.relative_path));
+    const QByteArray content = QByteArray::fromStdString(file.content);
+    QFile existing(path);
+    if (existing.exists()) {
+        if (existing.open(QIODevice::ReadOnly) && existing.readAll() == content)
+            return false;
+        return Problem{Problem::Kind::invalid_input, path.toStdString() + " is there already with other content.",
+                       "Name an empty folder, or one that does not exist yet."};
+    }
+    QSaveFile out(path);
+    if (!QDir().mkpath(QFileInfo(path).path()) || !out.open(QIODevice::WriteOnly) ||
+        out.write(content) != content.size() || !out.commit())
+        return Problem{Problem::Kind::storage, path.toStdString() + " could not be written: " +
+                                                   out.errorString().toStdString() + ".",
+                       "Check that the disk has room and the folder may be written to."};
+    return true;
+}
+
+} // namespace
+
+int run_take(const QCommandLineParser& parser, Streams& streams)
+{
+    const QStringList folders = parser.positionalArguments();
+    if (folders.isEmpty()) {
+        streams.err << "Name at least one folder to take in.\n";
+        return wrong_use;
+    }
+    auto history = storage::History::open_or_create(parser.value(QStringLiteral("history")));
+    if (!history.has_value())
+        return refuse(streams, history.error());
+    storage::TakeOptions options;
+    options.keep_good = parser.isSet(QStringLiteral("keep-good"));
+    options.progress = progress_line(streams, QStringLiteral("taking in"));
+    const auto report = storage::take(*history.value(), folders, options);
+    if (!report.has_value())
+        return refuse(streams, report.error());
+    for (const storage::FolderReport& folder : report.value().folders)
+        print_folder(folder, streams);
+    for (const std::string& file : report.value().ignored)
+        streams.err << QString::fromStdString(file) << ": not a file of this program, left alone\n";
+    if (report.value().cancelled) {
+        streams.err << "Stopped. The history is as it was.\n";
+        return data_refused;
+    }
+    if (!report.value().anything_refused())
+        return done;
+    if (options.keep_good) {
+        streams.err << "Rows were left out, as --keep-good says; they are named above.\n";
+        for (const storage::FolderReport& folder : report.value().folders)
+            if (!folder.taken)
+                return data_refused;
+        return done;
+    }
+    streams.err << "What was refused is named above. Put it right and take it in again, or use --keep-good to take the "
+                   "good rows only.\n";
+    return data_refused;
+}
+
+int run_verify(const QCommandLineParser& parser, Streams& streams)
+{
+    auto history = open_history(parser);
+    if (!history.has_value())
+        return refuse(streams, history.error());
+    const auto findings = storage::verify(*history.value(), progress_line(streams, QStringLiteral("verifying")));
+    if (!findings.has_value())
+        return refuse(streams, findings.error());
+    const storage::AuditFindings& found = findings.value();
+    for (const std::string& sentence : found.sentences)
+        streams.out << QString::fromStdString(sentence) << "\n";
+    streams.out << (found.sound() ? "sound" : "altered") << ": " << found.entries << " audit entries, " << found.readings
+                << " readings, " << found.values << " values; newest hash " << QString::fromStdString(found.last_hash)
+                << "\n";
+    return found.sound() ? done : data_refused;
+}
+
+int run_backup(const QCommandLineParser& parser, Streams& streams)
+{
+    auto history = open_history(parser);
+    if (!history.has_value())
+        return refuse(streams, history.error());
+    const QString to = parser.value(QStringLiteral("to"));
+    const auto copied = storage::back_up(*history.value(), to);
+    if (!copied.has_value())
+        return refuse(streams, copied.error());
+    streams.out << "copied to " << to << "\n";
+    return done;
+}
+
+int run_sample(const QCommandLineParser& parser, Streams& streams)
+{
+    const QDir folder(parser.value(QStringLiteral("out")));
+    int written = 0, same = 0;
+    for (const sample::SampleFile& file : sample::make_sample_vessel()) {
+        const auto result = write_sample_file(folder, file);
+        if (!result.has_value())
+            return refuse(streams, result.error());
+        ++(result.value() ? written : same);
+    }
+    streams.out << "The sample vessel is an invented scenario: no such ship, engine or voyage exists.\n"
+                << folder.path() << ": " << written << " files written, " << same << " were there already\n";
+    return done;
+}
+
+} // namespace evenstroke::batch

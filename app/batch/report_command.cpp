@@ -1,0 +1,74 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/batch/report_command.h"
+
+#include "app/batch/engines.h"
+#include "app/batch/long_work.h"
+#include "app/survey/report_sources.h"
+#include "app/survey/report_writer.h"
+
+#include <QDate>
+
+namespace evenstroke::batch {
+namespace {
+
+using namespace std::chrono_literals;
+
+/// A day of the command line; a sentence on err and nothing where it is none.
+std::optional<TimePoint> read_day(const QCommandLineParser& parser, const char* option, Streams& streams)
+{
+    const auto day = parse_date(parser.value(QString::fromUtf8(option)).toStdString());
+    if (day.has_value())
+        return day.value().utc;
+    streams.err << "--" << option << ": " << QString::fromStdString(day.error().text()) << "\n";
+    return std::nullopt;
+}
+
+} // namespace
+
+int run_report(const QCommandLineParser& parser, Streams& streams)
+{
+    const auto from = read_day(parser, "from", streams), to = read_day(parser, "to", streams);
+    if (!from || !to)
+        return wrong_use;
+    if (*to < *from) {
+        streams.err << "The period ends on " << parser.value(QStringLiteral("to")) << ", before it begins on "
+                    << parser.value(QStringLiteral("from")) << ". Give the earlier day to --from.\n";
+        return wrong_use;
+    }
+    TimePoint date = *to;
+    if (parser.isSet(QStringLiteral("date"))) {
+        const auto given = read_day(parser, "date", streams);
+        if (!given)
+            return wrong_use;
+        date = *given;
+    }
+    auto history = open_history(parser);
+    if (!history.has_value())
+        return refuse(streams, history.error());
+    const auto engines = chosen_engines(*history.value(), parser);
+    if (!engines.has_value())
+        return refuse(streams, engines.error());
+    if (engines.value().size() != 1) {
+        streams.err << "Several vessels have an engine \"" << parser.value(QStringLiteral("engine")) << "\":";
+        for (const storage::EngineEntry& entry : engines.value())
+            streams.err << " " << QString::fromStdString(entry.vessel_name) << ";";
+        streams.err << " name one with --vessel.\n";
+        return data_refused;
+    }
+    const auto sources = load_report_sources(*history.value(), engines.value().front().id);
+    if (!sources.has_value())
+        return refuse(streams, sources.error());
+    ReportDetails details = sources.value().details;
+    details.date = date;
+    details.program_version = EVENSTROKE_VERSION;
+    const ReportPeriod period{*from, *to + 24h - 1s};
+    const SurveyReport report = make_survey_report(judge(sources.value().record), period, details);
+    const QString path = parser.value(QStringLiteral("out"));
+    const auto written = write_survey_pdf(report, path);
+    if (!written.has_value())
+        return refuse(streams, written.error());
+    streams.out << "report written to " << path << "\n";
+    return done;
+}
+
+} // namespace evenstroke::batch

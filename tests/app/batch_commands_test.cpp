@@ -1,0 +1,216 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/batch/command.h"
+#include "sample_vessel/sample_vessel.h"
+
+#include <gtest/gtest.h>
+
+#include <QFile>
+#include <QJsonArray>
+#include <QJsonDocument>
+#include <QTemporaryDir>
+
+#include <set>
+
+using namespace evenstroke;
+
+namespace {
+
+struct Outcome
+{
+    int code = 0;
+    QString out, err;
+    QStringList rows() const { return out.split(QLatin1Char('\n'), Qt::SkipEmptyParts).mid(1); }
+};
+
+Outcome run(const QStringList& arguments)
+{
+    Outcome outcome;
+    QTextStream out(&outcome.out), err(&outcome.err);
+    batch::Streams streams{out, err, false, false};
+    outcome.code = batch::run_command_line(arguments, streams);
+    out.flush();
+    err.flush();
+    return outcome;
+}
+
+/// The sample vessel taken into a history, once for all tests of this file.
+class SampleVesselEndToEnd : public testing::Test
+{
+protected:
+    static void SetUpTestSuite()
+    {
+        folder_ = new QTemporaryDir;
+        ASSERT_EQ(run({"sample", "--out", folder_->filePath("sample")}).code, 0);
+        const Outcome taken = run({"take", folder_->filePath("sample"), "--history", history()});
+        ASSERT_EQ(taken.code, 0) << taken.err.toStdString();
+    }
+    static void TearDownTestSuite() { delete folder_; }
+    static QString history() { return folder_->filePath("sample.evenstroke"); }
+    static QTemporaryDir* folder_;
+};
+QTemporaryDir* SampleVesselEndToEnd::folder_ = nullptr;
+
+/// RFC 4180 cells of one row; the tests' rows hold no line feed.
+QStringList cells(const QString& row)
+{
+    QStringList parts{QString()};
+    bool quoted = false;
+    for (const QChar c : row) {
+        if (c == QLatin1Char('"'))
+            quoted = !quoted;
+        else if (c == QLatin1Char(',') && !quoted)
+            parts << QString();
+        else
+            parts.last() += c;
+    }
+    return parts;
+}
+
+} // namespace
+
+TEST_F(SampleVesselEndToEnd, FlagsFindExactlyTheTwoDevelopingFaults)
+{
+    const Outcome flags = run({"flags", "--history", history()});
+    ASSERT_EQ(flags.code, 0) << flags.err.toStdString();
+    EXPECT_TRUE(flags.out.startsWith("vessel,engine,flagged_at,subject,quantity,severity,sentence\n"));
+    const auto faults = sample::sample_truth().faults;
+    ASSERT_EQ(faults.size(), 2u);
+    EXPECT_EQ(flags.rows().size(), 2) << flags.out.toStdString();
+    for (const sample::SampleFault& fault : faults) {
+        int found = 0;
+        for (const QString& row : flags.rows()) {
+            const QStringList c = cells(row);
+            ASSERT_EQ(c.size(), 7) << row.toStdString();
+            if (c[1].toStdString() != fault.engine || c[3] != QString("cylinder %1").arg(fault.cylinder))
+                continue;
+            ++found;
+            EXPECT_GT(c[2].toStdString().substr(0, 10), fault.onset); // never before it began
+            EXPECT_NE(c[5], "ask");
+        }
+        EXPECT_EQ(found, 1) << fault.engine << " cylinder " << fault.cylinder;
+    }
+}
+
+TEST_F(SampleVesselEndToEnd, DoubtsFindTheTypingErrorsAndLittleElse)
+{
+    const Outcome doubts = run({"doubts", "--history", history()});
+    ASSERT_EQ(doubts.code, 0) << doubts.err.toStdString();
+    std::set<QStringList> wanted;
+    for (const sample::SampleTypingError& slip : sample::sample_truth().typing_errors)
+        wanted.insert({QString::fromStdString(slip.vessel), QString::fromStdString(slip.engine),
+                       QString::fromStdString(slip.reading), QString::fromStdString(slip.quantity),
+                       QString::fromStdString(slip.cylinder), QString::fromStdString(slip.verdict)});
+    int others = 0;
+    for (const QString& row : doubts.rows()) {
+        const QStringList c = cells(row);
+        if (wanted.erase(c) == 0 && c.last() != "unsteady")
+            ++others;
+    }
+    for (const QStringList& missing : wanted)
+        ADD_FAILURE() << missing.join(',').toStdString() << " was not found";
+    EXPECT_LE(others, 3) << doubts.out.toStdString(); // 2.5 in 100 readings over some 140 readings
+}
+
+TEST_F(SampleVesselEndToEnd, TakingTheSameAgainChangesNothing)
+{
+    const Outcome again = run({"take", folder_->filePath("sample"), "--history", history()});
+    EXPECT_EQ(again.code, 0) << again.err.toStdString();
+    EXPECT_TRUE(again.out.contains(" 0 values new")) << again.out.toStdString();
+}
+
+TEST_F(SampleVesselEndToEnd, EvaluateAgreesInBothFormats)
+{
+    const Outcome csv = run({"evaluate", "--history", history(), "--engine", "main engine"});
+    const Outcome json = run({"evaluate", "--history", history(), "--engine", "main engine", "--format", "json"});
+    ASSERT_EQ(csv.code, 0) << csv.err.toStdString();
+    const QJsonArray objects = QJsonDocument::fromJson(json.out.toUtf8()).array();
+    ASSERT_EQ(objects.size(), csv.rows().size());
+    const QStringList header = cells(csv.out.section(QLatin1Char('\n'), 0, 0));
+    EXPECT_EQ(header.join(','), "vessel,engine,reading,taken_at,quantity,cylinder,value,unit,corrected,expected,deviation,apart,"
+                                "uncertainty");
+    int with_deviation = 0;
+    for (qsizetype i = 0; i < objects.size(); i += 37) {
+        const QStringList c = cells(csv.rows().at(i));
+        const QJsonObject object = objects.at(i).toObject();
+        EXPECT_EQ(object["quantity"].toString(), c[4]);
+        if (c[10].isEmpty()) {
+            EXPECT_TRUE(object["deviation"].isNull());
+            continue;
+        }
+        ++with_deviation;
+        // Deviation is corrected minus expected, in the typed unit; the numbers are not rounded.
+        EXPECT_NEAR(c[10].toDouble(), c[8].toDouble() - c[9].toDouble(), 1e-9 * (1.0 + std::abs(c[8].toDouble())));
+    }
+    EXPECT_GT(with_deviation, 10);
+}
+
+TEST_F(SampleVesselEndToEnd, VerifyBackupAndReport)
+{
+    EXPECT_EQ(run({"verify", "--history", history()}).code, 0);
+    const QString copy = folder_->filePath("copy.evenstroke");
+    EXPECT_EQ(run({"backup", "--history", history(), "--to", copy}).code, 0);
+    EXPECT_EQ(run({"verify", "--history", copy}).code, 0);
+    EXPECT_NE(run({"backup", "--history", history(), "--to", copy}).code, 0); // nothing is written over
+    const QString pdf = folder_->filePath("report.pdf");
+    const Outcome report = run({"report", "--history", history(), "--engine", "main engine", "--from", "2025-12-01", "--to",
+                                "2026-11-30", "--out", pdf});
+    EXPECT_EQ(report.code, 0) << report.err.toStdString();
+    QFile file(pdf);
+    ASSERT_TRUE(file.open(QIODevice::ReadOnly));
+    EXPECT_EQ(file.read(5), "%PDF-");
+    EXPECT_LT(file.size(), 1000000);
+}
+
+TEST(BatchUse, WrongUseIsExitTwoAndSaysHow)
+{
+    EXPECT_EQ(run({}).code, 2);
+    EXPECT_EQ(run({"dance"}).code, 2);
+    EXPECT_EQ(run({"flags"}).code, 2);
+    EXPECT_TRUE(run({"flags"}).err.contains("--history is missing"));
+    EXPECT_EQ(run({"flags", "--history", "x", "--colour"}).code, 2);
+    EXPECT_EQ(run({"flags", "--history", "x", "--format", "xml"}).code, 2);
+    EXPECT_EQ(run({"take", "--history", "x"}).code, 2);
+    for (const char* later : {"explain", "card", "parcel", "receive"}) {
+        EXPECT_EQ(run({later}).code, 2) << later;
+        EXPECT_TRUE(run({later}).err.contains("not in this version")) << later;
+    }
+    EXPECT_TRUE(run({"flags"}).out.isEmpty()); // results only on standard output
+}
+
+TEST(BatchUse, AHistoryThatIsNotThereOrNotOursIsLeftAlone)
+{
+    QTemporaryDir folder;
+    const QString absent = folder.filePath("absent.evenstroke");
+    EXPECT_EQ(run({"flags", "--history", absent}).code, 3);
+    EXPECT_FALSE(QFile::exists(absent));
+    const QString foreign = folder.filePath("notes.txt");
+    QFile file(foreign);
+    ASSERT_TRUE(file.open(QIODevice::WriteOnly));
+    file.write("not a history at all");
+    file.close();
+    const Outcome refused = run({"flags", "--history", foreign});
+    EXPECT_TRUE(refused.code == 3 || refused.code == 1);
+    EXPECT_FALSE(refused.err.isEmpty());
+    ASSERT_TRUE(file.open(QIODevice::ReadOnly));
+    EXPECT_EQ(file.readAll(), "not a history at all");
+}
+
+TEST(BatchTake, ABadFolderIsRefusedWholeAndKeepGoodTakesTheRest)
+{
+    QTemporaryDir folder;
+    ASSERT_EQ(run({"sample", "--out", folder.filePath("sample")}).code, 0);
+    QFile readings(folder.filePath("sample/main_engine/readings.csv"));
+    ASSERT_TRUE(readings.exists());
+    ASSERT_TRUE(readings.open(QIODevice::Append));
+    readings.write("2026-12,2026-12-01T06:30Z,colour_of_smoke,,3,bar\n");
+    readings.close();
+    const QString history = folder.filePath("h.evenstroke");
+    const Outcome refused = run({"take", folder.filePath("sample"), "--history", history});
+    EXPECT_EQ(refused.code, 1);
+    EXPECT_TRUE(refused.err.contains("readings.csv, line ")) << refused.err.toStdString();
+    EXPECT_TRUE(refused.err.contains("colour_of_smoke"));
+    EXPECT_FALSE(run({"flags", "--history", history, "--engine", "main engine"}).code == 0); // nothing of it is in
+    EXPECT_EQ(run({"flags", "--history", history, "--engine", "auxiliary engine 1"}).code, 0);
+    EXPECT_EQ(run({"take", folder.filePath("sample"), "--history", history, "--keep-good"}).code, 0);
+    EXPECT_EQ(run({"flags", "--history", history, "--engine", "main engine"}).code, 0);
+}
