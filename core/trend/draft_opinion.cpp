@@ -73,14 +73,14 @@ void judge_ranges(ValueOpinion& opinion, const Quantity& q, double own)
     }
 }
 
-/// The last value at the same place, in the quantity's own unit.
-std::optional<double> previous_value(const std::vector<Reading>& readings, const Engine& engine, const Value& at)
+/// The last value at the same place before the draft, in the quantity's own unit.
+std::optional<double> previous_value(const EngineRecord& record, const std::vector<PreparedReading>& prepared, const Value& at)
 {
-    for (auto reading = readings.rbegin() + 1; reading != readings.rend(); ++reading) {
-        const Value* value = reading->find(at.quantity, at.place);
+    for (std::size_t i = record.readings.size() - 1; i-- > 0;) {
+        const Value* value = record.readings[i].find(at.quantity, at.place);
         if (!value)
             continue;
-        const auto own = own_value(*value, find_conditions(engine, *reading));
+        const auto own = own_value(*value, prepared[i].conditions);
         return own ? std::optional<double>(own->value) : std::nullopt;
     }
     return std::nullopt;
@@ -111,7 +111,7 @@ DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
             opinion.values.push_back(std::move(one));
             continue;
         }
-        one.previous = previous_value(record->readings, engine, value);
+        one.previous = previous_value(*record, prepared, value);
         const auto own = own_value(value, conditions);
         if (own && value.phase == Phase::reading)
             judge_ranges(one, q, own->value);
