@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/reading/relations.h"
 #include "core/trend/drift_catalogue.h"
 #include "core/trend/drift_input.h"
 #include "core/trend/drift_results.h"
@@ -10,17 +11,25 @@
 namespace evenstroke {
 namespace {
 
+/// Readings that a draft is compared with: three years of monthly ones. The usual band looks back over the last
+/// twelve; more serve the noise only, and typing must not wait for them.
+constexpr std::size_t draft_memory = 36;
+
 /// The record with the draft as its last reading; readings taken after the draft are left out.
 std::shared_ptr<EngineRecord> with_draft(const EngineRecord& record, const Reading& draft)
 {
-    auto extended = std::make_shared<EngineRecord>(record);
-    auto& readings = extended->readings;
-    readings.erase(std::remove_if(readings.begin(), readings.end(),
-                                  [&](const Reading& r) {
-                                      return r.taken_at.utc >= draft.taken_at.utc || (!r.id.empty() && r.id == draft.id);
-                                  }),
-                   readings.end());
-    readings.push_back(draft);
+    auto extended = std::make_shared<EngineRecord>();
+    extended->vessel = record.vessel;
+    extended->engine = record.engine;
+    extended->events = record.events;
+    std::vector<const Reading*> before;
+    for (const Reading& reading : record.readings)
+        if (reading.taken_at.utc < draft.taken_at.utc && (reading.id.empty() || reading.id != draft.id))
+            before.push_back(&reading);
+    const std::size_t skipped = before.size() > draft_memory ? before.size() - draft_memory : 0;
+    for (std::size_t i = skipped; i < before.size(); ++i)
+        extended->readings.push_back(*before[i]);
+    extended->readings.push_back(draft);
     return extended;
 }
 
@@ -139,6 +148,9 @@ DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
     const SteadinessVerdict steadiness = judge_steadiness(draft, !engine.two_stroke());
     opinion.steadiness = steadiness.verdict;
     opinion.steadiness_sentence = steadiness.sentence;
+    ReadingContext context{std::span<const Reading>(record->readings).first(record->readings.size() - 1), record->events, {}};
+    for (const Relation& relation : check_relations(engine, draft, context))
+        opinion.between.push_back(relation.sentence);
     return opinion;
 }
 
