@@ -143,6 +143,9 @@ QLabel[small="true"] { font-size: 9pt; }
 QLabel[title="true"] { font-size: 14pt; }
 QLabel[figure="true"] { font-size: 20pt; font-weight: bold; }
 QLabel[caution="true"] { color: %act; }
+QLabel[cautionhead="true"] { color: %act; font-weight: bold; }
+QLabel[sidefigure="true"] { font-size: 14pt; font-weight: bold; }
+QFrame[ruled="true"] { background: %rule; }
 QPushButton { background: %sheet; border: 1px solid %muted; padding: 4px 12px; min-height: 20px; }
 QPushButton:hover, QPushButton:focus { border-color: %line; outline: none; }
 QPushButton:focus { background: %band; }
