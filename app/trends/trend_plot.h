@@ -1,0 +1,77 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "app/desk/theme.h"
+#include "app/trends/trend_picture.h"
+
+#include <qcustomplot.h>
+
+#include <optional>
+
+namespace evenstroke {
+
+class EventItem;
+
+/// Draws a TrendPicture: values above, evidence below, one time axis. Lines are one pixel wide and solid colours
+/// only, which keeps drawing fast and survives PDF/A.
+class TrendPlot : public QCustomPlot
+{
+    Q_OBJECT
+
+public:
+    explicit TrendPlot(QWidget* parent = nullptr);
+    void show_picture(const TrendPicture& picture, const Theme& theme);
+    void show_load(bool shown);
+    bool load_shown() const { return load_shown_; }
+    /// The reading in hand is ringed.
+    void choose(std::optional<std::size_t> reading);
+    const TrendPicture& picture() const { return picture_; }
+    /// What lies under the pointer, in words; empty where nothing does.
+    QString words_at(const QPointF& place) const;
+    std::optional<std::size_t> reading_at(const QPointF& place) const;
+
+    /// The same plot on paper or in a file, in black and grey.
+    static bool save(const TrendPicture& picture, bool with_load, const QString& path, const QSize& size);
+    static void paint(const TrendPicture& picture, bool with_load, QCPPainter& painter, const QSize& size);
+
+signals:
+    void reading_chosen(std::size_t reading);
+
+protected:
+    void mousePressEvent(QMouseEvent* event) override;
+    void mouseMoveEvent(QMouseEvent* event) override;
+    bool event(QEvent* event) override;
+
+private:
+    void make_rects();
+    void set_margins();
+    int label_gap() const;
+    QString newest_label() const;
+    QString threshold_label() const { return tr("watch from here"); }
+    void draw_all();
+    void style_axes();
+    void add_band();
+    void add_others();
+    void add_line();
+    void add_points();
+    void add_marks();
+    void add_labels();
+    void add_evidence();
+    void add_load();
+    void add_chosen();
+    void set_ranges();
+    void thin_event_words();
+    QCPItemText* add_text(const QString& text, QCPAxisRect* rect, const QColor& colour, bool bold);
+
+    TrendPicture picture_;
+    const Theme* theme_;
+    bool load_shown_ = false;
+    std::optional<std::size_t> chosen_;
+    QCPAxisRect* values_;
+    QCPAxisRect* evidence_;
+    std::vector<EventItem*> event_items_;
+    QCPGraph* ring_ = nullptr;
+    double low_ = 0.0, high_ = 1.0;
+};
+
+} // namespace evenstroke

@@ -1,0 +1,182 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/trends/trend_words.h"
+
+#include "app/desk/number_text.h"
+#include "app/desk/theme.h"
+#include "core/explanation/cautions.h"
+
+#include <QCoreApplication>
+
+#include <algorithm>
+#include <cmath>
+
+namespace evenstroke {
+
+namespace {
+
+QString tr_(const char* text, int n = -1) { return QCoreApplication::translate("evenstroke", text, nullptr, n); }
+
+TimePoint time_of(const Judgement& judgement, std::size_t reading)
+{
+    return judgement.record->readings.at(reading).taken_at.utc;
+}
+
+/// A flag of a cylinder is shown on the quantities that moved; one of the engine likewise.
+bool concerns(const Flag& flag, const TrendPicture& picture)
+{
+    if (flag.subject != picture.place && !(flag.subject.kind == Place::Kind::engine
+                                           && picture.place.kind != Place::Kind::cylinder))
+        return false;
+    return flag.quantity == picture.quantity
+           || std::any_of(flag.moved.begin(), flag.moved.end(),
+                          [&](const MovedQuantity& m) { return m.quantity == picture.quantity; });
+}
+
+QString moved_text(const MovedQuantity& moved, bool ramp)
+{
+    const QString unit_symbol = moved.percent ? QStringLiteral("%") : unit_text(moved.quantity);
+    // A month's share is small: one more decimal than the instrument shows.
+    const QString amount = with_unit(signed_text(moved.amount, decimals_of(moved.quantity) + (ramp ? 1 : 0)), unit_symbol);
+    const QString title = quantity_title(moved.quantity);
+    return ramp ? tr_("%1 %2 a month").arg(title, amount) : tr_("%1 %2").arg(title, amount);
+}
+
+void add_flags(TrendPicture& picture, const Judgement& judgement)
+{
+    for (const Flag& flag : judgement.flags) {
+        if (!concerns(flag, picture))
+            continue;
+        PictureFlag shown;
+        shown.time = static_cast<double>(time_of(judgement, flag.reading).time_since_epoch().count());
+        const auto point = std::find_if(picture.points.begin(), picture.points.end(),
+                                        [&](const PicturePoint& p) { return p.reading >= flag.reading; });
+        if (point == picture.points.end())
+            continue;
+        shown.value = point->value;
+        shown.severity = flag.severity;
+        shown.standing = has_mark(flag.level_now);
+        const QString when = day_text(time_of(judgement, flag.reading));
+        shown.words = shown.standing
+                          ? tr_("%1 since %2: %3").arg(level_text(flag.level_now), when, to_qstring(flag.sentence))
+                          : tr_("%1 on %2, closed: %3").arg(level_text(flag.severity), when, to_qstring(flag.sentence));
+        picture.flags.push_back(std::move(shown));
+    }
+}
+
+const Flag* leading_flag(const TrendPicture& picture, const Judgement& judgement)
+{
+    const std::vector<const Flag*> standing = judgement.standing_flags();
+    const auto found = std::find_if(standing.begin(), standing.end(),
+                                    [&](const Flag* flag) { return concerns(*flag, picture); });
+    return found == standing.end() ? nullptr : *found;
+}
+
+void add_quiet_words(TrendPicture& picture, const Trend& trend)
+{
+    picture.level = trend.level;
+    switch (trend.level) {
+    case Level::learning:
+        picture.headline = tr_("Still learning what is usual here: %1 of %2 usable readings.").arg(trend.learned).arg(trend.needed);
+        break;
+    case Level::note: picture.headline = tr_("Further out than usual: look again at the next reading."); break;
+    case Level::no_data: picture.headline = tr_("Too few readings to say anything."); break;
+    default: picture.headline = tr_("Within its usual range.");
+    }
+    if (has_mark(trend.level))
+        picture.level_words = level_text(trend.level);
+}
+
+void add_cautions(TrendPicture& picture, const Flag& flag)
+{
+    for (const std::string& name : flag.cautions)
+        if (const Caution* caution = find_caution(name))
+            picture.cautions.push_back(
+                {to_qstring(caution->title), to_qstring(caution->short_text), caution->emergency});
+}
+
+} // namespace
+
+QString months_text(const TimeToLimit& limit)
+{
+    if (!limit.months_5)
+        return tr_("not within ten years");
+    const auto whole = [](double months) { return static_cast<int>(std::lround(months)); };
+    const int early = whole(*limit.months_5);
+    if (!limit.months_95)
+        return early < 1 ? tr_("from now on") : tr_("%n month(s) or more", early);
+    const int late = whole(*limit.months_95);
+    if (late < 1)
+        return tr_("less than a month");
+    if (early == late)
+        return tr_("%n month(s)", late);
+    return tr_("%1 to %2 months").arg(early).arg(late);
+}
+
+QString spoken_point(const TrendPicture& picture, const PicturePoint& shown, const TrendPoint& point)
+{
+    QString number = picture.difference ? signed_text(shown.value, picture.decimals)
+                                        : number_text(shown.value, picture.decimals);
+    if (picture.difference && point.uncertainty)
+        number += QStringLiteral(" ± ") + number_text(*point.uncertainty, picture.decimals);
+    QStringList words{day_text(TimePoint(std::chrono::seconds(static_cast<long long>(shown.time))))};
+    if (shown.load_percent)
+        words.append(tr_("%1 load").arg(with_unit(number_text(*shown.load_percent, 0), u"%")));
+    words.append(with_unit(number, picture.unit_symbol));
+    if (shown.unsteady)
+        words.append(tr_("not steady"));
+    if (shown.doubtful)
+        words.append(tr_("in doubt"));
+    return words.join(QStringLiteral(", "));
+}
+
+void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Trend& trend)
+{
+    add_flags(picture, judgement);
+    const Flag* flag = leading_flag(picture, judgement);
+    if (!flag) {
+        add_quiet_words(picture, trend);
+        return;
+    }
+    picture.level = flag->level_now;
+    picture.headline = to_qstring(flag->sentence);
+    picture.second_line = to_qstring(flag->chance_sentence);
+    picture.level_words =
+        tr_("%1 since %2").arg(level_text(flag->level_now), day_text(time_of(judgement, flag->reading)));
+    if (flag->time_to_limit) {
+        picture.limit_figure = months_text(*flag->time_to_limit);
+        picture.limit_words = tr_("%1, nine times in ten").arg(to_qstring(flag->time_to_limit->limit_text));
+    }
+    picture.fits = to_qstring(flag->pattern_words);
+    for (const MovedQuantity& moved : flag->moved)
+        picture.moved.append(moved_text(moved, flag->ramp));
+    picture.next_check = to_qstring(flag->next_check);
+    add_cautions(picture, *flag);
+}
+
+QString point_words(const Judgement& judgement, const Trend& trend, std::size_t reading)
+{
+    const auto point = std::find_if(trend.points.begin(), trend.points.end(),
+                                    [reading](const TrendPoint& p) { return p.reading == reading; });
+    if (point == trend.points.end())
+        return {};
+    const int decimals = decimals_of(trend.quantity);
+    const QString unit_symbol = unit_text(trend.quantity);
+    QStringList words{tr_("read %1").arg(with_unit(number_text(point->raw, decimals), unit_symbol))};
+    if (point->corrected)
+        words.append(tr_("corrected %1").arg(number_text(*point->corrected, decimals)));
+    if (point->expected)
+        words.append(tr_("expected %1").arg(number_text(*point->expected, decimals)));
+    if (point->deviation)
+        words.append(tr_("deviation %1").arg(signed_text(*point->deviation, decimals)));
+    if (point->apart)
+        words.append(tr_("apart %1").arg(signed_text(*point->apart, decimals)));
+    if (point->uncertainty)
+        words.append(QStringLiteral("± ") + number_text(*point->uncertainty, decimals));
+    if (point->unsteady)
+        words.append(tr_("not steady"));
+    if (point->doubtful)
+        words.append(tr_("in doubt, left out of the judging"));
+    return tr_("%1: %2").arg(day_text(time_of(judgement, reading)), words.join(QStringLiteral(", ")));
+}
+
+} // namespace evenstroke
