@@ -1,9 +1,15 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/desk/pages.h"
 
+#include "app/board/board_page.h"
 #include "app/desk/frame.h"
 #include "app/desk/history_page.h"
 #include "app/desk/workplace.h"
+#include "app/entry/entry_page.h"
+#include "app/fleet/fleet_page.h"
+#include "app/trends/trend_page.h"
+
+#include <algorithm>
 
 namespace evenstroke {
 
@@ -15,10 +21,25 @@ std::function<Page*(Workplace&)> maker()
     return [](Workplace& workplace) { return new PageType(workplace); };
 }
 
+/// Flags and questions that started at the newest reading of the engine that is looked at.
+int new_flags(const Workplace& workplace)
+{
+    const auto judgement = workplace.judgement();
+    if (!judgement || judgement->readings.empty())
+        return 0;
+    const std::size_t newest = judgement->readings.back().reading;
+    return static_cast<int>(std::count_if(judgement->flags.begin(), judgement->flags.end(),
+                                          [newest](const Flag& flag) { return flag.reading == newest; }));
+}
+
 } // namespace
 
 void add_all_pages(Frame& frame)
 {
+    frame.add_page({QStringLiteral("fleet"), Frame::tr("Fleet"), u'F', maker<FleetPage>()});
+    frame.add_page({QStringLiteral("board"), Frame::tr("Strip board"), u'B', maker<BoardPage>(), new_flags});
+    frame.add_page({QStringLiteral("trend"), Frame::tr("Trend"), u'T', maker<TrendPage>()});
+    frame.add_page({QStringLiteral("enter"), Frame::tr("Enter"), u'E', maker<EntryPage>()});
     frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, true});
 }
 
