@@ -22,7 +22,8 @@ QString tr_(const char* text)
 // All lengths in points (1/72 inch).
 constexpr double margin = 34, label_width = 158, unit_width = 44, row_height = 17, heading_height = 22;
 constexpr double widest_box = 62, narrowest_box = 26;
-const QColor ink(Qt::black), grey(0x70, 0x70, 0x70), light(0xB0, 0xB0, 0xB0);
+constexpr double half_width = 268, half_label = 142, half_unit = 40, half_box = 74; // sections of lone boxes
+const QColor ink(Qt::black), grey(0x70, 0x70, 0x70);
 
 QFont face(int points, bool bold = false)
 {
@@ -64,6 +65,9 @@ private:
     void cautions();
     void section(const LogSection& section, bool again);
     void row(const LogSection& section, const LogRow& row);
+    void single_rows(const LogSection& section);
+    void single_row(const LogRow& row, double left, double y);
+    bool in_two_columns(const LogRow& row) const;
     void boxes(const LogRow& row, std::size_t from, std::size_t count, double width);
     void box(const LogBox& box, const QRectF& area);
     void text(const QRectF& area, int flags, const QString& words, const QFont& font, const QColor& colour);
@@ -96,7 +100,11 @@ int SheetPrinter::run()
     for (const LogSection& each : sheet_.rows) {
         make_room(heading_height + 2 * row_height);
         section(each, false);
+        if (each.columns.size() == 1)
+            single_rows(each);
         for (const LogRow& each_row : each.rows) {
+            if (each.columns.size() == 1 && in_two_columns(each_row))
+                continue;
             const auto lines = (each_row.boxes.size() + boxes_a_line(each) - 1) / boxes_a_line(each);
             make_room(row_height * static_cast<double>(lines), &each);
             row(each, each_row);
@@ -223,6 +231,38 @@ void SheetPrinter::row(const LogSection& section, const LogRow& row)
         boxes(row, from, std::min(a_line, row.boxes.size() - from), box_width(section));
         y_ += row_height;
     }
+}
+
+bool SheetPrinter::in_two_columns(const LogRow& row) const
+{
+    return quantity(row.quantity).type != ValueType::words;
+}
+
+/// Sections of lone boxes stand in two columns, down the left one first, so that the walk fits few sheets.
+void SheetPrinter::single_rows(const LogSection& section)
+{
+    std::vector<const LogRow*> rows;
+    for (const LogRow& row : section.rows)
+        if (in_two_columns(row))
+            rows.push_back(&row);
+    const auto lines = (rows.size() + 1) / 2;
+    make_room(row_height * static_cast<double>(lines), &section);
+    for (std::size_t line = 0; line < lines; ++line) {
+        single_row(*rows[line], margin, y_);
+        if (line + lines < rows.size())
+            single_row(*rows[line + lines], margin + half_width, y_);
+        y_ += row_height;
+    }
+}
+
+void SheetPrinter::single_row(const LogRow& row, double left, double y)
+{
+    const Quantity& meant = quantity(row.quantity);
+    text({left, y, half_label - 4, row_height}, Qt::AlignLeft | Qt::AlignVCenter,
+         to_qstring(meant.title) + (row.shared ? QStringLiteral(" *") : QString()), face(8), ink);
+    text({left + half_label, y, half_unit - 5, row_height}, Qt::AlignRight | Qt::AlignVCenter,
+         to_qstring(row_unit_text(row.quantity, sheet_.row_unit(row.quantity))), face(7), grey);
+    box(row.boxes.front(), {left + half_label + half_unit, y, half_box, row_height});
 }
 
 void SheetPrinter::boxes(const LogRow& row, std::size_t from, std::size_t count, double width)

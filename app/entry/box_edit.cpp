@@ -22,6 +22,14 @@ void paint_heading(QPainter& painter, const QRect& area, const QModelIndex& inde
     painter.drawLine(area.bottomLeft(), area.bottomRight());
 }
 
+void paint_beside(QPainter& painter, const QRect& area, const QModelIndex& index)
+{
+    painter.setFont(type(TypeSize::label));
+    painter.setPen(theme().muted);
+    painter.drawText(area.adjusted(0, 0, -side_room, 0), Qt::AlignRight | Qt::AlignVCenter,
+                     index.data().toString());
+}
+
 void paint_mark(QPainter& painter, const QRect& area, BoxMark mark)
 {
     const QRectF place(area.left() + 2, area.center().y() - 5, 11, 11);
@@ -112,6 +120,8 @@ void BoxDelegate::paint(QPainter* painter, const QStyleOptionViewItem& option, c
         paint_heading(*painter, option.rect, index);
     else if (index.flags() & Qt::ItemIsEditable)
         paint_box(*painter, option, index);
+    else if (index.data(LogSheetModel::beside_role).toBool())
+        paint_beside(*painter, option.rect, index);
     painter->restore();
 }
 

@@ -2,22 +2,12 @@
 #include "app/entry/ear.h"
 
 #include "app/desk/number_text.h"
+#include "app/entry/row_number.h"
 #include "core/reading/typed_number.h"
 #include "ui_ear.h"
 
-#include <algorithm>
-#include <cmath>
-
 namespace evenstroke {
 namespace {
-
-/// Decimals that show a quantity in another unit as finely as in its own: 2.95 bar, 0.295 MPa.
-int decimals_in(QuantityId id, WrittenUnit row_unit)
-{
-    const double finer = unit(row_unit.id).factor / unit(quantity(id).unit).factor;
-    const int shift = finer > 0.0 ? static_cast<int>(std::lround(std::log10(finer))) : 0;
-    return std::clamp(quantity(id).decimals + shift, 0, 6);
-}
 
 /// What the text means so far, in the quantity's own unit; none while it means nothing.
 std::optional<double> own_number(const LogSheetModel& model, const LogBox& box,

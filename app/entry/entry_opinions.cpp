@@ -31,13 +31,15 @@ bool all_confirmed(const EntrySheet& sheet, const std::vector<LogBox>& boxes)
     });
 }
 
-std::vector<Reading> readings_before(const Judgement* judgement, const Reading& reading)
+/// A reading that is corrected is not compared with itself, nor with those after it.
+std::vector<Reading> readings_before(const Judgement& judgement, const Reading& reading, bool correcting)
 {
     std::vector<Reading> earlier;
-    if (judgement && judgement->record)
-        for (const Reading& other : judgement->record->readings)
-            if (other.id != reading.id || reading.id.empty())
-                earlier.push_back(other);
+    for (const Reading& other : judgement.record->readings) {
+        const bool itself = !reading.id.empty() && other.id == reading.id;
+        if (!itself && (!correcting || other.taken_at.utc < reading.taken_at.utc))
+            earlier.push_back(other);
+    }
     return earlier;
 }
 
@@ -52,23 +54,21 @@ void EntryOpinions::ask(const EntrySheet& sheet, std::shared_ptr<const Judgement
 {
     forget();
     judgement_ = std::move(judgement);
-    const Reading whole = sheet.whole();
-    std::vector<Doubt> doubts;
-    if (judgement_ && judgement_->record) {
-        DraftOpinion draft = judge_draft(*judgement_, whole);
-        for (std::size_t i = 0; i < draft.values.size() && i < whole.values.size(); ++i)
-            opinions_[box_of(whole.values[i])] = std::move(draft.values[i]);
-        doubts = std::move(draft.doubts);
-        steadiness_ = {draft.steadiness, draft.steadiness_sentence};
-    } else {
-        steadiness_ = judge_steadiness(whole, !sheet.engine().two_stroke());
+    if (!judgement_ || !judgement_->record) {
+        // Nothing to compare with yet; ranges and relations are checked all the same.
+        auto none = std::make_shared<Judgement>();
+        auto record = std::make_shared<EngineRecord>();
+        record->engine = sheet.engine();
+        none->record = std::move(record);
+        judgement_ = std::move(none);
     }
-    const std::vector<Reading> earlier = readings_before(judgement_.get(), whole);
-    const ReadingContext context{earlier,
-                                 judgement_ && judgement_->record
-                                     ? std::span<const Event>(judgement_->record->events)
-                                     : std::span<const Event>(),
-                                 now};
+    const Reading whole = sheet.whole();
+    DraftOpinion draft = judge_draft(*judgement_, whole);
+    for (std::size_t i = 0; i < draft.values.size() && i < whole.values.size(); ++i)
+        opinions_[box_of(whole.values[i])] = std::move(draft.values[i]);
+    steadiness_ = {draft.steadiness, draft.steadiness_sentence};
+    const std::vector<Reading> earlier = readings_before(*judgement_, whole, sheet.reading().closed);
+    const ReadingContext context{earlier, judgement_->record->events, now};
     for (const Relation& relation : check_relations(sheet.engine(), whole, context)) {
         SheetNote note{to_qstring(relation.sentence), {}, relation.impossible};
         for (const ConcernedValue& concerned : relation.concerned)
@@ -76,7 +76,7 @@ void EntryOpinions::ask(const EntrySheet& sheet, std::shared_ptr<const Judgement
         if (!all_confirmed(sheet, note.boxes))
             notes_.push_back(std::move(note));
     }
-    note_doubts(sheet, doubts);
+    note_doubts(sheet, draft.doubts);
     mark(sheet);
 }
 

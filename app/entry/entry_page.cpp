@@ -6,7 +6,9 @@
 #include "app/entry/ear.h"
 #include "app/entry/log_sheet_view.h"
 #include "app/entry/note_lines.h"
+#include "app/entry/row_number.h"
 #include "app/entry/typed_time.h"
+#include "core/reading/typed_number.h"
 #include "ui_entry_page.h"
 
 #include <QApplication>
@@ -278,12 +280,30 @@ const EntryOpinions& EntryPage::judge_now()
         opinions_.ask(session_.sheet(), workplace().judgement(session_.engine_id()),
                       workplace().history()->now());
         model_.set_marks(opinions_.marks());
+        show_previous();
         if (!ui_->grid->is_editing())
             show_box();
         ui_->ear->show_whole(session_.sheet(), opinions_);
         show_notes();
     }
     return opinions_;
+}
+
+/// Last time's numbers beside the lone boxes.
+void EntryPage::show_previous()
+{
+    std::map<QuantityId, QString> previous;
+    const auto barometer = barometer_of(session_.sheet().whole());
+    for (const LogSection& section : session_.sheet().sections())
+        for (const LogRow& row : section.rows)
+            if (const ValueOpinion* opinion =
+                    row.boxes.size() == 1 ? opinions_.of(row.boxes.front()) : nullptr) {
+                const QString number = row_number(row.quantity, opinion->previous,
+                                                  session_.sheet().row_unit(row.quantity), barometer);
+                if (!number.isEmpty())
+                    previous[row.quantity] = number;
+            }
+    model_.set_previous(std::move(previous));
 }
 
 // -------------------------------------------------------------------------------------- the frame asks

@@ -76,6 +76,7 @@ private:
     void show_notes();
     void show_words();
     void show_closed();
+    void show_previous();
     void read_time_fields();
     void read_signature();
     void choose_unit(int row);

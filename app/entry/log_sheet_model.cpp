@@ -13,6 +13,7 @@ LogSheetModel::LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* paren
 {
     connect(&sheet_, &EntrySheet::restarted, this, [this] {
         marks_.clear();
+        previous_.clear();
         unreadable_.clear();
         refusal_.reset();
         rebuild();
@@ -194,11 +195,37 @@ QVariant LogSheetModel::heading_data(const QModelIndex& at, int role) const
     case heading_role:
         return true;
     case Qt::DisplayRole:
+        if (column == 1 && columns.size() == 1 && !previous_.empty())
+            return tr("last time");
         return column < columns.size() ? to_qstring(columns[column]) : QString();
     case Qt::TextAlignmentRole:
         return QVariant(Qt::AlignRight | Qt::AlignVCenter);
     case Qt::AccessibleTextRole:
         return heading(at.row());
+    default:
+        return {};
+    }
+}
+
+/// The place right of a lone box: last time's number, so that a slip is seen without looking aside.
+QVariant LogSheetModel::beside_data(const QModelIndex& at, int role) const
+{
+    const LogRow* in_row = row(at.row());
+    if (!in_row || in_row->boxes.size() != 1 || at.column() != 1 ||
+        in_row->boxes.front().phase != Phase::reading)
+        return {};
+    const auto found = previous_.find(in_row->quantity);
+    if (found == previous_.end())
+        return {};
+    switch (role) {
+    case beside_role:
+        return true;
+    case Qt::DisplayRole:
+        return found->second;
+    case Qt::TextAlignmentRole:
+        return QVariant(Qt::AlignRight | Qt::AlignVCenter);
+    case Qt::AccessibleTextRole:
+        return tr("%1, last time: %2").arg(quantity_title(in_row->quantity), found->second);
     default:
         return {};
     }
@@ -212,7 +239,7 @@ QVariant LogSheetModel::data(const QModelIndex& at, int role) const
         return heading_data(at, role);
     const auto shown = box(at);
     if (!shown)
-        return {};
+        return beside_data(at, role);
     const bool words = quantity(shown->quantity).type == ValueType::words;
     const Value* value = sheet_.value(*shown);
     switch (role) {
@@ -312,6 +339,15 @@ void LogSheetModel::tell_box(const LogBox& changed)
     const QModelIndex at = index_of(changed);
     if (at.isValid())
         emit dataChanged(at, at);
+}
+
+void LogSheetModel::set_previous(std::map<QuantityId, QString> previous)
+{
+    if (previous == previous_)
+        return;
+    previous_ = std::move(previous);
+    if (!rows_.empty())
+        emit dataChanged(index(0, 1), index(rowCount() - 1, 1));
 }
 
 void LogSheetModel::set_marks(std::map<LogBox, BoxMark> marks)

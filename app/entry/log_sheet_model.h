@@ -28,6 +28,7 @@ public:
         missing_role,             ///< bool: a reason stands here instead of a value
         heading_role,             ///< bool: the row is a section's heading
         words_role,               ///< bool: words, not a number
+        beside_role,              ///< bool: no box, but last time's number beside one
     };
 
     LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* parent = nullptr);
@@ -61,6 +62,8 @@ public:
     /// The sections with the rows that are not folded away.
     std::vector<LogSection> shown_sections() const;
 
+    /// Last time's numbers, shown beside the box where a row has only one.
+    void set_previous(std::map<QuantityId, QString> previous);
     void set_marks(std::map<LogBox, BoxMark> marks);
     /// Texts that could not be read and wait to be put right.
     const std::map<LogBox, QString>& unreadable() const { return unreadable_; }
@@ -85,6 +88,7 @@ private:
     void tell_box(const LogBox& box);
     BoxMark mark_of(const LogBox& box, const Value* value) const;
     QVariant heading_data(const QModelIndex& index, int role) const;
+    QVariant beside_data(const QModelIndex& index, int role) const;
     QString accessible_text(const LogBox& box, const QString& shown) const;
     QString shown_text(const LogBox& box) const;
 
@@ -94,6 +98,7 @@ private:
     int columns_ = 4, folded_ = 0;
     bool all_rows_ = false;
     std::map<LogBox, BoxMark> marks_;
+    std::map<QuantityId, QString> previous_;
     std::map<LogBox, QString> unreadable_;
     std::optional<Problem> refusal_;
 };
