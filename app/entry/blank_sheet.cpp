@@ -125,13 +125,11 @@ void SheetPrinter::begin_page()
     text({margin, y_, width, 18}, Qt::AlignLeft | Qt::AlignVCenter, title, face(13, true), ink);
     y_ += 20;
     text({margin, y_, width, 18}, Qt::AlignLeft | Qt::AlignBottom,
-         tr_("Date ____________   Ship's time ________   UTC %1 ________   Taken by "
-             "______________________________")
-             .arg(QChar(0x00B1)),
-         face(9), ink);
+         tr_("Date ____________   Ship's time ________   Offset from UTC ________"), face(9), ink);
     QString foot = tr_("Page %1 of %2").arg(page_number_).arg(pages_);
     if (sheet_.last)
         foot += QStringLiteral("  ·  ") + tr_("small grey: %1").arg(day_text(sheet_.last->taken_at.utc));
+    foot += QStringLiteral("  ·  ") + tr_("* once for the whole ship");
     foot +=
         QStringLiteral("  ·  ") + tr_("leave a box empty rather than guess; write – where nothing is fitted");
     text({margin, page_.height() - margin - 8, width, 12}, Qt::AlignLeft | Qt::AlignVCenter, foot, face(7),
@@ -193,7 +191,7 @@ void SheetPrinter::section(const LogSection& section, bool again)
     const double width = page_.width() - 2 * margin;
     const QString title = to_qstring(section.title);
     text({margin, y_, width, heading_height - 4}, Qt::AlignLeft | Qt::AlignBottom,
-         again ? tr_("%1, continued").arg(title) : title, face(10, true), ink);
+         again ? tr_("%1 …").arg(title) : title, face(10, true), ink);
     const double each = box_width(section);
     double x = margin + label_width + unit_width;
     if (section.columns.size() <= boxes_a_line(section))

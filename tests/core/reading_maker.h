@@ -32,7 +32,7 @@ public:
     {
         Value value = empty(name, place, Phase::reading);
         const auto parsed = parse_typed_value(text).value();
-        value.typed = text;
+        value.typed = std::string(text.substr(0, text.find(' ')));
         value.unit = parsed.unit.id;
         value.kind =
             parsed.unit.kind == PressureKind::none ? quantity(value.quantity).kind : parsed.unit.kind;
