@@ -20,20 +20,20 @@ AuditWriter::AuditWriter(History& history, Signature by) : history_(history), by
 Done AuditWriter::add(const AuditedChange& change)
 {
     const char* const not_written = "the change was not written to the audit trail and not made";
-    if (!insert_) {
-        Query last(history_.database(), "SELECT number, row_hash FROM audit ORDER BY number DESC LIMIT 1",
-                   not_written);
-        BOOST_OUTCOME_TRYV(last.run());
-        if (last.next()) {
-            number_ = last.integer(0);
-            last_hash_ = last.text(1);
-        }
+    if (!knows_last_) {
+        const auto last = audit_state(history_);
+        if (!last)
+            return last.error();
+        number_ = last.value().entries;
+        last_hash_ = last.value().last_hash;
+        knows_last_ = true;
+    }
+    if (!insert_)
         insert_.emplace(history_.database(),
                         "INSERT INTO audit (number, at, who, action, subject_kind, subject_id, detail, why, "
                         "content_hash, row_hash) "
                         "VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?)",
                         not_written);
-    }
     const qint64 at = seconds_of(history_.now());
     last_hash_ = audit_row_hash(last_hash_, change, ++number_, at, by_);
     return insert_->run(number_, at, by_.who, change.action, change.subject_kind, change.subject_id,

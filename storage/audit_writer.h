@@ -22,17 +22,22 @@ struct AuditedChange
 std::string audit_row_hash(const std::string& previous, const AuditedChange& change, qint64 number, qint64 at,
                            const Signature& by);
 
-/// Adds rows to the trail. Lives within one transaction, so that nobody else adds in between.
+/// Adds rows to the trail. Lives within one transaction, or is told to forget, so that nobody else adds in
+/// between.
 class AuditWriter
 {
 public:
     AuditWriter(History& history, Signature by);
+    const Signature& by() const { return by_; }
     Done add(const AuditedChange& change);
+    /// What was added may have been taken back: asks for the last row again.
+    void forget() { knows_last_ = false; }
 
 private:
     History& history_;
     Signature by_;
     std::optional<Query> insert_;
+    bool knows_last_ = false;
     qint64 number_ = 0;
     std::string last_hash_;
 };

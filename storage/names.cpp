@@ -2,6 +2,7 @@
 #include "storage/names.h"
 
 #include "storage/sql.h"
+#include "storage/written_unit.h"
 
 #include <algorithm>
 #include <numeric>
@@ -63,6 +64,11 @@ void History::Names::add_unit(int key, std::string written)
     UnitInFile& entry = units_[static_cast<std::size_t>(key)];
     if (const auto found = find_unit(written); found.has_value())
         entry.unit = found.value();
+    for (std::size_t kind = 0; entry.unit && kind < entry.as_catalogue.size(); ++kind) {
+        const auto usual = static_cast<PressureKind>(kind);
+        const PressureKind meant = entry.unit->kind == PressureKind::none ? usual : entry.unit->kind;
+        entry.as_catalogue[kind] = written == written_unit({entry.unit->id, meant}, usual);
+    }
     unit_keys_.emplace(written, key);
     entry.written = std::move(written);
 }

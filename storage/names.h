@@ -42,6 +42,8 @@ struct UnitInFile
 {
     std::string written;
     std::optional<WrittenUnit> unit; ///< none: this program does not know it
+    std::array<bool, 4>
+        as_catalogue{}; ///< by the quantity's kind of pressure: the catalogue writes it so too
 };
 
 /// The numbers that this history gave to names of quantities and to written units. The catalogue may change

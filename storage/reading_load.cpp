@@ -2,6 +2,9 @@
 #include "storage/transaction.h"
 #include "storage/value_rows.h"
 
+#include <QJsonArray>
+#include <QJsonDocument>
+
 #include <algorithm>
 
 // Reading all values of an engine at once: the way every judging begins, so it must be quick.
@@ -10,16 +13,23 @@ namespace {
 
 const char* const not_read = "the readings were not read";
 
-// Small numbers travel in one column: QtSql makes a QVariant of every column of every row.
-constexpr int phase_bits = 2, missing_bits = 2, confirmed_bits = 1, place_bits = 13, unit_bits = 16;
+// QtSql makes a QVariant of every column of every row, so small numbers travel in one column, and the texts
+// that nearly all values lack travel with the typed text where there are any: as a JSON list, and a bit says
+// so.
+constexpr int phase_bits = 2, missing_bits = 2, confirmed_bits = 1, texts_bits = 1, place_bits = 13,
+              unit_bits = 16;
 const char* const packed_values =
     "SELECT v.reading_key, "
-    "((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 | v.confirmed) << 2 | "
-    "v.missing) << 2 | v.phase, "
-    "v.typed, v.value_si, v.words, v.place_typed "
+    "(((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 | coalesce(v.words, "
+    "v.place_typed) IS NOT NULL) "
+    "<< 1 | v.confirmed) << 2 | v.missing) << 2 | v.phase, "
+    "CASE WHEN coalesce(v.words, v.place_typed) IS NULL THEN v.typed ELSE json_array(v.typed, v.words, "
+    "v.place_typed) END, "
+    "v.value_si "
     "FROM reading r CROSS JOIN value v ON v.reading_key = r.reading_key WHERE r.state = 1 AND ";
 
-void unpack(qint64 packed, ValueRow& row)
+/// Answers whether the text column holds the list of all texts.
+bool unpack(qint64 packed, ValueRow& row)
 {
     const auto take = [&](int bits) {
         const int part = static_cast<int>(packed & ((qint64{1} << bits) - 1));
@@ -29,9 +39,11 @@ void unpack(qint64 packed, ValueRow& row)
     row.phase = take(phase_bits);
     row.missing = take(missing_bits);
     row.confirmed = take(confirmed_bits) != 0;
+    const bool texts = take(texts_bits) != 0;
     row.place = take(place_bits);
     row.unit_key = take(unit_bits);
     row.quantity_key = static_cast<int>(packed);
+    return texts;
 }
 
 /// A typed number is a few ASCII characters: no way over the heap.
@@ -49,15 +61,17 @@ void assign_text(std::string& to, const QString& from)
 
 void read_row(const Query& rows, ValueRow& row)
 {
-    unpack(rows.integer(1), row);
-    assign_text(row.typed, rows.raw(2).toString());
+    const bool texts = unpack(rows.integer(1), row);
+    const QString text = rows.raw(2).toString();
     row.value_si = rows.real(3);
     row.words.clear();
     row.place_typed.clear();
-    if (!rows.is_null(4))
-        row.words = rows.text(4);
-    if (!rows.is_null(5))
-        row.place_typed = rows.text(5);
+    if (!texts)
+        return assign_text(row.typed, text);
+    const QJsonArray list = QJsonDocument::fromJson(text.toUtf8()).array();
+    row.typed = from_qt(list[0].toString());
+    row.words = from_qt(list[1].toString());
+    row.place_typed = from_qt(list[2].toString());
 }
 
 void put_in_walking_order(std::vector<Value>& values)

@@ -91,9 +91,8 @@ Done Query::finished() const
 
 std::optional<double> Query::real(int column) const
 {
-    if (query_.isNull(column))
-        return std::nullopt;
-    return query_.value(column).toDouble();
+    const QVariant value = query_.value(column);
+    return value.isNull() ? std::nullopt : std::optional(value.toDouble());
 }
 
 Done run_statement(const QSqlDatabase& database, const QString& statement, const std::string& undone)

@@ -40,9 +40,9 @@ struct FolderReport
 {
     std::string folder; ///< as given, or below what was given
     std::string vessel_name, engine_name;
-    std::string engine_id; ///< empty for a ship's files
-    bool taken = false;    ///< false: refused whole, nothing of it is in the history
-    TakeCounts values, events, cards;
+    std::string engine_id;            ///< empty for a ship's files
+    bool taken = false;               ///< false: refused whole, nothing of it is in the history
+    TakeCounts values, events, cards; ///< where the folder was not taken, `fresh` counts the good rows
     std::vector<RefusedRow> refused;  ///< at most the first 1000 of a file; the counts hold all
     std::vector<std::string> remarks; ///< files ignored, keys kept unread, a former revision
     bool anything_refused() const { return !taken || values.refused + events.refused + cards.refused > 0; }
@@ -58,8 +58,7 @@ struct TakeReport
 
 /// Takes engine folders, ships' folders and fleets in. Each engine's folder is all or nothing; a bad one does
 /// not stop the others. Taking the same again changes nothing.
-/// @par Problems storage: the disk refused, then the history is as it was; not_found: no such folder;
-///      invalid_input: no engine in the folders
+/// @par Problems storage: the disk refused, then the history is as it was; not_found: no such folder
 Result<TakeReport> take(History& history, const QStringList& folders, const TakeOptions& options = {});
 
 } // namespace evenstroke::storage

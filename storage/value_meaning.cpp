@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "storage/value_rows.h"
 
+#include "core/plain_text.h"
 #include "storage/written_unit.h"
 
 namespace evenstroke::storage {
@@ -39,7 +40,7 @@ std::optional<Value> value_of(const History::Names& names, const ValueRow& row)
     const WrittenUnit meant = written ? *written->unit : WrittenUnit{q.unit, PressureKind::none};
     value.unit = meant.id;
     value.kind = meant.kind == PressureKind::none ? q.kind : meant.kind;
-    if (written && written->written != written_unit({value.unit, value.kind}, q.kind))
+    if (written && !written->as_catalogue[static_cast<std::size_t>(q.kind)])
         value.unit_typed = written->written;
     value.value_si = row.value_si;
     if (row.value_si)
@@ -62,8 +63,9 @@ Result<ValueRow> row_of(History::Names& names, const Value& value)
     row.quantity_key = quantity_key.value();
     row.place = place_code(value.place);
     row.phase = static_cast<int>(value.phase);
-    row.typed = value.typed;
-    row.words = value.words;
+    // Blanks around a text would not come back from a file.
+    row.typed = trimmed(value.typed);
+    row.words = trimmed(value.words);
     row.missing = static_cast<int>(value.missing);
     row.confirmed = value.confirmed;
     row.place_typed = value.place_typed;

@@ -21,16 +21,6 @@ ReadingRow reading_of(const Query& row)
             time_of(row.integer(6))};
 }
 
-QString insert_statement(int rows)
-{
-    QString statement = QStringLiteral("INSERT INTO value (reading_key, quantity_key, place, phase, typed, "
-                                       "unit_key, value_si, words, missing, confirmed, place_typed) VALUES ");
-    for (int row = 0; row < rows; ++row)
-        statement +=
-            row == 0 ? QStringLiteral("(?,?,?,?,?,?,?,?,?,?,?)") : QStringLiteral(",(?,?,?,?,?,?,?,?,?,?,?)");
-    return statement;
-}
-
 const std::string not_saved = "the values were not saved";
 
 } // namespace
@@ -93,65 +83,6 @@ Result<std::vector<ValueRow>> load_value_rows(History& history, qint64 reading_k
                           rows.small(5) != 0, rows.real(6), rows.text(7), rows.text(8), rows.text(9)});
     BOOST_OUTCOME_TRYV(rows.finished());
     return values;
-}
-
-Done ValueInserter::add(qint64 reading_key, const ValueRow& row)
-{
-    waiting_.emplace_back(reading_key, row);
-    if (waiting_.size() < rows_a_statement)
-        return done();
-    if (!full_)
-        full_.emplace(history_.database(), insert_statement(rows_a_statement), not_saved);
-    BOOST_OUTCOME_TRYV(write(0, rows_a_statement, *full_));
-    waiting_.clear();
-    return done();
-}
-
-Done ValueInserter::flush()
-{
-    if (waiting_.empty())
-        return done();
-    const int rest = static_cast<int>(waiting_.size());
-    Query statement(history_.database(), insert_statement(rest), not_saved);
-    BOOST_OUTCOME_TRYV(write(0, rest, statement));
-    waiting_.clear();
-    return done();
-}
-
-Done ValueInserter::write(std::size_t first, int count, Query& statement)
-{
-    int at = 0;
-    for (std::size_t i = first; i < first + static_cast<std::size_t>(count); ++i) {
-        const auto& [reading_key, row] = waiting_[i];
-        const auto text_or_null = [](const std::string& text) {
-            return text.empty() ? QVariant() : to_variant(text);
-        };
-        statement.bind(at++, to_variant(reading_key));
-        statement.bind(at++, row.quantity_key);
-        statement.bind(at++, row.place);
-        statement.bind(at++, row.phase);
-        statement.bind(at++, to_variant(row.typed));
-        statement.bind(at++, row.unit_key == 0 ? QVariant() : QVariant(row.unit_key));
-        statement.bind(at++, to_variant(row.value_si));
-        statement.bind(at++, text_or_null(row.words));
-        statement.bind(at++, row.missing);
-        statement.bind(at++, row.confirmed ? 1 : 0);
-        statement.bind(at++, text_or_null(row.place_typed));
-    }
-    return statement.execute();
-}
-
-Result<qint64> insert_reading(History& history, const OwnerKeys& owner, const ReadingRow& reading)
-{
-    Query add(history.database(),
-              "INSERT INTO reading (id, vessel_key, engine_key, name, taken_at, offset_minutes, state, "
-              "changed_at) VALUES (?, ?, ?, ?, ?, ?, ?, ?)",
-              "the reading was not saved");
-    const std::optional<qint64> engine = owner.engine == 0 ? std::nullopt : std::optional(owner.engine);
-    BOOST_OUTCOME_TRYV(add.run(reading.id, owner.vessel, engine, reading.name,
-                               seconds_of(reading.taken_at.utc), reading.taken_at.offset_minutes,
-                               static_cast<int>(reading.state), seconds_of(reading.changed_at)));
-    return add.inserted_key();
 }
 
 std::string reading_hash(const History::Names& names, const ReadingRow& reading,

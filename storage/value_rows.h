@@ -13,6 +13,8 @@
 /// Values and readings as the file holds them, before names and units are given their meaning.
 namespace evenstroke::storage {
 
+inline constexpr std::size_t longest_reading_name = 100; ///< bytes
+
 /// One row of the table `value`.
 struct ValueRow
 {
@@ -56,7 +58,8 @@ Result<ReadingRow> load_reading_row(History& history, const std::string& reading
 /// In the order of the file's own numbering.
 Result<std::vector<ValueRow>> load_value_rows(History& history, qint64 reading_key);
 
-/// Adds values many at a time: one statement takes a hundred rows.
+/// Adds values many at a time. Ordinary ones (the reading itself, nothing missing, no words) travel as one
+/// packed number, the text and the SI value: binding is what costs, so few things are bound.
 class ValueInserter
 {
 public:
@@ -64,19 +67,36 @@ public:
     Done add(qint64 reading_key, const ValueRow& row);
     /// Writes what still waits. Without it the last values are lost.
     Done flush();
+    /// Drops what still waits: the transaction is taken back.
+    void forget() { waiting_.clear(); }
 
 private:
-    static constexpr int columns = 11;
-    static constexpr int rows_a_statement = 100;
+    static constexpr int rows_a_statement = 25;
+    struct Waiting
+    {
+        qint64 packed;
+        QString typed;
+        std::optional<double> value_si;
+    };
+    Done add_unusual(qint64 reading_key, const ValueRow& row);
     Done write(std::size_t first, int count, Query& statement);
 
     History& history_;
-    std::optional<Query> full_;
-    std::vector<std::pair<qint64, ValueRow>> waiting_;
+    std::optional<Query> many_, one_, unusual_;
+    std::vector<Waiting> waiting_;
 };
 
-/// Adds the row of a reading; answers its key.
-Result<qint64> insert_reading(History& history, const OwnerKeys& owner, const ReadingRow& reading);
+/// Adds rows of readings; answers their keys.
+class ReadingInserter
+{
+public:
+    explicit ReadingInserter(History& history) : history_(history) {}
+    Result<qint64> add(const OwnerKeys& owner, const ReadingRow& reading);
+
+private:
+    History& history_;
+    std::optional<Query> statement_;
+};
 
 /// Hash of everything that a reading holds, for the audit trail. Sorts the rows.
 std::string reading_hash(const History::Names& names, const ReadingRow& reading,

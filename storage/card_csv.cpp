@@ -1,0 +1,179 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "storage/card_store.h"
+
+#include "core/plain_text.h"
+#include "core/units/unit_catalogue.h"
+#include "storage/sql.h"
+
+#include <QFile>
+#include <QFileInfo>
+
+#include <charconv>
+#include <cmath>
+
+namespace evenstroke::storage {
+namespace {
+
+constexpr qint64 largest_file = 256LL << 20; // bytes; a hundred cycles at 0.1 degree have 18 MB
+
+struct Layout
+{
+    bool cycles = false, gauge = false;
+    char separator = ',';
+};
+
+std::string_view take_line(std::string_view& rest)
+{
+    const std::size_t end = rest.find('\n');
+    std::string_view line = rest.substr(0, end);
+    rest.remove_prefix(end == std::string_view::npos ? rest.size() : end + 1);
+    if (line.ends_with('\r'))
+        line.remove_suffix(1);
+    return line;
+}
+
+std::string_view take_field(std::string_view& rest, char separator)
+{
+    const std::size_t end = rest.find(separator);
+    const std::string_view field = rest.substr(0, end);
+    rest.remove_prefix(end == std::string_view::npos ? rest.size() : end + 1);
+    return field;
+}
+
+std::optional<Layout> read_header(std::string_view line)
+{
+    Layout layout;
+    layout.separator = line.find(';') == std::string_view::npos ? ',' : ';';
+    std::string_view first = trimmed(take_field(line, layout.separator));
+    if (first == "cycle") {
+        layout.cycles = true;
+        first = trimmed(take_field(line, layout.separator));
+    }
+    const std::string_view last = trimmed(line);
+    layout.gauge = last == "pressure_bar_gauge";
+    if (first != "crank_angle_deg" || (last != "pressure_bar" && last != "pressure_bar_abs" && !layout.gauge))
+        return std::nullopt;
+    return layout;
+}
+
+/// The quick way for plain numbers; anything else is asked of the unit catalogue's reader.
+Result<double> read_number(std::string_view field)
+{
+    double number = 0.0;
+    const auto [end, problem] = std::from_chars(field.data(), field.data() + field.size(), number);
+    if (problem == std::errc() && end == field.data() + field.size() && std::isfinite(number))
+        return number;
+    return parse_number(field);
+}
+
+class CardText
+{
+public:
+    CardText(std::string_view text, const std::string& name) : rest_(text), name_(name) {}
+    Result<CardTrace> read();
+
+private:
+    Done read_row(std::string_view row);
+    Problem refused(const std::string& what, const std::string& advice) const
+    {
+        return invalid_input(name_ + ", line " + std::to_string(line_) + ": " + what, advice);
+    }
+
+    std::string_view rest_;
+    const std::string& name_;
+    Layout layout_;
+    CardTrace trace_;
+    qint64 line_ = 1;
+};
+
+Done CardText::read_row(std::string_view row)
+{
+    if (layout_.cycles) {
+        const std::string_view field = trimmed(take_field(row, layout_.separator));
+        int cycle = 0;
+        const auto [end, problem] = std::from_chars(field.data(), field.data() + field.size(), cycle);
+        if (problem != std::errc() || end != field.data() + field.size())
+            return refused("The cycle " + quoted(field) + " is no whole number.",
+                           "Write the number of the cycle.");
+        trace_.cycle.push_back(cycle);
+    }
+    const auto angle = read_number(take_field(row, layout_.separator));
+    if (!angle.has_value())
+        return refused("The crank angle is not readable: " + angle.error().what_happened,
+                       angle.error().what_to_do);
+    if (std::abs(angle.value()) > 360.0)
+        return refused(
+            "The crank angle " + number_text(angle.value()) + "° is beyond one working cycle.",
+            "Write -180 to 180 degrees, or -360 to 360 for a four-stroke; firing dead centre is 0.");
+    const auto pressure = read_number(row);
+    if (!pressure.has_value())
+        return refused("The pressure is not readable: " + pressure.error().what_happened,
+                       pressure.error().what_to_do);
+    trace_.crank_angle_deg.push_back(angle.value());
+    trace_.pressure_bar.push_back(pressure.value());
+    return done();
+}
+
+Result<CardTrace> CardText::read()
+{
+    if (rest_.starts_with("\xEF\xBB\xBF"))
+        rest_.remove_prefix(3);
+    const auto layout = read_header(take_line(rest_));
+    if (!layout)
+        return refused("The header line is not one of a card.",
+                       "The first line is expected to be crank_angle_deg,pressure_bar or "
+                       "cycle,crank_angle_deg,pressure_bar.");
+    layout_ = *layout;
+    trace_.gauge = layout_.gauge;
+    const std::size_t likely = rest_.size() / 12;
+    trace_.crank_angle_deg.reserve(likely);
+    trace_.pressure_bar.reserve(likely);
+    while (!rest_.empty()) {
+        ++line_;
+        const std::string_view row = take_line(rest_);
+        if (!trimmed(row).empty()) {
+            BOOST_OUTCOME_TRYV(read_row(row));
+        }
+    }
+    if (trace_.crank_angle_deg.empty())
+        return refused("The card has no samples.", "Write one row a sample below the header line.");
+    return std::move(trace_);
+}
+
+} // namespace
+
+Result<CardTrace> read_card_text(std::string_view text, const std::string& name)
+{
+    return CardText(text, name).read();
+}
+
+Result<CardTrace> read_card_file(const QString& path)
+{
+    QFile file(path);
+    if (!file.exists())
+        return Problem{Problem::Kind::not_found, "There is no file \"" + from_qt(path) + "\".",
+                       "Check its name."};
+    if (!file.open(QIODevice::ReadOnly))
+        return Problem{Problem::Kind::storage, "\"" + from_qt(path) + "\" cannot be read.",
+                       "Check that you have the right to read it."};
+    if (file.size() > largest_file)
+        return invalid_input("\"" + from_qt(path) + "\" is larger than 256 MB, which no card is.",
+                             "Choose the file of one cylinder's card.");
+    const QByteArray content = file.readAll();
+    return read_card_text(std::string_view(content.constData(), static_cast<std::size_t>(content.size())),
+                          from_qt(QFileInfo(path).fileName()));
+}
+
+std::string card_text(const CardTrace& trace)
+{
+    std::string text = trace.cycle.empty() ? "" : "cycle,";
+    text += trace.gauge ? "crank_angle_deg,pressure_bar_gauge\n" : "crank_angle_deg,pressure_bar\n";
+    for (std::size_t i = 0; i < trace.crank_angle_deg.size(); ++i) {
+        if (!trace.cycle.empty())
+            text += std::to_string(trace.cycle[i]) + ",";
+        text += number_text(trace.crank_angle_deg[i]) + "," + number_text(trace.pressure_bar[i]) + "\n";
+    }
+    return text;
+}
+
+} // namespace evenstroke::storage

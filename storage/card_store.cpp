@@ -1,0 +1,106 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "storage/card_store.h"
+
+#include "storage/audit_writer.h"
+#include "storage/card_packing.h"
+#include "storage/card_rows.h"
+#include "storage/content_hash.h"
+#include "storage/transaction.h"
+#include "storage/value_rows.h"
+
+#include <QUuid>
+
+namespace evenstroke::storage {
+namespace {
+
+const std::string not_saved = "the card was not saved";
+
+} // namespace
+
+std::string packed_card_hash(const std::string& id, int cylinder, const QByteArray& packed)
+{
+    ContentHash content;
+    content.add(id)
+        .add(qint64{cylinder})
+        .add(std::string_view(packed.constData(), static_cast<std::size_t>(packed.size())));
+    return content.hex();
+}
+
+Result<AddedCard> add_card(History& history, qint64 reading_key, int cylinder, const CardTrace& trace,
+                           AuditWriter& audit)
+{
+    const QByteArray packed = pack_card(trace);
+    Query there(history.database(), "SELECT id, trace FROM card WHERE reading_key = ? AND cylinder = ?",
+                not_saved);
+    BOOST_OUTCOME_TRYV(there.run(reading_key, cylinder));
+    if (there.next()) {
+        // Another version of the packing may make other bytes of the same samples.
+        const auto known = unpack_card(there.bytes(1));
+        const bool same = known && known->cycle == trace.cycle && known->gauge == trace.gauge &&
+                          known->crank_angle_deg == trace.crank_angle_deg &&
+                          known->pressure_bar == trace.pressure_bar;
+        return AddedCard{there.text(0), same ? AddedCard::Outcome::same : AddedCard::Outcome::differs};
+    }
+    BOOST_OUTCOME_TRYV(there.finished());
+    const std::string id = from_qt(QUuid::createUuid().toString(QUuid::WithoutBraces));
+    Query add(history.database(),
+              "INSERT INTO card (id, reading_key, cylinder, samples, trace) VALUES (?, ?, ?, ?, ?)",
+              not_saved);
+    BOOST_OUTCOME_TRYV(
+        add.run(id, reading_key, cylinder, static_cast<qint64>(trace.crank_angle_deg.size()), packed));
+    BOOST_OUTCOME_TRYV(audit.add({"added", "card", id, "cylinder " + std::to_string(cylinder),
+                                  packed_card_hash(id, cylinder, packed)}));
+    return AddedCard{id, AddedCard::Outcome::added};
+}
+
+Result<std::vector<CardEntry>> CardStore::list(const std::string& engine_id) const
+{
+    Query rows(history_.database(),
+               "SELECT c.id, r.id, c.cylinder, c.samples FROM card c JOIN reading r USING (reading_key) JOIN "
+               "engine e USING (engine_key) "
+               "WHERE e.id = ? ORDER BY r.taken_at, c.cylinder",
+               "the list of cards was not read");
+    BOOST_OUTCOME_TRYV(rows.run(engine_id));
+    std::vector<CardEntry> found;
+    while (rows.next())
+        found.push_back({rows.text(0), rows.text(1), rows.small(2), rows.small(3)});
+    BOOST_OUTCOME_TRYV(rows.finished());
+    return found;
+}
+
+Result<CardTrace> CardStore::load(const std::string& card_id) const
+{
+    Query row(history_.database(), "SELECT trace FROM card WHERE id = ?", "the card was not read");
+    BOOST_OUTCOME_TRYV(row.run(card_id));
+    if (!row.next()) {
+        BOOST_OUTCOME_TRYV(row.finished());
+        return Problem{Problem::Kind::not_found, "The card is not in this history.",
+                       "Look at the list again; another window may have changed it."};
+    }
+    auto trace = unpack_card(row.bytes(0));
+    if (!trace)
+        return Problem{Problem::Kind::damaged_file, "The card's trace cannot be read from the history.",
+                       "Take the card's file in again into a sound copy of the history."};
+    return std::move(*trace);
+}
+
+Result<std::string> CardStore::add(const std::string& reading_id, int cylinder, const CardTrace& trace,
+                                   const Signature& by)
+{
+    Transaction transaction(history_, not_saved);
+    BOOST_OUTCOME_TRYV(transaction.begin());
+    const auto reading = load_reading_row(history_, reading_id);
+    if (!reading)
+        return reading.error();
+    AuditWriter audit(history_, by);
+    const auto added = add_card(history_, reading.value().key, cylinder, trace, audit);
+    if (!added)
+        return added.error();
+    if (added.value().outcome == AddedCard::Outcome::differs)
+        return invalid_input("The reading has another card of cylinder " + std::to_string(cylinder) + ".",
+                             "Keep the card to the reading it was taken with.");
+    BOOST_OUTCOME_TRYV(transaction.commit());
+    return added.value().id;
+}
+
+} // namespace evenstroke::storage
