@@ -5,20 +5,24 @@
 #include <QApplication>
 
 #include <cstdio>
+#include <cstring>
+#include <memory>
 #include <unistd.h>
 
 int main(int argc, char** argv)
 {
-    // The report is drawn, but never on a screen: no display is needed.
+    // Only the report is drawn, and never on a screen: no display is needed.
+    const bool draws = argc > 1 && std::strcmp(argv[1], "report") == 0;
     qputenv("QT_QPA_PLATFORM", "offscreen");
-    const QApplication application(argc, argv);
-    QApplication::setApplicationName(QStringLiteral("evenstroke"));
+    const std::unique_ptr<QCoreApplication> application(draws ? new QApplication(argc, argv)
+                                                              : new QCoreApplication(argc, argv));
+    QCoreApplication::setApplicationName(QStringLiteral("evenstroke"));
     QTextStream out(stdout), err(stderr);
     out.setEncoding(QStringConverter::Utf8);
     err.setEncoding(QStringConverter::Utf8);
     evenstroke::batch::Streams streams{out, err, isatty(STDOUT_FILENO) != 0, isatty(STDERR_FILENO) != 0};
     evenstroke::batch::listen_for_stop();
-    const int code = evenstroke::batch::run_command_line(QApplication::arguments().mid(1), streams);
+    const int code = evenstroke::batch::run_command_line(QCoreApplication::arguments().mid(1), streams);
     out.flush();
     err.flush();
     return code;

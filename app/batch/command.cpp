@@ -6,18 +6,21 @@
 namespace evenstroke::batch {
 namespace {
 
+QString utf8(const char* text) { return QString::fromUtf8(text); }
+
 /// Commands of the contract that this version does not have yet.
-const QStringList later_commands = {"explain", "card", "parcel", "receive"};
+const QStringList later_commands = {QStringLiteral("explain"), QStringLiteral("card"), QStringLiteral("parcel"),
+                                    QStringLiteral("receive")};
 
 QString usage_line(const Command& command)
 {
-    QString line = QStringLiteral("evenstroke-batch ") + command.name;
+    QString line = QStringLiteral("evenstroke-batch ") + utf8(command.name);
     if (command.rest)
-        line += QStringLiteral(" ") + command.rest;
+        line += QStringLiteral(" ") + utf8(command.rest);
     for (const Option& option : command.options) {
-        QString text = QStringLiteral("--") + option.name;
+        QString text = QStringLiteral("--") + utf8(option.name);
         if (option.value_name)
-            text += QStringLiteral(" ") + option.value_name;
+            text += QStringLiteral(" ") + utf8(option.value_name);
         line += option.needed ? QStringLiteral(" ") + text : QStringLiteral(" [") + text + QStringLiteral("]");
     }
     return line;
@@ -37,17 +40,17 @@ int run_one(const Command& command, const QStringList& arguments, Streams& strea
     QCommandLineParser parser;
     parser.setOptionsAfterPositionalArgumentsMode(QCommandLineParser::ParseAsOptions);
     for (const Option& option : command.options) {
-        QCommandLineOption made(QString::fromUtf8(option.name), QString::fromUtf8(option.help));
+        QCommandLineOption made(utf8(option.name), utf8(option.help));
         if (option.value_name)
-            made.setValueName(QString::fromUtf8(option.value_name));
+            made.setValueName(utf8(option.value_name));
         parser.addOption(made);
     }
-    if (!parser.parse(QStringList(QString::fromUtf8(command.name)) + arguments)) {
+    if (!parser.parse(QStringList(utf8(command.name)) + arguments)) {
         streams.err << parser.errorText() << "\nUse: " << usage_line(command) << "\n";
         return wrong_use;
     }
     for (const Option& option : command.options)
-        if (option.needed && !parser.isSet(QString::fromUtf8(option.name))) {
+        if (option.needed && !parser.isSet(utf8(option.name))) {
             streams.err << "--" << option.name << " is missing.\nUse: " << usage_line(command) << "\n";
             return wrong_use;
         }
@@ -85,7 +88,7 @@ int run_command_line(const QStringList& arguments, Streams& streams)
         return explain_use(streams, QStringLiteral("A command is missing. These are known:"));
     const QString& name = arguments.first();
     if (name == QStringLiteral("--version")) {
-        streams.out << "evenstroke-batch " << EVENSTROKE_VERSION << "\n";
+        streams.out << "evenstroke-batch " << utf8(EVENSTROKE_VERSION) << "\n";
         return done;
     }
     if (name == QStringLiteral("--help") || name == QStringLiteral("help")) {

@@ -101,7 +101,8 @@ int run_flags(const QCommandLineParser& parser, Streams& streams)
                                          flag.subject.kind == Place::Kind::cylinder
                                              ? "cylinder " + record.engine.cylinder_name(flag.subject.number)
                                              : std::string("engine"),
-                                         quantity(flag.quantity).name, level_word(flag.severity), flag.sentence});
+                                         quantity(flag.first_quantity).name, level_word(flag.severity),
+                                         flag.first_sentence});
                       });
 }
 

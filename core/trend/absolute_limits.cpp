@@ -39,6 +39,8 @@ Flag limit_flag(const Judgement& judgement, std::size_t reading, const JudgedVal
     flag.since = judgement.record->readings[reading].taken_at.utc;
     flag.carrying = {reading};
     flag.sentence = limit_sentence(engine, value.place, q, value.raw, mark, above, limit.source);
+    flag.first_sentence = flag.sentence;
+    flag.first_quantity = flag.quantity;
     flag.next_check = "Read it again at once. Stay inside the maker's limits: reduce load if in doubt.";
     flag.cautions = cautions_for({}, q.name, engine.two_stroke());
     return flag;

@@ -141,6 +141,24 @@ std::optional<TimeToLimit> limit_ahead(const Judgement& judgement, const drift::
     return std::nullopt;
 }
 
+/// Writes one view of a drift flag, as it started or as it stands, into the flag and words it.
+void fill_from_view(Flag& flag, const Judgement& judgement, const drift::Flag& from, const drift::Flag::View& view)
+{
+    flag.pattern = view.is_signature ? view.candidate : std::string();
+    flag.pattern_words.clear();
+    flag.ramp = view.shape == drift::Shape::ramp;
+    flag.since = time_of(judgement, from.work_before ? *from.work_before : view.since);
+    flag.months = view.months;
+    flag.evidence = view.evidence;
+    flag.moved = moved_quantities(view, from.cylinder.has_value());
+    lead_with_the_pattern(flag.moved, flag.pattern);
+    if (!flag.moved.empty())
+        flag.quantity = flag.moved.front().quantity;
+    else if (!view.is_signature && !view.candidate.empty())
+        flag.quantity = drift_quantity(view.candidate);
+    word_flag(flag, judgement.record->engine, view.years_by_chance);
+}
+
 Flag translate_flag(const Judgement& judgement, const drift::Input& input, const drift::Output& output,
                     const drift::Flag& from)
 {
@@ -149,22 +167,13 @@ Flag translate_flag(const Judgement& judgement, const drift::Input& input, const
     flag.subject = from.cylinder ? Place::cylinder(static_cast<int>(*from.cylinder) + 1) : Place::engine();
     flag.severity = level_of(from.level);
     flag.level_now = standing_level(from);
-    const drift::Flag::View& view = from.now;
-    flag.pattern = view.is_signature ? view.candidate : std::string();
-    flag.ramp = view.shape == drift::Shape::ramp;
-    flag.since = time_of(judgement, from.work_before ? *from.work_before : view.since);
-    flag.months = view.months;
-    flag.evidence = view.evidence;
     flag.threshold = from.cylinder ? output.cylinder_threshold : output.engine_threshold;
-    flag.moved = moved_quantities(view, from.cylinder.has_value());
-    lead_with_the_pattern(flag.moved, flag.pattern);
-    if (!flag.moved.empty())
-        flag.quantity = flag.moved.front().quantity;
-    else if (!view.is_signature && !view.candidate.empty())
-        flag.quantity = drift_quantity(view.candidate);
-    for (std::size_t i = view.onset; i <= from.last_reading; ++i)
+    fill_from_view(flag, judgement, from, from.at_start);
+    flag.first_sentence = flag.sentence;
+    flag.first_quantity = flag.quantity;
+    fill_from_view(flag, judgement, from, from.now);
+    for (std::size_t i = from.now.onset; i <= from.last_reading; ++i)
         flag.carrying.push_back(i);
-    word_flag(flag, judgement.record->engine, view.years_by_chance);
     flag.time_to_limit = limit_ahead(judgement, input, output, flag, from);
     return flag;
 }

@@ -128,7 +128,9 @@ struct Flag
     double months = 0.0;            ///< from onset to the last reading that carries it
     std::vector<MovedQuantity> moved; ///< strongest first
     double evidence = 0.0, threshold = 0.0; ///< at the last reading that carries it
-    std::string sentence;           ///< what moved, how much, since when, compared with what
+    std::string sentence;           ///< what moved, how much, since when, compared with what: as known now
+    std::string first_sentence;     ///< the same as it stood when the flag started: later readings never change it
+    QuantityId first_quantity = 0;  ///< the one that had moved most then
     std::string chance_sentence;    ///< how likely by chance
     std::string next_check;         ///< what to look at
     std::vector<std::string> cautions; ///< catalogue names, most urgent first

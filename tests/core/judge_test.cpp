@@ -79,6 +79,8 @@ TEST(Judge, CuttingOffTheLastYearChangesNoEarlierRow)
         EXPECT_EQ(cut.flags[i].reading, whole.flags[i].reading);
         EXPECT_EQ(cut.flags[i].subject, whole.flags[i].subject);
         EXPECT_EQ(cut.flags[i].severity, whole.flags[i].severity);
+        EXPECT_EQ(cut.flags[i].first_sentence, whole.flags[i].first_sentence);
+        EXPECT_EQ(cut.flags[i].first_quantity, whole.flags[i].first_quantity);
     }
 }
 
