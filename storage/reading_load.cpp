@@ -20,11 +20,10 @@ constexpr int phase_bits = 2, missing_bits = 2, confirmed_bits = 1, texts_bits =
               unit_bits = 16;
 const char* const packed_values =
     "SELECT v.reading_key, "
-    "(((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 | coalesce(v.words, "
-    "v.place_typed) IS NOT NULL) "
-    "<< 1 | v.confirmed) << 2 | v.missing) << 2 | v.phase, "
-    "CASE WHEN coalesce(v.words, v.place_typed) IS NULL THEN v.typed ELSE json_array(v.typed, v.words, "
-    "v.place_typed) END, "
+    "(((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 "
+    "| (coalesce(v.words, v.place_typed) IS NOT NULL)) << 1 | v.confirmed) << 2 | v.missing) << 2 | v.phase, "
+    "CASE WHEN coalesce(v.words, v.place_typed) IS NULL THEN v.typed "
+    "ELSE json_array(v.typed, v.words, v.place_typed) END, "
     "v.value_si "
     "FROM reading r CROSS JOIN value v ON v.reading_key = r.reading_key WHERE r.state = 1 AND ";
 
