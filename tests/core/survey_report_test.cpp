@@ -251,7 +251,7 @@ TEST(SurveyReportContents, EventsNameTheirHoursAndWhatTheyDoToTheComparison)
     ASSERT_EQ(events->rows.size(), 2u);
     EXPECT_EQ(events->rows[0].cells[1], "cylinder 2");
     EXPECT_EQ(events->rows[0].cells[3], "35000");
-    EXPECT_EQ(events->rows[0].cells[4], "comparison starts anew");
+    EXPECT_EQ(events->rows[0].cells[4], "compared anew");
     EXPECT_EQ(events->rows[0].cells[5], "new rings; second engineer");
     EXPECT_TRUE(contains(events->note, "no approved record book")) << "fuel valves touch the technical file";
 }

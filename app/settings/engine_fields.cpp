@@ -1,0 +1,228 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/settings/engine_fields.h"
+
+#include "app/desk/number_text.h"
+
+#include <QCoreApplication>
+
+namespace evenstroke {
+namespace {
+
+using State = EngineDraft::State;
+QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
+
+EngineField words(const char* group, const char* title, std::function<std::string&(State&)> at)
+{
+    return {tr_(group), tr_(title), {},
+            [at](const State& state) { State copy = state; return to_qstring(at(copy)); },
+            [at](State& state, const QString& text) -> std::optional<Problem> {
+                at(state) = text.trimmed().toStdString();
+                return std::nullopt;
+            }};
+}
+
+/// A number that the engine always has; `get` and `set` speak in the unit shown. Nothing typed is not zero.
+EngineField number(const char* group, const char* title, const char* unit_symbol, std::function<double(const State&)> get,
+                   std::function<void(State&, double)> set)
+{
+    const std::string named = title;
+    return {tr_(group), tr_(title), QString::fromUtf8(unit_symbol),
+            [get](const State& state) {
+                const double value = get(state);
+                return value == 0.0 ? QString() : plain_text(value);
+            },
+            [set, named](State& state, const QString& text) -> std::optional<Problem> {
+                const auto value = read_box(text);
+                if (!value.has_value())
+                    return value.error();
+                if (!value.value())
+                    return invalid_input("\u201c" + named + "\u201d needs a number.", "Type one; what stood there before is kept.");
+                set(state, *value.value());
+                return std::nullopt;
+            }};
+}
+
+/// A number that may be left out.
+EngineField maybe(const char* group, const char* title, const char* unit_symbol, std::function<std::optional<double>(const State&)> get,
+                  std::function<void(State&, std::optional<double>)> set)
+{
+    return {tr_(group), tr_(title), QString::fromUtf8(unit_symbol), [get](const State& state) { return plain_text(get(state)); },
+            [set](State& state, const QString& text) -> std::optional<Problem> {
+                const auto value = read_box(text);
+                if (!value.has_value())
+                    return value.error();
+                set(state, value.value());
+                return std::nullopt;
+            }};
+}
+
+EngineField optional_member(const char* group, const char* title, const char* unit_symbol, std::optional<double> Engine::* member)
+{
+    return maybe(group, title, unit_symbol, [member](const State& state) { return state.engine.*member; },
+                 [member](State& state, std::optional<double> value) { state.engine.*member = value; });
+}
+
+EngineField length(const char* title, Length Engine::* member)
+{
+    return number("Engine", title, "mm", [member](const State& state) { return (state.engine.*member).value() * 1000.0; },
+                  [member](State& state, double value) { state.engine.*member = millimetres(value); });
+}
+
+EngineField choice(const char* title, QStringList choices, std::function<int(const State&)> get, std::function<void(State&, int)> set)
+{
+    return {tr_("Engine"), tr_(title), {}, [choices, get](const State& state) { return choices.value(get(state)); },
+            [choices, set](State& state, const QString& text) -> std::optional<Problem> {
+                set(state, static_cast<int>(choices.indexOf(text)));
+                return std::nullopt;
+            },
+            choices};
+}
+
+EngineField cylinder_count()
+{
+    return {tr_("Engine"), tr_("Cylinders"), {},
+            [](const State& state) { return state.engine.cylinders > 0 ? QString::number(state.engine.cylinders) : QString(); },
+            [](State& state, const QString& text) -> std::optional<Problem> {
+                bool whole = false;
+                const int count = text.trimmed().toInt(&whole);
+                if (!whole || count < 1)
+                    return invalid_input("\"" + text.toStdString() + "\" is no number of cylinders.", "Type a whole number from 1 on.");
+                state.engine.cylinders = count;
+                return std::nullopt;
+            }};
+}
+
+EngineField cylinder_names()
+{
+    return {tr_("Engine"), tr_("Names of cylinders"), {},
+            [](const State& state) {
+                QStringList names;
+                for (const std::string& name : state.engine.cylinder_names)
+                    names.append(to_qstring(name));
+                return names.join(QLatin1Char(' '));
+            },
+            [](State& state, const QString& text) -> std::optional<Problem> {
+                const QStringList names = text.simplified().split(QLatin1Char(' '), Qt::SkipEmptyParts);
+                if (!names.isEmpty() && names.size() != state.engine.cylinders)
+                    return invalid_input(QStringLiteral("%1 names for %2 cylinders.").arg(names.size()).arg(state.engine.cylinders).toStdString(),
+                                         "Give one name a cylinder with blanks between, or none at all.");
+                state.engine.cylinder_names.clear();
+                for (const QString& name : names)
+                    state.engine.cylinder_names.push_back(name.toStdString());
+                return std::nullopt;
+            }};
+}
+
+EngineField firing_order()
+{
+    return {tr_("Engine"), tr_("Firing order"), {},
+            [](const State& state) {
+                QStringList order;
+                for (const int number : state.engine.firing_order)
+                    order.append(to_qstring(state.engine.cylinder_name(number)));
+                return order.join(QLatin1Char('-'));
+            },
+            [](State& state, const QString& text) -> std::optional<Problem> {
+                std::vector<int> order;
+                QString spaced = text;
+                for (const QString& name : spaced.replace(QLatin1Char('-'), QLatin1Char(' ')).split(QLatin1Char(' '), Qt::SkipEmptyParts)) {
+                    const auto cylinder = state.engine.find_cylinder(name.toStdString());
+                    if (!cylinder)
+                        return invalid_input("There is no cylinder \"" + name.toStdString() + "\".", "Write the order as 1-5-3-4-2-6, or leave it empty.");
+                    order.push_back(*cylinder);
+                }
+                state.engine.firing_order = order;
+                return std::nullopt;
+            }};
+}
+
+void add_vessel(std::vector<EngineField>& fields)
+{
+    fields.push_back(words("Ship", "Name of the ship", [](State& s) -> std::string& { return s.vessel.name; }));
+    fields.push_back(words("Ship", "IMO number", [](State& s) -> std::string& { return s.vessel.imo; }));
+    fields.push_back(words("Ship", "Flag", [](State& s) -> std::string& { return s.vessel.flag; }));
+    fields.push_back(words("Ship", "Class", [](State& s) -> std::string& { return s.vessel.class_society; }));
+    fields.push_back(words("Ship", "Class number", [](State& s) -> std::string& { return s.vessel.class_number; }));
+}
+
+void add_engine(std::vector<EngineField>& fields)
+{
+    fields.push_back(words("Engine", "Name of the engine", [](State& s) -> std::string& { return s.engine.name; }));
+    fields.push_back(choice("Working cycle", {tr_("two-stroke"), tr_("four-stroke")},
+                            [](const State& s) { return s.engine.two_stroke() ? 0 : 1; },
+                            [](State& s, int index) { s.engine.kind = index == 1 ? EngineKind::four_stroke : EngineKind::two_stroke; }));
+    fields.push_back(cylinder_count());
+    fields.push_back(cylinder_names());
+    fields.push_back(firing_order());
+    fields.push_back(length("Bore", &Engine::bore));
+    fields.push_back(length("Stroke", &Engine::stroke));
+    fields.push_back(length("Length of connecting rod", &Engine::rod_length));
+    fields.push_back(number("Engine", "Rated power", "kW", [](const State& s) { return s.engine.rated_power.value() / 1000.0; },
+                            [](State& s, double value) { s.engine.rated_power = kilowatts(value); }));
+    fields.push_back(number("Engine", "Rated speed", "r/min", [](const State& s) { return s.engine.rated_speed.value() * 60.0; },
+                            [](State& s, double value) { s.engine.rated_speed = per_minute(value); }));
+    fields.push_back(choice("Maximum pressure", {tr_("follows the load"), tr_("held by the control")},
+                            [](const State& s) { return s.engine.maximum_pressure_controlled ? 1 : 0; },
+                            [](State& s, int index) { s.engine.maximum_pressure_controlled = index == 1; }));
+    fields.push_back(optional_member("Engine", "Mechanical efficiency", "", &Engine::mechanical_efficiency));
+    fields.push_back(maybe("Engine", "Pitch of propeller", "m",
+                           [](const State& s) { return s.engine.propeller_pitch ? std::optional<double>(s.engine.propeller_pitch->value()) : std::nullopt; },
+                           [](State& s, std::optional<double> value) {
+                               s.engine.propeller_pitch = value ? std::optional<Length>(*value * si::metres) : std::nullopt;
+                           }));
+}
+
+void add_reference(std::vector<EngineField>& fields)
+{
+    fields.push_back(number("Reference conditions", "Inlet air", "°C", [](const State& s) { return in_celsius(s.engine.reference.inlet_air); },
+                            [](State& s, double value) { s.engine.reference.inlet_air = celsius(value); }));
+    fields.push_back(number("Reference conditions", "Charge-air coolant", "°C", [](const State& s) { return in_celsius(s.engine.reference.cooler_coolant); },
+                            [](State& s, double value) { s.engine.reference.cooler_coolant = celsius(value); }));
+    fields.push_back(number("Reference conditions", "Barometer", "mbar", [](const State& s) { return in_bar(s.engine.reference.barometer) * 1000.0; },
+                            [](State& s, double value) { s.engine.reference.barometer = bar_absolute(value / 1000.0); }));
+    fields.push_back(words("Reference conditions", "Source", [](State& s) -> std::string& { return s.engine.reference.source; }));
+}
+
+void add_cards(std::vector<EngineField>& fields)
+{
+    fields.push_back(optional_member("For cards", "Compression ratio", "", &Engine::compression_ratio));
+    fields.push_back(optional_member("For cards", "Cylinder closes at", "deg", &Engine::cylinder_closes_deg));
+    fields.push_back(optional_member("For cards", "Cylinder opens at", "deg", &Engine::cylinder_opens_deg));
+    fields.push_back(number("For cards", "Expansion angle", "deg", [](const State& s) { return s.engine.expansion_angle_deg; },
+                            [](State& s, double value) { s.engine.expansion_angle_deg = value; }));
+}
+
+} // namespace
+
+QString plain_text(const std::optional<double>& number)
+{
+    if (!number)
+        return {};
+    return QString::number(*number, 'g', 10);
+}
+
+Result<std::optional<double>> read_box(const QString& text)
+{
+    const QString typed = text.trimmed();
+    if (typed.isEmpty())
+        return std::optional<double>();
+    const auto value = parse_number(typed.toStdString());
+    if (!value.has_value())
+        return value.error();
+    return std::optional<double>(value.value());
+}
+
+const std::vector<EngineField>& engine_fields()
+{
+    static const std::vector<EngineField> fields = [] {
+        std::vector<EngineField> list;
+        add_vessel(list);
+        add_engine(list);
+        add_reference(list);
+        add_cards(list);
+        return list;
+    }();
+    return fields;
+}
+
+} // namespace evenstroke

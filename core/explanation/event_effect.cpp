@@ -1,0 +1,120 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/explanation/event_effect.h"
+
+#include <algorithm>
+
+namespace evenstroke {
+namespace {
+
+/// Turbochargers and coolers are not counted in the engine's particulars; more than this is a slip of the pen.
+constexpr int most_machines = 9;
+
+std::string place_words(const Engine& engine, const Place& place)
+{
+    return place.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(place.number) : place_text(place);
+}
+
+std::string lower_title(const std::string& quantity_name)
+{
+    const auto id = find_quantity(quantity_name);
+    if (!id)
+        return quantity_name;
+    std::string title = quantity(*id).title;
+    if (title.size() > 1 && title[1] >= 'a')
+        title.front() = static_cast<char>(title.front() | 0x20);
+    return title;
+}
+
+bool of_air_side(const EventKind& kind, const Place& place)
+{
+    return kind.concerns == "turbocharger" || kind.concerns == "cooler" || place.kind == Place::Kind::turbocharger
+           || place.kind == Place::Kind::cooler;
+}
+
+const char* const needs_eight = ": eight usable readings are needed before it can be flagged.";
+
+std::string work_sentence(const EventKind& kind, const Event& event, const Engine& engine)
+{
+    if (event.place.kind == Place::Kind::cylinder)
+        return "From here on " + place_words(engine, event.place) + " is compared anew" + needs_eight;
+    if (of_air_side(kind, event.place))
+        return std::string("From here on the engine's air and exhaust side is compared anew") + needs_eight
+               + " The cylinders go on as before.";
+    return std::string("From here on the engine and every cylinder are compared anew") + needs_eight;
+}
+
+std::string instrument_sentence(const EventKind& kind, const Event& event, const Engine& engine)
+{
+    const bool by_part = std::find(kind.quantities.begin(), kind.quantities.end(), "quantity_read") != kind.quantities.end();
+    if (!by_part)
+        return "From here on what this instrument reads takes its own level anew; nothing else changes.";
+    if (event.part.empty())
+        return "It does not say which instrument, so everything at " + place_words(engine, event.place)
+               + " is compared anew. Name the quantity to keep the rest.";
+    return "From here on the " + lower_title(event.part) + " of " + place_words(engine, event.place)
+           + " takes its own level anew; nothing else changes.";
+}
+
+std::string count_words(const Engine& engine)
+{
+    return "The engine has " + std::to_string(engine.cylinders) + (engine.cylinders == 1 ? " cylinder" : " cylinders");
+}
+
+} // namespace
+
+std::string event_effect_word(const Event& event)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    if (!kind || kind->concerns == "ship")
+        return "mark only";
+    if (kind->effect == EventKind::Effect::new_segment)
+        return "compared anew";
+    return kind->effect == EventKind::Effect::new_offset ? "instrument anew" : "mark only";
+}
+
+std::string event_effect_sentence(const Event& event, const Engine& engine)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    if (kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_segment)
+        return work_sentence(*kind, event, engine);
+    if (kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_offset)
+        return instrument_sentence(*kind, event, engine);
+    return "A mark on the trends; the comparison goes on.";
+}
+
+std::string record_book_reminder(const Event& event)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    if (!kind || !kind->record_book)
+        return {};
+    return "This touches a setting or part of the engine's technical file: enter it in the engine's own record book of "
+           "parameters as well. Evenstroke is no approved record book.";
+}
+
+bool takes_number(const EventKind& kind)
+{
+    return kind.concerns != "engine" && kind.concerns != "ship";
+}
+
+Result<Place> place_of_event(const EventKind& kind, std::optional<int> number, const Engine& engine)
+{
+    if (!number) {
+        if (kind.concerns == "cylinder")
+            return invalid_input(kind.title + " belongs to a cylinder, and none is named.", "Type the cylinder's number.");
+        return Place::engine();
+    }
+    if (!takes_number(kind))
+        return invalid_input(kind.title + " belongs to the whole " + kind.concerns + ", not to number " + std::to_string(*number) + ".",
+                             "Leave the number out.");
+    const bool machine = kind.concerns == "turbocharger" || kind.concerns == "cooler";
+    const int most = machine ? most_machines : engine.cylinders;
+    if (*number < 1 || *number > most)
+        return invalid_input(machine ? "There is no " + kind.concerns + " " + std::to_string(*number) + "."
+                                     : count_words(engine) + ", so there is no number " + std::to_string(*number) + ".",
+                             "Type a number from 1 to " + std::to_string(most) + ".");
+    if (kind.concerns == "turbocharger")
+        return Place::turbocharger(*number);
+    return kind.concerns == "cooler" ? Place::cooler(*number) : Place::cylinder(*number);
+}
+
+} // namespace evenstroke

@@ -1,0 +1,26 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/engine/engine.h"
+#include "core/reading/reading.h"
+
+#include <string>
+
+/// What an event does to the comparison, in words: the same that the judging does with it.
+namespace evenstroke {
+
+/// "compared anew", "its instrument anew", "mark only": for a table's cell.
+std::string event_effect_word(const Event& event);
+/// One sentence: "From here on cylinder 4 is compared anew: eight usable readings are needed before it can be flagged."
+std::string event_effect_sentence(const Event& event, const Engine& engine);
+/// For kinds that touch the engine's technical file: where the entry belongs. Empty for the others.
+/// @par Source NOx Technical Code 2008, 6.2.2 and 6.2.3 (record book of engine parameters)
+std::string record_book_reminder(const Event& event);
+
+/// Where an event of this kind belongs when a number was typed with it, or none.
+/// @par Problems invalid_input: the number is asked for and missing, is not wanted, or the engine has no such part
+Result<Place> place_of_event(const EventKind& kind, std::optional<int> number, const Engine& engine);
+/// Whether a number may follow the kind.
+bool takes_number(const EventKind& kind);
+
+} // namespace evenstroke
