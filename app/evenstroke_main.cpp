@@ -1,15 +1,61 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+// evenstroke [HISTORY] [--theme day|night] [--page NAME] [--snapshot FILE.png]
 #include "app/desk/frame.h"
+#include "app/desk/language.h"
 #include "app/desk/pages.h"
 #include "app/desk/snapshot.h"
-#include "app/desk/theme.h"
 #include "app/desk/version.h"
 #include "app/desk/workplace.h"
 
 #include <QApplication>
 #include <QCommandLineParser>
+#include <QLocale>
+#include <QSettings>
+#include <QTextStream>
+
+namespace {
 
 using namespace evenstroke;
+
+struct Wishes
+{
+    QString history, theme, page, snapshot, size;
+};
+
+Wishes read_command_line(const QStringList& arguments)
+{
+    QCommandLineParser parser;
+    parser.setApplicationDescription(QStringLiteral("Performance readings of ship's diesel engines."));
+    parser.addHelpOption();
+    parser.addVersionOption();
+    parser.addPositionalArgument(QStringLiteral("history"), QStringLiteral("The history to open."),
+                                 QStringLiteral("[HISTORY]"));
+    const QCommandLineOption theme(QStringLiteral("theme"), QStringLiteral("day or night."), QStringLiteral("THEME"));
+    const QCommandLineOption page(QStringLiteral("page"), QStringLiteral("The page to show, such as board or trend."),
+                                  QStringLiteral("NAME"));
+    const QCommandLineOption snapshot(QStringLiteral("snapshot"),
+                                      QStringLiteral("Saves the page as a picture and ends."),
+                                      QStringLiteral("FILE.png"));
+    const QCommandLineOption size(QStringLiteral("size"), QStringLiteral("Size of the window, 1366x768."),
+                                  QStringLiteral("WxH"));
+    parser.addOptions({theme, page, snapshot, size});
+    parser.process(arguments);
+    Wishes wishes;
+    wishes.history = parser.positionalArguments().value(0);
+    wishes.theme = parser.value(theme);
+    wishes.page = parser.value(page);
+    wishes.snapshot = parser.value(snapshot);
+    wishes.size = parser.value(size);
+    return wishes;
+}
+
+int wrong_use(const QString& words)
+{
+    QTextStream(stderr) << words << Qt::endl;
+    return 2;
+}
+
+} // namespace
 
 int main(int argc, char** argv)
 {
@@ -17,36 +63,31 @@ int main(int argc, char** argv)
     QApplication::setApplicationName(QStringLiteral("evenstroke"));
     QApplication::setOrganizationName(QStringLiteral("evenstroke"));
     QApplication::setApplicationVersion(program_version());
+    use_language(QLocale());
+    const Wishes wishes = read_command_line(QApplication::arguments());
+    if (!wishes.theme.isEmpty() && wishes.theme != QLatin1String("day") && wishes.theme != QLatin1String("night"))
+        return wrong_use(QStringLiteral("There is no theme %1. Use day or night.").arg(wishes.theme));
 
-    QCommandLineParser parser;
-    parser.setApplicationDescription(QStringLiteral("Performance readings of ship's diesel engines"));
-    parser.addHelpOption();
-    parser.addVersionOption();
-    parser.addPositionalArgument(QStringLiteral("HISTORY"), QStringLiteral("the history to open"));
-    const QCommandLineOption theme_option(QStringLiteral("theme"), QStringLiteral("day or night"), QStringLiteral("theme"));
-    const QCommandLineOption page(QStringLiteral("page"), QStringLiteral("page to show first"), QStringLiteral("name"));
-    const QCommandLineOption snapshot(QStringLiteral("snapshot"), QStringLiteral("save the page as a picture and end"),
-                                      QStringLiteral("file"));
-    parser.addOptions({theme_option, page, snapshot});
-    parser.process(application);
-
-    set_theme(ThemeKind::day);
     Workplace workplace;
     Frame frame(workplace);
     add_all_pages(frame);
-    const bool picture = parser.isSet(snapshot);
-    if (picture)
+    if (!wishes.page.isEmpty() && !frame.page_names().contains(wishes.page))
+        return wrong_use(QStringLiteral("There is no page %1. The pages are: %2.")
+                             .arg(wishes.page, frame.page_names().join(QStringLiteral(", "))));
+    frame.recall();
+    if (!wishes.theme.isEmpty())
+        set_theme(wishes.theme == QLatin1String("night") ? ThemeKind::night : ThemeKind::day);
+    const QStringList sides = wishes.size.split(u'x');
+    if (sides.size() == 2)
+        frame.resize(sides[0].toInt(), sides[1].toInt());
+    else if (!wishes.snapshot.isEmpty())
         frame.resize(1366, 768);
-    else
-        frame.recall();
-    if (parser.isSet(theme_option))
-        frame.use_theme(parser.value(theme_option) == QStringLiteral("night") ? ThemeKind::night : ThemeKind::day);
+
+    const QString last = QSettings().value(QStringLiteral("history/last")).toString();
+    const QString path = !wishes.history.isEmpty() || !wishes.snapshot.isEmpty() ? wishes.history : last;
+    frame.begin(path, wishes.page);
+    if (!wishes.snapshot.isEmpty())
+        return take_snapshot(frame, workplace, wishes.snapshot);
     frame.show();
-    const QString history = parser.positionalArguments().value(0);
-    frame.begin(history, parser.value(page));
-    if (picture)
-        return take_snapshot(frame, workplace, parser.value(snapshot));
-    const int code = QApplication::exec();
-    frame.remember();
-    return code;
+    return QApplication::exec();
 }

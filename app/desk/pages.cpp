@@ -6,7 +6,10 @@
 #include "app/desk/history_page.h"
 #include "app/desk/workplace.h"
 #include "app/entry/entry_page.h"
+#include "app/events/events_page.h"
 #include "app/fleet/fleet_page.h"
+#include "app/settings/engine_page.h"
+#include "app/survey/survey_page.h"
 #include "app/trends/trend_page.h"
 
 #include <algorithm>
@@ -40,6 +43,9 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("board"), Frame::tr("Strip board"), u'B', maker<BoardPage>(), new_flags});
     frame.add_page({QStringLiteral("trend"), Frame::tr("Trend"), u'T', maker<TrendPage>()});
     frame.add_page({QStringLiteral("enter"), Frame::tr("Enter"), u'E', maker<EntryPage>()});
+    frame.add_page({QStringLiteral("events"), Frame::tr("Events"), u'D', maker<EventsPage>()});
+    frame.add_page({QStringLiteral("engine"), Frame::tr("Engine"), u'G', maker<EnginePage>()});
+    frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});
     frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, true});
 }
 

@@ -1,10 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/desk/sample_files.h"
 
-#if __has_include("sample_vessel/sample_vessel.h")
 #include "sample_vessel/sample_vessel.h"
-#define EVENSTROKE_HAS_SAMPLE
-#endif
 
 #include <QDir>
 #include <QFile>
@@ -12,13 +9,6 @@
 
 namespace evenstroke {
 
-#ifndef EVENSTROKE_HAS_SAMPLE
-std::optional<Problem> write_sample_files(const QString&)
-{
-    return Problem{Problem::Kind::not_found, "The sample vessel is not part of this build.",
-                   "Open a history or take in a folder instead."};
-}
-#else
 std::optional<Problem> write_sample_files(const QString& folder)
 {
     for (const sample::SampleFile& file : sample::make_sample_vessel()) {
@@ -34,6 +24,5 @@ std::optional<Problem> write_sample_files(const QString& folder)
     }
     return std::nullopt;
 }
-#endif
 
 } // namespace evenstroke

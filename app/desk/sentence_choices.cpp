@@ -146,7 +146,7 @@ QString sentence_text(SentencePart part, const Workplace& workplace, bool starts
     switch (part) {
     case SentencePart::engine: {
         const EngineChoice* engine = workplace.find_engine(selection.engine);
-        return engine ? engine->name : in_sentence(tr_("no engine"), starts_sentence);
+        return in_sentence(engine ? engine->name : tr_("no engine"), starts_sentence);
     }
     case SentencePart::vessel: {
         const VesselChoice* vessel = workplace.find_vessel(selection.vessel);

@@ -19,7 +19,7 @@ Theme make_day()
     t.ink = QColor(0x1F2A33), t.muted = QColor(0x57616B);
     t.rule = QColor(0xDDD6C6);
     t.line = QColor(0x1D4E79), t.others = QColor(0xB4AFA3), t.band = QColor(0xDDE7EE);
-    t.note = QColor(0x57616B), t.watch = QColor(0x8F5B0C), t.act = QColor(0x8A2B5C), t.ask = QColor(0x1B6670);
+    t.note = QColor(0x57616B), t.watch = QColor(0x96600F), t.act = QColor(0x8A2B5C), t.ask = QColor(0x1B6670);
     return t;
 }
 

@@ -148,6 +148,8 @@ void EntryPage::refresh()
         session_.forget();
     shown_history_ = path;
     if (workplace().history() && !workplace().selection().engine.isEmpty()) {
+        if (workplace().selection().engine != session_.engine_id())
+            ui_->grid->finish_editing(); // what is being typed belongs to the engine that was looked at
         recall_walk_order();
         session_.show_engine(workplace().selection().vessel, workplace().selection().engine);
     }

@@ -25,7 +25,7 @@ std::span<const EventKind> all_event_kinds()
         for (std::size_t row = 0; row < table.rows(); ++row)
             list.push_back({table.cell(row, "name"), table.cell(row, "title"), table.cell(row, "concerns"),
                             effect_of(table.cell(row, "effect")), split_list(table.cell(row, "quantities"), ' '),
-                            table.cell(row, "record_book") == "yes"});
+                            table.cell(row, "record_book") == "yes", table.cell(row, "key").front()});
         return list;
     }();
     return kinds;

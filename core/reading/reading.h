@@ -82,6 +82,7 @@ struct EventKind
     Effect effect;
     std::vector<std::string> quantities; ///< names; "quantity_read" where the event's `part` says which
     bool record_book = false;            ///< touches a setting or part of the NOx technical file
+    char key = 0;                        ///< the letter that chooses it, 'A' to 'Z', each once
 };
 std::span<const EventKind> all_event_kinds();
 const EventKind* find_event_kind(std::string_view name);

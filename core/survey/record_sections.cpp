@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/explanation/event_effect.h"
 #include "core/survey/rounding.h"
 #include "core/survey/survey_context.h"
 
@@ -7,19 +8,6 @@
 
 namespace evenstroke::report {
 namespace {
-
-std::string effect_words(const EventKind* kind)
-{
-    if (!kind)
-        return "mark only";
-    switch (kind->effect) {
-    case EventKind::Effect::new_segment: return "comparison starts anew";
-    case EventKind::Effect::new_offset: return "what the instrument reads starts anew";
-    case EventKind::Effect::mark_only:
-    case EventKind::Effect::other: break;
-    }
-    return "mark only";
-}
 
 Table months_table(const Context& context)
 {
@@ -116,7 +104,7 @@ Section events_section(const Context& context)
                 remark += (remark.empty() ? "" : "; ") + more;
         table.rows.push_back({{date_text(event->date.utc), place_words(context.engine, event->place),
                                event_title(*event) + (kind && kind->record_book ? " *" : ""),
-                               event->running_hours ? rounded_text(*event->running_hours, 0) : "not given", effect_words(kind), remark}, true});
+                               event->running_hours ? rounded_text(*event->running_hours, 0) : "not given", event_effect_word(*event), remark}, true});
     }
     if (record_book)
         table.note = "* touches a setting or part of the engine's technical file: the entry belongs in the engine's own record "
@@ -161,11 +149,12 @@ Section integrity_section(const Context& context)
     FieldList fields;
     fields.fields = {{"Data set, SHA-256", details.data_hash.empty() ? "not given" : details.data_hash},
                      {"Audit log, SHA-256", details.audit_hash.empty() ? "not given" : details.audit_hash},
-                     {"Audit log, lines", details.revisions ? std::to_string(*details.revisions) : "not given"}};
+                     {"Revisions of closed readings", details.revisions ? std::to_string(*details.revisions) : "not given"}};
     Section section{"Integrity of the data", false, {fields}};
     section.blocks.push_back(Paragraph{
-        "The first is of the data set: this engine's readings, events and particulars as Evenstroke hands them out as files; anybody can hand "
-        "them out again from the same history, compute the SHA-256 and compare. A closed reading changes only by a correction "
+        "The first is over all readings of this engine in the history, one line a value in order of time and of the log "
+        "sheet: reading, time in UTC, quantity, place, value and unit as typed, with commas between and a line feed behind; anybody "
+        "can hand the readings out of the same history and compare. A closed reading changes only by a correction "
         "that keeps the old value; the second is of the last line of the audit log, which is only added to, each line carrying the hash of the one before.", {}});
     return section;
 }

@@ -1,23 +1,29 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/board/board_painting.h"
 #include "app/board/board_view.h"
-#include "app/desk/theme.h"
 #include "tests/app/invented_judgement.h"
+#include "tests/app/pictures.h"
 
 #include <gtest/gtest.h>
 
 #include <QAbstractItemModelTester>
+#include <QHeaderView>
+#include <QPainter>
+#include <QPdfWriter>
+#include <QScrollBar>
 #include <QSignalSpy>
+#include <QTemporaryDir>
 #include <QTest>
 
 namespace evenstroke {
 namespace {
 
-QString picture_folder() { return qEnvironmentVariable("EVENSTROKE_PICTURES"); }
-
-void keep_picture(QWidget& widget, const QString& name)
+const BoardCell& cell_of(const Board& board, const char* quantity_name, int cylinder)
 {
-    if (!picture_folder().isEmpty())
-        widget.grab().save(picture_folder() + u'/' + name + QStringLiteral(".png"));
+    for (const BoardRow& row : board.rows)
+        if (row.cells.front().quantity == *find_quantity(quantity_name, Place::Kind::cylinder))
+            return row.cells[static_cast<std::size_t>(cylinder - 1)];
+    throw std::runtime_error("no such row");
 }
 
 TEST(StripBoard, ModelKeepsTheRulesOfItemModels)
@@ -33,16 +39,100 @@ TEST(StripBoard, ModelKeepsTheRulesOfItemModels)
     EXPECT_EQ(model.rowCount(), 0);
 }
 
-TEST(StripBoard, Pictures)
+TEST(StripBoard, SaysTheWorstFlagFirstAndWhatToCheck)
+{
+    const Board board = make_board(*invented::judgement(), TimeRange::since_overhaul);
+    EXPECT_TRUE(board.headline.contains(QStringLiteral("Cylinder 4")));
+    EXPECT_TRUE(board.level_words.startsWith(QStringLiteral("watch since")));
+    EXPECT_TRUE(board.second_line.contains(QStringLiteral("engine-years")));
+    EXPECT_TRUE(board.second_line.contains(QStringLiteral("Next:")));
+    EXPECT_EQ(board.worst_place, Place::cylinder(4));
+}
+
+TEST(StripBoard, AQuietEngineHasNoMarkAndNoLevelWord)
+{
+    const Board board = make_board(*invented::judgement({5, 37, false, true}), TimeRange::all);
+    EXPECT_FALSE(has_mark(cell_of(board, "maximum_pressure", 4).level));
+    EXPECT_TRUE(board.level_words.isEmpty());
+}
+
+TEST(StripBoard, AFreshCylinderIsSaidToBeLearning)
+{
+    const Board board = make_board(*invented::judgement(), TimeRange::since_overhaul);
+    const BoardCell& cell = cell_of(board, "exhaust_temperature", 6);
+    EXPECT_EQ(cell.word, QStringLiteral("learning, 4 of 8"));
+    EXPECT_FALSE(cell.usual_low.has_value()) << "no usual range may be drawn before it is known";
+    EXPECT_LT(cell.points.size(), 5U) << "the strip starts at the last overhaul";
+}
+
+TEST(StripBoard, EveryCellCanBeSpoken)
+{
+    BoardModel model;
+    model.set_board(make_board(*invented::judgement(), TimeRange::all), 1);
+    const QModelIndex index = model.find(*find_quantity("compression_pressure"), Place::cylinder(4));
+    const QString spoken = index.data(Qt::AccessibleTextRole).toString();
+    EXPECT_TRUE(spoken.contains(QStringLiteral("Cylinder 4"))) << spoken.toStdString();
+    EXPECT_TRUE(spoken.contains(QStringLiteral("bar"))) << spoken.toStdString();
+    EXPECT_TRUE(spoken.endsWith(QStringLiteral("watch"))) << spoken.toStdString();
+}
+
+TEST(StripBoard, ArrowKeysMoveTheCellInHandAndEnterAsksForItsTrend)
+{
+    BoardView view;
+    view.resize(1150, 620);
+    view.show_board(make_board(*invented::judgement(), TimeRange::since_overhaul));
+    view.show();
+    QSignalSpy moved(&view, &BoardView::moved_to), asked(&view, &BoardView::asked_for);
+    view.setCurrentIndex(view.board_model().index(0, 0));
+    QTest::keyClick(&view, Qt::Key_Down);
+    QTest::keyClick(&view, Qt::Key_Right);
+    EXPECT_EQ(view.currentIndex(), view.board_model().index(1, 1));
+    QTest::keyClick(&view, Qt::Key_Return);
+    ASSERT_EQ(asked.count(), 1);
+    EXPECT_EQ(asked.at(0).at(0).toInt(), *find_quantity("compression_pressure"));
+    EXPECT_GE(moved.count(), 2);
+}
+
+TEST(StripBoard, NarrowsTheColumnsToTwelveCylindersAndScrollsSidewaysFromThirteen)
 {
     for (const int cylinders : {4, 6, 9, 12, 16}) {
         BoardView view;
-        view.resize(1150, 620);
+        view.resize(1142, 620); // the page at 1366 x 768
         view.show_board(make_board(*invented::judgement({cylinders, 37, true, true}), TimeRange::since_overhaul));
         view.show();
-        view.setFocus();
+        QTest::qWait(1);
+        EXPECT_EQ(view.horizontalScrollBar()->maximum() > 0, cylinders > 12) << cylinders;
         keep_picture(view, QStringLiteral("board_view_%1").arg(cylinders));
     }
+}
+
+TEST(StripBoard, GoesOnPaperInBlackAndGrey)
+{
+    const QTemporaryDir folder;
+    const QString path = folder.filePath(QStringLiteral("board.pdf"));
+    QPdfWriter writer(path);
+    writer.setPageSize(QPageSize(QPageSize::A4));
+    writer.setPageOrientation(QPageLayout::Landscape);
+    writer.setResolution(96);
+    QPainter painter(&writer);
+    paint_board_page(painter, QRectF(0, 0, writer.width(), writer.height()),
+                     make_board(*invented::judgement({12, 37, true, true}), TimeRange::all), QStringLiteral("Main engine"));
+    painter.end();
+    EXPECT_GT(QFileInfo(path).size(), 5000);
+    QImage paper(1100, 760, QImage::Format_RGB32);
+    paper.fill(Qt::white);
+    QPainter on_image(&paper);
+    paint_board_page(on_image, QRectF(20, 20, 1060, 720), make_board(*invented::judgement(), TimeRange::all),
+                     QStringLiteral("Main engine of Quiet Barley"));
+    on_image.end();
+    for (int y = 0; y < paper.height(); ++y)
+        for (int x = 0; x < paper.width(); ++x) {
+            const QRgb pixel = paper.pixel(x, y);
+            // Smoothed text may differ by a step or two between the channels.
+            ASSERT_NEAR(qRed(pixel), qBlue(pixel), 3) << x << ' ' << y;
+        }
+    if (const QString keep = qEnvironmentVariable("EVENSTROKE_PICTURES"); !keep.isEmpty())
+        paper.save(keep + QStringLiteral("/board_paper.png"));
 }
 
 } // namespace

@@ -1,9 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/desk/language.h"
 #include "app/desk/theme.h"
 
 #include <gtest/gtest.h>
 
 #include <QApplication>
+#include <QLocale>
 #include <QSettings>
 #include <QStandardPaths>
 #include <QTemporaryDir>
@@ -21,6 +23,7 @@ int main(int argc, char** argv)
     QApplication application(argc, argv);
     QApplication::setApplicationName(QStringLiteral("evenstroke-tests"));
     QApplication::setOrganizationName(QStringLiteral("evenstroke-tests"));
+    evenstroke::use_language(QLocale(QLocale::English));
     evenstroke::set_theme(evenstroke::ThemeKind::day);
     return RUN_ALL_TESTS();
 }

@@ -1,0 +1,105 @@
+<?xml version="1.0" encoding="utf-8"?>
+<!DOCTYPE TS>
+<!-- SPDX-License-Identifier: GPL-3.0-or-later -->
+<!-- English words that count: one and many. The other texts stand in the sources. -->
+<TS version="2.1" language="en" sourcelanguage="en">
+<context>
+    <name>evenstroke</name>
+    <message numerus="yes">
+        <source>%n value(s) to look at again at the next reading; nothing else stands out.</source>
+        <translation>
+            <numerusform>One value to look at again at the next reading; nothing else stands out.</numerusform>
+            <numerusform>%n values to look at again at the next reading; nothing else stands out.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n more below.</source>
+        <translation>
+            <numerusform>One more below.</numerusform>
+            <numerusform>%n more below.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n month(s) or more</source>
+        <translation>
+            <numerusform>1 month or more</numerusform>
+            <numerusform>%n months or more</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n month(s)</source>
+        <translation>
+            <numerusform>1 month</numerusform>
+            <numerusform>%n months</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n day(s) ago</source>
+        <translation>
+            <numerusform>1 day ago</numerusform>
+            <numerusform>%n days ago</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n month(s) ago</source>
+        <translation>
+            <numerusform>1 month ago</numerusform>
+            <numerusform>%n months ago</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n year(s) ago</source>
+        <translation>
+            <numerusform>1 year ago</numerusform>
+            <numerusform>%n years ago</numerusform>
+        </translation>
+    </message>
+</context>
+<context>
+    <name>evenstroke::RailButton</name>
+    <message numerus="yes">
+        <source>%1, %n new</source>
+        <translation>
+            <numerusform>%1, one new</numerusform>
+            <numerusform>%1, %n new</numerusform>
+        </translation>
+    </message>
+</context>
+<context>
+    <name>evenstroke::HistoryPage</name>
+    <message numerus="yes">
+        <source>%1 · %n engine(s)</source>
+        <translation>
+            <numerusform>%1 · 1 engine</numerusform>
+            <numerusform>%1 · %n engines</numerusform>
+        </translation>
+    </message>
+</context>
+<context>
+    <name>evenstroke::FleetModel</name>
+    <message numerus="yes">
+        <source>%n engine(s) quiet</source>
+        <translation>
+            <numerusform>1 engine quiet</numerusform>
+            <numerusform>%n engines quiet</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source> %n place(s) concerned.</source>
+        <translation>
+            <numerusform> One place concerned.</numerusform>
+            <numerusform> %n places concerned.</numerusform>
+        </translation>
+    </message>
+</context>
+<context>
+    <name>evenstroke::FleetPage</name>
+    <message numerus="yes">
+        <source>%n engine(s)</source>
+        <translation>
+            <numerusform>1 engine</numerusform>
+            <numerusform>%n engines</numerusform>
+        </translation>
+    </message>
+</context>
+</TS>

@@ -1,0 +1,206 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/settings/engine_page.h"
+
+#include "storage/vessel_store.h"
+#include "tests/app/page_desk.h"
+
+#include <QAbstractItemModelTester>
+#include <QClipboard>
+#include <QGuiApplication>
+#include <QLabel>
+#include <QLineEdit>
+#include <QPushButton>
+#include <QTableView>
+
+namespace evenstroke {
+namespace {
+
+class EngineDesk : public test::PageDesk
+{
+protected:
+    void SetUp() override
+    {
+        open(6);
+        page_ = make_page<EnginePage>();
+    }
+    template <typename Widget>
+    Widget& child(const char* name) { return *page_->findChild<Widget*>(QString::fromLatin1(name)); }
+    QString problem() { return child<QLabel>("problem").text(); }
+    QLineEdit& box(const QString& title)
+    {
+        for (QLineEdit* line : page_->findChildren<QLineEdit*>())
+            if (line->accessibleName() == title)
+                return *line;
+        throw std::runtime_error("no box " + title.toStdString());
+    }
+    void type_into(QLineEdit& line, const QString& text)
+    {
+        line.setText(text);
+        emit line.editingFinished();
+    }
+    storage::StoredEngine stored()
+    {
+        return storage::VesselStore(*workplace_->history()).engine(engine().toStdString()).value();
+    }
+    std::unique_ptr<EnginePage> page_;
+};
+
+TEST_F(EngineDesk, ShowsWhatTheHistoryHolds)
+{
+    EXPECT_EQ(box("Bore").text(), "600");
+    EXPECT_EQ(box("Rated power").text(), "12000");
+    EXPECT_EQ(box("Name of the ship").text(), "Quiet Barley");
+    EXPECT_FALSE(page_->draft().dirty());
+}
+
+TEST_F(EngineDesk, SavesANewRevisionWithItsReason)
+{
+    type_into(box("Bore"), "610,5");
+    EXPECT_TRUE(page_->draft().dirty());
+    EXPECT_FALSE(page_->save()) << "no reason is given yet";
+    EXPECT_TRUE(problem().contains("reason"));
+    child<QLineEdit>("why_field").setText("measured at the overhaul");
+    ASSERT_TRUE(page_->save()) << problem().toStdString();
+    EXPECT_NEAR(stored().engine.bore.value(), 0.6105, 1e-12);
+    EXPECT_EQ(stored().revision, 2);
+    EXPECT_EQ(storage::VesselStore(*workplace_->history()).revisions(engine().toStdString()).value().back().by.why, "measured at the overhaul");
+}
+
+TEST_F(EngineDesk, RefusesWhatCannotBe)
+{
+    type_into(box("Length of connecting rod"), "500");
+    child<QLineEdit>("why_field").setText("try");
+    EXPECT_FALSE(page_->save());
+    EXPECT_TRUE(problem().contains("rod")) << problem().toStdString();
+    EXPECT_EQ(stored().revision, 1);
+}
+
+TEST_F(EngineDesk, TextThatIsNoNumberLeavesTheBoxAsItWas)
+{
+    type_into(box("Stroke"), "two metres");
+    EXPECT_EQ(box("Stroke").text(), "2400");
+    EXPECT_FALSE(problem().isEmpty());
+    type_into(box("Inlet air"), "");
+    EXPECT_EQ(box("Inlet air").text(), "25") << "nothing typed is not zero degrees";
+}
+
+TEST_F(EngineDesk, UndoTakesOneStepBack)
+{
+    type_into(box("Bore"), "610");
+    type_into(box("Stroke"), "2410");
+    page_->draft().undo().undo();
+    EXPECT_EQ(box("Stroke").text(), "2400");
+    EXPECT_EQ(box("Bore").text(), "610");
+    page_->draft().undo().undo();
+    EXPECT_FALSE(page_->draft().dirty());
+}
+
+TEST_F(EngineDesk, PastedShopTrialIsShownBeforeItIsTaken)
+{
+    // Invented figures, as a spreadsheet puts them on the clipboard in a country with decimal commas.
+    QGuiApplication::clipboard()->setText("Load\t%\t50\t85\nMax. pressure\tbar\t121,5\t150,2\nSmoke\t-\t0\t1\nT/C speed\trpm\t9200\t12800\n");
+    page_->findChild<QPushButton*>("baseline_button")->click();
+    child<QPushButton>("paste_button").click();
+    EXPECT_TRUE(child<QWidget>("trial").isVisible());
+    EXPECT_EQ(page_->draft().state().engine.baseline.size(), 3u) << "nothing is changed yet";
+    page_->take_trial();
+    const auto& points = page_->draft().state().engine.baseline;
+    ASSERT_EQ(points.size(), 4u);
+    EXPECT_EQ(points[2].load_percent, 85.0);
+    EXPECT_NEAR(points[0].values.at("maximum_pressure"), 121.5, 1e-9);
+    EXPECT_NEAR(points[0].values.at("compression_pressure"), 90.0, 1e-9) << "what was not in the sheet stays";
+    page_->draft().undo().undo();
+    EXPECT_EQ(page_->draft().state().engine.baseline.size(), 3u) << "one undo takes the whole paste back";
+}
+
+TEST_F(EngineDesk, PasteWithoutATableSaysSo)
+{
+    EXPECT_FALSE(page_->show_trial("good morning"));
+    EXPECT_TRUE(problem().contains("no table")) << problem().toStdString();
+}
+
+TEST_F(EngineDesk, LimitIsAddedByNamingItsQuantity)
+{
+    QAbstractItemModel& model = *child<QTableView>("limits_table").model();
+    const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::Fatal);
+    ASSERT_EQ(model.rowCount(), 1) << "only the empty row";
+    EXPECT_FALSE(model.setData(model.index(0, 0), "Maximum presure"));
+    EXPECT_TRUE(problem().contains("Maximum pressure")) << "the nearest name is offered: " << problem().toStdString();
+    ASSERT_TRUE(model.setData(model.index(0, 0), "maximum pressure"));
+    ASSERT_EQ(model.rowCount(), 2);
+    ASSERT_TRUE(model.setData(model.index(0, 3), "165,5"));
+    ASSERT_TRUE(model.setData(model.index(0, 4), "nameplate"));
+    const AbsoluteLimit& limit = page_->draft().state().engine.limits.front();
+    EXPECT_EQ(limit.quantity, "maximum_pressure");
+    EXPECT_EQ(limit.high, 165.5);
+    EXPECT_FALSE(limit.low.has_value());
+    EXPECT_EQ(limit.source, "nameplate");
+}
+
+TEST_F(EngineDesk, CoefficientsAndInstrumentsAreTables)
+{
+    for (const char* name : {"coefficients_table", "instruments_table"}) {
+        QAbstractItemModel& model = *child<QTableView>(name).model();
+        const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::Fatal);
+        ASSERT_TRUE(model.setData(model.index(0, 0), "Exhaust temperature")) << name;
+        ASSERT_TRUE(model.setData(model.index(0, 1), "0.0012")) << name;
+    }
+    EXPECT_EQ(page_->draft().state().engine.correction.at("exhaust_temperature").per_inlet_air, 0.0012);
+    EXPECT_EQ(page_->draft().state().engine.instruments.front().serial, "0.0012");
+    QAbstractItemModel& model = *child<QTableView>("coefficients_table").model();
+    EXPECT_FALSE(model.setData(model.index(1, 0), "Exhaust temperature")) << "one row a quantity";
+}
+
+TEST_F(EngineDesk, BaselineCellsAreTypedAndEmptied)
+{
+    QAbstractItemModel& model = *child<QTableView>("baseline_table").model();
+    const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::Fatal);
+    const int row = page_->baseline().row_of("maximum_pressure");
+    ASSERT_GT(row, 0);
+    ASSERT_TRUE(model.setData(model.index(row, 1), "143.5"));
+    EXPECT_EQ(page_->draft().state().engine.baseline[1].values.at("maximum_pressure"), 143.5);
+    ASSERT_TRUE(model.setData(model.index(row, 1), ""));
+    EXPECT_EQ(page_->draft().state().engine.baseline[1].values.count("maximum_pressure"), 0u);
+    EXPECT_FALSE(model.setData(model.index(0, 1), ""));
+}
+
+TEST_F(EngineDesk, ANewEngineOfTheShipIsMade)
+{
+    page_->begin_new(false);
+    EXPECT_EQ(page_->draft().state().vessel.name, "Quiet Barley");
+    EXPECT_FALSE(page_->save());
+    const std::pair<const char*, const char*> typed[] = {{"Name of the engine", "Auxiliary engine 2"}, {"Cylinders", "5"}, {"Bore", "210"},
+                                                         {"Stroke", "320"}, {"Length of connecting rod", "620"}, {"Rated power", "900"}, {"Rated speed", "900"}};
+    for (const auto& [title, text] : typed)
+        type_into(box(QString::fromUtf8(title)), QString::fromUtf8(text));
+    ASSERT_TRUE(page_->save()) << problem().toStdString();
+    EXPECT_EQ(storage::VesselStore(*workplace_->history()).engines().value().size(), 3u);
+    EXPECT_EQ(workplace_->selection().engine.toStdString(), page_->draft().state().engine.id) << "the new engine is looked at";
+}
+
+TEST_F(EngineDesk, LeavingWithUnsavedChangesIsAskedOnce)
+{
+    EXPECT_TRUE(page_->may_leave());
+    type_into(box("Bore"), "610");
+    EXPECT_FALSE(page_->may_leave());
+    EXPECT_TRUE(page_->may_leave());
+    page_->refresh();
+    EXPECT_EQ(box("Bore").text(), "610") << "the changes wait";
+}
+
+TEST_F(EngineDesk, PicturesAreKept)
+{
+    const QString folder = qEnvironmentVariable("EVENSTROKE_PICTURES");
+    if (folder.isEmpty())
+        GTEST_SKIP() << "EVENSTROKE_PICTURES names no folder";
+    page_->show_trial("Load\t%\t50\t85\nMax. pressure\tbar\t121,5\t150,2\nSmoke\t-\t0\t1\nT/C speed\trpm\t9200\t12800\n");
+    int number = 0;
+    for (const char* section : {"particulars_button", "baseline_button", "coefficients_button", "limits_button", "instruments_button"}) {
+        child<QPushButton>(section).click();
+        QApplication::processEvents();
+        page_->grab().save(folder + QStringLiteral("/engine_page_%1.png").arg(++number));
+    }
+}
+
+} // namespace
+} // namespace evenstroke
