@@ -49,7 +49,12 @@ EventsPage::EventsPage(Workplace& place, QWidget* parent)
     connect_diary();
 }
 
-EventsPage::~EventsPage() = default;
+EventsPage::~EventsPage()
+{
+    // A field that loses the focus while the window goes says what was typed to a page that is half gone.
+    for (QWidget* child : findChildren<QWidget*>())
+        child->blockSignals(true);
+}
 
 void EventsPage::make_kind_buttons()
 {

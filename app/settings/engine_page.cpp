@@ -44,7 +44,12 @@ EnginePage::EnginePage(Workplace& place, QWidget* parent)
     say({});
 }
 
-EnginePage::~EnginePage() = default;
+EnginePage::~EnginePage()
+{
+    // A field that loses the focus while the window goes says what was typed to a page that is half gone.
+    for (QWidget* child : findChildren<QWidget*>())
+        child->blockSignals(true);
+}
 
 /// Boxes in two columns, ship and reference conditions beside the engine.
 void EnginePage::make_fields()

@@ -64,7 +64,12 @@ SurveyPage::SurveyPage(Workplace& place, QWidget* parent)
     connect(&page_timer_, &QTimer::timeout, this, &SurveyPage::write_next_page);
 }
 
-SurveyPage::~SurveyPage() = default;
+SurveyPage::~SurveyPage()
+{
+    // A field that loses the focus while the window goes says what was typed to a page that is half gone.
+    for (QWidget* child : findChildren<QWidget*>())
+        child->blockSignals(true);
+}
 
 void SurveyPage::connect_choices()
 {

@@ -7,6 +7,7 @@
 #include <QFile>
 #include <QJsonArray>
 #include <QJsonDocument>
+#include <QJsonObject>
 #include <QTemporaryDir>
 
 #include <set>
@@ -202,7 +203,7 @@ TEST(BatchTake, ABadFolderIsRefusedWholeAndKeepGoodTakesTheRest)
     QFile readings(folder.filePath("sample/main_engine/readings.csv"));
     ASSERT_TRUE(readings.exists());
     ASSERT_TRUE(readings.open(QIODevice::Append));
-    readings.write("2026-12,2026-12-01T06:30Z,colour_of_smoke,,3,bar\n");
+    readings.write("2026-12,2026-12-01T06:30Z,colour_of_smoke,,3,bar,,,\n");
     readings.close();
     const QString history = folder.filePath("h.evenstroke");
     const Outcome refused = run({"take", folder.filePath("sample"), "--history", history});

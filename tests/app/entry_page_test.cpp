@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Entering a reading from beginning to end, by keys, on a history in a file.
+#include "app/entry/closed_view.h"
 #include "app/entry/entry_page.h"
 
 #include "app/desk/workplace.h"
@@ -91,7 +92,8 @@ protected:
     std::vector<storage::ReadingEntry> listed(storage::ReadingState state) const
     {
         std::vector<storage::ReadingEntry> found;
-        for (const auto& entry : storage::ReadingStore(*workplace->history()).list(owner()).value())
+        const auto listed = storage::ReadingStore(*workplace->history()).list(owner());
+        for (const auto& entry : listed.value())
             if (entry.state == state)
                 found.push_back(entry);
         return found;

@@ -142,7 +142,7 @@ TEST(MonthTicker, SetsFewTicksOnTheStartsOfMonths)
     {
         using MonthTicker::createTickVector, MonthTicker::getTickLabel, MonthTicker::getTickStep;
     } ticker;
-    const double start = QDateTime(QDate(2028, 3, 14), QTime(6, 0), Qt::UTC).toSecsSinceEpoch();
+    const double start = static_cast<double>(QDateTime(QDate(2028, 3, 14), QTime(6, 0), Qt::UTC).toSecsSinceEpoch());
     for (const double years : {0.4, 1.0, 3.0, 10.0}) {
         const QCPRange range(start, start + years * 365.25 * 86400.0);
         const QVector<double> ticks = ticker.createTickVector(ticker.getTickStep(range), range);
