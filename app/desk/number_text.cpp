@@ -52,9 +52,9 @@ QString number_text(double value, int decimals)
 QString whole_text(double value)
 {
     QString digits = number_text(value, 0);
-    const qsizetype count = digits.size() - (digits.startsWith(minus_sign) ? 1 : 0);
-    if (count >= 5)
-        for (qsizetype i = digits.size() - 3; i > digits.size() - count; i -= 3)
+    const qsizetype first = digits.startsWith(minus_sign) ? 1 : 0;
+    if (digits.size() - first >= 5)
+        for (qsizetype i = digits.size() - 3; i > first; i -= 3)
             digits.insert(i, narrow_space);
     return digits;
 }

@@ -69,7 +69,7 @@ TimeText time_text(const StampedTime& time)
     const int minutes = std::abs(time.offset_minutes);
     return {local.toString(QStringLiteral("yyyy-MM-dd")), local.toString(QStringLiteral("HH:mm")),
             QStringLiteral("%1%2:%3")
-                .arg(time.offset_minutes < 0 ? u'-' : u'+')
+                .arg(QChar(time.offset_minutes < 0 ? u'-' : u'+'))
                 .arg(minutes / 60, 2, 10, QChar(u'0'))
                 .arg(minutes % 60, 2, 10, QChar(u'0'))};
 }

@@ -140,7 +140,9 @@ TEST_F(EntryDesk, TakesAWholeReadingByKeysAlone)
     EXPECT_EQ(drafts.front().values, 20);
     EXPECT_TRUE(page->draft_text().startsWith(QStringLiteral("draft saved")));
     const EntryOpinions& opinions = page->judge_now();
-    EXPECT_TRUE(opinions.notes().empty()) << page->notes().text().toStdString();
+    // The invented reading is dated 2031, so that its time is still to come is all there may be to say.
+    EXPECT_LE(opinions.notes().size(), 1u) << page->notes().text().toStdString();
+    EXPECT_TRUE(opinions.notes().empty() || page->notes().text().contains(QStringLiteral("is still to come")));
     EXPECT_TRUE(opinions.marks().empty());
     page->close_reading();
     EXPECT_EQ(page->session().state(), EntrySession::State::closed);
