@@ -107,10 +107,11 @@ const std::map<std::string, std::string>& known_words()
     return known;
 }
 
+/// A bare "1" behind a heading is a cylinder's number, not the unit of bare numbers.
 std::optional<WrittenUnit> unit_in(std::string_view text)
 {
     const auto found = find_unit(trimmed(text));
-    return found.has_value() ? std::optional<WrittenUnit>(found.value()) : std::nullopt;
+    return found.has_value() && unit(found.value().id).dimension != Dimension::number ? std::optional<WrittenUnit>(found.value()) : std::nullopt;
 }
 
 /// Takes the unit off a heading: in brackets, behind a comma, or as the last word.
