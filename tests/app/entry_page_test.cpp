@@ -4,6 +4,7 @@
 #include "app/entry/entry_page.h"
 
 #include "app/desk/workplace.h"
+#include "app/entry/closed_view.h"
 #include "app/entry/ear.h"
 #include "app/entry/log_sheet_view.h"
 #include "app/entry/note_lines.h"
