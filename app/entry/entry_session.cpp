@@ -199,6 +199,7 @@ std::vector<Value> EntrySession::find_ship_values(StampedTime near, bool& open)
         return {};
     open = nearest->state == ReadingState::draft;
     ship_reading_id_ = nearest->id;
+    ship_taken_at_ = nearest->taken_at.utc;
     const auto ship = store().reading(nearest->id);
     return ship ? ship.value().values : std::vector<Value>();
 }
@@ -251,14 +252,31 @@ void EntrySession::set_taken_at(StampedTime time)
             failed(renamed.error());
             return;
         }
-        if (!ship_reading_id_.empty() && !sheet_.ship_values().empty())
-            static_cast<void>(store().rename_draft(
-                ship_reading_id_,
-                free_name(store().list(Owner::vessel(to_std(vessel_id_))), time, ship_reading_id_), time));
         saved_at_ = QDateTime::currentDateTime();
     }
     sheet_.set_head(reading.id, name, time);
+    follow_ship(time);
     emit changed();
+}
+
+/// Another time may find what was entered for the ship about then. Values typed here go along with the reading.
+void EntrySession::follow_ship(StampedTime time)
+{
+    const bool typed_here = sheet_.ship_open() && !sheet_.ship_values().empty();
+    if (!typed_here) {
+        bool open = true;
+        std::vector<Value> values = find_ship_values(time, open);
+        sheet_.set_ship(std::move(values), open);
+        return;
+    }
+    if (ship_reading_id_.empty() || apart(ship_taken_at_, time.utc) <= storage::shared_within)
+        return;
+    const auto taken = store().list(Owner::vessel(to_std(vessel_id_)));
+    const auto moved = store().rename_draft(ship_reading_id_, free_name(taken, time, ship_reading_id_), time);
+    if (moved)
+        ship_taken_at_ = time.utc;
+    else
+        failed(moved.error());
 }
 
 void EntrySession::set_row_unit(QuantityId quantity, WrittenUnit unit)

@@ -83,6 +83,7 @@ private:
     bool open_engine();
     void load(Reading reading, State state);
     std::vector<Value> find_ship_values(StampedTime near, bool& open);
+    void follow_ship(StampedTime time);
     void remember(const LogBox& box, EntrySheet::Owner owner);
     bool make_drafts();
     bool write_drafts();
@@ -97,6 +98,7 @@ private:
     QString vessel_id_, engine_id_;
     SheetStart engine_start_; ///< what is the same for every reading of this engine
     std::string ship_reading_id_;
+    TimePoint ship_taken_at_{};
     Reading stored_; ///< a closed reading as it stands in the history
     std::set<LogBox> waiting_reading_, waiting_ship_;
     storage::Signature signature_;

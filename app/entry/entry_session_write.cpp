@@ -79,6 +79,7 @@ bool EntrySession::make_drafts()
         if (!draft)
             return failed(draft.error());
         ship_reading_id_ = draft.value().id;
+        ship_taken_at_ = time.utc;
     }
     return true;
 }

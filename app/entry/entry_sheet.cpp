@@ -53,6 +53,13 @@ void EntrySheet::set_head(const std::string& id, const std::string& name, Stampe
     emit head_changed();
 }
 
+void EntrySheet::set_ship(std::vector<Value> values, bool open)
+{
+    start_.ship = std::move(values);
+    start_.ship_open = open;
+    emit ship_changed();
+}
+
 WrittenUnit EntrySheet::row_unit(QuantityId quantity) const
 {
     const auto chosen = start_.units.find(quantity);

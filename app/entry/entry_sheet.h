@@ -48,6 +48,10 @@ public:
     /// Identity, name and time; the values stay.
     void set_head(const std::string& id, const std::string& name, StampedTime taken_at);
 
+    bool ship_open() const { return start_.ship_open; }
+    /// Other values of the ship, because the time changed.
+    void set_ship(std::vector<Value> values, bool open);
+
     WrittenUnit row_unit(QuantityId quantity) const;
     void set_row_unit(QuantityId quantity, WrittenUnit unit);
 
@@ -68,6 +72,7 @@ signals:
     void value_put(const evenstroke::LogBox& box, evenstroke::EntrySheet::Owner owner);
     void row_unit_changed(evenstroke::QuantityId quantity);
     void head_changed();
+    void ship_changed();
 
 private:
     std::vector<Value>& values_of(Owner owner);

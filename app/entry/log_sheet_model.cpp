@@ -19,6 +19,7 @@ LogSheetModel::LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* paren
         rebuild();
     });
     connect(&sheet_, &EntrySheet::value_put, this, [this](const LogBox& put_box) { tell_box(put_box); });
+    connect(&sheet_, &EntrySheet::ship_changed, this, &LogSheetModel::rebuild);
     connect(&sheet_, &EntrySheet::row_unit_changed, this, [this] {
         if (!rows_.empty())
             emit dataChanged(index(0, 0), index(rowCount() - 1, columnCount() - 1));

@@ -81,7 +81,7 @@ void write_entry_history(const QString& path, int readings)
     storage::ReadingStore store(*history);
     for (int month = 0; month < readings; ++month) {
         const int back = readings - 1 - month;
-        const int number = (2031 * 12 + 2) - back; // March 2031 is the last
+        const int number = (2021 * 12 + 2) - back; // March 2021 is the last
         const std::string name =
             std::to_string(number / 12) + (number % 12 < 9 ? "-0" : "-") + std::to_string(number % 12 + 1);
         const StampedTime taken = must(parse_time(name + "-01T08:00+02:00"));

@@ -6,7 +6,7 @@
 namespace evenstroke::test {
 
 /// Writes a history of an invented ship with a six-cylinder main engine and an auxiliary engine. The main
-/// engine has so many monthly readings, the last on 1 March 2031; the auxiliary has none.
+/// engine has so many monthly readings, the last on 1 March 2021; the auxiliary has none.
 void write_entry_history(const QString& path, int readings);
 
 /// The main engine's healthy value in that history, as its own baseline and offsets give it at 75 % load.
