@@ -238,12 +238,6 @@ void EntrySession::set_taken_at(StampedTime time)
     if (state_ != State::writing ||
         (time.utc == reading.taken_at.utc && time.offset_minutes == reading.taken_at.offset_minutes))
         return;
-    if (reading.id.empty() && sheet_.empty()) {
-        // Nothing typed yet: what the ship lends is what was entered about the new time.
-        Reading fresh = reading;
-        fresh.taken_at = time;
-        return load(std::move(fresh), state_);
-    }
     std::string name = reading.name;
     if (!reading.id.empty()) {
         name = free_name(store().list(Owner::engine(to_std(engine_id_))), time, reading.id);
