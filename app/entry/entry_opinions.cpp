@@ -70,7 +70,8 @@ void EntryOpinions::ask(const EntrySheet& sheet, std::shared_ptr<const Judgement
     const std::vector<Reading> earlier = readings_before(*judgement_, whole, sheet.reading().closed);
     const ReadingContext context{earlier, judgement_->record->events, now};
     for (const Relation& relation : check_relations(sheet.engine(), whole, context)) {
-        SheetNote note{to_qstring(relation.sentence), {}, relation.impossible};
+        SheetNote note{
+            to_qstring(relation.sentence), {}, relation.impossible, relation.name == "copied_from_previous"};
         for (const ConcernedValue& concerned : relation.concerned)
             note.boxes.push_back({concerned.quantity, concerned.place, Phase::reading});
         if (!all_confirmed(sheet, note.boxes))
@@ -83,11 +84,15 @@ void EntryOpinions::ask(const EntrySheet& sheet, std::shared_ptr<const Judgement
 /// Doubts about one box stand in the ear of that box; here are those about a row, a cylinder or everything.
 void EntryOpinions::note_doubts(const EntrySheet& sheet, const std::vector<Doubt>& doubts)
 {
+    const bool all_copied =
+        std::any_of(notes_.begin(), notes_.end(), [](const SheetNote& note) { return note.whole; });
     for (const Doubt& doubt : doubts) {
+        if (all_copied && doubt.verdict == Doubt::Verdict::copied)
+            continue; // said once of the whole sheet
         const bool one_box = doubt.quantity && doubt.place;
         if (one_box || doubt.sentence.empty())
             continue;
-        SheetNote note{to_qstring(doubt.sentence), {}, false};
+        SheetNote note{to_qstring(doubt.sentence), {}, false, false};
         if (doubt.quantity || doubt.place)
             note.boxes = boxes_of(sheet, doubt);
         if (!all_confirmed(sheet, note.boxes))

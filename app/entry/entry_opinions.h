@@ -18,6 +18,7 @@ struct SheetNote
     QString sentence;
     std::vector<LogBox> boxes;
     bool impossible = false;
+    bool whole = false; ///< last time's whole sheet seems to stand here again
 };
 
 /// What the core says of the sheet as it stands: asked after every change, kept until the next.

@@ -253,7 +253,8 @@ void EntrySession::set_taken_at(StampedTime time)
     emit changed();
 }
 
-/// Another time may find what was entered for the ship about then. Values typed here go along with the reading.
+/// Another time may find what was entered for the ship about then. Values typed here go along with the
+/// reading.
 void EntrySession::follow_ship(StampedTime time)
 {
     const bool typed_here = sheet_.ship_open() && !sheet_.ship_values().empty();

@@ -79,6 +79,9 @@ void LogSheetView::resizeEvent(QResizeEvent* event)
 {
     QTableView::resizeEvent(event);
     lay_out_columns();
+    // Sentences that appear below take room; the box in hand stays in sight.
+    if (currentIndex().isValid())
+        scrollTo(currentIndex());
 }
 
 std::optional<LogBox> LogSheetView::current_box() const

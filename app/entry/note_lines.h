@@ -37,6 +37,8 @@ public:
     bool act(const QString& words);
 
 private:
+    void build();
+    bool act_on(std::size_t number, const QString& words);
     QVBoxLayout* column_;
     std::vector<Line> lines_;
 };

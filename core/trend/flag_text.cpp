@@ -170,7 +170,9 @@ std::string doubt_sentence(const Engine& engine, const Doubt& doubt, const std::
         return where + ": the whole row looks as if it were in another unit. Look at the gauge's face and the unit chosen.";
     case Doubt::Verdict::cylinders_swapped:
         return where + " looks as if it stood in another cylinder's box. Were two cylinders exchanged?";
-    case Doubt::Verdict::copied: return where + ": the values equal earlier ones to the last digit. Were they copied?";
+    case Doubt::Verdict::copied:
+        return (where.empty() ? std::string("More than half of all values") : where + ": the values") +
+               " equal earlier ones to the last digit. Were they copied?";
     case Doubt::Verdict::unsteady:
         return "All values scatter more than usual: the load was probably not steady. The reading is shown, and raises nothing.";
     case Doubt::Verdict::implausible: break;

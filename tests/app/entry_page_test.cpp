@@ -92,7 +92,8 @@ protected:
     std::vector<storage::ReadingEntry> listed(storage::ReadingState state) const
     {
         std::vector<storage::ReadingEntry> found;
-        const std::vector<storage::ReadingEntry> all = storage::ReadingStore(*workplace->history()).list(owner()).value();
+        const std::vector<storage::ReadingEntry> all =
+            storage::ReadingStore(*workplace->history()).list(owner()).value();
         for (const auto& entry : all)
             if (entry.state == state)
                 found.push_back(entry);
