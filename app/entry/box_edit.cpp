@@ -30,6 +30,16 @@ void paint_beside(QPainter& painter, const QRect& area, const QModelIndex& index
                      index.data().toString());
 }
 
+/// For the narrow columns of engines with many cylinders.
+QString short_reason(const QString& reason)
+{
+    if (reason == QString::fromStdString(missing_text(MissingReason::out_of_order)))
+        return BoxDelegate::tr("defect");
+    return reason == QString::fromStdString(missing_text(MissingReason::not_fitted))
+               ? BoxDelegate::tr("none")
+               : BoxDelegate::tr("unread");
+}
+
 void paint_mark(QPainter& painter, const QRect& area, BoxMark mark)
 {
     const QRectF place(area.left() + 2, area.center().y() - 5, 11, 11);
@@ -144,8 +154,11 @@ void BoxDelegate::paint_box(QPainter& painter, const QStyleOptionViewItem& optio
     painter.setPen(mark == BoxMark::unreadable ? theme().act : missing || lent ? theme().muted : theme().ink);
     const QRect text_area = box.adjusted(mark == BoxMark::none ? side_room : mark_width, 0, -side_room, 0);
     const bool words = index.data(LogSheetModel::words_role).toBool();
-    const QString text = painter.fontMetrics().elidedText(
-        index.data().toString(), words ? Qt::ElideRight : Qt::ElideLeft, text_area.width());
+    QString shown = index.data().toString();
+    if (missing && painter.fontMetrics().horizontalAdvance(shown) > text_area.width())
+        shown = short_reason(shown);
+    const QString text =
+        painter.fontMetrics().elidedText(shown, words ? Qt::ElideRight : Qt::ElideLeft, text_area.width());
     painter.drawText(text_area, (words ? Qt::AlignLeft : Qt::AlignRight) | Qt::AlignVCenter, text);
 }
 

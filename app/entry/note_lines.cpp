@@ -41,7 +41,6 @@ void NoteLines::show_lines(const std::vector<Line>& lines)
     lines_ = lines;
     if (!same)
         build();
-    setVisible(!lines_.empty());
 }
 
 void NoteLines::build()
