@@ -29,17 +29,17 @@ public:
     {
         const QMutexLocker lock(&mutex_);
         const auto found = states_.find(path);
-        return found != states_.end() && found->second == std::pair(header.change_counter, header.size);
+        return found != states_.end() && found->second == header;
     }
     void remember(const QString& path, const HistoryFileHeader& header)
     {
         const QMutexLocker lock(&mutex_);
-        states_[path] = {header.change_counter, header.size};
+        states_[path] = header;
     }
 
 private:
     QMutex mutex_;
-    std::map<QString, std::pair<quint32, qint64>> states_;
+    std::map<QString, HistoryFileHeader> states_;
 };
 CheckedFiles& checked_files()
 {

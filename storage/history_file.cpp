@@ -4,6 +4,7 @@
 #include "storage/schema.h"
 #include "storage/sql.h"
 
+#include <QDateTime>
 #include <QFile>
 #include <QFileInfo>
 #include <QtEndian>
@@ -60,6 +61,7 @@ Result<HistoryFileHeader> inspect_history_file(const QString& path, int newest_v
     found.schema_version = static_cast<int>(number_at(header, 60));
     found.change_counter = number_at(header, 24);
     found.size = file.size();
+    found.written_at = info.lastModified().toMSecsSinceEpoch();
     if (found.schema_version > newest_version)
         return Problem{Problem::Kind::newer_file,
                        named(path) + " was written by a later version of this program (format " +

@@ -14,6 +14,8 @@ struct HistoryFileHeader
     int schema_version = 0;
     quint32 change_counter = 0;
     qint64 size = 0;
+    qint64 written_at = 0; ///< milliseconds, as the file system says
+    bool operator==(const HistoryFileHeader&) const = default;
 };
 
 /// Looks at a file without letting SQLite near it, so that what is refused is not touched.

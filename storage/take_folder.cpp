@@ -143,11 +143,15 @@ Done FolderTaking::take_readings(const QString& path, const std::string& shown, 
 {
     const char* const name = engine ? "readings.csv" : "ship_readings.csv";
     Refusals refusals = refusals_of(shown, name);
+    const auto first_refused = static_cast<std::ptrdiff_t>(report_.refused.size());
     BOOST_OUTCOME_TRYV(history_.names().make_ready());
     ReadReadings read = read_readings_file(path, engine, history_.names(), refusals, meter_);
     remark_columns(name, read.unread_columns);
     ReadingMerge merge(history_, owner);
     BOOST_OUTCOME_TRYV(merge.compare(read, refusals));
+    // Contradictions show only when all is read; people follow the file from top to bottom.
+    std::stable_sort(report_.refused.begin() + first_refused, report_.refused.end(),
+                     [](const RefusedRow& a, const RefusedRow& b) { return a.line < b.line; });
     report_.values += merge.counts();
     report_.values.refused += refusals.count();
     if ((refusals.count() > 0 && !options_.keep_good) || meter_.stopped())

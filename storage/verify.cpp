@@ -150,14 +150,14 @@ Done Verification::check_engines()
 
 Done Verification::check_readings()
 {
-    Query rows(history_.database(), "SELECT id, state FROM reading", not_verified);
+    Query rows(history_.database(), "SELECT id, state, name FROM reading", not_verified);
     BOOST_OUTCOME_TRYV(rows.run());
     std::vector<std::string> ids;
     while (rows.next()) {
-        if (rows.small(1) != static_cast<int>(ReadingState::draft))
+        if (rows.small(1) == static_cast<int>(ReadingState::draft))
+            compare("reading", rows.text(0), "", rows.text(2)); // of a draft the trail holds no content
+        else
             ids.push_back(rows.text(0));
-        else if (const auto claim = claims_.find(rows.text(0)); claim != claims_.end())
-            claim->second.met = true;
     }
     BOOST_OUTCOME_TRYV(rows.finished());
     total_ = static_cast<qint64>(ids.size());
