@@ -20,6 +20,7 @@ namespace {
 
 const std::string not_opened = "the history was not opened";
 const QString memory = QStringLiteral(":memory:");
+constexpr qint64 largest_checked = 48 << 20; // bytes; about a quarter of a second
 
 /// States of files that this process has read from end to end, so that worker threads open at once.
 class CheckedFiles
@@ -168,7 +169,8 @@ Result<std::unique_ptr<History>> History::open(const QString& path, OpenMode mod
     std::unique_ptr<History> history(new History(path, mode, std::move(settings)));
     BOOST_OUTCOME_TRYV(history->connect());
     const QString canonical = QFileInfo(path).canonicalFilePath();
-    if (history->settings_.check_whole && !checked_files().knows(canonical, header.value())) {
+    const bool large = header.value().size > largest_checked;
+    if (history->settings_.check_whole && !large && !checked_files().knows(canonical, header.value())) {
         BOOST_OUTCOME_TRYV(history->check());
         checked_files().remember(canonical, header.value());
     }

@@ -18,7 +18,9 @@ struct HistorySettings
     Clock clock = system_time;
     bool automatic_backups = true; ///< before each migration, and before the first change of a day
     int backups_kept = 7;          ///< in the folder `<name> backups` beside the history
-    bool check_whole = true; ///< read every page before trusting the file; done once for a state of the file
+    /// Read every page before trusting the file, once for a state of it. A fleet's file above 48 MB would keep
+    /// the first page waiting: there damage shows when it is met, and `verify` looks for it.
+    bool check_whole = true;
 };
 
 /// One connection to one history. A History belongs to the thread that made it; to read in a worker

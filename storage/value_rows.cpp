@@ -70,17 +70,36 @@ Result<ReadingRow> load_reading_row(History& history, const std::string& reading
                    "Look at the list again; another window may have changed it."};
 }
 
+ValueRow value_row_of(const Query& row, int first)
+{
+    return {row.small(first),     row.small(first + 1),      row.small(first + 2), row.small(first + 3),
+            row.small(first + 4), row.small(first + 5) != 0, row.real(first + 6),  row.text(first + 7),
+            row.text(first + 8),  row.text(first + 9)};
+}
+
+Result<std::vector<ReadingRow>> load_all_reading_rows(History& history)
+{
+    Query rows(history.database(),
+               QString::fromLatin1(reading_columns) + QStringLiteral("ORDER BY reading_key"),
+               "the readings were not read");
+    BOOST_OUTCOME_TRYV(rows.run());
+    std::vector<ReadingRow> readings;
+    while (rows.next())
+        readings.push_back(reading_of(rows));
+    BOOST_OUTCOME_TRYV(rows.finished());
+    return readings;
+}
+
 Result<std::vector<ValueRow>> load_value_rows(History& history, qint64 reading_key)
 {
     Query rows(history.database(),
-               "SELECT quantity_key, place, phase, unit_key, missing, confirmed, value_si, typed, words, "
-               "place_typed FROM value WHERE reading_key = ?",
+               QLatin1String("SELECT ") + QLatin1String(value_row_columns) +
+                   QLatin1String(" FROM value WHERE reading_key = ?"),
                "the values were not read");
     BOOST_OUTCOME_TRYV(rows.run(reading_key));
     std::vector<ValueRow> values;
     while (rows.next())
-        values.push_back({rows.small(0), rows.small(1), rows.small(2), rows.small(3), rows.small(4),
-                          rows.small(5) != 0, rows.real(6), rows.text(7), rows.text(8), rows.text(9)});
+        values.push_back(value_row_of(rows, 0));
     BOOST_OUTCOME_TRYV(rows.finished());
     return values;
 }

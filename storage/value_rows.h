@@ -55,6 +55,12 @@ Result<ValueRow> row_of(History::Names& names, const Value& value);
 /// All of an owner's readings in order of time.
 Result<std::vector<ReadingRow>> load_reading_rows(History& history, const OwnerKeys& owner);
 Result<ReadingRow> load_reading_row(History& history, const std::string& reading_id);
+/// Everybody's readings, by key.
+Result<std::vector<ReadingRow>> load_all_reading_rows(History& history);
+/// A value out of a row that holds `value_row_columns` from column `first` on.
+ValueRow value_row_of(const Query& row, int first);
+inline constexpr char value_row_columns[] =
+    "quantity_key, place, phase, unit_key, missing, confirmed, value_si, typed, words, place_typed";
 /// In the order of the file's own numbering.
 Result<std::vector<ValueRow>> load_value_rows(History& history, qint64 reading_key);
 

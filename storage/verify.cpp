@@ -38,6 +38,7 @@ private:
     Done check_vessels();
     Done check_engines();
     Done check_readings();
+    void check_reading(const ReadingRow& reading, const std::vector<ValueRow>& values);
     Done check_events();
     Done check_cards();
     void compare(const std::string& kind, const std::string& id, const std::string& hash,
@@ -148,37 +149,46 @@ Done Verification::check_engines()
     return rows.finished();
 }
 
+void Verification::check_reading(const ReadingRow& reading, const std::vector<ValueRow>& values)
+{
+    // Of a draft the trail holds no content.
+    std::string hash;
+    if (reading.state != ReadingState::draft) {
+        std::vector<const ValueRow*> pointers;
+        for (const ValueRow& row : values)
+            pointers.push_back(&row);
+        hash = reading_hash(history_.names(), reading, std::move(pointers));
+        findings_.values += static_cast<qint64>(values.size());
+        ++findings_.readings;
+    }
+    compare("reading", reading.id, hash, reading.name);
+}
+
+/// Readings and all values side by side, both in the order of their keys: one pass over the file.
 Done Verification::check_readings()
 {
-    Query rows(history_.database(), "SELECT id, state, name FROM reading", not_verified);
+    const auto readings = load_all_reading_rows(history_);
+    if (!readings)
+        return readings.error();
+    total_ = static_cast<qint64>(readings.value().size());
+    Query rows(history_.database(),
+               QLatin1String("SELECT reading_key, ") + QLatin1String(value_row_columns) +
+                   QLatin1String(" FROM value ORDER BY reading_key"),
+               not_verified);
     BOOST_OUTCOME_TRYV(rows.run());
-    std::vector<std::string> ids;
-    while (rows.next()) {
-        if (rows.small(1) == static_cast<int>(ReadingState::draft))
-            compare("reading", rows.text(0), "", rows.text(2)); // of a draft the trail holds no content
-        else
-            ids.push_back(rows.text(0));
-    }
-    BOOST_OUTCOME_TRYV(rows.finished());
-    total_ = static_cast<qint64>(ids.size());
-    for (const std::string& id : ids) {
-        const auto reading = load_reading_row(history_, id);
-        if (!reading)
-            return reading.error();
-        const auto values = load_value_rows(history_, reading.value().key);
-        if (!values)
-            return values.error();
-        std::vector<const ValueRow*> pointers;
-        for (const ValueRow& row : values.value())
-            pointers.push_back(&row);
-        compare("reading", id, reading_hash(history_.names(), reading.value(), pointers),
-                reading.value().name);
-        findings_.values += static_cast<qint64>(values.value().size());
-        if (++findings_.readings % 256 == 0) {
+    bool more = rows.next();
+    std::vector<ValueRow> values;
+    for (const ReadingRow& reading : readings.value()) {
+        values.clear();
+        for (; more && rows.integer(0) <= reading.key; more = rows.next())
+            if (rows.integer(0) == reading.key) // a value of no reading was named by the check of the file
+                values.push_back(value_row_of(rows, 1));
+        check_reading(reading, values);
+        if (findings_.readings % 256 == 0) {
             BOOST_OUTCOME_TRYV(go_on());
         }
     }
-    return done();
+    return rows.finished();
 }
 
 Done Verification::check_events()

@@ -68,7 +68,8 @@ private:
     void single_rows(const LogSection& section);
     void single_row(const LogRow& row, double left, double y);
     bool in_two_columns(const LogRow& row) const;
-    void boxes(const LogRow& row, std::size_t from, std::size_t count, double width);
+    void boxes(const LogSection& section, const LogRow& row, std::size_t from, std::size_t count,
+               double width);
     void box(const LogBox& box, const QRectF& area);
     void text(const QRectF& area, int flags, const QString& words, const QFont& font, const QColor& colour);
     double box_width(const LogSection& section) const;
@@ -175,10 +176,13 @@ void SheetPrinter::cautions()
     y_ += 8;
 }
 
+/// Engines with many cylinders take two lines a row, as many boxes on each: a bank a line.
 std::size_t SheetPrinter::boxes_a_line(const LogSection& section) const
 {
-    const auto fitting = static_cast<std::size_t>(room() / narrowest_box);
-    return std::max<std::size_t>(1, std::min(section.columns.size(), fitting));
+    const auto fitting = std::max<std::size_t>(1, static_cast<std::size_t>(room() / narrowest_box));
+    const std::size_t all = std::max<std::size_t>(1, section.columns.size()),
+                      lines = (all + fitting - 1) / fitting;
+    return (all + lines - 1) / lines;
 }
 
 double SheetPrinter::box_width(const LogSection& section) const
@@ -220,13 +224,13 @@ void SheetPrinter::row(const LogSection& section, const LogRow& row)
     if (row.boxes.size() == 1) {
         const double wide =
             meant.type == ValueType::words ? room() : widest_box * (meant.type == ValueType::choice ? 2 : 1);
-        boxes(row, 0, 1, wide);
+        boxes(section, row, 0, 1, wide);
         y_ += row_height;
         return;
     }
     const std::size_t a_line = boxes_a_line(section);
     for (std::size_t from = 0; from < row.boxes.size(); from += a_line) {
-        boxes(row, from, std::min(a_line, row.boxes.size() - from), box_width(section));
+        boxes(section, row, from, std::min(a_line, row.boxes.size() - from), box_width(section));
         y_ += row_height;
     }
 }
@@ -263,11 +267,17 @@ void SheetPrinter::single_row(const LogRow& row, double left, double y)
     box(row.boxes.front(), {left + half_label + half_unit, y, half_box, row_height});
 }
 
-void SheetPrinter::boxes(const LogRow& row, std::size_t from, std::size_t count, double width)
+void SheetPrinter::boxes(const LogSection& section, const LogRow& row, std::size_t from, std::size_t count,
+                         double width)
 {
+    const bool wrapped = section.columns.size() > boxes_a_line(section); // then each box says whose it is
     double x = margin + label_width + unit_width;
     for (std::size_t i = from; i < from + count; ++i) {
-        box(row.boxes[i], {x, y_, width, row_height});
+        const QRectF area(x, y_, width, row_height);
+        box(row.boxes[i], area);
+        if (wrapped && i < section.columns.size())
+            text(area.adjusted(2, 1, -3, -2), Qt::AlignRight | Qt::AlignTop, to_qstring(section.columns[i]),
+                 face(6), grey);
         x += width;
     }
 }

@@ -40,9 +40,8 @@ QString short_reason(const QString& reason)
                : BoxDelegate::tr("unread");
 }
 
-void paint_mark(QPainter& painter, const QRect& area, BoxMark mark)
+void paint_mark(QPainter& painter, const QRectF& place, BoxMark mark)
 {
-    const QRectF place(area.left() + 2, area.center().y() - 5, 11, 11);
     if (mark == BoxMark::asked)
         draw_mark(painter, place, Level::ask);
     else if (mark == BoxMark::impossible || mark == BoxMark::unreadable)
@@ -149,17 +148,28 @@ void BoxDelegate::paint_box(QPainter& painter, const QStyleOptionViewItem& optio
         painter.setPen(QPen(theme().line, 2));
         painter.drawRect(box.adjusted(1, 1, -1, -1));
     }
-    paint_mark(painter, box, mark);
     painter.setFont(type(missing ? TypeSize::label : TypeSize::body));
-    painter.setPen(mark == BoxMark::unreadable ? theme().act : missing || lent ? theme().muted : theme().ink);
-    const QRect text_area = box.adjusted(mark == BoxMark::none ? side_room : mark_width, 0, -side_room, 0);
     const bool words = index.data(LogSheetModel::words_role).toBool();
-    QString shown = index.data().toString();
-    if (missing && painter.fontMetrics().horizontalAdvance(shown) > text_area.width())
-        shown = short_reason(shown);
-    const QString text =
-        painter.fontMetrics().elidedText(shown, words ? Qt::ElideRight : Qt::ElideLeft, text_area.width());
-    painter.drawText(text_area, (words ? Qt::AlignLeft : Qt::AlignRight) | Qt::AlignVCenter, text);
+    QString text = index.data().toString();
+    int room = box.width() - 2 * side_room;
+    if (missing && painter.fontMetrics().horizontalAdvance(text) > room)
+        text = short_reason(text);
+    // In a narrow column the number needs the whole width: the mark then shrinks into the corner.
+    const bool beside = painter.fontMetrics().horizontalAdvance(text) + mark_width <= room;
+    if (painter.fontMetrics().horizontalAdvance(text) > room) {
+        painter.setFont(type(TypeSize::label));
+        room = box.width() - 4;
+    }
+    text = painter.fontMetrics().elidedText(text, Qt::ElideRight, room);
+    const QRect area =
+        QRect(0, 0, room, box.height()).translated(box.left() + (box.width() - room) / 2, box.top());
+    painter.setPen(mark == BoxMark::unreadable ? theme().act : missing || lent ? theme().muted : theme().ink);
+    painter.drawText(area.adjusted(words && mark != BoxMark::none ? mark_width : 0, 0, 0, 0),
+                     static_cast<int>((words ? Qt::AlignLeft : Qt::AlignRight) | Qt::AlignVCenter), text);
+    paint_mark(painter,
+               beside || words ? QRectF(box.left() + 2, box.center().y() - 5, 11, 11)
+                               : QRectF(box.left() + 1, box.top() + 1, 7, 7),
+               mark);
 }
 
 QSize BoxDelegate::sizeHint(const QStyleOptionViewItem&, const QModelIndex&) const

@@ -10,7 +10,7 @@
 namespace evenstroke {
 namespace {
 
-constexpr int header_width = 272, unit_width = 54, room = 8;
+constexpr int header_width = 284, unit_width = 54, room = 8;
 
 } // namespace
 

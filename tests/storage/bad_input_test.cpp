@@ -1,12 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "fixture.h"
 
+#include "storage/audit.h"
 #include "storage/event_store.h"
 #include "storage/sql.h"
 
 #include <QFile>
 
 #include <fstream>
+#include <random>
 
 namespace evenstroke::storage {
 namespace {
@@ -207,7 +209,7 @@ INSTANTIATE_TEST_SUITE_P(
                 "\"unit\" is missing", "reading,taken_at"},
         BadFile{"ColumnTwice", "reading,taken_at,quantity,cylinder,value,unit,value\n", 1, "stands twice",
                 "once"},
-        BadFile{"Utf16", QByteArray("\xff\xfer\0e\0a\0d\0i\0n\0g\0\n\0", 20), 1, "zero bytes", "UTF-8"}),
+        BadFile{"Utf16", QByteArray("\xff\xfer\0e\0a\0d\0i\0n\0g\0\n\0", 18), 1, "zero bytes", "UTF-8"}),
     [](const auto& one) { return std::string(one.param.name); });
 
 class BadInput : public StorageTest
@@ -280,6 +282,41 @@ TEST_F(BadInput, AValueOutsideTheHardRangeIsStoredAsTyped)
     ASSERT_NE(value, nullptr);
     EXPECT_EQ(value->typed, "1405");
     EXPECT_DOUBLE_EQ(value->value_si.value_or(0.0), 1405e5);
+}
+
+TEST_F(BadInput, RandomDamageLeadsToRefusalsAndNothingElse)
+{
+    write_ship();
+    const QStringList files = {
+        QStringLiteral("ship/main/readings.csv"), QStringLiteral("ship/main/events.csv"),
+        QStringLiteral("ship/main/engine.json"), QStringLiteral("ship/ship_readings.csv"),
+        QStringLiteral("ship/main/cards/2029-01/A1.csv")};
+    const QByteArray pieces[] = {
+        "\"", ",", "\n", QByteArray(1, '\0'), "\xff", ";", "-", "9999999999", "\r", "{", "]",
+        "é",  "e", "NaN"};
+    std::mt19937 chance(20300317);
+    const auto pick = [&](qsizetype below) {
+        return static_cast<qsizetype>(chance() % static_cast<unsigned>(below));
+    };
+    const auto history = memory();
+    for (int round = 0; round < 300; ++round) {
+        const QString& file = files[pick(files.size())];
+        const QByteArray sound = read(file);
+        QByteArray damaged = sound;
+        for (qsizetype hits = 1 + pick(4); hits > 0; --hits) {
+            const qsizetype at = pick(damaged.size());
+            const qsizetype length = pick(3) == 0 ? pick(40) : pick(3);
+            damaged.replace(at, std::min(length, damaged.size() - at),
+                            pieces[pick(static_cast<qsizetype>(std::size(pieces)))]);
+        }
+        write(file, damaged);
+        const TakeReport report = take_folder(*history, QStringLiteral("ship"), round % 2 == 0);
+        for (const FolderReport& folder : report.folders)
+            EXPECT_EQ(folder.anything_refused(), !folder.refused.empty())
+                << "nothing is refused without a word";
+        write(file, sound);
+    }
+    EXPECT_TRUE(value_of_result(verify(*history)).sound());
 }
 
 TEST_F(BadInput, ABadFolderDoesNotStopTheOthers)

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "fixture.h"
 
+#include "storage/audit.h"
 #include "storage/preference_store.h"
 #include "storage/schema.h"
 #include "storage/sql.h"
@@ -131,6 +132,36 @@ TEST_F(HistoryFile, RefusesFlippedBytesInThePageStructure)
                   Problem::Kind::damaged_file)
             << page;
     }
+}
+
+TEST_F(HistoryFile, TakesBackAWriteThatAPowerCutLeftHalfDone)
+{
+    filled();
+    const auto history = open();
+    QSqlQuery query(history->database());
+    ASSERT_TRUE(
+        query.exec(QStringLiteral("PRAGMA cache_size = 2"))); // pages go to the disk before the commit
+    ASSERT_TRUE(query.exec(QStringLiteral("BEGIN IMMEDIATE")));
+    ASSERT_TRUE(query.exec(QStringLiteral("UPDATE value SET value_si = 0, typed = printf('%9000d', 0)")));
+    // The files as they lie on the disk at this moment.
+    for (const char* const ending : {"", "-journal"})
+        write(QStringLiteral("cut.evenstroke") + QLatin1String(ending),
+              read(QStringLiteral("ship.evenstroke") + QLatin1String(ending)));
+    ASSERT_FALSE(read(QStringLiteral("cut.evenstroke-journal")).startsWith(QByteArray(4, '\0')))
+        << "nothing was written before the commit";
+    query.exec(QStringLiteral("ROLLBACK"));
+    const auto opened = open(QStringLiteral("cut.evenstroke"));
+    EXPECT_TRUE(value_of_result(verify(*opened)).sound());
+    EXPECT_EQ(readings_of(*opened).front().values.front().typed, "141.5");
+    EXPECT_FALSE(QFile::exists(path(QStringLiteral("cut.evenstroke-journal"))));
+}
+
+TEST_F(HistoryFile, MayHaveAnyNameThatAFileMayHave)
+{
+    const QString name = QStringLiteral("Schiff ü 100% ?mode=ro#1.evenstroke");
+    create(name);
+    EXPECT_TRUE(QFile::exists(path(name)));
+    EXPECT_EQ(open(name)->version(), History::newest_version());
 }
 
 TEST_F(HistoryFile, WritesNothingWhenOpenForReadingOnly)
