@@ -52,7 +52,8 @@ std::vector<Signature> read_signatures()
     std::vector<Signature> signatures;
     const CatalogueTable table(catalogue_text::drift_signatures);
     for (std::size_t row = 0; row < table.rows(); ++row) {
-        Signature signature{table.cell(row, "name"), table.cell(row, "title"), subject_of(table.cell(row, "subject")), {}};
+        Signature signature{table.cell(row, "name"), table.cell(row, "title"), subject_of(table.cell(row, "subject")),
+                            table.number(row, "weight").value(), {}};
         for (const std::string& move : split_list(table.cell(row, "moves")))
             signature.moves.push_back(read_move(move));
         signatures.push_back(std::move(signature));

@@ -34,6 +34,7 @@ struct Signature
     std::string name;  ///< "blow_by"
     std::string title; ///< "blow-by (rings or exhaust valve)"
     Subject subject;   ///< cylinder or engine
+    double weight;     ///< how much likelier beforehand than a quantity that moves by itself, > 0
     struct Move
     {
         std::string quantity;

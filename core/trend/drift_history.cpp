@@ -32,7 +32,7 @@ const Cell* ChannelHistory::cell(std::size_t reading, std::size_t cylinder) cons
     return found.present ? &found : nullptr;
 }
 
-void ChannelHistory::take(std::size_t reading, Row row)
+void ChannelHistory::take(std::size_t reading, Row row, bool steady)
 {
     const MaybeValues medians = median_of_others(row);
     for (std::size_t j = 0; j < cylinders; ++j) {
@@ -43,9 +43,9 @@ void ChannelHistory::take(std::size_t reading, Row row)
         if (reading == 0 || start[j] >= reading)
             continue;
         if (deviation[at] && deviation[at - cylinders])
-            alone_noise.add_difference(*deviation[at] - *deviation[at - cylinders]);
+            alone_noise.add_difference(*deviation[at] - *deviation[at - cylinders], steady);
         if (from_others[at] && from_others[at - cylinders])
-            check_noise.add_difference(*from_others[at] - *from_others[at - cylinders]);
+            check_noise.add_difference(*from_others[at] - *from_others[at - cylinders], steady);
     }
 }
 

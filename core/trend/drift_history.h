@@ -40,8 +40,9 @@ struct ChannelHistory
 
     const Cell* cell(std::size_t reading, std::size_t cylinder) const;
     /// Keeps the usable values of a reading and learns the noise from them.
-    /// @param row what may be used, shape (N)
-    void take(std::size_t reading, Row row);
+    /// @param row    what may be used, shape (N)
+    /// @param steady neither this reading nor the one before was unsteady
+    void take(std::size_t reading, Row row, bool steady);
     /// Learns how finely the instrument shows and how often values are alike.
     void take_texts(std::size_t reading);
 };

@@ -96,6 +96,7 @@ void DriftRun::take(std::size_t reading)
     for (std::size_t k = 0; k < history_.size(); ++k)
         take_apart(reading, k);
     judge_poor(reading);
+    learn_noise(reading);
     add_to_sums(reading);
     for (std::size_t j = 0; j < cylinders_; ++j)
         judge_cylinder(reading, j);
@@ -148,6 +149,7 @@ void DriftRun::open_segments(std::size_t reading)
 void DriftRun::keep_usable(std::size_t reading, const ReadingOpinion& opinion)
 {
     const bool excluded = is_set(input_->excluded, reading, input_->readings());
+    const bool steady = !opinion.unsteady && !(reading > 0 && output_.readings[reading - 1].unsteady);
     for (std::size_t k = 0; k < history_.size(); ++k) {
         MaybeValues row(cylinders_);
         for (std::size_t j = 0; j < cylinders_; ++j) {
@@ -157,7 +159,7 @@ void DriftRun::keep_usable(std::size_t reading, const ReadingOpinion& opinion)
                 row[j] = usable_deviation(*cell, input_->channels[k].noise);
         }
         if (!excluded)
-            history_[k].take(reading, row);
+            history_[k].take(reading, row, steady);
         else
             std::copy(row.begin(), row.end(), history_[k].deviation.begin() + static_cast<std::ptrdiff_t>(at(reading, 0)));
     }
@@ -174,7 +176,6 @@ void DriftRun::take_apart(std::size_t reading, std::size_t channel)
     const Row row = Row(history.deviation).subspan(at(reading, 0), cylinders_);
     const double noise = apart_noise_[channel].value();
     const MaybeValues common = common_mode(row, offsets, noise);
-    const bool excluded = is_set(input_->excluded, reading, input_->readings());
     for (std::size_t j = 0; j < cylinders_; ++j) {
         CellResult& cell = output_.cells[channel][at(reading, j)];
         cell.own_offset = offsets[j];
@@ -183,11 +184,20 @@ void DriftRun::take_apart(std::size_t reading, std::size_t channel)
         if (!row[j] || !common[j])
             continue;
         cell.apart = *row[j] - *common[j];
-        if (reading == 0 || excluded || history.start[j] >= reading)
-            continue;
-        if (const auto& before = output_.cells[channel][at(reading - 1, j)].apart)
-            apart_noise_[channel].add_difference(*cell.apart - *before);
     }
+}
+
+void DriftRun::learn_noise(std::size_t reading)
+{
+    if (reading == 0 || is_set(input_->excluded, reading, input_->readings()))
+        return;
+    const bool steady = !output_.readings[reading].poor && !output_.readings[reading - 1].poor;
+    for (std::size_t k = 0; k < history_.size(); ++k)
+        for (std::size_t j = 0; j < cylinders_; ++j) {
+            const auto &now = output_.cells[k][at(reading, j)].apart, &before = output_.cells[k][at(reading - 1, j)].apart;
+            if (now && before && history_[k].start[j] < reading)
+                apart_noise_[k].add_difference(*now - *before, steady);
+        }
 }
 
 std::optional<double> DriftRun::recent_level(std::size_t reading, std::size_t channel, std::size_t cylinder) const

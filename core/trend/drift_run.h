@@ -31,6 +31,7 @@ private:
     void keep_usable(std::size_t reading, const ReadingOpinion& opinion);
     void take_apart(std::size_t reading, std::size_t channel);
     void judge_poor(std::size_t reading);
+    void learn_noise(std::size_t reading);
     void add_to_sums(std::size_t reading);
     double clip_one_off(std::size_t reading, std::size_t channel, std::size_t cylinder, double apart) const;
     void renew_first_values(std::size_t reading, std::size_t channel, std::size_t cylinder);

@@ -63,15 +63,12 @@ ScanResult EngineLevel::scan(std::size_t reading) const
                 if (series_[e].in_scan() && series_[e].usable() >= engine_readings_needed)
                     fits[e] = series_[e].fit(onset, shape);
             }
-            const auto consider = [&](double strength, std::size_t candidate) {
-                result.consider(strength, candidate, onset, shape);
-            };
             for (std::size_t e = 0; e < fits.size(); ++e)
                 if (fits[e])
-                    consider(fits[e]->strength(), e);
+                    result.consider(fits[e]->strength(), 0.0, e, onset, shape);
             for (std::size_t s = 0; s < signatures_.size(); ++s)
                 if (const auto found = strength(signatures_[s], fits); found && *found > 0.0)
-                    consider(*found, fits.size() + s);
+                    result.consider(*found, 2.0 * std::log(signatures_[s].source->weight), fits.size() + s, onset, shape);
         }
     return result;
 }

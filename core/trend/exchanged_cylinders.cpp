@@ -7,7 +7,7 @@ namespace evenstroke::drift {
 
 namespace {
 
-double limited_square(double distance) { return std::min(distance * distance, 16.0); }
+double limited_square(double distance) { return std::min(distance * distance, 9.0); }
 
 /// Gain of reading cylinder p's box as q's and the other way round; nothing with fewer than 3 quantities.
 std::optional<double> gain_of_exchange(const ReadingOpinion& opinion, std::size_t p, std::size_t q)
@@ -34,7 +34,7 @@ std::optional<double> gain_of_exchange(const ReadingOpinion& opinion, std::size_
 
 std::optional<ExchangedPair> find_exchanged_cylinders(const ReadingOpinion& opinion)
 {
-    constexpr double likely_enough = 8.0;
+    constexpr double likely_enough = 7.5;
     const std::size_t cylinders = opinion.cylinders.empty() ? 0 : opinion.cylinders.front().size();
     std::optional<ExchangedPair> best;
     for (std::size_t p = 0; p < cylinders; ++p)

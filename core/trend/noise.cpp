@@ -5,12 +5,20 @@
 
 namespace evenstroke::drift {
 
+void NoiseEstimate::add_difference(double difference, bool steady)
+{
+    (steady ? steady_ : unsteady_).push_back(std::abs(difference));
+}
+
 void NoiseEstimate::renew()
 {
-    if (differences_.empty())
+    std::vector<double> differences = steady_;
+    if (unsteady_.size() * 2 > steady_.size())
+        differences.insert(differences.end(), unsteady_.begin(), unsteady_.end());
+    if (differences.empty())
         return;
-    const double count = static_cast<double>(differences_.size());
-    const double sigma = median_to_sigma * median_in_place(differences_); // reordering them does no harm
+    const double count = static_cast<double>(differences.size());
+    const double sigma = median_to_sigma * median_in_place(differences);
     value_ = std::sqrt((weight_ * prior_ * prior_ + count * sigma * sigma / 2.0) / (weight_ + count));
 }
 

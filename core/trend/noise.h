@@ -15,7 +15,9 @@ class NoiseEstimate
 public:
     NoiseEstimate(double prior, double prior_weight) : prior_(prior), weight_(prior_weight), value_(prior) {}
 
-    void add_difference(double difference) { differences_.push_back(difference < 0.0 ? -difference : difference); }
+    /// @param steady both readings were; differences of unsteady ones count only where most are such, because
+    /// then it is the catalogue's figure that does not fit this ship
+    void add_difference(double difference, bool steady);
     /// Takes what has come in since into account. Between renewals the value stands still, so that two
     /// readings in a row are judged by one measure.
     void renew();
@@ -23,7 +25,7 @@ public:
 
 private:
     double prior_, weight_, value_;
-    std::vector<double> differences_;
+    std::vector<double> steady_, unsteady_;
 };
 
 /// Prior sigma of a value against the mean of the others: their mean has noise of its own, the 10 % over

@@ -93,14 +93,17 @@ std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::siz
     return ramp(all, after, noise, from);
 }
 
-void ScanResult::consider(double strength, std::size_t new_candidate, std::size_t new_onset, Shape new_shape)
+void ScanResult::consider(double new_strength, double prior, std::size_t new_candidate, std::size_t new_onset,
+                          Shape new_shape)
 {
     possible = true;
-    if (std::abs(strength) <= evidence)
+    const double weighed = new_strength * new_strength + prior;
+    if (weighed <= evidence * evidence)
         return;
-    evidence = std::abs(strength);
+    evidence = std::sqrt(weighed);
+    strength = std::abs(new_strength);
     candidate = new_candidate;
-    direction = strength < 0.0 ? -1 : 1;
+    direction = new_strength < 0.0 ? -1 : 1;
     shape = new_shape;
     onset = new_onset;
 }
@@ -169,10 +172,10 @@ void weigh_candidates(const FitRow& fits, const SignatureMatcher& matcher, std::
         return;
     for (std::size_t k = 0; k < fits.entries.size(); ++k)
         if (fits.entries[k].taken)
-            result.consider(fits.entries[k].strength, k, onset, shape);
+            result.consider(fits.entries[k].strength, 0.0, k, onset, shape);
     for (std::size_t signature = 0; signature < matcher.count(); ++signature)
         if (const double strength = matcher.strength(signature, fits); strength > 0.0) // one direction only
-            result.consider(strength, fits.entries.size() + signature, onset, shape);
+            result.consider(strength, matcher.prior(signature), fits.entries.size() + signature, onset, shape);
 }
 
 } // namespace

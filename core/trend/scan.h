@@ -83,6 +83,7 @@ public:
     explicit SignatureMatcher(std::span<const std::string> quantities);
 
     std::size_t count() const { return signatures_.size(); }
+    double prior(std::size_t index) const { return signatures_[index].prior; }
     const Signature& signature(std::size_t index) const { return *signatures_[index].source; }
     /// Quantities of the signature, as channel indices.
     const std::vector<std::size_t>& channels(std::size_t index) const { return signatures_[index].named; }
@@ -104,6 +105,7 @@ private:
         std::vector<std::pair<std::size_t, double>> weights; ///< C^-1 d where it is not 0
         std::vector<Term> variance;                          ///< w C w
         std::vector<std::size_t> named;                      ///< channels that the signature names
+        double prior = 0.0;                                  ///< twice the log of its weight
     };
     Prepared prepare(const Signature& signature, std::span<const std::string> quantities,
                      const std::vector<double>& inverse) const;
@@ -123,7 +125,8 @@ struct ScanSeries
 struct ScanResult
 {
     bool possible = false;       ///< at least one onset could be tried
-    double evidence = 0.0;       ///< S: the largest candidate
+    double evidence = 0.0;       ///< S: the largest candidate, with its prior weight
+    double strength = 0.0;       ///< the same without, in standard deviations
     std::size_t candidate = 0;   ///< channel index, or channels + signature index
     int direction = 1;
     Shape shape = Shape::step;
@@ -131,7 +134,9 @@ struct ScanResult
     double any_change = 0.0;     ///< F
     std::size_t any_change_onset = 0;
 
-    void consider(double strength, std::size_t new_candidate, std::size_t new_onset, Shape new_shape);
+    /// Keeps the candidate if it is the largest so far.
+    /// @param prior twice the log of how much likelier it is beforehand than an ordinary one
+    void consider(double new_strength, double prior, std::size_t new_candidate, std::size_t new_onset, Shape new_shape);
 };
 ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matcher, std::span<const double> months,
                 std::size_t reading);

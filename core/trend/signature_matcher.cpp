@@ -62,7 +62,7 @@ SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature,
                                                      const std::vector<double>& inverse) const
 {
     const std::size_t n = quantities.size();
-    Prepared prepared{&signature, {}, {}, {}};
+    Prepared prepared{&signature, {}, {}, {}, 2.0 * std::log(signature.weight)};
     std::vector<double> weight(n, 0.0);
     for (const Signature::Move& move : signature.moves) {
         const auto found = std::find(quantities.begin(), quantities.end(), move.quantity);

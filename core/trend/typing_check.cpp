@@ -284,7 +284,7 @@ void TypingCheck::doubt_cells(std::size_t reading, const std::vector<ChannelHist
 void TypingCheck::judge_engine(std::size_t reading, ReadingOpinion& opinion) const
 {
     constexpr std::size_t memory = 6, needed = 2;
-    constexpr double doubt_limit = 7.0;
+    constexpr double doubt_limit = 7.0, suspicion_limit = 6.0;
     opinion.engine.assign(input_->engine_channels.size(), CellOpinion{});
     for (std::size_t e = 0; e < input_->engine_channels.size(); ++e) {
         const EngineChannel& channel = input_->engine_channels[e];
@@ -301,7 +301,7 @@ void TypingCheck::judge_engine(std::size_t reading, ReadingOpinion& opinion) con
             continue;
         if (std::isfinite(cell.deviation))
             seen.distance = (cell.deviation - *seen.centre) / seen.tolerance;
-        const auto verdict = judge_cell(cell, seen, engine_held_sign_[e], doubt_limit, doubt_limit);
+        const auto verdict = judge_cell(cell, seen, engine_held_sign_[e], doubt_limit, last.size() < needed ? doubt_limit : suspicion_limit);
         if (!verdict)
             continue;
         opinion.engine_held[e] = 1;

@@ -35,7 +35,7 @@ struct ReadingOpinion
 };
 
 /// Scatter of a reading, over the usual one, above which the load cannot have stood still.
-inline constexpr double unsteady_scatter = 1.8;
+inline constexpr double unsteady_scatter = 1.7;
 
 class TypingCheck
 {
