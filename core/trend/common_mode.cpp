@@ -39,9 +39,10 @@ MaybeValues median_of_others(Row row)
         const std::size_t others = sorted.size() - (row[j] ? 1 : 0);
         if (others < others_needed)
             continue;
-        const std::size_t own = !row[j] ? sorted.size()
-                                        : static_cast<std::size_t>(std::lower_bound(sorted.begin(), sorted.end(), *row[j]) -
-                                                                   sorted.begin());
+        const std::size_t own =
+            !row[j] ? sorted.size()
+                    : static_cast<std::size_t>(std::lower_bound(sorted.begin(), sorted.end(), *row[j]) -
+                                               sorted.begin());
         medians[j] = median_without(sorted, own);
     }
     return medians;

@@ -16,19 +16,24 @@ namespace {
 // False doubts to be had at most: one row in ten thousand, one sheet in a million. Chosen, no source.
 constexpr double unlikely_row = 1e-4, unlikely_repeat = 1e-6, unlikely_sheet_sigmas = 5.0;
 
-/// Chance that two rounded normal values of this spread are equal.
+/// Chance that two rounded normal values of this spread are equal. An instrument whose steps are wider than
+/// what it measures shows the same rows again and again: there it is 1.
 double chance_by_rounding(const ChannelHistory& history, const Cell& cell, double spread)
 {
     const int decimals = std::max(history.decimals, significant_decimals(cell.typed_text));
     const double step = std::pow(10.0, -decimals) * std::abs(cell.scale);
     const double chance = step / (2.0 * std::sqrt(std::numbers::pi) * spread);
-    return std::isfinite(chance) ? std::min(chance, 1.0) : 1.0;
+    const bool calm = step > 1.5 * history.check_noise.value();
+    return std::isfinite(chance) && !calm ? std::min(chance, 1.0) : 1.0;
 }
 
-/// The figure from rounding counts like so many pairs.
+/// Chance of equal values; the figure from rounding counts like 10 pairs. A coarse instrument may also be a
+/// calm one, so that equal values are the rule: nothing can be said until there is experience.
 double with_experience(double by_rounding, double equal, double pairs)
 {
-    constexpr double weight = 20.0;
+    constexpr double weight = 10.0, coarse = 0.05, pairs_needed = 60.0;
+    if (by_rounding > coarse && pairs < pairs_needed)
+        return 1.0;
     return (by_rounding * weight + equal) / (weight + pairs);
 }
 
@@ -39,8 +44,8 @@ bool alike_along_row(const ChannelHistory& history, const std::vector<const Cell
         return false;
     const double spread = std::hypot(history.input->noise, history.input->offset_spread);
     const double by_rounding = chance_by_rounding(history, first, spread);
-    const double pair =
-        std::max(by_rounding, with_experience(by_rounding, history.equal.along_row, history.equal.pairs_along_row));
+    const double pair = std::max(
+        by_rounding, with_experience(by_rounding, history.equal.along_row, history.equal.pairs_along_row));
     // n rounded normals fall into one step with (step / (sigma sqrt(2 pi)))^(n-1) / sqrt(n), and
     // a pair with step / (2 sigma sqrt(pi)).
     const double count = static_cast<double>(row.size());
@@ -57,17 +62,18 @@ struct Repeats
 Repeats repeats_of(const ChannelHistory& history, std::size_t reading)
 {
     Repeats repeats;
-    if (reading == 0)
-        return repeats;
-    for (std::size_t j = 0; j < history.cylinders; ++j) {
+    const Cell* example = nullptr;
+    for (std::size_t j = 0; j < history.cylinders && reading > 0; ++j) {
         const Cell *now = history.cell(reading, j), *before = history.cell(reading - 1, j);
         if (!now || !before || now->confirmed)
             continue;
+        example = now;
         ++repeats.boxes;
         repeats.equal += same_text(*now, *before) ? 1 : 0;
-        const double by_rounding = chance_by_rounding(history, *now, history.input->noise);
-        repeats.chance = with_experience(by_rounding, history.equal.in_time, history.equal.pairs_in_time);
     }
+    if (example)
+        repeats.chance = with_experience(chance_by_rounding(history, *example, history.input->noise),
+                                         history.equal.in_time, history.equal.pairs_in_time);
     return repeats;
 }
 

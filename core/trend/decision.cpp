@@ -21,10 +21,11 @@ Thresholds thresholds_for(std::size_t cylinder_quantities, std::size_t engine_qu
     Thresholds thresholds;
     thresholds.cylinder = std::sqrt(thresholds.cylinder * thresholds.cylinder +
                                     2.0 * std::log1p(more_of_cylinder / candidates_of_cylinder));
-    thresholds.engine =
-        std::sqrt(thresholds.engine * thresholds.engine + 4.0 * std::log1p(more_of_engine / candidates_of_engine));
-    thresholds.ask_constant = std::max(
-        9.0, thresholds.ask_constant + 2.0 * (static_cast<double>(cylinder_quantities) - static_cast<double>(usual_of_cylinder)));
+    thresholds.engine = std::sqrt(thresholds.engine * thresholds.engine +
+                                  4.0 * std::log1p(more_of_engine / candidates_of_engine));
+    thresholds.ask_constant =
+        std::max(9.0, thresholds.ask_constant + 2.0 * (static_cast<double>(cylinder_quantities) -
+                                                       static_cast<double>(usual_of_cylinder)));
     return thresholds;
 }
 
@@ -50,13 +51,19 @@ void CylinderDecision::accept_level(std::size_t onset)
 }
 
 CylinderDecision::Outcome CylinderDecision::decide(std::size_t reading, const ScanResult& from_start,
-                                                   const ScanResult* from_supposed_work, const Thresholds& thresholds)
+                                                   const ScanResult* from_supposed_work,
+                                                   const Thresholds& thresholds)
 {
-    const auto passes = [&](const ScanResult& result) { return result.possible && result.evidence > thresholds.cylinder; };
-    const auto unexplained = [](const ScanResult& result) { return result.any_change - result.strength * result.strength; };
+    const auto passes = [&](const ScanResult& result) {
+        return result.possible && result.evidence > thresholds.cylinder;
+    };
+    const auto unexplained = [](const ScanResult& result) {
+        return result.any_change - result.strength * result.strength;
+    };
     const bool open = question_open() && from_supposed_work;
     const double patience = open ? 0.5 : 1.0; // with a question open, its onset is known to be suspect
-    if (passes(from_start) && (no_work_ || unexplained(from_start) <= patience * thresholds.ask(from_start.strength)))
+    if (passes(from_start) &&
+        (no_work_ || unexplained(from_start) <= patience * thresholds.ask(from_start.strength)))
         return Outcome::drift_from_start;
     if (open && passes(*from_supposed_work) &&
         unexplained(*from_supposed_work) <= thresholds.ask(from_supposed_work->strength))
@@ -70,8 +77,8 @@ CylinderDecision::Outcome CylinderDecision::decide(std::size_t reading, const Sc
     return Outcome::question;
 }
 
-void FlagBook::carry(std::size_t reading, std::optional<std::size_t> cylinder, Level level, const Flag::View& view,
-                     bool starts)
+void FlagBook::carry(std::size_t reading, std::optional<std::size_t> cylinder, Level level,
+                     const Flag::View& view, bool starts)
 {
     if (starts || !open_) {
         close();

@@ -45,11 +45,14 @@ public:
     /// The step of a flag is taken as the new level.
     void accept_level(std::size_t onset);
 
-    std::size_t start() const { return start_; }           ///< after recorded work, or an accepted level
-    std::size_t supposed() const { return supposed_; }     ///< after supposed work; >= start
+    std::size_t start() const { return start_; }       ///< after recorded work, or an accepted level
+    std::size_t supposed() const { return supposed_; } ///< after supposed work; >= start
     bool question_open() const { return supposed_ > start_; }
     /// A drift at this reading would start a flag of its own.
-    bool was_quiet(std::size_t reading) const { return !last_drift_ || reading - *last_drift_ > quiet_readings; }
+    bool was_quiet(std::size_t reading) const
+    {
+        return !last_drift_ || reading - *last_drift_ > quiet_readings;
+    }
     void note_drift(std::size_t reading) { last_drift_ = reading; }
 
 private:
@@ -65,7 +68,8 @@ public:
     explicit FlagBook(std::vector<Flag>& flags) : flags_(&flags) {}
 
     /// A drift or question at a reading. Starts a flag if none is open.
-    void carry(std::size_t reading, std::optional<std::size_t> cylinder, Level level, const Flag::View& view, bool starts);
+    void carry(std::size_t reading, std::optional<std::size_t> cylinder, Level level, const Flag::View& view,
+               bool starts);
     void close();
     /// The open flag stays on the list, but a new one may start.
     void keep_as_lasting();

@@ -60,7 +60,8 @@ ReadingCheck check_last_reading(const Input& input)
 
 double years_by_chance(double evidence, std::size_t cylinders)
 {
-    // Fitted to rates measured on simulated sound engines; above evidence 5.1 the Gaussian tail is carried on.
+    // Fitted to rates measured on simulated sound engines; above evidence 5.1 the Gaussian tail is carried
+    // on.
     const double rate = cylinders == 0 ? 0.122 * std::exp(-(evidence * evidence - 17.64) / 6.0)
                                        : 0.262 * static_cast<double>(cylinders) / 8.5 *
                                              std::exp(-(evidence * evidence - 16.81) / 3.5);

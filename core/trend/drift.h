@@ -37,13 +37,14 @@ struct Cell
 /// One per-cylinder quantity.
 struct Channel
 {
-    std::string quantity;                               ///< name in the quantity catalogue
-    double noise = 1.0;                                 ///< prior one sigma of a reading, deviation's unit
-    double offset_spread = 1.0;                         ///< prior one sigma between cylinders' lasting offsets
-    std::vector<std::optional<double>> expected_typed;  ///< (T) expected in the typed unit: for a row in another unit
-    std::vector<Cell> cells;                            ///< (T x N)
-    std::vector<char> segment_starts;                   ///< (T x N) work on this instrument only, before this reading
-    bool in_scan = true;                                ///< false: typing check and apart only
+    std::string quantity;       ///< name in the quantity catalogue
+    double noise = 1.0;         ///< prior one sigma of a reading, deviation's unit
+    double offset_spread = 1.0; ///< prior one sigma between cylinders' lasting offsets
+    std::vector<std::optional<double>>
+        expected_typed;               ///< (T) expected in the typed unit: for a row in another unit
+    std::vector<Cell> cells;          ///< (T x N)
+    std::vector<char> segment_starts; ///< (T x N) work on this instrument only, before this reading
+    bool in_scan = true;              ///< false: typing check and apart only
     /// How far the quantity may go from its own level before the change, deviation's unit, > 0 each.
     std::optional<double> allowed_rise, allowed_fall;
 };
@@ -51,11 +52,11 @@ struct Channel
 /// One engine-level quantity. The medians over the cylinders are made by `judge` itself.
 struct EngineChannel
 {
-    std::string quantity;              ///< what it is called in flags, e.g. "cooler_temperature_difference"
-    std::string typed_quantity;        ///< the value a doubt names, e.g. "scavenge_temperature"; empty: `quantity`
-    double noise = 1.0;                ///< prior one sigma, deviation's unit
-    std::vector<Cell> cells;           ///< (T)
-    std::vector<char> segment_starts;  ///< (T) work on this instrument only
+    std::string quantity;       ///< what it is called in flags, e.g. "cooler_temperature_difference"
+    std::string typed_quantity; ///< the value a doubt names, e.g. "scavenge_temperature"; empty: `quantity`
+    double noise = 1.0;         ///< prior one sigma, deviation's unit
+    std::vector<Cell> cells;    ///< (T)
+    std::vector<char> segment_starts; ///< (T) work on this instrument only
     bool in_scan = true;
     std::optional<double> allowed_rise, allowed_fall;
 };
@@ -63,21 +64,23 @@ struct EngineChannel
 /// An engineer's answer to a question: known from the reading that raised it on.
 struct Answer
 {
-    std::size_t reading = 0;  ///< the reading at which the question started
+    std::size_t reading = 0; ///< the reading at which the question started
     std::size_t cylinder = 0;
     bool work_was_done = false;
 };
 
 struct Input
 {
-    std::vector<double> months;                       ///< (T) ascending; days since any fixed day / 30.4375
-    std::size_t cylinders = 0;                        ///< N
-    std::vector<std::optional<double>> load_percent;  ///< (T) or empty
+    std::vector<double> months;                      ///< (T) ascending; days since any fixed day / 30.4375
+    std::size_t cylinders = 0;                       ///< N
+    std::vector<std::optional<double>> load_percent; ///< (T) or empty
     std::vector<Channel> channels;
     std::vector<EngineChannel> engine_channels;
-    std::vector<char> cylinder_work;                  ///< (T x N) recorded work since the reading before: opens all quantities
-    std::vector<char> engine_work;                    ///< (T) the same for the engine level; the caller marks the cylinders too where they are meant
-    std::vector<char> excluded;                       ///< (T) takes no part in drift (not steady by the quick lines, outside the baseline)
+    std::vector<char> cylinder_work; ///< (T x N) recorded work since the reading before: opens all quantities
+    std::vector<char> engine_work; ///< (T) the same for the engine level; the caller marks the cylinders too
+                                   ///< where they are meant
+    std::vector<char>
+        excluded; ///< (T) takes no part in drift (not steady by the quick lines, outside the baseline)
     std::vector<Answer> answers;
 
     std::size_t readings() const { return months.size(); }
@@ -85,7 +88,15 @@ struct Input
 
 // ------------------------------------------------------------------------------------- typing check
 
-enum class Verdict { decimal_slip, digits_swapped, unit_slip, cylinders_swapped, implausible, copied, unsteady };
+enum class Verdict {
+    decimal_slip,
+    digits_swapped,
+    unit_slip,
+    cylinders_swapped,
+    implausible,
+    copied,
+    unsteady
+};
 std::string_view verdict_name(Verdict verdict); ///< "decimal_slip"
 
 /// Something that looks mistyped. It is a question to the engineer; the program changes no value.
@@ -98,16 +109,18 @@ struct Doubt
     std::vector<std::size_t> cylinders;     ///< empty: all (or engine level); one, or the two exchanged
     std::optional<double> suggested_number; ///< in the typed unit
     std::string suggested_text;             ///< as it would be typed
-    double size = 0.0;                      ///< distance from the usual in standard deviations; scatter ratio for unsteady
-    std::optional<double> deviation;        ///< of the typed value
-    std::optional<double> usual_low, usual_high; ///< about 95 of 100 sound values lie within, deviation's unit
+    double size = 0.0; ///< distance from the usual in standard deviations; scatter ratio for unsteady
+    std::optional<double> deviation; ///< of the typed value
+    std::optional<double> usual_low,
+        usual_high; ///< about 95 of 100 sound values lie within, deviation's unit
 };
 
 /// The usual band of one place, typed or not, in the deviation's unit.
 struct UsualBand
 {
     double centre = 0.0, low = 0.0, high = 0.0; ///< low and high: about 95 of 100 sound values lie within
-    bool from_others = true; ///< false: from the place's own last readings only (fewer than three others were read)
+    bool from_others =
+        true; ///< false: from the place's own last readings only (fewer than three others were read)
 };
 
 /// What the typing check says of the last reading.
@@ -115,8 +128,8 @@ struct ReadingCheck
 {
     std::vector<std::vector<std::optional<UsualBand>>> cylinder_bands; ///< [channel][cylinder]
     std::vector<std::optional<UsualBand>> engine_bands;                ///< [engine channel]
-    std::optional<double> scatter; ///< see ReadingResult
-    std::vector<Doubt> doubts;     ///< of this reading only
+    std::optional<double> scatter;                                     ///< see ReadingResult
+    std::vector<Doubt> doubts;                                         ///< of this reading only
 };
 
 /// Judges the last reading of the input as a draft: it may be partly filled. The same rules as in `judge`.
@@ -130,32 +143,32 @@ enum class Shape { step, ramp };
 struct ReadingResult
 {
     bool unsteady = false; ///< the typing check found all values scattered: a row `unsteady` among the doubts
-    bool poor = false;     ///< takes no part in the scan: scatter against the cylinders' own levels, or excluded
-    std::optional<double> scatter; ///< robust sigma of all cells over the usual one; above 1.8 it is unsteady
+    bool poor = false; ///< takes no part in the scan: scatter against the cylinders' own levels, or excluded
+    std::optional<double> scatter; ///< robust sigma of all cells over the usual one; above 1.7 it is unsteady
 };
 
 struct CellResult
 {
-    std::optional<double> apart;    ///< r: deviation without what all cylinders share (own lasting offset kept)
-    double own_offset = 0.0;        ///< a: usual difference from the others
-    bool doubtful = false;          ///< left out by the typing check
-    bool used = false;              ///< took part in the scan
-    double clipped = 0.0;           ///< v: what the scan saw when this reading came in
-    double noise = 0.0;             ///< s: one sigma in force at this reading
-    std::size_t usable = 0;         ///< values of the segment up to here; below 8 "learning, k of 8"
-    std::size_t segment_start = 0;  ///< first reading that counts
+    std::optional<double> apart; ///< r: deviation without what all cylinders share (own lasting offset kept)
+    double own_offset = 0.0;     ///< a: usual difference from the others
+    bool doubtful = false;       ///< left out by the typing check
+    bool used = false;           ///< took part in the scan
+    double clipped = 0.0;        ///< v: what the scan saw when this reading came in
+    double noise = 0.0;          ///< s: one sigma in force at this reading
+    std::size_t usable = 0;      ///< values of the segment up to here; below 8 "learning, k of 8"
+    std::size_t segment_start = 0; ///< first reading that counts
 };
 
 struct SubjectResult
 {
     std::optional<double> evidence; ///< the largest standardised change; nothing where nothing can be said
     Level level = Level::quiet;
-    std::string candidate;          ///< quantity or signature with the largest evidence
+    std::string candidate; ///< quantity or signature with the largest evidence
     bool is_signature = false;
-    int direction = 0;              ///< +1 or -1 for a quantity
+    int direction = 0; ///< +1 or -1 for a quantity
     Shape shape = Shape::step;
-    std::size_t onset = 0;          ///< the first changed reading; the change is dated to the reading before
-    double unexplained = 0.0;       ///< chi-square of "every quantity took a new level", F (cylinders)
+    std::size_t onset = 0;    ///< the first changed reading; the change is dated to the reading before
+    double unexplained = 0.0; ///< chi-square of "every quantity took a new level", F (cylinders)
     bool question_open = false;
 };
 
@@ -179,9 +192,9 @@ struct Flag
     std::optional<std::size_t> cylinder; ///< none: the engine
     Level level = Level::watch;          ///< watch, act or ask, when it started
     std::vector<Escalation> escalations;
-    std::size_t last_reading = 0;        ///< the last one that carries it
-    bool active = false;                 ///< stands at the last reading
-    bool lasting_level = false;          ///< a step open for 12 readings: now taken as the new level
+    std::size_t last_reading = 0; ///< the last one that carries it
+    bool active = false;          ///< stands at the last reading
+    bool lasting_level = false;   ///< a step open for 12 readings: now taken as the new level
     // What it looked like at `last_reading`; `at_start` keeps what it looked like when it started.
     struct View
     {
@@ -189,11 +202,11 @@ struct Flag
         bool is_signature = false;
         int direction = 0;
         Shape shape = Shape::step;
-        std::size_t onset = 0;           ///< first changed reading
-        std::size_t since = 0;           ///< the reading before: "since"
-        double months = 0.0;             ///< from `since` to the reading of this view
+        std::size_t onset = 0; ///< first changed reading
+        std::size_t since = 0; ///< the reading before: "since"
+        double months = 0.0;   ///< from `since` to the reading of this view
         double evidence = 0.0;
-        double years_by_chance = 0.0;    ///< once in so many years on a sound engine, all work recorded
+        double years_by_chance = 0.0;        ///< once in so many years on a sound engine, all work recorded
         std::vector<QuantityChange> changes; ///< strongest first
     } at_start, now;
     std::optional<std::size_t> work_before; ///< questions: work is supposed before this reading
@@ -203,14 +216,16 @@ struct Flag
 struct Output
 {
     double cylinder_threshold = 0.0, engine_threshold = 0.0, note_threshold = 4.0;
-    std::vector<ReadingResult> readings;      ///< (T)
+    std::vector<ReadingResult> readings;        ///< (T)
     std::vector<std::vector<CellResult>> cells; ///< [channel](T x N)
-    std::vector<SubjectResult> cylinders;     ///< (T x N)
-    std::vector<SubjectResult> engine;        ///< (T)
-    std::vector<std::string> engine_quantities; ///< the engine level's channels: the input's, then "median <quantity>"
-    std::vector<std::vector<CellResult>> engine_cells; ///< [engine quantity](T); apart = deviation without load and season
-    std::vector<Flag> flags;                  ///< in order of their start; questions among them
-    std::vector<Doubt> doubts;                ///< in order of reading
+    std::vector<SubjectResult> cylinders;       ///< (T x N)
+    std::vector<SubjectResult> engine;          ///< (T)
+    std::vector<std::string>
+        engine_quantities; ///< the engine level's channels: the input's, then "median <quantity>"
+    std::vector<std::vector<CellResult>>
+        engine_cells;          ///< [engine quantity](T); apart = deviation without load and season
+    std::vector<Flag> flags;   ///< in order of their start; questions among them
+    std::vector<Doubt> doubts; ///< in order of reading
 };
 
 /// Judges all readings. Never throws for odd data: values that are not finite count as not taken, a vector

@@ -28,11 +28,13 @@ std::vector<CatalogueChannel> read_channels()
     for (std::size_t row = 0; row < table.rows(); ++row) {
         const std::string& quantity = table.cell(row, "quantity");
         const std::string& typed = table.cell(row, "typed_quantity");
-        channels.push_back({quantity, typed.empty() ? quantity : typed, subject_of(table.cell(row, "subject")),
-                            table.number(row, "noise").value(), table.number(row, "offset_spread").value(),
-                            table.cell(row, "deviation_form") == "percent" ? DeviationForm::percent : DeviationForm::difference,
-                            table.cell(row, "unit"), table.number(row, "row_ratio_low").value_or(0.0),
-                            table.number(row, "row_ratio_high").value_or(1e9), table.cell(row, "counted") == "yes"});
+        channels.push_back(
+            {quantity, typed.empty() ? quantity : typed, subject_of(table.cell(row, "subject")),
+             table.number(row, "noise").value(), table.number(row, "offset_spread").value(),
+             table.cell(row, "deviation_form") == "percent" ? DeviationForm::percent
+                                                            : DeviationForm::difference,
+             table.cell(row, "unit"), table.number(row, "row_ratio_low").value_or(0.0),
+             table.number(row, "row_ratio_high").value_or(1e9), table.cell(row, "counted") == "yes"});
     }
     return channels;
 }
@@ -52,8 +54,11 @@ std::vector<Signature> read_signatures()
     std::vector<Signature> signatures;
     const CatalogueTable table(catalogue_text::drift_signatures);
     for (std::size_t row = 0; row < table.rows(); ++row) {
-        Signature signature{table.cell(row, "name"), table.cell(row, "title"), subject_of(table.cell(row, "subject")),
-                            table.number(row, "weight").value(), {}};
+        Signature signature{table.cell(row, "name"),
+                            table.cell(row, "title"),
+                            subject_of(table.cell(row, "subject")),
+                            table.number(row, "weight").value(),
+                            {}};
         for (const std::string& move : split_list(table.cell(row, "moves")))
             signature.moves.push_back(read_move(move));
         signatures.push_back(std::move(signature));
@@ -72,8 +77,8 @@ std::vector<Correlation> read_correlations()
     std::vector<Correlation> correlations;
     const CatalogueTable table(catalogue_text::drift_correlations);
     for (std::size_t row = 0; row < table.rows(); ++row)
-        correlations.push_back(
-            {table.cell(row, "quantity"), table.cell(row, "other"), table.number(row, "correlation").value()});
+        correlations.push_back({table.cell(row, "quantity"), table.cell(row, "other"),
+                                table.number(row, "correlation").value()});
     return correlations;
 }
 
@@ -113,7 +118,8 @@ double noise_correlation(std::string_view quantity, std::string_view other)
     if (quantity == other)
         return 1.0;
     for (const Correlation& pair : correlations)
-        if ((pair.quantity == quantity && pair.other == other) || (pair.quantity == other && pair.other == quantity))
+        if ((pair.quantity == quantity && pair.other == other) ||
+            (pair.quantity == other && pair.other == quantity))
             return pair.amount;
     return 0.0;
 }

@@ -23,9 +23,10 @@ struct CatalogueChannel
     double offset_spread;       ///< prior one sigma between cylinders; 0 at engine level
     DeviationForm form;         ///< percent: 100 (corrected / expected - 1)
     std::string unit;           ///< of the deviation
-    /// Median of typed over expected outside which a whole row must be in another unit; 0 and 1e9: not looked for.
+    /// Median of typed over expected outside which a whole row must be in another unit; 0 and 1e9: not looked
+    /// for.
     double row_ratio_low, row_ratio_high;
-    bool counted;               ///< among those the thresholds were calibrated for; others raise them a little
+    bool counted; ///< among those the thresholds were calibrated for; others raise them a little
 };
 
 /// What one fault moves, in noise units. A quantity that is not named is not expected to move.

@@ -9,9 +9,13 @@ namespace evenstroke::drift {
 
 namespace {
 
-constexpr double worth_naming = 1.5; ///< standard deviations; a quantity that moved less is not named in a flag
+constexpr double worth_naming =
+    1.5; ///< standard deviations; a quantity that moved less is not named in a flag
 
-Level level_of(const Flag& flag) { return flag.escalations.empty() ? flag.level : flag.escalations.back().level; }
+Level level_of(const Flag& flag)
+{
+    return flag.escalations.empty() ? flag.level : flag.escalations.back().level;
+}
 
 void keep_worth_naming(std::vector<QuantityChange>& changes)
 {
@@ -30,7 +34,8 @@ std::string DriftRun::candidate_name(std::size_t candidate) const
                                        : matcher_.signature(candidate - scanned_.size()).name;
 }
 
-Flag::View DriftRun::view_of(std::size_t reading, const ScanResult& result, const std::vector<ScanSeries>& series) const
+Flag::View DriftRun::view_of(std::size_t reading, const ScanResult& result,
+                             const std::vector<ScanSeries>& series) const
 {
     Flag::View view;
     view.candidate = candidate_name(result.candidate);
@@ -42,16 +47,19 @@ Flag::View DriftRun::view_of(std::size_t reading, const ScanResult& result, cons
     view.months = months_[reading] - months_[view.since];
     view.evidence = result.evidence;
     view.years_by_chance = years_by_chance(result.evidence, cylinders_);
-    const std::vector<std::size_t> moved = view.is_signature ? matcher_.channels(result.candidate - scanned_.size())
-                                                             : std::vector<std::size_t>{result.candidate};
+    const std::vector<std::size_t> moved = view.is_signature
+                                               ? matcher_.channels(result.candidate - scanned_.size())
+                                               : std::vector<std::size_t>{result.candidate};
     for (const std::size_t k : moved) {
         const ScanSeries& one = series[k];
-        const auto fit = result.onset <= one.first ? std::nullopt
-                         : result.shape == Shape::step
-                             ? fit_step(*one.sums, one.first, result.onset, reading, one.noise)
-                             : fit_ramp(*one.sums, one.first, result.onset, reading, one.noise, months_[view.since]);
+        const auto fit =
+            result.onset <= one.first ? std::nullopt
+            : result.shape == Shape::step
+                ? fit_step(*one.sums, one.first, result.onset, reading, one.noise)
+                : fit_ramp(*one.sums, one.first, result.onset, reading, one.noise, months_[view.since]);
         if (fit)
-            view.changes.push_back({input_->channels[scanned_[k]].quantity, fit->strength(), fit->size(one.noise)});
+            view.changes.push_back(
+                {input_->channels[scanned_[k]].quantity, fit->strength(), fit->size(one.noise)});
     }
     keep_worth_naming(view.changes);
     return view;
@@ -61,8 +69,9 @@ bool DriftRun::limit_is_near(std::size_t reading, std::size_t cylinder, const Fl
 {
     constexpr double soon_months = 2.0;
     for (const QuantityChange& change : view.changes) {
-        const auto named = std::find_if(scanned_.begin(), scanned_.end(),
-                                        [&](std::size_t k) { return input_->channels[k].quantity == change.quantity; });
+        const auto named = std::find_if(scanned_.begin(), scanned_.end(), [&](std::size_t k) {
+            return input_->channels[k].quantity == change.quantity;
+        });
         const Channel& channel = input_->channels[*named];
         const auto& allowed = change.size > 0.0 ? channel.allowed_rise : channel.allowed_fall;
         if (!allowed || view.shape != Shape::ramp)
@@ -95,7 +104,8 @@ void DriftRun::judge_cylinder(std::size_t reading, std::size_t cylinder)
         from_supposed = scan(later_series, matcher_, months_, reading);
     }
     const bool was_open = decision.question_open();
-    const auto outcome = decision.decide(reading, from_start, was_open ? &from_supposed : nullptr, thresholds_);
+    const auto outcome =
+        decision.decide(reading, from_start, was_open ? &from_supposed : nullptr, thresholds_);
     const bool later = outcome == CylinderDecision::Outcome::drift_from_supposed_work ||
                        (outcome != CylinderDecision::Outcome::drift_from_start && was_open);
     const ScanResult& result = later ? from_supposed : from_start;
@@ -158,7 +168,8 @@ void DriftRun::take_answers(std::size_t reading)
 {
     for (const Answer& answer : input_->answers) {
         const std::size_t j = answer.cylinder;
-        if (answer.reading != reading || j >= cylinders_ || !question_[j] || output_.flags[*question_[j]].reading != reading)
+        if (answer.reading != reading || j >= cylinders_ || !question_[j] ||
+            output_.flags[*question_[j]].reading != reading)
             continue;
         decisions_[j].answer(answer.work_was_done);
         for (ChannelHistory& channel : history_)
@@ -173,8 +184,8 @@ void DriftRun::take_answers(std::size_t reading)
 void DriftRun::judge_engine(std::size_t reading, const ReadingOpinion& opinion)
 {
     const bool poor = output_.readings[reading].poor;
-    const bool load_known = input_->load_percent.size() == input_->readings() && input_->load_percent[reading] &&
-                            std::isfinite(*input_->load_percent[reading]);
+    const bool load_known = input_->load_percent.size() == input_->readings() &&
+                            input_->load_percent[reading] && std::isfinite(*input_->load_percent[reading]);
     const double load = load_known ? std::clamp(*input_->load_percent[reading], 0.0, 150.0) : 75.0;
     std::vector<std::optional<double>> values(engine_.series().size());
     for (std::size_t e = 0; e < input_->engine_channels.size() && !poor; ++e) {
@@ -186,7 +197,8 @@ void DriftRun::judge_engine(std::size_t reading, const ReadingOpinion& opinion)
         std::vector<double> without_offset;
         for (std::size_t j = 0; j < cylinders_ && !poor; ++j)
             if (const auto& value = history_[median_of.channel].deviation[at(reading, j)])
-                without_offset.push_back(*value - output_.cells[median_of.channel][at(reading, j)].own_offset);
+                without_offset.push_back(*value -
+                                         output_.cells[median_of.channel][at(reading, j)].own_offset);
         values[median_of.series] = median(std::move(without_offset));
     }
     for (std::size_t e = 0; e < values.size(); ++e) {
@@ -220,7 +232,8 @@ Flag::View DriftRun::engine_view(std::size_t reading, const ScanResult& result) 
     for (const std::size_t e : engine_.moved_by(result.candidate)) {
         const EngineSeries& series = engine_.series()[e];
         if (const auto fit = series.fit(result.onset, result.shape))
-            view.changes.push_back({output_.engine_quantities[e], fit->strength(), fit->size(series.noise())});
+            view.changes.push_back(
+                {output_.engine_quantities[e], fit->strength(), fit->size(series.noise())});
     }
     keep_worth_naming(view.changes);
     return view;
@@ -234,7 +247,8 @@ void DriftRun::settle_engine(std::size_t reading, const ScanResult& result)
         const bool starts = !last_engine_drift_ || reading - *last_engine_drift_ > quiet_readings;
         const bool strong = result.evidence >= thresholds_.engine + thresholds_.act_above;
         last_engine_drift_ = reading;
-        book.carry(reading, std::nullopt, strong ? Level::act : Level::watch, engine_view(reading, result), starts);
+        book.carry(reading, std::nullopt, strong ? Level::act : Level::watch, engine_view(reading, result),
+                   starts);
     } else if (last_engine_drift_ && reading - *last_engine_drift_ > quiet_readings) {
         book.close();
     }

@@ -10,13 +10,17 @@ namespace evenstroke::drift {
 
 namespace {
 
-double positive_or_one(double value) { return std::isfinite(value) && value > 0.0 ? value : 1.0; }
+double positive_or_one(double value)
+{
+    return std::isfinite(value) && value > 0.0 ? value : 1.0;
+}
 
 } // namespace
 
 ChannelHistory::ChannelHistory(const Channel& channel, std::size_t readings, std::size_t cylinder_count)
     : input(&channel), cylinders(cylinder_count),
-      sound_input(channel.cells.size() == readings * cylinder_count && std::isfinite(channel.noise) && channel.noise > 0.0),
+      sound_input(channel.cells.size() == readings * cylinder_count && std::isfinite(channel.noise) &&
+                  channel.noise > 0.0),
       deviation(readings * cylinder_count), from_others(readings * cylinder_count), start(cylinder_count, 0),
       check_noise(noise_against_others(positive_or_one(channel.noise), cylinder_count), prior_noise_weight),
       // Alone, the common part of all cylinders stays in: 2.5 times the noise, invented.

@@ -14,7 +14,7 @@
 namespace evenstroke::drift {
 
 /// Weight of the catalogue's noise against the engine's own, in differences between readings.
-inline constexpr double prior_noise_weight = 60.0;
+inline constexpr double prior_noise_weight = 30.0;
 
 /// Whether the flag at `at` is set; flags that were left empty, or are of the wrong length, are not.
 inline bool is_set(const std::vector<char>& flags, std::size_t at, std::size_t wanted_size)

@@ -30,6 +30,12 @@ std::vector<double> sound_months(const std::vector<double>& months)
     return sound;
 }
 
+/// More often at first: a ship whose scatter is not the catalogue's shows it within half a year.
+bool noise_is_renewed_at(std::size_t reading)
+{
+    return reading == 4 || reading == 6 || (reading >= 8 && reading % 4 == 0);
+}
+
 std::vector<std::string> names_of(const Input& input, const std::vector<std::size_t>& channels)
 {
     std::vector<std::string> names;
@@ -58,10 +64,11 @@ std::vector<ChannelHistory> empty_history(const Input& input)
 } // namespace
 
 DriftRun::DriftRun(const Input& input)
-    : input_(&input), cylinders_(input.cylinders), months_(sound_months(input.months)), history_(empty_history(input)),
-      scanned_(channels_in_scan(input, history_)),
+    : input_(&input), cylinders_(input.cylinders), months_(sound_months(input.months)),
+      history_(empty_history(input)), scanned_(channels_in_scan(input, history_)),
       sums_(input.channels.size(), std::vector<RunningSums>(input.cylinders)), typing_(input),
-      matcher_(names_of(input, scanned_)), decisions_(input.cylinders), question_(input.cylinders), engine_(input)
+      matcher_(names_of(input, scanned_)), decisions_(input.cylinders), question_(input.cylinders),
+      engine_(input)
 {
     const std::size_t readings = input.readings();
     for (const Channel& channel : input.channels)
@@ -79,7 +86,8 @@ DriftRun::DriftRun(const Input& input)
     output_.engine.resize(readings);
     output_.engine_cells.assign(engine_.series().size(), std::vector<CellResult>(readings));
     for (const EngineSeries& series : engine_.series())
-        output_.engine_quantities.push_back(series.is_median() ? "median " + series.quantity() : series.quantity());
+        output_.engine_quantities.push_back(series.is_median() ? "median " + series.quantity()
+                                                               : series.quantity());
     books_.assign(cylinders_ + 1, FlagBook(output_.flags));
 }
 
@@ -94,7 +102,7 @@ void DriftRun::take(std::size_t reading)
     output_.readings[reading].scatter = opinion.scatter;
     keep_usable(reading, opinion);
     for (std::size_t k = 0; k < history_.size(); ++k)
-        take_apart(reading, k);
+        take_apart(reading, k, opinion);
     judge_poor(reading);
     learn_noise(reading);
     add_to_sums(reading);
@@ -107,8 +115,7 @@ void DriftRun::take(std::size_t reading)
 ReadingOpinion DriftRun::look_at(std::size_t reading)
 {
     open_segments(reading);
-    constexpr std::size_t first_renewal = 8, between_renewals = 4;
-    if (reading >= first_renewal && reading % between_renewals == 0)
+    if (noise_is_renewed_at(reading))
         for (std::size_t k = 0; k < history_.size(); ++k) {
             history_[k].check_noise.renew();
             history_[k].alone_noise.renew();
@@ -161,17 +168,22 @@ void DriftRun::keep_usable(std::size_t reading, const ReadingOpinion& opinion)
         if (!excluded)
             history_[k].take(reading, row, steady);
         else
-            std::copy(row.begin(), row.end(), history_[k].deviation.begin() + static_cast<std::ptrdiff_t>(at(reading, 0)));
+            std::copy(row.begin(), row.end(),
+                      history_[k].deviation.begin() + static_cast<std::ptrdiff_t>(at(reading, 0)));
     }
 }
 
-void DriftRun::take_apart(std::size_t reading, std::size_t channel)
+void DriftRun::take_apart(std::size_t reading, std::size_t channel, const ReadingOpinion& opinion)
 {
     const ChannelHistory& history = history_[channel];
     std::vector<double> offsets(cylinders_);
     for (std::size_t j = 0; j < cylinders_; ++j) {
-        const std::size_t first = std::max(history.start[j], decisions_[j].supposed());
-        offsets[j] = own_offset(history.from_others, cylinders_, j, first, reading).amount;
+        const std::size_t supposed = decisions_[j].supposed();
+        offsets[j] = supposed <= history.start[j] && history.sound_input
+                         ? opinion.cylinders[channel][j].own_offset // from the same readings
+                         : own_offset(history.from_others, cylinders_, j,
+                                      std::max(history.start[j], supposed), reading)
+                               .amount;
     }
     const Row row = Row(history.deviation).subspan(at(reading, 0), cylinders_);
     const double noise = apart_noise_[channel].value();
@@ -194,13 +206,15 @@ void DriftRun::learn_noise(std::size_t reading)
     const bool steady = !output_.readings[reading].poor && !output_.readings[reading - 1].poor;
     for (std::size_t k = 0; k < history_.size(); ++k)
         for (std::size_t j = 0; j < cylinders_; ++j) {
-            const auto &now = output_.cells[k][at(reading, j)].apart, &before = output_.cells[k][at(reading - 1, j)].apart;
+            const auto &now = output_.cells[k][at(reading, j)].apart,
+                       &before = output_.cells[k][at(reading - 1, j)].apart;
             if (now && before && history_[k].start[j] < reading)
                 apart_noise_[k].add_difference(*now - *before, steady);
         }
 }
 
-std::optional<double> DriftRun::recent_level(std::size_t reading, std::size_t channel, std::size_t cylinder) const
+std::optional<double> DriftRun::recent_level(std::size_t reading, std::size_t channel,
+                                             std::size_t cylinder) const
 {
     constexpr std::size_t memory = 5, needed = 2;
     std::array<double, memory> last{};
@@ -240,7 +254,8 @@ void DriftRun::judge_poor(std::size_t reading)
     result.poor = scatter > unsteady_scatter;
 }
 
-double DriftRun::clip_one_off(std::size_t reading, std::size_t channel, std::size_t cylinder, double apart) const
+double DriftRun::clip_one_off(std::size_t reading, std::size_t channel, std::size_t cylinder,
+                              double apart) const
 {
     const auto level = recent_level(reading, channel, cylinder);
     return level ? pull_in(apart, *level, 2.5 * apart_noise_[channel].value()) : apart;
@@ -259,7 +274,8 @@ void DriftRun::add_to_sums(std::size_t reading)
                 cell.clipped = *value;
             }
             sums_[k][j].add(months_[reading], value);
-            cell.usable = static_cast<std::size_t>(sums_[k][j].between(history_[k].start[j], reading).count + 0.5);
+            cell.usable =
+                static_cast<std::size_t>(sums_[k][j].between(history_[k].start[j], reading).count + 0.5);
             if (value && cell.usable == first_values)
                 renew_first_values(reading, k, j);
         }
@@ -284,10 +300,14 @@ std::vector<ScanSeries> DriftRun::series_of(std::size_t cylinder, std::size_t no
 {
     std::vector<ScanSeries> series;
     for (const std::size_t k : scanned_)
-        series.push_back({&sums_[k][cylinder], std::max(history_[k].start[cylinder], not_before), apart_noise_[k].value()});
+        series.push_back({&sums_[k][cylinder], std::max(history_[k].start[cylinder], not_before),
+                          apart_noise_[k].value()});
     return series;
 }
 
-Output DriftRun::finish() { return std::move(output_); }
+Output DriftRun::finish()
+{
+    return std::move(output_);
+}
 
 } // namespace evenstroke::drift

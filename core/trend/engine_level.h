@@ -14,7 +14,8 @@ namespace evenstroke::drift {
 class EngineLevel
 {
 public:
-    /// Series in the order of the input's engine channels, then the medians of the catalogue that the input has.
+    /// Series in the order of the input's engine channels, then the medians of the catalogue that the input
+    /// has.
     explicit EngineLevel(const Input& input);
 
     struct MedianOf

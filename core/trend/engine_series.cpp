@@ -21,18 +21,30 @@ EngineSeries::EngineSeries(std::string quantity, bool is_median, double noise, b
 {
 }
 
+void EngineSeries::open_segment()
+{
+    first_ = values_.size();
+    products_ = {};
+}
+
+void EngineSeries::add_sorted(double difference)
+{
+    differences_.insert(std::upper_bound(differences_.begin(), differences_.end(), difference), difference);
+}
+
 void EngineSeries::learn_noise(double value)
 {
     constexpr double prior_weight = 8.0;
     const bool new_segment = first_ == values_.size();
     if (last_unclipped_ && !new_segment)
-        differences_.push_back(std::abs(value - *last_unclipped_));
+        add_sorted(std::abs(value - *last_unclipped_));
     last_unclipped_ = value;
     if (differences_.empty())
         return;
     const double count = static_cast<double>(differences_.size());
-    const double sigma = median_to_sigma * median_in_place(differences_);
-    noise_ = std::sqrt((prior_weight * prior_ * prior_ + count * sigma * sigma / 2.0) / (prior_weight + count));
+    const double sigma = median_to_sigma * median_of_sorted(differences_);
+    noise_ =
+        std::sqrt((prior_weight * prior_ * prior_ + count * sigma * sigma / 2.0) / (prior_weight + count));
 }
 
 double EngineSeries::clip(double value) const
@@ -64,8 +76,8 @@ void EngineSeries::add(double month, double load_percent, std::optional<double> 
             sums.column[c] += column[c];
             sums.column_time[c] += column[c] * month;
             sums.column_value[c] += column[c] * *value;
-            for (std::size_t d = 0; d < columns; ++d)
-                sums.product[c][d] += column[c] * column[d];
+            for (std::size_t d = 0; d <= c; ++d)
+                products_[c][d] += column[c] * column[d];
         }
         sums.time_squared += month * month;
         sums.value_time += *value * month;
@@ -82,8 +94,6 @@ EngineSeries::Sums EngineSeries::between(std::size_t first, std::size_t last) co
         sums.column[c] -= before.column[c];
         sums.column_time[c] -= before.column_time[c];
         sums.column_value[c] -= before.column_value[c];
-        for (std::size_t d = 0; d < columns; ++d)
-            sums.product[c][d] -= before.product[c][d];
     }
     sums.time_squared -= before.time_squared;
     sums.value_time -= before.value_time;
@@ -92,7 +102,9 @@ EngineSeries::Sums EngineSeries::between(std::size_t first, std::size_t last) co
 
 std::size_t EngineSeries::usable() const
 {
-    return values_.empty() ? 0 : static_cast<std::size_t>(cumulated_.back().column[0] - cumulated_[first_].column[0] + 0.5);
+    return values_.empty()
+               ? 0
+               : static_cast<std::size_t>(cumulated_.back().column[0] - cumulated_[first_].column[0] + 0.5);
 }
 
 std::size_t EngineSeries::columns_that_count() const
@@ -100,7 +112,8 @@ std::size_t EngineSeries::columns_that_count() const
     const std::size_t count = usable();
     if (count < load_needs_values)
         return 1;
-    const bool season = count >= season_needs_values && months_.back() - months_[first_] >= season_needs_months;
+    const bool season =
+        count >= season_needs_values && months_.back() - months_[first_] >= season_needs_months;
     return season ? columns : 2;
 }
 
@@ -111,17 +124,17 @@ void EngineSeries::prepare()
     const std::size_t used = columns_that_count();
     for (std::size_t c = 0; c < used; ++c) {
         PerColumn& row = triangle_[c];
-        double pivot = segment_.product[c][c];
+        double pivot = products_[c][c];
         for (std::size_t d = 0; d < c; ++d) {
-            double sum = segment_.product[c][d];
+            double sum = products_[c][d];
             for (std::size_t e = 0; e < d; ++e)
                 sum -= row[e] * triangle_[d][e];
-            row[d] = triangle_[d][d] > 0.0 ? sum / triangle_[d][d] : 0.0;
+            row[d] = sum * triangle_[d][d];
             pivot -= row[d] * row[d];
         }
         // A column that the ones before it explain (a load that never changed) is left out.
-        if (pivot > 1e-6 * (1e-6 + segment_.product[c][c]))
-            row[c] = std::sqrt(pivot);
+        if (pivot > 1e-6 * (1e-6 + products_[c][c]))
+            row[c] = 1.0 / std::sqrt(pivot);
         else
             row = {};
     }
@@ -133,7 +146,7 @@ EngineSeries::PerColumn EngineSeries::reduce(PerColumn moments) const
     for (std::size_t c = 0; c < columns; ++c) {
         for (std::size_t d = 0; d < c; ++d)
             moments[c] -= triangle_[c][d] * moments[d];
-        moments[c] = triangle_[c][c] > 0.0 ? moments[c] / triangle_[c][c] : 0.0;
+        moments[c] *= triangle_[c][c];
     }
     return moments;
 }

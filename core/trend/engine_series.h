@@ -20,7 +20,7 @@ public:
     EngineSeries(std::string quantity, bool is_median, double noise, bool in_scan);
 
     /// A new segment begins at the next reading that is added.
-    void open_segment() { first_ = values_.size(); }
+    void open_segment();
     /// @param value nothing where it was not read, is doubtful, or the reading takes no part
     void add(double month, double load_percent, std::optional<double> value);
     /// Readies `fit` and `residual` for the values so far.
@@ -45,9 +45,10 @@ private:
     struct Sums
     {
         PerColumn column{}, column_time{}, column_value{};
-        std::array<PerColumn, columns> product{};
         double time_squared = 0.0, value_time = 0.0;
     };
+    using Products = std::array<PerColumn, columns>;
+    void add_sorted(double difference);
     void learn_noise(double value);
     double clip(double value) const;
     std::size_t columns_that_count() const;
@@ -59,13 +60,16 @@ private:
     bool median_, in_scan_;
     double prior_, noise_;
     std::size_t first_ = 0;
-    std::vector<double> months_, loads_, differences_;
+    std::vector<double> months_, loads_;
+    std::vector<double> differences_;           ///< between readings, ascending
     std::vector<std::optional<double>> values_; ///< clipped
     std::optional<double> last_unclipped_;
-    std::vector<Sums> cumulated_{Sums{}};       ///< [i]: over the readings before i
+    std::vector<Sums> cumulated_{Sums{}}; ///< [i]: over the readings before i
+    Products products_{};                 ///< of the columns, over the segment
     // Set by prepare():
     Sums segment_;
-    std::array<PerColumn, columns> triangle_{}; ///< Cholesky factor of the columns' products; an empty row: left out
+    /// Cholesky factor of the columns' products, with one over the diagonal on it; an empty row: left out.
+    Products triangle_{};
     PerColumn reduced_values_{};
 };
 

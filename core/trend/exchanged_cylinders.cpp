@@ -7,7 +7,10 @@ namespace evenstroke::drift {
 
 namespace {
 
-double limited_square(double distance) { return std::min(distance * distance, 9.0); }
+double limited_square(double distance)
+{
+    return std::min(distance * distance, 9.0);
+}
 
 /// Gain of reading cylinder p's box as q's and the other way round; nothing with fewer than 3 quantities.
 std::optional<double> gain_of_exchange(const ReadingOpinion& opinion, std::size_t p, std::size_t q)

@@ -24,8 +24,15 @@ public:
     double value() const { return value_; }
 
 private:
+    /// Sorted up to `sorted`, so that a renewal costs one merging.
+    struct Differences
+    {
+        std::vector<double> values;
+        std::size_t sorted = 0;
+        void sort();
+    };
     double prior_, weight_, value_;
-    std::vector<double> steady_, unsteady_;
+    Differences steady_, unsteady_;
 };
 
 /// Prior sigma of a value against the mean of the others: their mean has noise of its own, the 10 % over

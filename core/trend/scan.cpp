@@ -8,8 +8,8 @@ namespace evenstroke::drift {
 
 RunningSums::Sums RunningSums::Sums::operator-(const Sums& earlier) const
 {
-    return {count - earlier.count, value - earlier.value, time - earlier.time, time_squared - earlier.time_squared,
-            value_time - earlier.value_time};
+    return {count - earlier.count, value - earlier.value, time - earlier.time,
+            time_squared - earlier.time_squared, value_time - earlier.value_time};
 }
 
 namespace {
@@ -52,8 +52,8 @@ RunningSums::Sums RunningSums::between(std::size_t first, std::size_t last) cons
 namespace {
 
 /// Sums of one fit: over the segment, and of the shape where it is not 0.
-std::optional<Fit> fit(const RunningSums::Sums& all, double shape_sum, double shape_squares, double shape_values,
-                       double noise)
+std::optional<Fit> fit(const RunningSums::Sums& all, double shape_sum, double shape_squares,
+                       double shape_values, double noise)
 {
     const double shape_squared = shape_squares - shape_sum * shape_sum / all.count;
     // Readings of one day make a ramp flat; the bound only has to keep rounding away.
@@ -62,13 +62,16 @@ std::optional<Fit> fit(const RunningSums::Sums& all, double shape_sum, double sh
     return Fit{shape_squared, (shape_values - shape_sum * all.value / all.count) / noise};
 }
 
-std::optional<Fit> ramp(const RunningSums::Sums& all, const RunningSums::Sums& after, double noise, double from)
+std::optional<Fit> ramp(const RunningSums::Sums& all, const RunningSums::Sums& after, double noise,
+                        double from)
 {
-    return fit(all, after.time - after.count * from, after.time_squared - from * (2.0 * after.time - after.count * from),
+    return fit(all, after.time - after.count * from,
+               after.time_squared - from * (2.0 * after.time - after.count * from),
                after.value_time - from * after.value, noise);
 }
 
-bool enough(const RunningSums& sums, const RunningSums::Sums& all, const RunningSums::Sums& after, std::size_t last)
+bool enough(const RunningSums& sums, const RunningSums::Sums& all, const RunningSums::Sums& after,
+            std::size_t last)
 {
     return sums.has(last) && all.count - after.count >= static_cast<double>(readings_before_onset) &&
            after.count >= static_cast<double>(readings_after_onset);
@@ -76,7 +79,8 @@ bool enough(const RunningSums& sums, const RunningSums::Sums& all, const Running
 
 } // namespace
 
-std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last, double noise)
+std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last,
+                            double noise)
 {
     const RunningSums::Sums all = sums.between(first, last), after = sums.between(onset, last);
     if (!enough(sums, all, after, last))
@@ -84,8 +88,8 @@ std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::siz
     return fit(all, after.count, after.count, after.value, noise);
 }
 
-std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last, double noise,
-                            double from)
+std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last,
+                            double noise, double from)
 {
     const RunningSums::Sums all = sums.between(first, last), after = sums.between(onset, last);
     if (!enough(sums, all, after, last))
@@ -165,23 +169,27 @@ private:
     bool possible_ = false;
 };
 
-void weigh_candidates(const FitRow& fits, const SignatureMatcher& matcher, std::size_t onset, Shape shape,
-                      ScanResult& result)
+/// @param any_change u' C^-1 u of these fits. No signature can exceed its root (Cauchy-Schwarz), so most
+/// onsets need no look at them.
+void weigh_candidates(const FitRow& fits, const SignatureMatcher& matcher, double any_change,
+                      std::size_t onset, Shape shape, ScanResult& result)
 {
-    if (fits.taken == 0)
-        return;
     for (std::size_t k = 0; k < fits.entries.size(); ++k)
         if (fits.entries[k].taken)
             result.consider(fits.entries[k].strength, 0.0, k, onset, shape);
-    for (std::size_t signature = 0; signature < matcher.count(); ++signature)
+    for (std::size_t signature = 0; signature < matcher.count(); ++signature) {
+        if (any_change + matcher.prior(signature) <= result.evidence * result.evidence)
+            continue;
         if (const double strength = matcher.strength(signature, fits); strength > 0.0) // one direction only
-            result.consider(strength, matcher.prior(signature), fits.entries.size() + signature, onset, shape);
+            result.consider(strength, matcher.prior(signature), fits.entries.size() + signature, onset,
+                            shape);
+    }
 }
 
 } // namespace
 
-ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matcher, std::span<const double> months,
-                std::size_t reading)
+ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matcher,
+                std::span<const double> months, std::size_t reading)
 {
     ScanResult result;
     RowFitter fitter(series, reading);
@@ -194,12 +202,15 @@ ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matc
         std::max(first + readings_before_onset, reading > onset_window ? reading - onset_window : 0);
     for (std::size_t onset = earliest; onset < reading; ++onset) {
         fitter.fit(onset, months[onset - 1]);
-        weigh_candidates(fitter.steps, matcher, onset, Shape::step, result);
-        if (const double any = matcher.any_change(fitter.steps); any > result.any_change) {
-            result.any_change = any;
+        if (fitter.steps.taken == 0)
+            continue;
+        const double any_step = matcher.any_change(fitter.steps);
+        weigh_candidates(fitter.steps, matcher, any_step, onset, Shape::step, result);
+        if (any_step > result.any_change) {
+            result.any_change = any_step;
             result.any_change_onset = onset;
         }
-        weigh_candidates(fitter.ramps, matcher, onset, Shape::ramp, result);
+        weigh_candidates(fitter.ramps, matcher, matcher.any_change(fitter.ramps), onset, Shape::ramp, result);
     }
     return result;
 }

@@ -57,10 +57,11 @@ struct Fit
     double size(double noise) const { return projection * noise / shape_squared; }
 };
 /// @return nothing with too few values before or after the onset, none at `last`, or a shape that is flat
-std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last, double noise);
+std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last,
+                            double noise);
 /// @param from time of the reading before the onset, where the ramp is still 0
-std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last, double noise,
-                            double from);
+std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last,
+                            double noise, double from);
 
 /// The fits of all quantities at one onset and shape.
 struct FitRow
@@ -87,13 +88,14 @@ public:
     const Signature& signature(std::size_t index) const { return *signatures_[index].source; }
     /// Quantities of the signature, as channel indices.
     const std::vector<std::size_t>& channels(std::size_t index) const { return signatures_[index].named; }
-    /// z: strength of a signature; 0 where fewer than two of its quantities take part.
+    /// z: strength of a signature; 0 where fewer than two of its quantities take part, or they moved the
+    /// other way.
     double strength(std::size_t index, const FitRow& fits) const;
     /// u' C^-1 u: chi-square of "every quantity took a new level of its own".
     double any_change(const FitRow& fits) const;
 
 private:
-    /// One term of a quadratic form.
+    /// One term of a quadratic form; each pair stands once.
     struct Term
     {
         std::size_t row, column;
@@ -124,21 +126,22 @@ struct ScanSeries
 
 struct ScanResult
 {
-    bool possible = false;       ///< at least one onset could be tried
-    double evidence = 0.0;       ///< S: the largest candidate, with its prior weight
-    double strength = 0.0;       ///< the same without, in standard deviations
-    std::size_t candidate = 0;   ///< channel index, or channels + signature index
+    bool possible = false;     ///< at least one onset could be tried
+    double evidence = 0.0;     ///< S: the largest candidate, with its prior weight
+    double strength = 0.0;     ///< the same without, in standard deviations
+    std::size_t candidate = 0; ///< channel index, or channels + signature index
     int direction = 1;
     Shape shape = Shape::step;
     std::size_t onset = 0;
-    double any_change = 0.0;     ///< F
+    double any_change = 0.0; ///< F
     std::size_t any_change_onset = 0;
 
     /// Keeps the candidate if it is the largest so far.
     /// @param prior twice the log of how much likelier it is beforehand than an ordinary one
-    void consider(double new_strength, double prior, std::size_t new_candidate, std::size_t new_onset, Shape new_shape);
+    void consider(double new_strength, double prior, std::size_t new_candidate, std::size_t new_onset,
+                  Shape new_shape);
 };
-ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matcher, std::span<const double> months,
-                std::size_t reading);
+ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matcher,
+                std::span<const double> months, std::size_t reading);
 
 } // namespace evenstroke::drift

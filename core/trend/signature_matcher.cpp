@@ -46,9 +46,9 @@ SignatureMatcher::SignatureMatcher(std::span<const std::string> quantities)
             correlation[k * n + l] = noise_correlation(quantities[k], quantities[l]);
     const std::vector<double> inverted = inverse(correlation, n);
     for (std::size_t k = 0; k < n; ++k)
-        for (std::size_t l = 0; l < n; ++l)
+        for (std::size_t l = 0; l <= k; ++l)
             if (inverted[k * n + l] != 0.0)
-                inverse_terms_.push_back({k, l, inverted[k * n + l]});
+                inverse_terms_.push_back({k, l, (k == l ? 1.0 : 2.0) * inverted[k * n + l]});
     for (const Signature& signature : signature_catalogue()) {
         if (signature.subject != Subject::cylinder)
             continue;
@@ -58,7 +58,8 @@ SignatureMatcher::SignatureMatcher(std::span<const std::string> quantities)
     }
 }
 
-SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature, std::span<const std::string> quantities,
+SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature,
+                                                     std::span<const std::string> quantities,
                                                      const std::vector<double>& inverse) const
 {
     const std::size_t n = quantities.size();
@@ -77,8 +78,10 @@ SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature,
         if (weight[k] == 0.0)
             continue;
         prepared.weights.emplace_back(k, weight[k]);
-        for (std::size_t l = 0; l < n; ++l)
-            if (const double term = weight[k] * noise_correlation(quantities[k], quantities[l]) * weight[l]; term != 0.0)
+        for (std::size_t l = 0; l <= k; ++l)
+            if (const double term = (k == l ? 1.0 : 2.0) * weight[k] *
+                                    noise_correlation(quantities[k], quantities[l]) * weight[l];
+                term != 0.0)
                 prepared.variance.push_back({k, l, term});
     }
     return prepared;
@@ -94,7 +97,7 @@ double SignatureMatcher::strength(std::size_t index, const FitRow& fits) const
             ++taking_part;
             sum += weight * entry.root * entry.strength;
         }
-    if (taking_part < 2)
+    if (taking_part < 2 || sum <= 0.0)
         return 0.0;
     for (const Term& term : signature.variance)
         if (fits.entries[term.row].taken && fits.entries[term.column].taken)

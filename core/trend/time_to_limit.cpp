@@ -29,12 +29,16 @@ std::optional<Line> fit_line(const RunningSums& sums, const RunningSums::Sums& a
     if (!fit)
         return std::nullopt;
     const double slope = fit->size(noise), sigma = allowance * noise;
-    const double left = values_squared - all.value * all.value / all.count - slope * slope * fit->shape_squared;
+    const double left =
+        values_squared - all.value * all.value / all.count - slope * slope * fit->shape_squared;
     return Line{from, slope, sigma / std::sqrt(fit->shape_squared),
                 -left / (2.0 * sigma * sigma) - 0.5 * std::log(fit->shape_squared)};
 }
 
-double normal_below(double x) { return 0.5 * std::erfc(-x / std::numbers::sqrt2); }
+double normal_below(double x)
+{
+    return 0.5 * std::erfc(-x / std::numbers::sqrt2);
+}
 
 double chance_reached(const std::vector<Line>& lines, double limit, double month)
 {
@@ -51,7 +55,9 @@ double chance_reached(const std::vector<Line>& lines, double limit, double month
 /// First step of the grid at which the chance is reached; it only grows with time.
 std::optional<double> months_until(const std::vector<Line>& lines, double limit, double now, double chance)
 {
-    const auto reached = [&](int step) { return chance_reached(lines, limit, now + step * grid_months) >= chance; };
+    const auto reached = [&](int step) {
+        return chance_reached(lines, limit, now + step * grid_months) >= chance;
+    };
     int low = 0, high = static_cast<int>(farthest_months / grid_months);
     if (!reached(high))
         return std::nullopt;
@@ -67,8 +73,8 @@ std::optional<double> months_until(const std::vector<Line>& lines, double limit,
 
 } // namespace
 
-std::optional<TimeToLimit> time_to_limit(const std::vector<double>& months, const std::vector<double>& values, double noise,
-                                         double limit)
+std::optional<TimeToLimit> time_to_limit(const std::vector<double>& months, const std::vector<double>& values,
+                                         double noise, double limit)
 {
     if (months.size() != values.size() || values.size() < readings_before_onset + readings_after_onset ||
         !(noise > 0.0) || limit == 0.0 || !std::isfinite(limit))
@@ -82,14 +88,17 @@ std::optional<TimeToLimit> time_to_limit(const std::vector<double>& months, cons
     const std::size_t last = values.size() - 1;
     const RunningSums::Sums all = sums.between(0, last);
     std::vector<Line> lines;
-    for (std::size_t onset = std::max(readings_before_onset, last > onset_window ? last - onset_window : 0); onset < last; ++onset)
-        if (const auto line = fit_line(sums, all, values_squared, onset, months[onset - 1] - months.front(), noise))
+    for (std::size_t onset = std::max(readings_before_onset, last > onset_window ? last - onset_window : 0);
+         onset < last; ++onset)
+        if (const auto line =
+                fit_line(sums, all, values_squared, onset, months[onset - 1] - months.front(), noise))
             lines.push_back(*line);
     if (lines.empty())
         return std::nullopt;
-    const double heaviest = std::max_element(lines.begin(), lines.end(), [](const Line& one, const Line& other) {
-                                return one.log_weight < other.log_weight;
-                            })->log_weight;
+    const double heaviest =
+        std::max_element(lines.begin(), lines.end(), [](const Line& one, const Line& other) {
+            return one.log_weight < other.log_weight;
+        })->log_weight;
     for (Line& line : lines)
         line.log_weight -= heaviest;
     const double now = months.back() - months.front();
@@ -101,12 +110,14 @@ std::optional<TimeToLimit> time_to_limit(const std::vector<double>& months, cons
     return time;
 }
 
-std::optional<TimeToLimit> time_to_limit(const Input& input, const Output& output, std::size_t channel, std::size_t cylinder,
-                                         std::size_t reading, double limit)
+std::optional<TimeToLimit> time_to_limit(const Input& input, const Output& output, std::size_t channel,
+                                         std::size_t cylinder, std::size_t reading, double limit)
 {
     if (channel >= output.cells.size() || cylinder >= input.cylinders || reading >= input.readings())
         return std::nullopt;
-    const auto cell = [&](std::size_t i) -> const CellResult& { return output.cells[channel][i * input.cylinders + cylinder]; };
+    const auto cell = [&](std::size_t i) -> const CellResult& {
+        return output.cells[channel][i * input.cylinders + cylinder];
+    };
     std::vector<double> months, values;
     for (std::size_t i = cell(reading).segment_start; i <= reading; ++i)
         if (cell(i).used) {

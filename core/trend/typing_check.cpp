@@ -14,11 +14,11 @@ namespace evenstroke::drift {
 namespace {
 
 // Limits of the check in standard deviations; found with simulated fleets.
-constexpr double doubtful_from = 6.0;     ///< doubted whatever it may be
-constexpr double suspicious_from = 5.0;   ///< doubted if undoing a slip makes it quite usual
+constexpr double doubtful_from = 6.0;   ///< doubted whatever it may be
+constexpr double suspicious_from = 5.0; ///< doubted if undoing a slip makes it quite usual
 constexpr double quite_usual = 1.5;
-constexpr double usual_enough = 3.0;      ///< a slip is named if undoing it brings the value so near
-constexpr double no_slip_from = 2.5;      ///< a change seen twice is believed if no slip explains it
+constexpr double usual_enough = 3.0; ///< a slip is named if undoing it brings the value so near
+constexpr double no_slip_from = 2.5; ///< a change seen twice is believed if no slip explains it
 constexpr double alone_doubtful_from = 7.0;
 constexpr std::size_t cells_for_scatter = 10;
 
@@ -32,7 +32,8 @@ CellOpinion compare_with_others(const ChannelHistory& history, std::size_t readi
     opinion.offset_count = offset.count;
     const double noise = history.check_noise.value(), spread = history.input->offset_spread;
     const double count = static_cast<double>(std::max<std::size_t>(offset.count, 1));
-    opinion.tolerance = std::sqrt(noise * noise * (1.0 + 1.5 / count) + (offset.count < 2 ? spread * spread : 0.0));
+    opinion.tolerance =
+        std::sqrt(noise * noise * (1.0 + 1.5 / count) + (offset.count < 2 ? spread * spread : 0.0));
     return opinion;
 }
 
@@ -97,7 +98,8 @@ std::optional<CellVerdict> judge_cell(const Cell& cell, const CellOpinion& opini
     return CellVerdict{slip->trial.verdict, slip->trial};
 }
 
-Doubt doubt_about(std::size_t reading, const CellVerdict& verdict, const Cell& cell, const CellOpinion& opinion)
+Doubt doubt_about(std::size_t reading, const CellVerdict& verdict, const Cell& cell,
+                  const CellOpinion& opinion)
 {
     Doubt doubt;
     doubt.reading = reading;
@@ -127,7 +129,8 @@ std::optional<double> row_ratio(const ChannelHistory& history, std::size_t readi
         return std::nullopt;
     std::vector<double> ratios;
     for (std::size_t j = 0; j < history.cylinders; ++j)
-        if (const Cell* cell = history.cell(reading, j); cell && !cell->confirmed && std::isfinite(cell->typed_number))
+        if (const Cell* cell = history.cell(reading, j);
+            cell && !cell->confirmed && std::isfinite(cell->typed_number))
             ratios.push_back(cell->typed_number / *wanted);
     return ratios.size() < 3 ? std::nullopt : median(ratios);
 }
@@ -146,6 +149,9 @@ TypingCheck::TypingCheck(const Input& input)
     : input_(&input), held_sign_(input.channels.size(), std::vector<int>(input.cylinders, 0)),
       engine_held_sign_(input.engine_channels.size(), 0), engine_values_(input.engine_channels.size())
 {
+    constexpr double prior_weight = 8.0; // one difference a reading only: the engine's own has to come sooner
+    for (const EngineChannel& channel : input.engine_channels)
+        engine_noise_.emplace_back(channel.noise, prior_weight);
 }
 
 ReadingOpinion TypingCheck::look_at(std::size_t reading, const std::vector<ChannelHistory>& history) const
@@ -167,8 +173,8 @@ void TypingCheck::doubt_rows(std::size_t reading, const std::vector<ChannelHisto
     for (std::size_t k = 0; k < history.size(); ++k) {
         const CatalogueChannel* known = find_channel(history[k].input->quantity, Subject::cylinder);
         const auto ratio = row_ratio(history[k], reading);
-        const bool other_unit =
-            known && ratio && *ratio > 0.004 && (*ratio < known->row_ratio_low || *ratio > known->row_ratio_high);
+        const bool other_unit = known && ratio && *ratio > 0.004 &&
+                                (*ratio < known->row_ratio_low || *ratio > known->row_ratio_high);
         const bool copied = !other_unit && row_is_copied(history[k], reading);
         if (!other_unit && !copied)
             continue;
@@ -268,8 +274,9 @@ void TypingCheck::doubt_cells(std::size_t reading, const std::vector<ChannelHist
             if (!cell || opinion.held[k][j])
                 continue;
             const CellOpinion& seen = opinion.cylinders[k][j];
-            const auto verdict = judge_cell(*cell, seen, held_sign_[k][j], seen.alone ? alone_doubtful_from : doubtful_from,
-                                            seen.alone ? alone_doubtful_from : suspicious_from);
+            const auto verdict =
+                judge_cell(*cell, seen, held_sign_[k][j], seen.alone ? alone_doubtful_from : doubtful_from,
+                           seen.alone ? alone_doubtful_from : suspicious_from);
             opinion.held[k][j] = exchanged || verdict ? 1 : 0;
             if (!verdict || (exchanged && verdict->verdict == Verdict::implausible))
                 continue; // the exchange explains it
@@ -288,20 +295,23 @@ void TypingCheck::judge_engine(std::size_t reading, ReadingOpinion& opinion) con
     opinion.engine.assign(input_->engine_channels.size(), CellOpinion{});
     for (std::size_t e = 0; e < input_->engine_channels.size(); ++e) {
         const EngineChannel& channel = input_->engine_channels[e];
-        if (channel.cells.size() != input_->readings() || !(channel.noise > 0.0) || !std::isfinite(channel.noise))
+        if (channel.cells.size() != input_->readings() || !(channel.noise > 0.0) ||
+            !std::isfinite(channel.noise))
             continue;
         const std::vector<double>& before = engine_values_[e];
-        std::vector<double> last(before.end() - static_cast<std::ptrdiff_t>(std::min(memory, before.size())), before.end());
+        std::vector<double> last(before.end() - static_cast<std::ptrdiff_t>(std::min(memory, before.size())),
+                                 before.end());
         CellOpinion& seen = opinion.engine[e];
         seen.offset_count = last.size();
-        seen.tolerance = (last.size() < needed ? 2.5 : 1.2) * channel.noise;
+        seen.tolerance = (last.size() < needed ? 2.5 : 1.2) * engine_noise_[e].value();
         seen.centre = last.size() < needed ? 0.0 : median_in_place(last);
         const Cell& cell = channel.cells[reading];
         if (!cell.present)
             continue;
         if (std::isfinite(cell.deviation))
             seen.distance = (cell.deviation - *seen.centre) / seen.tolerance;
-        const auto verdict = judge_cell(cell, seen, engine_held_sign_[e], doubt_limit, last.size() < needed ? doubt_limit : suspicion_limit);
+        const auto verdict = judge_cell(cell, seen, engine_held_sign_[e], doubt_limit,
+                                        last.size() < needed ? doubt_limit : suspicion_limit);
         if (!verdict)
             continue;
         opinion.engine_held[e] = 1;
@@ -330,8 +340,14 @@ void TypingCheck::remember(std::size_t reading, const ReadingOpinion& opinion)
         if (channel.cells.size() != input_->readings() || !channel.cells[reading].present)
             continue;
         engine_held_sign_[e] = sign_if(opinion.engine_held[e] != 0, opinion.engine[e]);
-        if (const auto value = usable_deviation(channel.cells[reading], channel.noise); value && !opinion.engine_held[e])
-            engine_values_[e].push_back(*value);
+        const auto value = usable_deviation(channel.cells[reading], channel.noise);
+        if (!value || opinion.engine_held[e])
+            continue;
+        if (!engine_values_[e].empty()) {
+            engine_noise_[e].add_difference(*value - engine_values_[e].back(), true);
+            engine_noise_[e].renew();
+        }
+        engine_values_[e].push_back(*value);
     }
 }
 

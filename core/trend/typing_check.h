@@ -13,13 +13,13 @@ namespace evenstroke::drift {
 /// What is usual at one place, and how far the typed value is from it.
 struct CellOpinion
 {
-    std::optional<double> centre;    ///< usual deviation; nothing where there is too little to compare with
-    double tolerance = 0.0;          ///< one sigma around it
-    std::optional<double> distance;  ///< u: (deviation - centre) / tolerance of a value that was typed
-    double own_offset = 0.0;         ///< a
-    std::size_t offset_count = 0;    ///< values a rests on
-    std::optional<double> common;    ///< c: what the others do
-    bool alone = false;              ///< judged by its own last readings only
+    std::optional<double> centre;   ///< usual deviation; nothing where there is too little to compare with
+    double tolerance = 0.0;         ///< one sigma around it
+    std::optional<double> distance; ///< u: (deviation - centre) / tolerance of a value that was typed
+    double own_offset = 0.0;        ///< a
+    std::size_t offset_count = 0;   ///< values a rests on
+    std::optional<double> common;   ///< c: what the others do
+    bool alone = false;             ///< judged by its own last readings only
 };
 
 /// The opinion on all values of one reading.
@@ -48,17 +48,22 @@ public:
     void remember(std::size_t reading, const ReadingOpinion& opinion);
 
 private:
-    void judge_cylinders(std::size_t reading, const std::vector<ChannelHistory>& history, ReadingOpinion& opinion) const;
+    void judge_cylinders(std::size_t reading, const std::vector<ChannelHistory>& history,
+                         ReadingOpinion& opinion) const;
     void judge_scatter(std::size_t reading, ReadingOpinion& opinion) const;
-    void doubt_rows(std::size_t reading, const std::vector<ChannelHistory>& history, ReadingOpinion& opinion) const;
-    void doubt_cells(std::size_t reading, const std::vector<ChannelHistory>& history, ReadingOpinion& opinion) const;
+    void doubt_rows(std::size_t reading, const std::vector<ChannelHistory>& history,
+                    ReadingOpinion& opinion) const;
+    void doubt_cells(std::size_t reading, const std::vector<ChannelHistory>& history,
+                     ReadingOpinion& opinion) const;
     void judge_engine(std::size_t reading, ReadingOpinion& opinion) const;
 
     const Input* input_;
-    /// The cell's last value was held back, with this sign of its distance; 0 if it was not. [channel][cylinder]
+    /// The cell's last value was held back, with this sign of its distance; 0 if it was not.
+    /// [channel][cylinder]
     std::vector<std::vector<int>> held_sign_;
     std::vector<int> engine_held_sign_;
     std::vector<std::vector<double>> engine_values_; ///< [engine channel] usable ones so far
+    std::vector<NoiseEstimate> engine_noise_;        ///< [engine channel]
 };
 
 /// The band in which about 95 of 100 sound values lie.

@@ -108,7 +108,8 @@ int significant_decimals(std::string_view text)
     if (!decimal)
         return 0;
     int decimals = decimal->decimals;
-    for (std::size_t at = decimal->digits.size(); decimals > 0 && at > 0 && decimal->digits[at - 1] == '0'; --at)
+    for (std::size_t at = decimal->digits.size(); decimals > 0 && at > 0 && decimal->digits[at - 1] == '0';
+         --at)
         --decimals;
     return decimals;
 }

@@ -1,6 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/core/fleet_simulator.h"
 
+#include "tests/core/fleet_noise.h"
+#include "tests/core/fleet_tables.h"
+
 #include "core/trend/drift_catalogue.h"
 
 #include <algorithm>
@@ -13,104 +16,6 @@
 namespace evenstroke::simulation {
 
 namespace {
-
-/// The same numbers with every standard library: only the generator itself is laid down by the standard.
-class Dice
-{
-public:
-    explicit Dice(std::uint64_t seed) : engine_(seed) {}
-    double uniform() { return static_cast<double>(engine_() >> 11) * 0x1.0p-53; }
-    double uniform(double low, double high) { return low + (high - low) * uniform(); }
-    std::size_t below(std::size_t count) { return static_cast<std::size_t>(uniform() * static_cast<double>(count)); }
-    bool chance(double probability) { return uniform() < probability; }
-    double normal()
-    {
-        const double radius = std::sqrt(-2.0 * std::log(1.0 - uniform()));
-        return radius * std::cos(2.0 * std::numbers::pi * uniform());
-    }
-
-private:
-    std::mt19937_64 engine_;
-};
-
-/// Noise of one quantity at one place, in noise units.
-class NoiseSource
-{
-public:
-    /// @param white the part that is new at each reading, sigma 1
-    double next(Dice& dice, double months, double white, double spread)
-    {
-        constexpr double lasting = 0.15, kept_a_month = 0.6, walk = 0.03;
-        const double kept = std::pow(kept_a_month, months);
-        lasting_ = kept * lasting_ + std::sqrt(1.0 - kept * kept) * dice.normal();
-        walked_ += walk * std::sqrt(months) * dice.normal();
-        const double tail = dice.chance(0.05) ? 2.5 : 1.0;
-        return std::sqrt(1.0 - lasting) * tail * spread * white + std::sqrt(lasting) * lasting_ + walked_;
-    }
-
-private:
-    double lasting_ = 0.0, walked_ = 0.0;
-};
-
-/// What a typed value looks like: expected over load, digits after the point, size of the common noise.
-struct Look
-{
-    const char* quantity;
-    double at_no_load, per_percent;
-    int decimals;
-    double common; ///< sigma of what all cylinders share, deviation's unit
-};
-constexpr Look looks[] = {
-    {"mean_indicated_pressure", 4.2, 0.175, 2, 2.1},   {"maximum_pressure", 35.0, 1.45, 1, 2.0},
-    {"compression_pressure", 25.0, 1.15, 1, 1.5},      {"exhaust_temperature", 290.0, 0.4, 0, 8.0},
-    {"jacket_outlet_temperature", 80.0, 0.0, 1, 1.1},  {"piston_coolant_outlet_temperature", 56.0, 0.0, 1, 1.0},
-    {"fuel_index", 22.0, 0.55, 1, 0.65},               {"scavenge_box_temperature", 48.0, 0.1, 0, 2.0},
-    {"liner_temperature", 110.0, 0.3, 0, 5.0},         {"expansion_pressure", 20.0, 0.5, 1, 1.0},
-    {"angle_of_maximum_pressure", 13.0, 0.0, 1, 0.5},  {"angle_of_half_heat_release", 17.0, 0.0, 1, 0.5},
-    {"scavenge_pressure", -0.2, 0.033, 2, 0.0},        {"turbocharger_speed", 4200.0, 68.0, 0, 0.0},
-    {"exhaust_before_turbine", 330.0, 0.8, 0, 0.0},    {"exhaust_after_turbine", 245.0, 0.1, 0, 0.0},
-    {"cooler_temperature_difference", 6.0, 0.05, 1, 0.0}, {"specific_fuel_consumption", 172.0, -0.05, 1, 0.0},
-    {"cooler_pressure_drop", 10.0, 1.9, 0, 0.0},       {"exhaust_back_pressure", 1.0, 0.25, 0, 0.0},
-    {"air_filter_pressure_drop", 1.0, 0.08, 1, 0.0},   {"compressor_outlet_temperature", 40.0, 1.6, 0, 0.0},
-    {"compressor_efficiency", 0.83, 0.0, 3, 0.0},      {"turbocharger_efficiency", 0.66, 0.0, 3, 0.0},
-    {"cooler_effectiveness", 0.92, 0.0, 3, 0.0},
-};
-const Look& look_of(const std::string& quantity)
-{
-    return *std::find_if(std::begin(looks), std::end(looks), [&](const Look& look) { return quantity == look.quantity; });
-}
-
-/// What a fault does to one quantity: a month (ramp) or once (step), deviation's unit.
-struct Effect
-{
-    Fault fault;
-    const char* quantity;
-    double amount;
-};
-constexpr Effect effects[] = {
-    {Fault::slow_ring_wear, "compression_pressure", -0.3},  {Fault::slow_ring_wear, "maximum_pressure", -0.25},
-    {Fault::slow_ring_wear, "exhaust_temperature", 0.8},    {Fault::fast_ring_wear, "compression_pressure", -0.9},
-    {Fault::fast_ring_wear, "maximum_pressure", -0.75},     {Fault::fast_ring_wear, "exhaust_temperature", 2.4},
-    {Fault::fuel_pump_wear, "fuel_index", 0.2},             {Fault::fuel_pump_wear, "maximum_pressure", -0.2},
-    {Fault::fuel_pump_wear, "mean_indicated_pressure", -0.15}, {Fault::fuel_nozzle, "exhaust_temperature", 20.0},
-    {Fault::fuel_nozzle, "maximum_pressure", -4.0},         {Fault::fuel_nozzle, "mean_indicated_pressure", -2.0},
-    {Fault::exhaust_valve, "exhaust_temperature", 25.0},    {Fault::exhaust_valve, "compression_pressure", -4.0},
-    {Fault::exhaust_valve, "maximum_pressure", -4.5},       {Fault::exhaust_sensor_drift, "exhaust_temperature", -2.0},
-    {Fault::jacket_sensor_step, "jacket_outlet_temperature", 3.0},
-    {Fault::turbocharger_fouling, "exhaust_temperature", 1.5},  {Fault::turbocharger_fouling, "compression_pressure", -0.4},
-    {Fault::turbocharger_fouling, "maximum_pressure", -0.4},    {Fault::turbocharger_fouling, "scavenge_pressure", -0.012},
-    {Fault::turbocharger_fouling, "turbocharger_speed", -0.2},  {Fault::turbocharger_fouling, "exhaust_before_turbine", 2.0},
-    {Fault::turbocharger_fouling, "exhaust_after_turbine", 2.4}, {Fault::turbocharger_fouling, "specific_fuel_consumption", 0.25},
-    {Fault::air_cooler_fouling, "cooler_temperature_difference", 0.5}, {Fault::air_cooler_fouling, "cooler_pressure_drop", 1.5},
-    {Fault::air_cooler_fouling, "scavenge_pressure", -0.005},   {Fault::air_cooler_fouling, "exhaust_temperature", 0.6},
-    {Fault::air_cooler_fouling, "exhaust_before_turbine", 0.6},
-};
-bool is_step(Fault fault)
-{
-    return fault == Fault::fuel_nozzle || fault == Fault::exhaust_valve || fault == Fault::jacket_sensor_step;
-}
-bool is_of_sensor(Fault fault) { return fault == Fault::exhaust_sensor_drift || fault == Fault::jacket_sensor_step; }
-bool is_of_engine(Fault fault) { return fault == Fault::turbocharger_fouling || fault == Fault::air_cooler_fouling; }
 
 std::string text_of(double number, int decimals)
 {
@@ -136,7 +41,8 @@ public:
     SimulatedEngine run()
     {
         engine_.fault = recipe_.fault;
-        input().cylinders = recipe_.fewest_cylinders + dice_.below(recipe_.most_cylinders - recipe_.fewest_cylinders + 1);
+        input().cylinders =
+            recipe_.fewest_cylinders + dice_.below(recipe_.most_cylinders - recipe_.fewest_cylinders + 1);
         make_dates();
         choose_fault();
         make_work();
@@ -162,7 +68,8 @@ private:
 
     static bool wanted(const drift::CatalogueChannel& channel, const std::vector<std::string>& chosen)
     {
-        return chosen.empty() ? channel.counted : std::find(chosen.begin(), chosen.end(), channel.quantity) != chosen.end();
+        return chosen.empty() ? channel.counted
+                              : std::find(chosen.begin(), chosen.end(), channel.quantity) != chosen.end();
     }
 
     void make_dates()
@@ -265,7 +172,10 @@ private:
         return values;
     }
 
-    double gap_before(std::size_t reading) { return reading == 0 ? 1.0 : input().months[reading] - input().months[reading - 1]; }
+    double gap_before(std::size_t reading)
+    {
+        return reading == 0 ? 1.0 : input().months[reading] - input().months[reading - 1];
+    }
 
     void fill_cylinders()
     {
@@ -279,22 +189,28 @@ private:
             std::vector<double> shared(quantities);
             for (std::size_t k = 0; k < quantities; ++k) {
                 const Look& look = look_of(input().channels[k].quantity);
-                shared[k] = seasons[k][i] + look.common * common[k].next(dice_, gap_before(i), dice_.normal(), 1.0);
+                shared[k] =
+                    seasons[k][i] + look.common * common[k].next(dice_, gap_before(i), dice_.normal(), 1.0);
             }
             for (std::size_t j = 0; j < cylinders(); ++j) {
                 const std::vector<double> white = white_noise();
                 for (std::size_t k = 0; k < quantities; ++k) {
                     drift::Channel& channel = input().channels[k];
+                    const double factor = is_coolant(channel.quantity) ? recipe_.coolant_factor : 1.0;
                     double& own = offset[k * cylinders() + j];
                     if (i == 0)
-                        own = channel.offset_spread * dice_.normal();
+                        own = factor * channel.offset_spread * dice_.normal();
                     else if (work_[i * cylinders() + j])
-                        own = 0.4 * own + std::sqrt(1.0 - 0.16) * channel.offset_spread * dice_.normal();
-                    const double random = noise[k * cylinders() + j].next(dice_, gap_before(i), white[k], spread_[i]);
-                    double deviation = shared[k] + own + recipe_.noise_factor * channel.noise * random;
+                        own = 0.4 * own +
+                              std::sqrt(1.0 - 0.16) * factor * channel.offset_spread * dice_.normal();
+                    const double random =
+                        noise[k * cylinders() + j].next(dice_, gap_before(i), white[k], spread_[i]);
+                    double deviation =
+                        shared[k] + own + recipe_.noise_factor * factor * channel.noise * random;
                     if (is_of_engine(recipe_.fault) || engine_.cylinder == j)
                         deviation += fault_effect(channel.quantity, i);
-                    write(channel.cells[i * cylinders() + j], channel.quantity, *channel.expected_typed[i], deviation);
+                    write(channel.cells[i * cylinders() + j], channel.quantity, *channel.expected_typed[i],
+                          deviation);
                 }
             }
         }
@@ -356,7 +272,7 @@ private:
         cell.present = true;
         cell.scale = known->form == drift::DeviationForm::percent ? 100.0 / expected : 1.0;
         cell.typed_number = expected;
-        const bool coarse = recipe_.integer_thermometers && quantity.find("outlet_temperature") != std::string::npos;
+        const bool coarse = recipe_.integer_thermometers && is_coolant(quantity);
         type_in(cell, text_of(expected + deviation / cell.scale, coarse ? 0 : look_of(quantity).decimals));
     }
 
@@ -376,15 +292,18 @@ private:
     void slip(std::size_t reading, drift::Verdict kind)
     {
         const bool of_engine = dice_.chance(0.1) && !input().engine_channels.empty();
-        const std::size_t k = dice_.below(of_engine ? input().engine_channels.size() : input().channels.size());
+        const std::size_t k =
+            dice_.below(of_engine ? input().engine_channels.size() : input().channels.size());
         const std::size_t j = dice_.below(cylinders());
-        drift::Cell& cell = of_engine ? input().engine_channels[k].cells[reading] : input().channels[k].cells[reading * cylinders() + j];
+        drift::Cell& cell = of_engine ? input().engine_channels[k].cells[reading]
+                                      : input().channels[k].cells[reading * cylinders() + j];
         if (!cell.present)
             return;
         const double before = cell.deviation;
         std::string text = cell.typed_text;
         if (kind == drift::Verdict::decimal_slip) {
-            const std::string& quantity = of_engine ? input().engine_channels[k].quantity : input().channels[k].quantity;
+            const std::string& quantity =
+                of_engine ? input().engine_channels[k].quantity : input().channels[k].quantity;
             text = text_of(cell.typed_number * (dice_.chance(0.5) ? 10.0 : 0.1), look_of(quantity).decimals);
         } else {
             const std::size_t at = dice_.below(text.size() - 1);
@@ -393,10 +312,15 @@ private:
                 return;
             std::swap(text[at], text[next]);
         }
-        type_in(cell, text_of(std::strtod(text.c_str(), nullptr), static_cast<int>(text.find('.') == std::string::npos ? 0 : text.size() - text.find('.') - 1)));
+        type_in(cell,
+                text_of(std::strtod(text.c_str(), nullptr),
+                        static_cast<int>(
+                            text.find('.') == std::string::npos ? 0 : text.size() - text.find('.') - 1)));
         const double noise = of_engine ? input().engine_channels[k].noise : input().channels[k].noise;
-        const std::string quantity = of_engine ? input().engine_channels[k].typed_quantity : input().channels[k].quantity;
-        engine_.errors.push_back({kind, reading, quantity, of_engine ? std::vector<std::size_t>{} : std::vector<std::size_t>{j},
+        const std::string quantity =
+            of_engine ? input().engine_channels[k].typed_quantity : input().channels[k].quantity;
+        engine_.errors.push_back({kind, reading, quantity,
+                                  of_engine ? std::vector<std::size_t>{} : std::vector<std::size_t>{j},
                                   std::abs(cell.deviation - before) / noise});
     }
 
@@ -435,12 +359,22 @@ private:
 
 const char* fault_name(Fault fault)
 {
-    constexpr const char* names[] = {"none",        "slow ring wear",       "fast ring wear",     "fuel pump wear",
-                                     "fuel nozzle", "exhaust valve",        "exhaust sensor drift", "jacket sensor step",
-                                     "turbocharger fouling", "air cooler fouling"};
+    constexpr const char* names[] = {"none",
+                                     "slow ring wear",
+                                     "fast ring wear",
+                                     "fuel pump wear",
+                                     "fuel nozzle",
+                                     "exhaust valve",
+                                     "exhaust sensor drift",
+                                     "jacket sensor step",
+                                     "turbocharger fouling",
+                                     "air cooler fouling"};
     return names[static_cast<std::size_t>(fault)];
 }
 
-SimulatedEngine simulate_engine(const Recipe& recipe, std::uint64_t seed) { return Simulator(recipe, seed).run(); }
+SimulatedEngine simulate_engine(const Recipe& recipe, std::uint64_t seed)
+{
+    return Simulator(recipe, seed).run();
+}
 
 } // namespace evenstroke::simulation

@@ -30,23 +30,25 @@ enum class Fault {
     air_cooler_fouling,
 };
 const char* fault_name(Fault fault);
-inline constexpr Fault all_faults[] = {Fault::slow_ring_wear, Fault::fast_ring_wear,       Fault::fuel_pump_wear,
-                                       Fault::fuel_nozzle,    Fault::exhaust_valve,        Fault::exhaust_sensor_drift,
-                                       Fault::jacket_sensor_step, Fault::turbocharger_fouling, Fault::air_cooler_fouling};
+inline constexpr Fault all_faults[] = {
+    Fault::slow_ring_wear,     Fault::fast_ring_wear,       Fault::fuel_pump_wear,
+    Fault::fuel_nozzle,        Fault::exhaust_valve,        Fault::exhaust_sensor_drift,
+    Fault::jacket_sensor_step, Fault::turbocharger_fouling, Fault::air_cooler_fouling};
 
 struct Recipe
 {
     Fault fault = Fault::none;
     std::size_t readings = 54;
     std::size_t fewest_cylinders = 5, most_cylinders = 9;
-    double unrecorded_share = 0.10;  ///< of the work on cylinders
-    double months_between_work = 27; ///< on one cylinder, on average
-    double noise_factor = 1.0;       ///< this ship's noise over the catalogue's
+    double unrecorded_share = 0.10;      ///< of the work on cylinders
+    double months_between_work = 27;     ///< on one cylinder, on average
+    double noise_factor = 1.0;           ///< this ship's noise over the catalogue's
     std::size_t readings_since_work = 9; ///< on the faulty cylinder, at least, when the fault begins
-    double size_spread = 0.3;        ///< each component of a fault is times exp(N(0, this))
-    double typing_errors = 1.0;      ///< times the usual rate; 0 for none
+    double size_spread = 0.3;            ///< each component of a fault is times exp(N(0, this))
+    double typing_errors = 1.0;          ///< times the usual rate; 0 for none
     double unsteady_share = 0.04;
-    bool integer_thermometers = false; ///< cooling water read in whole degrees
+    bool integer_thermometers = false;            ///< cooling water read in whole degrees
+    double coolant_factor = 1.0;                  ///< noise and offsets of cooling water over the catalogue's
     std::vector<std::string> cylinder_quantities; ///< empty: the seven counted ones of the catalogue
     std::vector<std::string> engine_quantities;   ///< empty: the counted ones
 };

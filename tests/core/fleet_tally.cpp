@@ -60,14 +60,16 @@ bool concerns(const drift::Doubt& doubt, const TypingError& error)
 {
     if (doubt.reading != error.reading || doubt.verdict == Verdict::unsteady)
         return false;
-    const bool shares_cylinder = std::any_of(doubt.cylinders.begin(), doubt.cylinders.end(), [&](std::size_t j) {
-        return std::find(error.cylinders.begin(), error.cylinders.end(), j) != error.cylinders.end();
-    });
+    const bool shares_cylinder =
+        std::any_of(doubt.cylinders.begin(), doubt.cylinders.end(), [&](std::size_t j) {
+            return std::find(error.cylinders.begin(), error.cylinders.end(), j) != error.cylinders.end();
+        });
     if (error.kind == Verdict::cylinders_swapped)
         return shares_cylinder;
     if (error.kind == Verdict::unit_slip)
         return doubt.quantity == error.quantity;
-    return doubt.quantity == error.quantity && (error.cylinders.empty() ? doubt.cylinders.empty() : shares_cylinder);
+    return doubt.quantity == error.quantity &&
+           (error.cylinders.empty() ? doubt.cylinders.empty() : shares_cylinder);
 }
 
 void count_doubts(const SimulatedEngine& engine, const drift::Output& output, Tally& tally)
@@ -75,12 +77,18 @@ void count_doubts(const SimulatedEngine& engine, const drift::Output& output, Ta
     for (const TypingError& error : engine.errors) {
         ++tally.errors[error.kind];
         const auto caught = [&](const drift::Doubt& doubt) {
-            return concerns(doubt, error) && (error.kind != Verdict::cylinders_swapped || doubt.verdict == error.kind);
+            return concerns(doubt, error) &&
+                   (error.kind != Verdict::cylinders_swapped || doubt.verdict == error.kind);
         };
-        tally.caught[error.kind] += std::any_of(output.doubts.begin(), output.doubts.end(), caught) ? 1 : 0;
-        tally.named[error.kind] += std::any_of(output.doubts.begin(), output.doubts.end(), [&](const drift::Doubt& doubt) {
-            return caught(doubt) && doubt.verdict == error.kind;
-        });
+        const bool found = std::any_of(output.doubts.begin(), output.doubts.end(), caught);
+        tally.caught[error.kind] += found ? 1 : 0;
+        constexpr double large = 6.0;
+        tally.large_slips += error.size >= large ? 1 : 0;
+        tally.large_slips_caught += error.size >= large && found ? 1 : 0;
+        tally.named[error.kind] +=
+            std::any_of(output.doubts.begin(), output.doubts.end(), [&](const drift::Doubt& doubt) {
+                return caught(doubt) && doubt.verdict == error.kind;
+            });
     }
     std::set<std::size_t> marked;
     for (const drift::Doubt& doubt : output.doubts) {
@@ -114,7 +122,8 @@ double poisson_at_most(std::size_t count, double mean)
 
 double mean_where(std::size_t count, double probability)
 {
-    double low = 1e-9, high = static_cast<double>(count) + 10.0 * std::sqrt(static_cast<double>(count) + 1.0) + 10.0;
+    double low = 1e-9,
+           high = static_cast<double>(count) + 10.0 * std::sqrt(static_cast<double>(count) + 1.0) + 10.0;
     for (int step = 0; step < 80; ++step) {
         const double middle = 0.5 * (low + high);
         (poisson_at_most(count, middle) > probability ? low : high) = middle;
@@ -152,6 +161,8 @@ void Tally::add(const Tally& other)
         caught[kind] += other.caught.at(kind);
         named[kind] += other.named.at(kind);
     }
+    large_slips += other.large_slips;
+    large_slips_caught += other.large_slips_caught;
     doubts += other.doubts;
     doubts_without_cause += other.doubts_without_cause;
     unsteady += other.unsteady;
@@ -173,7 +184,8 @@ double Tally::share_caught(const std::vector<Verdict>& kinds) const
 std::size_t Tally::delay_at(double share) const
 {
     std::vector<std::size_t> sorted = delays;
-    std::sort(sorted.begin(), sorted.end(), [](std::size_t one, std::size_t other) { return one - 1 < other - 1; }); // 0 last
+    std::sort(sorted.begin(), sorted.end(),
+              [](std::size_t one, std::size_t other) { return one - 1 < other - 1; }); // 0 last
     if (sorted.empty())
         return 0;
     const double rank = std::ceil(share * static_cast<double>(sorted.size()));
