@@ -120,7 +120,7 @@ void HistoryPage::refresh()
     ui_->heading->setText(open ? QFileInfo(workplace().path()).fileName()
                                : tr("A history keeps all readings of a ship, or of a fleet, in one file."));
     ui_->about->setText(open ? tr("%1 · %n engine(s)", nullptr, static_cast<int>(engines))
-                                   .arg(QDir::toNativeSeparators(workplace().path()))
+                                   .arg(QDir::toNativeSeparators(QFileInfo(workplace().path()).absoluteFilePath()))
                              : tr("Begin in one of four ways."));
     ui_->folder_words->setText(
         open ? tr("Its readings and events join the history that is open. The same again changes nothing.")

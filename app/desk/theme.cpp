@@ -4,6 +4,7 @@
 #include <QApplication>
 #include <QFontDatabase>
 #include <QPalette>
+#include <QPushButton>
 
 #include <array>
 
@@ -132,6 +133,14 @@ QFont type(TypeSize size, bool bold)
     return font;
 }
 
+void keep_room_for_bold(QWidget& within)
+{
+    const QFontMetrics bold(type(TypeSize::body, true));
+    for (QPushButton* button : within.findChildren<QPushButton*>())
+        if (button->isCheckable() && button->property("worded").toBool())
+            button->setMinimumWidth(bold.horizontalAdvance(button->text()) + 2);
+}
+
 QString style_sheet(const Theme& t)
 {
     QString sheet = QStringLiteral(R"(
@@ -160,6 +169,8 @@ QLineEdit, QPlainTextEdit, QTextEdit, QComboBox, QDateEdit, QDateTimeEdit, QSpin
     selection-background-color: %line; selection-color: %online; }
 QLineEdit:focus, QPlainTextEdit:focus, QTextEdit:focus, QComboBox:focus, QDateEdit:focus,
 QDateTimeEdit:focus, QSpinBox:focus { border-color: %line; }
+QComboBox::drop-down { border: none; width: 20px; }
+QComboBox::down-arrow { image: url(:/pictures/choose.xpm); }
 QAbstractItemView { background: %page; border: none; gridline-color: %rule; outline: none;
     selection-background-color: %band; selection-color: %ink; }
 QAbstractItemView::item:hover { background: %sheet; }

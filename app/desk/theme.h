@@ -65,5 +65,8 @@ QString level_text(Level level);
 /// `label->setProperty("caution", true)`. Second lines: `label->setProperty("muted", true)`; 9 pt labels:
 /// `setProperty("small", true)`; page titles: `setProperty("title", true)`; key figures: "figure".
 QString style_sheet(const Theme& colours);
+/// Chosen words stand in bold: the worded buttons below `within` that can be chosen get room for it, so that
+/// nothing is cut off or moves.
+void keep_room_for_bold(QWidget& within);
 
 } // namespace evenstroke

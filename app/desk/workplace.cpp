@@ -73,6 +73,7 @@ Workplace::Workplace(QObject* parent) : QObject(parent), state_(std::make_unique
         if (state_->history)
             state_->sort_fleet(state_->history->now());
         emit fleet_changed();
+        settle_on_worst();
     });
 }
 

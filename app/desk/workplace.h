@@ -116,6 +116,7 @@ private:
     void look_for_changes();
     void take_outcome(const JudgingOutcome& outcome);
     void settle_selection();
+    void settle_on_worst();
     void announce(const QString& page_before, const Selection& selection_before);
 
     std::unique_ptr<WorkplaceState> state_;

@@ -28,6 +28,7 @@ void Workplace::open_page(const QString& name) { open_page(name, selection()); }
 void Workplace::open_page(const QString& name, const Selection& selection)
 {
     const Whereabouts before = state_->trail.here();
+    state_->nobody_chose = state_->nobody_chose && selection == before.selection;
     state_->trail.go({name, selection});
     announce(before.page, before.selection);
 }
@@ -56,6 +57,7 @@ void Workplace::settle_selection()
     Selection& selection = here.selection;
     if (find_engine(selection.engine))
         return;
+    state_->nobody_chose = true;
     const Selection fresh;
     selection.engine.clear();
     selection.reading.clear();
@@ -68,6 +70,22 @@ void Workplace::settle_selection()
         selection.vessel = state_->vessels.empty() ? QString() : state_->vessels.front().id;
     }
     state_->trail.step(here);
+}
+
+/// A history opened for the first time is judged after it is shown: once that is done, the worst engine comes in
+/// hand, unless somebody has chosen one in the meantime.
+void Workplace::settle_on_worst()
+{
+    const auto waiting = [](const FleetRow& row) { return row.out_of_date; };
+    if (!state_->nobody_chose || state_->fleet.empty()
+        || std::any_of(state_->fleet.begin(), state_->fleet.end(), waiting))
+        return;
+    state_->nobody_chose = false;
+    Selection worst;
+    worst.vessel = state_->fleet.front().vessel_id;
+    worst.engine = state_->fleet.front().engine_id;
+    if (worst.engine != selection().engine)
+        step_to(worst);
 }
 
 } // namespace evenstroke

@@ -36,6 +36,7 @@ struct WorkplaceState
     std::map<QString, qint64> refused; ///< engines whose readings could not be read at this revision: not asked again
     Trail trail;
     qint64 seen_change = 0;
+    bool nobody_chose = false;    ///< the engine in hand was settled before the fleet was judged
     bool wrote_summaries = false; ///< our own workers committed since the last look
     QTimer poll, fleet_delay;
 

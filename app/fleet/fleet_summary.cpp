@@ -10,19 +10,28 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
+#include <map>
 #include <set>
+#include <string_view>
 
 namespace evenstroke {
 
 namespace {
 
-constexpr quint16 layout_version = 1;
+constexpr quint16 layout_version = 2;
 constexpr std::size_t points_in_a_strip = 36; // three years of monthly readings
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
 
 std::optional<StripGroup> group_of(const Quantity& quantity)
 {
+    // Read at the cylinders, but speaking of what all of them share.
+    static const std::map<std::string_view, StripGroup> elsewhere{
+        {"fuel_index", StripGroup::fuel},
+        {"jacket_outlet_temperature", StripGroup::cooling_and_oil},
+        {"piston_coolant_outlet_temperature", StripGroup::cooling_and_oil}};
+    if (const auto found = elsewhere.find(quantity.name); found != elsewhere.end())
+        return found->second;
     if (quantity.group == "cylinder")
         return unit(quantity.unit).dimension == Dimension::pressure ? StripGroup::cylinder_pressures
                                                                     : StripGroup::cylinder_temperatures;

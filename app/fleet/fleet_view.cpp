@@ -18,7 +18,8 @@ namespace evenstroke {
 
 namespace {
 
-constexpr int row_height = 56, fold_height = 32, ship_width = 172, date_width = 104, strip_width = 76, gap = 12;
+constexpr int row_height = 56, fold_height = 32, ship_width = 172, date_width = 104, strip_width = 88, gap = 12;
+constexpr int sentence_top = 8, sentence_indent = 64;
 constexpr double strip_reach = 3.2; // standard deviations from the middle to the edge while quiet
 
 void paint_strip(QPainter& painter, const QRectF& area, const FleetStrip& strip, const Theme& t)
@@ -74,11 +75,11 @@ void paint_sentence(QPainter& painter, const QRect& area, const FleetRow& row, c
         painter.setPen(t.level_colour(row.summary.level));
         painter.drawText(QRect(mark.right() + 6, area.top() + 8, 44, 16), Qt::AlignVCenter | Qt::AlignLeft,
                          level_text(row.summary.level));
-        text.setLeft(mark.right() + 52);
+        text.setLeft(area.left() + sentence_indent);
     }
     painter.setFont(type(TypeSize::label));
     painter.setPen(has_mark(row.summary.level) ? t.ink : t.muted);
-    painter.drawText(text.adjusted(0, 8, 0, -4), Qt::AlignTop | Qt::AlignLeft | Qt::TextWordWrap, words);
+    painter.drawText(text.adjusted(0, sentence_top, 0, 0), Qt::AlignTop | Qt::AlignLeft | Qt::TextWordWrap, words);
 }
 
 class RowDelegate : public QStyledItemDelegate
@@ -168,7 +169,8 @@ void FleetView::show_fleet(std::vector<FleetRow> rows, TimePoint now)
     const int scrolled = verticalScrollBar()->value();
     model_.show_fleet(std::move(rows), now);
     set_sizes();
-    const int row = std::max(0, model_.row_of(was));
+    // Until a row was chosen the worst engine is in hand, also when a judgement moves another one up.
+    const int row = chosen_ ? std::max(0, model_.row_of(was)) : 0;
     if (model_.rowCount() > 0)
         setCurrentIndex(model_.index(row, 0));
     verticalScrollBar()->setValue(scrolled);
@@ -183,8 +185,22 @@ void FleetView::set_sizes()
     const int taken = ship_width + date_width + strip_group_count * strip_width;
     setColumnWidth(FleetModel::sentence, std::max(240, viewport()->width() - taken));
     for (int row = 0; row < model_.rowCount(); ++row)
-        if (const int height = model_.is_fold(row) ? fold_height : row_height; rowHeight(row) != height)
+        if (const int height = height_of(row); rowHeight(row) != height)
             setRowHeight(row, height);
+}
+
+/// A row is as high as its sentence needs: nothing of it may be cut off.
+int FleetView::height_of(int row) const
+{
+    if (model_.is_fold(row))
+        return fold_height;
+    const FleetRow* shown = model_.row(row);
+    if (!shown || !has_mark(shown->summary.level))
+        return row_height;
+    const int width = columnWidth(FleetModel::sentence) - sentence_indent - gap - 4;
+    const QRect needed = QFontMetrics(type(TypeSize::label))
+                             .boundingRect(QRect(0, 0, width, 10'000), Qt::TextWordWrap, model_.sentence_words(*shown));
+    return std::max(row_height, needed.height() + 2 * sentence_top);
 }
 
 void FleetView::take(int row)
@@ -212,6 +228,7 @@ void FleetView::focusInEvent(QFocusEvent* event)
 
 void FleetView::keyPressEvent(QKeyEvent* event)
 {
+    chosen_ = true;
     if (event->key() == Qt::Key_Return || event->key() == Qt::Key_Enter)
         take(currentIndex().row());
     else
@@ -220,6 +237,7 @@ void FleetView::keyPressEvent(QKeyEvent* event)
 
 void FleetView::mouseReleaseEvent(QMouseEvent* event)
 {
+    chosen_ = true;
     QTableView::mouseReleaseEvent(event);
     if (event->button() == Qt::LeftButton)
         take(rowAt(event->position().toPoint().y()));

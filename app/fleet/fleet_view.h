@@ -29,8 +29,10 @@ protected:
 
 private:
     void set_sizes();
+    int height_of(int row) const;
     void take(int row);
     FleetModel model_;
+    bool chosen_ = false; ///< somebody moved in the list
 };
 
 } // namespace evenstroke

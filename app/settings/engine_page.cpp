@@ -36,6 +36,7 @@ EnginePage::EnginePage(Workplace& place, QWidget* parent)
     make_fields();
     connect_sections();
     connect_baseline();
+    keep_room_for_bold(*this);
     set_up_table(*ui_->coefficients_table, coefficients_, *ui_->coefficients_remove_button);
     set_up_table(*ui_->limits_table, limits_, *ui_->limits_remove_button);
     set_up_table(*ui_->instruments_table, instruments_, *ui_->instruments_remove_button);
@@ -225,8 +226,10 @@ void EnginePage::show_state()
     const auto& fields = engine_fields();
     for (std::size_t i = 0; i < boxes_.size(); ++i) {
         const QString text = fields[i].show(draft_.state());
-        if (boxes_[i].line && boxes_[i].line->text() != text)
+        if (boxes_[i].line && boxes_[i].line->text() != text) {
             boxes_[i].line->setText(text);
+            boxes_[i].line->setCursorPosition(0); // a long text shows its beginning
+        }
         if (boxes_[i].choice)
             boxes_[i].choice->setCurrentText(text);
     }

@@ -38,6 +38,7 @@ TrendPage::TrendPage(Workplace& place, QWidget* parent) : Page(place, parent), u
     ui_->table->hide();
     ui_->saved->hide();
     connect_buttons();
+    keep_room_for_bold(*this);
 }
 
 TrendPage::~TrendPage() = default;

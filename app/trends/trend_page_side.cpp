@@ -36,7 +36,13 @@ std::vector<SideBlock> side_blocks(const TrendPicture& picture)
             if (caution.emergency == emergencies)
                 blocks.push_back({TrendPage::tr("Caution"), caution.title, caution.text, true, false});
     };
-    add_cautions(true); // an alarm matter stands first
+    add_cautions(true); // an alarm matter stands first, in full
+    QStringList mind;
+    for (const TrendPicture::CautionWords& caution : picture.cautions)
+        if (!caution.emergency)
+            mind.append(caution.title);
+    if (!mind.isEmpty()) // before what to do; the words in full follow below it
+        blocks.push_back({TrendPage::tr("Caution"), mind.join(u'\n'), TrendPage::tr("in full below"), true, false});
     if (!picture.limit_figure.isEmpty())
         blocks.push_back({TrendPage::tr("Until the limit"), picture.limit_figure, picture.limit_words, false, true});
     if (!picture.fits.isEmpty() || !picture.moved.isEmpty())

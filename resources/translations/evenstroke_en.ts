@@ -102,4 +102,14 @@
         </translation>
     </message>
 </context>
+<context>
+    <name>evenstroke::EventsPage</name>
+    <message numerus="yes">
+        <source>%n event(s) · nothing is erased: what is removed stays in the audit trail</source>
+        <translation>
+            <numerusform>1 event · nothing is erased: what is removed stays in the audit trail</numerusform>
+            <numerusform>%n events · nothing is erased: what is removed stays in the audit trail</numerusform>
+        </translation>
+    </message>
+</context>
 </TS>
