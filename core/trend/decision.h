@@ -21,7 +21,7 @@ inline constexpr std::size_t lasting_after_readings = 12; ///< a step so long op
 /// Thresholds for the set of quantities in use.
 struct Thresholds
 {
-    double cylinder = 5.1, engine = 5.4, note = 4.0, act_above = 2.0;
+    double cylinder = 5.0, engine = 5.4, note = 4.0, act_above = 2.0;
     double ask_constant = 17.0, ask_slope = 0.1;
     /// How much may stay unexplained beside evidence S before it looks like work.
     double ask(double evidence) const { return ask_constant + ask_slope * evidence * evidence; }

@@ -61,6 +61,8 @@ struct Interval
     double low, high;
 };
 Interval poisson_interval(std::size_t count);
+/// Exact 95 % interval for a share (Clopper and Pearson 1934, Biometrika 26). @param of > 0
+Interval binomial_interval(std::size_t count, std::size_t of);
 
 /// Simulates engines `seed`, `seed + 1`, ... of a recipe and judges them.
 Tally judge_fleet(const Recipe& recipe, std::size_t engines, std::uint64_t seed);
