@@ -34,6 +34,16 @@ struct Cell
     bool held_out = false;     ///< known to be impossible (outside its hard range): never used
 };
 
+/// How far a quantity may go.
+struct Marks
+{
+    /// The trade's custom: from the place's own level before the change, deviation's unit, > 0 each.
+    std::optional<double> allowed_rise, allowed_fall;
+    /// (T) or empty: the engine's own limits as deviations at each reading's load. Where there is one it counts
+    /// in place of the custom.
+    std::vector<std::optional<double>> own_high, own_low;
+};
+
 /// One per-cylinder quantity.
 struct Channel
 {
@@ -45,8 +55,8 @@ struct Channel
     std::vector<Cell> cells;          ///< (T x N)
     std::vector<char> segment_starts; ///< (T x N) work on this instrument only, before this reading
     bool in_scan = true;              ///< false: typing check and apart only
-    /// How far the quantity may go from its own level before the change, deviation's unit, > 0 each.
-    std::optional<double> allowed_rise, allowed_fall;
+    Marks marks;                      ///< of one cylinder
+    Marks median_marks;               ///< of the median over the cylinders
 };
 
 /// One engine-level quantity. The medians over the cylinders are made by `judge` itself.
@@ -58,7 +68,7 @@ struct EngineChannel
     std::vector<Cell> cells;    ///< (T)
     std::vector<char> segment_starts; ///< (T) work on this instrument only
     bool in_scan = true;
-    std::optional<double> allowed_rise, allowed_fall;
+    Marks marks;
 };
 
 /// An engineer's answer to a question: known from the reading that raised it on.
@@ -253,8 +263,24 @@ struct TimeToLimit
 /// @return nothing with fewer than 8 values
 std::optional<TimeToLimit> time_to_limit(const std::vector<double>& months, const std::vector<double>& values,
                                          double noise, double limit);
-/// The same from a judged engine, as known at `reading`.
+
+/// Index of a quantity as `mark_ahead` takes it; past the end where there is none of this name.
+std::size_t channel_of(const Input& input, const Output& output, const std::string& quantity, bool of_cylinders);
+/// The mark that a drift runs towards.
+struct MarkAhead
+{
+    double distance = 0.0; ///< signed: from the place's level before the change, deviation's unit
+    bool own = false;      ///< a limit of the engine, at the load of the reading; else the trade's custom
+};
+/// @param channel  of the input; for the engine an index into `Output::engine_quantities`
+/// @param cylinder nothing: the engine
+/// @param onset    the first changed reading
+/// @return nothing where there is no mark on that side, or an own limit lies behind the level before already
+std::optional<MarkAhead> mark_ahead(const Input& input, const Output& output, std::size_t channel,
+                                    std::optional<std::size_t> cylinder, std::size_t reading, std::size_t onset,
+                                    bool rising);
+/// The time to a limit from a judged engine, as known at `reading`.
 std::optional<TimeToLimit> time_to_limit(const Input& input, const Output& output, std::size_t channel,
-                                         std::size_t cylinder, std::size_t reading, double limit);
+                                         std::optional<std::size_t> cylinder, std::size_t reading, double limit);
 
 } // namespace evenstroke::drift

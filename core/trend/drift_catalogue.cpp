@@ -66,6 +66,17 @@ std::vector<Signature> read_signatures()
     return signatures;
 }
 
+std::vector<CustomaryLimit> read_limits()
+{
+    std::vector<CustomaryLimit> limits;
+    const CatalogueTable table(catalogue_text::drift_limits);
+    for (std::size_t row = 0; row < table.rows(); ++row)
+        limits.push_back({table.cell(row, "quantity"), subject_of(table.cell(row, "subject")),
+                          table.cell(row, "engine_kind"), table.number(row, "rise"), table.number(row, "fall"),
+                          table.cell(row, "unit")});
+    return limits;
+}
+
 struct Correlation
 {
     std::string quantity, other;
@@ -83,6 +94,21 @@ std::vector<Correlation> read_correlations()
 }
 
 } // namespace
+
+std::span<const CustomaryLimit> customary_limits()
+{
+    static const std::vector<CustomaryLimit> limits = read_limits();
+    return limits;
+}
+
+const CustomaryLimit* find_customary_limit(std::string_view quantity, Subject subject, bool two_stroke)
+{
+    for (const CustomaryLimit& limit : customary_limits())
+        if (limit.quantity == quantity && limit.subject == subject &&
+            (limit.engine_kind == "any" || (limit.engine_kind == "two_stroke") == two_stroke))
+            return &limit;
+    return nullptr;
+}
 
 std::span<const CatalogueChannel> channel_catalogue()
 {

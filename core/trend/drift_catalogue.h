@@ -8,7 +8,8 @@
 #include <vector>
 
 /// Which quantities are watched for drift, how they scatter, and what faults do to them, as data:
-/// resources/catalogue/drift_channels.csv, drift_signatures.csv and drift_correlations.csv.
+/// resources/catalogue/drift_channels.csv, drift_signatures.csv,
+/// drift_correlations.csv and drift_limits.csv.
 namespace evenstroke::drift {
 
 enum class DeviationForm { difference, percent };
@@ -45,6 +46,19 @@ struct Signature
     std::vector<Move> moves;
 };
 
+/// How far the trade lets a quantity go from its own level before something is done: custom, no maker's figure.
+struct CustomaryLimit
+{
+    std::string quantity;
+    Subject subject;
+    std::string engine_kind;          ///< "two_stroke", "four_stroke" or "any"
+    std::optional<double> rise, fall; ///< in `unit`
+    std::string unit;                 ///< a unit, "% of expected", or "% of absolute" (of the expected absolute pressure)
+};
+
+std::span<const CustomaryLimit> customary_limits();
+/// The limit for this kind of engine, or null.
+const CustomaryLimit* find_customary_limit(std::string_view quantity, Subject subject, bool two_stroke);
 std::span<const CatalogueChannel> channel_catalogue();
 const CatalogueChannel* find_channel(std::string_view quantity, Subject subject);
 std::span<const Signature> signature_catalogue();

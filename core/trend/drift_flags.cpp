@@ -65,23 +65,24 @@ Flag::View DriftRun::view_of(std::size_t reading, const ScanResult& result,
     return view;
 }
 
-bool DriftRun::limit_is_near(std::size_t reading, std::size_t cylinder, const Flag::View& view) const
+bool DriftRun::limit_is_near(std::size_t reading, std::optional<std::size_t> cylinder,
+                             const Flag::View& view) const
 {
     constexpr double soon_months = 2.0;
-    for (const QuantityChange& change : view.changes) {
-        const auto named = std::find_if(scanned_.begin(), scanned_.end(), [&](std::size_t k) {
-            return input_->channels[k].quantity == change.quantity;
-        });
-        const Channel& channel = input_->channels[*named];
-        const auto& allowed = change.size > 0.0 ? channel.allowed_rise : channel.allowed_fall;
-        if (!allowed || view.shape != Shape::ramp)
-            continue;
-        const double limit = change.size > 0.0 ? *allowed : -*allowed;
-        const auto time = time_to_limit(*input_, output_, *named, cylinder, reading, limit);
-        if (time && time->months_5 && *time->months_5 < soon_months)
-            return true;
-    }
-    return false;
+    if (view.shape != Shape::ramp)
+        return false;
+    // A quantity that hardly moved has so wide an interval that its early end says nothing.
+    constexpr double clearly_moved = 3.0;
+    return std::any_of(view.changes.begin(), view.changes.end(), [&](const QuantityChange& change) {
+        if (std::abs(change.strength) < clearly_moved)
+            return false;
+        const std::size_t channel = channel_of(*input_, output_, change.quantity, cylinder.has_value());
+        const auto mark =
+            mark_ahead(*input_, output_, channel, cylinder, reading, view.onset, change.size > 0.0);
+        const auto time = mark ? time_to_limit(*input_, output_, channel, cylinder, reading, mark->distance)
+                               : std::nullopt;
+        return time && time->months_5 && *time->months_5 < soon_months;
+    });
 }
 
 void DriftRun::judge_cylinder(std::size_t reading, std::size_t cylinder)
@@ -247,8 +248,9 @@ void DriftRun::settle_engine(std::size_t reading, const ScanResult& result)
         const bool starts = !last_engine_drift_ || reading - *last_engine_drift_ > quiet_readings;
         const bool strong = result.evidence >= thresholds_.engine + thresholds_.act_above;
         last_engine_drift_ = reading;
-        book.carry(reading, std::nullopt, strong ? Level::act : Level::watch, engine_view(reading, result),
-                   starts);
+        const Flag::View view = engine_view(reading, result);
+        const bool urgent = strong || limit_is_near(reading, std::nullopt, view);
+        book.carry(reading, std::nullopt, urgent ? Level::act : Level::watch, view, starts);
     } else if (last_engine_drift_ && reading - *last_engine_drift_ > quiet_readings) {
         book.close();
     }

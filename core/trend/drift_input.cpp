@@ -2,6 +2,7 @@
 #include "core/trend/drift_input.h"
 
 #include "core/trend/drift_catalogue.h"
+#include "core/trend/limits_ahead.h"
 #include "core/trend/robust.h"
 #include "core/trend/work_marks.h"
 
@@ -56,6 +57,9 @@ public:
         channel.quantity = from.quantity;
         channel.noise = from.noise;
         channel.offset_spread = from.offset_spread;
+        channel.marks = customary_marks(record_.engine, baseline_, from);
+        if (const auto* median = drift::find_channel(from.quantity, drift::Subject::cylinder_median))
+            channel.median_marks = customary_marks(record_.engine, baseline_, *median);
         channel.cells.resize(prepared_.size() * cylinders_);
         channel.expected_typed.resize(prepared_.size());
         for (std::size_t i = 0; i < prepared_.size(); ++i) {
@@ -76,8 +80,16 @@ public:
         channel.typed_quantity = from.typed_quantity;
         channel.noise = from.noise;
         channel.cells.resize(prepared_.size());
-        for (std::size_t i = 0; i < prepared_.size(); ++i)
+        channel.marks = customary_marks(record_.engine, baseline_, from);
+        const auto id = find_quantity(from.quantity);
+        for (std::size_t i = 0; i < prepared_.size(); ++i) {
             channel.cells[i] = engine_cell(from, i);
+            if (const auto form = id && channel.cells[i].present && baseline_.has(from.quantity)
+                                      ? deviation_form(record_.engine, baseline_, quantity(*id), 0.0,
+                                                       prepared_[i].conditions, is_percent(from), std::nullopt)
+                                      : std::nullopt)
+                add_own_marks(channel.marks, record_.engine, from.quantity, i, prepared_.size(), *form);
+        }
         return channel;
     }
 
@@ -94,6 +106,7 @@ private:
             return;
         const std::size_t cylinder = static_cast<std::size_t>(value.place.number) - 1;
         channel.cells[reading * cylinders_ + cylinder] = make_cell(typed, value, *own, *form);
+        add_own_marks(channel.marks, record_.engine, channel.quantity, reading, prepared_.size(), *form);
         if (value.expected && own->scale != 0.0) // own = scale * typed + shift
             channel.expected_typed[reading] = *typed.number + (*value.expected - own->value) / own->scale;
     }
@@ -130,6 +143,10 @@ private:
             const drift::Cell cell = make_cell(typed, value, *own, *form);
             if (value.place.kind == Place::Kind::engine)
                 return cell;
+            if (count > 0 && cell.held_out && !mean.held_out)
+                continue; // an impossible one of several: the others stand for it
+            if (mean.held_out && !cell.held_out)
+                count = 0;
             ++count;
             mean = count == 1 ? cell : merged(mean, cell, count);
         }

@@ -4,6 +4,7 @@
 #include "core/trend/drift_catalogue.h"
 #include "core/trend/drift_input.h"
 #include "core/trend/flag_text.h"
+#include "core/trend/limits_ahead.h"
 
 #include <algorithm>
 #include <cmath>
@@ -33,6 +34,21 @@ std::string typed_text_at(const Reading& reading, QuantityId id, const Place& pl
     return value ? value->typed + " " + std::string(unit(value->unit).symbol) : std::string();
 }
 
+/// Where the one value of an engine quantity stands: the engine has it, or its only turbocharger or cooler.
+Place place_of_engine_value(const Reading& reading, QuantityId id)
+{
+    std::optional<Place> only;
+    for (const Value& value : reading.values) {
+        if (quantity(value.quantity).name != quantity(id).name || value.place.kind == Place::Kind::cylinder ||
+            value.phase != Phase::reading)
+            continue;
+        if (only)
+            return Place::engine();
+        only = value.place;
+    }
+    return only.value_or(Place::engine());
+}
+
 Doubt translate(const Engine& engine, const Reading& reading, const drift::Doubt& from, std::optional<std::size_t> cylinder)
 {
     Doubt doubt;
@@ -43,7 +59,7 @@ Doubt translate(const Engine& engine, const Reading& reading, const drift::Doubt
     if (cylinder)
         doubt.place = Place::cylinder(static_cast<int>(*cylinder) + 1);
     else if (from.engine_level)
-        doubt.place = Place::engine();
+        doubt.place = doubt.quantity ? place_of_engine_value(reading, *doubt.quantity) : Place::engine();
     if (!from.suggested_text.empty())
         doubt.suggestion = from.suggested_text;
     const std::string typed =
@@ -80,6 +96,35 @@ std::vector<MovedQuantity> moved_quantities(const drift::Flag::View& view, bool 
     return moved;
 }
 
+/// Outside its hard range, and nobody has said that it stands so.
+bool is_impossible(const Reading& reading, const JudgedValue& value)
+{
+    const Range& hard = quantity(value.quantity).hard;
+    return ((hard.low && value.raw < *hard.low) || (hard.high && value.raw > *hard.high)) &&
+           !reading.values[value.value_index].confirmed;
+}
+
+bool is_doubted(std::span<const Doubt> doubts, const JudgedValue& value)
+{
+    return std::any_of(doubts.begin(), doubts.end(), [&](const Doubt& doubt) {
+        return doubt.verdict != Doubt::Verdict::unsteady && (!doubt.quantity || *doubt.quantity == value.quantity) &&
+               (!doubt.place || *doubt.place == value.place);
+    });
+}
+
+/// The typing check sees only what drift watches and the baseline reaches; this names the rest.
+Doubt impossible(const EngineRecord& record, std::size_t reading, const JudgedValue& value)
+{
+    Doubt doubt;
+    doubt.verdict = Doubt::Verdict::implausible;
+    doubt.reading = reading;
+    doubt.quantity = value.quantity;
+    doubt.place = value.place;
+    const Value& typed = record.readings[reading].values[value.value_index];
+    doubt.sentence = doubt_sentence(record.engine, doubt, typed.typed + " " + std::string(unit(typed.unit).symbol));
+    return doubt;
+}
+
 /// In a pattern the quantity that the fault moves most leads the sentence, unless it hardly moved here.
 void lead_with_the_pattern(std::vector<MovedQuantity>& moved, const std::string& pattern)
 {
@@ -110,35 +155,6 @@ Level standing_level(const drift::Flag& from)
     for (const drift::Escalation& escalation : from.escalations)
         level = std::max(level, level_of(escalation.level));
     return level;
-}
-
-/// The absolute mark in the direction of the drift, as a distance from the cylinder's level before it.
-std::optional<TimeToLimit> limit_ahead(const Judgement& judgement, const drift::Input& input, const drift::Output& output,
-                                       const Flag& flag, const drift::Flag& from)
-{
-    if (!from.cylinder || !flag.ramp || flag.moved.empty())
-        return std::nullopt;
-    for (std::size_t k = 0; k < input.channels.size(); ++k) {
-        const drift::Channel& channel = input.channels[k];
-        if (drift_quantity(channel.quantity) != flag.quantity)
-            continue;
-        const bool up = flag.moved.front().amount > 0.0;
-        const auto allowed = up ? channel.allowed_rise : channel.allowed_fall;
-        if (!allowed)
-            return std::nullopt;
-        const double limit = up ? *allowed : -*allowed;
-        const auto found = drift::time_to_limit(input, output, k, *from.cylinder, from.last_reading, limit);
-        if (!found)
-            return std::nullopt;
-        TimeToLimit time{limit, {}, found->months_5, found->months_50, found->months_95};
-        const bool percent = is_percent(channel.quantity, true);
-        const Quantity& q = quantity(flag.quantity);
-        time.limit_text = two_digits(std::abs(limit)) + " " + (percent ? "%" : std::string(unit(q.unit).symbol)) +
-                          (up ? " above" : " below") + " its level before";
-        (void)judgement;
-        return time;
-    }
-    return std::nullopt;
 }
 
 /// Writes one view of a drift flag, as it started or as it stands, into the flag and words it.
@@ -174,7 +190,7 @@ Flag translate_flag(const Judgement& judgement, const drift::Input& input, const
     fill_from_view(flag, judgement, from, from.now);
     for (std::size_t i = from.now.onset; i <= from.last_reading; ++i)
         flag.carrying.push_back(i);
-    flag.time_to_limit = limit_ahead(judgement, input, output, flag, from);
+    flag.time_to_limit = limit_ahead(judgement.record->engine, input, output, flag, from);
     return flag;
 }
 
@@ -201,12 +217,20 @@ std::vector<Doubt> translate_doubts(const Engine& engine, const Reading& reading
     return translated;
 }
 
-void add_doubts(Judgement& judgement, const drift::Input&, const drift::Output& output)
+void add_doubts(Judgement& judgement, const drift::Output& output)
 {
-    for (const drift::Doubt& doubt : output.doubts) {
-        const Reading& reading = judgement.record->readings[doubt.reading];
-        const auto rows = translate_doubts(judgement.record->engine, reading, {doubt});
-        judgement.doubts.insert(judgement.doubts.end(), rows.begin(), rows.end());
+    const EngineRecord& record = *judgement.record;
+    auto next = output.doubts.begin();
+    for (std::size_t i = 0; i < judgement.readings.size(); ++i) {
+        const std::size_t first = judgement.doubts.size();
+        for (; next != output.doubts.end() && next->reading == i; ++next) {
+            const auto rows = translate_doubts(record.engine, record.readings[i], {*next});
+            judgement.doubts.insert(judgement.doubts.end(), rows.begin(), rows.end());
+        }
+        for (const JudgedValue& value : judgement.readings[i].values)
+            if (is_impossible(record.readings[i], value) &&
+                !is_doubted(std::span(judgement.doubts).subspan(first), value))
+                judgement.doubts.push_back(impossible(record, i, value));
     }
 }
 

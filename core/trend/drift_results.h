@@ -7,7 +7,8 @@
 /// Brings what the drift method found back to quantities, places and words.
 namespace evenstroke {
 
-void add_doubts(Judgement& judgement, const drift::Input& input, const drift::Output& output);
+/// The typing check's doubts, and values outside their hard range that it did not look at.
+void add_doubts(Judgement& judgement, const drift::Output& output);
 void add_evidence(Judgement& judgement, const drift::Output& output);
 void add_flags(Judgement& judgement, const drift::Input& input, const drift::Output& output);
 

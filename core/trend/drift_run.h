@@ -40,7 +40,8 @@ private:
     std::vector<ScanSeries> series_of(std::size_t cylinder, std::size_t not_before) const;
     Flag::View view_of(std::size_t reading, const ScanResult& result,
                        const std::vector<ScanSeries>& series) const;
-    bool limit_is_near(std::size_t reading, std::size_t cylinder, const Flag::View& view) const;
+    bool limit_is_near(std::size_t reading, std::optional<std::size_t> cylinder,
+                       const Flag::View& view) const;
     void settle_cylinder(std::size_t reading, std::size_t cylinder, CylinderDecision::Outcome outcome,
                          const ScanResult& result, const std::vector<ScanSeries>& series);
     void judge_engine(std::size_t reading, const ReadingOpinion& opinion);

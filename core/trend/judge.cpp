@@ -64,7 +64,7 @@ Judgement judge(std::shared_ptr<const EngineRecord> record, const std::function<
         if (i < output.readings.size())
             judgement.readings[i].poor = output.readings[i].poor || output.readings[i].unsteady;
     }
-    add_doubts(judgement, input, output);
+    add_doubts(judgement, output);
     add_evidence(judgement, output);
     add_flags(judgement, input, output);
     add_absolute_limit_flags(judgement);

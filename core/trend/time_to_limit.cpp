@@ -110,21 +110,114 @@ std::optional<TimeToLimit> time_to_limit(const std::vector<double>& months, cons
     return time;
 }
 
-std::optional<TimeToLimit> time_to_limit(const Input& input, const Output& output, std::size_t channel,
-                                         std::size_t cylinder, std::size_t reading, double limit)
+namespace {
+
+/// What was judged at one place, reading by reading; nothing where there is no such place.
+struct Track
 {
-    if (channel >= output.cells.size() || cylinder >= input.cylinders || reading >= input.readings())
+    const CellResult* first = nullptr;
+    std::size_t step = 1;
+    const CellResult& at(std::size_t reading) const { return first[reading * step]; }
+};
+
+std::optional<Track> find_track(const Input& input, const Output& output, std::size_t channel,
+                                std::optional<std::size_t> cylinder, std::size_t reading)
+{
+    if (reading >= input.readings())
         return std::nullopt;
-    const auto cell = [&](std::size_t i) -> const CellResult& {
-        return output.cells[channel][i * input.cylinders + cylinder];
-    };
-    std::vector<double> months, values;
-    for (std::size_t i = cell(reading).segment_start; i <= reading; ++i)
-        if (cell(i).used) {
-            months.push_back(input.months[i]);
-            values.push_back(cell(i).clipped);
+    if (!cylinder)
+        return channel < output.engine_cells.size()
+                   ? std::optional(Track{output.engine_cells[channel].data(), 1})
+                   : std::nullopt;
+    if (channel >= output.cells.size() || *cylinder >= input.cylinders)
+        return std::nullopt;
+    return Track{output.cells[channel].data() + *cylinder, input.cylinders};
+}
+
+const Marks* find_marks(const Input& input, const Output& output, std::size_t channel,
+                        std::optional<std::size_t> cylinder)
+{
+    if (cylinder)
+        return &input.channels[channel].marks;
+    if (channel < input.engine_channels.size())
+        return &input.engine_channels[channel].marks;
+    for (const Channel& one : input.channels)
+        if (output.engine_quantities[channel] == "median " + one.quantity)
+            return &one.median_marks;
+    return nullptr;
+}
+
+/// Mean of the values between the start of the segment and the onset.
+std::optional<double> level_before(const Track& track, std::size_t reading, std::size_t onset)
+{
+    double sum = 0.0, count = 0.0;
+    for (std::size_t i = track.at(reading).segment_start; i < onset; ++i)
+        if (track.at(i).used) {
+            sum += track.at(i).clipped;
+            count += 1.0;
         }
-    return time_to_limit(months, values, cell(reading).noise, limit);
+    return count > 0.0 ? std::optional(sum / count) : std::nullopt;
+}
+
+/// What a cylinder shares with the others at this reading, taken as lasting.
+std::optional<double> shared_part(const Input& input, const Track& track, std::size_t channel,
+                                  std::optional<std::size_t> cylinder, std::size_t reading)
+{
+    if (!cylinder)
+        return 0.0; // the engine's values are kept as they are
+    const auto& apart = track.at(reading).apart;
+    if (!apart)
+        return std::nullopt;
+    return input.channels[channel].cells[reading * input.cylinders + *cylinder].deviation - *apart;
+}
+
+} // namespace
+
+std::size_t channel_of(const Input& input, const Output& output, const std::string& quantity, bool of_cylinders)
+{
+    if (!of_cylinders) {
+        const auto& names = output.engine_quantities;
+        return static_cast<std::size_t>(std::find(names.begin(), names.end(), quantity) - names.begin());
+    }
+    const auto found = std::find_if(input.channels.begin(), input.channels.end(),
+                                    [&](const Channel& channel) { return channel.quantity == quantity; });
+    return static_cast<std::size_t>(found - input.channels.begin());
+}
+
+std::optional<MarkAhead> mark_ahead(const Input& input, const Output& output, std::size_t channel,
+                                    std::optional<std::size_t> cylinder, std::size_t reading, std::size_t onset,
+                                    bool rising)
+{
+    const auto track = find_track(input, output, channel, cylinder, reading);
+    const Marks* marks = track ? find_marks(input, output, channel, cylinder) : nullptr;
+    if (!marks)
+        return std::nullopt;
+    const auto& own = rising ? marks->own_high : marks->own_low;
+    if (reading < own.size() && own[reading]) {
+        const auto level = level_before(*track, reading, onset);
+        const auto shared = shared_part(input, *track, channel, cylinder, reading);
+        if (!level || !shared)
+            return std::nullopt;
+        const double distance = *own[reading] - *shared - *level;
+        return (distance > 0.0) == rising ? std::optional(MarkAhead{distance, true}) : std::nullopt;
+    }
+    const auto& allowed = rising ? marks->allowed_rise : marks->allowed_fall;
+    return allowed ? std::optional(MarkAhead{rising ? *allowed : -*allowed, false}) : std::nullopt;
+}
+
+std::optional<TimeToLimit> time_to_limit(const Input& input, const Output& output, std::size_t channel,
+                                         std::optional<std::size_t> cylinder, std::size_t reading, double limit)
+{
+    const auto track = find_track(input, output, channel, cylinder, reading);
+    if (!track)
+        return std::nullopt;
+    std::vector<double> months, values;
+    for (std::size_t i = track->at(reading).segment_start; i <= reading; ++i)
+        if (track->at(i).used) {
+            months.push_back(input.months[i]);
+            values.push_back(track->at(i).clipped);
+        }
+    return time_to_limit(months, values, track->at(reading).noise, limit);
 }
 
 } // namespace evenstroke::drift

@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/trend/drift_catalogue.h"
 #include "core/trend/flag_text.h"
 #include "tests/core/example_engine.h"
 
@@ -148,6 +149,135 @@ TEST(Judge, ADecimalSlipIsDoubtedWithTheLikelyValueAndRaisesNothing)
     EXPECT_TRUE(judgement.flags.empty());
     const auto& values = judgement.readings[15].values;
     EXPECT_EQ(std::count_if(values.begin(), values.end(), [](const JudgedValue& v) { return v.doubtful; }), 1);
+}
+
+namespace {
+
+void type_over(Reading& reading, std::string_view quantity_name, Place place, const std::string& text)
+{
+    for (Value& value : reading.values)
+        if (quantity(value.quantity).name == quantity_name && value.place == place)
+            value = typed_value(quantity_name, place, text);
+}
+
+std::string typed_at(const Reading& reading, std::string_view quantity_name, Place place)
+{
+    for (const Value& value : reading.values)
+        if (quantity(value.quantity).name == quantity_name && value.place == place)
+            return value.typed;
+    return {};
+}
+
+std::size_t count_of(const Judgement& judgement, Doubt::Verdict verdict)
+{
+    return static_cast<std::size_t>(std::count_if(judgement.doubts.begin(), judgement.doubts.end(),
+                                                  [&](const Doubt& doubt) { return doubt.verdict == verdict; }));
+}
+
+} // namespace
+
+TEST(Judge, AValueOutsideItsHardRangeIsNamedByItsSlip)
+{
+    EngineRecord record = example_record(20);
+    Reading& reading = record.readings[15];
+    const std::string lost_point = typed_at(reading, "exhaust_temperature", Place::cylinder(1)) + "0";
+    type_over(reading, "exhaust_temperature", Place::cylinder(1), lost_point); // above 1000 degC
+    std::string exchanged = typed_at(reading, "mean_indicated_pressure", Place::cylinder(3));
+    std::swap(exchanged[0], exchanged[1]);
+    type_over(reading, "mean_indicated_pressure", Place::cylinder(3), exchanged); // 17.9 -> 71.9, above 45 bar
+    const Judgement judgement = judged(std::move(record));
+    ASSERT_EQ(judgement.doubts.size(), 2u) << exchanged << " " << lost_point;
+    EXPECT_EQ(count_of(judgement, Doubt::Verdict::decimal_slip), 1u);
+    EXPECT_EQ(count_of(judgement, Doubt::Verdict::digits_swapped), 1u);
+    EXPECT_TRUE(judgement.flags.empty());
+}
+
+TEST(Judge, ARowInAnotherUnitOutsideItsHardRangeIsAUnitSlip)
+{
+    EngineRecord record = example_record(20);
+    for (int cylinder = 1; cylinder <= record.engine.cylinders; ++cylinder) { // far above 400 bar
+        const double bar = std::stod(typed_at(record.readings[15], "compression_pressure", Place::cylinder(cylinder)));
+        type_over(record.readings[15], "compression_pressure", Place::cylinder(cylinder), std::to_string(10.0 * bar));
+    }
+    const Judgement judgement = judged(std::move(record));
+    ASSERT_EQ(judgement.doubts.size(), 1u);
+    EXPECT_EQ(judgement.doubts[0].verdict, Doubt::Verdict::unit_slip);
+    EXPECT_FALSE(judgement.doubts[0].place.has_value());
+}
+
+TEST(Judge, AnImpossibleValueThatDriftDoesNotWatchIsDoubtedUntilConfirmed)
+{
+    for (const bool confirmed : {false, true}) {
+        EngineRecord record = example_record(20);
+        record.readings[3].values.push_back(typed_value("lube_oil_inlet_temperature", Place::engine(), "480"));
+        record.readings[3].values.back().confirmed = confirmed;
+        const Judgement judgement = judged(std::move(record));
+        ASSERT_EQ(judgement.doubts.size(), confirmed ? 0u : 1u);
+        if (confirmed)
+            continue;
+        EXPECT_EQ(judgement.doubts[0].verdict, Doubt::Verdict::implausible);
+        EXPECT_EQ(judgement.doubts[0].reading, 3u);
+        EXPECT_EQ(judgement.doubts[0].place, Place::engine());
+        EXPECT_NE(judgement.doubts[0].sentence.find("480"), std::string::npos) << judgement.doubts[0].sentence;
+    }
+}
+
+TEST(Judge, ADriftShowsTheTimeToTheCustomaryLimitAndSaysThatItIsNotTheMakers)
+{
+    EngineRecord record = example_record(24);
+    add_leak(record, 4, 18);
+    const Judgement judgement = judged(std::move(record));
+    ASSERT_EQ(judgement.flags.size(), 1u);
+    ASSERT_TRUE(judgement.flags[0].time_to_limit.has_value());
+    const TimeToLimit& time = *judgement.flags[0].time_to_limit;
+    EXPECT_NE(time.limit_text.find("customary limit (not the maker's)"), std::string::npos) << time.limit_text;
+    ASSERT_TRUE(time.months_5 && time.months_50);
+    EXPECT_LE(*time.months_5, *time.months_50);
+    // 0.9 bar a month for 6 months have used up the customary fall of 5 bar (two-stroke): soon means act.
+    EXPECT_DOUBLE_EQ(time.limit, -5.0);
+    EXPECT_LT(*time.months_5, 2.0);
+    EXPECT_EQ(judgement.flags[0].level_now, Level::act);
+}
+
+TEST(Judge, TheEnginesOwnLimitGoesBeforeTheCustomaryOne)
+{
+    EngineRecord record = example_record(24);
+    add_leak(record, 4, 18);
+    const double before = std::stod(typed_at(record.readings[10], "compression_pressure", Place::cylinder(4)));
+    record.engine.limits.push_back({"compression_pressure", before - 20.0, std::nullopt, "maker's manual"});
+    const Judgement judgement = judged(std::move(record));
+    ASSERT_EQ(judgement.flags.size(), 1u);
+    ASSERT_TRUE(judgement.flags[0].time_to_limit.has_value());
+    const TimeToLimit& time = *judgement.flags[0].time_to_limit;
+    EXPECT_NE(time.limit_text.find("the engine's own limit"), std::string::npos) << time.limit_text;
+    EXPECT_NE(time.limit_text.find("maker's manual"), std::string::npos) << time.limit_text;
+    EXPECT_NEAR(time.limit, -20.0, 1.5); // the invented readings scatter by less than 1 bar about their level
+    ASSERT_TRUE(time.months_50.has_value());
+    EXPECT_GT(*time.months_50, 8.0); // 20 bar at 0.9 a month, 6 months gone
+}
+
+TEST(Judge, ADriftOfTheWholeEngineHasATimeToItsLimitToo)
+{
+    EngineRecord record = example_record(36);
+    for (std::size_t i = 24; i < record.readings.size(); ++i) // 15 mbar clean: 4 % a month
+        move_value(record.readings[i], "cooler_pressure_drop", Place::engine(), 0.6 * static_cast<double>(i - 23));
+    const Judgement judgement = judged(std::move(record));
+    ASSERT_FALSE(judgement.flags.empty());
+    const Flag& flag = judgement.flags.front();
+    EXPECT_EQ(flag.subject, Place::engine());
+    EXPECT_EQ(quantity(flag.quantity).name, "cooler_pressure_drop");
+    ASSERT_TRUE(flag.time_to_limit.has_value());
+    EXPECT_DOUBLE_EQ(flag.time_to_limit->limit, 50.0); // per cent of the clean value
+    EXPECT_NE(flag.time_to_limit->limit_text.find("50 % above its level before"), std::string::npos)
+        << flag.time_to_limit->limit_text;
+}
+
+TEST(Judge, EveryCustomaryLimitBelongsToAWatchedQuantity)
+{
+    for (const drift::CustomaryLimit& limit : drift::customary_limits()) {
+        EXPECT_NE(drift::find_channel(limit.quantity, limit.subject), nullptr) << limit.quantity;
+        EXPECT_TRUE(limit.rise || limit.fall) << limit.quantity;
+    }
 }
 
 TEST(Judge, OddRecordsGiveAnAnswer)
