@@ -2,6 +2,7 @@
 #include "app/fleet/fleet_summary.h"
 
 #include "app/desk/number_text.h"
+#include "core/trend/flag_text.h"
 
 #include <QCoreApplication>
 #include <QDataStream>
@@ -18,16 +19,21 @@ namespace evenstroke {
 
 namespace {
 
-constexpr quint16 layout_version = 2;
+constexpr quint16 layout_version = 3;
 constexpr std::size_t points_in_a_strip = 36; // three years of monthly readings
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
 
 std::optional<StripGroup> group_of(const Quantity& quantity)
 {
-    // Read at the cylinders, but speaking of what all of them share.
+    // Read at the cylinders, but speaking of what all of them share; and what is worked out from several places.
     static const std::map<std::string_view, StripGroup> elsewhere{
         {"fuel_index", StripGroup::fuel},
+        {"specific_fuel_consumption", StripGroup::fuel},
+        {"compressor_efficiency", StripGroup::turbocharger},
+        {"turbocharger_efficiency", StripGroup::turbocharger},
+        {"cooler_temperature_difference", StripGroup::charge_air},
+        {"cooler_effectiveness", StripGroup::charge_air},
         {"jacket_outlet_temperature", StripGroup::cooling_and_oil},
         {"piston_coolant_outlet_temperature", StripGroup::cooling_and_oil}};
     if (const auto found = elsewhere.find(quantity.name); found != elsewhere.end())
@@ -144,7 +150,7 @@ FleetSummary summarise(const Judgement& judgement)
     summary.places_concerned = static_cast<int>(places.size());
     if (!flags.empty()) {
         const Flag& worst = *flags.front();
-        summary.sentence = to_qstring(worst.sentence);
+        summary.sentence = to_qstring(short_sentence(worst, judgement.record->engine));
         summary.worsening = worst.ramp;
         summary.excess = worst.threshold > 0.0 ? worst.evidence / worst.threshold : 0.0;
     } else if (summary.level == Level::note) {

@@ -130,7 +130,8 @@ private:
             paint_sentence(painter, area, *row, model.sentence_words(*row), t);
         } else if (const auto number = static_cast<std::size_t>(column - FleetModel::first_strip);
                    number < row->summary.strips.size()) {
-            paint_strip(painter, QRectF(area).adjusted(0, 11, 0, -10), row->summary.strips[number], t);
+            paint_strip(painter, QRectF(area.left(), area.top() + 11, area.width(), row_height - 21),
+                        row->summary.strips[number], t);
         }
     }
     const FleetView& view_;

@@ -14,6 +14,7 @@
 #include <QKeyEvent>
 
 #include <algorithm>
+#include <utility>
 #include <array>
 
 namespace evenstroke {
@@ -65,9 +66,11 @@ TrendPlot& TrendPage::plot() { return *ui_->plot; }
 
 QString TrendPage::sentence() const
 {
-    return workplace().selection().place.kind == Place::Kind::engine
-               ? tr("{quantity} of {engine}, {vessel}, {view}, {range}.")
-               : tr("{quantity} of {place}, {engine} of {vessel}, {view}, {range}.");
+    QString words = workplace().selection().place.kind == Place::Kind::engine
+                        ? tr("{quantity} of {engine}, {vessel}, {view}, {range}.")
+                        : tr("{quantity} of {place}, {engine} of {vessel}, {view}, {range}.");
+    // Where the view wished for does not exist for this quantity, the sentence says what is shown.
+    return shown_instead_.isEmpty() ? words : words.replace(QStringLiteral("{view}"), shown_instead_);
 }
 
 const Trend* TrendPage::trend() const
@@ -145,6 +148,9 @@ void TrendPage::show_views(const Trend& shown, const TrendPicture& picture)
         buttons[i]->setEnabled(std::find(possible.begin(), possible.end(), view) != possible.end());
         buttons[i]->setChecked(picture.view == view);
     }
+    const QString instead = picture.view == workplace().selection().view ? QString() : picture.view_words;
+    if (std::exchange(shown_instead_, instead) != instead)
+        emit sentence_changed();
 }
 
 std::optional<std::size_t> TrendPage::chosen_reading() const

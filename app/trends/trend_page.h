@@ -69,6 +69,7 @@ private:
     std::unique_ptr<Ui::TrendPage> ui_;
     TrendTableModel table_;
     std::shared_ptr<const Judgement> judgement_;
+    QString shown_instead_; ///< the view shown where the one wished for does not exist
 };
 
 } // namespace evenstroke

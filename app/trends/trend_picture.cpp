@@ -86,16 +86,20 @@ double axis_start(const Judgement& judgement, const Trend& trend, TimeRange rang
     return first;
 }
 
+QString words_of(ValueView view, const Trend& trend)
+{
+    switch (view) {
+    case ValueView::raw: return tr_("as read");
+    case ValueView::corrected: return tr_("corrected to reference conditions");
+    case ValueView::deviation: return trend.own_level ? tr_("deviation from its own level") : tr_("deviation from the baseline");
+    case ValueView::apart: return tr_("apart from the other cylinders");
+    }
+    return {};
+}
+
 QString axis_title(const TrendPicture& picture)
 {
-    QString words;
-    switch (picture.view) {
-    case ValueView::raw: words = tr_("as read"); break;
-    case ValueView::corrected: words = tr_("corrected to reference conditions"); break;
-    case ValueView::deviation: words = tr_("deviation from the baseline"); break;
-    case ValueView::apart: words = tr_("apart from the other cylinders"); break;
-    }
-    return picture.unit_symbol.isEmpty() ? words : tr_("%1, %2").arg(picture.unit_symbol, words);
+    return picture.unit_symbol.isEmpty() ? picture.view_words : tr_("%1, %2").arg(picture.unit_symbol, picture.view_words);
 }
 
 void add_points(TrendPicture& picture, const Judgement& judgement, const Trend& trend)
@@ -213,6 +217,7 @@ TrendPicture make_trend_picture(const Judgement& judgement, const Selection& sel
     picture.decimals = decimals_of(trend->quantity);
     picture.view = shown_view(*trend, selection.view);
     picture.difference = picture.view == ValueView::deviation || picture.view == ValueView::apart;
+    picture.view_words = words_of(picture.view, *trend);
     picture.axis_title = axis_title(picture);
     picture.first_time = axis_start(judgement, *trend, selection.range);
     picture.last_time = time_of(judgement, judgement.readings.back().reading);

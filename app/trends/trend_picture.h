@@ -58,6 +58,7 @@ struct TrendPicture
     bool difference = true; ///< numbers carry their sign
     std::vector<PicturePoint> points;
     std::vector<PictureLine> others;
+    QString view_words; ///< "deviation from the baseline"
     QString band_name; ///< "usual range of this engine", "expected at this load"; empty: no band
     std::vector<PictureEvent> events;
     std::vector<PictureFlag> flags;

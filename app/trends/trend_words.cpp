@@ -106,7 +106,7 @@ QString months_text(const TimeToLimit& limit)
         return early < 1 ? tr_("from now on") : tr_("%n month(s) or more", early);
     const int late = whole(*limit.months_95);
     if (late < 1)
-        return tr_("less than a month");
+        return tr_("reached, or within a month");
     if (early == late)
         return tr_("%n month(s)", late);
     return tr_("%1 to %2 months").arg(early).arg(late);
@@ -165,7 +165,7 @@ QString point_words(const Judgement& judgement, const Trend& trend, std::size_t 
     if (point->corrected)
         words.append(tr_("corrected %1").arg(number_text(*point->corrected, decimals)));
     if (point->expected)
-        words.append(tr_("expected %1").arg(number_text(*point->expected, decimals)));
+        words.append((trend.own_level ? tr_("own level %1") : tr_("expected %1")).arg(number_text(*point->expected, decimals)));
     if (point->deviation)
         words.append(tr_("deviation %1").arg(signed_text(*point->deviation, decimals)));
     if (point->apart)

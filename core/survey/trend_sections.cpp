@@ -106,7 +106,7 @@ Plot trend_plot(const Context& context, const Trend& trend, View view)
     Plot plot = empty_plot(context);
     plot.title = of.title + (trend.place.number > 0 ? ", " + place_words(context.engine, trend.place) : "");
     plot.value_title = view == View::raw ? unit_of(of) + ", as read"
-                                         : deviation_unit(of) + (view == View::apart ? ", apart from the other cylinders" : ", deviation from the baseline");
+                                         : deviation_unit(of) + (view == View::apart ? ", apart from the other cylinders" : trend.own_level ? ", deviation from its own level" : ", deviation from the baseline");
     plot.lines = {trend_line(context, trend, view)};
     plot.lines.front().in_question = true;
     const bool banded = (view == View::apart && trend.place.kind == Place::Kind::cylinder)

@@ -47,7 +47,15 @@ std::string change_text(const MovedQuantity& moved, bool ramp, bool first)
     return std::string(first ? (up ? " stands " : " stands ") : " ") + amount_text(moved) + (up ? " higher" : " lower");
 }
 
-std::string drift_sentence(const Flag& flag, const Engine& engine)
+bool in_baseline(const Engine& engine, const std::string& name)
+{
+    return std::any_of(engine.baseline.begin(), engine.baseline.end(),
+                       [&](const BaselinePoint& point) { return point.values.count(name) != 0; });
+}
+
+constexpr std::size_t most_named_quantities = 4; // a sentence, not a list: the flag itself carries them all
+
+std::string drift_sentence(const Flag& flag, const Engine& engine, std::size_t most_named)
 {
     if (flag.moved.empty())
         return subject_text(engine, flag.subject) + " has left its own level.";
@@ -58,9 +66,14 @@ std::string drift_sentence(const Flag& flag, const Engine& engine)
         text += " of all cylinders";
     text += change_text(flag.moved.front(), flag.ramp, true);
     text += flag.ramp ? " for " + months_text(flag.months) : " than before " + short_date(flag.since);
-    text += cylinder ? " against the other cylinders" : " against the engine's own baseline";
-    for (std::size_t i = 1; i < flag.moved.size(); ++i)
+    text += cylinder ? " against the other cylinders"
+            : in_baseline(engine, quantity(flag.moved.front().quantity).name) ? " against the engine's own baseline"
+                                                                              : " from the engine's own level";
+    const std::size_t named = std::min(flag.moved.size(), most_named);
+    for (std::size_t i = 1; i < named; ++i)
         text += (i == 1 ? "; " : ", ") + quantity_words(flag.moved[i]) + change_text(flag.moved[i], flag.ramp, false);
+    if (named < flag.moved.size() && named > 1)
+        text += " and " + std::to_string(flag.moved.size() - named) + " more";
     if (!flag.pattern_words.empty())
         text += "; the pattern of " + flag.pattern_words;
     return text + ".";
@@ -134,10 +147,15 @@ void word_flag(Flag& flag, const Engine& engine, double years)
         flag.next_check = "If work was done, write it into the events; the comparison then starts anew from it.";
         return;
     }
-    flag.sentence = drift_sentence(flag, engine);
+    flag.sentence = drift_sentence(flag, engine, most_named_quantities);
     flag.chance_sentence = chance_text(years);
     flag.next_check = next_check(flag.pattern, quantity_name);
     flag.cautions = cautions_for(flag.pattern, quantity_name, engine.two_stroke());
+}
+
+std::string short_sentence(const Flag& flag, const Engine& engine)
+{
+    return flag.severity == Level::ask || flag.absolute_limit ? flag.sentence : drift_sentence(flag, engine, 1);
 }
 
 std::string limit_sentence(const Engine& engine, const Place& place, const Quantity& q, double value, double limit,

@@ -15,6 +15,9 @@ std::string subject_text(const Engine& engine, const Place& subject);
 /// Fills sentence, chance sentence, next check, pattern words and cautions of a flag whose numbers are set.
 void word_flag(Flag& flag, const Engine& engine, double years_by_chance);
 
+/// For lists: what moved most, and the pattern.
+std::string short_sentence(const Flag& flag, const Engine& engine);
+
 /// Sentence for a limit of the maker that a reading passed.
 std::string limit_sentence(const Engine& engine, const Place& place, const Quantity& quantity, double value,
                            double limit, bool above, const std::string& source);

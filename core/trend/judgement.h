@@ -86,6 +86,7 @@ struct Trend
     Level level = Level::no_data; ///< now
     int learned = 0, needed = 8;  ///< usable readings since the last work
     std::optional<double> usual_low, usual_high; ///< of `apart` (cylinders) or `deviation` (engine): own level +- 2 noise
+    bool own_level = false; ///< `expected` is its own usual level, since the baseline does not speak of it
     std::optional<double> noise;  ///< one standard deviation, the engine's own
     std::optional<std::size_t> current_start; ///< reading at which the present stretch began
 };

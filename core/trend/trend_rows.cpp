@@ -81,6 +81,7 @@ struct CellsOfTrend
 {
     std::vector<const drift::CellResult*> at; ///< one a reading
     bool percent = false;
+    bool engine_cells = false; ///< the engine's channel holds values
 };
 
 CellsOfTrend find_cells(const Trend& trend, const drift::Input& input, const drift::Output& output)
@@ -104,6 +105,8 @@ CellsOfTrend find_cells(const Trend& trend, const drift::Input& input, const dri
             continue;
         for (std::size_t i = 0; i < readings; ++i)
             found.at.push_back(&output.engine_cells[k][i]);
+        for (const drift::Cell& cell : input.engine_channels[k].cells)
+            found.engine_cells = found.engine_cells || cell.present;
         const auto* channel = drift::find_channel(input.engine_channels[k].quantity, drift::Subject::engine);
         found.percent = channel && channel->form == drift::DeviationForm::percent;
     }
@@ -124,24 +127,51 @@ std::optional<std::size_t> standing_onset(const Judgement& judgement, const Tren
     return std::nullopt;
 }
 
+/// A quantity of the engine that is judged although no baseline speaks of it (the difference over the coolant
+/// hardly depends on the load) is compared with its own usual level.
+bool judged_by_own_level(const Trend& trend, const CellsOfTrend& cells)
+{
+    return trend.place.kind != Place::Kind::cylinder && cells.engine_cells
+           && std::none_of(trend.points.begin(), trend.points.end(), [](const TrendPoint& point) { return point.expected; });
+}
+
+void compare_with_own_level(Trend& trend, double level)
+{
+    trend.own_level = true;
+    for (TrendPoint& point : trend.points) {
+        point.expected = level;
+        point.deviation = point.corrected.value_or(point.raw) - level;
+    }
+}
+
 void set_band(Trend& trend, const CellsOfTrend& cells, std::optional<std::size_t> onset)
 {
+    const bool own_level = judged_by_own_level(trend, cells);
     std::vector<double> level;
+    // A change that began before the present stretch is shown against the level before it.
+    std::size_t first = trend.current_start.value_or(0);
+    if (onset && *onset <= first)
+        first = 0;
     for (const TrendPoint& point : trend.points) {
-        if (trend.current_start && point.reading < *trend.current_start)
+        if (point.reading < first)
             continue;
         if (point.unsteady || point.doubtful || (onset && point.reading >= *onset))
             continue;
-        const auto value = trend.place.kind == Place::Kind::cylinder ? point.apart : point.deviation;
+        const auto value = trend.place.kind == Place::Kind::cylinder ? point.apart
+                           : own_level ? std::optional(point.corrected.value_or(point.raw)) : point.deviation;
         if (value)
             level.push_back(*value);
     }
     if (level.size() > level_window)
         level.erase(level.begin(), level.end() - static_cast<std::ptrdiff_t>(level_window));
     const std::size_t count = level.size();
-    const auto middle = drift::median(std::move(level));
+    auto middle = drift::median(std::move(level));
     if (!middle || count < 2 || cells.at.empty())
         return;
+    if (own_level) {
+        compare_with_own_level(trend, *middle);
+        middle = 0.0;
+    }
     double noise = cells.at.back()->noise;
     if (cells.percent) {
         const auto& expected = trend.points.back().expected;
