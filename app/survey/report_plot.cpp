@@ -81,7 +81,9 @@ QCPRange value_range(const Plot& plot)
     if (!(high >= low))
         return {0.0, 1.0};
     const double air = std::max((high - low) * 0.12, std::abs(high) * 1e-3 + 1e-6);
-    return {plot.from_zero ? low : low - air, high + air};
+    // Below the line there is room for the flags of the events and their words.
+    const double below = plot.events.empty() ? air : 0.35 * (high - low) + air;
+    return {plot.from_zero ? low : low - below, high + air};
 }
 
 void style_axes(QCustomPlot& widget, const Plot& plot)

@@ -50,6 +50,8 @@ std::string limit_sentence(const TimeToLimit& limit)
 {
     if (!limit.months_5 && !limit.months_50)
         return "If it goes on like this, " + limit.limit_text + " is not reached within ten years.";
+    if (limit.months_95 && *limit.months_95 < 0.5)
+        return "By now " + limit.limit_text + " is reached, nine times in ten.";
     const std::string early = limit.months_5 ? months_words(*limit.months_5) : std::string("more than ten years");
     const std::string late = limit.months_95 ? months_words(*limit.months_95) : std::string("more than ten years");
     return "If it goes on like this, " + limit.limit_text + " is reached in " + early + " to " + late
