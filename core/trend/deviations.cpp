@@ -75,24 +75,50 @@ std::optional<double> usual_uncertainty(std::string_view name, const Engine& eng
     return id ? instrument_uncertainty(engine, quantity(*id), own) : std::nullopt;
 }
 
-/// How far the expected value moves with the uncertainty of the load.
-double load_part(const Engine& engine, const BaselineCurve& curve, double load)
+/// Half-widths at 95 % of what a reading was taken under.
+struct ConditionUncertainty
 {
-    const auto below = curve.at(load - 1.0), above = curve.at(load + 1.0);
-    const double uncertainty = usual_uncertainty("load_percent", engine, load).value_or(0.0);
-    return below && above ? (*above - *below) / 2.0 * uncertainty : 0.0;
+    double air, coolant, load;
+    ConditionUncertainty(const Engine& engine, const Conditions& conditions)
+        : air(usual_uncertainty("inlet_air_temperature", engine, 0.0).value_or(0.0)),
+          coolant(usual_uncertainty("cooler_coolant_inlet_temperature", engine, 0.0).value_or(0.0)),
+          load(usual_uncertainty("load_percent", engine, conditions.load_percent.value_or(0.0)).value_or(0.0))
+    {
+    }
+};
+
+/// What one quantity should read at a reading; the same for all cylinders.
+struct Expectation
+{
+    std::optional<double> value;
+    bool in_baseline = false;
+    double load_effect = 0.0; ///< how far the value moves with the uncertainty of the load
+};
+
+Expectation find_expectation(const Baseline& baseline, const Quantity& q, const Conditions& conditions,
+                             double load_uncertainty)
+{
+    Expectation expectation;
+    expectation.in_baseline = baseline.has(q.name);
+    const BaselineCurve* curve = baseline.curve(conditions.mode, q.name);
+    if (!curve || !conditions.load_percent)
+        return expectation;
+    const double load = *conditions.load_percent;
+    expectation.value = curve->at(load);
+    const auto below = curve->at(load - 1.0), above = curve->at(load + 1.0);
+    expectation.load_effect = below && above ? (*above - *below) / 2.0 * load_uncertainty : 0.0;
+    return expectation;
 }
 
 std::optional<double> deviation_uncertainty(const Engine& engine, const Quantity& q, const JudgedValue& value,
-                                            const Correction& correction, double load_effect)
+                                            const Correction& correction, const ConditionUncertainty& of,
+                                            double load_effect)
 {
     const auto instrument = instrument_uncertainty(engine, q, value.raw);
     if (!instrument)
         return std::nullopt;
-    const double air = usual_uncertainty("inlet_air_temperature", engine, 0.0).value_or(0.0);
-    const double coolant = usual_uncertainty("cooler_coolant_inlet_temperature", engine, 0.0).value_or(0.0);
-    return std::sqrt(square(correction.scale * *instrument) + square(correction.per_inlet_air * air) +
-                     square(correction.per_coolant * coolant) + square(load_effect));
+    return std::sqrt(square(correction.scale * *instrument) + square(correction.per_inlet_air * of.air) +
+                     square(correction.per_coolant * of.coolant) + square(load_effect));
 }
 
 bool is_performance(const Quantity& q)
@@ -101,11 +127,11 @@ bool is_performance(const Quantity& q)
 }
 
 /// Apart is formed from deviations; from corrected values where the engine has no baseline for the quantity.
-void set_apart(std::vector<JudgedValue>& values, const std::map<std::size_t, double>& comparable)
+void set_apart(std::vector<JudgedValue>& values, const std::vector<std::optional<double>>& comparable)
 {
     std::map<QuantityId, std::vector<std::size_t>> rows;
-    for (const auto& [index, amount] : comparable)
-        if (values[index].place.kind == Place::Kind::cylinder)
+    for (std::size_t index = 0; index < values.size(); ++index)
+        if (comparable[index] && values[index].place.kind == Place::Kind::cylinder)
             rows[values[index].quantity].push_back(index);
     std::vector<double> others;
     for (const auto& [id, row] : rows) {
@@ -113,9 +139,9 @@ void set_apart(std::vector<JudgedValue>& values, const std::map<std::size_t, dou
             others.clear();
             for (std::size_t other : row)
                 if (other != index)
-                    others.push_back(comparable.at(other));
+                    others.push_back(*comparable[other]);
             if (!others.empty())
-                values[index].apart = comparable.at(index) - *drift::median(others);
+                values[index].apart = *comparable[index] - drift::median_in_place(others);
         }
     }
 }
@@ -153,7 +179,11 @@ std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& base
                                       const Conditions& conditions)
 {
     std::vector<JudgedValue> values;
-    std::map<std::size_t, double> comparable; // index in values -> deviation, or what takes its place
+    values.reserve(reading.values.size());
+    std::vector<std::optional<double>> comparable; // of each value: deviation, or what takes its place
+    const ConditionUncertainty uncertainty(engine, conditions);
+    std::optional<QuantityId> expected_of; // values of one quantity mostly stand together
+    Expectation expectation;
     for (std::size_t i = 0; i < reading.values.size(); ++i) {
         const Value& typed = reading.values[i];
         const auto own = typed.phase == Phase::reading ? own_value(typed, conditions) : std::nullopt;
@@ -168,20 +198,23 @@ std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& base
         const Correction correction = find_correction(engine, q, own->value, conditions);
         value.applied = correction.applied;
         value.missing_input = correction.missing_input;
-        const BaselineCurve* curve = baseline.curve(conditions.mode, q.name);
-        if (curve && conditions.load_percent && typed.place.kind != Place::Kind::ship)
-            value.expected = curve->at(*conditions.load_percent);
+        if (expected_of != q.id)
+            expectation = find_expectation(baseline, q, conditions, uncertainty.load);
+        expected_of = q.id;
+        if (typed.place.kind != Place::Kind::ship)
+            value.expected = expectation.value;
         const double best = correction.scale * own->value + correction.shift;
-        if (correction.known() && (is_performance(q) || baseline.has(q.name)))
+        if (correction.known() && (is_performance(q) || expectation.in_baseline))
             value.corrected = best;
         if (value.corrected && value.expected)
             value.deviation = *value.corrected - *value.expected;
+        comparable.emplace_back();
         if (value.expected)
-            comparable[values.size()] = best - *value.expected;
-        else if (!baseline.has(q.name) && is_performance(q))
-            comparable[values.size()] = best;
-        const double load_effect = value.expected ? load_part(engine, *curve, *conditions.load_percent) : 0.0;
-        value.uncertainty = deviation_uncertainty(engine, q, value, correction, load_effect);
+            comparable.back() = best - *value.expected;
+        else if (!expectation.in_baseline && is_performance(q))
+            comparable.back() = best;
+        value.uncertainty = deviation_uncertainty(engine, q, value, correction, uncertainty,
+                                                  value.expected ? expectation.load_effect : 0.0);
         values.push_back(std::move(value));
     }
     set_apart(values, comparable);

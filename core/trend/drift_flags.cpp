@@ -4,6 +4,7 @@
 #include "core/trend/robust.h"
 
 #include <algorithm>
+#include <utility>
 
 namespace evenstroke::drift {
 
@@ -15,6 +16,32 @@ constexpr double worth_naming =
 Level level_of(const Flag& flag)
 {
     return flag.escalations.empty() ? flag.level : flag.escalations.back().level;
+}
+
+/// @param quantities candidates from here on are signatures
+Flag::View view_from(const ScanResult& result, std::string name, std::size_t quantities,
+                     const std::vector<double>& months, std::size_t reading)
+{
+    Flag::View view;
+    view.candidate = std::move(name);
+    view.is_signature = result.candidate >= quantities;
+    view.direction = view.is_signature ? 0 : result.direction;
+    view.shape = result.shape;
+    view.onset = result.onset;
+    view.since = result.onset - 1;
+    view.months = months[reading] - months[view.since];
+    view.evidence = result.evidence;
+    return view;
+}
+
+void say_evidence(SubjectResult& subject, const ScanResult& result, std::string name, std::size_t quantities)
+{
+    subject.evidence = result.evidence;
+    subject.candidate = std::move(name);
+    subject.is_signature = result.candidate >= quantities;
+    subject.direction = subject.is_signature ? 0 : result.direction;
+    subject.shape = result.shape;
+    subject.onset = result.onset;
 }
 
 void keep_worth_naming(std::vector<QuantityChange>& changes)
@@ -37,15 +64,7 @@ std::string DriftRun::candidate_name(std::size_t candidate) const
 Flag::View DriftRun::view_of(std::size_t reading, const ScanResult& result,
                              const std::vector<ScanSeries>& series) const
 {
-    Flag::View view;
-    view.candidate = candidate_name(result.candidate);
-    view.is_signature = result.candidate >= scanned_.size();
-    view.direction = view.is_signature ? 0 : result.direction;
-    view.shape = result.shape;
-    view.onset = result.onset;
-    view.since = result.onset - 1;
-    view.months = months_[reading] - months_[view.since];
-    view.evidence = result.evidence;
+    Flag::View view = view_from(result, candidate_name(result.candidate), scanned_.size(), months_, reading);
     view.years_by_chance = years_by_chance(result.evidence, cylinders_);
     const std::vector<std::size_t> moved = view.is_signature
                                                ? matcher_.channels(result.candidate - scanned_.size())
@@ -113,12 +132,7 @@ void DriftRun::judge_cylinder(std::size_t reading, std::size_t cylinder)
     settle_cylinder(reading, cylinder, outcome, result, later ? later_series : series);
     if (!result.possible)
         return;
-    subject.evidence = result.evidence;
-    subject.candidate = candidate_name(result.candidate);
-    subject.is_signature = result.candidate >= scanned_.size();
-    subject.direction = subject.is_signature ? 0 : result.direction;
-    subject.shape = result.shape;
-    subject.onset = result.onset;
+    say_evidence(subject, result, candidate_name(result.candidate), scanned_.size());
     subject.unexplained = result.any_change;
 }
 
@@ -220,15 +234,8 @@ void DriftRun::judge_engine(std::size_t reading, const ReadingOpinion& opinion)
 
 Flag::View DriftRun::engine_view(std::size_t reading, const ScanResult& result) const
 {
-    Flag::View view;
-    view.candidate = engine_.candidate_name(result.candidate);
-    view.is_signature = result.candidate >= engine_.series().size();
-    view.direction = view.is_signature ? 0 : result.direction;
-    view.shape = result.shape;
-    view.onset = result.onset;
-    view.since = result.onset - 1;
-    view.months = months_[reading] - months_[view.since];
-    view.evidence = result.evidence;
+    Flag::View view = view_from(result, engine_.candidate_name(result.candidate), engine_.series().size(), months_,
+                                reading);
     view.years_by_chance = years_by_chance(result.evidence, 0);
     for (const std::size_t e : engine_.moved_by(result.candidate)) {
         const EngineSeries& series = engine_.series()[e];
@@ -262,12 +269,7 @@ void DriftRun::settle_engine(std::size_t reading, const ScanResult& result)
         subject.level = output_.engine[reading - 1].level;
     if (!result.possible)
         return;
-    subject.evidence = result.evidence;
-    subject.candidate = engine_.candidate_name(result.candidate);
-    subject.is_signature = result.candidate >= engine_.series().size();
-    subject.direction = subject.is_signature ? 0 : result.direction;
-    subject.shape = result.shape;
-    subject.onset = result.onset;
+    say_evidence(subject, result, engine_.candidate_name(result.candidate), engine_.series().size());
 }
 
 } // namespace evenstroke::drift

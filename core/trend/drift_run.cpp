@@ -66,7 +66,8 @@ std::vector<ChannelHistory> empty_history(const Input& input)
 DriftRun::DriftRun(const Input& input)
     : input_(&input), cylinders_(input.cylinders), months_(sound_months(input.months)),
       history_(empty_history(input)), scanned_(channels_in_scan(input, history_)),
-      sums_(input.channels.size(), std::vector<RunningSums>(input.cylinders)), typing_(input),
+      sums_(input.channels.size(), std::vector<RunningSums>(input.cylinders)),
+      levels_(input.channels.size(), MaybeValues(input.cylinders)), typing_(input),
       matcher_(names_of(input, scanned_)), decisions_(input.cylinders), question_(input.cylinders),
       engine_(input)
 {
@@ -103,6 +104,7 @@ void DriftRun::take(std::size_t reading)
     keep_usable(reading, opinion);
     for (std::size_t k = 0; k < history_.size(); ++k)
         take_apart(reading, k, opinion);
+    find_levels(reading);
     judge_poor(reading);
     learn_noise(reading);
     add_to_sums(reading);
@@ -229,6 +231,13 @@ std::optional<double> DriftRun::recent_level(std::size_t reading, std::size_t ch
     return median_in_place(std::span(last.data(), count));
 }
 
+void DriftRun::find_levels(std::size_t reading)
+{
+    for (std::size_t k = 0; k < history_.size(); ++k)
+        for (std::size_t j = 0; j < cylinders_; ++j)
+            levels_[k][j] = output_.cells[k][at(reading, j)].apart ? recent_level(reading, k, j) : std::nullopt;
+}
+
 void DriftRun::judge_poor(std::size_t reading)
 {
     ReadingResult& result = output_.readings[reading];
@@ -244,7 +253,7 @@ void DriftRun::judge_poor(std::size_t reading)
             const CellResult& cell = output_.cells[k][at(reading, j)];
             if (!cell.apart)
                 continue;
-            if (const auto level = recent_level(reading, k, j))
+            if (const auto& level = levels_[k][j])
                 distances.push_back(std::abs(*cell.apart - *level) / cell.noise);
         }
     if (distances.size() < cells_for_scatter)
@@ -254,10 +263,9 @@ void DriftRun::judge_poor(std::size_t reading)
     result.poor = scatter > unsteady_scatter;
 }
 
-double DriftRun::clip_one_off(std::size_t reading, std::size_t channel, std::size_t cylinder,
-                              double apart) const
+double DriftRun::clip_one_off(std::size_t channel, std::size_t cylinder, double apart) const
 {
-    const auto level = recent_level(reading, channel, cylinder);
+    const auto& level = levels_[channel][cylinder];
     return level ? pull_in(apart, *level, 2.5 * apart_noise_[channel].value()) : apart;
 }
 
@@ -269,7 +277,7 @@ void DriftRun::add_to_sums(std::size_t reading)
             CellResult& cell = output_.cells[k][at(reading, j)];
             std::optional<double> value;
             if (cell.apart && !poor) {
-                value = clip_one_off(reading, k, j, *cell.apart);
+                value = clip_one_off(k, j, *cell.apart);
                 cell.used = true;
                 cell.clipped = *value;
             }

@@ -33,9 +33,10 @@ private:
     void judge_poor(std::size_t reading);
     void learn_noise(std::size_t reading);
     void add_to_sums(std::size_t reading);
-    double clip_one_off(std::size_t reading, std::size_t channel, std::size_t cylinder, double apart) const;
+    double clip_one_off(std::size_t channel, std::size_t cylinder, double apart) const;
     void renew_first_values(std::size_t reading, std::size_t channel, std::size_t cylinder);
     std::optional<double> recent_level(std::size_t reading, std::size_t channel, std::size_t cylinder) const;
+    void find_levels(std::size_t reading);
     void judge_cylinder(std::size_t reading, std::size_t cylinder);
     std::vector<ScanSeries> series_of(std::size_t cylinder, std::size_t not_before) const;
     Flag::View view_of(std::size_t reading, const ScanResult& result,
@@ -60,6 +61,7 @@ private:
     std::vector<NoiseEstimate> apart_noise_;     ///< [channel]
     std::vector<std::size_t> scanned_;           ///< channels that take part in the scan
     std::vector<std::vector<RunningSums>> sums_; ///< [channel][cylinder]
+    std::vector<MaybeValues> levels_;            ///< [channel][cylinder] of the last readings before this one
     TypingCheck typing_;
     SignatureMatcher matcher_;
     Thresholds thresholds_;

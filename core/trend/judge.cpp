@@ -6,6 +6,7 @@
 #include "core/trend/trend_rows.h"
 
 #include <algorithm>
+#include <utility>
 
 namespace evenstroke {
 namespace {
@@ -60,7 +61,7 @@ Judgement judge(std::shared_ptr<const EngineRecord> record, const std::function<
         return Judgement{};
 
     for (std::size_t i = 0; i < prepared.size(); ++i) {
-        judgement.readings[i].values = prepared[i].values;
+        judgement.readings[i].values = std::move(prepared[i].values); // only the conditions are needed from here on
         if (i < output.readings.size())
             judgement.readings[i].poor = output.readings[i].poor || output.readings[i].unsteady;
     }

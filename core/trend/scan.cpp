@@ -178,11 +178,12 @@ void weigh_candidates(const FitRow& fits, const SignatureMatcher& matcher, doubl
         if (fits.entries[k].taken)
             result.consider(fits.entries[k].strength, 0.0, k, onset, shape);
     for (std::size_t signature = 0; signature < matcher.count(); ++signature) {
-        if (any_change + matcher.prior(signature) <= result.evidence * result.evidence)
+        const double prior = matcher.prior(signature);
+        const double to_beat = result.evidence * result.evidence - prior;
+        if (any_change <= to_beat)
             continue;
-        if (const double strength = matcher.strength(signature, fits); strength > 0.0) // one direction only
-            result.consider(strength, matcher.prior(signature), fits.entries.size() + signature, onset,
-                            shape);
+        if (const double strength = matcher.strength(signature, fits, to_beat); strength > 0.0) // one direction only
+            result.consider(strength, prior, fits.entries.size() + signature, onset, shape);
     }
 }
 

@@ -90,7 +90,8 @@ public:
     const std::vector<std::size_t>& channels(std::size_t index) const { return signatures_[index].named; }
     /// z: strength of a signature; 0 where fewer than two of its quantities take part, or they moved the
     /// other way.
-    double strength(std::size_t index, const FitRow& fits) const;
+    /// @param worth_more square that a strength has to exceed to be of interest; below it 0 may be the answer
+    double strength(std::size_t index, const FitRow& fits, double worth_more = 0.0) const;
     /// u' C^-1 u: chi-square of "every quantity took a new level of its own".
     double any_change(const FitRow& fits) const;
 

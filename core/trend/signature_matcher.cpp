@@ -87,7 +87,7 @@ SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature,
     return prepared;
 }
 
-double SignatureMatcher::strength(std::size_t index, const FitRow& fits) const
+double SignatureMatcher::strength(std::size_t index, const FitRow& fits, double worth_more) const
 {
     const Prepared& signature = signatures_[index];
     double sum = 0.0, variance = 0.0;
@@ -102,7 +102,10 @@ double SignatureMatcher::strength(std::size_t index, const FitRow& fits) const
     for (const Term& term : signature.variance)
         if (fits.entries[term.row].taken && fits.entries[term.column].taken)
             variance += term.weight * fits.entries[term.row].root * fits.entries[term.column].root;
-    return variance > 0.0 ? sum / std::sqrt(variance) : 0.0;
+    constexpr double rounding = 1e-9; // a bound that is met to the last digits is left to the caller
+    if (!(variance > 0.0) || sum * sum < (1.0 - rounding) * worth_more * variance)
+        return 0.0;
+    return sum / std::sqrt(variance);
 }
 
 double SignatureMatcher::any_change(const FitRow& fits) const

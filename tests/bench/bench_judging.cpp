@@ -5,6 +5,7 @@
 #include "tests/core/example_engine.h"
 
 #include <algorithm>
+#include <cstdint>
 #include <cstdio>
 #include <ctime>
 
@@ -46,6 +47,18 @@ template <typename Work> double best_of(int runs, const Work& work)
     return best;
 }
 
+/// A yardstick: how fast this machine is just now, and how busy.
+void sort_numbers()
+{
+    std::vector<double> numbers(200000);
+    std::uint64_t state = 1;
+    for (double& number : numbers) {
+        state = state * 6364136223846793005u + 1442695040888963407u; // Knuth, MMIX
+        number = static_cast<double>(state >> 11);
+    }
+    std::sort(numbers.begin(), numbers.end());
+}
+
 } // namespace
 
 int main()
@@ -65,7 +78,10 @@ int main()
     Reading draft = record->readings.back();
     draft.taken_at.utc += std::chrono::hours(24 * 30);
     const double opinion = best_of(10, [&] { judge_draft(judgement, draft); });
+    const double yardstick = best_of(10, sort_numbers);
     std::printf("judging 12 cylinders x 120 readings: %.1f ms (deviations %.1f, drift %.1f)\n", whole, deviations, drift);
+    std::printf("sorting 200000 numbers on this machine now: %.1f ms; judging takes %.2f times as long\n", yardstick,
+                whole / yardstick);
     std::printf("one draft against its history: %.1f ms, %.2f of judging all of it\n", opinion, opinion / whole);
     return 0;
 }
