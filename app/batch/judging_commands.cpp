@@ -4,8 +4,10 @@
 #include "app/batch/engines.h"
 #include "app/batch/table_output.h"
 #include "core/trend/conditions.h"
+#include "storage/written_unit.h"
 
 #include <algorithm>
+#include <tuple>
 
 namespace evenstroke::batch {
 namespace {
@@ -15,26 +17,52 @@ using Cell = TableOutput::Cell;
 /// A judged value in the unit it was typed in: `own = scale * typed + shift`.
 struct InTypedUnit
 {
-    double number, raw, scale;
-    Cell point(std::optional<double> own) const { return own ? Cell(number + (*own - raw) / scale) : Cell(); }
+    double scale, shift;
+    Cell point(std::optional<double> own) const { return own ? Cell((*own - shift) / scale) : Cell(); }
     Cell difference(std::optional<double> own) const { return own ? Cell(*own / scale) : Cell(); }
 };
+
+/// As in the file: a plain number has no unit there.
+std::string unit_cell(const Value& typed)
+{
+    const bool bare = typed.unit_typed.empty() && unit(typed.unit).dimension == Dimension::number;
+    return bare ? std::string() : storage::written_unit(typed);
+}
+
+/// All numbers of a reading in walking order; without a judgement those that could not be brought to their
+/// quantity's unit (a volume flow without density), which are shown as typed all the same.
+std::vector<std::pair<std::size_t, const JudgedValue*>> numbers_of(const Reading& reading,
+                                                                   const ReadingJudgement& judged)
+{
+    std::vector<const JudgedValue*> judgement(reading.values.size(), nullptr);
+    for (const JudgedValue& value : judged.values)
+        judgement[value.value_index] = &value;
+    std::vector<std::pair<std::size_t, const JudgedValue*>> numbers;
+    for (std::size_t i = 0; i < reading.values.size(); ++i)
+        if (judgement[i] || (reading.values[i].number && reading.values[i].phase == Phase::reading))
+            numbers.emplace_back(i, judgement[i]);
+    std::stable_sort(numbers.begin(), numbers.end(), [&](const auto& a, const auto& b) {
+        const Value &x = reading.values[a.first], &y = reading.values[b.first];
+        return std::tie(x.quantity, x.place) < std::tie(y.quantity, y.place);
+    });
+    return numbers;
+}
 
 void evaluate_reading(TableOutput& table, const Judgement& judgement, const ReadingJudgement& judged)
 {
     const EngineRecord& record = *judgement.record;
     const Reading& reading = record.readings[judged.reading];
     const Conditions conditions = find_conditions(record.engine, reading);
-    for (const JudgedValue& value : judged.values) {
-        const Value& typed = reading.values[value.value_index];
+    for (const auto& [index, found] : numbers_of(reading, judged)) {
+        const Value& typed = reading.values[index];
         const auto own = own_value(typed, conditions);
-        if (!own || own->scale == 0.0)
-            continue;
-        const InTypedUnit in{*typed.number, own->value, own->scale};
+        const bool usable = found && own && own->scale != 0.0;
+        const InTypedUnit in{usable ? own->scale : 1.0, usable ? own->shift : 0.0};
+        const JudgedValue value = usable ? *found : JudgedValue{};
         table.row({record.vessel.name, record.engine.name, reading.name, utc_text(reading.taken_at.utc),
-                   quantity(value.quantity).name,
-                   typed.place_typed.empty() ? place_cell(record.engine, value.place) : typed.place_typed, typed.typed,
-                   typed.unit_typed.empty() ? std::string(unit(typed.unit).symbol) : typed.unit_typed, in.point(value.corrected), in.point(value.expected),
+                   quantity(typed.quantity).name,
+                   typed.place_typed.empty() ? place_cell(record.engine, typed.place) : typed.place_typed, typed.typed,
+                   unit_cell(typed), in.point(value.corrected), in.point(value.expected),
                    in.difference(value.deviation), in.difference(value.apart), in.difference(value.uncertainty)});
     }
 }

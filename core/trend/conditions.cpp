@@ -69,6 +69,7 @@ std::optional<OwnValue> own_value(const Value& value, const Conditions& conditio
     // The same unit needs no way through SI: the value stays as typed, to the last digit.
     result.value = value.unit == q.unit && shift == 0.0 ? *value.number : own.from_si(*value.value_si * factor + shift);
     result.scale = typed.factor * factor / own.factor;
+    result.shift = (typed.offset * factor + shift - own.offset) / own.factor;
     result.outside_hard = (q.hard.low && result.value < *q.hard.low) || (q.hard.high && result.value > *q.hard.high);
     return result;
 }

@@ -15,6 +15,7 @@ struct OwnValue
 {
     double value = 0.0;
     double scale = 1.0; ///< change of the own value per unit of the typed number
+    double shift = 0.0;
     bool outside_hard = false;
 };
 

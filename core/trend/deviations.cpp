@@ -209,7 +209,10 @@ std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& base
         if (value.corrected && value.expected)
             value.deviation = *value.corrected - *value.expected;
         comparable.emplace_back();
-        if (value.expected)
+        // Where a condition is missing the deviation is not known, and nor is what lies apart in it.
+        if (!value.missing_input.empty())
+            comparable.back() = std::nullopt;
+        else if (value.expected)
             comparable.back() = best - *value.expected;
         else if (!expectation.in_baseline && is_performance(q))
             comparable.back() = best;

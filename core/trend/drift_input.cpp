@@ -8,6 +8,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <set>
+#include <utility>
 
 namespace evenstroke {
 namespace {
@@ -66,9 +68,15 @@ public:
             const auto row_median = is_percent(from) && !baseline_.has(from.quantity)
                                         ? corrected_median(record_.engine, prepared_[i], id)
                                         : std::nullopt;
+            std::set<std::pair<UnitId, PressureKind>> units;
             for (const JudgedValue& value : prepared_[i].values)
-                if (value.quantity == id && value.place.kind == Place::Kind::cylinder)
+                if (value.quantity == id && value.place.kind == Place::Kind::cylinder) {
                     put(channel, i, value, is_percent(from), row_median);
+                    const Value& typed = record_.readings[i].values[value.value_index];
+                    units.emplace(typed.unit, typed.kind);
+                }
+            if (units.size() > 1) // no one unit in which the whole row could have been meant
+                channel.expected_typed[i].reset();
         }
         return channel;
     }

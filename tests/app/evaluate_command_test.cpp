@@ -1,0 +1,135 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// What `evaluate` prints of small hand-made engines (invented numbers).
+#include "app/batch/command.h"
+
+#include <gtest/gtest.h>
+
+#include <QDir>
+#include <QFile>
+#include <QTemporaryDir>
+#include <QTextStream>
+
+using namespace evenstroke;
+
+namespace {
+
+constexpr char engine_json[] = R"({"vessel": "Low Meadow", "engine": "main engine", "cycle": "two-stroke",
+ "cylinders": 4, "bore_mm": 500, "stroke_mm": 2000, "rod_length_mm": 2100, "rated_power_kw": 6000,
+ "rated_speed_rpm": 120, "reference": {"inlet_air_c": 25, "cooler_coolant_c": 25, "barometric_mbar": 1000},
+ "correction": {"compression_pressure": [0.0028, -0.0014]},
+ "baseline": [{"load_percent": 50, "compression_pressure": 80, "exhaust_temperature": 300},
+              {"load_percent": 75, "compression_pressure": 110, "exhaust_temperature": 320},
+              {"load_percent": 100, "compression_pressure": 140, "exhaust_temperature": 360}]})";
+constexpr char head[] = "reading,taken_at,quantity,cylinder,value,unit\n";
+constexpr char conditions[] = "R,2029-01-12T08:30Z,load_percent,,75,%\n"
+                              "R,2029-01-12T08:30Z,cooler_coolant_inlet_temperature,,25,degC\n"
+                              "R,2029-01-12T08:30Z,barometric_pressure,,1000,mbar\n";
+constexpr char air[] = "R,2029-01-12T08:30Z,inlet_air_temperature,,25,degC\n";
+
+class Evaluate : public testing::Test
+{
+protected:
+    QString out(const QString& command, const std::string& rows)
+    {
+        write(QStringLiteral("engine.json"), engine_json);
+        write(QStringLiteral("readings.csv"), head + rows);
+        const QString history = folder_.filePath(QStringLiteral("small.evenstroke"));
+        QFile::remove(history);
+        EXPECT_EQ(run({QStringLiteral("take"), folder_.filePath(QStringLiteral("e")), QStringLiteral("--history"), history}), 0);
+        EXPECT_EQ(run({command, QStringLiteral("--history"), history}), 0);
+        return out_;
+    }
+    /// Cells of the row of a quantity and cylinder, from `value` on; empty when there is none.
+    static QStringList row_of(const QString& table, const QString& quantity, const QString& cylinder)
+    {
+        for (const QString& line : table.split(u'\n'))
+            if (const QStringList cells = line.split(u','); cells.size() == 13 && cells[4] == quantity && cells[5] == cylinder)
+                return cells.mid(6);
+        return {};
+    }
+
+private:
+    int run(const QStringList& arguments)
+    {
+        out_.clear();
+        QString problems;
+        QTextStream out(&out_), err(&problems);
+        batch::Streams streams{out, err, false, false};
+        const int code = batch::run_command_line(arguments, streams);
+        out.flush();
+        err.flush();
+        EXPECT_EQ(code, 0) << problems.toStdString();
+        return code;
+    }
+    void write(const QString& name, const std::string& content)
+    {
+        QDir().mkpath(folder_.filePath(QStringLiteral("e")));
+        QFile file(folder_.filePath(QStringLiteral("e/") + name));
+        ASSERT_TRUE(file.open(QIODevice::WriteOnly));
+        file.write(QByteArray::fromStdString(content));
+    }
+    QTemporaryDir folder_;
+    QString out_;
+};
+
+TEST_F(Evaluate, NamesTheUnitAsInTheFile)
+{
+    const QString table = out(QStringLiteral("evaluate"),
+                              std::string(conditions) + air +
+                                  "R,2029-01-12T08:30Z,compression_pressure,1,111,bar\n"
+                                  "R,2029-01-12T08:30Z,compression_pressure,2,112,bar abs\n"
+                                  "R,2029-01-12T08:30Z,compression_pressure,3,11.2,MPa abs\n"
+                                  "R,2029-01-12T08:30Z,compression_pressure,4,11.1,MPa\n"
+                                  "R,2029-01-12T08:30Z,sea_state,,3,\n");
+    const QString c = QStringLiteral("compression_pressure");
+    EXPECT_EQ(row_of(table, c, QStringLiteral("1")).mid(0, 2), QStringList({QStringLiteral("111"), QStringLiteral("bar")}));
+    EXPECT_EQ(row_of(table, c, QStringLiteral("2")).mid(0, 2), QStringList({QStringLiteral("112"), QStringLiteral("bar abs")}));
+    EXPECT_EQ(row_of(table, c, QStringLiteral("3")).mid(0, 2), QStringList({QStringLiteral("11.2"), QStringLiteral("MPa abs")}));
+    EXPECT_EQ(row_of(table, QStringLiteral("sea_state"), {}).mid(0, 2), QStringList({QStringLiteral("3"), QString()}));
+    // At reference conditions the corrected value is the typed one, and the expected one has the typed kind too:
+    // 110 bar gauge are 111 bar absolute under 1000 mbar. Tolerance: rounding of a double.
+    EXPECT_NEAR(row_of(table, c, QStringLiteral("2"))[2].toDouble(), 112.0, 1e-9);
+    EXPECT_NEAR(row_of(table, c, QStringLiteral("2"))[3].toDouble(), 111.0, 1e-9);
+    EXPECT_NEAR(row_of(table, c, QStringLiteral("3"))[3].toDouble(), 11.1, 1e-9);
+    EXPECT_NEAR(row_of(table, c, QStringLiteral("4"))[4].toDouble(), 0.1, 1e-9);
+}
+
+TEST_F(Evaluate, ShowsANumberThatCannotBeBroughtToItsOwnUnit)
+{
+    const QString table = out(QStringLiteral("evaluate"),
+                              std::string(conditions) + air + "R,2029-01-12T08:30Z,fuel_consumption,,100,l/h\n");
+    EXPECT_EQ(row_of(table, QStringLiteral("fuel_consumption"), {}),
+              QStringList({QStringLiteral("100"), QStringLiteral("l/h"), {}, {}, {}, {}, {}}));
+}
+
+TEST_F(Evaluate, LeavesOpenWhatAMissingConditionLeavesOpen)
+{
+    const QString table = out(QStringLiteral("evaluate"),
+                              std::string(conditions) + "R,2029-01-12T08:30Z,compression_pressure,1,111,bar\n"
+                                                        "R,2029-01-12T08:30Z,compression_pressure,2,112,bar\n");
+    const QStringList row = row_of(table, QStringLiteral("compression_pressure"), QStringLiteral("1"));
+    EXPECT_EQ(row[2], QString()) << "not corrected without the inlet air";
+    EXPECT_EQ(row[3], QStringLiteral("110"));
+    EXPECT_EQ(row[4], QString());
+    EXPECT_EQ(row[5], QString()) << "and nothing lies apart in it";
+}
+
+TEST_F(Evaluate, KeepsTheExpectedValueWhateverWasTyped)
+{
+    const QString table = out(QStringLiteral("evaluate"),
+                              std::string(conditions) + air + "R,2029-01-12T08:30Z,compression_pressure,1,1e17,bar\n");
+    EXPECT_EQ(row_of(table, QStringLiteral("compression_pressure"), QStringLiteral("1"))[3], QStringLiteral("110"));
+}
+
+TEST_F(Evaluate, ARowInSeveralUnitsIsNoUnitSlip)
+{
+    const QString doubts = out(QStringLiteral("doubts"),
+                               std::string(conditions) + air +
+                                   "R,2029-01-12T08:30Z,exhaust_temperature,1,608,degF\n"
+                                   "R,2029-01-12T08:30Z,exhaust_temperature,2,610,degF\n"
+                                   "R,2029-01-12T08:30Z,exhaust_temperature,3,594,K\n"
+                                   "R,2029-01-12T08:30Z,exhaust_temperature,4,321,degC\n");
+    EXPECT_FALSE(doubts.contains(QStringLiteral("unit_slip"))) << doubts.toStdString();
+}
+
+} // namespace
