@@ -14,12 +14,12 @@ namespace evenstroke {
 
 int take_snapshot(Frame& frame, Workplace& workplace, const QString& file)
 {
-    constexpr int quiet_milliseconds = 300, longest_milliseconds = 120'000;
+    constexpr int longest_milliseconds = 120'000;
     frame.show();
     QElapsedTimer all, quiet;
     all.start();
     quiet.start();
-    while (quiet.elapsed() < quiet_milliseconds && all.elapsed() < longest_milliseconds) {
+    while (quiet.elapsed() < snapshot_quiet_milliseconds && all.elapsed() < longest_milliseconds) {
         QApplication::processEvents(QEventLoop::AllEvents, 20);
         QThread::msleep(5);
         if (!workplace.activity().isEmpty())

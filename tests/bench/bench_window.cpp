@@ -7,6 +7,7 @@
 // bench_window [vessels, default 50]
 #include "app/desk/frame.h"
 #include "app/desk/pages.h"
+#include "app/desk/snapshot.h"
 #include "app/desk/theme.h"
 #include "app/desk/workplace.h"
 #include "app/survey/report_maker.h"
@@ -94,9 +95,10 @@ void print_start(const QString& history)
     const double bare = best_of({QStringLiteral("--version")});
     const double start = best_of({history, QStringLiteral("--page"), QStringLiteral("fleet"), QStringLiteral("--snapshot"),
                                   history + QStringLiteral(".png")});
-    std::printf("start to the first page, and its picture saved: %.0f ms, %.1f times of a start that only says its version "
-                "(%.0f ms)\n",
-                start, start / bare, bare);
+    const double waited = snapshot_quiet_milliseconds;
+    std::printf("start to the first page, its picture saved, without the %.0f ms of waiting for it: %.0f ms, %.1f times of a "
+                "start that only says its version (%.0f ms)\n",
+                waited, start - waited, (start - waited) / bare, bare);
 }
 
 void print_pages(const QString& history)

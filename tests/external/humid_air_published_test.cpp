@@ -99,7 +99,8 @@ std::string output_of(const std::string& command)
 // 1e-11, the rounding of two double computations that take their roots in another order.
 TEST(SaturationIndependent, AgreesWithThePythonPackageIapws)
 {
-    const std::string output = output_of("python3 -c \""
+    // Debian's own python, where Debian's package is; another one may stand first on the path.
+    const std::string output = output_of("/usr/bin/python3 -c \""
                                          "from iapws.iapws97 import _PSat_T, _TSat_P\n"
                                          "for i in range(747):\n"
                                          "    t = 273.15 + 0.5 * i\n"

@@ -277,8 +277,9 @@ TEST_F(BadInput, AValueOutsideTheHardRangeIsStoredAsTyped)
                  header + january("maximum_pressure,1,1405,bar") + january("exhaust_temperature,1,-40,degC"));
     const auto history = memory();
     EXPECT_FALSE(take_folder(*history, QStringLiteral("engine")).anything_refused());
-    const Value* const value =
-        find_value(readings_of(*history).front(), "maximum_pressure", Place::cylinder(1));
+    const std::vector<Reading> readings = readings_of(*history);
+    ASSERT_FALSE(readings.empty());
+    const Value* const value = find_value(readings.front(), "maximum_pressure", Place::cylinder(1));
     ASSERT_NE(value, nullptr);
     EXPECT_EQ(value->typed, "1405");
     EXPECT_DOUBLE_EQ(value->value_si.value_or(0.0), 1405e5);
