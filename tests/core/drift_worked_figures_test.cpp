@@ -194,4 +194,13 @@ TEST(WorkedChance, IsOneInSoManyYears)
     EXPECT_LE(years_by_chance(50.0, 8), 1000.0);                  // never claimed to be rarer
 }
 
+TEST(WorkedChance, AgreesWithTheRatesCountedOnSimulatedSoundEngines)
+{
+    // Starts in 2347 years of engines with 7 cylinders on average. Tolerance: the exact 95 % interval of the
+    // count, a factor of 1.2 for 138 starts, 1.26 for 73 and 1.5 for 28; rounding to two digits adds 5 %.
+    EXPECT_NEAR(std::log(years_by_chance(5.0, 7) * 138.0 / 2347.0), 0.0, std::log(1.2) + 0.05);
+    EXPECT_NEAR(std::log(years_by_chance(5.6, 7) * 28.0 / 2347.0), 0.0, std::log(1.5) + 0.05);
+    EXPECT_NEAR(std::log(years_by_chance(5.4, 0) * 73.0 / 2347.0), 0.0, std::log(1.26) + 0.05);
+}
+
 } // namespace
