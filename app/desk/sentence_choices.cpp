@@ -224,9 +224,14 @@ Selection settled(const Selection& selection, const Judgement& judgement)
     if (judgement.trends.empty())
         return result;
     if (!result.quantity) {
+        // Where nothing stands out: a cylinder, rather than the conditions that stand first on the sheet.
+        const auto cylinder = std::find_if(judgement.trends.begin(), judgement.trends.end(), [](const Trend& trend) {
+            return trend.place.kind == Place::Kind::cylinder && trend.level != Level::no_data;
+        });
+        const Trend& quiet = cylinder == judgement.trends.end() ? judgement.trends.front() : *cylinder;
         const std::vector<const Flag*> flags = judgement.standing_flags();
-        result.quantity = flags.empty() ? judgement.trends.front().quantity : flags.front()->quantity;
-        result.place = flags.empty() ? judgement.trends.front().place : flags.front()->subject;
+        result.quantity = flags.empty() ? quiet.quantity : flags.front()->quantity;
+        result.place = flags.empty() ? quiet.place : flags.front()->subject;
     }
     std::vector<Place> places = places_of(judgement, *result.quantity);
     if (places.empty()) {

@@ -14,16 +14,22 @@ namespace evenstroke {
 
 int take_snapshot(Frame& frame, Workplace& workplace, const QString& file)
 {
+    constexpr int fewest_rounds = 12; // on a busy machine one round may take as long as the quiet time
+    int rounds = 0;
     constexpr int longest_milliseconds = 120'000;
     frame.show();
     QElapsedTimer all, quiet;
     all.start();
     quiet.start();
-    while (quiet.elapsed() < snapshot_quiet_milliseconds && all.elapsed() < longest_milliseconds) {
+    while ((quiet.elapsed() < snapshot_quiet_milliseconds || rounds < fewest_rounds)
+           && all.elapsed() < longest_milliseconds) {
         QApplication::processEvents(QEventLoop::AllEvents, 20);
         QThread::msleep(5);
-        if (!workplace.activity().isEmpty())
+        ++rounds;
+        if (!workplace.activity().isEmpty()) {
             quiet.restart();
+            rounds = 0;
+        }
     }
     if (frame.grab().save(file))
         return 0;

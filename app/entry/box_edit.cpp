@@ -16,8 +16,11 @@ void paint_heading(QPainter& painter, const QRect& area, const QModelIndex& inde
 {
     painter.setFont(type(TypeSize::label));
     painter.setPen(theme().muted);
-    painter.drawText(area.adjusted(0, 0, -side_room, -4), Qt::AlignRight | Qt::AlignBottom,
-                     index.data().toString());
+    const QRect room = area.adjusted(0, 0, -side_room, -4);
+    QString words = index.data().toString();
+    if (painter.fontMetrics().horizontalAdvance(words) > room.width())
+        words = words.section(u' ', 0, 0); // narrow columns of many cylinders: "last" for "last time"
+    painter.drawText(room, Qt::AlignRight | Qt::AlignBottom, words);
     painter.setPen(QPen(theme().muted, 1));
     painter.drawLine(area.bottomLeft(), area.bottomRight());
 }
