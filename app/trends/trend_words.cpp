@@ -79,7 +79,11 @@ void add_quiet_words(TrendPicture& picture, const Trend& trend)
         picture.headline = tr_("Still learning what is usual here: %1 of %2 usable readings.").arg(trend.learned).arg(trend.needed);
         break;
     case Level::note: picture.headline = tr_("Further out than usual: look again at the next reading."); break;
-    case Level::no_data: picture.headline = tr_("Too few readings to say anything."); break;
+    case Level::no_data:
+        picture.headline = static_cast<int>(trend.points.size()) >= trend.needed
+                               ? tr_("Shown as it was read: this value is not watched for drift.")
+                               : tr_("Too few readings to say anything.");
+        break;
     default: picture.headline = tr_("Within its usual range.");
     }
     if (has_mark(trend.level))

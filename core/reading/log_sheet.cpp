@@ -3,6 +3,7 @@
 
 #include "core/catalogue_table.h"
 #include "core/catalogue_text.h"
+#include "core/reading/place_kinds.h"
 
 #include <algorithm>
 #include <map>
@@ -19,16 +20,6 @@ struct SectionPlan
     std::vector<Place::Kind> kinds;
     std::vector<QuantityId> quick_line; ///< the quantities of the two quick lines; empty for other sections
 };
-
-Place::Kind place_kind_named(const std::string& name)
-{
-    static const std::map<std::string, Place::Kind> kinds{{"engine", Place::Kind::engine},
-                                                          {"ship", Place::Kind::ship},
-                                                          {"cylinder", Place::Kind::cylinder},
-                                                          {"turbocharger", Place::Kind::turbocharger},
-                                                          {"cooler", Place::Kind::cooler}};
-    return kinds.at(name);
-}
 
 std::vector<SectionPlan> load_plans()
 {

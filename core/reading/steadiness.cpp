@@ -3,6 +3,7 @@
 
 #include "core/catalogue_table.h"
 #include "core/catalogue_text.h"
+#include "core/reading/place_kinds.h"
 #include "core/reading/typed_number.h"
 
 #include <algorithm>
@@ -49,16 +50,6 @@ Criterion::Form form_named(const std::string& name)
         {"walk", Criterion::Form::walk},         {"draughts", Criterion::Form::draughts},
         {"same", Criterion::Form::same}};
     return forms.at(name);
-}
-
-Place::Kind place_kind_named(const std::string& name)
-{
-    static const std::map<std::string, Place::Kind> kinds{{"engine", Place::Kind::engine},
-                                                          {"ship", Place::Kind::ship},
-                                                          {"cylinder", Place::Kind::cylinder},
-                                                          {"turbocharger", Place::Kind::turbocharger},
-                                                          {"cooler", Place::Kind::cooler}};
-    return kinds.at(name);
 }
 
 std::vector<Criterion> load_criteria()

@@ -9,6 +9,7 @@
 #include <gtest/gtest.h>
 
 #include <cmath>
+#include <ostream>
 #include <string>
 #include <vector>
 
@@ -33,6 +34,11 @@ struct FitCase
     Shape shape;
     double shape_squared, projection, strength, size;
 };
+
+void PrintTo(const FitCase& one, std::ostream* out)
+{
+    *out << (one.shape == Shape::step ? "step" : "ramp") << " from reading " << one.onset;
+}
 
 class WorkedFit : public testing::TestWithParam<FitCase>
 {
