@@ -3,6 +3,7 @@
 
 #include "core/catalogue_table.h"
 #include "core/catalogue_text.h"
+#include "core/reading/place_kinds.h"
 
 #include <algorithm>
 #include <numeric>
@@ -11,17 +12,6 @@
 
 namespace evenstroke {
 namespace {
-
-Place::Kind place_kind(const std::string& text)
-{
-    static const std::unordered_map<std::string, Place::Kind> kinds = {
-        {"engine", Place::Kind::engine},
-        {"ship", Place::Kind::ship},
-        {"cylinder", Place::Kind::cylinder},
-        {"turbocharger", Place::Kind::turbocharger},
-        {"cooler", Place::Kind::cooler}};
-    return kinds.at(text);
-}
 
 ValueType value_type(const std::string& text)
 {
@@ -65,7 +55,7 @@ Quantity read_row(const CatalogueTable& table, std::size_t row)
     q.title = table.cell(row, "title");
     q.short_title = table.cell(row, "short_title");
     q.group = table.cell(row, "group");
-    q.per = place_kind(table.cell(row, "per"));
+    q.per = place_kind_named(table.cell(row, "per"));
     q.type = value_type(table.cell(row, "type"));
     q.choices = split_list(table.cell(row, "choices"), '|');
     const Result<WrittenUnit> written = find_unit(table.cell(row, "unit"));
