@@ -4,9 +4,11 @@
 #include "app/batch/engines.h"
 #include "app/batch/table_output.h"
 #include "core/trend/conditions.h"
+#include "core/trend/derived.h"
 #include "storage/written_unit.h"
 
 #include <algorithm>
+#include <cmath>
 #include <tuple>
 
 namespace evenstroke::batch {
@@ -67,6 +69,28 @@ void evaluate_reading(TableOutput& table, const Judgement& judgement, const Read
     }
 }
 
+/// Twelve significant digits: what a computed number can be held to.
+Cell computed(std::optional<double> value)
+{
+    if (!value || *value == 0.0 || !std::isfinite(*value))
+        return TableOutput::number(value);
+    const double scale = std::pow(10.0, 11.0 - std::floor(std::log10(std::abs(*value))));
+    const double rounded = std::round(*value * scale) / scale;
+    return std::isfinite(rounded) ? Cell(rounded) : Cell(*value);
+}
+
+/// The computed quantities of a reading.
+void derive_reading(TableOutput& table, const Judgement& judgement, const ReadingJudgement& judged, const Baseline& baseline)
+{
+    const EngineRecord& record = *judgement.record;
+    const Reading& reading = record.readings[judged.reading];
+    for (const DerivedValue& row : derive(record.engine, baseline, reading))
+        table.row({record.vessel.name, record.engine.name, reading.name, utc_text(reading.taken_at.utc),
+                   std::string(row.quantity), place_cell(record.engine, row.place), computed(row.value),
+                   std::string(row.unit), computed(row.corrected), computed(row.expected), computed(row.deviation), Cell(),
+                   computed(row.uncertainty)});
+}
+
 int with_table(const QCommandLineParser& parser, Streams& streams, std::vector<std::string> header,
                const std::function<void(TableOutput&, const Judgement&)>& rows)
 {
@@ -92,10 +116,7 @@ int with_table(const QCommandLineParser& parser, Streams& streams, std::vector<s
 
 int run_evaluate(const QCommandLineParser& parser, Streams& streams)
 {
-    if (parser.isSet(QStringLiteral("derived"))) {
-        streams.err << "--derived is not in this version yet. Leave it out.\n";
-        return wrong_use;
-    }
+    const bool derived = parser.isSet(QStringLiteral("derived"));
     const QString wanted = parser.value(QStringLiteral("reading"));
     bool found = wanted.isEmpty();
     const int code = with_table(
@@ -103,11 +124,14 @@ int run_evaluate(const QCommandLineParser& parser, Streams& streams)
         {"vessel", "engine", "reading", "taken_at", "quantity", "cylinder", "value", "unit", "corrected", "expected",
          "deviation", "apart", "uncertainty"},
         [&](TableOutput& table, const Judgement& judgement) {
+            const Baseline baseline(judgement.record->engine);
             for (const ReadingJudgement& reading : judgement.readings)
                 if (wanted.isEmpty() ||
                     QString::fromStdString(judgement.record->readings[reading.reading].name) == wanted) {
                     found = true;
                     evaluate_reading(table, judgement, reading);
+                    if (derived)
+                        derive_reading(table, judgement, reading, baseline);
                 }
         });
     if (code == done && !found) {
