@@ -43,11 +43,16 @@ double flux_ratio_of(const Numbers& x)
     return x[film_ratio] * (x[gas] - wall_kelvin(x)) / (x[baseline_gas] - x[baseline_wall]);
 }
 
-struct PlainInputs
+using PlainInputs = std::array<UncertainInput, inputs_count>;
+
+Numbers numbers_of(const PlainInputs& plain)
 {
-    Numbers value{};
-    std::array<std::optional<double>, inputs_count> uncertainty;
-};
+    Numbers numbers{};
+    for (std::size_t i = 0; i < inputs_count; ++i) {
+        numbers[i] = plain[i].value;
+    }
+    return numbers;
+}
 
 template <typename Uncertain>
 bool take(PlainInputs& plain, Input which, const std::optional<Uncertain>& input)
@@ -56,14 +61,15 @@ bool take(PlainInputs& plain, Input which, const std::optional<Uncertain>& input
         return false;
     }
     if constexpr (std::is_same_v<Uncertain, UncertainTemperature>) {
-        plain.value[which] = input->value.value();
-        if (input->uncertainty) {
-            plain.uncertainty[which] = input->uncertainty->value();
+        plain[which].value = input->value.value();
+        if (input->half_width) {
+            plain[which].half_width = input->half_width->value();
         }
     } else {
-        plain.value[which] = input->value;
-        plain.uncertainty[which] = input->uncertainty;
+        plain[which].value = input->value;
+        plain[which].half_width = input->half_width;
     }
+    plain[which].instrument = input->instrument;
     return true;
 }
 
@@ -84,13 +90,13 @@ Result<PlainInputs> read_inputs(const HottestPointInputs& inputs)
             return Problem{Problem::Kind::not_found, "The " + name + " is not known.",
                            "Enter the " + name + "."};
         }
-        if (plain.uncertainty[i] && !(*plain.uncertainty[i] >= 0.0 && std::isfinite(*plain.uncertainty[i]))) {
-            return invalid_input("The uncertainty of the " + name + " is " +
-                                     short_number_text(*plain.uncertainty[i]) + ", and it cannot be below 0.",
-                                 "Check the uncertainty, or leave it empty.");
+        if (plain[i].half_width && !(*plain[i].half_width >= 0.0 && std::isfinite(*plain[i].half_width))) {
+            return invalid_input("The half-width of the " + name + " is " +
+                                     short_number_text(*plain[i].half_width) + ", and it cannot be below 0.",
+                                 "Check the half-width, or leave it empty.");
         }
-        if (i != film_ratio && !(plain.value[i] >= 273.0 && plain.value[i] <= 3000.0)) {
-            return invalid_input("The " + name + " is " + short_number_text(plain.value[i] - 273.15) +
+        if (i != film_ratio && !(plain[i].value >= 273.0 && plain[i].value <= 3000.0)) {
+            return invalid_input("The " + name + " is " + short_number_text(plain[i].value - 273.15) +
                                      " °C, which is not from 0 to 2727 °C.",
                                  "Check the " + name + " and its unit.");
         }
@@ -130,21 +136,30 @@ std::optional<Problem> find_problem(const Numbers& x)
     return find_ratio_problem(flux_ratio_of(x), "heat flux");
 }
 
-/// Linear propagation; the step is a thousandth of the input's uncertainty.
-double standard_uncertainty(const PlainInputs& plain)
+/// Half-width from what each input adds by itself, those of one instrument with their signs first.
+double half_width_of(const PlainInputs& plain, const std::vector<double>& parts)
 {
-    double sum = 0.0;
+    double squares = 0.0;
     for (std::size_t i = 0; i < inputs_count; ++i) {
-        const double u = plain.uncertainty[i].value_or(0.0);
-        if (u > 0.0) {
-            Numbers above = plain.value, below = plain.value;
-            above[i] += 1e-3 * u;
-            below[i] -= 1e-3 * u;
-            const double change = (wall_kelvin(above) - wall_kelvin(below)) / 2e-3;
-            sum += change * change;
+        double slip = parts[i];
+        bool counted = false;
+        for (std::size_t k = 0; plain[i].instrument != UncertainInput::own && k < inputs_count; ++k) {
+            if (k != i && plain[k].instrument == plain[i].instrument) {
+                slip += parts[k];
+                counted = counted || k < i;
+            }
         }
+        squares += counted ? 0.0 : slip * slip;
     }
-    return std::sqrt(sum);
+    return std::sqrt(squares);
+}
+
+/// The hottest point as a formula of plain numbers, for the propagation.
+std::optional<double> wall_formula(std::span<const double> x)
+{
+    Numbers numbers{};
+    std::copy(x.begin(), x.end(), numbers.begin());
+    return wall_kelvin(numbers);
 }
 
 } // namespace
@@ -155,17 +170,18 @@ Result<HottestPoint> hottest_point(const HottestPointInputs& inputs)
     if (!plain) {
         return plain.error();
     }
-    if (auto problem = find_problem(plain.value().value)) {
+    const Numbers numbers = numbers_of(plain.value());
+    if (auto problem = find_problem(numbers)) {
         return *std::move(problem);
     }
     HottestPoint point;
-    point.wall = Temperature::from_value(wall_kelvin(plain.value().value));
-    point.flux_ratio = flux_ratio_of(plain.value().value);
-    const auto known = [](const std::optional<double>& u) { return u.has_value(); };
-    const auto& uncertainty = plain.value().uncertainty;
-    point.uncertainty_complete = std::all_of(uncertainty.begin(), uncertainty.end(), known);
-    if (std::any_of(uncertainty.begin(), uncertainty.end(), known)) {
-        point.uncertainty = kelvin_difference(standard_uncertainty(plain.value()));
+    point.wall = Temperature::from_value(wall_kelvin(numbers));
+    point.flux_ratio = flux_ratio_of(numbers);
+    const auto known = [](const UncertainInput& input) { return input.half_width.has_value(); };
+    point.half_width_complete = std::all_of(plain.value().begin(), plain.value().end(), known);
+    const std::optional<Propagated> moved = propagate(plain.value(), wall_formula);
+    if (moved && std::any_of(plain.value().begin(), plain.value().end(), known)) {
+        point.half_width = kelvin_difference(half_width_of(plain.value(), moved->parts));
     }
     return point;
 }
@@ -205,12 +221,12 @@ std::string limits_text(const WallLimits& limits)
 
 WallWarning judge_wall(const HottestPoint& point, const WallLimits& limits)
 {
-    const double width = point.uncertainty ? 2.0 * point.uncertainty->value() : 0.0;
+    const double width = point.half_width ? point.half_width->value() : 0.0;
     const std::string estimate =
         "The hottest point is estimated at " + short_number_text(std::round(in_celsius(point.wall))) + " °C" +
-        (point.uncertainty ? std::string(point.uncertainty_complete ? " ± " : " ± at least ") +
-                                 short_number_text(std::ceil(width)) + " °C"
-                           : " (uncertainty not known)");
+        (point.half_width ? std::string(point.half_width_complete ? " ± " : " ± at least ") +
+                                short_number_text(std::ceil(width)) + " °C"
+                          : " (uncertainty not known)");
     if (limits.highest && point.wall.value() + width > limits.highest->value()) {
         const bool sure = point.wall.value() - width > limits.highest->value();
         return {sure ? WallVerdict::too_hot : WallVerdict::may_be_too_hot,

@@ -2,6 +2,7 @@
 #pragma once
 
 #include "core/problem.h"
+#include "core/uncertainty.h"
 #include "core/units/heat_types.h"
 
 #include <optional>
@@ -17,11 +18,13 @@
 /// are those of the baseline: with T_inner known from outside, a difference to this estimate tells of them.
 namespace evenstroke {
 
-/// A value with its standard uncertainty, where it has one.
+/// A value with its half-width at 95 %, where it has one.
 template <typename Quantity, typename Difference = Quantity> struct WithUncertainty
 {
     Quantity value{};
-    std::optional<Difference> uncertainty; ///< standard, of one deviation
+    std::optional<Difference> half_width;
+    int instrument =
+        UncertainInput::own; ///< inputs of one instrument share its number, and its one unknown slip
 };
 using UncertainTemperature = WithUncertainty<Temperature, TemperatureDifference>;
 
@@ -37,10 +40,9 @@ struct HottestPoint
 {
     Temperature wall{};
     double flux_ratio = 1.0; ///< q / q_base
-    /// Standard, from the inputs that have one (JCGM 100, linear, inputs independent; derivatives by central
-    /// difference through the same equation). Empty where no input has one.
-    std::optional<TemperatureDifference> uncertainty;
-    bool uncertainty_complete = false; ///< every input had one; else say "at least"
+    /// At 95 %, from the inputs that have one (uncertainty.h). Empty where no input has one.
+    std::optional<TemperatureDifference> half_width;
+    bool half_width_complete = false; ///< every input had one; else say "at least"
 };
 
 /// Validity: coolant below wall below gas in the baseline, gas above coolant now; temperatures 273 to 3000 K;
@@ -48,7 +50,7 @@ struct HottestPoint
 ///   practice). The wall's own conductivity is taken as constant.
 /// @par Problems not_found: an input is missing, or a ratio lies outside the validity; invalid_input: an
 /// input
-///      cannot be, or an uncertainty is negative
+///      cannot be, or a half-width is negative
 Result<HottestPoint> hottest_point(const HottestPointInputs& inputs);
 
 /// The first equation alone, where the flux ratio comes from elsewhere. @par Problems as hottest_point
@@ -67,7 +69,7 @@ struct WallLimits
 
 enum class WallVerdict { too_cold, may_be_too_cold, within, may_be_too_hot, too_hot, no_limits };
 
-/// Against the limits, the hot side first, with twice the standard uncertainty on either side ("may be").
+/// Against the limits, the hot side first, with the half-width on either side ("may be").
 struct WallWarning
 {
     WallVerdict verdict = WallVerdict::within;
