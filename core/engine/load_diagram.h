@@ -63,9 +63,9 @@ class LoadDiagram
 {
 public:
     /// @par Problems not_found: rated power or speed is 0, so not entered; the torque limit's exponent
-    /// without
-    ///      its speed; invalid_input: a number that cannot be: f and c 0.5 to 1.5, k 1 to 4, x_1 0.3 to 1.2,
-    ///      x_max 1 to 1.3, y_over 1 to 1.3, m -0.1 to 0.3 (wider than any maker's; common practice)
+    ///      without its speed; invalid_input: a number that cannot be: f and c 0.5 to 1.5, k 1 to 4,
+    ///      x_1 0.3 to 1.2, x_max 1 to 1.3, y_over 1 to 1.3, m -0.1 to 0.3 (wider than any maker's; common
+    ///      practice)
     static Result<LoadDiagram> make(Power rated_power, Frequency rated_speed, const LoadLimits& limits);
 
     /// Distances in per cent of rated power: at the same speed for limits of power; for the speed limit,

@@ -9,8 +9,7 @@
 
 /// The mean gas film and gas temperature from a card: what a wall chain takes when there is one.
 ///
-/// Only the part of the cycle with the cylinder closed can be worked out: there the mass is known to stay,
-/// and
+/// Only the part of the cycle with the cylinder closed can be worked out: there the mass is known, so that
 ///     T = T_1 p V / (p_1 V_1)
 /// by the ideal gas with an unchanged gas constant (the fuel's mass and dissociation left out: 2 to 3 % too
 /// hot after combustion, from memory). The mean is over this part, and its angle is given with it. For ratios

@@ -30,8 +30,7 @@ Result<double> reynolds_number(const LiquidProperties& liquid, Velocity velocity
 /// @param diameter hydraulic: 4 x area / wetted edge
 /// @par Problems not_found: Re or Pr outside the validity; as reynolds_number
 /// @par Source F. W. Dittus, L. M. K. Boelter (1930); constants and limits of Incropera and DeWitt,
-/// Fundamentals
-///      of Heat and Mass Transfer, chapter 8 (limits from memory)
+///      Fundamentals of Heat and Mass Transfer, chapter 8 (limits from memory)
 Result<HeatTransferCoefficient> dittus_boelter_film(const LiquidProperties& liquid, Velocity velocity,
                                                     Length diameter);
 
@@ -74,8 +73,7 @@ struct BoilingProperties
 /// the critical flux may be passed). A result within a factor 2, since C_sf goes in by its cube.
 /// @param gravity 9.80665 m/s² unless a published example has another
 /// @par Problems not_found: superheat above 30 K; invalid_input: a property not above 0, the steam not
-/// lighter
-///      than the liquid, superheat negative
+///      lighter than the liquid, superheat negative
 /// @par Source W. M. Rohsenow (1952), in the form of any textbook
 Result<HeatFlux> rohsenow_flux(const BoilingProperties& water, TemperatureDifference superheat,
                                double gravity = 9.80665);

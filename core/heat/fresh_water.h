@@ -13,8 +13,7 @@ namespace evenstroke {
 /// Prandtl number. No additives: glycol or an inhibitor in more than traces changes all four.
 /// @par Problems not_found: outside 10 to 110 °C
 /// @par Source viscosity and conductivity: IAPWS SR6-08(2011), equations 7 and 8 (0.1 MPa); density: G. S.
-/// Kell,
-///      J. Chem. Eng. Data 20 (1975) 97 (constants from memory, checked against IF97); specific heat: a
+///      Kell, J. Chem. Eng. Data 20 (1975) 97 (constants from memory, checked against IF97); specific heat: a
 ///      polynomial fitted here to IF97 at 4 bar abs
 Result<LiquidProperties> fresh_water(Temperature temperature);
 

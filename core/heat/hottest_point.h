@@ -49,8 +49,7 @@ struct HottestPoint
 ///   film ratio 0.2 to 5 and flux ratio 0.2 to 5 (further from the baseline a ratio says little; common
 ///   practice). The wall's own conductivity is taken as constant.
 /// @par Problems not_found: an input is missing, or a ratio lies outside the validity; invalid_input: an
-/// input
-///      cannot be, or a half-width is negative
+///      input cannot be, or a half-width is negative
 Result<HottestPoint> hottest_point(const HottestPointInputs& inputs);
 
 /// The first equation alone, where the flux ratio comes from elsewhere. @par Problems as hottest_point

@@ -45,8 +45,7 @@ template <typename Flow> struct Conduction
 
 /// @param layers one or more, each of positive thickness, conductivity above 0
 /// @par Problems not_found: the temperature of a side is missing; invalid_input: no layer, a size,
-/// conductivity
-///      or film that is not above 0, a temperature not above absolute zero (the layer or side is named)
+///      conductivity or film that is not above 0, a temperature not above absolute zero (each named)
 Result<Conduction<HeatFlux>> conduct_plane(const WallSide& first, const std::vector<PlaneLayer>& layers,
                                            const WallSide& last);
 

@@ -59,19 +59,17 @@ struct WallTemperatures
     Temperature outer_wall{};      ///< metal, coolant side
     Temperature wetted_surface{};  ///< what the coolant touches; the outer wall where there is no scale
     std::optional<Temperature> saturation;   ///< of the coolant at its pressure
-    std::optional<BoilingStatement> boiling; ///< empty: the coolant's pressure is not known
+    std::optional<BoilingStatement> boiling; ///< empty: needs the coolant's pressure
     bool boiling_carries_heat = false;       ///< boiling takes more than convection would at this surface
     bool boiling_extrapolated = false;       ///< and that by a formula used below its 7 bar abs
 };
 
 /// Works the chain out.
-/// Validity: gas hotter than coolant; gas 0 to 2700 °C and coolant 0 to 220 °C; a film of 1 to 1e6 W/(m²
-/// K);
-///   a slab up to 1 m thick with 0.01 to 500 W/(m K) (bounds of what can be an engine; common practice). With
-///   a pressure of the coolant: 1 to 172 bar abs, coolant not above its saturation.
+/// Validity: gas hotter than coolant; gas 0 to 2700 °C and coolant 0 to 220 °C; a film of 1 to 1e6
+///   W/(m² K); a slab up to 1 m thick with 0.01 to 500 W/(m K) (bounds of what can be an engine; common
+///   practice). With a pressure of the coolant: 1 to 172 bar abs, coolant not above its saturation.
 /// @par Problems not_found: an input that is missing, or a state outside the validity; invalid_input: an
-/// input
-///      that cannot be. Each is named.
+///      input that cannot be. Each is named.
 Result<WallTemperatures> work_out_wall(const WallChain& chain);
 
 /// One part of the chain as the thickness of cast iron that would hinder the heat as much: λ_iron / h of a
