@@ -73,7 +73,6 @@ Workplace::Workplace(QObject* parent) : QObject(parent), state_(std::make_unique
         if (state_->history)
             state_->sort_fleet(state_->history->now());
         emit fleet_changed();
-        settle_on_worst();
     });
 }
 
@@ -205,6 +204,7 @@ void Workplace::take_outcome(const JudgingOutcome& outcome)
                 row.out_of_date = false;
             }
     }
+    settle_on_worst();
     if (!state_->fleet_delay.isActive())
         state_->fleet_delay.start();
     emit judgement_ready(outcome.engine_id);

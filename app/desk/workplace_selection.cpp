@@ -19,6 +19,8 @@ void Workplace::select(const Selection& selection) { open_page(page(), selection
 void Workplace::step_to(const Selection& selection)
 {
     const Whereabouts before = state_->trail.here();
+    // A page fills in its first quantity by itself; whatever comes after that was somebody's wish.
+    state_->nobody_chose = state_->nobody_chose && !before.selection.quantity;
     state_->trail.step({before.page, selection});
     announce(before.page, before.selection);
 }
@@ -81,6 +83,7 @@ void Workplace::settle_on_worst()
         || std::any_of(state_->fleet.begin(), state_->fleet.end(), waiting))
         return;
     state_->nobody_chose = false;
+    state_->sort_fleet(state_->history->now());
     Selection worst;
     worst.vessel = state_->fleet.front().vessel_id;
     worst.engine = state_->fleet.front().engine_id;
