@@ -44,7 +44,7 @@ std::string change_text(const MovedQuantity& moved, bool ramp, bool first)
     if (ramp)
         return std::string(first ? (up ? " has risen " : " has fallen ") : (up ? " up " : " down ")) +
                amount_text(moved) + " a month";
-    return std::string(first ? (up ? " stands " : " stands ") : " ") + amount_text(moved) + (up ? " higher" : " lower");
+    return std::string(first ? " stands " : " ") + amount_text(moved) + (up ? " higher" : " lower");
 }
 
 bool in_baseline(const Engine& engine, const std::string& name)

@@ -81,7 +81,6 @@ struct CellsOfTrend
 {
     std::vector<const drift::CellResult*> at; ///< one a reading
     bool percent = false;
-    bool engine_cells = false; ///< the engine's channel holds values
 };
 
 CellsOfTrend find_cells(const Trend& trend, const drift::Input& input, const drift::Output& output)
@@ -105,8 +104,6 @@ CellsOfTrend find_cells(const Trend& trend, const drift::Input& input, const dri
             continue;
         for (std::size_t i = 0; i < readings; ++i)
             found.at.push_back(&output.engine_cells[k][i]);
-        for (const drift::Cell& cell : input.engine_channels[k].cells)
-            found.engine_cells = found.engine_cells || cell.present;
         const auto* channel = drift::find_channel(input.engine_channels[k].quantity, drift::Subject::engine);
         found.percent = channel && channel->form == drift::DeviationForm::percent;
     }
@@ -131,7 +128,7 @@ std::optional<std::size_t> standing_onset(const Judgement& judgement, const Tren
 /// hardly depends on the load) is compared with its own usual level.
 bool judged_by_own_level(const Trend& trend, const CellsOfTrend& cells)
 {
-    return trend.place.kind != Place::Kind::cylinder && cells.engine_cells
+    return trend.place.kind != Place::Kind::cylinder && !cells.at.empty()
            && std::none_of(trend.points.begin(), trend.points.end(), [](const TrendPoint& point) { return point.expected; });
 }
 
