@@ -12,6 +12,9 @@
 /// What every formula asks of its inputs before it works: that they are there, and that they can be.
 namespace evenstroke {
 
+/// A number, and above zero.
+inline bool is_positive(double value) { return value > 0.0 && std::isfinite(value); }
+
 /// "3.5 bar abs", "-5 °C": a number in the trade's unit, as a sentence holds it.
 std::string shown(Ratio ratio); ///< bare
 std::string shown(Length length);

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/engine/engine.h"
 
+#include "core/input_check.h"
+
 #include <charconv>
 #include <cmath>
 
@@ -13,8 +15,6 @@ std::string number_text(double value)
     const auto end = std::to_chars(buffer, buffer + sizeof buffer, value, std::chars_format::general, 6).ptr;
     return {buffer, end};
 }
-
-bool positive(double value) { return std::isfinite(value) && value > 0.0; }
 
 /// Largest engines built have 14 cylinders in line and 20 in vee; four times that is a slip of the pen.
 constexpr int most_cylinders = 80;
@@ -32,7 +32,7 @@ std::optional<Problem> find_size_problem(const Engine& engine)
                  {"rated_power", engine.rated_power.value() / 1000.0, "kW"},
                  {"rated_speed", engine.rated_speed.value() * 60.0, "r/min"}};
     for (const auto& size : sizes)
-        if (!positive(size.value))
+        if (!is_positive(size.value))
             return invalid_input(std::string("The engine's ") + size.name + " is " + number_text(size.value) + " " +
                                      size.unit + ", which cannot be.",
                                  "Give a number above zero.");

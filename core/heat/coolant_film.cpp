@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/heat/coolant_film.h"
 
+#include "core/input_check.h"
 #include "core/plain_text.h"
 
 #include <cmath>
@@ -14,11 +15,6 @@ namespace {
 constexpr double lowest_boiling = 1.0, fitted_from = 7.0, highest_boiling = 172.0; // bar abs
 constexpr double highest_flux = 12.5;                                              // MW/m²
 constexpr double largest_superheat = 47.0;                                         // K: 25 x 12.5^(1/4)
-
-bool is_positive(double value)
-{
-    return value > 0.0 && std::isfinite(value);
-}
 
 std::optional<Problem> find_not_positive(double value, const std::string& what, const std::string& unit)
 {

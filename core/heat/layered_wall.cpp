@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/heat/layered_wall.h"
 
+#include "core/input_check.h"
 #include "core/plain_text.h"
 
 #include <cmath>
@@ -10,11 +11,6 @@ namespace evenstroke {
 namespace {
 
 constexpr double pi = 3.14159265358979323846;
-
-bool is_positive(double value)
-{
-    return value > 0.0 && std::isfinite(value);
-}
 
 std::optional<Problem> find_problem(const WallSide& side, const std::string& which)
 {

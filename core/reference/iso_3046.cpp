@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/reference/iso_3046.h"
 
+#include "core/input_check.h"
 #include "core/plain_text.h"
 
 #include <cmath>
@@ -10,11 +11,6 @@ namespace evenstroke {
 namespace {
 
 constexpr double smallest_k = 0.6, largest_k = 1.1; // common practice
-
-bool is_positive(double number)
-{
-    return number > 0.0 && std::isfinite(number);
-}
 
 Problem not_read(const std::string& what)
 {
