@@ -2,6 +2,7 @@
 #include "storage/value_reader.h"
 
 #include "core/plain_text.h"
+#include "core/reading/fitting_unit.h"
 
 #include <algorithm>
 
@@ -51,11 +52,20 @@ bool names_choice(std::string_view text, const std::string& choice)
            std::string_view(" ,;:(").find(text[choice.size()]) != std::string_view::npos;
 }
 
-/// Litres of fuel become kilograms with the density, later; everything else must measure the same.
-bool may_be_written_in(const Quantity& q, Dimension dimension)
+/// A trend stays in the unit of its baseline, which is the quantity's own: rack millimetres are no per cent.
+std::optional<RowProblem> differs_from_baseline(const Engine* engine, const Quantity& q,
+                                                std::string_view unit_typed)
 {
-    const Dimension own = unit(q.unit).dimension;
-    return own == dimension || (own == Dimension::mass_flow && dimension == Dimension::volume_flow);
+    const bool has_baseline =
+        engine && std::any_of(engine->baseline.begin(), engine->baseline.end(),
+                              [&](const BaselinePoint& point) { return point.values.count(q.name) > 0; });
+    if (!has_baseline)
+        return std::nullopt;
+    const std::string usual(unit(q.unit).symbol);
+    return RowProblem{std::string(unit_typed),
+                      "The engine's baseline has " + q.name + " in " + usual + ", and " +
+                          evenstroke::quoted(unit_typed) + " cannot be compared with it.",
+                      "Write it in " + usual + ", or leave " + q.name + " out of the baseline."};
 }
 
 } // namespace
@@ -185,15 +195,16 @@ std::optional<RowProblem> ValueReader::read_number(const ValueTexts& texts, cons
         return RowProblem{std::string(texts.value),
                           "The value " + evenstroke::quoted(texts.value) + " of " + q.name + " has no unit.",
                           "Write its unit, such as " + std::string(usual) + "."};
-    if (!may_be_written_in(q, unit(written.id).dimension))
+    if (!may_be_written_in(q, written.id)) // with the unit as it was typed, where nobody knows it otherwise
         return RowProblem{std::string(texts.unit),
                           evenstroke::quoted(texts.unit) + " is no unit of " + q.name + ".",
-                          "Write a unit of " + std::string(dimension_text(unit(q.unit).dimension)) +
-                              ", such as " + std::string(usual) + "."};
-    if (q.kind == PressureKind::difference && written.kind == PressureKind::absolute)
-        return RowProblem{std::string(texts.unit),
-                          q.name + " is a difference of pressures and cannot be absolute.",
-                          "Write " + std::string(unit(written.id).symbol) + " alone."};
+                          find_unit_problem(q, written)->what_to_do};
+    if (const auto misfit = find_unit_problem(q, written))
+        return problem_of(texts.unit, *misfit);
+    const Dimension dimension = unit(written.id).dimension;
+    if (!converts_by_si(q, dimension) && unit(q.unit).dimension != Dimension::mass_flow)
+        if (auto misfit = differs_from_baseline(engine_, q, texts.unit))
+            return misfit;
     if (written.kind == PressureKind::none)
         written.kind = q.kind;
     const auto number = parse_number(texts.value);

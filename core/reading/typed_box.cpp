@@ -2,6 +2,7 @@
 #include "core/reading/typed_box.h"
 
 #include "core/plain_text.h"
+#include "core/reading/fitting_unit.h"
 #include "core/reading/typed_number.h"
 
 #include <algorithm>
@@ -119,12 +120,6 @@ std::string_view number_part(std::string_view text)
     return {};
 }
 
-bool measures_the_same(Dimension wanted, Dimension written)
-{
-    // A volume flow becomes a mass flow with the density that stands in the same reading.
-    return wanted == written || (wanted == Dimension::mass_flow && written == Dimension::volume_flow);
-}
-
 Result<Value> read_number(Value value, std::string_view text, WrittenUnit row_unit)
 {
     const Quantity& meant = quantity(value.quantity);
@@ -148,12 +143,14 @@ Result<Value> read_number(Value value, std::string_view text, WrittenUnit row_un
             return found.error();
         written = found.value();
         const Dimension dimension = unit(written.id).dimension, wanted = unit(meant.unit).dimension;
-        if (!measures_the_same(wanted, dimension))
+        if (!may_be_written_in(meant, written.id))
             return invalid_input(
                 std::string(unit(written.id).symbol) + " measures " + std::string(dimension_text(dimension)) +
                     ", but " + lowered(meant.title) + " is a " + std::string(dimension_text(wanted)) + ".",
                 "Write the number alone, or with a unit such as " + std::string(unit(meant.unit).symbol) +
                     ".");
+        if (auto problem = find_unit_problem(meant, written))
+            return std::move(*problem);
     }
     if (written.kind == PressureKind::none)
         written.kind = meant.kind;
@@ -280,16 +277,14 @@ std::vector<WrittenUnit> possible_units(QuantityId quantity_id)
     if (meant.type != ValueType::number)
         return units;
     const Dimension dimension = unit(meant.unit).dimension;
-    const bool has_level = meant.kind == PressureKind::gauge || meant.kind == PressureKind::absolute;
     const auto count = static_cast<UnitId>(all_units().size());
     for (UnitId id = 0; id < count; ++id)
-        if (id != meant.unit && measures_the_same(dimension, unit(id).dimension) &&
-            dimension != Dimension::number)
+        if (id != meant.unit && may_be_written_in(meant, id) && dimension != Dimension::number)
             units.push_back({id, meant.kind});
-    if (has_level)
+    // The barometer, the one absolute quantity, has no gauge.
+    if (meant.kind == PressureKind::gauge)
         for (std::size_t i = 0, own_kind = units.size(); i < own_kind; ++i)
-            units.push_back({units[i].id, meant.kind == PressureKind::gauge ? PressureKind::absolute
-                                                                            : PressureKind::gauge});
+            units.push_back({units[i].id, PressureKind::absolute});
     return units;
 }
 

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/reading/typed_number.h"
 
+#include "core/reading/fitting_unit.h"
+
 #include <charconv>
 #include <cmath>
 
@@ -39,6 +41,8 @@ std::optional<double> number_in_own_unit(const Value& value, std::optional<Absol
         return std::nullopt;
     const Quantity& meant = quantity(value.quantity);
     const Unit& own = unit(meant.unit);
+    if (!converts_by_si(meant, unit(value.unit).dimension))
+        return std::nullopt;
     const bool has_level = meant.kind == PressureKind::gauge || meant.kind == PressureKind::absolute;
     if (!has_level || value.kind == PressureKind::none)
         return own.from_si(*value.value_si);

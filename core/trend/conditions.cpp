@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/trend/conditions.h"
 
+#include "core/reading/fitting_unit.h"
 #include "core/reference/fuel.h"
 
 #include <cmath>
@@ -63,12 +64,14 @@ std::optional<OwnValue> own_value(const Value& value, const Conditions& conditio
         if (!density)
             return std::nullopt;
         factor = *density;
+    } else if (!converts_by_si(q, typed.dimension)) {
+        return std::nullopt; // rack millimetres are no per cent
     }
     OwnValue result;
     const double shift = kind_shift_si(value.kind, q.kind, conditions.barometer_or_one_bar());
     // The same unit needs no way through SI: the value stays as typed, to the last digit.
     result.value = value.unit == q.unit && shift == 0.0 ? *value.number : own.from_si(*value.value_si * factor + shift);
-    result.scale = typed.factor * factor / own.factor;
+    result.scale = typed.dimension == Dimension::wind_force ? 0.0 : typed.factor * factor / own.factor;
     result.shift = (typed.offset * factor + shift - own.offset) / own.factor;
     result.outside_hard = (q.hard.low && result.value < *q.hard.low) || (q.hard.high && result.value > *q.hard.high);
     return result;

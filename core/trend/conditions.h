@@ -14,7 +14,7 @@ namespace evenstroke {
 struct OwnValue
 {
     double value = 0.0;
-    double scale = 1.0; ///< change of the own value per unit of the typed number
+    double scale = 1.0; ///< change of the own value per unit of the typed number; 0 where no straight line leads there (wind force)
     double shift = 0.0;
     bool outside_hard = false;
 };

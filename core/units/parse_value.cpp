@@ -58,6 +58,20 @@ bool goes_on_as_number(std::string_view rest)
     return !rest.empty() && rest[0] >= '0' && rest[0] <= '9' && !(rest.starts_with("1/") || rest == "1");
 }
 
+/// No barometer on earth stood higher (record extremes from memory: 1085 hPa): what a gauge shows below minus
+/// this is less than nothing.
+constexpr double highest_barometer = 1.1e5; // Pa
+constexpr double highest_wind_force = 12.0; // Beaufort; beyond it the scale has no speeds at sea
+
+Problem below_vacuum(double number, WrittenUnit written)
+{
+    const double limit = unit(written.id).from_si(-1e5);
+    return invalid_input(
+        value_text(number, {written.id, PressureKind::gauge}) + " is below a perfect vacuum (about " +
+            value_text(std::round(limit * 1e4) / 1e4, {written.id, PressureKind::gauge}) + ").",
+        "Check the sign and the unit.");
+}
+
 Problem below_absolute_zero(double number, WrittenUnit written)
 {
     const bool temperature = unit(written.id).dimension == Dimension::temperature;
@@ -76,9 +90,16 @@ Result<double> to_si_checked(double number, WrittenUnit written)
     const Unit& in = unit(written.id);
     const double value_si =
         written.kind == PressureKind::difference ? in.difference_to_si(number) : in.to_si(number);
+    if (in.dimension == Dimension::wind_force && !(number >= 0.0 && number <= highest_wind_force)) {
+        return invalid_input("The wind force " + number_text(number) + " is not on the Beaufort scale.",
+                             "Write a force from 0 to 12, or the wind in m/s or kn.");
+    }
     if (!std::isfinite(value_si)) {
         return invalid_input("A value in " + std::string(in.symbol) + " is not a finite number.",
                              "Type the number as the instrument shows it.");
+    }
+    if (written.kind == PressureKind::gauge && value_si < -highest_barometer) {
+        return below_vacuum(number, written);
     }
     const bool has_zero = in.dimension == Dimension::temperature || written.kind == PressureKind::absolute;
     if (has_zero && value_si < 0.0) {

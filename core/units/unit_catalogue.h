@@ -5,6 +5,7 @@
 
 #include <algorithm>
 #include <array>
+#include <cmath>
 #include <initializer_list>
 #include <span>
 #include <string>
@@ -31,6 +32,7 @@ enum class Dimension {
     angle,
     duration,
     velocity,
+    wind_force,           ///< Beaufort: becomes a velocity by a curve, no factor
     density,
     viscosity,
     mass,
@@ -58,7 +60,7 @@ private:
     std::size_t count_ = 0;
 };
 
-/// One unit: `si = factor * typed + offset`.
+/// One unit: `si = factor * typed + offset`, but for wind force: `si = factor * typed ^ 1.5`.
 struct Unit
 {
     std::string_view symbol; ///< as the program writes it: "kgf/cm²", "°C"
@@ -67,9 +69,16 @@ struct Unit
     double offset; ///< only temperatures have one
     Spellings spellings; ///< further accepted spellings
 
-    double to_si(double typed) const { return factor * typed + offset; }
-    double from_si(double value_si) const { return (value_si - offset) / factor; }
-    /// Differences never take the offset: 10 °C warmer is 10 K warmer.
+    double to_si(double typed) const
+    {
+        return dimension == Dimension::wind_force ? factor * std::pow(typed, 1.5) : factor * typed + offset;
+    }
+    double from_si(double value_si) const
+    {
+        return dimension == Dimension::wind_force ? std::pow(value_si / factor, 2.0 / 3.0)
+                                                  : (value_si - offset) / factor;
+    }
+    /// Differences never take the offset: 10 °C warmer is 10 K warmer. A wind force has none.
     double difference_to_si(double typed) const { return factor * typed; }
     double difference_from_si(double difference_si) const { return difference_si / factor; }
 };
@@ -115,7 +124,8 @@ struct TypedValue
 Result<TypedValue> parse_typed_value(std::string_view text);
 
 /// In SI, if the number can exist at all: not below absolute zero for temperatures and for pressures
-/// written as absolute, and finite. @par Problems invalid_input naming value and unit
+/// written as absolute, not below a perfect vacuum for gauge pressures whatever the barometer, and finite; a
+/// wind force from 0 to 12. @par Problems invalid_input naming value and unit
 Result<double> to_si_checked(double number, WrittenUnit unit);
 
 } // namespace evenstroke

@@ -36,7 +36,7 @@ constexpr double exactly(long double factor)
 /// One line a unit. SI inside: K, Pa, 1/s, W, N·m, kg/s, m³/s, J/kg, kg/J, m, rad, s, m/s, kg/m³, m²/s, kg;
 /// shares as a fraction of 1. Typographic forms, blanks and the middle dot are smoothed out before the
 /// search (find_unit.cpp), so spellings need only their plain ASCII form. Not listed on purpose: t/d and
-/// the like, because a ship's day can have 23 or 25 hours; Beaufort, which is no multiple of anything.
+/// the like, because a ship's day can have 23 or 25 hours.
 constexpr Unit table[] = {
     {"1", number, 1.0, 0.0, {"", "-", "code", "mark"}},
 
@@ -117,6 +117,10 @@ constexpr Unit table[] = {
     {"m/s", velocity, 1.0, 0.0, {}},
     {"mm/s", velocity, 1e-3, 0.0, {}},
     {"km/h", velocity, exactly(1000 / hour), 0.0, {}},
+
+    // WMO Beaufort scale: mean wind speed in m/s is 0.836 times the force to the power 1.5, 10 m above the
+    // sea.
+    {"Beaufort", wind_force, 0.836, 0.0, {"Bft"}},
 
     {"kg/m³", density, 1.0, 0.0, {"kg/m3", "g/l", "g/L"}},
     {"g/cm³", density, 1e3, 0.0, {"g/cm3", "kg/l", "kg/L", "kg/dm3", "t/m3"}},
@@ -284,6 +288,8 @@ std::string_view dimension_text(Dimension dimension)
         return "duration";
     case velocity:
         return "velocity";
+    case wind_force:
+        return "wind force";
     case density:
         return "density";
     case viscosity:

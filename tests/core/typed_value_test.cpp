@@ -259,5 +259,15 @@ TEST(ToSiChecked, LetsGaugePressuresAndDifferencesBeNegative)
     EXPECT_FALSE(to_si_checked(-5.0, {millibar, PressureKind::absolute}).has_value());
 }
 
+TEST(ToSiChecked, RefusesGaugePressuresBelowVacuumWhateverTheBarometer)
+{
+    const WrittenUnit bar_gauge = find_unit("bar gauge").value();
+    EXPECT_EQ(to_si_checked(-5.0, bar_gauge).error().what_happened,
+              "-5 bar gauge is below a perfect vacuum (about -1 bar gauge).");
+    EXPECT_EQ(to_si_checked(-1.05, bar_gauge).value(), -1.05e5) << "possible under a high barometer";
+    EXPECT_EQ(parse_typed_value("-2 kgf/cm2 g").error().what_happened,
+              "-2 kgf/cm² gauge is below a perfect vacuum (about -1.0197 kgf/cm² gauge).");
+}
+
 } // namespace
 } // namespace evenstroke

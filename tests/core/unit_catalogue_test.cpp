@@ -198,10 +198,29 @@ TEST(FindUnit, SaysWhatTheUnitsOfTheLikeliestDimensionAre)
     EXPECT_TRUE(contains(nonsense.what_to_do, "such as bar")) << nonsense.what_to_do;
 }
 
+TEST(FindUnit, TakesWindForcesWhoseSpeedsLieWithinTheBandsOfTheScale)
+{
+    // WMO Beaufort scale, m/s: lower and upper end of each force.
+    const double bands[][2] = {{0.0, 0.2},   {0.3, 1.5},   {1.6, 3.3},   {3.4, 5.4},   {5.5, 7.9},   {8.0, 10.7},
+                               {10.8, 13.8}, {13.9, 17.1}, {17.2, 20.7}, {20.8, 24.4}, {24.5, 28.4}, {28.5, 32.6}};
+    const WrittenUnit beaufort = find_unit("beaufort").value();
+    EXPECT_EQ(unit(beaufort.id).symbol, "Beaufort");
+    EXPECT_EQ(find_unit("Bft").value().id, beaufort.id);
+    for (int force = 0; force < 12; ++force) {
+        const double speed = to_si_checked(force, beaufort).value();
+        EXPECT_GE(speed, bands[force][0]) << force;
+        EXPECT_LE(speed, bands[force][1]) << force;
+        EXPECT_NEAR(unit(beaufort.id).from_si(speed), force, 1e-12); // rounding of two powers
+    }
+    EXPECT_GE(to_si_checked(12.0, beaufort).value(), 32.7);
+    EXPECT_FALSE(to_si_checked(13.0, beaufort).has_value());
+    EXPECT_FALSE(to_si_checked(-1.0, beaufort).has_value());
+}
+
 TEST(FindUnit, RefusesUnitsItDoesNotHave)
 {
     for (const std::string_view text :
-         {"t/d", "t/day", "Beaufort", "bar2", "kgf", "mm3", "1/h", "--", "%%", "barr", "bar bar",
+         {"t/d", "t/day", "bar2", "kgf", "mm3", "1/h", "--", "%%", "barr", "bar bar",
           "\xB0"
           "C",
           "\xFF", "kW\n%", "mg/l"}) {

@@ -1,12 +1,16 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "fixture.h"
 
+#include "core/reading/typed_number.h"
+#include "core/trend/conditions.h"
 #include "storage/audit.h"
 #include "storage/card_store.h"
 #include "storage/event_store.h"
 #include "storage/sql.h"
 
 #include <QDir>
+
+#include <tuple>
 
 namespace evenstroke::storage {
 namespace {
@@ -284,6 +288,48 @@ TEST_F(TakingIn, SaysWhichFoldersHoldNoEngine)
     const auto none = take(*history, {path(QStringLiteral("not there"))});
     ASSERT_FALSE(none.has_value());
     EXPECT_EQ(none.error().kind, Problem::Kind::not_found);
+}
+
+TEST_F(TakingIn, TakesUnitsThatMeasureTheSameInAnotherWay)
+{
+    write_engine(QStringLiteral("engine"),
+                 header + "2029-01,2029-01-12T08:30Z,fuel_index,1,62,mm\n"
+                          "2029-01,2029-01-12T08:30Z,fuel_index,,61.5,mm\n"
+                          "2029-01,2029-01-12T08:30Z,wind_speed,,4,Beaufort\n"
+                          "2029-01,2029-01-12T08:30Z,cylinder_oil_feed_rate,1,55,l/24 h\n"
+                          "2029-01,2029-01-12T08:30Z,injection_timing_setting,1,-2,deg\n");
+    const auto history = memory();
+    const TakeReport report = take_folder(*history, QStringLiteral("engine"));
+    EXPECT_FALSE(report.anything_refused());
+    const Reading reading = readings_of(*history).front();
+    const Value* const index = find_value(reading, "fuel_index", Place::cylinder(1));
+    ASSERT_NE(index, nullptr);
+    EXPECT_EQ(index->typed, "62");
+    EXPECT_EQ(unit(index->unit).symbol, "mm");
+    EXPECT_FALSE(own_value(*index, {}).has_value()) << "millimetres are no per cent";
+    EXPECT_FALSE(number_in_own_unit(*index, {}).has_value());
+    EXPECT_FALSE(
+        own_value(*find_value(reading, "cylinder_oil_feed_rate", Place::cylinder(1)), {}).has_value());
+    // WMO: force 4 is 5.5 to 7.9 m/s.
+    const auto wind = own_value(*find_value(reading, "wind_speed", {Place::Kind::ship, 0}), {});
+    ASSERT_TRUE(wind.has_value());
+    EXPECT_NEAR(wind->value, 6.7, 0.05); // 0.836 * 8 = 6.688
+}
+
+TEST_F(TakingIn, RefusesRackMillimetresWhereTheBaselineIsInPerCent)
+{
+    write(
+        QStringLiteral("engine/engine.json"),
+        engine_json(
+            "Quiet Barley", "main engine",
+            R"(, "baseline": [{"load_percent": 50, "fuel_index": 55}, {"load_percent": 75, "fuel_index": 70}])"));
+    write(QStringLiteral("engine/readings.csv"),
+          header +
+              "2029-01,2029-01-12T08:30Z,fuel_index,1,62,mm\n2029-01,2029-01-12T08:30Z,fuel_index,2,70,%\n");
+    const FolderReport report = take_folder(*memory(), QStringLiteral("engine")).folders.front();
+    ASSERT_EQ(report.refused.size(), 1U);
+    EXPECT_EQ(report.refused.front().line, 2);
+    EXPECT_NE(report.refused.front().reason.find("baseline has fuel_index in %"), std::string::npos);
 }
 
 TEST_F(TakingIn, StoppedHalfwayLeavesTheHistoryAsItWas)
