@@ -2,7 +2,7 @@
 #include "storage/engine_json.h"
 
 #include "core/plain_text.h"
-#include "storage/json_reader.h"
+#include "storage/engine_json_checks.h"
 #include "storage/sql.h"
 
 #include <QFile>
@@ -65,6 +65,26 @@ std::string structure_words(QJsonParseError::ParseError what)
     }
 }
 
+/// The sizes without which an engine cannot be judged. What was written wrong was refused when it was read,
+/// so nought means that the key is not there.
+void add_missing_sizes(std::vector<DocumentProblem>& problems, const EngineDocument& document)
+{
+    const Engine& engine = document.engine;
+    const struct
+    {
+        const char* key;
+        double value;
+    } sizes[] = {{"bore_mm", engine.bore.value()},
+                 {"stroke_mm", engine.stroke.value()},
+                 {"rod_length_mm", engine.rod_length.value()},
+                 {"rated_power_kw", engine.rated_power.value()},
+                 {"rated_speed_rpm", engine.rated_speed.value()}};
+    for (const auto& size : sizes)
+        if (size.value == 0.0)
+            problems.push_back({size.key, 0, "", std::string(size.key) + " is not given.",
+                                std::string("Write \"") + size.key + "\" with a number above zero."});
+}
+
 void add(std::vector<DocumentProblem>& problems, std::string reason, std::string expected)
 {
     problems.push_back({"", 0, "", std::move(reason), std::move(expected)});
@@ -119,6 +139,14 @@ std::vector<DocumentProblem> find_document_problems(const EngineDocument& docume
         lacks("vessel", "vessel");
     if (document.engine.name.empty())
         lacks("engine", "engine");
+    add_missing_sizes(problems, document);
+    for (const RepeatedKey& twice : find_repeated_keys(document.text))
+        problems.push_back({twice.key, line_at(document.text, twice.offset), "",
+                            "The key " + evenstroke::quoted(twice.key) +
+                                " stands twice in the same braces, and only one of the two can count.",
+                            "Leave one of the two out."});
+    if (!problems.empty())
+        return problems;
     if (const auto problem = find_problem(document.engine))
         problems.push_back({"", 0, "", problem->what_happened, problem->what_to_do});
     return problems;
@@ -158,6 +186,20 @@ bool same_document(const std::string& a, const std::string& b)
         return QJsonDocument::fromJson(QByteArray::fromStdString(text));
     };
     return !parsed(a).isNull() && parsed(a) == parsed(b);
+}
+
+std::vector<std::string> changed_keys(const std::string& before, const std::string& now)
+{
+    const QJsonObject first = QJsonDocument::fromJson(QByteArray::fromStdString(before)).object();
+    const QJsonObject second = QJsonDocument::fromJson(QByteArray::fromStdString(now)).object();
+    std::vector<std::string> keys;
+    for (const QString& key : second.keys())
+        if (first.value(key) != second.value(key))
+            keys.push_back(from_qt(key));
+    for (const QString& key : first.keys())
+        if (!second.contains(key))
+            keys.push_back(from_qt(key));
+    return keys;
 }
 
 } // namespace evenstroke::storage

@@ -19,6 +19,7 @@ struct EngineDocument
     Vessel vessel;
     Engine engine;
     std::vector<std::string> unknown_keys; ///< kept in the text, read by nobody: "reference.humidity"
+    std::vector<std::string> remarks;      ///< names of quantities that are not known, with what may be meant
     std::string text;                      ///< the document as it stood
 };
 
@@ -31,8 +32,8 @@ struct DocumentProblem
 };
 
 /// Reads a document and names everything that is the matter with it; with problems there is no document.
-/// What only matters for taking an engine in (names, sizes, `find_problem`) is asked by
-/// `find_document_problems`, so that a card can be evaluated with less.
+/// What only matters for taking an engine in (names, sizes, keys that stand twice, `find_problem`) is asked
+/// by `find_document_problems`, so that a card can be evaluated with less.
 std::optional<EngineDocument> read_engine_document(std::string_view text,
                                                    std::vector<DocumentProblem>& problems);
 std::vector<DocumentProblem> find_document_problems(const EngineDocument& document);
@@ -48,5 +49,7 @@ std::string write_engine_document(const Vessel& vessel, const Engine& engine, co
 
 /// Whether two texts hold the same, however they are laid out.
 bool same_document(const std::string& a, const std::string& b);
+/// The keys of the outermost braces that differ: "baseline", "bore_mm".
+std::vector<std::string> changed_keys(const std::string& before, const std::string& now);
 
 } // namespace evenstroke::storage

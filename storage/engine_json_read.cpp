@@ -1,6 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/plain_text.h"
-#include "storage/json_reader.h"
+#include "storage/engine_json_checks.h"
 #include "storage/sql.h"
 
 #include <QJsonDocument>
@@ -56,6 +56,7 @@ EngineDocument DocumentReader::read()
     read_baseline();
     read_card_angles();
     keep_unknown(top_);
+    document_.remarks = unknown_quantity_remarks(document_.engine);
     return std::move(document_);
 }
 
@@ -222,27 +223,10 @@ void DocumentReader::read_correction()
         const QByteArray key = name.toUtf8();
         if (key == "source")
             continue;
-        const QJsonValue value = reader.take(key.constData());
-        CorrectionCoefficients coefficients;
-        if (value.isArray() && value.toArray().size() == 2 && value.toArray().at(0).isDouble() &&
-            value.toArray().at(1).isDouble()) {
-            coefficients = {value.toArray().at(0).toDouble(), value.toArray().at(1).toDouble(),
-                            common_source};
-        } else if (value.isObject()) {
-            JsonReader one(value.toObject(), "correction." + key.toStdString() + ".", problems_);
-            coefficients.per_inlet_air = one.number("per_inlet_air").value_or(0.0);
-            coefficients.per_coolant = one.number("per_coolant").value_or(0.0);
-            coefficients.source = one.text("source");
-            keep_unknown(one);
-        } else if (!value.isUndefined()) {
-            reader.refuse(key.constData(), value,
-                          reader.path(key.constData()) + " is " + json_text(value) +
-                              ", which is no pair of coefficients.",
-                          "Write [per °C of inlet air, per °C of coolant].");
-            continue;
-        }
-        document_.engine.correction[key.toStdString()] = coefficients;
+        if (const auto both = read_coefficients(reader, key.constData(), common_source))
+            document_.engine.correction[key.toStdString()] = *both;
     }
+    keep_unknown(reader);
 }
 
 void DocumentReader::read_limits()

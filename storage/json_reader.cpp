@@ -118,7 +118,7 @@ std::optional<bool> JsonReader::truth(const char* key)
 
 std::vector<std::string> JsonReader::left_keys() const
 {
-    std::vector<std::string> left;
+    std::vector<std::string> left = aside_;
     for (const QString& key : object_.keys())
         if (taken_.count(from_qt(key)) == 0)
             left.push_back(where_ + from_qt(key));

@@ -30,6 +30,8 @@ public:
     std::optional<int> whole(const char* key, int low, int high);
     std::optional<bool> truth(const char* key);
     std::vector<std::string> left_keys() const; ///< with their path
+    /// A key of an object below this one that nobody reads, path and all: among the left ones from now on.
+    void keep_aside(std::string key) { aside_.push_back(std::move(key)); }
 
     void refuse(const char* key, const QJsonValue& value, const std::string& reason,
                 const std::string& expected);
@@ -42,6 +44,7 @@ private:
     std::string where_;
     std::vector<DocumentProblem>& problems_;
     std::set<std::string> taken_;
+    std::vector<std::string> aside_;
 };
 
 /// A JSON value as a sentence shows it, shortened.

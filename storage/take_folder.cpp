@@ -84,6 +84,8 @@ std::optional<EngineDocument> FolderTaking::read_document(const EngineFolder& fo
     for (const std::string& key : document->unknown_keys)
         report_.remarks.push_back("engine.json: the key " + evenstroke::quoted(key) +
                                   " was kept and not used");
+    for (const std::string& remark : document->remarks)
+        report_.remarks.push_back("engine.json, " + remark);
     return document;
 }
 

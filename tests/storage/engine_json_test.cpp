@@ -63,6 +63,31 @@ TEST_F(EngineDocumentTest, NamesKeysThatItDoesNotKnow)
     EXPECT_EQ(document.unknown_keys, (std::vector<std::string>{"reference.humidity", "colour"}));
 }
 
+TEST_F(EngineDocumentTest, KeepsNamesThatNoQuantityHasAndSaysWhatMayBeMeant)
+{
+    const QByteArray text = engine_json("V", "E", R"(, "correction": {"pmax": [0.002, 0.001]},
+        "limits": {"jacket_outlet_temprature": 95}, "instruments": [{"quantity": "moonlight"}],
+        "baseline": [{"load_percent": 50, "exhaust_temp": 300, "speed": 83}, {"load_percent": 75, "exhaust_temp": 330}])");
+    const EngineDocument document = value_of_result(read_engine_document(text.toStdString(), "engine.json"));
+    ASSERT_EQ(document.remarks.size(), 4U) << "each name once, however many points have it";
+    EXPECT_EQ(document.remarks[0],
+              "correction: no quantity is called \"pmax\"; it was kept and not used. Write "
+              "maximum_pressure if that is meant");
+    EXPECT_NE(document.remarks[1].find("Write jacket_outlet_temperature if"), std::string::npos);
+    EXPECT_TRUE(document.remarks[2].ends_with("it was kept and not used")) << "nothing is near to moonlight";
+    EXPECT_NE(document.remarks[3].find("Write exhaust_temperature if"), std::string::npos);
+    EXPECT_EQ(document.engine.baseline[0].values.at("exhaust_temp"), 300.0);
+}
+
+TEST_F(EngineDocumentTest, MayHaveOneKeyInSeveralObjectsAndInTexts)
+{
+    const QByteArray text =
+        engine_json("V", "E", R"(, "note": "a \", \"engine\": {", "limits": {"speed": {"high": 110},
+        "exhaust_temperature": {"high": 430}}, "baseline": [{"load_percent": 50}, {"load_percent": 75}])");
+    const EngineDocument document = value_of_result(read_engine_document(text.toStdString(), "engine.json"));
+    EXPECT_TRUE(find_document_problems(document).empty());
+}
+
 TEST_F(EngineDocumentTest, IsReadForACardWithoutVesselAndRating)
 {
     const auto document = read_engine_document(
@@ -126,6 +151,26 @@ INSTANTIATE_TEST_SUITE_P(
         BadDocument{"TextForNumber", "\"bore_mm\": 600", "\"bore_mm\": \"600\"", "bore_mm", "no number"},
         BadDocument{"UnknownCycle", "two-stroke", "six-stroke", "cycle", "six-stroke"},
         BadDocument{"NoVessel", "\"vessel\": \"V\", ", "", "vessel", "names no vessel"},
+        BadDocument{"NoBore", "\"bore_mm\": 600, ", "", "bore_mm", "bore_mm is not given"},
+        BadDocument{"NoRating", "\"rated_power_kw\"", "\"rated_power\"", "rated_power_kw",
+                    "rated_power_kw is not given"},
+        BadDocument{"KeyTwice", "\"bore_mm\": 600", "\"bore_mm\": 600, \"bore_mm\": 610", "bore_mm",
+                    "stands twice"},
+        BadDocument{
+            "CorrectionInAnotherForm", "\"baseline\": [",
+            R"("correction": {"compression_pressure": {"value": [0.002, 0.001], "source": "x"}}, "baseline": [)",
+            "correction.compression_pressure", "per_inlet_air and per_coolant cannot be found"},
+        BadDocument{
+            "HalfACorrection", "\"baseline\": [",
+            R"("correction": {"exhaust_temperature": {"per_air": -0.002, "per_coolant": 0}}, "baseline": [)",
+            "correction.exhaust_temperature", "per_inlet_air cannot be found"},
+        BadDocument{
+            "CorrectionInWords", "\"baseline\": [",
+            R"("correction": {"exhaust_temperature": {"per_inlet_air": "x", "per_coolant": 0}}, "baseline": [)",
+            "correction.exhaust_temperature.per_inlet_air", "no number"},
+        BadDocument{"OneCoefficient", "\"baseline\": [",
+                    R"("correction": {"exhaust_temperature": [-0.002]}, "baseline": [)",
+                    "correction.exhaust_temperature", "no pair of coefficients"},
         BadDocument{"ListForObject", "\"baseline\": [", "\"limits\": [], \"baseline\": [", "limits",
                     "no keys"}),
     [](const auto& one) { return std::string(one.param.name); });
