@@ -109,8 +109,8 @@ Done History::check()
         return storage_problem(query.lastError(), not_opened);
     if (query.value(0).toString() != QStringLiteral("ok"))
         return Problem{Problem::Kind::damaged_file,
-                       "\"" + from_qt(QFileInfo(path_).fileName()) + "\" is damaged (" +
-                           from_qt(query.value(0).toString().simplified()) + ").",
+                       "\"" + from_qt(QFileInfo(path_).fileName()) +
+                           "\" is damaged: its pages do not fit together.",
                        "Open the newest backup beside it, and keep the damaged file."};
     return done();
 }
@@ -161,9 +161,32 @@ Result<std::unique_ptr<History>> History::in_memory(HistorySettings settings)
     return make(memory, std::move(settings));
 }
 
+/// What was cut off half-way can be taken back only by a connection that may write: SQLite refuses to read a
+/// file with such a journal otherwise. A journal of somebody who is writing now is left to him by its lock.
+Done History::take_back_cut_write(const QString& path, const HistorySettings& settings)
+{
+    History writing(path, OpenMode::read_write, settings);
+    BOOST_OUTCOME_TRYV(writing.connect());
+    const auto read = ask_number(writing.database(), QStringLiteral("PRAGMA schema_version"), not_opened);
+    if (read)
+        return done();
+    if (read.error().kind != Problem::Kind::storage)
+        return read.error();
+    return Problem{
+        Problem::Kind::storage,
+        "The last write to \"" + from_qt(QFileInfo(path).fileName()) +
+            "\" was cut off, and it cannot be taken back here, so " + not_opened + ".",
+        "Copy the file and the one beside it that ends in -journal together to a folder that may be "
+        "written to, and open the copy."};
+}
+
 Result<std::unique_ptr<History>> History::open(const QString& path, OpenMode mode, HistorySettings settings)
 {
-    const auto header = inspect_history_file(path, newest_schema_version());
+    auto header = inspect_history_file(path, newest_schema_version());
+    if (header && mode == OpenMode::read_only && QFile::exists(path + QStringLiteral("-journal"))) {
+        BOOST_OUTCOME_TRYV(take_back_cut_write(path, settings));
+        header = inspect_history_file(path, newest_schema_version());
+    }
     if (!header)
         return header.error();
     std::unique_ptr<History> history(new History(path, mode, std::move(settings)));
@@ -192,6 +215,15 @@ Done History::bring_up_to_date()
             return copied.error();
     }
     return migrate(database(), version());
+}
+
+void History::remove_new(std::unique_ptr<History> history)
+{
+    if (!history->made_now() || history->path() == memory)
+        return;
+    const QString path = history->path();
+    history.reset();
+    QFile::remove(path);
 }
 
 Result<std::unique_ptr<History>> History::open_or_create(const QString& path, HistorySettings settings)

@@ -18,8 +18,8 @@ struct HistorySettings
     Clock clock = system_time;
     bool automatic_backups = true; ///< before each migration, and before the first change of a day
     int backups_kept = 7;          ///< in the folder `<name> backups` beside the history
-    /// Read every page before trusting the file, once for a state of it. A fleet's file above 48 MB would keep
-    /// the first page waiting: there damage shows when it is met, and `verify` looks for it.
+    /// Read every page before trusting the file, once for a state of it. A fleet's file above 48 MB would
+    /// keep the first page waiting: there damage shows when it is met, and `verify` looks for it.
     bool check_whole = true;
 };
 
@@ -32,7 +32,8 @@ public:
     /// Makes a new, empty history. @par Problems storage: something stands at the path, or the disk refuses
     static Result<std::unique_ptr<History>> create(const QString& path, HistorySettings settings = {});
     /// Opens a history; one of an older version is brought up to date when opened for writing.
-    /// What is refused is not touched.
+    /// What is refused is not touched. A write that a power cut left half done is taken back, also when
+    /// opened for reading only.
     /// @par Problems not_found; damaged_file: not a history or torn; newer_file: of a later program;
     ///      invalid_input: of an older version and opened for reading only; storage
     static Result<std::unique_ptr<History>> open(const QString& path, OpenMode mode,
@@ -40,6 +41,8 @@ public:
     /// Opens the history, or makes it where there is none.
     static Result<std::unique_ptr<History>> open_or_create(const QString& path,
                                                            HistorySettings settings = {});
+    /// Closes a history and takes its file away again, where this connection made it: nothing came of it.
+    static void remove_new(std::unique_ptr<History> history);
     /// A history that is gone when closed, for tests and for trying things.
     static Result<std::unique_ptr<History>> in_memory(HistorySettings settings = {});
     /// The schema version that this program writes.
@@ -76,6 +79,7 @@ private:
     Done check();
     Done bring_up_to_date();
     Done fill_new();
+    static Done take_back_cut_write(const QString& path, const HistorySettings& settings);
     static Result<std::unique_ptr<History>> make(const QString& path, HistorySettings settings);
 
     QString path_, connection_;

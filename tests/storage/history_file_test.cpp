@@ -134,26 +134,85 @@ TEST_F(HistoryFile, RefusesFlippedBytesInThePageStructure)
     }
 }
 
-TEST_F(HistoryFile, TakesBackAWriteThatAPowerCutLeftHalfDone)
+/// "cut.evenstroke" with the journal of a write that a power cut left half done.
+class CutWrite : public HistoryFile
 {
+protected:
+    void SetUp() override
+    {
+        filled();
+        const auto history = open();
+        QSqlQuery query(history->database());
+        ASSERT_TRUE(
+            query.exec(QStringLiteral("PRAGMA cache_size = 2"))); // pages go to the disk before the commit
+        ASSERT_TRUE(query.exec(QStringLiteral("BEGIN IMMEDIATE")));
+        ASSERT_TRUE(query.exec(QStringLiteral("UPDATE value SET value_si = 0, typed = printf('%9000d', 0)")));
+        // The files as they lie on the disk at this moment.
+        for (const char* const ending : {"", "-journal"})
+            write(QStringLiteral("cut.evenstroke") + QLatin1String(ending),
+                  read(QStringLiteral("ship.evenstroke") + QLatin1String(ending)));
+        ASSERT_FALSE(read(QStringLiteral("cut.evenstroke-journal")).startsWith(QByteArray(4, '\0')))
+            << "nothing was written before the commit";
+        query.exec(QStringLiteral("ROLLBACK"));
+    }
+};
+
+TEST_F(CutWrite, IsTakenBackWhicheverWayTheFileIsOpened)
+{
+    const QByteArray cut = read(QStringLiteral("cut.evenstroke"));
+    const QByteArray journal = read(QStringLiteral("cut.evenstroke-journal"));
+    for (const OpenMode mode : {OpenMode::read_write, OpenMode::read_only}) {
+        write(QStringLiteral("cut.evenstroke"), cut);
+        write(QStringLiteral("cut.evenstroke-journal"), journal);
+        const auto opened = open(QStringLiteral("cut.evenstroke"), mode);
+        EXPECT_EQ(opened->mode(), mode);
+        EXPECT_TRUE(value_of_result(verify(*opened)).sound());
+        EXPECT_EQ(readings_of(*opened).front().values.front().typed, "141.5");
+        EXPECT_FALSE(QFile::exists(path(QStringLiteral("cut.evenstroke-journal"))));
+    }
+}
+
+TEST_F(CutWrite, IsExplainedWhereItCannotBeTakenBack)
+{
+    const QString folder = path(QStringLiteral("write protected"));
+    ASSERT_TRUE(QDir().mkpath(folder));
+    for (const char* const ending : {"", "-journal"}) {
+        const QString name = QStringLiteral("write protected/cut.evenstroke") + QLatin1String(ending);
+        write(name, read(QStringLiteral("cut.evenstroke") + QLatin1String(ending)));
+        QFile::setPermissions(path(name), QFile::ReadOwner);
+    }
+    QFile::setPermissions(folder, QFile::ReadOwner | QFile::ExeOwner);
+    const bool is_protected = !QFile(folder + QStringLiteral("/x")).open(QIODevice::WriteOnly);
+    if (!is_protected) {
+        QFile::setPermissions(folder, QFile::ReadOwner | QFile::WriteOwner | QFile::ExeOwner);
+        GTEST_SKIP() << "this user may write everywhere, so nothing can be protected";
+    }
+    const Problem problem = refused(QStringLiteral("write protected/cut.evenstroke"), OpenMode::read_only);
+    QFile::setPermissions(folder, QFile::ReadOwner | QFile::WriteOwner | QFile::ExeOwner);
+    EXPECT_EQ(problem.kind, Problem::Kind::storage);
+    EXPECT_NE(problem.what_happened.find("was cut off"), std::string::npos) << problem.text();
+    EXPECT_NE(problem.what_to_do.find("-journal"), std::string::npos);
+}
+
+TEST_F(HistoryFile, SaysInPlainWordsThatItIsDamaged)
+{
+    const QByteArray file = filled();
+    QByteArray broken = file;
+    const qsizetype page = file.size() / 4096 / 2;
+    broken[page * 4096] = static_cast<char>(broken.at(page * 4096) ^ 0x55);
+    write(QStringLiteral("flipped.evenstroke"), broken);
+    const std::string words = refused(QStringLiteral("flipped.evenstroke"), OpenMode::read_only).text();
+    EXPECT_EQ(words.find("database"), std::string::npos) << words;
+    EXPECT_EQ(words.find("***"), std::string::npos) << words;
+}
+
+TEST_F(HistoryFile, MadeByThisRunCanBeTakenAwayAgain)
+{
+    History::remove_new(create(QStringLiteral("new.evenstroke")));
+    EXPECT_FALSE(QFile::exists(path(QStringLiteral("new.evenstroke"))));
     filled();
-    const auto history = open();
-    QSqlQuery query(history->database());
-    ASSERT_TRUE(
-        query.exec(QStringLiteral("PRAGMA cache_size = 2"))); // pages go to the disk before the commit
-    ASSERT_TRUE(query.exec(QStringLiteral("BEGIN IMMEDIATE")));
-    ASSERT_TRUE(query.exec(QStringLiteral("UPDATE value SET value_si = 0, typed = printf('%9000d', 0)")));
-    // The files as they lie on the disk at this moment.
-    for (const char* const ending : {"", "-journal"})
-        write(QStringLiteral("cut.evenstroke") + QLatin1String(ending),
-              read(QStringLiteral("ship.evenstroke") + QLatin1String(ending)));
-    ASSERT_FALSE(read(QStringLiteral("cut.evenstroke-journal")).startsWith(QByteArray(4, '\0')))
-        << "nothing was written before the commit";
-    query.exec(QStringLiteral("ROLLBACK"));
-    const auto opened = open(QStringLiteral("cut.evenstroke"));
-    EXPECT_TRUE(value_of_result(verify(*opened)).sound());
-    EXPECT_EQ(readings_of(*opened).front().values.front().typed, "141.5");
-    EXPECT_FALSE(QFile::exists(path(QStringLiteral("cut.evenstroke-journal"))));
+    History::remove_new(open());
+    EXPECT_TRUE(QFile::exists(path(QStringLiteral("ship.evenstroke")))) << "was there before";
 }
 
 TEST_F(HistoryFile, MayHaveAnyNameThatAFileMayHave)
