@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "storage/card_store.h"
+#include "storage/card_rows.h"
 
 #include "core/plain_text.h"
 #include "core/units/unit_catalogue.h"
@@ -69,18 +69,14 @@ Result<double> read_number(std::string_view field)
 class CardText
 {
 public:
-    CardText(std::string_view text, const std::string& name) : rest_(text), name_(name) {}
+    explicit CardText(std::string_view text) : rest_(text) {}
     Result<CardTrace> read();
+    qint64 line() const { return line_; } ///< the last one read: where it was refused
 
 private:
     Done read_row(std::string_view row);
-    Problem refused(const std::string& what, const std::string& advice) const
-    {
-        return invalid_input(name_ + ", line " + std::to_string(line_) + ": " + what, advice);
-    }
 
     std::string_view rest_;
-    const std::string& name_;
     Layout layout_;
     CardTrace trace_;
     qint64 line_ = 1;
@@ -93,22 +89,22 @@ Done CardText::read_row(std::string_view row)
         int cycle = 0;
         const auto [end, problem] = std::from_chars(field.data(), field.data() + field.size(), cycle);
         if (problem != std::errc() || end != field.data() + field.size())
-            return refused("The cycle " + quoted(field) + " is no whole number.",
-                           "Write the number of the cycle.");
+            return invalid_input("The cycle " + quoted(field) + " is no whole number.",
+                                 "Write the number of the cycle.");
         trace_.cycle.push_back(cycle);
     }
     const auto angle = read_number(take_field(row, layout_.separator));
     if (!angle.has_value())
-        return refused("The crank angle is not readable: " + angle.error().what_happened,
-                       angle.error().what_to_do);
+        return invalid_input("The crank angle is not readable: " + angle.error().what_happened,
+                             angle.error().what_to_do);
     if (std::abs(angle.value()) > 360.0)
-        return refused(
+        return invalid_input(
             "The crank angle " + number_text(angle.value()) + "° is beyond one working cycle.",
             "Write -180 to 180 degrees, or -360 to 360 for a four-stroke; firing dead centre is 0.");
     const auto pressure = read_number(row);
     if (!pressure.has_value())
-        return refused("The pressure is not readable: " + pressure.error().what_happened,
-                       pressure.error().what_to_do);
+        return invalid_input("The pressure is not readable: " + pressure.error().what_happened,
+                             pressure.error().what_to_do);
     trace_.crank_angle_deg.push_back(angle.value());
     trace_.pressure_bar.push_back(pressure.value());
     return done();
@@ -120,9 +116,9 @@ Result<CardTrace> CardText::read()
         rest_.remove_prefix(3);
     const auto layout = read_header(take_line(rest_));
     if (!layout)
-        return refused("The header line is not one of a card.",
-                       "The first line is expected to be crank_angle_deg,pressure_bar or "
-                       "cycle,crank_angle_deg,pressure_bar.");
+        return invalid_input("The header line is not one of a card.",
+                             "The first line is expected to be crank_angle_deg,pressure_bar or "
+                             "cycle,crank_angle_deg,pressure_bar.");
     layout_ = *layout;
     trace_.gauge = layout_.gauge;
     const std::size_t likely = rest_.size() / 12;
@@ -136,18 +132,11 @@ Result<CardTrace> CardText::read()
         }
     }
     if (trace_.crank_angle_deg.empty())
-        return refused("The card has no samples.", "Write one row a sample below the header line.");
+        return invalid_input("The card has no samples.", "Write one row a sample below the header line.");
     return std::move(trace_);
 }
 
-} // namespace
-
-Result<CardTrace> read_card_text(std::string_view text, const std::string& name)
-{
-    return CardText(text, name).read();
-}
-
-Result<CardTrace> read_card_file(const QString& path)
+Result<QByteArray> card_content(const QString& path)
 {
     QFile file(path);
     if (!file.exists())
@@ -159,9 +148,46 @@ Result<CardTrace> read_card_file(const QString& path)
     if (file.size() > largest_file)
         return invalid_input("\"" + from_qt(path) + "\" is larger than 256 MB, which no card is.",
                              "Choose the file of one cylinder's card.");
-    const QByteArray content = file.readAll();
-    return read_card_text(std::string_view(content.constData(), static_cast<std::size_t>(content.size())),
-                          from_qt(QFileInfo(path).fileName()));
+    return file.readAll();
+}
+
+std::string_view as_text(const QByteArray& content)
+{
+    return {content.constData(), static_cast<std::size_t>(content.size())};
+}
+
+} // namespace
+
+Result<CardTrace> read_card_text(std::string_view text, const std::string& name)
+{
+    CardText card(text);
+    auto trace = card.read();
+    if (trace)
+        return trace;
+    Problem problem = trace.error();
+    problem.what_happened = name + ", line " + std::to_string(card.line()) + ": " + problem.what_happened;
+    return problem;
+}
+
+Result<CardTrace> read_card_file(const QString& path, qint64& line)
+{
+    const auto content = card_content(path);
+    line = 0;
+    if (!content)
+        return content.error();
+    CardText card(as_text(content.value()));
+    auto trace = card.read();
+    if (!trace)
+        line = card.line();
+    return trace;
+}
+
+Result<CardTrace> read_card_file(const QString& path)
+{
+    const auto content = card_content(path);
+    if (!content)
+        return content.error();
+    return read_card_text(as_text(content.value()), from_qt(QFileInfo(path).fileName()));
 }
 
 std::string card_text(const CardTrace& trace)

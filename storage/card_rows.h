@@ -8,6 +8,10 @@ namespace evenstroke::storage {
 
 std::string packed_card_hash(const std::string& id, int cylinder, const QByteArray& packed);
 
+/// Reads a card's file for somebody who names the file and line himself.
+/// @param line  where it cannot be read; 0: the file as a whole
+Result<CardTrace> read_card_file(const QString& path, qint64& line);
+
 /// What became of a card that was to be added.
 struct AddedCard
 {

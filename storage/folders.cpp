@@ -7,7 +7,8 @@
 #include <QDirIterator>
 #include <QFileInfo>
 
-#include <set>
+#include <algorithm>
+#include <map>
 
 namespace evenstroke::storage {
 namespace {
@@ -24,45 +25,54 @@ public:
     FoundFolders run(const QStringList& given);
 
 private:
-    void look_into(const QString& path, const std::string& shown, int depth);
-    void take_engine(const QDir& folder, const std::string& shown);
-    void look_at_ship(const QDir& folder, const std::string& shown, std::size_t first_engine);
+    using Engines = std::vector<std::size_t>; ///< indices into found_.engines
+    Engines look_into(const QString& path, const std::string& shown, int depth);
+    Engines take_engine(const QDir& folder, const std::string& shown);
+    void look_at_ship(const QDir& folder, const std::string& shown, const Engines& engines);
 
     FoundFolders found_;
-    std::set<QString> seen_; ///< a link may lead back to where one came from
+    /// The engines below each folder looked into; a link may lead back to where one came from.
+    std::map<QString, Engines> seen_;
 };
 
 FoundFolders FolderSearch::run(const QStringList& given)
 {
     for (const QString& path : given) {
-        const std::size_t before = found_.engines.size();
         const std::string shown = from_qt(QDir::cleanPath(path));
-        look_into(path, shown, 0);
-        if (found_.engines.size() == before)
+        if (!QFileInfo(path).isDir())
+            found_.not_there.push_back(shown);
+        else if (look_into(path, shown, 0).empty())
             found_.without_engine.push_back(shown);
     }
     return std::move(found_);
 }
 
-void FolderSearch::look_into(const QString& path, const std::string& shown, int depth)
+FolderSearch::Engines FolderSearch::look_into(const QString& path, const std::string& shown, int depth)
 {
     const QDir folder(path);
-    if (depth > deepest || !seen_.insert(folder.canonicalPath()).second)
-        return;
+    if (depth > deepest)
+        return {};
+    const auto [entry, is_first] = seen_.try_emplace(folder.canonicalPath());
+    Engines& engines = entry->second; // a map's entries stay where they are
+    if (!is_first)
+        return engines;
     // Readings without an engine.json are an engine's too: they must be refused, not passed over.
     if (folder.exists(document_name) || folder.exists(engine_files[1]))
-        return take_engine(folder, shown);
-    const std::size_t first_engine = found_.engines.size();
+        return engines = take_engine(folder, shown);
     for (const QString& name : folder.entryList(QDir::Dirs | QDir::NoDotAndDotDot, QDir::Name))
-        look_into(folder.filePath(name), shown + "/" + from_qt(name), depth + 1);
+        for (const std::size_t engine :
+             look_into(folder.filePath(name), shown + "/" + from_qt(name), depth + 1))
+            if (std::find(engines.begin(), engines.end(), engine) == engines.end())
+                engines.push_back(engine);
     for (const QString& name : folder.entryList(QDir::Files, QDir::Name))
         if (name != ship_name)
             found_.ignored.push_back(shown + "/" + from_qt(name));
     if (folder.exists(ship_name))
-        look_at_ship(folder, shown, first_engine);
+        look_at_ship(folder, shown, engines);
+    return engines;
 }
 
-void FolderSearch::take_engine(const QDir& folder, const std::string& shown)
+FolderSearch::Engines FolderSearch::take_engine(const QDir& folder, const std::string& shown)
 {
     EngineFolder engine{folder.path(), shown, folder.exists(document_name), {}};
     for (const QFileInfo& entry : folder.entryInfoList(QDir::AllEntries | QDir::NoDotAndDotDot, QDir::Name)) {
@@ -76,19 +86,17 @@ void FolderSearch::take_engine(const QDir& folder, const std::string& shown)
     while (cards.hasNext())
         found_.bytes += cards.nextFileInfo().size();
     found_.engines.push_back(std::move(engine));
+    return {found_.engines.size() - 1};
 }
 
-void FolderSearch::look_at_ship(const QDir& folder, const std::string& shown, std::size_t first_engine)
+void FolderSearch::look_at_ship(const QDir& folder, const std::string& shown, const Engines& engines)
 {
-    ShipFolder ship{folder.path(), shown, {}};
-    for (std::size_t i = first_engine; i < found_.engines.size(); ++i)
-        ship.engines.push_back(i);
-    if (ship.engines.empty()) {
+    if (engines.empty()) {
         found_.ignored.push_back(shown + "/" + from_qt(ship_name));
         return;
     }
     found_.bytes += QFileInfo(folder.filePath(ship_name)).size();
-    found_.ships.push_back(std::move(ship));
+    found_.ships.push_back({folder.path(), shown, engines});
 }
 
 } // namespace

@@ -30,12 +30,14 @@ struct FoundFolders
 {
     std::vector<EngineFolder> engines;
     std::vector<ShipFolder> ships;
+    std::vector<std::string> not_there;      ///< of the folders given, those that do not exist
     std::vector<std::string> without_engine; ///< of the folders given, those that hold none
     std::vector<std::string> ignored;        ///< files that belong to no engine
     qint64 bytes = 0;                        ///< of all files that will be read
 };
 
-/// Looks through folders of folders, in the order of their names.
+/// Looks through folders of folders, in the order of their names. A folder named twice, or within another
+/// that is named too, is found once.
 FoundFolders find_folders(const QStringList& given);
 
 } // namespace evenstroke::storage

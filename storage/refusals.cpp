@@ -41,6 +41,20 @@ TakeCounts& TakeCounts::operator+=(const TakeCounts& other)
     return *this;
 }
 
+TakeCounts FolderReport::rows() const
+{
+    TakeCounts all = values;
+    all += events;
+    all += cards;
+    return all;
+}
+
+bool TakeReport::anything_taken() const
+{
+    return std::any_of(folders.begin(), folders.end(),
+                       [](const FolderReport& folder) { return folder.taken; });
+}
+
 bool TakeReport::anything_refused() const
 {
     return std::any_of(folders.begin(), folders.end(),

@@ -44,14 +44,12 @@ void FolderTaking::remark_columns(const std::string& file, const std::vector<std
 /// Whether the folder is to be left out because of what was refused so far.
 bool FolderTaking::is_refused()
 {
-    const qint64 refused = report_.values.refused + report_.events.refused + report_.cards.refused;
-    if (refused == 0 || options_.keep_good || meter_.stopped())
+    const TakeCounts rows = report_.rows();
+    if (rows.refused == 0 || options_.keep_good || meter_.stopped())
         return false;
-    const qint64 good =
-        report_.values.fresh + report_.values.same + report_.events.fresh + report_.events.same;
-    report_.remarks.push_back("nothing of the folder was taken: " + std::to_string(refused) +
-                              (refused == 1 ? " row" : " rows") + " refused, " + std::to_string(good) +
-                              " good");
+    report_.remarks.push_back("nothing of the folder was taken: " + std::to_string(rows.refused) +
+                              (rows.refused == 1 ? " row" : " rows") + " refused, " +
+                              std::to_string(rows.fresh + rows.same) + " good");
     return true;
 }
 
@@ -106,10 +104,10 @@ Done FolderTaking::take_engine(const EngineFolder& folder)
         return done();
     }
     report_.engine_id = taken.value().saved.engine_id;
-    report_.remarks.insert(report_.remarks.end(), taken.value().remarks.begin(), taken.value().remarks.end());
     BOOST_OUTCOME_TRYV(take_files(folder, *document));
     if (is_refused() || meter_.stopped())
         return done();
+    report_.remarks.insert(report_.remarks.end(), taken.value().remarks.begin(), taken.value().remarks.end());
     vessel_ = document->vessel;
     vessel_.id = taken.value().saved.vessel_id;
     report_.taken = true;
@@ -156,8 +154,11 @@ Done FolderTaking::take_readings(const QString& path, const std::string& shown, 
                      [](const RefusedRow& a, const RefusedRow& b) { return a.line < b.line; });
     report_.values += merge.counts();
     report_.values.refused += refusals.count();
-    if ((refusals.count() > 0 && !options_.keep_good) || meter_.stopped())
+    if ((refusals.count() > 0 && !options_.keep_good) || meter_.stopped()) {
+        for (const ReadReading& reading : read.readings)
+            unwritten_readings_.insert(reading.name);
         return done(); // taken back as a whole, so it need not be written
+    }
     return merge.write(writers_, meter_);
 }
 

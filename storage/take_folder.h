@@ -7,7 +7,10 @@
 #include "storage/take_writers.h"
 #include "storage/value_rows.h"
 
+#include <QFileInfo>
+
 #include <optional>
+#include <set>
 
 namespace evenstroke::storage {
 
@@ -37,6 +40,8 @@ private:
                      const OwnerKeys& owner);
     Done take_cards(const QString& path, const std::string& shown, const Engine& engine,
                     const OwnerKeys& owner);
+    Done take_card(const QFileInfo& file, const std::string& reading, qint64 reading_key,
+                   const Engine& engine, Refusals& refusals);
     bool is_refused();
     Refusals refusals_of(const std::string& shown, const char* file);
     void remark_columns(const std::string& file, const std::vector<std::string>& columns);
@@ -47,6 +52,7 @@ private:
     ProgressMeter& meter_;
     FolderReport& report_;
     Vessel vessel_;
+    std::set<std::string> unwritten_readings_; ///< of a file that is refused: their cards are looked at too
 };
 
 } // namespace evenstroke::storage

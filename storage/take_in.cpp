@@ -5,8 +5,6 @@
 #include "storage/take_folder.h"
 #include "storage/transaction.h"
 
-#include <QFileInfo>
-
 #include <algorithm>
 
 namespace evenstroke::storage {
@@ -14,27 +12,23 @@ namespace {
 
 const std::string not_taken = "nothing was taken in";
 
-Done check_given(const QStringList& folders)
-{
-    for (const QString& folder : folders)
-        if (!QFileInfo(folder).isDir())
-            return Problem{Problem::Kind::not_found,
-                           "There is no folder \"" + from_qt(folder) + "\", so " + not_taken + ".",
-                           "Check the name of the folder."};
-    if (folders.isEmpty())
-        return invalid_input("No folder is named.", "Name the folders to take in.");
-    return done();
-}
-
-FolderReport without_engine(const std::string& folder)
+FolderReport refused_whole(const std::string& folder, std::string reason, std::string expected)
 {
     FolderReport report;
     report.folder = folder;
-    report.refused.push_back(
-        {folder, 0, "", "There is no engine in this folder.",
-         "Name a folder with engine.json and readings.csv, or a folder of such folders."});
-    report.values.refused = 1;
+    report.refused.push_back({folder, 0, "", std::move(reason), std::move(expected)});
     return report;
+}
+
+void report_useless(const FoundFolders& found, std::vector<FolderReport>& folders)
+{
+    for (const std::string& folder : found.not_there)
+        folders.push_back(
+            refused_whole(folder, "There is no folder of this name.", "Check the name of the folder."));
+    for (const std::string& folder : found.without_engine)
+        folders.push_back(
+            refused_whole(folder, "There is no engine in this folder.",
+                          "Name a folder with engine.json and readings.csv, or a folder of such folders."));
 }
 
 /// The ships of the engines that were taken, each once.
@@ -55,7 +49,8 @@ std::vector<Vessel> ships_of(const ShipFolder& folder, const std::vector<Vessel>
 
 Result<TakeReport> take(History& history, const QStringList& folders, const TakeOptions& options)
 {
-    BOOST_OUTCOME_TRYV(check_given(folders));
+    if (folders.isEmpty())
+        return invalid_input("No folder is named.", "Name the folders to take in.");
     FoundFolders found = find_folders(folders);
     TakeReport report;
     report.ignored = std::move(found.ignored);
@@ -83,8 +78,7 @@ Result<TakeReport> take(History& history, const QStringList& folders, const Take
         BOOST_OUTCOME_TRYV(FolderTaking(history, options, writers, meter, ship)
                                .take_ship(folder, ships_of(folder, vessels)));
     }
-    for (const std::string& folder : found.without_engine)
-        report.folders.push_back(without_engine(folder));
+    report_useless(found, report.folders);
     report.cancelled = meter.stopped();
     if (!report.cancelled) {
         BOOST_OUTCOME_TRYV(transaction.commit());

@@ -45,7 +45,8 @@ struct FolderReport
     TakeCounts values, events, cards; ///< where the folder was not taken, `fresh` counts the good rows
     std::vector<RefusedRow> refused;  ///< at most the first 1000 of a file; the counts hold all
     std::vector<std::string> remarks; ///< files ignored, keys kept unread, a former revision
-    bool anything_refused() const { return !taken || values.refused + events.refused + cards.refused > 0; }
+    TakeCounts rows() const;          ///< of all the files; a card is one
+    bool anything_refused() const { return !taken || rows().refused > 0; }
 };
 
 struct TakeReport
@@ -54,11 +55,12 @@ struct TakeReport
     std::vector<std::string> ignored; ///< files that belong to no engine
     bool cancelled = false;
     bool anything_refused() const;
+    bool anything_taken() const; ///< a folder of which something was new or known already
 };
 
 /// Takes engine folders, ships' folders and fleets in. Each engine's folder is all or nothing; a bad one does
-/// not stop the others. Taking the same again changes nothing.
-/// @par Problems storage: the disk refused, then the history is as it was; not_found: no such folder
+/// not stop the others, and neither does one that is not there. Taking the same again changes nothing.
+/// @par Problems storage: the disk refused, then the history is as it was; invalid_input: no folder is named
 Result<TakeReport> take(History& history, const QStringList& folders, const TakeOptions& options = {});
 
 } // namespace evenstroke::storage

@@ -15,19 +15,30 @@
 namespace evenstroke::batch {
 namespace {
 
+QString counts_text(const storage::TakeCounts& counts, const char* what)
+{
+    return QStringLiteral("%1 %2 new, %3 known, %4 left out")
+        .arg(counts.fresh)
+        .arg(QString::fromUtf8(what))
+        .arg(counts.same)
+        .arg(counts.refused);
+}
+
 void print_folder(const storage::FolderReport& folder, Streams& streams)
 {
     const QString name = QString::fromStdString(folder.folder);
     const QString who = QString::fromStdString(
         folder.vessel_name + (folder.engine_name.empty() ? "" : ", " + folder.engine_name));
     streams.out << name << ": ";
-    if (!folder.taken)
-        streams.out << "refused, nothing of it was taken; " << folder.values.fresh + folder.values.same
-                    << " rows were good, " << folder.values.refused << " not";
+    const storage::TakeCounts rows = folder.rows();
+    if (folder.taken)
+        streams.out << who << ": " << counts_text(folder.values, "values") << "; "
+                    << counts_text(folder.events, "events") << "; " << counts_text(folder.cards, "cards");
+    else if (rows.fresh + rows.same + rows.refused == 0) // no row was come to: engine.json, or no engine at all
+        streams.out << "refused, nothing of it was taken";
     else
-        streams.out << who << ": " << folder.values.fresh << " values new, " << folder.values.same << " known, "
-                    << folder.values.refused << " left out; " << folder.events.fresh << " events new, "
-                    << folder.events.same << " known, " << folder.events.refused << " left out";
+        streams.out << "refused, nothing of it was taken; " << rows.fresh + rows.same << " rows were good, "
+                    << rows.refused << " not";
     streams.out << "\n";
     for (const storage::RefusedRow& row : folder.refused)
         streams.err << QString::fromStdString(row.text()) << "\n";
@@ -72,6 +83,11 @@ int run_take(const QCommandLineParser& parser, Streams& streams)
     options.keep_good = parser.isSet(QStringLiteral("keep-good"));
     options.progress = progress_line(streams, QStringLiteral("taking in"));
     const auto report = storage::take(*history.value(), folders, options);
+    const bool in_vain = !report.has_value() || report.value().cancelled || !report.value().anything_taken();
+    if (in_vain && history.value()->made_now()) {
+        storage::History::remove_new(std::move(history.value()));
+        streams.err << "No history was made, as nothing was taken in.\n";
+    }
     if (!report.has_value())
         return refuse(streams, report.error());
     for (const storage::FolderReport& folder : report.value().folders)
@@ -79,7 +95,7 @@ int run_take(const QCommandLineParser& parser, Streams& streams)
     for (const std::string& file : report.value().ignored)
         streams.err << QString::fromStdString(file) << ": not a file of this program, left alone\n";
     if (report.value().cancelled) {
-        streams.err << "Stopped. The history is as it was.\n";
+        streams.err << "Stopped. Nothing was taken in.\n";
         return data_refused;
     }
     if (!report.value().anything_refused())

@@ -285,9 +285,85 @@ TEST_F(TakingIn, SaysWhichFoldersHoldNoEngine)
     const TakeReport report = take_folder(*history, QStringLiteral("nothing"));
     ASSERT_EQ(report.folders.size(), 1U);
     EXPECT_FALSE(report.folders.front().taken);
-    const auto none = take(*history, {path(QStringLiteral("not there"))});
+}
+
+TEST_F(TakingIn, RefusesAFolderThatIsNotThereAndTakesTheOthers)
+{
+    write_engine(QStringLiteral("good"), header + "2029-01,2029-01-12T08:30Z,speed,,95.4,r/min\n");
+    const auto history = memory();
+    const TakeReport report =
+        value_of_result(take(*history, {path(QStringLiteral("not there")), path(QStringLiteral("good"))}));
+    ASSERT_EQ(report.folders.size(), 2U);
+    EXPECT_TRUE(report.anything_refused());
+    EXPECT_TRUE(report.anything_taken());
+    EXPECT_TRUE(report.folders[0].taken);
+    EXPECT_EQ(report.folders[1].refused.front().text(),
+              path(QStringLiteral("not there")).toStdString() +
+                  ": There is no folder of this name. Check the name of the folder.");
+    EXPECT_EQ(report.folders[1].rows().refused, 0) << "a folder is no row";
+    EXPECT_EQ(readings_of(*history).size(), 1U);
+    const auto none = take(*history, {});
     ASSERT_FALSE(none.has_value());
-    EXPECT_EQ(none.error().kind, Problem::Kind::not_found);
+    EXPECT_EQ(none.error().kind, Problem::Kind::invalid_input);
+}
+
+TEST_F(TakingIn, TakesAFolderThatIsNamedTwiceOrTogetherWithTheOneAroundItOnce)
+{
+    write_ship();
+    for (const QStringList& names :
+         {QStringList{QStringLiteral("ship"), QStringLiteral("ship")},
+          QStringList{QStringLiteral("ship/main"), QStringLiteral("ship")},
+          QStringList{QStringLiteral("ship"), QStringLiteral("ship/main"), QStringLiteral("ship/./main")}}) {
+        QStringList folders;
+        for (const QString& name : names)
+            folders << path(name);
+        const auto history = memory();
+        const TakeReport report = value_of_result(take(*history, folders));
+        EXPECT_EQ(report.folders.size(), 3U) << "two engines and the ship's readings";
+        EXPECT_FALSE(report.anything_refused()) << folders.join(QLatin1Char(' ')).toStdString();
+    }
+}
+
+TEST_F(TakingIn, CountsTheGoodAndTheBadOfAllFiles)
+{
+    write_ship();
+    write(QStringLiteral("ship/main/events.csv"),
+          "date,cylinder,kind,note\n2029-01-20,A2,overhaul,\n2029-01-22,,dance,\n");
+    write(QStringLiteral("ship/main/cards/2029-01/A2.csv"), "crank_angle_deg,pressure_bar\n0,x\n");
+    const FolderReport whole = take_folder(*memory(), QStringLiteral("ship")).folders[1];
+    EXPECT_FALSE(whole.taken);
+    EXPECT_EQ(whole.rows().fresh, 15) << "13 values, an event and a card";
+    EXPECT_EQ(whole.rows().refused, 2);
+    EXPECT_TRUE(whole.remarks.back().ends_with("2 rows refused, 15 good")) << whole.remarks.back();
+    const FolderReport kept = take_folder(*memory(), QStringLiteral("ship"), true).folders[1];
+    EXPECT_TRUE(kept.taken);
+    EXPECT_EQ(kept.values.fresh, 13);
+    EXPECT_EQ(kept.events.fresh, 1);
+    EXPECT_EQ(kept.events.refused, 1);
+    EXPECT_EQ(kept.cards.fresh, 1);
+    EXPECT_EQ(kept.cards.refused, 1);
+}
+
+TEST_F(TakingIn, DoesNotBlameTheCardsOfReadingsThatABadRowHeldBack)
+{
+    write_ship();
+    write(QStringLiteral("ship/main/readings.csv"),
+          header + "2029-01,2029-01-12T10:30Z,speed,,95.4,r/min\n2029-01,2029-01-12T10:30Z,moonlight,,1,%\n");
+    const FolderReport report = take_folder(*memory(), QStringLiteral("ship")).folders[1];
+    ASSERT_EQ(report.refused.size(), 1U);
+    EXPECT_EQ(report.cards.fresh, 1);
+    EXPECT_EQ(report.rows().refused, 1);
+}
+
+TEST_F(TakingIn, NamesTheFileOfABadCardOnceWithItsLine)
+{
+    write_ship();
+    write(QStringLiteral("ship/main/cards/2029-01/A2.csv"), "crank_angle_deg,pressure_bar\n0,101\n1,x\n");
+    const FolderReport report = take_folder(*memory(), QStringLiteral("ship")).folders[1];
+    ASSERT_EQ(report.refused.size(), 1U);
+    EXPECT_EQ(report.refused.front().line, 3);
+    EXPECT_NE(report.refused.front().text().find("A2.csv, line 3: The pressure"), std::string::npos)
+        << report.refused.front().text();
 }
 
 TEST_F(TakingIn, TakesUnitsThatMeasureTheSameInAnotherWay)
