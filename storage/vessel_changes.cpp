@@ -14,6 +14,14 @@ namespace {
 
 const std::string not_saved = "the engine was not saved";
 
+std::string joined(const std::vector<std::string>& words)
+{
+    std::string text;
+    for (const std::string& word : words)
+        text += (text.empty() ? "" : ", ") + word;
+    return text;
+}
+
 struct FoundVessel
 {
     qint64 key = 0;
@@ -177,6 +185,29 @@ Done check_cylinders(History& history, const FoundEngine& engine, int cylinders)
     return done();
 }
 
+/// Readings of four strokes mean nothing to a two-stroke, nor those of seven cylinders to six: a document
+/// that says so is of another engine.
+Done check_same_engine(History& history, const FoundEngine& engine, const Engine& given)
+{
+    const auto former = read_engine_document(engine.document, "The engine in the history");
+    if (!former)
+        return done(); // a document that cannot be read is there to be replaced
+    const Engine& known = former.value().engine;
+    if (known.kind == given.kind && known.cylinders == given.cylinders)
+        return done();
+    Query reading(history.database(), "SELECT 1 FROM reading WHERE engine_key = ? LIMIT 1", not_saved);
+    BOOST_OUTCOME_TRYV(reading.run(engine.key));
+    if (!reading.next())
+        return reading.finished();
+    const auto kind = [](const Engine& one) {
+        return std::string(one.two_stroke() ? "two-stroke" : "four-stroke") + " of " +
+               std::to_string(one.cylinders) + " cylinders";
+    };
+    return invalid_input("The history holds readings of " + evenstroke::quoted(engine.name) + " as a " +
+                             kind(known) + ", but engine.json describes a " + kind(given) + ".",
+                         "Give another engine a name of its own, or correct cycle and cylinders.");
+}
+
 Done change_engine(History& history, AuditWriter& audit, const FoundEngine& engine,
                    const EngineDocument& document, const Signature& by)
 {
@@ -266,7 +297,13 @@ Result<TakenDocument> take_document(History& history, const EngineDocument& docu
                                 std::to_string(engine.revision) + " stays in force");
         return taken;
     }
+    BOOST_OUTCOME_TRYV(check_same_engine(history, engine, document.engine));
     BOOST_OUTCOME_TRYV(change_engine(history, audit, engine, document, by));
+    taken.remarks.push_back("engine.json differs from what the history knew of the engine (" +
+                            joined(changed_keys(engine.document, document.text)) +
+                            "); it is kept as revision " + std::to_string(engine.revision + 1) + " of " +
+                            date_text(history.now()) +
+                            ", and all deviations, past ones too, are judged with it");
     taken.saved.revision = engine.revision + 1;
     taken.saved.outcome = SavedEngine::Outcome::changed;
     return taken;

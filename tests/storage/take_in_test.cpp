@@ -366,6 +366,56 @@ TEST_F(TakingIn, NamesTheFileOfABadCardOnceWithItsLine)
         << report.refused.front().text();
 }
 
+TEST_F(TakingIn, SaysThatTheDescriptionOfTheEngineChangedAndWhere)
+{
+    write_engine(QStringLiteral("engine"), header + "2029-01,2029-01-12T08:30Z,speed,,95.4,r/min\n");
+    const auto history = memory();
+    EXPECT_TRUE(take_folder(*history, QStringLiteral("engine")).folders.front().remarks.empty());
+    write(QStringLiteral("engine/engine.json"),
+          engine_json("Quiet Barley", "main engine", R"(, "baseline": [{"load_percent": 50, "speed": 80}])")
+              .replace("\"bore_mm\": 600", "\"bore_mm\": 620"));
+    const FolderReport changed = take_folder(*history, QStringLiteral("engine")).folders.front();
+    EXPECT_TRUE(changed.taken);
+    ASSERT_EQ(changed.remarks.size(), 1U);
+    EXPECT_EQ(
+        changed.remarks.front(),
+        "engine.json differs from what the history knew of the engine (baseline, bore_mm); it is kept as "
+        "revision 2 of 2030-03-17, and all deviations, past ones too, are judged with it");
+    EXPECT_TRUE(take_folder(*history, QStringLiteral("engine")).folders.front().remarks.empty())
+        << "the same again is no change";
+}
+
+TEST_F(TakingIn, RefusesToMakeAnotherEngineOfOneThatHasReadings)
+{
+    write_engine(QStringLiteral("engine"), header + "2029-01,2029-01-12T08:30Z,speed,,95.4,r/min\n");
+    const auto history = memory();
+    take_folder(*history, QStringLiteral("engine"));
+    for (const auto& [before, now, says] :
+         {std::tuple{"two-stroke", "four-stroke", "describes a four-stroke of 6 cylinders"},
+          std::tuple{"\"cylinders\": 6", "\"cylinders\": 7", "describes a two-stroke of 7 cylinders"}}) {
+        const QByteArray former = engine_json();
+        QByteArray other = former;
+        ASSERT_TRUE(other.contains(before));
+        write(QStringLiteral("engine/engine.json"), other.replace(before, now));
+        const FolderReport report = take_folder(*history, QStringLiteral("engine")).folders.front();
+        EXPECT_FALSE(report.taken);
+        ASSERT_EQ(report.refused.size(), 1U);
+        EXPECT_NE(report.refused.front().reason.find(says), std::string::npos)
+            << report.refused.front().reason;
+        EXPECT_NE(report.refused.front().expected.find("a name of its own"), std::string::npos);
+    }
+    EXPECT_EQ(value_of_result(VesselStore(*history).engine(only_engine(*history))).revision, 1);
+}
+
+TEST_F(TakingIn, TakesADescriptionOfAnotherCycleWhereNothingWasReadYet)
+{
+    write(QStringLiteral("engine/engine.json"), engine_json());
+    const auto history = memory();
+    take_folder(*history, QStringLiteral("engine"));
+    write(QStringLiteral("engine/engine.json"), engine_json().replace("two-stroke", "four-stroke"));
+    EXPECT_TRUE(take_folder(*history, QStringLiteral("engine")).folders.front().taken);
+}
+
 TEST_F(TakingIn, TakesUnitsThatMeasureTheSameInAnotherWay)
 {
     write_engine(QStringLiteral("engine"),
