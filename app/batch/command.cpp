@@ -26,17 +26,42 @@ QString usage_line(const Command& command)
     return line;
 }
 
+void list_commands(QTextStream& to, const QString& what)
+{
+    to << what << "\n";
+    for (const Command& command : all_commands())
+        to << "  " << usage_line(command) << "\n      " << command.summary << "\n";
+    to.flush();
+}
+
 int explain_use(Streams& streams, const QString& what)
 {
-    streams.err << what << "\n";
-    for (const Command& command : all_commands())
-        streams.err << "  " << usage_line(command) << "\n      " << command.summary << "\n";
-    streams.err.flush();
+    list_commands(streams.err, what);
     return wrong_use;
+}
+
+/// @return the exit code: help that was asked for is a result
+int explain_command(const Command& command, Streams& streams)
+{
+    streams.out << "evenstroke-batch " << command.name << ": " << command.summary << "\n  " << usage_line(command)
+                << "\n";
+    for (const Option& option : command.options) {
+        QString left = QStringLiteral("--") + utf8(option.name);
+        if (option.value_name)
+            left += QStringLiteral(" ") + utf8(option.value_name);
+        streams.out << "    " << left.leftJustified(24) << " " << utf8(option.help)
+                    << (option.needed ? " (needed)" : "") << "\n";
+    }
+    streams.out << "Exit code: 0 done; 1 the data were refused, nothing changed; 2 wrong use; 3 the file or disk "
+                   "failed.\n";
+    streams.out.flush();
+    return done;
 }
 
 int run_one(const Command& command, const QStringList& arguments, Streams& streams)
 {
+    if (arguments.contains(QStringLiteral("--help")) || arguments.contains(QStringLiteral("-h")))
+        return explain_command(command, streams);
     QCommandLineParser parser;
     parser.setOptionsAfterPositionalArgumentsMode(QCommandLineParser::ParseAsOptions);
     for (const Option& option : command.options) {
@@ -92,7 +117,8 @@ int run_command_line(const QStringList& arguments, Streams& streams)
         return done;
     }
     if (name == QStringLiteral("--help") || name == QStringLiteral("help")) {
-        explain_use(streams, QStringLiteral("Performance readings of ship's diesel engines, without a window."));
+        list_commands(streams.out,
+                      QStringLiteral("Performance readings of ship's diesel engines, without a window."));
         return done;
     }
     const auto& commands = all_commands();

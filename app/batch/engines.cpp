@@ -17,6 +17,18 @@ Result<std::unique_ptr<storage::History>> open_history(const QCommandLineParser&
     return opened;
 }
 
+namespace {
+
+std::string not_held(const std::string& vessel, const std::string& engine)
+{
+    if (engine.empty())
+        return "The history holds no engine of a vessel \"" + vessel + "\".";
+    return "The history holds no engine \"" + engine + "\"" +
+           (vessel.empty() ? "." : " of a vessel \"" + vessel + "\".");
+}
+
+} // namespace
+
 Result<std::vector<storage::EngineEntry>> chosen_engines(storage::History& history, const QCommandLineParser& parser)
 {
     const storage::VesselStore store(history);
@@ -24,6 +36,9 @@ Result<std::vector<storage::EngineEntry>> chosen_engines(storage::History& histo
     if (!listed.has_value())
         return listed.error();
     const QString vessel = parser.value(QStringLiteral("vessel")), engine = parser.value(QStringLiteral("engine"));
+    if (listed.value().empty() && !(vessel.isEmpty() && engine.isEmpty()))
+        return Problem{Problem::Kind::not_found, "The history holds no engine yet.",
+                       "Take the files of an engine in first."};
     std::vector<storage::EngineEntry> chosen;
     std::string known;
     for (const storage::EngineEntry& entry : listed.value()) {
@@ -35,8 +50,7 @@ Result<std::vector<storage::EngineEntry>> chosen_engines(storage::History& histo
     }
     if (chosen.empty() && !(vessel.isEmpty() && engine.isEmpty()))
         return Problem{Problem::Kind::not_found,
-                       "The history holds no engine \"" + engine.toStdString() + "\"" +
-                           (vessel.isEmpty() ? "" : " of \"" + vessel.toStdString() + "\"") + ".",
+                       not_held(vessel.toStdString(), engine.toStdString()),
                        "Choose one of: " + known + "."};
     return chosen;
 }

@@ -91,8 +91,10 @@ void derive_reading(TableOutput& table, const Judgement& judgement, const Readin
                    computed(row.uncertainty)});
 }
 
+/// @param has_found  asked at the end; false: nothing was meant, and no table is written
 int with_table(const QCommandLineParser& parser, Streams& streams, std::vector<std::string> header,
-               const std::function<void(TableOutput&, const Judgement&)>& rows)
+               const std::function<void(TableOutput&, const Judgement&)>& rows,
+               const std::function<bool()>& has_found = [] { return true; })
 {
     const auto format = TableOutput::read_format(parser, streams);
     if (!format)
@@ -108,7 +110,8 @@ int with_table(const QCommandLineParser& parser, Streams& streams, std::vector<s
                                              [&](const Judgement& judgement) { rows(table, judgement); });
     if (!finished.has_value())
         return refuse(streams, finished.error());
-    table.finish();
+    if (has_found())
+        table.finish();
     return done;
 }
 
@@ -133,7 +136,8 @@ int run_evaluate(const QCommandLineParser& parser, Streams& streams)
                     if (derived)
                         derive_reading(table, judgement, reading, baseline);
                 }
-        });
+        },
+        [&] { return found; });
     if (code == done && !found) {
         streams.err << "No chosen engine has a reading \"" << wanted << "\". Leave --reading out to see all.\n";
         return data_refused;

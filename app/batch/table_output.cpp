@@ -54,16 +54,22 @@ std::optional<TableOutput::Format> TableOutput::read_format(const QCommandLinePa
 TableOutput::TableOutput(Streams& streams, Format format, std::vector<std::string> header)
     : streams_(streams), format_(format), header_(std::move(header))
 {
-    if (format_ == Format::json) {
-        streams_.out << "[";
+}
+
+void TableOutput::begin()
+{
+    if (begun_)
         return;
-    }
-    std::vector<Cell> cells(header_.begin(), header_.end());
-    csv_row(cells);
+    begun_ = true;
+    if (format_ == Format::json)
+        streams_.out << "[";
+    else
+        csv_row({header_.begin(), header_.end()});
 }
 
 void TableOutput::row(const std::vector<Cell>& cells)
 {
+    begin();
     if (format_ == Format::csv)
         csv_row(cells);
     else
@@ -73,6 +79,7 @@ void TableOutput::row(const std::vector<Cell>& cells)
 
 void TableOutput::finish()
 {
+    begin();
     if (format_ == Format::json)
         streams_.out << (first_ ? "]\n" : "\n]\n");
     streams_.out.flush();

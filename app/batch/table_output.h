@@ -10,7 +10,8 @@
 
 namespace evenstroke::batch {
 
-/// Writes rows as RFC 4180 text or as a JSON array of objects, one row at a time.
+/// Writes rows as RFC 4180 text or as a JSON array of objects, one row at a time. Nothing is written before the
+/// first row or the end, so that what is refused leaves nothing behind.
 class TableOutput
 {
 public:
@@ -27,13 +28,14 @@ public:
     static Cell number(std::optional<double> value) { return value ? Cell(*value) : Cell(); }
 
 private:
+    void begin();
     void csv_row(const std::vector<Cell>& cells);
     void json_row(const std::vector<Cell>& cells);
 
     Streams& streams_;
     Format format_;
     std::vector<std::string> header_;
-    bool first_ = true;
+    bool begun_ = false, first_ = true;
 };
 
 /// Every digit that the number has, and no more: read back it is the same number.

@@ -4,7 +4,9 @@
 
 #include <gtest/gtest.h>
 
+#include <QDir>
 #include <QFile>
+#include <QFileInfo>
 #include <QJsonArray>
 #include <QJsonDocument>
 #include <QJsonObject>
@@ -214,4 +216,150 @@ TEST(BatchTake, ABadFolderIsRefusedWholeAndKeepGoodTakesTheRest)
     EXPECT_EQ(run({"flags", "--history", history, "--engine", "auxiliary engine 1"}).code, 0);
     EXPECT_EQ(run({"take", folder.filePath("sample"), "--history", history, "--keep-good"}).code, 0);
     EXPECT_EQ(run({"flags", "--history", history, "--engine", "main engine"}).code, 0);
+}
+
+namespace {
+
+QString engine_json(const QString& further = {})
+{
+    return QStringLiteral(R"({"vessel": "Quiet Barley", "engine": "main engine", "cycle": "two-stroke", "cylinders": 2,
+        "bore_mm": 600, "stroke_mm": 2400, "rod_length_mm": 2460, "rated_power_kw": 9000, "rated_speed_rpm": 105%1})")
+        .arg(further);
+}
+
+/// A folder with one small engine, and a history that is not there yet.
+class TakeByCommand : public testing::Test
+{
+protected:
+    void SetUp() override
+    {
+        write("engine/engine.json", engine_json());
+        write("engine/readings.csv", "reading,taken_at,quantity,cylinder,value,unit\n"
+                                     "2029-01,2029-01-12T08:30Z,speed,,95.4,r/min\n"
+                                     "2029-01,2029-01-12T08:30Z,maximum_pressure,1,140.5,bar\n");
+    }
+    QString path(const char* name) const { return folder_.filePath(QString::fromUtf8(name)); }
+    void write(const char* name, const QString& content) const
+    {
+        ASSERT_TRUE(QDir().mkpath(QFileInfo(path(name)).path()));
+        QFile file(path(name));
+        ASSERT_TRUE(file.open(QIODevice::WriteOnly));
+        file.write(content.toUtf8());
+    }
+    Outcome take(const QStringList& folders) const
+    {
+        return run(QStringList{"take"} + folders + QStringList{"--history", path("h.evenstroke")});
+    }
+
+private:
+    QTemporaryDir folder_;
+};
+
+} // namespace
+
+TEST_F(TakeByCommand, AFolderThatIsNotThereDoesNotStopTheOthers)
+{
+    const Outcome taken = take({path("engine"), path("nowhere")});
+    EXPECT_EQ(taken.code, 1);
+    EXPECT_TRUE(taken.err.contains(path("nowhere") + ": There is no folder of this name.")) << taken.err.toStdString();
+    EXPECT_TRUE(taken.out.contains("2 values new")) << taken.out.toStdString();
+    EXPECT_EQ(run({"evaluate", "--history", path("h.evenstroke")}).rows().size(), 2);
+}
+
+TEST_F(TakeByCommand, LeavesNoEmptyHistoryBehind)
+{
+    EXPECT_EQ(take({path("nowhere")}).code, 1);
+    EXPECT_FALSE(QFile::exists(path("h.evenstroke")));
+    write("engine/readings.csv", "reading,taken_at,quantity,cylinder,value,unit\n2029-01,2029-01-12T08:30Z,moonlight,,1,%\n");
+    const Outcome refused = take({path("engine")});
+    EXPECT_EQ(refused.code, 1);
+    EXPECT_TRUE(refused.err.contains("No history was made"));
+    EXPECT_FALSE(QFile::exists(path("h.evenstroke")));
+    write("engine/readings.csv", "reading,taken_at,quantity,cylinder,value,unit\n2029-01,2029-01-12T08:30Z,speed,,95,r/min\n");
+    EXPECT_EQ(take({path("engine")}).code, 0);
+    EXPECT_EQ(take({path("nowhere")}).code, 1);
+    EXPECT_TRUE(QFile::exists(path("h.evenstroke"))) << "was there before";
+}
+
+TEST_F(TakeByCommand, OfOneFolderNamedTwiceIsTakenOnce)
+{
+    const Outcome taken = take({path("engine"), path("engine")});
+    EXPECT_EQ(taken.code, 0) << taken.err.toStdString();
+    EXPECT_EQ(taken.out.count("values new"), 1);
+}
+
+TEST_F(TakeByCommand, CountsValuesEventsAndCards)
+{
+    write("engine/events.csv", "date,cylinder,kind,note\n2029-01-20,1,overhaul,\n2029-01-21,,dance,\n");
+    write("engine/cards/2029-01/1.csv", "crank_angle_deg,pressure_bar\n-1,100\n0,101\n");
+    const Outcome refused = take({path("engine")});
+    EXPECT_EQ(refused.code, 1);
+    EXPECT_TRUE(refused.out.contains("4 rows were good, 1 not")) << refused.out.toStdString();
+    EXPECT_TRUE(refused.err.contains("events.csv, line 3")) << refused.err.toStdString();
+    const Outcome kept = take({path("engine"), "--keep-good"});
+    EXPECT_EQ(kept.code, 0);
+    EXPECT_TRUE(kept.out.contains("2 values new, 0 known, 0 left out; 1 events new, 0 known, 1 left out; 1 cards new, 0 "
+                                  "known, 0 left out"))
+        << kept.out.toStdString();
+    write("engine/engine.json", "{");
+    EXPECT_FALSE(take({path("engine")}).out.contains("rows")) << "none was come to";
+}
+
+TEST_F(TakeByCommand, SaysWhatOfTheEnginesDescriptionChanged)
+{
+    ASSERT_EQ(take({path("engine")}).code, 0);
+    write("engine/engine.json", engine_json(R"(, "baseline": [{"load_percent": 50, "exhaust_temp": 300}])"));
+    const Outcome changed = take({path("engine")});
+    EXPECT_EQ(changed.code, 0);
+    EXPECT_TRUE(changed.err.contains("knew of the engine (baseline); it is kept as revision 2 of "))
+        << changed.err.toStdString();
+    EXPECT_TRUE(changed.err.contains("Write exhaust_temperature if that is meant")) << changed.err.toStdString();
+}
+
+TEST_F(TakeByCommand, TheChosenEngineIsMissedInWords)
+{
+    ASSERT_EQ(take({path("engine")}).code, 0);
+    const QString history = path("h.evenstroke");
+    EXPECT_TRUE(run({"flags", "--history", history, "--vessel", "nope"})
+                    .err.startsWith("The history holds no engine of a vessel \"nope\". Choose one of: Quiet Barley, main "
+                                    "engine."));
+    EXPECT_TRUE(run({"flags", "--history", history, "--engine", "nope"})
+                    .err.startsWith("The history holds no engine \"nope\". Choose one of"));
+}
+
+TEST_F(TakeByCommand, AReadingThatIsNotThereLeavesStandardOutputEmpty)
+{
+    ASSERT_EQ(take({path("engine")}).code, 0);
+    for (const char* format : {"csv", "json"}) {
+        const Outcome outcome =
+            run({"evaluate", "--history", path("h.evenstroke"), "--reading", "nix", "--format", format});
+        EXPECT_EQ(outcome.code, 1);
+        EXPECT_TRUE(outcome.out.isEmpty()) << outcome.out.toStdString();
+        EXPECT_TRUE(outcome.err.contains("\"nix\""));
+    }
+    EXPECT_EQ(run({"flags", "--history", path("h.evenstroke"), "--format", "json"}).out, "[]\n");
+}
+
+TEST_F(TakeByCommand, AWindForceIsShownAsTypedAndNotConvertedAlongAStraightLine)
+{
+    write("engine/readings.csv", "reading,taken_at,quantity,cylinder,value,unit\n2029-01,2029-01-12T08:30Z,wind_speed,,4,Beaufort\n"
+                                 "2029-01,2029-01-12T08:30Z,fuel_index,1,62,mm\n");
+    ASSERT_EQ(take({path("engine")}).code, 0);
+    const Outcome shown = run({"evaluate", "--history", path("h.evenstroke")});
+    EXPECT_TRUE(shown.out.contains(",wind_speed,,4,Beaufort,,,,,\n")) << shown.out.toStdString();
+    EXPECT_TRUE(shown.out.contains(",fuel_index,1,62,mm,,,,,\n")) << shown.out.toStdString();
+}
+
+TEST(BatchUse, HelpOfACommandIsAResult)
+{
+    for (const char* command : {"take", "evaluate", "flags", "doubts", "report", "verify", "backup", "sample"}) {
+        const Outcome help = run({command, "--help"});
+        EXPECT_EQ(help.code, 0) << command;
+        EXPECT_TRUE(help.out.contains(QString("evenstroke-batch %1").arg(command)));
+        EXPECT_TRUE(help.err.isEmpty()) << help.err.toStdString();
+    }
+    EXPECT_TRUE(run({"take", "--help"}).out.contains("--keep-good"));
+    const Outcome all = run({"--help"});
+    EXPECT_EQ(all.code, 0);
+    EXPECT_TRUE(all.out.contains("evaluate"));
 }
