@@ -41,7 +41,9 @@ Correction linear(const Engine& engine, const Quantity& q, double own, const Con
     const LinearFactor factor = linear_factor(coefficients->per_inlet_air, coefficients->per_coolant,
                                               conditions.inlet_air.value_or(reference_air) - reference_air,
                                               conditions.cooler_coolant.value_or(reference_coolant) - reference_coolant);
-    const double zero = q.correction_form == CorrectionForm::temperature ? zero_celsius
+    const double zero = q.correction_form == CorrectionForm::temperature ||
+                                q.correction_form == CorrectionForm::coolant_difference
+                            ? zero_celsius
                         : q.kind == PressureKind::gauge
                             ? unit(q.unit).from_si(conditions.barometer_or_one_bar() * 1e5)
                             : 0.0;
@@ -121,9 +123,11 @@ std::optional<double> deviation_uncertainty(const Engine& engine, const Quantity
                      square(correction.per_coolant * of.coolant) + square(load_effect));
 }
 
+/// What the engine does, and not a condition that it is corrected for.
 bool is_performance(const Quantity& q)
 {
-    return q.group == "cylinder" || q.group == "turbocharger" || q.group == "cooler";
+    return (q.group == "cylinder" || q.group == "turbocharger" || q.group == "cooler") &&
+           q.name != "cooler_coolant_inlet_temperature";
 }
 
 /// Apart is formed from deviations; from corrected values where the engine has no baseline for the quantity.
@@ -153,11 +157,11 @@ Correction find_correction(const Engine& engine, const Quantity& q, double own, 
     switch (q.correction_form) {
     case CorrectionForm::pressure:
     case CorrectionForm::temperature:
+    case CorrectionForm::coolant_difference: // no value of its own: only with the engine's own coefficients
         if (q.name == "maximum_pressure" && engine.maximum_pressure_controlled)
             return {};
         return linear(engine, q, own, conditions);
     case CorrectionForm::turbocharger_speed: return similarity(engine, own, conditions);
-    case CorrectionForm::coolant_difference:
     case CorrectionForm::none: break;
     }
     return {};

@@ -77,6 +77,35 @@ TEST(Deviations, SayWhichConditionIsMissingInsteadOfGuessing)
     EXPECT_DOUBLE_EQ(*value.expected, 150.0);
 }
 
+// No correction of the scavenge temperature is given for all engines; it follows the coolant. A value as read
+// is not called corrected, and is not held against a baseline at another coolant temperature.
+TEST(Deviations, ScavengeTemperatureIsCorrectedOnlyWithTheEnginesOwnCoefficients)
+{
+    Engine engine = example_engine();
+    for (BaselinePoint& point : engine.baseline)
+        point.values["scavenge_temperature"] = 38.0;
+    Reading reading = reading_at("25", "30");
+    reading.values.push_back(typed_value("scavenge_temperature", Place::engine(), "44"));
+    const JudgedValue plain = judged(engine, reading, "scavenge_temperature", Place::engine());
+    EXPECT_FALSE(plain.corrected);
+    EXPECT_FALSE(plain.deviation);
+    EXPECT_DOUBLE_EQ(*plain.expected, 38.0);
+    EXPECT_EQ(plain.applied, Applied::not_correctable);
+    engine.correction["scavenge_temperature"] = {0.0, -3.0e-3, "invented"};
+    const JudgedValue corrected = judged(engine, reading, "scavenge_temperature", Place::engine());
+    // (44 + 273.15)(1 - 0.003 * 5) - 273.15, by hand
+    EXPECT_NEAR(*corrected.corrected, 39.24275, 1e-9);
+    EXPECT_NEAR(*corrected.deviation, 1.24275, 1e-9);
+}
+
+TEST(Deviations, AConditionIsNotCorrectedForItself)
+{
+    const JudgedValue coolant = judged(example_engine(), reading_at("25", "30"), "cooler_coolant_inlet_temperature", Place::engine());
+    EXPECT_FALSE(coolant.corrected);
+    EXPECT_FALSE(coolant.deviation);
+    EXPECT_FALSE(judged(example_engine(), reading_at("25", "30"), "inlet_air_temperature", Place::engine()).corrected);
+}
+
 TEST(Deviations, AnImpossibleConditionIsNotUsed)
 {
     const Engine engine = example_engine();
