@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/board/board.h"
 
+#include "app/desk/flag_words.h"
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
 
@@ -261,7 +262,7 @@ void add_words(Board& board, const Judgement& judgement)
     board.worst_place = worst.subject;
     board.level = worst.level_now;
     board.headline = to_qstring(worst.sentence);
-    board.level_words = tr_("%1 since %2").arg(level_text(worst.level_now), day_text(time_of(judgement, worst.reading)));
+    board.level_words = standing_words(judgement, worst);
     QStringList second;
     second.append(to_qstring(worst.chance_sentence));
     if (!worst.pattern_words.empty())

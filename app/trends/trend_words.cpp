@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/trends/trend_words.h"
 
+#include "app/desk/flag_words.h"
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
 #include "core/explanation/cautions.h"
@@ -57,7 +58,7 @@ void add_flags(TrendPicture& picture, const Judgement& judgement)
         shown.standing = has_mark(flag.level_now);
         const QString when = day_text(time_of(judgement, flag.reading));
         shown.words = shown.standing
-                          ? tr_("%1 since %2: %3").arg(level_text(flag.level_now), when, to_qstring(flag.sentence))
+                          ? tr_("%1: %2").arg(standing_words(judgement, flag), to_qstring(flag.sentence))
                           : tr_("%1 on %2, closed: %3").arg(level_text(flag.severity), when, to_qstring(flag.sentence));
         picture.flags.push_back(std::move(shown));
     }
@@ -144,8 +145,7 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     picture.level = flag->level_now;
     picture.headline = to_qstring(flag->sentence);
     picture.second_line = to_qstring(flag->chance_sentence);
-    picture.level_words =
-        tr_("%1 since %2").arg(level_text(flag->level_now), day_text(time_of(judgement, flag->reading)));
+    picture.level_words = standing_words(judgement, *flag);
     if (flag->time_to_limit) {
         picture.limit_figure = months_text(*flag->time_to_limit);
         picture.limit_words = tr_("%1, nine times in ten").arg(to_qstring(flag->time_to_limit->limit_text));

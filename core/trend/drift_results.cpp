@@ -147,14 +147,17 @@ TimePoint time_of(const Judgement& judgement, std::size_t reading)
     return reading < readings.size() ? readings[reading].taken_at.utc : TimePoint{};
 }
 
-Level standing_level(const drift::Flag& from)
+/// The level at the last reading, and where it rose to it.
+void set_standing_level(Flag& flag, const drift::Flag& from)
 {
     if (!from.active)
-        return Level::quiet;
-    Level level = level_of(from.level);
+        return;
+    flag.level_now = flag.severity;
     for (const drift::Escalation& escalation : from.escalations)
-        level = std::max(level, level_of(escalation.level));
-    return level;
+        if (level_of(escalation.level) > flag.level_now) {
+            flag.level_now = level_of(escalation.level);
+            flag.raised_at = escalation.reading;
+        }
 }
 
 /// Writes one view of a drift flag, as it started or as it stands, into the flag and words it.
@@ -182,10 +185,11 @@ Flag translate_flag(const Judgement& judgement, const drift::Input& input, const
     flag.reading = from.reading;
     flag.subject = from.cylinder ? Place::cylinder(static_cast<int>(*from.cylinder) + 1) : Place::engine();
     flag.severity = level_of(from.level);
-    flag.level_now = standing_level(from);
+    set_standing_level(flag, from);
     flag.threshold = from.cylinder ? output.cylinder_threshold : output.engine_threshold;
     fill_from_view(flag, judgement, from, from.at_start);
     flag.first_sentence = flag.sentence;
+    flag.first_chance_sentence = flag.chance_sentence;
     flag.first_quantity = flag.quantity;
     fill_from_view(flag, judgement, from, from.now);
     for (std::size_t i = from.now.onset; i <= from.last_reading; ++i)

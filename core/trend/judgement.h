@@ -122,6 +122,7 @@ struct Flag
     QuantityId quantity = 0;        ///< the one that moved most
     Level severity = Level::watch;  ///< when it started: watch, act or ask
     Level level_now = Level::quiet; ///< at the last reading
+    std::optional<std::size_t> raised_at; ///< reading at which a standing flag rose to `level_now`; none: it did not rise
     std::string pattern;            ///< catalogue name of the signature, empty for a single quantity
     std::string pattern_words;      ///< "blow-by (rings or exhaust valve)"
     bool ramp = false;
@@ -133,6 +134,7 @@ struct Flag
     std::string first_sentence;     ///< the same as it stood when the flag started: later readings never change it
     QuantityId first_quantity = 0;  ///< the one that had moved most then
     std::string chance_sentence;    ///< how likely by chance
+    std::string first_chance_sentence; ///< the same as it stood when the flag started
     std::string next_check;         ///< what to look at
     std::vector<std::string> cautions; ///< catalogue names, most urgent first
     std::optional<TimeToLimit> time_to_limit;

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/board/board_painting.h"
 #include "app/board/board_view.h"
+#include "app/desk/number_text.h"
 #include "tests/app/invented_judgement.h"
 #include "tests/app/pictures.h"
 
@@ -47,6 +48,20 @@ TEST(StripBoard, SaysTheWorstFlagFirstAndWhatToCheck)
     EXPECT_TRUE(board.second_line.contains(QStringLiteral("engine-years")));
     EXPECT_TRUE(board.second_line.contains(QStringLiteral("Next:")));
     EXPECT_EQ(board.worst_place, Place::cylinder(4));
+}
+
+TEST(StripBoard, AFlagThatRoseIsNotDatedBackToItsBeginning)
+{
+    Judgement judgement = *invented::judgement();
+    Flag& flag = judgement.flags.front();
+    ASSERT_EQ(judgement.standing_flags().size(), 1u);
+    const auto day_of = [&](std::size_t i) { return day_text(judgement.record->readings[i].taken_at.utc); };
+    flag.severity = Level::watch;
+    flag.level_now = Level::act;
+    EXPECT_EQ(make_board(judgement, TimeRange::all).level_words, QStringLiteral("act now (began %1 as watch)").arg(day_of(flag.reading)));
+    flag.raised_at = flag.reading + 1;
+    EXPECT_EQ(make_board(judgement, TimeRange::all).level_words,
+              QStringLiteral("act since %1 (began %2 as watch)").arg(day_of(flag.reading + 1), day_of(flag.reading)));
 }
 
 TEST(StripBoard, AQuietEngineHasNoMarkAndNoLevelWord)

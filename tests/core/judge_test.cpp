@@ -66,6 +66,24 @@ TEST(Judge, ALeakIsFlaggedOnItsCylinderWithASentenceAndACaution)
     EXPECT_GE(trend->level, Level::watch);
 }
 
+TEST(Judge, AFlagThatRoseNamesTheReadingAtWhichItDid)
+{
+    EngineRecord record = example_record(46);
+    for (std::size_t i = 26; i < record.readings.size(); ++i) // a thermometer that reads 14 °C more: watch, then act
+        move_value(record.readings[i], "exhaust_temperature", Place::cylinder(4), 14.0);
+    const Judgement whole = judged(record);
+    ASSERT_FALSE(whole.flags.empty());
+    const Flag& flag = whole.flags.front();
+    ASSERT_EQ(flag.severity, Level::watch);
+    ASSERT_EQ(flag.level_now, Level::act);
+    ASSERT_TRUE(flag.raised_at.has_value());
+    EXPECT_GT(*flag.raised_at, flag.reading);
+    record.readings.resize(*flag.raised_at);
+    const Judgement before = judged(record);
+    EXPECT_EQ(before.flags.front().level_now, Level::watch) << "one reading earlier it had not risen";
+    EXPECT_FALSE(before.flags.front().raised_at.has_value());
+}
+
 TEST(Judge, CuttingOffTheLastYearChangesNoEarlierRow)
 {
     EngineRecord record = example_record(48);
@@ -81,6 +99,7 @@ TEST(Judge, CuttingOffTheLastYearChangesNoEarlierRow)
         EXPECT_EQ(cut.flags[i].subject, whole.flags[i].subject);
         EXPECT_EQ(cut.flags[i].severity, whole.flags[i].severity);
         EXPECT_EQ(cut.flags[i].first_sentence, whole.flags[i].first_sentence);
+        EXPECT_EQ(cut.flags[i].first_chance_sentence, whole.flags[i].first_chance_sentence);
         EXPECT_EQ(cut.flags[i].first_quantity, whole.flags[i].first_quantity);
     }
 }

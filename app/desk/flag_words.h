@@ -1,0 +1,14 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/trend/judgement.h"
+
+#include <QString>
+
+namespace evenstroke {
+
+/// Since when a standing flag has the level it has: "watch since 8 Sep 2030", "act since 3 Nov 2030 (began
+/// 8 Sep 2030 as watch)". A flag that rose is never dated back to its beginning.
+QString standing_words(const Judgement& judgement, const Flag& flag);
+
+} // namespace evenstroke
