@@ -158,7 +158,9 @@ int run_flags(const QCommandLineParser& parser, Streams& streams)
                                              ? "cylinder " + record.engine.cylinder_name(flag.subject.number)
                                              : std::string("engine"),
                                          quantity(flag.first_quantity).name, level_word(flag.severity),
-                                         flag.first_sentence});
+                                         flag.first_chance_sentence.empty()
+                                             ? flag.first_sentence
+                                             : flag.first_sentence + " " + flag.first_chance_sentence});
                       });
 }
 

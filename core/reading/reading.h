@@ -26,7 +26,7 @@ Result<StampedTime> parse_time(std::string_view text);
 Result<StampedTime> parse_date(std::string_view text);
 std::string utc_text(TimePoint time);   ///< "2026-03-14T06:30Z"
 std::string date_text(TimePoint time);  ///< "2026-03-14"
-std::string short_date(TimePoint time); ///< "14 Mar 2026", as sentences and screens write it
+std::string short_date(TimePoint time); ///< "14 Mar 2026", as the sentences of a screen write it
 
 /// The quick lines before and after the walk, and the reading itself.
 enum class Phase : unsigned char { before, reading, after };

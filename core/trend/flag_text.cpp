@@ -65,7 +65,7 @@ std::string drift_sentence(const Flag& flag, const Engine& engine, std::size_t m
     if (!cylinder && quantity(flag.moved.front().quantity).per == Place::Kind::cylinder)
         text += " of all cylinders";
     text += change_text(flag.moved.front(), flag.ramp, true);
-    text += flag.ramp ? " for " + months_text(flag.months) : " than before " + short_date(flag.since);
+    text += flag.ramp ? " for " + months_text(flag.months) : " than before " + date_text(flag.since);
     text += cylinder ? " against the other cylinders"
             : in_baseline(engine, quantity(flag.moved.front().quantity).name) ? " against the engine's own baseline"
                                                                               : " from the engine's own level";
@@ -81,7 +81,7 @@ std::string drift_sentence(const Flag& flag, const Engine& engine, std::size_t m
 
 std::string question_sentence(const Flag& flag, const Engine& engine)
 {
-    return "Was work done on " + lower_first(subject_text(engine, flag.subject)) + " about " + short_date(flag.since) +
+    return "Was work done on " + lower_first(subject_text(engine, flag.subject)) + " about " + date_text(flag.since) +
            "? Its readings took a new level at once, as they do after an overhaul, and the events hold none.";
 }
 

@@ -89,6 +89,8 @@ TEST_F(SampleVesselEndToEnd, FlagsFindExactlyTheTwoDevelopingFaults)
             ++found;
             EXPECT_GT(c[2].toStdString().substr(0, 10), fault.onset); // never before it began
             EXPECT_NE(c[5], "ask");
+            EXPECT_TRUE(c[6].contains(QStringLiteral("by chance"))) << c[6].toStdString();
+            EXPECT_TRUE(c[6].contains(QStringLiteral("engine-years"))) << c[6].toStdString();
         }
         EXPECT_EQ(found, 1) << fault.engine << " cylinder " << fault.cylinder;
     }
