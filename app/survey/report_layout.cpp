@@ -13,8 +13,8 @@ namespace {
 using namespace report;
 
 constexpr double plot_height = 150.0, small_plot_height = 132.0;
-constexpr double strip_label = 108.0; ///< width of the names of quantities beside the strips
-constexpr double strip_row = 42.0;
+constexpr double signature_line = 22.0; ///< room for a pen
+constexpr double free_enough = 0.45;  ///< of a page's height: then a section goes on there instead of on a new page
 
 QString words_of(const std::string& text) { return QString::fromUtf8(text.data(), static_cast<qsizetype>(text.size())); }
 
@@ -27,26 +27,38 @@ public:
     void set()
     {
         const bool landscape = wants_landscape();
-        if (section_.new_page || setter_.landscape() != landscape)
+        const bool fresh = section_.new_page && !goes_on_here();
+        if (fresh || setter_.landscape() != landscape)
             setter_.new_page(landscape);
         else if (!setter_.at_page_top())
             setter_.move_down(8.0);
-        setter_.need(line_height(ReportFont::heading) + 60.0);
-        setter_.text(Typesetter::left, 0.0, words_of(section_.title), section_.new_page || setter_.at_page_top() ? ReportFont::title : ReportFont::heading);
+        setter_.need(line_height(ReportFont::heading) + std::max(60.0, signatures_height()));
+        setter_.text(Typesetter::left, 0.0, words_of(section_.title), fresh || setter_.at_page_top() ? ReportFont::title : ReportFont::heading);
         setter_.move_down((setter_.at_page_top() ? line_height(ReportFont::title) : line_height(ReportFont::heading)) + 6.0);
         for (at_ = 0; at_ < section_.blocks.size(); ++at_)
             std::visit([&](const auto& block) { put(block); }, section_.blocks[at_]);
     }
 
 private:
+    bool goes_on_here() const
+    {
+        const double whole = sheet_size(setter_.landscape()).height() - Typesetter::top - Typesetter::bottom;
+        return setter_.at_page_top() || setter_.room() > free_enough * whole;
+    }
+
+    /// Wide tables and many strips need it; words and narrow tables stay on a page that lies already.
     bool wants_landscape() const
     {
-        return std::any_of(section_.blocks.begin(), section_.blocks.end(), [&](const Block& block) {
+        const bool needs = std::any_of(section_.blocks.begin(), section_.blocks.end(), [&](const Block& block) {
             if (const Strips* strips = std::get_if<Strips>(&block))
                 return strips->columns.size() > 8;
             const Table* table = std::get_if<Table>(&block);
             return table && natural_width(*table, setter_.measure()) > Typesetter::width_of(false);
         });
+        const bool plain = std::none_of(section_.blocks.begin(), section_.blocks.end(), [](const Block& block) {
+            return std::holds_alternative<Plot>(block) || std::holds_alternative<Strips>(block) || std::holds_alternative<SignOff>(block);
+        });
+        return needs || (plain && setter_.landscape() && !setter_.at_page_top() && goes_on_here());
     }
 
     void put(const Paragraph& paragraph)
@@ -130,7 +142,7 @@ private:
 
     void put(const Table& table) { set_table(table, setter_); }
 
-    /// Plots over load stand two beside each other.
+    /// Plots over load stand beside each other, two on a standing page and three on a lying one.
     void put(const Plot& plot)
     {
         if (plot.across == Plot::Across::time) {
@@ -139,74 +151,68 @@ private:
             setter_.move_down(plot_height + 10.0);
             return;
         }
-        const Plot* second = at_ + 1 < section_.blocks.size() ? std::get_if<Plot>(&section_.blocks[at_ + 1]) : nullptr;
-        const double wide = (std::min(setter_.width(), 560.0) - 16.0) / 2.0;
+        constexpr double between = 16.0;
+        const int beside = setter_.landscape() ? 3 : 2;
+        const double wide = (setter_.width() - between * (beside - 1)) / beside;
         setter_.need(small_plot_height);
-        setter_.item(PlotItem{QRectF(Typesetter::left, setter_.y(), wide, small_plot_height), &plot});
-        if (second && second->across == Plot::Across::load) {
-            setter_.item(PlotItem{QRectF(Typesetter::left + wide + 16.0, setter_.y(), wide, small_plot_height), second});
+        for (int column = 0; column < beside; ++column) {
+            const Plot* next = at_ < section_.blocks.size() ? std::get_if<Plot>(&section_.blocks[at_]) : nullptr;
+            if (!next || next->across != Plot::Across::load)
+                break;
+            setter_.item(PlotItem{QRectF(Typesetter::left + (wide + between) * column, setter_.y(), wide, small_plot_height), next});
             ++at_;
         }
+        --at_; // the caller goes on to the block after
         setter_.move_down(small_plot_height + 8.0);
     }
 
-    void put(const Strips& strips)
+    void put(const Strips& strips) { set_strips(strips, setter_); }
+
+    static double signature_height(const SignOff& sign)
     {
-        const double wide = (setter_.width() - strip_label) / static_cast<double>(std::max<std::size_t>(1, strips.columns.size()));
-        strip_head(strips, wide);
-        for (const Strips::Row& row : strips.rows) {
-            if (strip_row > setter_.room()) {
-                setter_.new_page(setter_.landscape());
-                strip_head(strips, wide);
-            }
-            strip_line(strips, row, wide);
-        }
-        setter_.move_down(6.0);
+        return line_height(ReportFont::heading) + line_height(ReportFont::body) + signature_line * static_cast<double>(sign.fields.size()) + 16.0;
     }
 
-    void strip_head(const Strips& strips, double wide)
+    /// All signatures of a section stand on one page: two beside each other, then the next two or one.
+    double signatures_height() const
     {
-        for (std::size_t c = 0; c < strips.columns.size(); ++c)
-            setter_.text_right(Typesetter::left + strip_label + wide * static_cast<double>(c + 1) - 6.0, 0.0,
-                               words_of(strips.columns[c]), ReportFont::bold);
-        setter_.text(Typesetter::left, 0.0, QStringLiteral("Cylinder"), ReportFont::bold);
-        setter_.move_down(line_height(ReportFont::bold) + 1.0);
-    }
-
-    void strip_line(const Strips& strips, const Strips::Row& row, double wide)
-    {
-        setter_.rule(Typesetter::left, Typesetter::left + setter_.width(), 0.0, 0.3, false);
-        double down = 3.0;
-        for (const QString& line : setter_.measure().wrapped(words_of(row.title), strip_label - 8.0, ReportFont::body)) {
-            setter_.text(Typesetter::left, down, line, ReportFont::body);
-            down += line_height(ReportFont::body);
-        }
-        setter_.text(Typesetter::left, down, words_of(row.unit), ReportFont::body, true);
-        for (std::size_t c = 0; c < row.cells.size(); ++c) {
-            const double x = Typesetter::left + strip_label + wide * static_cast<double>(c);
-            setter_.item(StripItem{QRectF(x, setter_.y() + 4.0, wide - 6.0, 22.0), &strips, &row.cells[c]});
-            setter_.text_right(x + wide - 6.0, 28.0, words_of(row.cells[c].newest), row.cells[c].level >= Level::note ? ReportFont::bold : ReportFont::body);
-            const QString remark = words_of(row.cells[c].remark);
-            const double room = wide - 8.0 - setter_.measure().width(words_of(row.cells[c].newest), ReportFont::body);
-            setter_.text(x, 28.0, setter_.measure().width(remark, ReportFont::body) <= room ? remark : remark.section(QLatin1Char(' '), 1), ReportFont::body, true);
-        }
-        setter_.move_down(strip_row);
+        std::vector<double> heights;
+        for (const Block& block : section_.blocks)
+            if (const SignOff* sign = std::get_if<SignOff>(&block))
+                heights.push_back(signature_height(*sign));
+        double height = 0.0;
+        for (std::size_t i = 0; i < heights.size(); i += 2)
+            height += i + 1 < heights.size() ? std::max(heights[i], heights[i + 1]) : heights[i];
+        return height;
     }
 
     void put(const SignOff& sign)
     {
-        setter_.need(40.0 + 24.0 * static_cast<double>(sign.fields.size()));
-        setter_.paragraph(words_of(sign.role), ReportFont::heading, Typesetter::left, setter_.width());
-        setter_.move_down(2.0);
-        setter_.paragraph(words_of(sign.statement), ReportFont::body, Typesetter::left, setter_.width());
-        for (const auto& field : sign.fields) {
-            setter_.move_down(12.0);
-            setter_.text(Typesetter::left, 0.0, words_of(field.name), ReportFont::body, true);
-            setter_.text(Typesetter::left + 90.0, 0.0, words_of(field.value), ReportFont::body);
-            setter_.rule(Typesetter::left + 88.0, Typesetter::left + 360.0, line_height(ReportFont::body) + 1.0, 0.5, true);
-            setter_.move_down(line_height(ReportFont::body));
+        const double half = (std::min(setter_.width(), 520.0) - 24.0) / 2.0;
+        const SignOff* second = at_ + 1 < section_.blocks.size() ? std::get_if<SignOff>(&section_.blocks[at_ + 1]) : nullptr;
+        const double height = std::max(signature_height(sign), second ? signature_height(*second) : 0.0);
+        setter_.need(height);
+        sign_at(sign, Typesetter::left, second ? half : 2.0 * half + 24.0);
+        if (second) {
+            sign_at(*second, Typesetter::left + half + 24.0, half);
+            ++at_;
         }
-        setter_.move_down(16.0);
+        setter_.move_down(height);
+    }
+
+    void sign_at(const SignOff& sign, double x, double wide)
+    {
+        constexpr double name_width = 64.0;
+        setter_.text(x, 0.0, words_of(sign.role), ReportFont::heading);
+        double down = line_height(ReportFont::heading);
+        setter_.text(x, down, words_of(sign.statement), ReportFont::body);
+        down += line_height(ReportFont::body);
+        for (const auto& field : sign.fields) {
+            down += signature_line;
+            setter_.text(x, down - line_height(ReportFont::body), words_of(field.name), ReportFont::body, true);
+            setter_.text(x + name_width, down - line_height(ReportFont::body), words_of(field.value), ReportFont::body);
+            setter_.item(RuleItem{x + name_width - 2.0, setter_.y() + down + 1.0, x + wide, setter_.y() + down + 1.0, 0.5, true});
+        }
     }
 
     const Section& section_;

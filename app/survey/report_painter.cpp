@@ -48,8 +48,6 @@ void draw_strip(QPainter& painter, const StripItem& item)
     painter.setPen(Qt::NoPen);
     if (!line.isEmpty())
         painter.drawEllipse(line.back(), 1.3, 1.3);
-    if (has_mark(cell.level))
-        draw_mark(painter, QRectF(item.area.right() - 9.0, item.area.top() - 2.0, 9.0, 9.0), cell.level, ink());
 }
 
 struct Drawing

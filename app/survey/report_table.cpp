@@ -84,7 +84,7 @@ public:
 
     void draw(bool first_part)
     {
-        setter_.need(head_height(true) + 3.0 * line_height(ReportFont::body));
+        setter_.need(head_height(true) + std::max(3.0 * line_height(ReportFont::body), first_group_height() + 2.0));
         head(!first_part);
         for (std::size_t r = 0; r < table_.rows.size();) {
             std::size_t end = r + 1;
@@ -152,6 +152,25 @@ private:
         }
     }
 
+    QStringList cell_lines(std::size_t row, std::size_t i) const
+    {
+        const QString& words = set_.cells[row][columns_[i]];
+        return remark(i) ? setter_.measure().wrapped(words, widths_[i], ReportFont::body) : QStringList{words};
+    }
+
+    /// So that a head never stands alone at the foot of a page.
+    double first_group_height() const
+    {
+        double height = 0.0;
+        for (std::size_t r = 0; r < table_.rows.size() && (r == 0 || !table_.rows[r].starts_group); ++r) {
+            qsizetype most = 1;
+            for (std::size_t i = 0; i < columns_.size(); ++i)
+                most = std::max(most, cell_lines(r, i).size());
+            height += static_cast<double>(most) * line_height(ReportFont::body);
+        }
+        return height;
+    }
+
     /// Rows from `begin` to `end` stay on one page if they fit on any.
     void group(std::size_t begin, std::size_t end)
     {
@@ -162,8 +181,7 @@ private:
             auto& row = wrapped.emplace_back();
             qsizetype most = 1;
             for (std::size_t i = 0; i < columns_.size(); ++i) {
-                const QString& words = set_.cells[r][columns_[i]];
-                row.push_back(remark(i) ? setter_.measure().wrapped(words, widths_[i], ReportFont::body) : QStringList{words});
+                row.push_back(cell_lines(r, i));
                 most = std::max(most, row.back().size());
             }
             heights.push_back(static_cast<double>(most) * line_height(ReportFont::body));

@@ -44,5 +44,6 @@ private:
 /// Width a table needs without cutting any column; the widths it has are worked out from it.
 double natural_width(const report::Table& table, const TextMeasure& measure);
 void set_table(const report::Table& table, Typesetter& setter);
+void set_strips(const report::Strips& strips, Typesetter& setter);
 
 } // namespace evenstroke

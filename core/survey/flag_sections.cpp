@@ -9,9 +9,12 @@
 namespace evenstroke::report {
 namespace {
 
-std::string state_now(const Flag& flag)
+std::string state_now(const Judgement& judgement, const Flag& flag)
 {
-    return flag.level_now >= Level::note ? level_word(flag.level_now) : "no longer standing";
+    if (flag.level_now < Level::note)
+        return "no longer standing";
+    return level_words(flag.level_now)
+           + (flag.raised_at ? " since " + date_text(judgement.record->readings[*flag.raised_at].taken_at.utc) : "");
 }
 
 TimePoint time_of(const Context& context, std::size_t reading)
@@ -27,8 +30,9 @@ Table overview(const Context& context)
                 {}, 1, "Began: the reading whose evidence first passed the threshold. Change since: the estimated start of the change."};
     int number = 0;
     for (const Flag* flag : context.flags)
-        table.rows.push_back({{std::to_string(++number), date_text(time_of(context, flag->reading)), level_word(flag->severity),
-                               flag_subject(context.judgement, *flag), date_text(flag->since), state_now(*flag)}, true});
+        table.rows.push_back({{std::to_string(++number), date_text(time_of(context, flag->reading)), level_words(flag->severity),
+                               flag_subject(context.judgement, *flag), date_text(flag->since),
+                               state_now(context.judgement, *flag)}, true});
     return table;
 }
 
@@ -92,22 +96,11 @@ std::optional<Plot> flag_plot(const Context& context, const Flag& flag)
     return plot.lines.front().points.empty() ? std::nullopt : std::optional<Plot>(std::move(plot));
 }
 
-/// Events at the subject after the flag began: what was done about it.
-std::string work_since(const Context& context, const Flag& flag)
-{
-    std::string words;
-    for (const Event* event : context.events)
-        if (event->date.utc >= time_of(context, flag.reading) && event->place == flag.subject)
-            words += (words.empty() ? "" : "; ") + date_text(event->date.utc) + ", " + in_sentence(event_title(*event))
-                     + (event->note.empty() ? "" : " (" + event->note + ")");
-    return words.empty() ? "none recorded" : words;
-}
-
 void add_flag(const Context& context, const Flag& flag, int number, Section& section)
 {
     auto& blocks = section.blocks;
-    blocks.push_back(Heading{std::to_string(number) + ". " + flag_subject(context.judgement, flag) + ": " + level_word(flag.severity)
-                             + " since " + date_text(time_of(context, flag.reading)) + ", now " + state_now(flag)});
+    blocks.push_back(Heading{std::to_string(number) + ". " + flag_subject(context.judgement, flag) + ": "
+                             + standing_words(context.judgement, flag)});
     blocks.push_back(Paragraph{flag.sentence, {}});
     if (!flag.chance_sentence.empty())
         blocks.push_back(Paragraph{flag.chance_sentence, {}});
@@ -152,9 +145,24 @@ void add_cautions(const Context& context, Section& section)
 
 } // namespace
 
+std::string work_since(const Context& context, const Flag& flag)
+{
+    std::string words;
+    for (const Event* event : context.events) {
+        if (event->date.utc < time_of(context, flag.reading) || event->place != flag.subject)
+            continue;
+        words += (words.empty() ? "" : "; ") + date_text(event->date.utc) + ", " + in_sentence(event_title(*event));
+        if (!event->note.empty())
+            words += " (" + event->note + ")";
+        if (!event->done_by.empty())
+            words += ", by " + event->done_by;
+    }
+    return words.empty() ? "none recorded" : words;
+}
+
 Section flags_section(const Context& context)
 {
-    Section section{"Flags and questions", true, {}};
+    Section section{"Flags and questions", !context.flags.empty(), {}};
     if (context.flags.empty()) {
         section.blocks.push_back(Paragraph{"No flag and no question began or stood in this period.", {}});
         return section;
@@ -162,7 +170,9 @@ Section flags_section(const Context& context)
     section.blocks.push_back(overview(context));
     section.blocks.push_back(Paragraph{
         "A flag names what moved and what the movement fits. It is no finding about a part: other causes may fit as well, and "
-        "only opening or measuring can tell.", Paragraph::Style::muted});
+        "only opening or measuring can tell. No flag can be dismissed by hand: it ends when the readings come back to their "
+        "level or when recorded work begins a new comparison. What was checked without work is not recorded here, save as a "
+        "note among the events.", Paragraph::Style::muted});
     int number = 0;
     for (const Flag* flag : context.flags)
         add_flag(context, *flag, ++number, section);

@@ -31,7 +31,7 @@ std::size_t count_of(const Context& context, Place::Kind kind)
     return static_cast<std::size_t>(most);
 }
 
-std::string count_words(std::size_t count) { return count == 0 ? "not told apart" : std::to_string(count); }
+std::string count_words(std::size_t count) { return count == 0 ? "one, or not told apart" : std::to_string(count); }
 
 FieldList title_fields(const Context& context, const std::string& number)
 {
@@ -72,49 +72,6 @@ FieldList particulars(const Context& context)
         fields.fields.push_back({"Compression ratio", rounded_text(*engine.compression_ratio, 2)});
     if (engine.mechanical_efficiency)
         fields.fields.push_back({"Mechanical efficiency", rounded_text(*engine.mechanical_efficiency, 3)});
-    return fields;
-}
-
-std::string month_name(const MonthState& month)
-{
-    const std::string number = std::to_string(month.month);
-    return std::to_string(month.year) + "-" + (number.size() < 2 ? "0" + number : number);
-}
-
-std::string months_in(const ReportSummary& summary, MonthState::State state)
-{
-    std::string names;
-    for (const MonthState& month : summary.months)
-        if (month.state == state)
-            names += (names.empty() ? "" : ", ") + month_name(month);
-    return names.empty() ? "none" : names;
-}
-
-std::string running_hours(const Context& context)
-{
-    const auto hours = find_quantity("engine_running_hours");
-    for (auto row = context.cells.rbegin(); hours && row != context.cells.rend(); ++row)
-        if (const auto found = row->find({*hours, Place::engine()}); found != row->end() && found->second.value)
-            return found->second.value->typed + " h";
-    return "not read";
-}
-
-FieldList summary_fields(const Context& context)
-{
-    const ReportSummary& summary = context.summary;
-    FieldList fields;
-    fields.short_ones = true;
-    fields.fields = {{"Readings asked for", std::to_string(summary.asked) + ", one a month"},
-                     {"Readings taken", std::to_string(summary.taken)},
-                     {"Usable for comparison", std::to_string(summary.usable)},
-                     {"Months without a reading", months_in(summary, MonthState::State::missing)},
-                     {"Months with none usable", months_in(summary, MonthState::State::unsteady)},
-                     {"Values doubted", std::to_string(summary.doubts)},
-                     {"Running hours, last reading", running_hours(context)},
-                     {"Events recorded", std::to_string(context.events.size())},
-                     {"Flags, questions begun", std::to_string(summary.began)},
-                     {"No longer standing", std::to_string(summary.closed.size())},
-                     {"State, last reading", level_word(context.judgement.level)}};
     return fields;
 }
 
@@ -169,7 +126,7 @@ Row item_row(const Context& context, const Place& place, const Item& item, bool 
     if (event && event->kind != item.kinds.front())
         opened += ", " + in_sentence(event_title(*event));
     return {{starts_group ? capitalized(place_words(context.engine, place)) : "", item.title, opened, hours_since(context, event),
-             starts_group ? level_word(context.judgement.level_of(place)) : "", ""},
+             starts_group ? level_words(context.judgement.level_of(place)) : "", ""},
             starts_group};
 }
 
@@ -182,24 +139,6 @@ Section title_section(const Context& context)
                                                               : context.details.number;
     section.blocks = {title_fields(context, number), Paragraph{standing_sentence(), Paragraph::Style::boxed},
                       Heading{"Engine particulars"}, particulars(context)};
-    return section;
-}
-
-Section summary_section(const Context& context)
-{
-    Section section{"Summary", false, {summary_fields(context), Heading{"Flags standing at the end of the period"}}};
-    if (context.summary.standing.empty())
-        section.blocks.push_back(Paragraph{"None. No quantity has left its own level beyond the thresholds of the method.", {}});
-    for (const std::string& line : context.summary.standing)
-        section.blocks.push_back(Paragraph{capitalized(line), {}});
-    if (!context.summary.closed.empty())
-        section.blocks.push_back(Heading{"Begun in the period and no longer standing"});
-    for (const std::string& line : context.summary.closed)
-        section.blocks.push_back(Paragraph{capitalized(line), {}});
-    if (!context.readings.empty() && context.readings.front() == 0 && !context.summary.months.empty())
-        section.blocks.push_back(Paragraph{"The history holds no reading before "
-                                               + date_text(context.record.readings.front().taken_at.utc) + ".",
-                                           Paragraph::Style::muted});
     return section;
 }
 

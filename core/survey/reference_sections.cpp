@@ -144,6 +144,21 @@ std::string limit_text(const std::optional<double>& limit, const std::string& na
     return limit ? rounded_text(*limit, decimals_of_name(name)) : "\u2013";
 }
 
+/// What the audit log says of the engine's settings between the days of the period.
+void add_changes(const Context& context, Section& section)
+{
+    Table table{"Changes of limits, coefficients, baseline, instruments or particulars recorded in the period",
+                {{"Date", Column::Kind::words}, {"Change", Column::Kind::remark}, {"By", Column::Kind::words}, {"Why", Column::Kind::remark}}, {}, 1, {}};
+    for (const EngineChangeLine& change : context.details.engine_changes)
+        if (context.contains(change.when))
+            table.rows.push_back({{date_text(change.when), change.what, change.who, change.reason}, true});
+    if (table.rows.empty())
+        section.blocks.push_back(Paragraph{"The audit log records no change of this engine's limits, coefficients, baseline or "
+                                           "instruments in the period.", {}});
+    else
+        section.blocks.push_back(std::move(table));
+}
+
 } // namespace
 
 Section reference_section(const Context& context)
@@ -153,6 +168,7 @@ Section reference_section(const Context& context)
     fields.fields = {{"Inlet air", rounded_text(in_celsius(reference.inlet_air), 1) + " °C"},
                      {"Charge-air coolant", rounded_text(in_celsius(reference.cooler_coolant), 1) + " °C"},
                      {"Barometer", rounded_text(in_bar(reference.barometer) * 1000.0, 0) + " mbar"},
+                     {"Relative humidity", "not used: no correction of this method depends on it"},
                      {"Source", source_words(reference.source)},
                      {"Mechanical efficiency", context.engine.mechanical_efficiency
                                                    ? rounded_text(*context.engine.mechanical_efficiency, 3) : "not given"},
@@ -205,6 +221,7 @@ Section limits_section(const Context& context)
         section.blocks.push_back(Paragraph{"No absolute limits are entered for this engine.", {}});
     else
         section.blocks.push_back(std::move(table));
+    add_changes(context, section);
     section.blocks.push_back(Paragraph{"Flags for drift follow the evidence of the readings, not fixed limits; their "
                                        "thresholds stand under \u201cMethod\u201d.", Paragraph::Style::muted});
     return section;
@@ -214,7 +231,7 @@ Section instruments_section(const Context& context)
 {
     Section section{"Instruments", false, {}};
     Table table{"As entered for this engine",
-                {{"Quantity", Column::Kind::words}, {"Serial number", Column::Kind::words}, {"Calibrated", Column::Kind::words},
+                {{"Quantity", Column::Kind::remark}, {"Serial number", Column::Kind::words}, {"Calibrated", Column::Kind::words},
                  {"Uncertainty (95 %)", Column::Kind::number}, {"Source", Column::Kind::remark}},
                 {}, 1, "Uncertainty is a half-width that holds the true value 95 times of 100."};
     for (const Instrument& instrument : context.engine.instruments) {

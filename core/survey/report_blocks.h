@@ -124,7 +124,7 @@ struct Strips
         PlotLine line;
         std::optional<Plot::Band> band;
         Level level = Level::no_data;
-        std::string newest, remark; ///< "+0.3"; "watch", "learning 4 of 8"
+        std::string newest, remark; ///< "+0.3"; "◐ watch", "learning 4 of 8"
     };
     struct Row
     {

@@ -28,8 +28,9 @@ Context::Context(const Judgement& whole, const ReportPeriod& wanted_period, cons
         if (contains(event.date.utc))
             events.push_back(&event);
     for (const Flag& flag : judgement.flags) {
-        const bool began_here = flag.reading < record.readings.size() && contains(record.readings[flag.reading].taken_at.utc);
-        if (began_here || flag.level_now >= Level::note)
+        const auto in_period = [&](std::size_t i) { return i < record.readings.size() && contains(record.readings[i].taken_at.utc); };
+        const bool stood_here = !flag.carrying.empty() && in_period(flag.carrying.back());
+        if (in_period(flag.reading) || stood_here || flag.level_now >= Level::note)
             flags.push_back(&flag);
     }
 }
@@ -148,12 +149,35 @@ std::string flag_subject(const Judgement& judgement, const Flag& flag)
     return capitalized(place_words(judgement.record->engine, flag.subject)) + ", " + in_sentence(quantity(flag.quantity).title);
 }
 
+std::string level_words(Level level)
+{
+    switch (level) {
+    case Level::note: return "\u25cb " + level_word(level);
+    case Level::ask: return "\u25c7 " + level_word(level);
+    case Level::watch: return "\u25d0 " + level_word(level);
+    case Level::act: return "\u25a0 " + level_word(level);
+    case Level::no_data:
+    case Level::learning:
+    case Level::quiet: break;
+    }
+    return level_word(level);
+}
+
+std::string standing_words(const Judgement& judgement, const Flag& flag)
+{
+    const auto day = [&](std::size_t reading) { return date_text(judgement.record->readings[reading].taken_at.utc); };
+    if (flag.level_now == flag.severity)
+        return level_words(flag.severity) + " since " + day(flag.reading);
+    const std::string began = "began " + day(flag.reading) + " as " + level_word(flag.severity);
+    if (flag.level_now < Level::note)
+        return began + ", no longer standing";
+    const std::string now = level_words(flag.level_now);
+    return (flag.raised_at ? now + " since " + day(*flag.raised_at) : now + " now") + " (" + began + ")";
+}
+
 std::string flag_line(const Judgement& judgement, const Flag& flag)
 {
-    const TimePoint start = judgement.record->readings[flag.reading].taken_at.utc;
-    const bool stands = flag.level_now >= Level::note;
-    return level_word(stands ? flag.level_now : flag.severity) + " since " + date_text(start)
-           + (stands ? ": " : ", no longer standing: ") + flag.sentence;
+    return standing_words(judgement, flag) + ": " + flag.sentence;
 }
 
 } // namespace evenstroke::report

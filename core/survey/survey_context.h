@@ -33,7 +33,7 @@ struct Context
     std::vector<std::size_t> readings;                ///< indices of those in the period
     std::vector<std::map<CellKey, ValueCell>> cells;  ///< one a reading of the period
     std::vector<const Event*> events;                 ///< of the period
-    std::vector<const Flag*> flags;                   ///< that began in the period or stand at its end
+    std::vector<const Flag*> flags;                   ///< that began, stood or ended in the period
 
     bool contains(TimePoint time) const;
     /// Readings whose values are printed: all, or the last twelve. Indices into `readings`.
@@ -50,6 +50,8 @@ std::string unit_words(UnitId unit, PressureKind kind);
 std::string unit_of(const Quantity& quantity);
 /// Of deviation and apart: a difference has no kind of pressure.
 std::string deviation_unit(const Quantity& quantity);
+/// Events at the flag's subject since it began, in one line: what was done about it; "none recorded".
+std::string work_since(const Context& context, const Flag& flag);
 /// "2.5 months"
 std::string months_words(double months);
 /// "76 %"; a dash where the load is not known.
@@ -62,7 +64,11 @@ std::string event_title(const Event& event);
 bool usable(const ReadingJudgement& reading);
 /// "steady", "unsteady", "steady, but the values scatter more than usual"
 std::string state_words(const ReadingJudgement& reading);
-/// A line that says what a flag is about: "watch since 2030-11-12: cylinder 4, compression pressure: …"
+/// The level's mark and its word, "◐ watch"; what is quiet has the word alone.
+std::string level_words(Level level);
+/// "◐ watch since 2030-11-12", "■ act since 2031-02-14 (began 2030-11-12 as watch)", "began … as watch, no longer standing"
+std::string standing_words(const Judgement& judgement, const Flag& flag);
+/// The same with the flag's sentence behind it.
 std::string flag_line(const Judgement& judgement, const Flag& flag);
 /// "Cylinder 4, compression pressure"
 std::string flag_subject(const Judgement& judgement, const Flag& flag);
@@ -75,11 +81,13 @@ Section summary_section(const Context&);
 Section items_section(const Context&);
 Section strips_section(const Context&);
 Section cylinder_values_section(const Context&);
+Section words_section(const Context&);
 Section engine_values_section(const Context&);
 Section reference_section(const Context&);
 Section baseline_section(const Context&);
 Section limits_section(const Context&);
 Section trends_section(const Context&);
+Section diagrams_section(const Context&);
 Section flags_section(const Context&);
 Section events_section(const Context&);
 Section gaps_section(const Context&);

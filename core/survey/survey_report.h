@@ -31,6 +31,20 @@ struct CorrectionLine
     std::string who, what, old_value, new_value, reason;
 };
 
+/// An indicator diagram that the history keeps with a reading.
+struct DiagramLine
+{
+    std::string reading_id;
+    int cylinder = 0;
+};
+
+/// A change to the engine's particulars, limits, coefficients, baseline or instruments, as the audit keeps it.
+struct EngineChangeLine
+{
+    TimePoint when{};
+    std::string who, what, reason;
+};
+
 /// What the report needs beside the judgement.
 struct ReportDetails
 {
@@ -44,6 +58,8 @@ struct ReportDetails
     std::string audit_hash;     ///< of the last line of the audit log
     std::optional<std::size_t> revisions;
     std::vector<CorrectionLine> corrections;
+    std::vector<DiagramLine> diagrams;
+    std::vector<EngineChangeLine> engine_changes;
     std::string chief_engineer, chief_licence, superintendent; ///< empty: left blank for the pen
 };
 

@@ -159,7 +159,7 @@ Strips::Cell strip_cell(const Context& context, const Trend& trend)
     if (trend.level == Level::learning)
         cell.remark = "learning " + std::to_string(trend.learned) + " of " + std::to_string(trend.needed);
     else if (trend.level >= Level::note)
-        cell.remark = level_word(trend.level);
+        cell.remark = level_words(trend.level);
     return cell;
 }
 
@@ -189,7 +189,8 @@ Section strips_section(const Context& context)
     if (strips.rows.empty())
         return section;
     section.blocks.push_back(Paragraph{"Each strip shows one quantity of one cylinder over the period, apart from the other "
-                                       "cylinders; grey is its usual range, the number is the newest value.", Paragraph::Style::muted});
+                                       "cylinders; grey is its usual range, the number is the newest value. A level that is not quiet "
+                                       "stands beside or below it; \u201clearning 4 of 8\u201d: so many of the usable readings that a flag needs.", Paragraph::Style::muted});
     section.blocks.push_back(std::move(strips));
     return section;
 }

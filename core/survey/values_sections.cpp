@@ -305,7 +305,13 @@ Section engine_values_section(const Context& context)
                  + (unsteady ? " \u25cb = not usable for comparison." : "");
     if (!table.rows.empty())
         section.blocks.push_back(std::move(table));
-    Table words = words_table(context, readings);
+    return section;
+}
+
+Section words_section(const Context& context)
+{
+    Section section{"Words, choices and what was not read", false, {}};
+    Table words = words_table(context, context.printed_readings());
     if (!words.rows.empty())
         section.blocks.push_back(std::move(words));
     for (Paragraph& paragraph : never_read(context))

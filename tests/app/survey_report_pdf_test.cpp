@@ -187,6 +187,58 @@ TEST_F(SurveyPdf, NothingStandsOutsideThePage)
     }
 }
 
+/// Texts of a page that cover each other: same height, and one begins before the other ends.
+QStringList covered_texts(const ReportPage& page)
+{
+    const TextMeasure measure;
+    std::vector<const TextItem*> texts;
+    for (const PageItem& item : page.items)
+        if (const TextItem* text = std::get_if<TextItem>(&item))
+            texts.push_back(text);
+    QStringList covered;
+    for (std::size_t i = 0; i < texts.size(); ++i)
+        for (std::size_t j = i + 1; j < texts.size(); ++j) {
+            const TextItem &a = *texts[i], &b = *texts[j];
+            const double a_end = a.x + measure.width(a.text, a.font), b_end = b.x + measure.width(b.text, b.font);
+            // Six points: two lines of nine-point type stand at least eleven apart.
+            if (std::abs(a.baseline - b.baseline) < 6.0 && a.x < b_end - 0.5 && b.x < a_end - 0.5)
+                covered.append(a.text + QStringLiteral(" | ") + b.text);
+        }
+    return covered;
+}
+
+TEST_F(SurveyPdf, NoTextCoversAnother)
+{
+    for (const int cylinders : {1, 6, 8, 12, 20}) {
+        Judgement judgement = long_judgement(cylinders, 14);
+        const Level levels[] = {Level::learning, Level::note, Level::ask, Level::watch, Level::act, Level::quiet};
+        for (std::size_t i = 0; i < judgement.trends.size(); ++i) {
+            judgement.trends[i].level = levels[i % 6];
+            judgement.trends[i].learned = 4;
+        }
+        const ReportLayout layout = lay_out(std::make_shared<const SurveyReport>(report_of(judgement, 14)));
+        for (const ReportPage& page : layout.pages)
+            for (const QString& texts : covered_texts(page))
+                ADD_FAILURE() << cylinders << " cylinders: " << texts.toStdString();
+    }
+}
+
+TEST_F(SurveyPdf, AllSignaturesStandOnOnePage)
+{
+    for (int months = 6; months < 20; ++months) {
+        const ReportLayout layout = lay_out(std::make_shared<const SurveyReport>(report_of(long_judgement(6, months), months)));
+        const auto page_of = [&](const char* words) {
+            for (std::size_t i = layout.pages.size(); i-- > 0;)
+                for (const PageItem& item : layout.pages[i].items)
+                    if (const TextItem* text = std::get_if<TextItem>(&item); text && text->text == QLatin1String(words))
+                        return i;
+            return std::size_t{9999};
+        };
+        EXPECT_EQ(page_of("Signatures"), layout.pages.size() - 1) << months;
+        EXPECT_EQ(page_of("Chief engineer"), page_of("Surveyor")) << months;
+    }
+}
+
 TEST_F(SurveyPdf, HeadsOfTablesRepeatOnEachPage)
 {
     const ReportLayout layout = lay_out(std::make_shared<const SurveyReport>(report_of(long_judgement(6, 60), 60)));

@@ -133,11 +133,91 @@ TEST(SurveyReportContents, StandsInTheOrderOfASurvey)
     std::vector<std::string> titles;
     for (const Section& section : report.sections)
         titles.push_back(section.title);
-    ASSERT_GE(titles.size(), 16u);
-    EXPECT_EQ(titles[1], "Summary");
-    for (const char* title : {"Survey items", "glance", "Flags", "Trends", "Overhauls", "Missing", "Reference", "Baseline",
-                              "Limits", "Instruments", "Method", "Integrity", "Signatures", "Values of the cylinders", "Values of the engine"})
-        EXPECT_NE(find_section(report, title), nullptr) << title;
+    const std::vector<std::string> wanted{"Report of engine performance readings", "Summary", "Survey items concerned", "All cylinders at a glance",
+                                          "Values of the cylinders", "Words, choices and what was not read", "Values of the engine, its turbochargers and coolers, and the ship",
+                                          "Reference conditions and corrections", "Baseline", "Limits in force", "Trends", "Indicator diagrams",
+                                          "Flags and questions", "Overhauls, adjustments and other events",
+                                          "Missing and unsteady readings, doubts and corrections", "Instruments",
+                                          "Method, false alarms, units and rounding", "Integrity of the data", "Signatures"};
+    EXPECT_EQ(titles, wanted);
+}
+
+TEST(SurveyReportContents, AFlagThatRoseIsNotDatedBackToItsBeginning)
+{
+    Judgement judgement = make_judgement();
+    Flag& flag = judgement.flags.front();
+    const auto day_of_reading = [&](std::size_t i) { return date_text(judgement.record->readings[i].taken_at.utc); };
+    const std::string began = day_of_reading(flag.reading), later = day_of_reading(flag.reading + 2);
+    EXPECT_TRUE(contains(report_as_text(make_survey_report(judgement, year_to_march(), make_details())), "\u25d0 watch since " + began + ": "));
+    flag.level_now = Level::act;
+    std::string text = report_as_text(make_survey_report(judgement, year_to_march(), make_details()));
+    EXPECT_TRUE(contains(text, "\u25a0 act now (began " + began + " as watch): Cylinder 4")) << "the day of the rise is not known";
+    flag.raised_at = flag.reading + 2;
+    text = report_as_text(make_survey_report(judgement, year_to_march(), make_details()));
+    EXPECT_TRUE(contains(text, "\u25a0 act since " + later + " (began " + began + " as watch): Cylinder 4"));
+    EXPECT_TRUE(contains(text, "Raised in level:\t" + later + ", cylinder 4, compression pressure"));
+    EXPECT_FALSE(contains(text, "act since " + began));
+    flag.level_now = Level::quiet;
+    text = report_as_text(make_survey_report(judgement, year_to_march(), make_details()));
+    EXPECT_TRUE(contains(text, "began " + began + " as watch, no longer standing"));
+}
+
+TEST(SurveyReportContents, SummaryNamesWhatChangedAndWhichActionsAreOpen)
+{
+    Judgement judgement = make_judgement();
+    const auto state = [&] {
+        const SurveyReport report = make_survey_report(judgement, year_to_march(), make_details());
+        const Table* actions = find_table(find_section(report, "Summary"), "What the flags ask for");
+        return actions && actions->rows.size() == 1 ? actions->rows[0].cells : std::vector<std::string>(5);
+    };
+    EXPECT_EQ(state()[2], "Compression with the indicator, scavenge-port inspection.");
+    EXPECT_EQ(state()[3], "none recorded");
+    EXPECT_EQ(state()[4], "open");
+    const std::string text = report_as_text(make_survey_report(judgement, year_to_march(), make_details()));
+    EXPECT_TRUE(contains(text, "Work and other events:\t2030-05-20, overhaul (cylinder 2); 2030-11-02, "));
+    EXPECT_TRUE(contains(text, "The day of the last report is not recorded here"));
+    EXPECT_TRUE(contains(text, "Actions agreed elsewhere, and who is to do them, are not recorded here."));
+    judgement.flags.front().level_now = Level::quiet;
+    EXPECT_EQ(state()[4], "closed");
+}
+
+TEST(SurveyReportContents, IndicatorDiagramsAreListedOrSaidToBeNone)
+{
+    const Judgement judgement = make_judgement();
+    ReportDetails details = make_details();
+    EXPECT_TRUE(contains(report_as_text(make_survey_report(judgement, year_to_march(), details)), "None in this period: the history holds no indicator diagram"));
+    auto record = std::make_shared<EngineRecord>(*judgement.record);
+    record->readings.back().id = "r-last";
+    Judgement named = judgement;
+    named.record = record;
+    details.diagrams = {{"r-last", 1}, {"r-last", 2}, {"r-of another time", 3}};
+    const SurveyReport report = make_survey_report(named, year_to_march(), details);
+    const Table* table = find_table(find_section(report, "Indicator"), "Kept in the history");
+    ASSERT_NE(table, nullptr);
+    ASSERT_EQ(table->rows.size(), 1u);
+    EXPECT_EQ(table->rows[0].cells[2], "1, 2");
+}
+
+TEST(SurveyReportContents, SaysWhichConditionsAreNotUsedAndWhichSettingsChanged)
+{
+    ReportDetails details = make_details();
+    std::string text = report_as_text(make_survey_report(make_judgement(), year_to_march(), details));
+    EXPECT_TRUE(contains(text, "Relative humidity:\tnot used"));
+    EXPECT_TRUE(contains(text, "The audit log records no change of this engine's limits"));
+    details.engine_changes = {{day("2029-01-01"), "chief engineer", "changed, revision 2", ""},
+                              {day("2030-07-01"), "superintendent", "changed, revision 3", "limit of the maker's letter"}};
+    text = report_as_text(make_survey_report(make_judgement(), year_to_march(), details));
+    EXPECT_TRUE(contains(text, "2030-07-01\tchanged, revision 3\tsuperintendent\tlimit of the maker's letter"));
+    EXPECT_FALSE(contains(text, "revision 2"));
+}
+
+TEST(SurveyReportContents, LevelsInTheStripsAreWordAndMark)
+{
+    const SurveyReport report = make_survey_report(make_judgement(), year_to_march(), make_details());
+    const auto strips = blocks_of<report::Strips>(find_section(report, "glance"));
+    ASSERT_EQ(strips.size(), 1u);
+    EXPECT_EQ(strips[0]->rows[0].cells[3].remark, "\u25d0 watch");
+    EXPECT_EQ(strips[0]->rows[0].cells[0].remark, "") << "quiet has no mark";
 }
 
 TEST(SurveyReportContents, FirstPageSaysWhatTheReportIsNot)
