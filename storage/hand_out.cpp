@@ -44,6 +44,23 @@ std::string file_time(const StampedTime& time)
     return text + (time.offset_minutes < 0 ? "-" : "+") + two(minutes_off / 60) + ":" + two(minutes_off % 60);
 }
 
+/// The nine columns of one value; `engine` is null for the ship's shared readings.
+std::vector<std::string> value_fields(const Reading& reading, const Value& value, const Engine* engine, std::string time)
+{
+    const Quantity& q = quantity(value.quantity);
+    const bool number = q.type == ValueType::number && value.missing == MissingReason::none;
+    const bool bare = number && unit(value.unit).dimension == Dimension::number && value.unit_typed.empty();
+    return {reading.name,
+            std::move(time),
+            q.name,
+            value.place_typed.empty() ? file_place(value.place, engine) : value.place_typed,
+            number ? value.typed : std::string(),
+            number && !bare ? written_unit(value) : std::string(),
+            phase_words[static_cast<std::size_t>(value.phase)],
+            number ? value.words : value.typed,
+            missing_words[static_cast<std::size_t>(value.missing)]};
+}
+
 std::string readings_text(const std::vector<Reading>& readings, const Engine* engine)
 {
     std::vector<std::string> header = {"reading", "taken_at", "quantity", "cylinder",      "value",
@@ -53,20 +70,7 @@ std::string readings_text(const std::vector<Reading>& readings, const Engine* en
     std::string text = csv_line(header);
     for (const Reading& reading : readings) {
         for (const Value& value : reading.values) {
-            const Quantity& q = quantity(value.quantity);
-            const bool number = q.type == ValueType::number && value.missing == MissingReason::none;
-            const bool bare =
-                number && unit(value.unit).dimension == Dimension::number && value.unit_typed.empty();
-            std::vector<std::string> fields = {reading.name,
-                                               file_time(reading.taken_at),
-                                               q.name,
-                                               value.place_typed.empty() ? file_place(value.place, engine)
-                                                                         : value.place_typed,
-                                               number ? value.typed : std::string(),
-                                               number && !bare ? written_unit(value) : std::string(),
-                                               phase_words[static_cast<std::size_t>(value.phase)],
-                                               number ? value.words : value.typed,
-                                               missing_words[static_cast<std::size_t>(value.missing)]};
+            std::vector<std::string> fields = value_fields(reading, value, engine, file_time(reading.taken_at));
             if (!engine)
                 fields.erase(fields.begin() + 3);
             text += csv_line(fields);
@@ -224,6 +228,15 @@ Result<QStringList> HandingOut::run(const std::string& vessel_id)
 }
 
 } // namespace
+
+std::vector<std::string> value_lines(const Reading& reading, const Engine& engine)
+{
+    std::vector<std::string> lines;
+    lines.reserve(reading.values.size());
+    for (const Value& value : reading.values)
+        lines.push_back(csv_line(value_fields(reading, value, &engine, utc_text(reading.taken_at.utc))));
+    return lines;
+}
 
 Result<QStringList> hand_out(History& history, const std::string& vessel_id, const QString& folder,
                              const Progress& progress)

@@ -1,9 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/engine/engine.h"
+#include "core/reading/reading.h"
 #include "storage/history.h"
 
 #include <QStringList>
+
+#include <string>
+#include <vector>
 
 namespace evenstroke::storage {
 
@@ -13,5 +18,9 @@ namespace evenstroke::storage {
 /// @par Problems storage; not_found: no such vessel
 Result<QStringList> hand_out(History& history, const std::string& vessel_id, const QString& folder,
                              const Progress& progress = {});
+
+/// The values of a reading as lines of a readings.csv with all nine columns (reading, taken_at, quantity,
+/// cylinder, value, unit, phase, text, missing_reason), the time in UTC, each ended by a line feed.
+std::vector<std::string> value_lines(const Reading& reading, const Engine& engine);
 
 } // namespace evenstroke::storage

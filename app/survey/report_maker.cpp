@@ -17,11 +17,7 @@ Result<std::shared_ptr<const ReportLayout>> make_layout(const ReportWish& wish)
     auto sources = load_report_sources(*history.value(), wish.engine_id.toStdString());
     if (!sources.has_value())
         return sources.error();
-    ReportDetails details = wish.details;
-    details.data_hash = sources.value().details.data_hash;
-    details.audit_hash = sources.value().details.audit_hash;
-    details.revisions = sources.value().details.revisions;
-    details.corrections = sources.value().details.corrections;
+    const ReportDetails details = with_found(wish.details, sources.value().details);
     const Judgement judgement = judge(sources.value().record);
     auto report = std::make_shared<const SurveyReport>(make_survey_report(judgement, wish.period, details));
     return std::make_shared<const ReportLayout>(lay_out(std::move(report)));

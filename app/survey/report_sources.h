@@ -6,6 +6,7 @@
 
 #include <memory>
 #include <string>
+#include <vector>
 
 namespace evenstroke {
 
@@ -13,14 +14,17 @@ namespace evenstroke {
 struct ReportSources
 {
     std::shared_ptr<const EngineRecord> record;
-    ReportDetails details; ///< hashes, revisions and corrections filled in; date, number and names left to the caller
+    ReportDetails details; ///< hashes, revisions, corrections, diagrams and changes filled in; date, number and names left to the caller
 };
 
 /// @par Problems not_found, storage
 Result<ReportSources> load_report_sources(storage::History& history, const std::string& engine_id);
 
-/// SHA-256, hexadecimal, over the readings as a readings.csv would hold them: one line a value,
-/// `reading,taken_at,quantity,cylinder,value,unit`, in order of time and walking order, each ended by a line feed.
-std::string data_set_hash(const EngineRecord& record);
+/// What the user wished for, with what the history says of itself.
+ReportDetails with_found(ReportDetails wished, const ReportDetails& found);
+
+/// SHA-256, hexadecimal, over the engine's own readings as a readings.csv holds them, the lines sorted by their
+/// bytes: the report prints how it is made anew (core/survey, "Integrity of the data").
+std::string data_set_hash(const Engine& engine, const std::vector<Reading>& own_readings);
 
 } // namespace evenstroke

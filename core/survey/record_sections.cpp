@@ -63,6 +63,22 @@ Table corrections_table(const Context& context)
     return table;
 }
 
+/// Values that the program had doubted and somebody read again: the warnings that were overridden.
+Table confirmed_table(const Context& context)
+{
+    Table table{"Values confirmed although the program asked",
+                {{"Reading", Column::Kind::words}, {"Value", Column::Kind::words}, {"As typed", Column::Kind::number}}, {}, 1, {}};
+    for (std::size_t i = 0; i < context.readings.size(); ++i)
+        for (const auto& [key, cell] : context.cells[i]) {
+            if (!cell.value || !cell.value->confirmed)
+                continue;
+            const std::string place = key.second.number > 0 ? ", " + place_words(context.engine, key.second) : "";
+            table.rows.push_back({{context.record.readings[context.readings[i]].name, quantity(key.first).title + place,
+                                   cell.value->typed + " " + unit_words(cell.value->unit, cell.value->kind)}, true});
+        }
+    return table;
+}
+
 void add_or_say(Section& section, Table table, const std::string& otherwise)
 {
     if (table.rows.empty())
@@ -120,6 +136,7 @@ Section gaps_section(const Context& context)
     if (!context.readings.empty())
         section.blocks.push_back(states_table(context));
     add_or_say(section, doubts_table(context), "No value of the period looked mistyped.");
+    add_or_say(section, confirmed_table(context), "No doubted value of the period was confirmed as read.");
     add_or_say(section, corrections_table(context), "No value was corrected after its reading was closed.");
     return section;
 }
@@ -152,10 +169,18 @@ Section integrity_section(const Context& context)
                      {"Revisions of closed readings", details.revisions ? std::to_string(*details.revisions) : "not given"}};
     Section section{"Integrity of the data", false, {fields}};
     section.blocks.push_back(Paragraph{
-        "The first is over all readings of this engine in the history, one line a value in order of time and of the log "
-        "sheet: reading, time in UTC, quantity, place, value and unit as typed, with commas between and a line feed behind; anybody "
-        "can hand the readings out of the same history and compare. A closed reading changes only by a correction "
-        "that keeps the old value; the second is of the last line of the audit log, which is only added to, each line carrying the hash of the one before.", {}});
+        "The first is over the engine's own closed readings in the history, of all time, values in force; what the ship's shared "
+        "readings lend is left out. One line a value with nine fields and commas between: reading, taken_at, quantity, cylinder, "
+        "value, unit, phase, text, missing_reason. taken_at in UTC to the minute, as 2026-03-14T06:30Z; quantity by its name in the "
+        "files; cylinder, value and unit as they were typed (\u201cdegC\u201d stays so, \u201cbar abs\u201d too), the unit empty where "
+        "none was; phase before or after, empty for the reading itself; a choice or words under text, and value empty then; an empty "
+        "box has not_read, not_fitted or out_of_order as its reason. A field with a comma, semicolon, quotation mark or line break, or with a "
+        "blank at an end, stands in quotation marks, its own doubled (RFC 4180). The lines are sorted by their bytes (UTF-8), each "
+        "ends with one line feed; the SHA-256 is of all of them. From a readings.csv of the same values it can be made anew and compared.", {}});
+    section.blocks.push_back(Paragraph{
+        "A closed reading changes only by a correction that keeps the old value. The second hash is of the last line of the audit "
+        "log, which is only added to, each line carrying the hash of the one before; the program's command \u201cverify\u201d follows the "
+        "whole chain and compares every reading with it.", {}});
     return section;
 }
 
@@ -167,7 +192,7 @@ Section sign_off_section(const Context& context)
                                      {{"Name", details.chief_engineer}, {"Licence", details.chief_licence}, {"Date", ""}, {"Signature", ""}}});
     section.blocks.push_back(SignOff{"Superintendent", "Seen.",
                                      {{"Name", details.superintendent}, {"Date", ""}, {"Signature", ""}}});
-    section.blocks.push_back(SignOff{"Surveyor", "Seen / credited / remarks:", {{"Name", ""}, {"Date", ""}, {"Signature", ""}}});
+    section.blocks.push_back(SignOff{"Surveyor", "Seen / credited; remarks:", {{"Remarks", ""}, {"", ""}, {"Name", ""}, {"Date", ""}, {"Signature", ""}}});
     return section;
 }
 
