@@ -22,7 +22,8 @@ QString words_of(const std::string& text) { return QString::fromUtf8(text.data()
 class SectionSetter
 {
 public:
-    SectionSetter(const Section& section, Typesetter& setter) : section_(section), setter_(setter) {}
+    /// @param next the section after it, or null: a short one need not stand up before one that lies
+    SectionSetter(const Section& section, const Section* next, Typesetter& setter) : section_(section), next_(next), setter_(setter) {}
 
     void set()
     {
@@ -46,19 +47,37 @@ private:
         return setter_.at_page_top() || setter_.room() > free_enough * whole;
     }
 
-    /// Wide tables and many strips need it; words and narrow tables stay on a page that lies already.
-    bool wants_landscape() const
+    bool needs_landscape(const Section& section) const
     {
-        const bool needs = std::any_of(section_.blocks.begin(), section_.blocks.end(), [&](const Block& block) {
+        return std::any_of(section.blocks.begin(), section.blocks.end(), [&](const Block& block) {
             if (const Strips* strips = std::get_if<Strips>(&block))
                 return strips->columns.size() > 8;
             const Table* table = std::get_if<Table>(&block);
             return table && natural_width(*table, setter_.measure()) > Typesetter::width_of(false);
         });
-        const bool plain = std::none_of(section_.blocks.begin(), section_.blocks.end(), [](const Block& block) {
-            return std::holds_alternative<Plot>(block) || std::holds_alternative<Strips>(block) || std::holds_alternative<SignOff>(block);
-        });
-        return needs || (plain && setter_.landscape() && !setter_.at_page_top() && goes_on_here());
+    }
+
+    /// Words and a few rows only: as well set on a lying page.
+    bool is_short() const
+    {
+        std::size_t rows = 0;
+        for (const Block& block : section_.blocks) {
+            if (std::holds_alternative<Plot>(block) || std::holds_alternative<Strips>(block) || std::holds_alternative<SignOff>(block))
+                return false;
+            const Table* table = std::get_if<Table>(&block);
+            rows += table ? table->rows.size() : 1;
+        }
+        return rows <= 25;
+    }
+
+    /// Wide tables and many strips need it; a short section goes with the page that is there or that follows.
+    bool wants_landscape() const
+    {
+        if (needs_landscape(section_))
+            return true;
+        if (!is_short() || setter_.at_page_top())
+            return false;
+        return goes_on_here() ? setter_.landscape() : section_.new_page && next_ && needs_landscape(*next_);
     }
 
     void put(const Paragraph& paragraph)
@@ -91,7 +110,8 @@ private:
     void put(const Heading& heading)
     {
         setter_.move_down(setter_.at_page_top() ? 0.0 : 6.0);
-        setter_.need(90.0);
+        const Table* below = at_ + 1 < section_.blocks.size() ? std::get_if<Table>(&section_.blocks[at_ + 1]) : nullptr;
+        setter_.need(std::max(90.0, below ? line_height(ReportFont::heading) + 4.0 + least_height(*below, setter_) : 0.0));
         setter_.paragraph(words_of(heading.text), ReportFont::heading, Typesetter::left, setter_.width());
         setter_.move_down(4.0);
     }
@@ -216,6 +236,7 @@ private:
     }
 
     const Section& section_;
+    const Section* next_;
     Typesetter& setter_;
     std::size_t at_ = 0;
 };
@@ -243,8 +264,8 @@ ReportLayout lay_out(std::shared_ptr<const SurveyReport> report)
 {
     Typesetter setter;
     setter.new_page(false);
-    for (const Section& section : report->sections)
-        SectionSetter(section, setter).set();
+    for (std::size_t i = 0; i < report->sections.size(); ++i)
+        SectionSetter(report->sections[i], i + 1 < report->sections.size() ? &report->sections[i + 1] : nullptr, setter).set();
     const TextMeasure measure;
     ReportLayout layout{report, setter.take_pages()};
     std::size_t number = 0;

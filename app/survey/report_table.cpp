@@ -82,9 +82,15 @@ public:
         }
     }
 
+    /// So that a head never stands alone at the foot of a page.
+    double least_height() const
+    {
+        return head_height(true) + std::max(3.0 * line_height(ReportFont::body), first_group_height() + 2.0);
+    }
+
     void draw(bool first_part)
     {
-        setter_.need(head_height(true) + std::max(3.0 * line_height(ReportFont::body), first_group_height() + 2.0));
+        setter_.need(least_height());
         head(!first_part);
         for (std::size_t r = 0; r < table_.rows.size();) {
             std::size_t end = r + 1;
@@ -158,7 +164,6 @@ private:
         return remark(i) ? setter_.measure().wrapped(words, widths_[i], ReportFont::body) : QStringList{words};
     }
 
-    /// So that a head never stands alone at the foot of a page.
     double first_group_height() const
     {
         double height = 0.0;
@@ -221,6 +226,14 @@ double natural_width(const Table& table, const TextMeasure& measure)
     std::vector<std::size_t> all(table.columns.size());
     std::iota(all.begin(), all.end(), std::size_t{0});
     return sum_of(set.needs, all);
+}
+
+double least_height(const Table& table, const Typesetter& setter)
+{
+    const Set set = prepare(table, setter.measure());
+    Typesetter nowhere;
+    nowhere.new_page(setter.landscape());
+    return TablePart(table, set, std::move(cut(table, set, setter.width()).front()), nowhere).least_height();
 }
 
 void set_table(const Table& table, Typesetter& setter)

@@ -43,6 +43,8 @@ private:
 
 /// Width a table needs without cutting any column; the widths it has are worked out from it.
 double natural_width(const report::Table& table, const TextMeasure& measure);
+/// Of the table's head and first group of rows: what stands above it goes to the next page with them.
+double least_height(const report::Table& table, const Typesetter& setter);
 void set_table(const report::Table& table, Typesetter& setter);
 void set_strips(const report::Strips& strips, Typesetter& setter);
 
