@@ -282,12 +282,17 @@ TEST(UnitCatalogue, BringsEveryNumberBackFromSi)
     for (int trial = 0; trial < 20000; ++trial) {
         const double typed = mantissa(random) * std::pow(10.0, exponent(random));
         for (const Unit& candidate : all_units()) {
+            // A wind force goes through two powers, each rounded, and there is none below 0.
+            const bool curved = candidate.dimension == Dimension::wind_force;
+            if (curved && typed < 0.0)
+                continue;
             const double value_si = candidate.to_si(typed);
             const double size_si = std::max(std::fabs(value_si), candidate.offset);
-            EXPECT_NEAR(candidate.to_si(candidate.from_si(value_si)), value_si, 1e-15 * size_si)
+            const double rounding = curved ? 3e-15 : 1e-15;
+            const double size_typed = curved ? std::fabs(typed) : size_si / candidate.factor;
+            EXPECT_NEAR(candidate.to_si(candidate.from_si(value_si)), value_si, rounding * size_si)
                 << candidate.symbol;
-            EXPECT_NEAR(candidate.from_si(value_si), typed, 1e-15 * size_si / candidate.factor)
-                << candidate.symbol;
+            EXPECT_NEAR(candidate.from_si(value_si), typed, rounding * size_typed) << candidate.symbol;
             EXPECT_NEAR(candidate.difference_from_si(candidate.difference_to_si(typed)), typed,
                         1e-15 * std::fabs(typed))
                 << candidate.symbol;
