@@ -1,7 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/engine/load_diagram.h"
+#include "core/heat/wall_description.h"
 #include "core/reading/quantity_catalogue.h"
+#include "core/reference/iso_3046.h"
 #include "core/units/quantity_types.h"
 
 #include <map>
@@ -26,6 +29,13 @@ struct ReferenceConditions
     Temperature cooler_coolant = celsius(25.0);
     AbsolutePressure barometer = bar_absolute(1.0);
     std::string source;
+    std::optional<double> relative_humidity; ///< 0 to 1; only engines without charge-air cooler need it
+};
+
+/// What brings the specific consumption to reference ambient: one of them, never two.
+enum class ConsumptionCorrection {
+    linear,   ///< by the engine's own coefficients; none where it has none for the consumption
+    iso_3046, ///< by the factor beta of ISO 3046-1
 };
 
 /// Relative change of a quantity per kelvin of inlet air and of charge-air coolant.
@@ -79,6 +89,12 @@ struct Engine
     std::optional<double> compression_ratio, cylinder_closes_deg, cylinder_opens_deg, mechanical_efficiency;
     double expansion_angle_deg = 40.0;
     std::optional<Length> propeller_pitch;
+    std::optional<LoadLimits> load_limits;
+    std::vector<WallDescription> walls;
+    std::optional<Mass> moving_mass;                  ///< of one cylinder: what goes up and down, see crank_forces.h
+    std::optional<double> generator_efficiency;       ///< of the generator it drives, 0 to 1
+    ConsumptionCorrection consumption_correction = ConsumptionCorrection::linear;
+    AspirationClass aspiration = AspirationClass::charge_air_cooled;
 
     bool two_stroke() const { return kind == EngineKind::two_stroke; }
     /// "4", or the maker's own mark such as "A3".
