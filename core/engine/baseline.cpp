@@ -58,11 +58,50 @@ std::optional<double> BaselineCurve::at(double load) const
     if (load >= loads_.back())
         return values_.back();
     const auto upper = std::upper_bound(loads_.begin(), loads_.end(), load);
-    const std::size_t i = static_cast<std::size_t>(upper - loads_.begin()) - 1;
+    return between(static_cast<std::size_t>(upper - loads_.begin()) - 1, load);
+}
+
+double BaselineCurve::between(std::size_t i, double load) const
+{
     const double width = loads_[i + 1] - loads_[i], s = (load - loads_[i]) / width;
     const double s2 = s * s, s3 = s2 * s;
     return (2.0 * s3 - 3.0 * s2 + 1.0) * values_[i] + (s3 - 2.0 * s2 + s) * width * slopes_[i] +
            (3.0 * s2 - 2.0 * s3) * values_[i + 1] + (s3 - s2) * width * slopes_[i + 1];
+}
+
+std::optional<double> BaselineCurve::load_at(double value) const
+{
+    std::vector<double> found;
+    const std::size_t points = loads_.size();
+    if (points < 2)
+        return std::nullopt;
+    const auto beyond = [&](std::size_t end, double direction) {
+        if (slopes_[end] == 0.0)
+            return;
+        const double past = (value - values_[end]) / slopes_[end];
+        if (past * direction > 0.0 && past * direction <= reach_percent)
+            found.push_back(loads_[end] + past);
+    };
+    beyond(0, -1.0);
+    beyond(points - 1, 1.0);
+    for (std::size_t i = 0; i + 1 < points; ++i) {
+        if (values_[i] == values_[i + 1] && value == values_[i])
+            return std::nullopt; // a whole stretch of loads has it
+        const bool last = i + 2 == points;
+        const double above_low = value - values_[i], above_high = value - values_[i + 1];
+        if (above_low * above_high > 0.0 || (above_high == 0.0 && !last))
+            continue; // the next interval begins with the point itself
+        double low = loads_[i], high = loads_[i + 1];
+        const bool rising = values_[i + 1] > values_[i];
+        for (int halving = 0; halving < 200; ++halving) {
+            const double middle = 0.5 * (low + high);
+            if (middle <= low || middle >= high)
+                break;
+            ((between(i, middle) < value) == rising ? low : high) = middle;
+        }
+        found.push_back(0.5 * (low + high));
+    }
+    return found.size() == 1 ? std::optional(found.front()) : std::nullopt;
 }
 
 Baseline::Baseline(const Engine& engine)

@@ -30,10 +30,18 @@ public:
     BaselineCurve(std::vector<double> loads, std::vector<double> values);
 
     bool empty() const { return loads_.empty(); }
+    /// Loads of the first and the last point. @pre not empty
+    double first_load() const { return loads_.front(); }
+    double last_load() const { return loads_.back(); }
     /// Nothing outside the reach.
     std::optional<double> at(double load_percent) const;
+    /// The load at which the curve takes this value; between the points to the last digit. Beyond the ends,
+    /// where the end value is held and tells nothing of the load, the curve goes on along its end slope, within
+    /// the reach. Nothing where no load has this value, or more than one.
+    std::optional<double> load_at(double value) const;
 
 private:
+    double between(std::size_t interval, double load_percent) const;
     std::vector<double> loads_, values_, slopes_;
 };
 

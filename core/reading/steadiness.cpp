@@ -33,14 +33,7 @@ struct Criterion
     std::optional<double> steady, care, set_steady, set_care;
 };
 
-/// What one criterion says of one reading.
-struct Finding
-{
-    Steadiness verdict = Steadiness::not_judged;
-    double severity = 0.0; ///< share of the limit that is used up; above 1 it is passed
-    bool from_pair = false;
-    std::string words;
-};
+using Finding = SteadinessFinding;
 
 Criterion::Form form_named(const std::string& name)
 {
@@ -178,6 +171,10 @@ Finding judge_change(const Criterion& criterion, const Reading& reading, double 
                     limit_words(plain_number(steady, 0) + unit_words, plain_number(care, 0) + unit_words,
                                 finding.verdict) +
                     ")";
+    finding.before = pair->first;
+    finding.after = pair->second;
+    finding.amount = amount;
+    finding.unit = relative ? "%" : unit_behind(meant.unit);
     return finding;
 }
 
@@ -194,6 +191,8 @@ Finding judge_settled(const Criterion& criterion, const Reading& reading, double
                                         : Steadiness::unsteady;
     const double limit = finding.verdict == Steadiness::unsteady ? care : steady;
     finding.severity = *waited > 0.0 ? limit / *waited : 1e6;
+    finding.amount = *waited;
+    finding.unit = "min";
     finding.words = "the setting had been unchanged for " + plain_number(*waited, 0) + " min (steady from " +
                     plain_number(steady, 0) + " min, usable with care from " + plain_number(care, 0) +
                     " min)";
@@ -210,6 +209,8 @@ Finding judge_condition(const Criterion& criterion, const Reading& reading, doub
     Finding finding;
     finding.verdict = grade(*met, steady, care);
     finding.severity = *met / (finding.verdict == Steadiness::unsteady ? care : steady);
+    finding.amount = *met;
+    finding.unit = unit_behind(meant.unit);
     finding.words = lower_first(meant.title) + " was " + with_own_unit(criterion.quantity, *met) + " (" +
                     limit_words(plain_number(steady, meant.decimals) + behind,
                                 plain_number(care, meant.decimals) + behind, finding.verdict) +
@@ -243,6 +244,8 @@ Finding judge_depth(const Criterion& criterion, const Reading& reading, double s
                       : ratio > care ? Steadiness::usable_with_care
                                      : Steadiness::unsteady;
     finding.severity = (finding.verdict == Steadiness::unsteady ? care : steady) / std::max(ratio, 1e-6);
+    finding.amount = *depth;
+    finding.unit = unit_behind(quantity(criterion.quantity).unit);
     finding.words = "the water was " + with_own_unit(criterion.quantity, *depth) +
                     " deep at a mean draught of " + plain_number(draught, 1) + " m, " +
                     plain_number(ratio, 1) + " times (steady above " + plain_number(steady, 0) +
@@ -280,6 +283,8 @@ Finding judge_walk(const Criterion& criterion, const Reading& reading, double st
     Finding finding;
     finding.verdict = grade(minutes, steady, care);
     finding.severity = minutes / (finding.verdict == Steadiness::unsteady ? care : steady);
+    finding.amount = minutes;
+    finding.unit = "min";
     finding.words =
         "the walk took " + std::to_string(minutes) + " min, from " + words_of(*before) + " to " +
         words_of(*after) + " (" +
@@ -326,62 +331,20 @@ Finding judge_criterion(const Criterion& criterion, const Reading& reading, bool
     }
 }
 
-bool decides_over(const Finding& finding, const Finding& other)
-{
-    return finding.verdict != other.verdict ? finding.verdict > other.verdict
-                                            : finding.severity > other.severity;
-}
-
-/// What was asked for beside the two lines and was not noted; it is said, never guessed.
-std::string not_noted(bool settled_known, bool walk_known)
-{
-    if (settled_known && walk_known)
-        return {};
-    return settled_known ? " How long the walk took was not noted."
-           : walk_known
-               ? " How long the setting had been unchanged was not noted."
-               : " How long the setting had been unchanged and how long the walk took were not noted.";
-}
-
 } // namespace
 
-std::string steadiness_word(Steadiness steadiness)
-{
-    switch (steadiness) {
-    case Steadiness::steady:
-        return "steady";
-    case Steadiness::usable_with_care:
-        return "usable with care";
-    case Steadiness::unsteady:
-        return "unsteady";
-    default:
-        return "not judged";
-    }
-}
-
-SteadinessVerdict judge_steadiness(const Reading& reading, bool generating_set)
+std::vector<SteadinessFinding> steadiness_findings(const Reading& reading, bool generating_set)
 {
     static const std::vector<Criterion> criteria = load_criteria();
-    Finding deciding;
-    bool any_pair = false, settled_known = false, walk_known = false;
+    std::vector<SteadinessFinding> findings;
     for (const Criterion& criterion : criteria) {
-        const Finding finding = judge_criterion(criterion, reading, generating_set);
+        SteadinessFinding finding = judge_criterion(criterion, reading, generating_set);
         if (finding.verdict == Steadiness::not_judged)
             continue;
-        any_pair = any_pair || finding.from_pair;
-        settled_known = settled_known || criterion.form == Criterion::Form::at_least;
-        walk_known = walk_known || criterion.form == Criterion::Form::walk;
-        if (deciding.verdict == Steadiness::not_judged || decides_over(finding, deciding))
-            deciding = finding;
+        finding.quantity = criterion.quantity;
+        findings.push_back(std::move(finding));
     }
-    if (!any_pair)
-        return {Steadiness::not_judged,
-                "Not judged: no value was noted both just before and just after the walk. "
-                "Fill in the two quick lines."};
-    std::string sentence = steadiness_word(deciding.verdict);
-    sentence[0] = static_cast<char>(sentence[0] - 'a' + 'A');
-    sentence += deciding.verdict == Steadiness::steady ? ": nearest to its limit, " : ": ";
-    return {deciding.verdict, sentence + deciding.words + "." + not_noted(settled_known, walk_known)};
+    return findings;
 }
 
 } // namespace evenstroke

@@ -20,7 +20,7 @@ constexpr ReferenceSet reference_sets[] = {
 ReferenceConditions ReferenceSet::conditions() const
 {
     return {celsius(inlet_air_celsius), celsius(cooler_coolant_celsius), bar_absolute(barometer_bar),
-            std::string(source)};
+            std::string(source), relative_humidity};
 }
 
 std::span<const ReferenceSet> all_reference_sets()

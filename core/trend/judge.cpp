@@ -9,20 +9,6 @@
 #include <utility>
 
 namespace evenstroke {
-namespace {
-
-bool generating_set(const Engine& engine, const std::vector<Reading>& readings)
-{
-    if (engine.two_stroke())
-        return false;
-    const auto power = find_quantity("generator_power", Place::Kind::engine);
-    return std::any_of(readings.begin(), readings.end(), [&](const Reading& r) {
-        return power && r.find(*power, Place::engine()) != nullptr;
-    });
-}
-
-} // namespace
-
 PreparedReading prepare_reading(const Engine& engine, const Baseline& baseline, const Reading& reading)
 {
     PreparedReading prepared;
@@ -40,7 +26,7 @@ Judgement judge(std::shared_ptr<const EngineRecord> record, const std::function<
     judgement.record = record;
     const Engine& engine = record->engine;
     const Baseline baseline(engine);
-    const bool on_the_grid = generating_set(engine, record->readings);
+    const bool on_the_grid = is_generating_set(engine, record->readings);
     std::vector<PreparedReading> prepared;
     std::vector<char> unsteady;
     for (std::size_t i = 0; i < record->readings.size(); ++i) {
