@@ -21,7 +21,7 @@ constexpr int lowest_row = 70, highest_row = 96, engine_row = 78, heading_height
 class CellDelegate : public QStyledItemDelegate
 {
 public:
-    explicit CellDelegate(const BoardView& view) : view_(view) {}
+    explicit CellDelegate(BoardView& view) : QStyledItemDelegate(&view), view_(view) {}
 
     void paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const override
     {

@@ -3,6 +3,9 @@
 
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
+#include "core/trend/fleet_strips.h"
+
+#include <QCoreApplication>
 
 #include <algorithm>
 
@@ -148,7 +151,8 @@ QVariant FleetModel::headerData(int section, Qt::Orientation orientation, int ro
         return tr("Last usable reading");
     if (section == sentence)
         return tr("What matters");
-    return strip_group_title(static_cast<StripGroup>(section - first_strip));
+    return QCoreApplication::translate(
+        "evenstroke", all_fleet_strips()[static_cast<std::size_t>(section - first_strip)].title.c_str());
 }
 
 } // namespace evenstroke

@@ -16,7 +16,7 @@ class FleetModel : public QAbstractTableModel
 
 public:
     /// Ship with engine, last reading, a strip a quantity group, the sentence.
-    enum Column { ship = 0, last_reading = 1, first_strip = 2, sentence = first_strip + strip_group_count, column_count };
+    enum Column { ship = 0, last_reading = 1, first_strip = 2, sentence = first_strip + fleet_strip_count, column_count };
 
     using QAbstractTableModel::QAbstractTableModel;
     void show_fleet(std::vector<FleetRow> rows, TimePoint now);

@@ -3,54 +3,24 @@
 
 #include "app/desk/number_text.h"
 #include "core/trend/flag_text.h"
+#include "core/trend/fleet_strips.h"
 
 #include <QCoreApplication>
 #include <QDataStream>
 #include <QIODevice>
 
 #include <algorithm>
-#include <array>
 #include <cmath>
-#include <map>
 #include <set>
-#include <string_view>
 
 namespace evenstroke {
 
 namespace {
 
-constexpr quint16 layout_version = 3;
+constexpr quint16 layout_version = 4;
 constexpr std::size_t points_in_a_strip = 36; // three years of monthly readings
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
-
-std::optional<StripGroup> group_of(const Quantity& quantity)
-{
-    // Read at the cylinders, but speaking of what all of them share; and what is worked out from several places.
-    static const std::map<std::string_view, StripGroup> elsewhere{
-        {"fuel_index", StripGroup::fuel},
-        {"specific_fuel_consumption", StripGroup::fuel},
-        {"compressor_efficiency", StripGroup::turbocharger},
-        {"turbocharger_efficiency", StripGroup::turbocharger},
-        {"cooler_temperature_difference", StripGroup::charge_air},
-        {"cooler_effectiveness", StripGroup::charge_air},
-        {"jacket_outlet_temperature", StripGroup::cooling_and_oil},
-        {"piston_coolant_outlet_temperature", StripGroup::cooling_and_oil}};
-    if (const auto found = elsewhere.find(quantity.name); found != elsewhere.end())
-        return found->second;
-    if (quantity.group == "cylinder")
-        return unit(quantity.unit).dimension == Dimension::pressure ? StripGroup::cylinder_pressures
-                                                                    : StripGroup::cylinder_temperatures;
-    if (quantity.group == "turbocharger")
-        return StripGroup::turbocharger;
-    if (quantity.group == "cooler")
-        return StripGroup::charge_air;
-    if (quantity.group == "cooling_lube")
-        return StripGroup::cooling_and_oil;
-    if (quantity.group == "fuel" || quantity.group == "control")
-        return StripGroup::fuel;
-    return std::nullopt;
-}
 
 /// Values in the trend's own standard deviations; empty where its noise is not known yet.
 std::vector<float> standardised(const Trend& trend)
@@ -80,28 +50,25 @@ double newest_size(const std::vector<float>& values)
 
 std::vector<FleetStrip> make_strips(const Judgement& judgement)
 {
-    std::array<FleetStrip, strip_group_count> strips;
-    std::array<double, strip_group_count> sizes{};
-    for (std::size_t g = 0; g < strips.size(); ++g)
-        strips[g].group = static_cast<StripGroup>(g);
+    std::vector<FleetStrip> strips(all_fleet_strips().size());
+    std::vector<double> sizes(strips.size());
     for (const Trend& trend : judgement.trends) {
-        const auto group = group_of(quantity(trend.quantity));
+        const auto group = find_fleet_strip(quantity(trend.quantity));
         if (!group)
             continue;
-        const auto index = static_cast<std::size_t>(*group);
-        FleetStrip& strip = strips[index];
+        FleetStrip& strip = strips[*group];
         std::vector<float> values = standardised(trend);
         const double size = newest_size(values);
         if (values.empty() || trend.level < strip.level
-            || (trend.level == strip.level && size <= sizes[index] && !strip.values.empty()))
+            || (trend.level == strip.level && size <= sizes[*group] && !strip.values.empty()))
             continue;
         strip.level = trend.level;
         strip.values = std::move(values);
         strip.title = tr_("%1, %2").arg(quantity_title(trend.quantity),
                                         place_title(judgement.record->engine, trend.place, false));
-        sizes[index] = size;
+        sizes[*group] = size;
     }
-    return {strips.begin(), strips.end()};
+    return strips;
 }
 
 QString note_sentence(const Judgement& judgement)
@@ -114,19 +81,6 @@ QString note_sentence(const Judgement& judgement)
 }
 
 } // namespace
-
-QString strip_group_title(StripGroup group)
-{
-    switch (group) {
-    case StripGroup::cylinder_pressures: return tr_("Cylinder pressures");
-    case StripGroup::cylinder_temperatures: return tr_("Cylinder temperatures");
-    case StripGroup::turbocharger: return tr_("Turbocharger");
-    case StripGroup::charge_air: return tr_("Charge air");
-    case StripGroup::cooling_and_oil: return tr_("Cooling and oil");
-    case StripGroup::fuel: return tr_("Load and fuel");
-    }
-    return {};
-}
 
 FleetSummary summarise(const Judgement& judgement)
 {
@@ -199,7 +153,7 @@ QByteArray pack(const FleetSummary& summary)
         << summary.excess << summary.places_concerned << summary.readings << seconds(summary.last_reading)
         << seconds(summary.last_usable) << summary.sentence << static_cast<qint32>(summary.strips.size());
     for (const FleetStrip& strip : summary.strips) {
-        out << static_cast<qint8>(strip.group) << static_cast<qint8>(strip.level) << strip.title
+        out << static_cast<qint8>(strip.level) << strip.title
             << static_cast<qint32>(strip.values.size());
         for (const float value : strip.values)
             out << value;
@@ -232,10 +186,9 @@ std::optional<FleetSummary> unpack(const QByteArray& bytes)
     summary.last_usable = time(usable);
     for (qint32 s = 0; s < strips && in.status() == QDataStream::Ok; ++s) {
         FleetStrip strip;
-        qint8 group = 0, strip_level = 0;
+        qint8 strip_level = 0;
         qint32 values = 0;
-        in >> group >> strip_level >> strip.title >> values;
-        strip.group = static_cast<StripGroup>(group);
+        in >> strip_level >> strip.title >> values;
         strip.level = static_cast<Level>(strip_level);
         for (qint32 i = 0; i < values && in.status() == QDataStream::Ok; ++i) {
             float value = 0.0F;

@@ -11,15 +11,12 @@
 
 namespace evenstroke {
 
-/// The quantity groups of the fleet page, one strip each.
-enum class StripGroup { cylinder_pressures, cylinder_temperatures, turbocharger, charge_air, cooling_and_oil, fuel };
-inline constexpr int strip_group_count = 6;
-QString strip_group_title(StripGroup group);
+/// How many strips a row of the fleet page has: the lines of core/trend/fleet_strips.h, which a test compares.
+inline constexpr int fleet_strip_count = 6;
 
 /// One strip: the trend of its group that stands out most, in its own standard deviations from its own level.
 struct FleetStrip
 {
-    StripGroup group = StripGroup::cylinder_pressures;
     Level level = Level::no_data;
     QString title;             ///< which it is: "Compression pressure, cylinder 4"
     std::vector<float> values; ///< oldest first; the usual range is -2 to +2
@@ -36,7 +33,7 @@ struct FleetSummary
     int readings = 0;
     std::optional<TimePoint> last_reading, last_usable;
     QString sentence;          ///< the one that matters; empty while quiet
-    std::vector<FleetStrip> strips;
+    std::vector<FleetStrip> strips; ///< in the order of the catalogue
 };
 
 FleetSummary summarise(const Judgement& judgement);

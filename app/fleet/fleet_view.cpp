@@ -85,7 +85,7 @@ void paint_sentence(QPainter& painter, const QRect& area, const FleetRow& row, c
 class RowDelegate : public QStyledItemDelegate
 {
 public:
-    explicit RowDelegate(const FleetView& view) : view_(view) {}
+    explicit RowDelegate(FleetView& view) : QStyledItemDelegate(&view), view_(view) {}
 
     void paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const override
     {
@@ -181,9 +181,9 @@ void FleetView::set_sizes()
 {
     setColumnWidth(FleetModel::ship, ship_width);
     setColumnWidth(FleetModel::last_reading, date_width);
-    for (int i = 0; i < strip_group_count; ++i)
+    for (int i = 0; i < fleet_strip_count; ++i)
         setColumnWidth(FleetModel::first_strip + i, strip_width);
-    const int taken = ship_width + date_width + strip_group_count * strip_width;
+    const int taken = ship_width + date_width + fleet_strip_count * strip_width;
     setColumnWidth(FleetModel::sentence, std::max(240, viewport()->width() - taken));
     for (int row = 0; row < model_.rowCount(); ++row)
         if (const int height = height_of(row); rowHeight(row) != height)

@@ -1,5 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/fleet/fleet_view.h"
+#include "core/trend/drift_catalogue.h"
+#include "core/trend/fleet_strips.h"
 #include "tests/app/invented_judgement.h"
 #include "tests/app/pictures.h"
 
@@ -48,10 +50,19 @@ TEST(FleetSummary, OfAnotherVersionOrTornIsNotRead)
     EXPECT_FALSE(unpack({}).has_value());
 }
 
+TEST(FleetSummary, HasAStripForEveryLineOfTheCatalogueAndEveryQuantityThatIsWatched)
+{
+    EXPECT_EQ(all_fleet_strips().size(), static_cast<std::size_t>(fleet_strip_count));
+    for (const drift::CatalogueChannel& channel : drift::channel_catalogue())
+        if (const auto id = find_quantity(channel.quantity)) {
+            EXPECT_TRUE(find_fleet_strip(quantity(*id))) << channel.quantity;
+        }
+}
+
 TEST(FleetSummary, TheStripOfAGroupIsTheOneThatStandsOut)
 {
     const FleetSummary summary = summarise(*invented::judgement());
-    const FleetStrip& pressures = summary.strips.at(static_cast<std::size_t>(StripGroup::cylinder_pressures));
+    const FleetStrip& pressures = summary.strips.at(find_fleet_strip(quantity(*find_quantity("compression_pressure"))).value());
     EXPECT_EQ(pressures.title, QStringLiteral("Compression pressure, cylinder 4"));
     EXPECT_EQ(pressures.level, Level::watch);
 }
