@@ -160,6 +160,19 @@ private:
         };
     }
 
+    /// One efficiency is entered, most likely that of the rating. Friction as a mean pressure hardly changes with the
+    /// load (common practice), and then the efficiency at part load is lower: 1 / (1 + (1/η - 1) p_rated / p).
+    double efficiency_half_width(double gas_kw, double speed) const
+    {
+        const double entered = *engine_.mechanical_efficiency;
+        const double rated_kw = engine_.rated_power.value() / 1000.0, rated_speed = engine_.rated_speed.value() * 60.0;
+        if (!(gas_kw > 0.0 && speed > 0.0 && rated_kw > 0.0 && rated_speed > 0.0))
+            return mechanical_efficiency_half_width;
+        const double torque = (gas_kw * entered / rated_kw) / (speed / rated_speed); // of the rating's
+        const double by_friction = 1.0 / (1.0 + (1.0 / entered - 1.0) / torque);
+        return std::max(mechanical_efficiency_half_width, entered - by_friction);
+    }
+
     Way indicated() const
     {
         Way way = begin("indicated", "Indicated power", "P = η_m Σ P_i",
@@ -175,10 +188,15 @@ private:
         if (const auto all = of.solve(*sum))
             way.estimate.workings.steps.push_back({"Sum of the indicated powers", all->value, "kW"});
         if (engine_.mechanical_efficiency) {
-            const std::size_t efficiency =
-                of.given({"Mechanical efficiency", "η_m", Place::engine(), *engine_.mechanical_efficiency, "",
-                          mechanical_efficiency_half_width, 0.0, {},
-                          "entered with the engine; half-width common practice"});
+            const double sum_now = way.estimate.workings.steps.empty() ? 0.0 : way.estimate.workings.steps.back().value;
+            const double unknown = efficiency_half_width(sum_now, speed ? of.value(*speed) : 0.0);
+            const std::size_t efficiency = of.given({"Mechanical efficiency", "η_m", Place::engine(),
+                                                     *engine_.mechanical_efficiency, "", unknown, 0.0, {},
+                                                     "entered with the engine; half-width common practice"});
+            if (unknown > mechanical_efficiency_half_width)
+                way.estimate.workings.remarks.push_back(
+                    "The mechanical efficiency is entered as one number. If the friction pressure is the same at every load, it is "
+                    "lower at this load by what its half-width says.");
             return finish(std::move(way), of, [sum = *sum, efficiency](Numbers x) -> std::optional<double> {
                 const auto gas = sum(x);
                 return gas ? std::optional(*gas * x[efficiency]) : std::nullopt;

@@ -59,8 +59,8 @@ std::optional<ReviewLine> rise_line(const ReviewLine& maximum, const ReviewLine&
     line.corrected = difference(maximum.corrected, compression.corrected);
     line.expected = difference(maximum.expected, compression.expected);
     line.deviation = difference(maximum.deviation, compression.deviation);
-    if (maximum.half_width && compression.half_width) // one indicator: its slip is in both
-        line.half_width = std::abs(*maximum.half_width - *compression.half_width);
+    if (maximum.half_width && compression.half_width) // one indicator may have read both: no more than this
+        line.half_width = std::hypot(*maximum.half_width, *compression.half_width);
     line.level = Level::quiet;
     return line;
 }

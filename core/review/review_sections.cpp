@@ -24,6 +24,18 @@ bool all_confirmed(const ReviewContext& context, const Relation& relation)
            });
 }
 
+/// A cylinder that a flag already speaks of reads oddly because of what is the matter with it, not because of a slip.
+bool told_by_a_flag(const ReviewContext& context, const Relation& relation)
+{
+    return !relation.impossible &&
+           std::any_of(relation.concerned.begin(), relation.concerned.end(), [&](const ConcernedValue& box) {
+               return box.place.kind == Place::Kind::cylinder &&
+                      std::any_of(context.standing.begin(), context.standing.end(), [&](const Flag* flag) {
+                          return flag->subject == box.place && speaks_of(*flag, box.quantity);
+                      });
+           });
+}
+
 ReviewLine words_line(std::string words, std::optional<QuantityId> quantity, Place place, std::string verdict)
 {
     ReviewLine line;
@@ -64,7 +76,7 @@ ReviewSection entry_section(const ReviewContext& context)
     const auto& record = *context.judgement.record;
     const ReadingContext around{std::span(record.readings).first(context.index), record.events, std::nullopt};
     for (const Relation& relation : check_relations(context.engine, context.reading, around)) {
-        if (all_confirmed(context, relation))
+        if (all_confirmed(context, relation) || told_by_a_flag(context, relation))
             continue;
         const auto first = relation.concerned.empty() ? std::nullopt : std::optional(relation.concerned.front());
         section.lines.push_back(words_line(relation.sentence, first ? std::optional(first->quantity) : std::nullopt,
