@@ -30,13 +30,17 @@ qint64 line_at(std::string_view text, std::size_t offset)
                           text.begin() + static_cast<std::ptrdiff_t>(std::min(offset, text.size())), '\n');
 }
 
-/// The line on which a key first stands; its last part is enough to lead somebody there.
+/// The line on which a key first stands; its last part is enough to lead somebody there. A key that is missing from
+/// an object leads to the object.
 qint64 line_of(std::string_view text, const std::string& key)
 {
     const std::size_t dot = key.rfind('.');
-    const std::string name = dot == std::string::npos ? key : key.substr(dot + 1);
-    const std::size_t at = text.find("\"" + name + "\"");
-    return name.empty() || at == std::string_view::npos ? 0 : line_at(text, at);
+    std::string name = dot == std::string::npos ? key : key.substr(dot + 1);
+    name.erase(std::min(name.find('['), name.size())); // "walls[1]" stands under "walls"
+    const std::size_t at = name.empty() ? std::string_view::npos : text.find("\"" + name + "\"");
+    if (at != std::string_view::npos)
+        return line_at(text, at);
+    return dot == std::string::npos ? 0 : line_of(text, key.substr(0, dot));
 }
 
 std::string structure_words(QJsonParseError::ParseError what)

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/plain_text.h"
 #include "storage/engine_json_checks.h"
+#include "storage/engine_json_load.h"
 #include "storage/sql.h"
 
 #include <QJsonDocument>
@@ -55,6 +56,7 @@ EngineDocument DocumentReader::read()
     read_instruments();
     read_baseline();
     read_card_angles();
+    read_load_and_heat(top_, document_.engine);
     keep_unknown(top_);
     document_.remarks = unknown_quantity_remarks(document_.engine);
     return std::move(document_);
@@ -208,6 +210,15 @@ void DocumentReader::read_reference()
     temperature("cooler_coolant_c", reference.cooler_coolant);
     if (const auto barometer = reader.positive("barometric_mbar"))
         reference.barometer = bar_absolute(*barometer / 1000.0);
+    if (const auto percent = reader.number("relative_humidity_percent")) {
+        if (*percent < 0.0 || *percent > 100.0)
+            reader.refuse("relative_humidity_percent", *percent,
+                          reader.path("relative_humidity_percent") + " is " + number_text(*percent) +
+                              " %, which cannot be.",
+                          "Write the relative humidity from 0 to 100 %.");
+        else
+            reference.relative_humidity = *percent / 100.0;
+    }
     reference.source = reader.text("source");
     keep_unknown(reader);
 }

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "storage/engine_json.h"
+#include "storage/engine_json_load.h"
 #include "storage/json_reader.h"
 #include "storage/sql.h"
 
@@ -10,16 +11,10 @@
 namespace evenstroke::storage {
 namespace {
 
-/// Twelve digits: all that anybody types, and none of the noise of converting to SI and back.
-QJsonValue rounded(double number)
-{
-    return QString::number(number, 'g', 12).toDouble();
-}
-
 void put(QJsonObject& object, const char* key, const std::optional<double>& number)
 {
     if (number)
-        object.insert(QLatin1String(key), rounded(*number));
+        object.insert(QLatin1String(key), rounded_number(*number));
 }
 void put(QJsonObject& object, const char* key, const std::string& text)
 {
@@ -50,6 +45,8 @@ QJsonObject reference_object(const ReferenceConditions& reference)
     put(object, "inlet_air_c", in_celsius(reference.inlet_air));
     put(object, "cooler_coolant_c", in_celsius(reference.cooler_coolant));
     put(object, "barometric_mbar", in_bar(reference.barometer) * 1000.0);
+    if (reference.relative_humidity)
+        put(object, "relative_humidity_percent", *reference.relative_humidity * 100.0);
     put(object, "source", reference.source);
     return object;
 }
@@ -103,7 +100,7 @@ QJsonArray baseline_array(const Engine& engine)
         put(one, "load_percent", point.load_percent);
         put(one, "mode", point.mode);
         for (const auto& [name, value] : point.values)
-            one.insert(to_qt(name), rounded(value));
+            one.insert(to_qt(name), rounded_number(value));
         array.append(one);
     }
     return array;
@@ -146,6 +143,7 @@ QJsonObject known_keys(const Vessel& vessel, const Engine& engine)
     put(object, "mechanical_efficiency", engine.mechanical_efficiency);
     if (engine.propeller_pitch)
         put(object, "propeller_pitch_m", engine.propeller_pitch->value());
+    put_load_and_heat(object, engine);
     return object;
 }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/engine/engine.h"
 
+#include "core/heat/wall_problem.h"
 #include "core/input_check.h"
 
 #include <charconv>
@@ -69,6 +70,39 @@ std::optional<Problem> find_baseline_problem(const Engine& engine)
     return std::nullopt;
 }
 
+std::optional<Problem> find_share_problem(const std::optional<double>& share, const std::string& what)
+{
+    if (!share || (*share > 0.0 && *share <= 1.0))
+        return std::nullopt;
+    return invalid_input("The " + what + " is " + number_text(*share) + ", which is no share between 0 and 1.",
+                         "Give it as a share of 1, such as 0.95.");
+}
+
+/// What may be left out, but cannot be just anything.
+std::optional<Problem> find_optional_problem(const Engine& engine)
+{
+    if (auto problem = find_share_problem(engine.generator_efficiency, "generator efficiency"))
+        return problem;
+    if (engine.moving_mass && !is_positive(engine.moving_mass->value()))
+        return invalid_input("The moving mass of a cylinder is " + number_text(engine.moving_mass->value()) +
+                                 " kg, which cannot be.",
+                             "Give a mass above zero, or leave it out.");
+    const auto& humidity = engine.reference.relative_humidity;
+    if (humidity && !(*humidity >= 0.0 && *humidity <= 1.0))
+        return invalid_input("The relative humidity of the reference is " + number_text(*humidity * 100.0) +
+                                 " %, which cannot be.",
+                             "Give it from 0 to 100 %, or leave it out.");
+    if (engine.load_limits) {
+        const auto diagram = LoadDiagram::make(engine.rated_power, engine.rated_speed, *engine.load_limits);
+        if (!diagram.has_value())
+            return diagram.error();
+    }
+    for (const WallDescription& wall : engine.walls)
+        if (auto problem = find_problem(wall))
+            return problem;
+    return std::nullopt;
+}
+
 } // namespace
 
 std::string Engine::cylinder_name(int number) const
@@ -106,6 +140,8 @@ std::optional<Problem> find_problem(const Engine& engine)
         return invalid_input("The compression ratio is " + number_text(*engine.compression_ratio) +
                                  "; it must be above 1.",
                              "Give the maker's compression ratio, usually 10 to 25.");
+    if (auto problem = find_optional_problem(engine))
+        return problem;
     return find_baseline_problem(engine);
 }
 
