@@ -72,6 +72,10 @@ FieldList particulars(const Context& context)
         fields.fields.push_back({"Compression ratio", rounded_text(*engine.compression_ratio, 2)});
     if (engine.mechanical_efficiency)
         fields.fields.push_back({"Mechanical efficiency", rounded_text(*engine.mechanical_efficiency, 3)});
+    if (engine.generator_efficiency)
+        fields.fields.push_back({"Generator efficiency", rounded_text(*engine.generator_efficiency, 3)});
+    if (engine.moving_mass)
+        fields.fields.push_back({"Moving mass of one cylinder", rounded_text(engine.moving_mass->value(), 0) + " kg"});
     return fields;
 }
 

@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/survey/load_rows.h"
 #include "core/survey/rounding.h"
 #include "core/survey/survey_context.h"
 
@@ -168,17 +169,22 @@ Section reference_section(const Context& context)
     fields.fields = {{"Inlet air", rounded_text(in_celsius(reference.inlet_air), 1) + " °C"},
                      {"Charge-air coolant", rounded_text(in_celsius(reference.cooler_coolant), 1) + " °C"},
                      {"Barometer", rounded_text(in_bar(reference.barometer) * 1000.0, 0) + " mbar"},
-                     {"Relative humidity", "not used: no correction of this method depends on it"},
+                     {"Relative humidity", humidity_words(context.engine)},
                      {"Source", source_words(reference.source)},
                      {"Mechanical efficiency", context.engine.mechanical_efficiency
                                                    ? rounded_text(*context.engine.mechanical_efficiency, 3) : "not given"},
                      {"Lower heating values", heating_values(context)}};
+    if (context.engine.consumption_correction == ConsumptionCorrection::iso_3046)
+        fields.fields.push_back({"Consumption", "brought to reference ambient by ISO 3046-1, " +
+                                                    std::string(aspiration_words(context.engine.aspiration))});
     Section section{"Reference conditions and corrections", true, {fields}};
     if (context.engine.correction.empty())
         section.blocks.push_back(Paragraph{"No correction coefficients are entered for this engine: pressures and exhaust "
                                            "temperatures are compared as read.", {}});
     else
         section.blocks.push_back(coefficients_table(context.engine));
+    if (context.engine.load_limits || !context.engine.walls.empty())
+        section.blocks.push_back(load_and_walls_table(context.engine));
     return section;
 }
 
