@@ -86,6 +86,11 @@ EngineDesign auxiliary(int number)
     engine.compression_ratio = 15.6;
     engine.cylinder_closes_deg = -152.0;
     engine.cylinder_opens_deg = 124.0;
+    engine.generator_efficiency = 0.95;
+    engine.load_limits.constant_speed = true;
+    engine.load_limits.mean_effective_pressure = 110.0;
+    engine.load_limits.highest_speed = 105.0;
+    engine.load_limits.overload = 110.0;
     engine.correction = {
         {"scavenge_pressure", {0.0028, -0.0019}},
         {"compression_pressure", {0.0025, -0.0016}},
@@ -137,6 +142,33 @@ EngineDesign main_engine()
         {"jacket_outlet_temperature", {}, 92.0}, {"piston_coolant_outlet_temperature", {}, 72.0},
         {"scavenge_box_temperature", {}, 80.0},  {"lube_oil_inlet_pressure", 1.8, {}},
     };
+    engine.moving_mass_kg = 4900.0;
+    engine.load_limits = {.mean_effective_pressure = 100.0,
+                          .torque_exponent = 2.0,
+                          .torque_below_speed = 97.0,
+                          .highest_speed = 104.5,
+                          .overload = 110.0,
+                          .light_running_margin = 4.0};
+    engine.walls = {{.part = "liner",
+                     .load_percent = 85.0,
+                     .gas_c = 880.0,
+                     .gas_film = 390.0,
+                     .thickness_mm = 46.0,
+                     .conductivity = 45.0,
+                     .coolant_film = 6800.0,
+                     .coolant_c = 84.0,
+                     .highest_c = 320.0,
+                     .lowest_c = 130.0},
+                    {.part = "cover",
+                     .load_percent = 85.0,
+                     .gas_c = 920.0,
+                     .gas_film = 430.0,
+                     .thickness_mm = 32.0,
+                     .conductivity = 42.0,
+                     .coolant_film = 7600.0,
+                     .coolant_c = 85.0,
+                     .highest_c = 360.0,
+                     .lowest_c = {}}};
     engine.instruments = instruments("ME", "2022");
     engine.baseline = baseline_points(engine, two_stroke_curves);
     return engine;

@@ -35,6 +35,24 @@ struct DesignInstrument
     double uncertainty = 0.0; ///< half-width at 95 %, unit of the quantity
 };
 
+/// Limits of the load diagram, in per cent of the rating but for the exponent.
+struct DesignLoadLimits
+{
+    bool constant_speed = false;
+    std::optional<double> mean_effective_pressure, torque_exponent, torque_below_speed, highest_speed, overload,
+        light_running_margin;
+};
+
+/// One spot of a cylinder's wall at one load.
+struct DesignWall
+{
+    std::string part;
+    double load_percent = 0.0, gas_c = 0.0, gas_film = 0.0; ///< W/(m² K)
+    double thickness_mm = 0.0, conductivity = 0.0;          ///< W/(m K)
+    double coolant_film = 0.0, coolant_c = 0.0, highest_c = 0.0;
+    std::optional<double> lowest_c;
+};
+
 struct EngineDesign
 {
     int number = 0; ///< 0 main engine, 1 and 2 the auxiliary engines
@@ -50,6 +68,10 @@ struct EngineDesign
     std::map<std::string, Coefficients> correction;
     std::vector<DesignLimit> limits;
     std::vector<DesignInstrument> instruments;
+    DesignLoadLimits load_limits;
+    std::vector<DesignWall> walls;
+    std::optional<double> moving_mass_kg; ///< of one cylinder: what goes up and down
+    std::optional<double> generator_efficiency;
     std::vector<DesignPoint> baseline; ///< 25 to 110 % in steps of 5
 
     double swept_volume_m3() const; ///< of one cylinder

@@ -116,6 +116,56 @@ std::string baseline(const EngineDesign& engine)
     return key("baseline") + "[\n" + joined(members, "    ") + "  ]";
 }
 
+std::string braces(const std::vector<std::string>& members)
+{
+    std::string json = "{";
+    for (std::size_t i = 0; i < members.size(); ++i)
+        json += (i > 0 ? ", " : "") + members[i];
+    return json + "}";
+}
+
+std::string load_limits(const DesignLoadLimits& limits)
+{
+    std::vector<std::string> members;
+    const auto add = [&](const char* name, const std::optional<double>& value) {
+        if (value)
+            members.push_back(key(name) + number(*value));
+    };
+    add("mean_effective_pressure_percent", limits.mean_effective_pressure);
+    add("torque_exponent", limits.torque_exponent);
+    add("torque_below_speed_percent", limits.torque_below_speed);
+    add("highest_speed_percent", limits.highest_speed);
+    add("overload_percent", limits.overload);
+    add("light_running_margin_percent", limits.light_running_margin);
+    if (limits.constant_speed)
+        members.push_back(key("constant_speed") + "true");
+    members.push_back(source_entry());
+    return key("load_limits") + braces(members);
+}
+
+std::string walls(const EngineDesign& engine)
+{
+    std::vector<std::string> list;
+    for (const DesignWall& wall : engine.walls) {
+        std::vector<std::string> members{
+            key("part") + quoted(wall.part),
+            key("load_percent") + number(wall.load_percent),
+            key("gas_c") + number(wall.gas_c),
+            key("gas_film_w_m2k") + number(wall.gas_film),
+            key("thickness_mm") + number(wall.thickness_mm),
+            key("conductivity_w_mk") + number(wall.conductivity),
+            key("coolant_film_w_m2k") + number(wall.coolant_film),
+            key("coolant_c") + number(wall.coolant_c),
+            key("highest_c") + number(wall.highest_c),
+        };
+        if (wall.lowest_c)
+            members.push_back(key("lowest_c") + number(*wall.lowest_c));
+        members.push_back(source_entry());
+        list.push_back(braces(members));
+    }
+    return key("walls") + "[\n" + joined(list, "    ") + "  ]";
+}
+
 std::vector<std::string> particulars(const EngineDesign& engine)
 {
     std::vector<std::string> members{
@@ -136,6 +186,10 @@ std::vector<std::string> particulars(const EngineDesign& engine)
     };
     if (engine.propeller_pitch_m)
         members.push_back(key("propeller_pitch_m") + number(*engine.propeller_pitch_m));
+    if (engine.moving_mass_kg)
+        members.push_back(key("moving_mass_kg") + number(*engine.moving_mass_kg));
+    if (engine.generator_efficiency)
+        members.push_back(key("generator_efficiency") + number(*engine.generator_efficiency));
     return members;
 }
 
@@ -150,6 +204,9 @@ std::string engine_json(const Scenario& scenario, const EngineDesign& engine)
     members.push_back(correction(engine));
     members.push_back(limits(engine));
     members.push_back(instruments(engine));
+    members.push_back(load_limits(engine.load_limits));
+    if (!engine.walls.empty())
+        members.push_back(walls(engine));
     members.push_back(key("baseline_source") + quoted(invented));
     members.push_back(baseline(engine));
     return "{\n" + joined(members, "  ") + "}\n";
