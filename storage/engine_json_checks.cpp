@@ -93,7 +93,7 @@ std::string likely_quantity(const std::string& name)
         for (const Quantity& known : all_quantities())
             if (known.name.starts_with(name))
                 return known.name;
-    const std::vector<std::string> nearest = nearest_quantity_names(name, 1);
+    const std::vector<std::string> nearest = nearest_quantity_names(name, 1, true);
     // A third of the letters wrong is still a likeness; more is chance.
     if (nearest.empty() || name.size() > 64 || letters_apart(name, nearest.front()) > name.size() / 3)
         return {};

@@ -4,7 +4,7 @@
 #include "app/batch/engines.h"
 #include "app/batch/table_output.h"
 #include "core/trend/conditions.h"
-#include "core/trend/derived.h"
+#include "core/derived/derived.h"
 #include "storage/written_unit.h"
 
 #include <algorithm>

@@ -22,7 +22,7 @@ void fill_quantities(QComboBox& box)
 {
     box.addItem(EventsPage::tr("not said"), QString());
     for (const Quantity& of : all_quantities())
-        if (of.type == ValueType::number && box.findData(to_qstring(of.name)) < 0)
+        if (of.type == ValueType::number && !of.derived() && box.findData(to_qstring(of.name)) < 0)
             box.addItem(to_qstring(of.title), to_qstring(of.name));
 }
 

@@ -134,7 +134,7 @@ Result<std::string> read_quantity_name(const QString& text)
         if (text.trimmed().compare(to_qstring(of.title), Qt::CaseInsensitive) == 0 || of.name == typed)
             return of.name;
     std::string nearest;
-    for (const std::string& name : nearest_quantity_names(typed))
+    for (const std::string& name : nearest_quantity_names(typed, 3, true))
         nearest += (nearest.empty() ? "" : ", ") + title_of(name).toStdString();
     return invalid_input("No quantity is called \"" + typed + "\".", "Choose one of the log sheet" + (nearest.empty() ? "." : ", such as " + nearest + "."));
 }

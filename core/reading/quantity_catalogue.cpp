@@ -158,12 +158,13 @@ std::optional<QuantityId> find_quantity(std::string_view name)
     return found->second.front();
 }
 
-std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count)
+std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count, bool derived_too)
 {
     std::vector<std::pair<std::size_t, std::string>> by_distance;
     name = name.substr(0, 64); // a longer name is no slip of the pen
     for (const auto& [known, ids] : catalogue().by_name)
-        by_distance.emplace_back(edit_distance(name, known), std::string(known));
+        if (derived_too || !quantity(ids.front()).derived())
+            by_distance.emplace_back(edit_distance(name, known), std::string(known));
     std::sort(by_distance.begin(), by_distance.end());
     std::vector<std::string> names;
     for (std::size_t i = 0; i < std::min(count, by_distance.size()); ++i)

@@ -2,6 +2,7 @@
 #include "core/trend/conditions.h"
 
 #include "core/reading/fitting_unit.h"
+#include "core/reading/quantity_names.h"
 #include "core/reference/fuel.h"
 
 #include <cmath>
@@ -79,12 +80,15 @@ std::optional<OwnValue> own_value(const Value& value, const Conditions& conditio
 
 std::optional<double> engine_mean(const Reading& reading, std::string_view name, const Conditions& conditions)
 {
+    const auto wanted = find_quantity(name);
+    if (!wanted)
+        return std::nullopt;
     double sum = 0.0;
     int count = 0;
     for (const Value& value : reading.values) {
-        const Quantity& q = quantity(value.quantity);
-        if (value.phase != Phase::reading || q.name != name)
+        if (value.phase != Phase::reading || first_of_its_name(value.quantity) != *wanted)
             continue;
+        const Quantity& q = quantity(value.quantity);
         if (value.place.kind == Place::Kind::cylinder && q.per != Place::Kind::cylinder)
             continue;
         const auto own = own_value(value, conditions);

@@ -14,18 +14,10 @@ namespace {
 
 constexpr double zero_celsius = 273.15;
 
-const CorrectionCoefficients* find_coefficients(const Engine& engine, const Quantity& q)
-{
-    auto found = engine.correction.find(q.name);
-    if (found == engine.correction.end() && !q.correction_like.empty())
-        found = engine.correction.find(q.correction_like);
-    return found == engine.correction.end() ? nullptr : &found->second;
-}
-
 Correction linear(const Engine& engine, const Quantity& q, double own, const Conditions& conditions)
 {
     Correction c;
-    const CorrectionCoefficients* coefficients = find_coefficients(engine, q);
+    const CorrectionCoefficients* coefficients = correction_coefficients(engine, q);
     if (!coefficients) {
         c.applied = Applied::not_correctable;
         return c;
@@ -112,15 +104,16 @@ Expectation find_expectation(const Baseline& baseline, const Quantity& q, const 
     return expectation;
 }
 
-std::optional<double> deviation_uncertainty(const Engine& engine, const Quantity& q, const JudgedValue& value,
-                                            const Correction& correction, const ConditionUncertainty& of,
-                                            double load_effect)
+DeviationBudget budget_of(const Engine& engine, const Quantity& q, double own, const Correction& correction,
+                          const ConditionUncertainty& of, double load_effect)
 {
-    const auto instrument = instrument_uncertainty(engine, q, value.raw);
-    if (!instrument)
-        return std::nullopt;
-    return std::sqrt(square(correction.scale * *instrument) + square(correction.per_inlet_air * of.air) +
-                     square(correction.per_coolant * of.coolant) + square(load_effect));
+    DeviationBudget budget;
+    if (const auto instrument = instrument_uncertainty(engine, q, own))
+        budget.instrument = correction.scale * *instrument;
+    budget.inlet_air = correction.per_inlet_air * of.air;
+    budget.cooler_coolant = correction.per_coolant * of.coolant;
+    budget.load = -load_effect;
+    return budget;
 }
 
 /// What the engine does, and not a condition that it is corrected for.
@@ -151,6 +144,30 @@ void set_apart(std::vector<JudgedValue>& values, const std::vector<std::optional
 }
 
 } // namespace
+
+const CorrectionCoefficients* correction_coefficients(const Engine& engine, const Quantity& q)
+{
+    auto found = engine.correction.find(q.name);
+    if (found == engine.correction.end() && !q.correction_like.empty())
+        found = engine.correction.find(q.correction_like);
+    return found == engine.correction.end() ? nullptr : &found->second;
+}
+
+std::optional<double> DeviationBudget::half_width() const
+{
+    if (!instrument)
+        return std::nullopt;
+    return std::sqrt(square(*instrument) + square(inlet_air) + square(cooler_coolant) + square(load));
+}
+
+DeviationBudget deviation_budget(const Engine& engine, const Baseline& baseline, const Quantity& q, double own,
+                                 const Conditions& conditions, bool compared)
+{
+    const ConditionUncertainty uncertainty(engine, conditions);
+    const Expectation expectation = find_expectation(baseline, q, conditions, uncertainty.load);
+    return budget_of(engine, q, own, find_correction(engine, q, own, conditions), uncertainty,
+                     compared ? expectation.load_effect : 0.0);
+}
 
 Correction find_correction(const Engine& engine, const Quantity& q, double own, const Conditions& conditions)
 {
@@ -220,8 +237,8 @@ std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& base
             comparable.back() = best - *value.expected;
         else if (!expectation.in_baseline && is_performance(q))
             comparable.back() = best;
-        value.uncertainty = deviation_uncertainty(engine, q, value, correction, uncertainty,
-                                                  value.expected ? expectation.load_effect : 0.0);
+        value.uncertainty = budget_of(engine, q, value.raw, correction, uncertainty,
+                                      value.expected ? expectation.load_effect : 0.0).half_width();
         values.push_back(std::move(value));
     }
     set_apart(values, comparable);

@@ -29,6 +29,22 @@ Correction find_correction(const Engine& engine, const Quantity& quantity, doubl
 /// Half-width at 95 % of one instrument, own unit; nothing where neither engine nor catalogue states one.
 std::optional<double> instrument_uncertainty(const Engine& engine, const Quantity& quantity, double own);
 
+/// The coefficients that correct a quantity, its own or those of the one that it is corrected like; null where the
+/// engine has none.
+const CorrectionCoefficients* correction_coefficients(const Engine& engine, const Quantity& quantity);
+
+/// What the half-width of one value's deviation is made of, in the quantity's own unit, with signs.
+struct DeviationBudget
+{
+    std::optional<double> instrument; ///< of the typed number, corrected; empty: nobody states one
+    double inlet_air = 0.0, cooler_coolant = 0.0; ///< what the uncertainty of the condition moves the correction by
+    double load = 0.0;                ///< what that of the load moves the expected value by
+    std::optional<double> half_width() const;
+};
+/// @param compared false: without an expected value the load does not count
+DeviationBudget deviation_budget(const Engine& engine, const Baseline& baseline, const Quantity& quantity, double own,
+                                 const Conditions& conditions, bool compared);
+
 /// All numeric values of a reading, judged but for `doubtful`; walking order.
 std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& baseline, const Reading& reading,
                                       const Conditions& conditions);

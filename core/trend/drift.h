@@ -55,6 +55,7 @@ struct Channel
     std::vector<Cell> cells;          ///< (T x N)
     std::vector<char> segment_starts; ///< (T x N) work on this instrument only, before this reading
     bool in_scan = true;              ///< false: typing check and apart only
+    bool checked = true;              ///< false: worked out of values that are checked where they were typed
     Marks marks;                      ///< of one cylinder
     Marks median_marks;               ///< of the median over the cylinders
 };

@@ -34,7 +34,7 @@ std::vector<CatalogueChannel> read_channels()
              table.cell(row, "deviation_form") == "percent" ? DeviationForm::percent
                                                             : DeviationForm::difference,
              table.cell(row, "unit"), table.number(row, "row_ratio_low").value_or(0.0),
-             table.number(row, "row_ratio_high").value_or(1e9), table.cell(row, "counted") == "yes"});
+             table.number(row, "row_ratio_high").value_or(1e9), table.cell(row, "evidence") == "yes", table.cell(row, "counted") == "yes"});
     }
     return channels;
 }

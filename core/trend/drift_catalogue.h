@@ -27,6 +27,7 @@ struct CatalogueChannel
     /// Median of typed over expected outside which a whole row must be in another unit; 0 and 1e9: not looked
     /// for.
     double row_ratio_low, row_ratio_high;
+    bool evidence; ///< false: trended with its band, and no part of the evidence
     bool counted; ///< among those the thresholds were calibrated for; others raise them a little
 };
 

@@ -81,9 +81,27 @@ public:
         return channel;
     }
 
+    /// Worked out of values that are checked where they were typed.
+    drift::Channel derived_cylinder_channel(const drift::CatalogueChannel& from, const DerivedQuantity& quantity) const
+    {
+        drift::Channel channel;
+        channel.quantity = from.quantity;
+        channel.noise = from.noise;
+        channel.offset_spread = from.offset_spread;
+        channel.in_scan = from.evidence;
+        channel.checked = false;
+        channel.cells.resize(prepared_.size() * cylinders_);
+        for (std::size_t i = 0; i < prepared_.size(); ++i)
+            for (const DerivedValue& row : prepared_[i].derived)
+                if (row.id == quantity.id && row.place.kind == Place::Kind::cylinder)
+                    channel.cells[i * cylinders_ + static_cast<std::size_t>(row.place.number) - 1] = derived_cell(from, row);
+        return channel;
+    }
+
     drift::EngineChannel engine_channel(const drift::CatalogueChannel& from) const
     {
         drift::EngineChannel channel;
+        channel.in_scan = from.evidence;
         channel.quantity = from.quantity;
         channel.typed_quantity = from.typed_quantity;
         channel.noise = from.noise;
@@ -126,6 +144,12 @@ private:
             return consumption_cell(reading);
         if (from.quantity == "cooler_temperature_difference")
             return temperature_difference_cell(reading);
+        if (find_derived(from.quantity)) {
+            for (const DerivedValue& row : prepared_[reading].derived)
+                if (row.quantity == from.quantity && row.place == Place::engine())
+                    return derived_cell(from, row);
+            return {};
+        }
         if (!baseline_.has(from.quantity))
             return {};
         return mean_cell(from.quantity, reading, [&](const Quantity& q, double own) {
@@ -172,28 +196,57 @@ private:
         return mean;
     }
 
+    /// Nobody typed it: there is no text to look for a slip in. Where the baseline speaks of it and does not reach,
+    /// it is left out.
+    drift::Cell derived_cell(const drift::CatalogueChannel& from, const DerivedValue& row) const
+    {
+        const std::optional<double> compared = row.compared;
+        drift::Cell cell;
+        if (!compared || !std::isfinite(*compared) || (!row.expected && (is_percent(from) || baseline_.has(from.quantity))))
+            return cell;
+        cell.present = true;
+        cell.deviation = *compared - row.expected.value_or(0.0);
+        if (is_percent(from))
+            cell.deviation *= 100.0 / *row.expected;
+        cell.typed_number = *compared;
+        cell.scale = 1.0;
+        cell.confirmed = true;
+        return cell;
+    }
+
+    /// A derived quantity of the engine, whether the reading is judged or a draft.
+    std::optional<DerivedValue> derived_of_engine(std::string_view name, std::size_t reading) const
+    {
+        for (const DerivedValue& row : prepared_[reading].derived)
+            if (row.quantity == name && row.place == Place::engine())
+                return row;
+        if (!prepared_[reading].derived.empty())
+            return std::nullopt;
+        const DerivedReading of(record_.engine, baseline_, record_.readings[reading], prepared_[reading].conditions);
+        DerivedInputs inputs(of);
+        return derive_one(inputs, *find_derived(name), Place::engine());
+    }
+
     drift::Cell temperature_difference_cell(std::size_t reading) const
     {
-        const auto coolant = prepared_[reading].conditions.cooler_coolant;
-        if (!coolant)
+        const auto over = derived_of_engine("cooler_temperature_difference", reading);
+        const auto air = engine_mean(record_.readings[reading], "scavenge_temperature", prepared_[reading].conditions);
+        if (!over || !air)
             return {};
         return mean_cell("scavenge_temperature", reading, [&](const Quantity&, double) {
-            return std::optional<DeviationForm>({1.0, -*coolant});
+            return std::optional<DeviationForm>({1.0, over->value - *air});
         });
     }
 
     drift::Cell consumption_cell(std::size_t reading) const
     {
-        const Conditions& conditions = prepared_[reading].conditions;
-        const auto now = specific_consumption(record_.engine, record_.readings[reading], conditions);
-        const BaselineCurve* curve = baseline_.curve(conditions.mode, "specific_fuel_consumption");
-        if (!now || !curve || !conditions.load_percent)
-            return {};
-        const auto expected = curve->at(*conditions.load_percent);
-        if (!expected)
+        const auto row = derived_of_engine("specific_fuel_consumption", reading);
+        const auto fuel = engine_mean(record_.readings[reading], "fuel_consumption", prepared_[reading].conditions);
+        const auto compared = row ? row->compared : std::nullopt;
+        if (!compared || !row->expected || !fuel || !(*fuel > 0.0))
             return {};
         return mean_cell("fuel_consumption", reading, [&](const Quantity&, double) {
-            return std::optional<DeviationForm>({now->per_fuel_flow, -*expected});
+            return std::optional<DeviationForm>({*compared / *fuel, -*row->expected});
         });
     }
 
@@ -255,8 +308,13 @@ drift::Input make_drift_input(const EngineRecord& record, const Baseline& baseli
     for (const drift::CatalogueChannel& channel : drift::channel_catalogue()) {
         if (channel.subject == drift::Subject::cylinder) {
             const auto id = find_quantity(channel.quantity, Place::Kind::cylinder);
-            if (id && ever_read(prepared, *id))
+            if (id && ever_read(prepared, *id)) {
                 input.channels.push_back(maker.cylinder_channel(channel, *id));
+            } else if (const DerivedQuantity* derived = id ? nullptr : find_derived(channel.quantity)) {
+                drift::Channel made = maker.derived_cylinder_channel(channel, *derived);
+                if (std::any_of(made.cells.begin(), made.cells.end(), [](const drift::Cell& c) { return c.present; }))
+                    input.channels.push_back(std::move(made));
+            }
         } else if (channel.subject == drift::Subject::engine) {
             drift::EngineChannel made = maker.engine_channel(channel);
             if (any_present(made))

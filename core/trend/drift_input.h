@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/derived/derived.h"
 #include "core/trend/deviations.h"
 #include "core/trend/drift.h"
 #include "core/trend/judgement.h"
@@ -15,6 +16,7 @@ struct PreparedReading
 {
     Conditions conditions;
     std::vector<JudgedValue> values;
+    std::vector<DerivedValue> derived; ///< those that are trended; empty for a draft, which shows none
     bool outside_baseline = false; ///< load or mode that the baseline does not reach: raises nothing
 };
 

@@ -205,7 +205,7 @@ QuantityId drift_quantity(std::string_view name)
     if (name.substr(0, median_prefix.size()) == median_prefix)
         name.remove_prefix(median_prefix.size());
     if (const auto id = find_quantity(name, Place::Kind::cylinder))
-        return *id;
+        return *id; // typed ones; derived ones have one line each
     return find_quantity(name).value_or(0);
 }
 

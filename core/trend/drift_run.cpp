@@ -181,7 +181,7 @@ void DriftRun::take_apart(std::size_t reading, std::size_t channel, const Readin
     std::vector<double> offsets(cylinders_);
     for (std::size_t j = 0; j < cylinders_; ++j) {
         const std::size_t supposed = decisions_[j].supposed();
-        offsets[j] = supposed <= history.start[j] && history.sound_input
+        offsets[j] = supposed <= history.start[j] && history.sound_input && history.input->checked
                          ? opinion.cylinders[channel][j].own_offset // from the same readings
                          : own_offset(history.from_others, cylinders_, j,
                                       std::max(history.start[j], supposed), reading)

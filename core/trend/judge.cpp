@@ -34,6 +34,7 @@ Judgement judge(std::shared_ptr<const EngineRecord> record, const std::function<
             return Judgement{};
         const Reading& reading = record->readings[i];
         prepared.push_back(prepare_reading(engine, baseline, reading));
+        prepared.back().derived = derive_trended(DerivedReading(engine, baseline, reading, prepared.back().conditions));
         const SteadinessVerdict steadiness = judge_steadiness(reading, on_the_grid);
         unsteady.push_back(steadiness.verdict == Steadiness::unsteady ? 1 : 0);
         judgement.readings.push_back({i, steadiness.verdict, steadiness.sentence, false,
@@ -55,7 +56,7 @@ Judgement judge(std::shared_ptr<const EngineRecord> record, const std::function<
     add_evidence(judgement, output);
     add_flags(judgement, input, output);
     add_absolute_limit_flags(judgement);
-    add_trends(judgement, baseline, prepared, input, output);
+    add_trends(judgement, prepared, input, output);
     set_levels(judgement, input, output);
     return judgement;
 }

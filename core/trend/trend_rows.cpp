@@ -46,33 +46,63 @@ TrendMap gather(const Judgement& judgement)
     return trends;
 }
 
-void add_derived(TrendMap& trends, const Judgement& judgement, const Baseline& baseline,
-                 const std::vector<PreparedReading>& prepared)
+/// A derived quantity is doubted where a value that it rests on is.
+bool rests_on_doubted(const Judgement& judgement, std::size_t reading, const DerivedQuantity& quantity_of, Place place)
 {
-    const QuantityId over_coolant = *find_quantity("cooler_temperature_difference");
-    const QuantityId consumption = *find_quantity("specific_fuel_consumption");
-    const auto expected = [&](const Conditions& c, QuantityId id) -> std::optional<double> {
-        const BaselineCurve* curve = baseline.curve(c.mode, quantity(id).name);
-        return curve && c.load_percent ? curve->at(*c.load_percent) : std::nullopt;
-    };
-    const auto add = [&](std::size_t i, QuantityId id, double raw, double corrected) {
-        JudgedValue value;
-        value.raw = raw;
-        value.corrected = corrected;
-        value.expected = expected(prepared[i].conditions, id);
-        if (value.expected)
-            value.deviation = corrected - *value.expected;
-        trends[{id, Place::engine()}].points.push_back(make_point(i, value));
-    };
+    const auto& values = judgement.readings[reading].values;
+    return std::any_of(values.begin(), values.end(), [&](const JudgedValue& value) {
+        const bool elsewhere = value.place.kind == Place::Kind::cylinder && value.place != place;
+        return value.doubtful && !elsewhere &&
+               std::find(quantity_of.inputs.begin(), quantity_of.inputs.end(), quantity(value.quantity).name) !=
+                   quantity_of.inputs.end();
+    });
+}
+
+TrendPoint derived_point(std::size_t reading, const DerivedValue& row)
+{
+    TrendPoint point;
+    point.reading = reading;
+    point.raw = row.value;
+    if (has_correction(*find_derived(row.quantity)))
+        point.corrected = row.compared;
+    point.expected = row.expected;
+    if (row.compared && row.expected)
+        point.deviation = *row.compared - *row.expected;
+    return point;
+}
+
+/// Apart of the cylinders of one reading, as judge_values sets typed ones apart.
+void set_apart(std::vector<std::pair<Trend*, std::optional<double>>>& row)
+{
+    for (const auto& [trend, own] : row) {
+        std::vector<double> others;
+        for (const auto& [other, compared] : row)
+            if (other != trend && compared)
+                others.push_back(*compared);
+        if (own && !others.empty())
+            trend->points.back().apart = *own - drift::median_in_place(others);
+    }
+    row.clear();
+}
+
+void add_derived(TrendMap& trends, const Judgement& judgement, const std::vector<PreparedReading>& prepared)
+{
+    std::vector<std::pair<Trend*, std::optional<double>>> row_of_cylinders;
     for (std::size_t i = 0; i < prepared.size(); ++i) {
-        const Reading& reading = judgement.record->readings[i];
-        const Conditions& c = prepared[i].conditions;
-        const auto scavenge = engine_mean(reading, "scavenge_temperature", c);
-        if (scavenge && c.cooler_coolant)
-            add(i, over_coolant, *scavenge - *c.cooler_coolant, *scavenge - *c.cooler_coolant);
-        if (const auto sfoc = specific_consumption(judgement.record->engine, reading, c))
-            add(i, consumption,
-                sfoc->value * reference_heating_value / c.heating_value.value_or(reference_heating_value), sfoc->value);
+        const auto& values = judgement.readings[i].values;
+        const bool any_doubt = std::any_of(values.begin(), values.end(), [](const JudgedValue& value) { return value.doubtful; });
+        QuantityId id = -1;
+        for (const DerivedValue& row : prepared[i].derived) {
+            if (row.id != id)
+                set_apart(row_of_cylinders);
+            id = row.id;
+            Trend& trend = trends[{row.id, row.place}];
+            trend.points.push_back(derived_point(i, row));
+            trend.points.back().doubtful = any_doubt && rests_on_doubted(judgement, i, *find_derived(row.quantity), row.place);
+            if (row.place.kind == Place::Kind::cylinder)
+                row_of_cylinders.emplace_back(&trend, trend.points.back().deviation ? trend.points.back().deviation : row.compared);
+        }
+        set_apart(row_of_cylinders);
     }
 }
 
@@ -99,7 +129,9 @@ CellsOfTrend find_cells(const Trend& trend, const drift::Input& input, const dri
         }
         return found;
     }
-    for (std::size_t k = 0; k < input.engine_channels.size(); ++k) {
+    // Of several turbochargers the engine's mean is judged: of a derived one, that alone.
+    const bool part_of_mean = quantity(trend.quantity).derived() && trend.place != Place::engine();
+    for (std::size_t k = 0; k < input.engine_channels.size() && !part_of_mean; ++k) {
         if (input.engine_channels[k].quantity != quantity(trend.quantity).name)
             continue;
         for (std::size_t i = 0; i < readings; ++i)
@@ -219,12 +251,12 @@ void mark_doubtful_values(Judgement& judgement)
 
 } // namespace
 
-void add_trends(Judgement& judgement, const Baseline& baseline, const std::vector<PreparedReading>& prepared,
+void add_trends(Judgement& judgement, const std::vector<PreparedReading>& prepared,
                 const drift::Input& input, const drift::Output& output)
 {
     mark_doubtful_values(judgement);
     TrendMap trends = gather(judgement);
-    add_derived(trends, judgement, baseline, prepared);
+    add_derived(trends, judgement, prepared);
     for (auto& [key, trend] : trends) {
         trend.quantity = key.first;
         trend.place = key.second;

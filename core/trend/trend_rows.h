@@ -7,7 +7,7 @@
 namespace evenstroke {
 
 /// Gathers every performance quantity over time, the derived ones too, with its usual band and stretches.
-void add_trends(Judgement& judgement, const Baseline& baseline, const std::vector<PreparedReading>& prepared,
+void add_trends(Judgement& judgement, const std::vector<PreparedReading>& prepared,
                 const drift::Input& input, const drift::Output& output);
 
 /// Gives every trend its level of now, and the judgement the worst of them.

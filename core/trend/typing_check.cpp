@@ -201,7 +201,7 @@ void TypingCheck::judge_cylinders(std::size_t reading, const std::vector<Channel
 {
     opinion.cylinders.assign(history.size(), std::vector<CellOpinion>(input_->cylinders));
     for (std::size_t k = 0; k < history.size(); ++k) {
-        if (!history[k].sound_input)
+        if (!history[k].sound_input || !history[k].input->checked)
             continue;
         std::vector<CellOpinion>& row = opinion.cylinders[k];
         MaybeValues typed(input_->cylinders), offset_free(input_->cylinders);

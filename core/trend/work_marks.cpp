@@ -45,13 +45,24 @@ public:
             if (channel.quantity != quantity_name && channel.typed_quantity != quantity_name)
                 continue;
             found = true;
-            channel.segment_starts.resize(input_.readings(), 0);
-            channel.segment_starts[reading_] = 1;
+            start(channel);
+        }
+        // What is only shown begins anew with any instrument that it rests on.
+        for (drift::EngineChannel& channel : input_.engine_channels) {
+            const DerivedQuantity* derived = channel.in_scan ? nullptr : find_derived(channel.quantity);
+            if (derived && std::find(derived->inputs.begin(), derived->inputs.end(), quantity_name) != derived->inputs.end())
+                start(channel);
         }
         return found;
     }
 
 private:
+    void start(drift::EngineChannel& channel) const
+    {
+        channel.segment_starts.resize(input_.readings(), 0);
+        channel.segment_starts[reading_] = 1;
+    }
+
     drift::Input& input_;
     std::size_t reading_;
 };

@@ -42,6 +42,7 @@ constexpr Unit table[] = {
 
     {"%", share, 0.01, 0.0, {"percent", "pct"}},
     {"fraction", share, 1.0, 0.0, {}},
+    {"g/kg", share, 1e-3, 0.0, {}},
 
     {"°C", temperature, 1.0, 273.15, {"degC", "C"}},
     {"°F", temperature, exactly(5.0L / 9.0L), exactly(459.67L * 5.0L / 9.0L), {"degF", "F"}},

@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Quantities worked out of a reading. All readings are invented; the expected numbers were worked out separately
 // from the definitions, to nine digits or more. Tolerance: 1e-8 of the number unless said.
-#include "core/trend/derived.h"
+#include "core/derived/derived.h"
 #include "core/trend/deviations.h"
 #include "tests/core/reading_maker.h"
 

@@ -1,0 +1,192 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/derived/derived_formulas.h"
+
+#include "core/reference/fuel.h"
+#include "core/reference/fuel_properties.h"
+#include "core/reference/humid_air.h"
+#include "core/reference/linear_correction.h"
+#include "core/trend/deviations.h"
+
+namespace evenstroke {
+namespace {
+
+/// Heaviest distillate of ISO 8217 (from memory): above, a fuel is taken for a residual one.
+constexpr double heaviest_distillate = 900.0; // kg/m³
+
+std::optional<Temperature> temperature(Number degrees)
+{
+    return degrees ? std::optional(celsius(*degrees)) : std::nullopt;
+}
+
+Number raw_consumption(DerivedInputs& of, Place)
+{
+    const Number fuel = of.mean("fuel_consumption");
+    const bool measured = of.optional_mean("shaft_power") || (of.optional_mean("shaft_torque") && of.optional_mean("speed"));
+    Number power;
+    if (measured) {
+        power = shaft_kilowatts(of);
+    } else if (const Number load = of.mean("load_percent")) {
+        of.remark("No power was measured: that of the typed load was taken.");
+        const double rated = of.particular("Rated power", "P_rated", of.engine().rated_power.value() / 1000.0, "kW");
+        power = of.step("Power at the typed load", *load / 100.0 * rated, "kW");
+    }
+    if (!fuel || !power)
+        return std::nullopt;
+    if (!(*power > 0.0))
+        return of.not_known("The specific fuel consumption is not known, because the power is not above zero.", "Check the power.");
+    return 1000.0 * *fuel / *power;
+}
+
+/// Both pressures of steam, where the class of engine needs them; false where one is not known.
+bool add_steam(DerivedInputs& of, Iso3046Ambient& site, Iso3046Ambient& reference)
+{
+    const Number humidity = of.mean("relative_humidity");
+    if (!humidity)
+        return false;
+    if (!of.engine().reference.relative_humidity) {
+        of.not_known("The adjustment to ISO 3046-1 is not known, because the reference conditions have no humidity.",
+                     "Enter the reference humidity with the engine's particulars.");
+        return false;
+    }
+    const auto now = vapour_pressure(site.inlet_air, Ratio(*humidity / 100.0));
+    const auto then = vapour_pressure(reference.inlet_air, Ratio(*of.engine().reference.relative_humidity));
+    if (!of.holds(now) || !of.holds(then))
+        return false;
+    site.water_vapour = now.value();
+    reference.water_vapour = then.value();
+    return true;
+}
+
+/// β of ISO 3046-1 for the air and the coolant of the reading.
+Number iso_factor(DerivedInputs& of)
+{
+    const Engine& engine = of.engine();
+    const Iso3046Exponents exponents = iso_3046_exponents(engine.aspiration);
+    const Number inlet = of.mean("inlet_air_temperature");
+    const Number coolant = exponents.s != 0.0 ? of.mean("cooler_coolant_inlet_temperature") : std::nullopt;
+    if (!inlet || (exponents.s != 0.0 && !coolant))
+        return std::nullopt;
+    Iso3046Ambient site{bar_absolute(of.barometer()), celsius(*inlet), temperature(coolant), {}};
+    Iso3046Ambient reference{engine.reference.barometer, engine.reference.inlet_air, engine.reference.cooler_coolant, {}};
+    if (exponents.a != 0.0 && !add_steam(of, site, reference))
+        return std::nullopt;
+    if (!engine.mechanical_efficiency)
+        of.remark("The engine's particulars state no mechanical efficiency: 0.80 was taken, as ISO 3046-1 does.");
+    const double efficiency = of.particular("Mechanical efficiency", "η_m",
+                                            engine.mechanical_efficiency.value_or(iso_3046_mechanical_efficiency), "");
+    const auto adjustment = adjust_iso_3046(engine.aspiration, site, reference, efficiency);
+    if (!of.holds(adjustment))
+        return std::nullopt;
+    of.step("Factor k of ISO 3046-1", adjustment.value().k, "");
+    of.step("Factor α of ISO 3046-1", adjustment.value().alpha, "");
+    return of.step("Factor β of ISO 3046-1", adjustment.value().beta, "");
+}
+
+Number corrected_by_iso(DerivedInputs& of, double consumption, bool has_linear)
+{
+    if (has_linear)
+        of.remark("The engine has linear coefficients for the consumption too; with ISO 3046-1 chosen they are not used.");
+    const Number beta = iso_factor(of);
+    return beta ? std::optional(consumption / *beta) : std::nullopt;
+}
+
+Number corrected_linearly(DerivedInputs& of, double consumption, const CorrectionCoefficients& by)
+{
+    const auto corrected = correct_linearly(
+        grams_per_kilowatt_hour(consumption),
+        ambient_difference(temperature(of.optional_mean("inlet_air_temperature")),
+                           temperature(of.optional_mean("cooler_coolant_inlet_temperature")), of.engine().reference),
+        by);
+    if (!of.holds(corrected))
+        return std::nullopt;
+    if (corrected.value().extrapolated)
+        of.remark("Air or coolant lie outside the range that the linear correction is good for: extrapolated.");
+    return in_grams_per_kilowatt_hour(corrected.value().value);
+}
+
+/// At 42.7 MJ/kg and at reference ambient: by linear coefficients or by ISO 3046-1, never by both.
+Number consumption_at_reference(DerivedInputs& of, Number raw, Number heat)
+{
+    if (!raw || !heat)
+        return std::nullopt;
+    const double usual = *of.step("Specific consumption at 42.7 MJ/kg", *raw * (*heat / reference_heating_value), "g/kWh");
+    const auto linear = of.engine().correction.find("specific_fuel_consumption");
+    const bool has_linear = linear != of.engine().correction.end();
+    if (of.engine().consumption_correction == ConsumptionCorrection::iso_3046)
+        return corrected_by_iso(of, usual, has_linear);
+    if (has_linear)
+        return corrected_linearly(of, usual, linear->second);
+    of.remark("The engine has no correction of the consumption for ambient air: only the heating value was corrected.");
+    return usual;
+}
+
+Number corrected_consumption(DerivedInputs& of, Place place)
+{
+    const Number raw = raw_consumption(of, place);
+    return consumption_at_reference(of, raw, of.mean("fuel_lower_heating_value"));
+}
+
+Number compared_consumption(DerivedInputs& of, Place place)
+{
+    return consumption_at_reference(of, raw_consumption(of, place),
+                                    of.optional_mean("fuel_lower_heating_value").value_or(reference_heating_value));
+}
+
+Number ignition(DerivedInputs& of, Place)
+{
+    const Number density = of.mean("fuel_density_15"), viscosity = of.mean("fuel_viscosity");
+    const Number at = of.mean("fuel_temperature");
+    if (!density || !viscosity || !at)
+        return std::nullopt;
+    return of.known(ignition_index(*density * si::kilogrammes_per_cubic_metre, square_millimetres_per_second(*viscosity), celsius(*at)));
+}
+
+Number heating_value(DerivedInputs& of, Place)
+{
+    if (of.optional_mean("fuel_lower_heating_value"))
+        return of.not_known("No lower heating value was worked out, because one was typed, and that one counts.", "");
+    const Number density = of.mean("fuel_density_15"), sulphur = of.mean("fuel_sulphur");
+    if (!density || !sulphur)
+        return std::nullopt;
+    const bool residual = *density > heaviest_distillate;
+    of.remark(residual ? "Above 900 kg/m³ the form for residual fuels was taken."
+                       : "Up to 900 kg/m³ the form for distillates was taken.");
+    of.remark("Water and ash were taken as none; each tenth of a per cent of water takes about 0.04 MJ/kg off.");
+    const double water = of.assumed("Water and ash", "w", 0.0, "%", "not read: none taken");
+    const auto heat = net_heating_value(residual ? PetroleumGroup::residual : PetroleumGroup::distillate,
+                                        {*density * si::kilogrammes_per_cubic_metre, Ratio(water / 100.0), Ratio(0.0),
+                                         Ratio(*sulphur / 100.0), Ratio(0.0)});
+    return of.known(heat, 1e-6);
+}
+
+Number density_as_metered(DerivedInputs& of, Place)
+{
+    const Number density = of.mean("fuel_density_15"), at = of.mean("fuel_temperature");
+    return density && at ? of.known(density_at_temperature(*density * si::kilogrammes_per_cubic_metre, celsius(*at))) : std::nullopt;
+}
+
+Number mass_flow(DerivedInputs& of, Place place)
+{
+    const Number litres = of.metered_volume();
+    if (!litres)
+        return of.optional_mean("fuel_consumption")
+                   ? of.not_known("No mass flow was worked out, because the fuel consumption was typed as a mass.", "")
+                   : of.mean("fuel_consumption");
+    const Number density = of.step("Density as metered", density_as_metered(of, place), "kg/m³");
+    return density ? std::optional(*litres / 1000.0 * *density) : std::nullopt;
+}
+
+} // namespace
+
+std::span<const DerivedFormula> fuel_formulas()
+{
+    static const DerivedFormula formulas[] = {
+        {"specific_fuel_consumption", raw_consumption, corrected_consumption, compared_consumption, true},
+        {"calculated_ignition_index", ignition},
+        {"calculated_heating_value", heating_value},
+        {"fuel_density_at_meter", density_as_metered},
+        {"fuel_mass_flow", mass_flow}};
+    return formulas;
+}
+
+} // namespace evenstroke

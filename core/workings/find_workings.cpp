@@ -1,0 +1,48 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/workings/find_workings.h"
+
+#include "core/workings/derived_workings.h"
+#include "core/workings/typed_workings.h"
+
+namespace evenstroke {
+namespace {
+
+bool has_place(const Engine& engine, Place place)
+{
+    return place.kind != Place::Kind::cylinder || (place.number >= 1 && place.number <= engine.cylinders);
+}
+
+bool was_typed(const Reading& reading, QuantityId id, Place place)
+{
+    const Value* value = reading.find(id, place);
+    return value && value->number;
+}
+
+/// Whether somebody could type this quantity at this place.
+bool can_be_typed(const Quantity& q, Place place)
+{
+    if (q.derived() || q.type != ValueType::number)
+        return false;
+    return find_quantity(q.name, place.kind) == std::optional(q.id);
+}
+
+} // namespace
+
+std::optional<Workings> find_workings(const Judgement& judgement, std::size_t reading, QuantityId id, Place place)
+{
+    if (!judgement.record || reading >= judgement.readings.size() || reading >= judgement.record->readings.size())
+        return std::nullopt;
+    const EngineRecord& record = *judgement.record;
+    const Quantity& q = quantity(id);
+    if (!has_place(record.engine, place))
+        return std::nullopt;
+    const Baseline baseline(record.engine);
+    const DerivedQuantity* derived = find_derived(id, place.kind);
+    if (derived && (q.derived() || !was_typed(record.readings[reading], id, place)))
+        return derived_workings(DerivedReading(record.engine, baseline, record.readings[reading]), *derived, place);
+    if (!can_be_typed(q, place))
+        return std::nullopt;
+    return typed_workings(judgement, baseline, reading, q, place);
+}
+
+} // namespace evenstroke
