@@ -3,6 +3,7 @@
 
 #include "core/engine/table_text.h"
 #include "core/plain_text.h"
+#include "core/reading/quantity_names.h"
 
 #include <algorithm>
 
@@ -93,7 +94,7 @@ std::string likely_quantity(const std::string& name)
         for (const Quantity& known : all_quantities())
             if (known.name.starts_with(name))
                 return known.name;
-    const std::vector<std::string> nearest = nearest_quantity_names(name, 1, true);
+    const std::vector<std::string> nearest = nearest_names_of_all(name, 1);
     // A third of the letters wrong is still a likeness; more is chance.
     if (nearest.empty() || name.size() > 64 || letters_apart(name, nearest.front()) > name.size() / 3)
         return {};

@@ -3,6 +3,7 @@
 
 #include "app/desk/number_text.h"
 #include "app/settings/engine_fields.h"
+#include "core/reading/quantity_names.h"
 
 #include <QCoreApplication>
 
@@ -134,7 +135,7 @@ Result<std::string> read_quantity_name(const QString& text)
         if (text.trimmed().compare(to_qstring(of.title), Qt::CaseInsensitive) == 0 || of.name == typed)
             return of.name;
     std::string nearest;
-    for (const std::string& name : nearest_quantity_names(typed, 3, true))
+    for (const std::string& name : nearest_names_of_all(typed))
         nearest += (nearest.empty() ? "" : ", ") + title_of(name).toStdString();
     return invalid_input("No quantity is called \"" + typed + "\".", "Choose one of the log sheet" + (nearest.empty() ? "." : ", such as " + nearest + "."));
 }

@@ -18,7 +18,13 @@ std::optional<Temperature> temperature(Number degrees)
     return degrees ? std::optional(celsius(*degrees)) : std::nullopt;
 }
 
-Number raw_consumption(DerivedInputs& of, Place)
+/// kg/h and kW.
+struct Burnt
+{
+    double fuel, power;
+};
+
+std::optional<Burnt> burnt(DerivedInputs& of)
 {
     const Number fuel = of.mean("fuel_consumption");
     const bool measured = of.optional_mean("shaft_power") || (of.optional_mean("shaft_torque") && of.optional_mean("speed"));
@@ -32,9 +38,17 @@ Number raw_consumption(DerivedInputs& of, Place)
     }
     if (!fuel || !power)
         return std::nullopt;
-    if (!(*power > 0.0))
-        return of.not_known("The specific fuel consumption is not known, because the power is not above zero.", "Check the power.");
-    return 1000.0 * *fuel / *power;
+    if (!(*power > 0.0)) {
+        of.not_known("The specific fuel consumption is not known, because the power is not above zero.", "Check the power.");
+        return std::nullopt;
+    }
+    return Burnt{*fuel, *power};
+}
+
+Number raw_consumption(DerivedInputs& of, Place)
+{
+    const auto now = burnt(of);
+    return now ? std::optional(1000.0 * now->fuel / now->power) : std::nullopt;
 }
 
 /// Both pressures of steam, where the class of engine needs them; false where one is not known.
@@ -105,11 +119,12 @@ Number corrected_linearly(DerivedInputs& of, double consumption, const Correctio
 }
 
 /// At 42.7 MJ/kg and at reference ambient: by linear coefficients or by ISO 3046-1, never by both.
-Number consumption_at_reference(DerivedInputs& of, Number raw, Number heat)
+Number consumption_at_reference(DerivedInputs& of, const std::optional<Burnt>& now, Number heat)
 {
-    if (!raw || !heat)
+    if (!now || !heat)
         return std::nullopt;
-    const double usual = *of.step("Specific consumption at 42.7 MJ/kg", *raw * (*heat / reference_heating_value), "g/kWh");
+    const double usual = 1000.0 / now->power * (*heat / reference_heating_value) * now->fuel;
+    of.step("Specific consumption at 42.7 MJ/kg", usual, "g/kWh");
     const auto linear = of.engine().correction.find("specific_fuel_consumption");
     const bool has_linear = linear != of.engine().correction.end();
     if (of.engine().consumption_correction == ConsumptionCorrection::iso_3046)
@@ -120,15 +135,15 @@ Number consumption_at_reference(DerivedInputs& of, Number raw, Number heat)
     return usual;
 }
 
-Number corrected_consumption(DerivedInputs& of, Place place)
+Number corrected_consumption(DerivedInputs& of, Place)
 {
-    const Number raw = raw_consumption(of, place);
-    return consumption_at_reference(of, raw, of.mean("fuel_lower_heating_value"));
+    const auto now = burnt(of);
+    return consumption_at_reference(of, now, of.mean("fuel_lower_heating_value"));
 }
 
-Number compared_consumption(DerivedInputs& of, Place place)
+Number compared_consumption(DerivedInputs& of, Place)
 {
-    return consumption_at_reference(of, raw_consumption(of, place),
+    return consumption_at_reference(of, burnt(of),
                                     of.optional_mean("fuel_lower_heating_value").value_or(reference_heating_value));
 }
 

@@ -4,6 +4,7 @@
 #include "core/catalogue_table.h"
 #include "core/catalogue_text.h"
 #include "core/reading/place_kinds.h"
+#include "core/reading/quantity_names.h"
 
 #include <algorithm>
 #include <numeric>
@@ -158,7 +159,9 @@ std::optional<QuantityId> find_quantity(std::string_view name)
     return found->second.front();
 }
 
-std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count, bool derived_too)
+namespace {
+
+std::vector<std::string> nearest_names(std::string_view name, std::size_t count, bool derived_too)
 {
     std::vector<std::pair<std::size_t, std::string>> by_distance;
     name = name.substr(0, 64); // a longer name is no slip of the pen
@@ -170,6 +173,18 @@ std::vector<std::string> nearest_quantity_names(std::string_view name, std::size
     for (std::size_t i = 0; i < std::min(count, by_distance.size()); ++i)
         names.push_back(by_distance[i].second);
     return names;
+}
+
+} // namespace
+
+std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count)
+{
+    return nearest_names(name, count, false);
+}
+
+std::vector<std::string> nearest_names_of_all(std::string_view name, std::size_t count)
+{
+    return nearest_names(name, count, true);
 }
 
 std::string place_text(const Place& place)

@@ -78,8 +78,7 @@ std::optional<QuantityId> find_quantity(std::string_view name, Place::Kind place
 /// As above, whatever the place, derived ones too; the first in walking order.
 std::optional<QuantityId> find_quantity(std::string_view name);
 /// The nearest known names to a misspelt one, for the sentence that refuses it.
-/// @param derived_too where a derived one may be meant: in a baseline or a limit, and never in a reading
-std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count = 3, bool derived_too = false);
+std::vector<std::string> nearest_quantity_names(std::string_view name, std::size_t count = 3);
 
 /// "cylinder 4", "turbocharger 2", "engine": as sentences and the flags' subject say it.
 std::string place_text(const Place& place);

@@ -9,4 +9,7 @@ namespace evenstroke {
 /// equal, which costs no comparison of letters. A name may stand at two kinds of place.
 QuantityId first_of_its_name(QuantityId id);
 
+/// As nearest_quantity_names, derived ones too, which nobody types: for a baseline or a limit.
+std::vector<std::string> nearest_names_of_all(std::string_view name, std::size_t count = 3);
+
 } // namespace evenstroke

@@ -4,7 +4,7 @@
 #include "core/engine/baseline.h"
 #include "core/review/reading_review.h"
 #include "core/trend/conditions.h"
-#include "core/trend/derived.h"
+#include "core/derived/derived.h"
 
 #include <optional>
 #include <string>

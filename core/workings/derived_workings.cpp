@@ -45,7 +45,7 @@ void describe_mean(const DerivedReading& of, const Input& from, WorkingInput& in
     const auto entries = behind(of, *from.quantity);
     if (entries.size() == 1) {
         input.place = entries.front()->place;
-        input.origin = typed_words(of.reading.values[entries.front()->value_index]);
+        input.origin = words_as_typed(of.reading.values[entries.front()->value_index]);
     } else if (!entries.empty()) {
         input.origin = "mean of " + plural(entries.front()->place.kind, entries.size());
     }
@@ -70,7 +70,7 @@ WorkingInput describe(const DerivedInputs& inputs, const Input& from)
         input.unit = std::string(from.unit);
     switch (from.how) {
     case How::typed:
-    case How::volume: input.origin = typed_words(of.reading.values[from.value_index]); break;
+    case How::volume: input.origin = words_as_typed(of.reading.values[from.value_index]); break;
     case How::mean:
     case How::barometer: describe_mean(of, from, input); break;
     case How::assumed_barometer: input.origin = "no barometer was read: 1 bar taken"; break;

@@ -57,7 +57,7 @@ private:
         const std::string place = place_words(engine_, place_);
         const std::string of = place.empty() ? "" : " of " + place;
         if (typed_ && typed_->number) {
-            sheet_.missing = q_.title + of + " is not known, because " + typed_words(*typed_) +
+            sheet_.missing = q_.title + of + " is not known, because " + words_as_typed(*typed_) +
                              " cannot be brought to " + unit_words(q_) +
                              ". Enter fuel density and fuel temperature for a volume, or type it in another unit.";
             return;
@@ -72,7 +72,7 @@ private:
         WorkingInput in{q.title, symbol_of(q), Place::engine(), value, unit_words(q), half, moved, {}, {}};
         for (const Value& each : reading_.values)
             if (each.phase == Phase::reading && each.number && quantity(each.quantity).name == quantity_name) {
-                in.origin = in.origin.empty() ? typed_words(each) : "mean of what was read";
+                in.origin = in.origin.empty() ? words_as_typed(each) : "mean of what was read";
                 in.place = each.place;
             }
         if (in.origin == "mean of what was read")
@@ -89,7 +89,7 @@ private:
     {
         WorkingInput& in = input(q_.name, judged_->raw, instrument_uncertainty(engine_, q_, judged_->raw), budget_.instrument.value_or(0.0));
         in.place = place_;
-        in.origin = typed_words(*typed_);
+        in.origin = words_as_typed(*typed_);
         const bool as_it_is = typed_->unit == q_.unit && typed_->kind == q_.kind;
         if (!as_it_is)
             step("In " + unit_words(q_), judged_->raw, unit_words(q_));

@@ -59,7 +59,7 @@ std::string place_words(const Engine& engine, const Place& place)
     return place.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(place.number) : place_text(place);
 }
 
-std::string typed_words(const Value& value)
+std::string words_as_typed(const Value& value)
 {
     std::string text = "typed ";
     text += value.typed.empty() && value.number ? number_text(*value.number) : value.typed;
@@ -84,7 +84,7 @@ std::string why_missing(const Reading& reading, std::string_view name, const Pla
         case MissingReason::none: break;
         }
         if (value.number)
-            return "cannot be used as it was " + typed_words(value);
+            return "cannot be used as it was " + words_as_typed(value);
     }
     return "was not read";
 }

@@ -22,7 +22,7 @@ std::string unit_words(const Quantity& quantity);
 /// "cylinder A3", "turbocharger 2"; empty for the engine and the ship.
 std::string place_words(const Engine& engine, const Place& place);
 /// "typed 2,51 bar", with the kind of pressure where it was typed.
-std::string typed_words(const Value& value);
+std::string words_as_typed(const Value& value);
 /// "was not read", "is not fitted", "is out of order": what the reading says of a value that is not there.
 std::string why_missing(const Reading& reading, std::string_view name, const Place& place);
 

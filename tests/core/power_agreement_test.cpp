@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/review/power_agreement.h"
 
-#include "core/trend/derived.h"
+#include "core/derived/derived.h"
 #include "tests/core/reading_maker.h"
 
 #include <gtest/gtest.h>
