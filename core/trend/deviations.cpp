@@ -248,18 +248,4 @@ std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& base
     return values;
 }
 
-std::optional<SpecificConsumptionNow> specific_consumption(const Engine& engine, const Reading& reading,
-                                                           const Conditions& conditions)
-{
-    const auto fuel = engine_mean(reading, "fuel_consumption", conditions);
-    auto power = conditions.shaft_power;
-    if (!power && conditions.load_percent)
-        power = *conditions.load_percent / 100.0 * engine.rated_power.value() / 1000.0;
-    if (!fuel || !power || !(*power > 0.0))
-        return std::nullopt;
-    const double heat = conditions.heating_value.value_or(reference_heating_value) / reference_heating_value;
-    const double per_flow = 1000.0 / *power * heat;
-    return SpecificConsumptionNow{per_flow * *fuel, per_flow};
-}
-
 } // namespace evenstroke

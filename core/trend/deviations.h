@@ -49,17 +49,6 @@ DeviationBudget deviation_budget(const Engine& engine, const Baseline& baseline,
 std::vector<JudgedValue> judge_values(const Engine& engine, const Baseline& baseline, const Reading& reading,
                                       const Conditions& conditions);
 
-/// Specific fuel consumption in g/kWh at the usual reference heating value of 42.7 MJ/kg (common practice, as
-/// ISO 3046-1 from memory), and how it changes with the fuel flow. The entered heating value is used, 42.7
-/// where none was entered. Nothing without fuel and power.
-struct SpecificConsumptionNow
-{
-    double value = 0.0;          ///< g/kWh
-    double per_fuel_flow = 0.0;  ///< g/kWh per kg/h
-};
-std::optional<SpecificConsumptionNow> specific_consumption(const Engine& engine, const Reading& reading,
-                                                           const Conditions& conditions);
-
 /// The heating value to which consumption is brought, MJ/kg (common practice).
 inline constexpr double reference_heating_value = 42.7;
 

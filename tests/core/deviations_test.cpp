@@ -199,7 +199,11 @@ TEST(Deviations, ConsumptionIsBroughtToTheUsualHeatingValue)
     reading.values.push_back(typed_value("shaft_power", Place::engine(), "1000"));
     reading.values.push_back(typed_value("fuel_consumption", Place::engine(), "178.4"));
     reading.values.push_back(typed_value("fuel_lower_heating_value", Place::engine(), "40.295871"));
-    EXPECT_NEAR(specific_consumption(engine, reading, find_conditions(engine, reading))->value, 168.35558, 1e-4);
+    const Baseline baseline(engine);
+    const DerivedReading of(engine, baseline, reading);
+    DerivedInputs inputs(of);
+    const auto row = derive_one(inputs, *find_derived("specific_fuel_consumption"), Place::engine());
+    EXPECT_NEAR(row->corrected.value(), 168.35558, 1e-4);
 }
 
 TEST(Deviations, UncertaintyHoldsTheInstrumentAndTheLoad)
