@@ -4,6 +4,7 @@
 #include "app/board/board_painting.h"
 #include "app/board/board_view.h"
 #include "app/desk/number_text.h"
+#include "app/desk/reading_in_hand.h"
 #include "app/desk/sentence_choices.h"
 #include "app/desk/workplace.h"
 #include "ui_board_page.h"
@@ -137,6 +138,20 @@ QString BoardPage::foot_text() const
 }
 
 QWidget* BoardPage::first_focus() { return ui_->view; }
+
+/// The newest value of the cell in hand.
+std::optional<Selection> BoardPage::number_in_hand() const
+{
+    const BoardCell* cell = ui_->view->board_model().cell(ui_->view->currentIndex());
+    const Trend* trend = cell && shown_ ? shown_->find_trend(cell->quantity, cell->place) : nullptr;
+    if (!trend || trend->points.empty())
+        return std::nullopt;
+    Selection selection = with_reading(workplace().selection(), *shown_, trend->points.back().reading);
+    selection.quantity = cell->quantity;
+    selection.place = cell->place;
+    selection.estimate.clear();
+    return selection;
+}
 
 void BoardPage::print(QPrinter& printer)
 {

@@ -31,6 +31,7 @@ public:
     bool can_print() const override { return true; }
     void print(QPrinter& printer) override;
     void copy() override;
+    std::optional<Selection> number_in_hand() const override;
 
     BoardView& view();
 

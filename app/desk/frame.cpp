@@ -60,7 +60,8 @@ void Frame::add_page(PageEntry entry)
 {
     if (entry.without_history)
         rail_->add_space();
-    rail_->add(entry.name, entry.key, entry.title);
+    if (entry.on_rail)
+        rail_->add(entry.name, entry.key, entry.title);
     entries_.push_back({std::move(entry)});
 }
 

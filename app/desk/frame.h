@@ -27,12 +27,13 @@ struct PageEntry
     std::function<Page*(Workplace&)> make;
     std::function<int(const Workplace&)> count_new = {}; ///< shown on the rail; none: never a count
     bool without_history = false; ///< can be shown while no history is open
+    bool on_rail = true;          ///< else it is reached from where its subject stands
 };
 
 /// The window: rail, sentence bar, the page, foot line. It lays out and connects; the pages do the work.
 ///
 /// Keys: a page's letter (with Alt where letters are typed), a part's letter of the sentence bar, Alt+Left and
-/// Alt+Right back and forward, F8 day or night, Ctrl+P print, Ctrl+C copy, F6 from rail to sentence to page.
+/// Alt+Right back and forward, W the workings of the number in hand, F8 day or night, Ctrl+P print, Ctrl+C copy, F6 from rail to sentence to page.
 class Frame : public QWidget
 {
     Q_OBJECT
@@ -68,6 +69,7 @@ private:
     void add_keys();
     Page* made(Entry& entry);
     bool take_letter(QChar letter);
+    bool show_workings();
     void refresh_soon();
     void refresh_now();
     void refresh_frame();

@@ -18,6 +18,8 @@ namespace evenstroke {
 
 namespace {
 
+constexpr QChar workings_letter(u'W');
+
 /// "history saved 09:41", or the day where it was not today.
 QString saved_text(const Workplace& workplace)
 {
@@ -106,12 +108,24 @@ bool Frame::eventFilter(QObject* watched, QEvent* event)
 
 bool Frame::take_letter(QChar letter)
 {
+    if (letter == workings_letter && show_workings())
+        return true;
     for (const Entry& entry : entries_)
-        if (entry.about.key == letter && (workplace_.is_open() || entry.about.without_history)) {
+        if (entry.about.on_rail && entry.about.key == letter && (workplace_.is_open() || entry.about.without_history)) {
             workplace_.open_page(entry.about.name);
             return true;
         }
     return sentence_->open_by_letter(letter);
+}
+
+/// The sheet of workings of the number in hand, from whatever page shows one.
+bool Frame::show_workings()
+{
+    const auto wanted = current_ ? current_->number_in_hand() : std::nullopt;
+    if (!wanted || !find(QStringLiteral("workings")))
+        return false;
+    workplace_.open_page(QStringLiteral("workings"), *wanted);
+    return true;
 }
 
 /// F6: page, sentence, rail, and round again.

@@ -1,9 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "app/desk/selection.h"
+
 #include <QChar>
 #include <QString>
 #include <QWidget>
+
+#include <optional>
 
 class QPrinter;
 
@@ -12,7 +16,7 @@ namespace evenstroke {
 class Workplace;
 
 /// The underlined parts of the sentence bar.
-enum class SentencePart { engine, vessel, quantity, place, range, view };
+enum class SentencePart { engine, vessel, quantity, place, range, view, reading };
 
 /// One page of the desk. It shows what the workplace's selection says and never keeps a selection of its own.
 ///
@@ -55,6 +59,10 @@ public:
     virtual void print(QPrinter& printer);
     /// What Ctrl+C puts on the clipboard when no text is selected.
     virtual void copy() {}
+
+    /// The number in hand, with the reading it belongs to: key W opens its sheet of workings. Nothing where no
+    /// number is in hand.
+    virtual std::optional<Selection> number_in_hand() const { return std::nullopt; }
 
 protected:
     Workplace& workplace() const { return workplace_; }

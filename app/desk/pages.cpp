@@ -8,6 +8,8 @@
 #include "app/entry/entry_page.h"
 #include "app/events/events_page.h"
 #include "app/fleet/fleet_page.h"
+#include "app/reading/reading_page.h"
+#include "app/reading/workings_page.h"
 #include "app/settings/engine_page.h"
 #include "app/survey/survey_page.h"
 #include "app/trends/trend_page.h"
@@ -42,10 +44,12 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("fleet"), Frame::tr("Fleet"), u'F', maker<FleetPage>()});
     frame.add_page({QStringLiteral("board"), Frame::tr("Strip board"), u'B', maker<BoardPage>(), new_flags});
     frame.add_page({QStringLiteral("trend"), Frame::tr("Trend"), u'T', maker<TrendPage>()});
+    frame.add_page({QStringLiteral("reading"), Frame::tr("One reading"), u'R', maker<ReadingPage>()});
     frame.add_page({QStringLiteral("enter"), Frame::tr("Enter"), u'E', maker<EntryPage>()});
     frame.add_page({QStringLiteral("events"), Frame::tr("Events"), u'D', maker<EventsPage>()});
     frame.add_page({QStringLiteral("engine"), Frame::tr("Engine"), u'G', maker<EnginePage>()});
     frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});
+    frame.add_page({QStringLiteral("workings"), Frame::tr("Workings"), u'W', maker<WorkingsPage>(), {}, false, false});
     frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, true});
 }
 

@@ -21,6 +21,8 @@ struct Selection
     TimeRange range = TimeRange::since_overhaul;
     ValueView view = ValueView::apart;
     QString reading; ///< identifier of one reading; empty: the newest
+    /// Catalogue name of the estimate of power whose workings are shown; empty: those of quantity and place.
+    QString estimate;
 
     friend bool operator==(const Selection&, const Selection&) = default;
 };

@@ -2,6 +2,7 @@
 #include "app/desk/sentence_choices.h"
 
 #include "app/desk/number_text.h"
+#include "app/desk/reading_in_hand.h"
 #include "app/desk/workplace.h"
 
 #include <QCoreApplication>
@@ -81,6 +82,20 @@ std::vector<Choice> engine_choices(const Workplace& workplace)
     return choices;
 }
 
+/// "14 Mar 2031 · 76 % load · steady", the newest first.
+std::vector<Choice> reading_choices(const Workplace& workplace)
+{
+    std::vector<Choice> choices;
+    const auto judgement = workplace.judgement();
+    if (!judgement)
+        return choices;
+    const auto in_hand = reading_in_hand(*judgement, workplace.selection());
+    for (std::size_t i = judgement->readings.size(); i-- > 0;)
+        choices.push_back({reading_words(*judgement, i), to_qstring(judgement->record->readings[i].id), Level::quiet,
+                           in_hand == i});
+    return choices;
+}
+
 template <typename Value, std::size_t count>
 std::vector<Choice> fixed_choices(const std::array<Value, count>& values, QString (*text)(Value), Value now)
 {
@@ -115,12 +130,13 @@ QString view_text(ValueView view)
 
 std::optional<SentencePart> find_sentence_part(QStringView name)
 {
-    static const std::array<std::pair<const char*, SentencePart>, 6> parts{{{"engine", SentencePart::engine},
+    static const std::array<std::pair<const char*, SentencePart>, 7> parts{{{"engine", SentencePart::engine},
                                                                             {"vessel", SentencePart::vessel},
                                                                             {"quantity", SentencePart::quantity},
                                                                             {"place", SentencePart::place},
                                                                             {"range", SentencePart::range},
-                                                                            {"view", SentencePart::view}}};
+                                                                            {"view", SentencePart::view},
+                                                                            {"reading", SentencePart::reading}}};
     for (const auto& [text, part] : parts)
         if (name == QLatin1String(text))
             return part;
@@ -135,7 +151,8 @@ QChar sentence_letter(SentencePart part)
     case SentencePart::quantity: return u'Q';
     case SentencePart::place: return u'L';
     case SentencePart::range: return u'P';
-    case SentencePart::view: return u'W';
+    case SentencePart::view: return u'K';
+    case SentencePart::reading: return u'M';
     }
     return {};
 }
@@ -164,6 +181,11 @@ QString sentence_text(SentencePart part, const Workplace& workplace, bool starts
     }
     case SentencePart::range: return in_sentence(range_text(selection.range), starts_sentence);
     case SentencePart::view: return in_sentence(view_text(selection.view), starts_sentence);
+    case SentencePart::reading: {
+        const auto judgement = workplace.judgement();
+        const auto reading = judgement ? reading_in_hand(*judgement, selection) : std::nullopt;
+        return reading ? reading_title(*judgement, *reading) : tr_("no date");
+    }
     }
     return {};
 }
@@ -188,6 +210,7 @@ std::vector<Choice> sentence_choices(SentencePart part, const Workplace& workpla
         return fixed_choices(
             std::array{ValueView::raw, ValueView::corrected, ValueView::deviation, ValueView::apart}, view_text,
             now.view);
+    case SentencePart::reading: return reading_choices(workplace);
     }
     return {};
 }
@@ -205,6 +228,7 @@ Selection with_choice(SentencePart part, const Workplace& workplace, const QVari
     }
     case SentencePart::quantity: {
         selection.quantity = value.toInt();
+        selection.estimate.clear();
         if (const auto judgement = workplace.judgement())
             return settled(selection, *judgement);
         break;
@@ -212,9 +236,12 @@ Selection with_choice(SentencePart part, const Workplace& workplace, const QVari
     case SentencePart::place: selection.place = place_of(value.toInt()); break;
     case SentencePart::range: selection.range = static_cast<TimeRange>(value.toInt()); break;
     case SentencePart::view: selection.view = static_cast<ValueView>(value.toInt()); break;
+    case SentencePart::reading: selection.reading = value.toString(); break;
     }
     if (part == SentencePart::engine || part == SentencePart::vessel)
         selection.reading.clear();
+    if (part == SentencePart::quantity || part == SentencePart::place)
+        selection.estimate.clear();
     return selection;
 }
 

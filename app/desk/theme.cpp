@@ -169,6 +169,7 @@ QLineEdit, QPlainTextEdit, QTextEdit, QComboBox, QDateEdit, QDateTimeEdit, QSpin
     selection-background-color: %line; selection-color: %online; }
 QLineEdit:focus, QPlainTextEdit:focus, QTextEdit:focus, QComboBox:focus, QDateEdit:focus,
 QDateTimeEdit:focus, QSpinBox:focus { border-color: %line; }
+QTextEdit[sheetlike="true"] { background: %page; border: none; padding: 0px; }
 QComboBox::drop-down { border: none; width: 20px; }
 QComboBox::down-arrow { image: url(:/pictures/choose.xpm); }
 QAbstractItemView { background: %page; border: none; gridline-color: %rule; outline: none;

@@ -3,6 +3,7 @@
 
 #include "app/board/board_page.h"
 #include "app/desk/number_text.h"
+#include "app/desk/reading_in_hand.h"
 #include "app/desk/sentence_choices.h"
 #include "app/desk/theme.h"
 #include "app/desk/workplace.h"
@@ -179,6 +180,20 @@ void TrendPage::show_reading()
     if (chosen)
         if (const int row = table_.row_of(*chosen); row >= 0)
             ui_->table->setCurrentIndex(table_.index(row, 0));
+}
+
+/// The point in hand, else the newest one.
+std::optional<Selection> TrendPage::number_in_hand() const
+{
+    const Trend* shown = trend();
+    if (!shown || shown->points.empty())
+        return std::nullopt;
+    const auto chosen = chosen_reading();
+    const bool read = chosen && std::any_of(shown->points.begin(), shown->points.end(),
+                                            [&](const TrendPoint& point) { return point.reading == *chosen; });
+    Selection selection = with_reading(workplace().selection(), *judgement_, read ? *chosen : shown->points.back().reading);
+    selection.estimate.clear();
+    return selection;
 }
 
 void TrendPage::choose_view(int number)

@@ -20,7 +20,7 @@ struct Selection;
 
 /// Trend: one quantity at one place over time, how the evidence grew, how long it may last, what to check.
 ///
-/// Keys: 1 to 4 as read, corrected, deviation, apart; 5 the load; A the table; left and right walk through the
+/// Keys: W the workings of the point in hand; 1 to 4 as read, corrected, deviation, apart; 5 the load; A the table; left and right walk through the
 /// readings, up and down through the places, Page Up and Page Down through the quantities.
 class TrendPage : public Page
 {
@@ -37,6 +37,7 @@ public:
     bool can_print() const override { return true; }
     void print(QPrinter& printer) override;
     void copy() override;
+    std::optional<Selection> number_in_hand() const override;
     void copy_picture();
     /// By the file's ending: png, pdf or csv. Says under the plot what stood in the way.
     bool save_as(const QString& path);

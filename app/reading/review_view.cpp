@@ -1,0 +1,276 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/reading/review_view.h"
+
+#include "app/desk/theme.h"
+#include "app/reading/sheet_number.h"
+
+#include <QHeaderView>
+#include <QKeyEvent>
+#include <QPainter>
+#include <QStyledItemDelegate>
+
+#include <array>
+
+namespace evenstroke {
+
+namespace {
+
+constexpr int row_height = 24, heading_top = 12, sentence_gap = 2, mark_side = 12, indent = 12;
+/// Pixels at 96 dots an inch; words and verdict share what is left.
+constexpr std::array<int, ReviewModel::column_count> widths{0, 24, 66, 54, 60, 60, 62, 50, 0};
+constexpr int fewest_words = 184, fraction_room = 30;
+constexpr double share_of_words = 0.6;
+
+QFont heading_font() { return type(TypeSize::body, true); }
+
+int sentence_height(const ReviewSection& section, int width)
+{
+    if (section.sentence.empty())
+        return 0;
+    return sentence_gap
+           + QFontMetrics(type(TypeSize::body))
+                 .boundingRect(QRect(0, 0, std::max(80, width), 1000), Qt::TextWordWrap, to_qstring(section.sentence))
+                 .height();
+}
+
+int heading_height(const ReviewSection& section, int width)
+{
+    return heading_top + row_height + sentence_height(section, width);
+}
+
+class RowDelegate : public QStyledItemDelegate
+{
+public:
+    explicit RowDelegate(ReviewView& view) : view_(view) {}
+
+    void paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const override
+    {
+        const ReviewRow* row = view_.review_model().row(index.row());
+        if (!row)
+            return;
+        const Theme& t = theme();
+        const bool in_hand = index.row() == view_.currentIndex().row();
+        if (in_hand)
+            painter->fillRect(row->line ? option.rect : option.rect.adjusted(0, heading_top - 2, 0, 0), t.band);
+        else if (option.state & QStyle::State_MouseOver)
+            painter->fillRect(option.rect, t.sheet);
+        if (!row->line) {
+            if (index.column() == 0)
+                paint_heading(*painter, option.rect, *row->section, t);
+            return;
+        }
+        paint_cell(*painter, option.rect, index, *row, t);
+        if (in_hand && view_.hasFocus() && index.column() == 0)
+            painter->fillRect(QRect(option.rect.left(), option.rect.top(), 2, option.rect.height()), t.line);
+    }
+
+private:
+    void paint_heading(QPainter& painter, const QRect& area, const ReviewSection& section, const Theme& t) const
+    {
+        const QRect top(area.left() + 4, area.top() + heading_top, area.width() - 8, row_height);
+        painter.setFont(heading_font());
+        painter.setPen(t.ink);
+        const QString title = to_qstring(section.title);
+        painter.drawText(top, Qt::AlignLeft | Qt::AlignVCenter, title);
+        if (has_mark(section.level)) {
+            const int at = top.left() + QFontMetrics(heading_font()).horizontalAdvance(title) + 10;
+            draw_mark(painter, QRectF(at, top.center().y() - mark_side / 2, mark_side, mark_side), section.level, t);
+            painter.setFont(type(TypeSize::label));
+            painter.setPen(t.level_colour(section.level));
+            painter.drawText(top.adjusted(at - top.left() + mark_side + 5, 0, 0, 0), Qt::AlignLeft | Qt::AlignVCenter,
+                             level_text(section.level));
+        }
+        if (!section.sentence.empty()) {
+            painter.setFont(type(TypeSize::body));
+            painter.setPen(has_mark(section.level) ? t.ink : t.muted);
+            painter.drawText(QRect(top.left(), top.bottom() - 1, top.width(), area.bottom() - top.bottom()),
+                             Qt::TextWordWrap | Qt::AlignTop, to_qstring(section.sentence));
+        }
+        if (view_.currentIndex().row() >= 0 && view_.review_model().row(view_.currentIndex().row())->section == &section
+            && !view_.review_model().row(view_.currentIndex().row())->line && view_.hasFocus())
+            painter.fillRect(QRect(area.left(), area.top() + heading_top - 2, 2, area.height() - heading_top + 2), t.line);
+    }
+
+    void paint_cell(QPainter& painter, const QRect& area, const QModelIndex& index, const ReviewRow& row, const Theme& t) const
+    {
+        const QString words = index.data().toString();
+        switch (index.column()) {
+        case ReviewModel::words: paint_words(painter, area, row, t); return;
+        case ReviewModel::verdict: paint_verdict(painter, with_free_room(area, *row.line), words, row.line->level, t); return;
+        case ReviewModel::value:
+        case ReviewModel::corrected:
+        case ReviewModel::expected:
+        case ReviewModel::deviation: paint_number(painter, area, words, index.column(), row, t); return;
+        default: break;
+        }
+        painter.setFont(type(TypeSize::label));
+        painter.setPen(index.column() == ReviewModel::place ? t.ink : t.muted);
+        painter.drawText(area.adjusted(2, 0, index.column() == ReviewModel::place ? -4 : -6, 0),
+                         (index.column() == ReviewModel::place ? Qt::AlignRight : Qt::AlignLeft) | Qt::AlignVCenter, words);
+    }
+
+    /// Where nothing is compared, the verdict has the room of the comparison.
+    QRect with_free_room(const QRect& area, const ReviewLine& line) const
+    {
+        if (line.corrected || line.expected || line.deviation)
+            return area;
+        return area.adjusted(view_.columnViewportPosition(ReviewModel::corrected) - view_.columnViewportPosition(ReviewModel::verdict), 0, 0, 0);
+    }
+
+    void paint_words(QPainter& painter, const QRect& area, const ReviewRow& row, const Theme& t) const
+    {
+        if (row.repeats)
+            return;
+        const QRect room = area.adjusted(indent, 0, -4, 0);
+        const QString unit = to_qstring(row.line->unit);
+        const QFontMetrics small(type(TypeSize::label));
+        const int unit_width = unit.isEmpty() ? 0 : small.horizontalAdvance(unit) + 6;
+        painter.setFont(type(TypeSize::body));
+        painter.setPen(t.ink);
+        const QFontMetrics metrics(painter.font());
+        const QString title = metrics.elidedText(to_qstring(row.line->words), Qt::ElideRight, room.width() - unit_width);
+        painter.drawText(room, Qt::AlignLeft | Qt::AlignVCenter, title);
+        painter.setFont(type(TypeSize::label));
+        painter.setPen(t.muted);
+        painter.drawText(room.adjusted(metrics.horizontalAdvance(title) + 6, 1, 0, 0), Qt::AlignLeft | Qt::AlignVCenter, unit);
+    }
+
+    void paint_number(QPainter& painter, const QRect& area, const QString& words, int column, const ReviewRow& row, const Theme& t) const
+    {
+        const bool tells = column == ReviewModel::deviation && has_mark(row.line->level);
+        painter.setFont(type(TypeSize::body, tells));
+        painter.setPen(column == ReviewModel::value || column == ReviewModel::deviation ? t.ink : t.muted);
+        const auto [left, right] = at_decimal_sign(words);
+        const int sign = area.right() - fraction_room;
+        painter.drawText(QRect(area.left() - 20, area.top(), sign - area.left() + 20, area.height()),
+                         Qt::AlignRight | Qt::AlignVCenter, left);
+        painter.drawText(QRect(sign, area.top(), fraction_room + 10, area.height()), Qt::AlignLeft | Qt::AlignVCenter, right);
+    }
+
+    void paint_verdict(QPainter& painter, const QRect& area, const QString& words, Level level, const Theme& t) const
+    {
+        QRect room = area.adjusted(8, 0, -4, 0);
+        if (has_mark(level)) {
+            draw_mark(painter, QRectF(room.left(), room.center().y() - mark_side / 2, mark_side, mark_side), level, t);
+            room.setLeft(room.left() + mark_side + 6);
+        }
+        painter.setFont(type(TypeSize::label));
+        painter.setPen(has_mark(level) ? t.level_colour(level) : t.muted);
+        painter.drawText(room, Qt::AlignLeft | Qt::AlignVCenter,
+                         QFontMetrics(painter.font()).elidedText(words, Qt::ElideRight, room.width()));
+    }
+
+    ReviewView& view_;
+};
+
+} // namespace
+
+ReviewView::ReviewView(QWidget* parent) : QTableView(parent)
+{
+    setItemDelegate(new RowDelegate(*this));
+    setModel(&model_);
+    verticalHeader()->hide();
+    verticalHeader()->setSectionResizeMode(QHeaderView::Fixed);
+    verticalHeader()->setMinimumSectionSize(10);
+    horizontalHeader()->setSectionResizeMode(QHeaderView::Fixed);
+    horizontalHeader()->setMinimumSectionSize(10);
+    horizontalHeader()->setSectionsClickable(false);
+    horizontalHeader()->setHighlightSections(false);
+    horizontalHeader()->setDefaultAlignment(Qt::AlignRight | Qt::AlignVCenter);
+    setShowGrid(false);
+    setWordWrap(false);
+    setFrameShape(QFrame::NoFrame);
+    setEditTriggers(NoEditTriggers);
+    setSelectionMode(NoSelection); // the row in hand is drawn by the delegate
+    setTabKeyNavigation(false);
+    setMouseTracking(true);
+    setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    setVerticalScrollMode(ScrollPerPixel);
+    setAccessibleName(tr("The reading judged from top to bottom"));
+    connect(this, &QTableView::doubleClicked, this, [this] { emit trend_asked(); });
+}
+
+void ReviewView::show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement)
+{
+    filling_ = true;
+    // The row in hand stays the same quantity at the same place; the old review is alive until the model has let go.
+    const ReviewRow was = row_in_hand() ? *row_in_hand() : ReviewRow{};
+    const ReviewLine line_was = was.line ? *was.line : ReviewLine{};
+    ReviewSection section_was;
+    if (was.section)
+        section_was.topic = was.section->topic;
+    model_.show_review(std::move(review), std::move(judgement));
+    clearSpans();
+    for (int row = 0; row < model_.rowCount(); ++row)
+        if (!model_.row(row)->line)
+            setSpan(row, 0, 1, ReviewModel::column_count);
+    set_sizes();
+    if (model_.rowCount() > 0)
+        setCurrentIndex(model_.index(model_.row_like({was.section ? &section_was : nullptr, was.line ? &line_was : nullptr, false}), 0));
+    filling_ = false;
+}
+
+void ReviewView::go_to(int row)
+{
+    if (row >= 0 && row != currentIndex().row())
+        setCurrentIndex(model_.index(row, 0));
+    scrollTo(model_.index(std::max(0, row), 0));
+}
+
+void ReviewView::set_sizes()
+{
+    int fixed = 0;
+    for (const int width : widths)
+        fixed += width;
+    const int left = std::max(0, viewport()->width() - fixed);
+    const int for_words = std::max(fewest_words, static_cast<int>(share_of_words * left));
+    for (int column = 0; column < ReviewModel::column_count; ++column)
+        setColumnWidth(column, column == ReviewModel::words     ? for_words
+                               : column == ReviewModel::verdict ? std::max(60, left - for_words)
+                                                                : widths[static_cast<std::size_t>(column)]);
+    for (int row = 0; row < model_.rowCount(); ++row)
+        setRowHeight(row, model_.row(row)->line ? row_height : heading_height(*model_.row(row)->section, viewport()->width() - 8));
+}
+
+void ReviewView::keyPressEvent(QKeyEvent* event)
+{
+    switch (event->key()) {
+    case Qt::Key_Return:
+    case Qt::Key_Enter: emit trend_asked(); return;
+    case Qt::Key_Space: emit workings_asked(); return;
+    case Qt::Key_Up:
+    case Qt::Key_Down:
+    case Qt::Key_Home:
+    case Qt::Key_End: {
+        const int last = model_.rowCount() - 1, here = currentIndex().row();
+        go_to(event->key() == Qt::Key_Home  ? 0
+              : event->key() == Qt::Key_End ? last
+                                            : std::clamp(here + (event->key() == Qt::Key_Up ? -1 : 1), 0, std::max(0, last)));
+        return;
+    }
+    default: event->ignore(); // the page's keys
+    }
+}
+
+void ReviewView::resizeEvent(QResizeEvent* event)
+{
+    QTableView::resizeEvent(event);
+    set_sizes();
+}
+
+void ReviewView::currentChanged(const QModelIndex& current, const QModelIndex& previous)
+{
+    QTableView::currentChanged(current, previous);
+    viewport()->update(); // a whole row is in hand, not a cell
+    if (!filling_ && current.isValid() && current.row() != previous.row())
+        emit row_chosen();
+}
+
+void ReviewView::changeEvent(QEvent* event)
+{
+    QTableView::changeEvent(event);
+    if (event->type() == QEvent::FontChange)
+        set_sizes();
+}
+
+} // namespace evenstroke
