@@ -6,6 +6,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <set>
 
 namespace evenstroke {
 namespace {
@@ -246,8 +247,26 @@ Result<ShopTrial> read_shop_trial(std::string_view text, const Engine& engine)
     return TrialReader(engine, lines_of(upright(grid))).read();
 }
 
+namespace {
+
+/// Takes the curves that the trial brings out of the baseline.
+void take_out(std::vector<BaselinePoint>& baseline, const std::vector<BaselinePoint>& points)
+{
+    std::set<std::pair<std::string, std::string>> brought; // mode, quantity
+    for (const BaselinePoint& point : points)
+        for (const auto& [name, value] : point.values)
+            brought.emplace(point.mode, name);
+    std::erase_if(baseline, [&](BaselinePoint& point) {
+        const auto taken = std::erase_if(point.values, [&](const auto& one) { return brought.count({point.mode, one.first}) > 0; });
+        return taken > 0 && point.values.empty();
+    });
+}
+
+} // namespace
+
 std::vector<BaselinePoint> merged_baseline(std::vector<BaselinePoint> baseline, const std::vector<BaselinePoint>& points)
 {
+    take_out(baseline, points);
     for (const BaselinePoint& point : points) {
         const auto same = std::find_if(baseline.begin(), baseline.end(), [&](const BaselinePoint& one) {
             return one.mode == point.mode && std::abs(one.load_percent - point.load_percent) < same_load;

@@ -37,7 +37,9 @@ struct ShopTrial
 /// @par Problems invalid_input: no table, no load, no quantity that is known
 Result<ShopTrial> read_shop_trial(std::string_view text, const Engine& engine);
 
-/// The engine's baseline with the points of a trial laid over it: same load and mode are joined, new loads added.
+/// The engine's baseline with the curves of a trial in it. Each quantity of the trial is replaced whole within the
+/// trial's mode, so that no curve mixes points of two tests; other quantities and other modes stay. Same loads are
+/// joined, new ones added, points left without a value taken away.
 std::vector<BaselinePoint> merged_baseline(std::vector<BaselinePoint> baseline, const std::vector<BaselinePoint>& points);
 
 } // namespace evenstroke

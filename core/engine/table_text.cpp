@@ -69,6 +69,31 @@ std::string joined(const std::vector<std::string>& words)
     return text;
 }
 
+const std::map<std::string, std::string>& abbreviations()
+{
+    static const std::map<std::string, std::string> known = [] {
+        std::map<std::string, std::string> map;
+        const CatalogueTable table(catalogue_text::heading_abbreviations);
+        for (std::size_t row = 0; row < table.rows(); ++row)
+            map.emplace(table.cell(row, "short"), table.cell(row, "full"));
+        return map;
+    }();
+    return known;
+}
+
+/// "scav air press" as "scavenge air pressure": names and headings are compared written out.
+std::string written_out(const std::vector<std::string>& words)
+{
+    std::vector<std::string> full;
+    for (std::size_t i = 0; i < words.size(); ++i) {
+        const auto pair = i + 1 < words.size() ? abbreviations().find(words[i] + " " + words[i + 1]) : abbreviations().end();
+        const auto one = abbreviations().find(words[i]);
+        full.push_back(pair != abbreviations().end() ? pair->second : one != abbreviations().end() ? one->second : words[i]);
+        i += pair != abbreviations().end() ? 1 : 0;
+    }
+    return joined(full);
+}
+
 bool all_digits(const std::string& word)
 {
     return !word.empty() && std::all_of(word.begin(), word.end(), [](unsigned char c) { return std::isdigit(c); });
@@ -98,10 +123,10 @@ const std::map<std::string, std::string>& known_words()
         std::map<std::string, std::string> map;
         const CatalogueTable table(catalogue_text::quantity_words);
         for (std::size_t row = 0; row < table.rows(); ++row)
-            map.emplace(joined(words_of(table.cell(row, "words"))), table.cell(row, "quantity"));
+            map.emplace(written_out(words_of(table.cell(row, "words"))), table.cell(row, "quantity"));
         for (const Quantity& of : all_quantities())
             for (const std::string& name : {of.name, of.title, of.short_title})
-                map.emplace(joined(words_of(name)), of.name);
+                map.emplace(written_out(words_of(name)), of.name);
         return map;
     }();
     return known;
@@ -127,12 +152,12 @@ std::optional<WrittenUnit> take_unit(std::string& cell)
         }
     }
     for (const char mark : {',', ' '}) {
-        const std::size_t at = cell.rfind(mark);
-        if (at == std::string::npos || at == 0)
-            continue;
-        if (known_words().count(joined(words_of(cell))) && mark == ' ')
+        if (known_words().count(written_out(words_of(cell))) && mark == ' ')
             continue; // "fuel index" must not lose a word that could be a unit
-        if (const auto unit = unit_in(cell.substr(at + 1))) {
+        for (std::size_t at = cell.find(mark); at != std::string::npos; at = cell.find(mark, at + 1)) { // "kg/cm2 abs" before "abs"
+            const auto unit = at > 0 ? unit_in(cell.substr(at + 1)) : std::nullopt;
+            if (!unit)
+                continue;
             cell.erase(at);
             return unit;
         }
@@ -176,9 +201,9 @@ Heading read_heading(const std::string& cell)
     std::string text = cell;
     heading.unit = take_unit(text);
     std::vector<std::string> words = words_of(text);
-    if (!known_words().count(joined(words)))
+    if (!known_words().count(written_out(words)))
         heading.cylinder = take_cylinder(words);
-    heading.words = joined(words);
+    heading.words = written_out(words);
     return heading;
 }
 

@@ -22,7 +22,7 @@ Grid transposed(const Grid& grid);
 /// "Exhaust temp. (°C)": words and unit. The unit is empty where there is none that is known.
 struct Heading
 {
-    std::string words;                ///< lower case, one blank between words: "exhaust temp"
+    std::string words;                ///< lower case, abbreviations written out, one blank between words: "exhaust temperature"
     std::optional<WrittenUnit> unit;
     std::optional<int> cylinder;      ///< "cyl. 4", "no 4"
 };

@@ -1,5 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/engine/shop_trial.h"
+
+#include "core/engine/table_text.h"
 #include "tests/core/survey_fixture.h"
 
 #include <gtest/gtest.h>
@@ -103,10 +105,49 @@ TEST(ShopTrial, WrongDimensionIsLeftOutWithTheReason)
     EXPECT_TRUE(contains(trial.value().left_out.front().words, "does not measure"));
 }
 
+TEST(ShopTrial, KnowsShortHeadingsWithTheirUnits)
+{
+    const std::pair<const char*, const char*> headings[] = {
+        {"Scav. air press. kg/cm2", "scavenge_pressure"},   {"Scav. press. [kg/cm2]", "scavenge_pressure"},
+        {"p_scav bar", "scavenge_pressure"},                {"Max. comb. press. kg/cm2 abs", "maximum_pressure"},
+        {"Comp. press. (bar)", "compression_pressure"},     {"Exh. gas temp. aft. cyl. deg C", "exhaust_temperature"},
+        {"Exh. temp. bef. turb. °C", "exhaust_before_turbine"}, {"T/C speed r/min", "turbocharger_speed"},
+        {"t_scav °C", "scavenge_temperature"},              {"Spec. fuel cons. g/kWh", "specific_fuel_consumption"},
+    };
+    for (const auto& [heading, quantity] : headings) {
+        const table_text::Heading read = table_text::read_heading(heading);
+        EXPECT_EQ(table_text::quantity_of(read), quantity) << heading << " was read as " << read.words;
+        EXPECT_TRUE(read.unit) << heading;
+    }
+}
+
+TEST(ShopTrial, ReadsAShortHeadingInItsOwnUnit)
+{
+    const auto trial = read_shop_trial("load %\t75\nScav. air press. kg/cm2\t2.0\n", engine());
+    ASSERT_TRUE(trial.has_value()) << trial.error().text();
+    EXPECT_NEAR(trial.value().points.front().values.at("scavenge_pressure"), 1.96133, 1e-9); // 2 kgf/cm2, ISO 80000-4
+}
+
+TEST(MergedBaseline, ReplacesTheWholeCurveOfAPastedQuantityAndNothingElse)
+{
+    std::vector<BaselinePoint> baseline{{50.0, "", {{"speed", 95.0}, {"maximum_pressure", 110.0}}},
+                                        {75.0, "", {{"maximum_pressure", 130.0}}},
+                                        {100.0, "", {{"speed", 120.0}, {"maximum_pressure", 150.0}}},
+                                        {75.0, "eco", {{"maximum_pressure", 125.0}}}};
+    const auto merged = merged_baseline(baseline, {{60.0, "", {{"maximum_pressure", 118.0}}}, {100.0, "", {{"maximum_pressure", 152.0}}}});
+    ASSERT_EQ(merged.size(), 4u) << "the point at 75 % had nothing else and goes";
+    EXPECT_EQ(merged[0].values.count("maximum_pressure"), 0u) << "no point of the old test stays on the curve";
+    EXPECT_EQ(merged[0].values.at("speed"), 95.0);
+    EXPECT_EQ(merged[1].load_percent, 60.0);
+    EXPECT_EQ(merged[2].values.at("maximum_pressure"), 152.0);
+    EXPECT_EQ(merged[2].values.at("speed"), 120.0);
+    EXPECT_EQ(merged[3].values.at("maximum_pressure"), 125.0) << "another mode is another curve";
+}
+
 TEST(MergedBaseline, JoinsSameLoadsAndAddsNewOnes)
 {
     std::vector<BaselinePoint> baseline{{50.0, "", {{"speed", 95.0}}}, {100.0, "", {{"speed", 120.0}}}};
-    const auto merged = merged_baseline(baseline, {{75.0, "", {{"speed", 109.0}}}, {100.0, "", {{"maximum_pressure", 150.0}}}});
+    const auto merged = merged_baseline(baseline, {{75.0, "", {{"maximum_pressure", 130.0}}}, {100.0, "", {{"maximum_pressure", 150.0}}}});
     ASSERT_EQ(merged.size(), 3u);
     EXPECT_EQ(merged[1].load_percent, 75.0);
     EXPECT_EQ(merged[2].values.size(), 2u);
