@@ -174,8 +174,10 @@ Result<std::vector<Event>> EventStore::load(const std::string& engine_id) const
         const bool known = std::any_of(all.begin(), all.end(), [&](const Event& mine) {
             return mine.kind == event.kind && mine.date.utc == event.date.utc && mine.place == event.place;
         });
-        if (concerns_ship(event) && !known)
-            all.push_back(event);
+        if (!concerns_ship(event) || known)
+            continue;
+        all.push_back(event);
+        all.back().running_hours.reset(); // the other engine's counter
     }
     std::stable_sort(all.begin(), all.end(),
                      [](const Event& a, const Event& b) { return a.date.utc < b.date.utc; });
@@ -206,7 +208,7 @@ Result<std::string> EventStore::add(const std::string& engine_id, const Event& e
 
 Done EventStore::change(const Event& changed, const Signature& by)
 {
-    const Event event = trimmed_event(changed);
+    Event event = trimmed_event(changed);
     BOOST_OUTCOME_TRYV(check_signature(by, false));
     Transaction transaction(history_, not_saved);
     BOOST_OUTCOME_TRYV(transaction.begin());
@@ -214,6 +216,8 @@ Done EventStore::change(const Event& changed, const Signature& by)
     if (!found)
         return found.error();
     const FoundEvent& old = found.value();
+    if (concerns_ship(old.event) && !event.running_hours)
+        event.running_hours = old.event.running_hours; // another engine's diary does not show them
     const auto engine = VesselStore(history_).engine(old.engine_id);
     if (!engine)
         return engine.error();

@@ -200,6 +200,24 @@ TEST_F(Stores, KeepJudgementsAndKnowWhichAreStale)
     EXPECT_FALSE(value_of_result(store.all(1))[0].current) << "a docking concerns both engines";
 }
 
+TEST_F(Stores, AShipEventKeepsTheRunningHoursOfItsOwnEngine)
+{
+    const auto history = memory();
+    const std::string main = add_engine(*history, "Amber Mist", "one"), auxiliary = add_engine(*history, "Amber Mist", "two");
+    const EventStore store(*history);
+    Event event;
+    event.date = parse_date("2029-05-01").value();
+    event.kind = "docking";
+    event.running_hours = 41000.0;
+    value_of_result(EventStore(*history).add(main, event, chief_));
+    EXPECT_EQ(value_of_result(store.load(main)).front().running_hours, 41000.0);
+    Event seen = value_of_result(store.load(auxiliary)).front();
+    EXPECT_FALSE(seen.running_hours) << "the other engine's counter says nothing of this one";
+    seen.note = "dry dock";
+    expect_done(EventStore(*history).change(seen, {"second engineer", "note added"}));
+    EXPECT_EQ(value_of_result(store.load(main)).front().running_hours, 41000.0) << "a change from there does not lose them";
+}
+
 TEST_F(Stores, CopyTheHistoryWhole)
 {
     const auto history = create();
