@@ -50,16 +50,22 @@ Table moved_table(const Flag& flag)
     return table;
 }
 
+/// "the customary limit (not the maker's), 5.0 bar below its earlier level," as the subject of a sentence.
+std::string limit_as_subject(const TimeToLimit& limit)
+{
+    return limit.limit_text + (limit.limit_text.find("), ") == std::string::npos ? "" : ",");
+}
+
 std::string limit_sentence(const TimeToLimit& limit)
 {
     if (!limit.months_5 && !limit.months_50)
-        return "If it goes on like this, " + limit.limit_text + " is not reached within ten years.";
+        return "If it goes on like this, " + limit_as_subject(limit) + " is not reached within ten years.";
     if (limit.months_95 && *limit.months_95 < 0.5)
-        return "By now " + limit.limit_text + " is reached, nine times in ten.";
+        return "By now " + limit_as_subject(limit) + " has been reached (nine times in ten).";
     const std::string early = limit.months_5 ? months_words(*limit.months_5) : std::string("more than ten years");
     const std::string late = limit.months_95 ? months_words(*limit.months_95) : std::string("more than ten years");
-    return "If it goes on like this, " + limit.limit_text + " is reached in " + early + " to " + late
-           + " from the last reading, nine times in ten.";
+    return "If it goes on like this, " + limit_as_subject(limit) + " is reached in " + early + " to " + late
+           + " from the last reading (nine times in ten).";
 }
 
 std::optional<Plot> evidence_plot(const Context& context, const Flag& flag)

@@ -53,13 +53,46 @@ Table doubts_table(const Context& context)
     return table;
 }
 
+/// All the corrections of one value.
+struct CorrectionChain
+{
+    TimePoint last{};
+    std::string what, first_value, value_in_force, who, why;
+    int steps = 0;
+};
+
+void add_once(std::string& list, const std::string& words)
+{
+    if (words.empty() || ("; " + list + ";").find("; " + words + ";") != std::string::npos)
+        return;
+    list += (list.empty() ? "" : "; ") + words;
+}
+
+/// One line a value, in the order of their first corrections.
+std::vector<CorrectionChain> correction_chains(std::vector<CorrectionLine> lines)
+{
+    std::stable_sort(lines.begin(), lines.end(), [](const CorrectionLine& a, const CorrectionLine& b) { return a.when < b.when; });
+    std::vector<CorrectionChain> chains;
+    for (const CorrectionLine& line : lines) {
+        auto chain = std::find_if(chains.begin(), chains.end(), [&](const CorrectionChain& one) { return one.what == line.what; });
+        if (chain == chains.end())
+            chain = chains.insert(chain, CorrectionChain{line.when, line.what, line.old_value, {}, {}, {}, 0});
+        chain->last = line.when;
+        chain->value_in_force = line.new_value;
+        ++chain->steps;
+        add_once(chain->who, line.who);
+        add_once(chain->why, line.reason);
+    }
+    return chains;
+}
+
 Table corrections_table(const Context& context)
 {
-    Table table{"Values corrected after a reading was closed",
-                {{"When", Column::Kind::words}, {"What", Column::Kind::words}, {"Old", Column::Kind::number},
-                 {"New", Column::Kind::number}, {"By", Column::Kind::words}, {"Why", Column::Kind::remark}}, {}, 1, {}};
-    for (const CorrectionLine& line : context.details.corrections)
-        table.rows.push_back({{date_text(line.when), line.what, line.old_value, line.new_value, line.who, line.reason}, true});
+    Table table{"Values corrected after a reading was closed: what stood there first, and what is in force",
+                {{"Last", Column::Kind::words}, {"What", Column::Kind::words}, {"First", Column::Kind::number},
+                 {"In force", Column::Kind::number}, {"Steps", Column::Kind::number}, {"By", Column::Kind::remark}, {"Why", Column::Kind::remark}}, {}, 1, {}};
+    for (const CorrectionChain& chain : correction_chains(context.details.corrections))
+        table.rows.push_back({{date_text(chain.last), chain.what, chain.first_value, chain.value_in_force, std::to_string(chain.steps), chain.who, chain.why}, true});
     return table;
 }
 
@@ -156,7 +189,8 @@ Section method_section(const Context& context)
     section.blocks.push_back(Paragraph{
         "Units are printed beside the values; a pressure is a gauge pressure, an absolute pressure or a difference as it says. "
         "Values as read are printed as they were typed. All others are computed unrounded and rounded only for print, half away "
-        "from zero, to the decimals that the instrument shows. Dates are in UTC, written year-month-day.", {}});
+        "from zero, to the decimals that the instrument shows. Dates are in UTC, written year-month-day; narrow headings "
+        "say 14 Mar 2031.", {}});
     return section;
 }
 

@@ -6,6 +6,7 @@
 #include "core/engine/baseline.h"
 
 #include <algorithm>
+#include <chrono>
 #include <set>
 
 namespace evenstroke::report {
@@ -233,20 +234,40 @@ Section limits_section(const Context& context)
     return section;
 }
 
+namespace {
+
+/// More than 24 months before the report: common practice, no source. A date that cannot be read is not judged.
+bool calibrated_long_ago(const std::string& calibrated, TimePoint report_date)
+{
+    using namespace std::chrono;
+    const auto day = parse_date(calibrated);
+    if (!day.has_value())
+        return false;
+    const year_month_day latest = year_month_day(floor<days>(day.value().utc)) + months(24);
+    return floor<days>(report_date) > (latest.ok() ? sys_days(latest) : sys_days(latest.year() / latest.month() / last));
+}
+
+} // namespace
+
 Section instruments_section(const Context& context)
 {
     Section section{"Instruments", false, {}};
     Table table{"As entered for this engine",
-                {{"Quantity", Column::Kind::remark}, {"Serial number", Column::Kind::words}, {"Calibrated", Column::Kind::words},
+                {{"Quantity", Column::Kind::remark}, {"Serial number", Column::Kind::words}, {"Calibrated", Column::Kind::remark},
                  {"Uncertainty (95 %)", Column::Kind::number}, {"Source", Column::Kind::remark}},
                 {}, 1, "Uncertainty is a half-width that holds the true value 95 times of 100."};
+    bool any_old = false;
     for (const Instrument& instrument : context.engine.instruments) {
         const std::string in = unit_of_name(instrument.quantity);
+        const bool old = calibrated_long_ago(instrument.calibrated, context.details.date);
+        any_old = any_old || old;
         table.rows.push_back({{title_of(instrument.quantity), instrument.serial.empty() ? "not given" : instrument.serial,
-                               instrument.calibrated.empty() ? "not given" : instrument.calibrated,
+                               (instrument.calibrated.empty() ? "not given" : instrument.calibrated) + (old ? ", older than 24 months" : ""),
                                instrument.uncertainty ? "\u00b1" + rounded_text(*instrument.uncertainty, std::max(1, decimals_of_name(instrument.quantity))) + " " + in : "not given",
                                source_words(instrument.source)}, true});
     }
+    if (any_old)
+        table.note += " Twenty-four months between calibrations are common practice (no source); the maintenance scheme's own interval goes first.";
     if (table.rows.empty())
         section.blocks.push_back(Paragraph{"No instruments are entered for this engine. Uncertainties are those that are "
                                            "usual for the kind of instrument (common practice).", {}});

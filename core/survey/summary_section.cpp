@@ -35,8 +35,8 @@ FieldList summary_fields(const Context& context)
     const ReportSummary& summary = context.summary;
     FieldList fields;
     fields.short_ones = true;
-    fields.fields = {{"Readings asked for", std::to_string(summary.asked) + ", one a month"},
-                     {"Readings taken", std::to_string(summary.taken)},
+    const std::string asked = summary.asked == 1 ? "1 asked for" : std::to_string(summary.asked) + " asked for (one a month)";
+    fields.fields = {{"Readings", asked + ", " + std::to_string(summary.taken) + " taken"},
                      {"Usable for comparison", std::to_string(summary.usable)},
                      {"Months without a reading", months_in(summary, MonthState::State::missing)},
                      {"Months with none usable", months_in(summary, MonthState::State::unsteady)},

@@ -31,10 +31,11 @@ std::vector<Maker> section_makers(ReportDepth depth)
 {
     if (depth == ReportDepth::brief)
         return {title_section, summary_section, items_section, sign_off_section};
-    // A surveyor's own order: what and when, the outcome, the values, what they were held against, then the evidence.
-    return {title_section,       summary_section,   items_section,    strips_section, cylinder_values_section, words_section, engine_values_section,
-            reference_section,   baseline_section,  limits_section,   trends_section, diagrams_section,        flags_section,
-            events_section,      gaps_section,      instruments_section, method_section, integrity_section,    sign_off_section};
+    // A surveyor's own order: what and when, the outcome and what stands behind it, the values, what they were held
+    // against, then the rest of the evidence.
+    return {title_section,     summary_section,  flags_section,       items_section,  strips_section,    cylinder_values_section, words_section,
+            engine_values_section, reference_section, baseline_section, limits_section, trends_section,  diagrams_section,
+            events_section,    gaps_section,     instruments_section, method_section, integrity_section, sign_off_section};
 }
 
 } // namespace

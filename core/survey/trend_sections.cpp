@@ -34,9 +34,9 @@ void add_limits(const Context& context, const Quantity& of, Plot& plot)
         if (limit.quantity != of.name)
             continue;
         if (limit.high)
-            plot.limits.push_back({*limit.high, "limit, high"});
+            plot.limits.push_back({*limit.high, "limit, high: " + rounded_text(*limit.high, of.decimals)});
         if (limit.low)
-            plot.limits.push_back({*limit.low, "limit, low"});
+            plot.limits.push_back({*limit.low, "limit, low: " + rounded_text(*limit.low, of.decimals)});
     }
 }
 

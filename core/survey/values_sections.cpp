@@ -23,7 +23,7 @@ struct SharedUnit
     std::string words(const Quantity& of) const
     {
         if (mixed)
-            return "in the unit beside each value";
+            return "in the unit of each row";
         return unit ? unit_words(unit->first, unit->second) : unit_of(of);
     }
 };
@@ -40,7 +40,21 @@ std::string line_title(Line line)
     return "apart";
 }
 
-std::string read_text(const ValueCell& cell, bool with_unit)
+using TypedUnit = std::pair<UnitId, PressureKind>;
+
+/// The unit in which most values of a row were typed: it stands once beside them. Nothing where none was typed.
+std::optional<TypedUnit> row_unit(const std::vector<const ValueCell*>& row)
+{
+    std::map<TypedUnit, int> counts;
+    for (const ValueCell* cell : row)
+        if (cell && cell->value && cell->value->number)
+            ++counts[{cell->value->unit, cell->value->kind}];
+    const auto most = std::max_element(counts.begin(), counts.end(), [](const auto& a, const auto& b) { return a.second < b.second; });
+    return most == counts.end() ? std::nullopt : std::optional<TypedUnit>(most->first);
+}
+
+/// @param unit of the row: a value typed in another one has it behind it
+std::string read_text(const ValueCell& cell, const std::optional<TypedUnit>& unit)
 {
     if (!cell.value)
         return missing_words(MissingReason::not_read);
@@ -48,17 +62,17 @@ std::string read_text(const ValueCell& cell, bool with_unit)
     if (value.typed.empty() && value.words.empty())
         return missing_words(value.missing);
     std::string text = value.typed.empty() ? value.words : value.typed;
-    if (with_unit)
+    if (value.number && unit && *unit != TypedUnit{value.unit, value.kind})
         text += " " + unit_words(value.unit, value.kind);
     if (cell.judged && cell.judged->doubtful)
         text += "?";
     return text;
 }
 
-std::string cell_text(const Quantity& of, const ValueCell* cell, Line line, bool with_unit)
+std::string cell_text(const Quantity& of, const ValueCell* cell, Line line, const std::optional<TypedUnit>& unit)
 {
     if (line == Line::read)
-        return read_text(cell ? *cell : ValueCell{}, with_unit);
+        return read_text(cell ? *cell : ValueCell{}, unit);
     if (!cell || !cell->judged)
         return {};
     const JudgedValue& judged = *cell->judged;
@@ -66,6 +80,12 @@ std::string cell_text(const Quantity& of, const ValueCell* cell, Line line, bool
         return judged.corrected ? rounded_text(*judged.corrected, of.decimals) : "\u2013";
     const auto& amount = line == Line::deviation ? judged.deviation : judged.apart;
     return amount ? rounded_text(*amount, of.decimals, Sign::always) : "\u2013";
+}
+
+const ValueCell* find_cell(const Context& context, std::size_t i, QuantityId id, const Place& place)
+{
+    const auto found = context.cells[i].find({id, place});
+    return found == context.cells[i].end() ? nullptr : &found->second;
 }
 
 /// What is there to print of one quantity.
@@ -129,13 +149,14 @@ std::string notes(const Quantity& of, const Extent& extent, bool unsteady)
     return text;
 }
 
-/// "2031-03-14"; for narrow headings in two parts that may stand on two lines.
+/// "2031-03-14"; in narrow headings "14 Mar" over "2031": no date is broken at its hyphens.
 std::string date_cell(const Context& context, std::size_t i, bool& unsteady, bool narrow = false)
 {
     const std::size_t reading = context.readings[i];
-    std::string date = date_text(context.record.readings[reading].taken_at.utc);
+    const TimePoint at = context.record.readings[reading].taken_at.utc;
+    std::string date = narrow ? short_date(at) : date_text(at);
     if (narrow)
-        date.insert(5, " ");
+        date.replace(date.find(' '), 1, "\u00a0");
     if (!usable(context.judgement.readings[reading])) {
         unsteady = true;
         date += narrow ? "\u25cb" : " \u25cb";
@@ -159,13 +180,16 @@ Table cylinder_table(const Context& context, const Quantity& of, const Extent& e
     for (const std::size_t i : readings)
         for (const Line line : extent.lines) {
             const bool first = line == Line::read;
+            std::vector<const ValueCell*> cells;
+            for (int number = 1; number <= context.engine.cylinders; ++number)
+                cells.push_back(find_cell(context, i, of.id, Place::cylinder(number)));
+            const auto unit = row_unit(cells);
+            const std::string in = first && extent.unit.mixed && unit ? ", " + unit_words(unit->first, unit->second) : "";
             Row row{{first ? date_cell(context, i, unsteady) : "",
-                     first ? load_words(context.judgement.readings[context.readings[i]].load_percent) : "", line_title(line)},
+                     first ? load_words(context.judgement.readings[context.readings[i]].load_percent) : "", line_title(line) + in},
                     first};
-            for (int number = 1; number <= context.engine.cylinders; ++number) {
-                const auto found = context.cells[i].find({of.id, Place::cylinder(number)});
-                row.cells.push_back(cell_text(of, found == context.cells[i].end() ? nullptr : &found->second, line, extent.unit.mixed));
-            }
+            for (const ValueCell* cell : cells)
+                row.cells.push_back(cell_text(of, cell, line, unit));
             table.rows.push_back(std::move(row));
         }
     table.note = notes(of, extent, unsteady);
@@ -195,14 +219,30 @@ void add_engine_rows(const Context& context, const Quantity& of, const std::vect
             const bool first = line == Line::read;
             const bool numbered = place.number > 0;
             const std::string title = of.title + (numbered ? ", " + place_text(place) : "");
-            const std::string in = first ? extent.unit.words(of) : line == Line::deviation ? deviation_unit(of) : unit_of(of);
-            Row row{{first ? title : "", extent.unit.mixed && first ? "" : in, line_title(line)}, first};
-            for (const std::size_t i : readings) {
-                const auto found = context.cells[i].find({of.id, place});
-                row.cells.push_back(cell_text(of, found == context.cells[i].end() ? nullptr : &found->second, line, extent.unit.mixed));
-            }
+            std::vector<const ValueCell*> cells;
+            for (const std::size_t i : readings)
+                cells.push_back(find_cell(context, i, of.id, place));
+            const auto unit = row_unit(cells);
+            const std::string read_in = unit ? unit_words(unit->first, unit->second) : unit_of(of);
+            Row row{{first ? title : "", first ? read_in : line == Line::deviation ? deviation_unit(of) : unit_of(of), line_title(line)}, first};
+            for (const ValueCell* cell : cells)
+                row.cells.push_back(cell_text(of, cell, line, unit));
             table.rows.push_back(std::move(row));
         }
+}
+
+/// "17:30" of "1730", "17.30" or "17h30"; other words as they stand.
+std::string clock_text(const std::string& typed)
+{
+    std::string digits;
+    for (const char c : typed)
+        if (c >= '0' && c <= '9')
+            digits += c;
+        else if (c != ':' && c != '.' && c != 'h' && c != ' ')
+            return typed;
+    if (digits.size() == 3)
+        digits.insert(0, "0");
+    return digits.size() == 4 && digits < "2400" && digits[2] < '6' ? digits.substr(0, 2) + ":" + digits.substr(2) : typed;
 }
 
 /// Words and choices: printed where they changed, remarks always.
@@ -217,7 +257,9 @@ Table words_table(const Context& context, const std::vector<std::size_t>& readin
             const Quantity& of = quantity(key.first);
             if (of.type == ValueType::number || !cell.value)
                 continue;
-            const std::string text = cell.value->words.empty() ? cell.value->typed : cell.value->words;
+            std::string text = cell.value->words.empty() ? cell.value->typed : cell.value->words;
+            if (of.name == "quick_line_time")
+                text = clock_text(text);
             if (text.empty() || (before[key] == text && of.name != "reading_remark"))
                 continue;
             before[key] = text;

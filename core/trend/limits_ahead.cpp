@@ -60,9 +60,9 @@ std::string own_limit_text(const Engine& engine, const Quantity& q, bool rising)
 
 std::string customary_text(double distance, const std::string& symbol)
 {
-    return "the customary limit (not the maker's) of " + two_digits(std::abs(distance)) +
+    return "the customary limit (not the maker's), " + two_digits(std::abs(distance)) +
            (symbol.empty() || symbol == "1" ? "" : " " + symbol) + (distance > 0.0 ? " above" : " below") +
-           " its level before";
+           " its earlier level";
 }
 
 } // namespace

@@ -287,7 +287,7 @@ TEST(Judge, ADriftOfTheWholeEngineHasATimeToItsLimitToo)
     EXPECT_EQ(quantity(flag.quantity).name, "cooler_pressure_drop");
     ASSERT_TRUE(flag.time_to_limit.has_value());
     EXPECT_DOUBLE_EQ(flag.time_to_limit->limit, 50.0); // per cent of the clean value
-    EXPECT_NE(flag.time_to_limit->limit_text.find("50 % above its level before"), std::string::npos)
+    EXPECT_NE(flag.time_to_limit->limit_text.find("50 % above its earlier level"), std::string::npos)
         << flag.time_to_limit->limit_text;
 }
 

@@ -133,10 +133,10 @@ TEST(SurveyReportContents, StandsInTheOrderOfASurvey)
     std::vector<std::string> titles;
     for (const Section& section : report.sections)
         titles.push_back(section.title);
-    const std::vector<std::string> wanted{"Report of engine performance readings", "Summary", "Survey items concerned", "All cylinders at a glance",
+    const std::vector<std::string> wanted{"Report of engine performance readings", "Summary", "Flags and questions", "Survey items concerned", "All cylinders at a glance",
                                           "Values of the cylinders", "Words, choices and what was not read", "Values of the engine, its turbochargers and coolers, and the ship",
                                           "Reference conditions and corrections", "Baseline", "Limits in force", "Trends", "Indicator diagrams",
-                                          "Flags and questions", "Overhauls, adjustments and other events",
+                                          "Overhauls, adjustments and other events",
                                           "Missing and unsteady readings, doubts and corrections", "Instruments",
                                           "Method, false alarms, units and rounding", "Integrity of the data", "Signatures"};
     EXPECT_EQ(titles, wanted);
@@ -376,7 +376,67 @@ TEST(SurveyReportContents, DoubtsAndCorrectionsAreListed)
     details.corrections.push_back({day("2031-01-20"), "chief engineer", "2030-12, maximum pressure, cylinder 1", "112", "121", "misread"});
     const std::string text = report_as_text(make_survey_report(make_judgement(), year_to_march(), details));
     EXPECT_TRUE(contains(text, "was 104.9 meant?"));
-    EXPECT_TRUE(contains(text, "112\t121\tchief engineer\tmisread"));
+    EXPECT_TRUE(contains(text, "112\t121\t1\tchief engineer\tmisread"));
+}
+
+TEST(SurveyReportContents, CorrectionsOfOneValueAreOneLine)
+{
+    ReportDetails details = make_details();
+    const std::string what = "2030-12, maximum pressure, cylinder 1";
+    details.corrections = {{day("2031-01-20"), "chief engineer", what, "112", "1210", "misread"},
+                           {day("2031-01-21"), "second engineer", what, "1210", "121", "a nought too many"},
+                           {day("2031-02-02"), "chief engineer", "2030-12, maximum pressure, cylinder 2", "119", "118", "misread"}};
+    const SurveyReport report = make_survey_report(make_judgement(), year_to_march(), details);
+    const Table* table = find_table(find_section(report, "Missing"), "corrected after");
+    ASSERT_NE(table, nullptr);
+    ASSERT_EQ(table->rows.size(), 2u);
+    EXPECT_EQ(table->rows[0].cells, (std::vector<std::string>{"2031-01-21", what, "112", "121", "2", "chief engineer; second engineer", "misread; a nought too many"}));
+}
+
+TEST(SurveyReportContents, MixedUnitsStandOncePerRow)
+{
+    Judgement judgement = make_judgement();
+    auto record = std::make_shared<EngineRecord>(*judgement.record);
+    const QuantityId id = id_of("compression_pressure");
+    for (Value& value : record->readings.back().values)
+        if (value.quantity == id)
+            value.unit = find_unit("kgf/cm2").value().id;
+    judgement.record = record;
+    const SurveyReport report = make_survey_report(judgement, last_months(record->readings.back().taken_at.utc, 12), make_details());
+    const Table* table = find_table(find_section(report, "Values of the cylinders"), "ompression pressure");
+    ASSERT_NE(table, nullptr);
+    EXPECT_TRUE(contains(table->rows[0].cells[2], "read, bar gauge")) << table->rows[0].cells[2];
+    bool other = false;
+    for (const report::Row& row : table->rows) {
+        other = other || contains(row.cells[2], "read, kgf/cm");
+        for (std::size_t c = 3; c < row.cells.size(); ++c)
+            EXPECT_FALSE(contains(row.cells[c], "bar") || contains(row.cells[c], "kgf")) << row.cells[c];
+    }
+    EXPECT_TRUE(other);
+}
+
+TEST(SurveyReportContents, SaysSoWhereACalibrationIsOlderThanTwoYears)
+{
+    const auto report_with = [](const char* calibrated) {
+        Judgement judgement = make_judgement();
+        auto record = std::make_shared<EngineRecord>(*judgement.record);
+        record->engine.instruments.assign(1, Instrument{});
+        record->engine.instruments[0].quantity = "maximum_pressure";
+        record->engine.instruments[0].calibrated = calibrated;
+        judgement.record = record;
+        ReportDetails details = make_details();
+        details.date = day("2031-04-01");
+        return report_as_text(make_survey_report(judgement, year_to_march(), details));
+    };
+    EXPECT_TRUE(contains(report_with("2029-03-31"), "2029-03-31, older than 24 months"));
+    EXPECT_FALSE(contains(report_with("2029-04-01"), "older than 24 months"));
+    EXPECT_FALSE(contains(report_with("at the yard"), "older than 24 months")) << "what is no date is not judged";
+}
+
+TEST(SurveyReportContents, TheSummaryCountsReadingsInOneLine)
+{
+    const std::string text = report_as_text(make_survey_report(make_judgement(), year_to_march(), make_details()));
+    EXPECT_TRUE(contains(text, "12 asked for (one a month), ")) << text.substr(0, 2000);
 }
 
 TEST(SurveyReportContents, MakesNoPromises)
