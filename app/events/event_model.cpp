@@ -46,7 +46,7 @@ int EventModel::columnCount(const QModelIndex& parent) const
     return parent.isValid() ? 0 : columns;
 }
 
-QString EventModel::text(const Event& event, int column) const
+QString EventModel::text_of(const Event& event, int column) const
 {
     switch (column) {
     case date: return day_text(event.date.utc);
@@ -72,7 +72,7 @@ QVariant EventModel::data(const QModelIndex& index, int role) const
     const Event* one = event(index.row());
     if (!one || !checkIndex(index, CheckIndexOption::IndexIsValid))
         return {};
-    const QString shown = index.column() == hours ? hours_[static_cast<std::size_t>(index.row())] : text(*one, index.column());
+    const QString shown = index.column() == hours ? hours_[static_cast<std::size_t>(index.row())] : text_of(*one, index.column());
     switch (role) {
     case Qt::DisplayRole: return shown;
     case Qt::TextAlignmentRole:

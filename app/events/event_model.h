@@ -23,6 +23,7 @@ public:
     void show(const Engine& engine, std::vector<Event> events, const std::vector<Reading>& readings);
     const Event* event(int row) const;
     int row_of(const QString& id) const; ///< -1: not there
+    QString text_of(const Event& event, int column) const;
 
     int rowCount(const QModelIndex& parent = {}) const override;
     int columnCount(const QModelIndex& parent = {}) const override;
@@ -30,8 +31,6 @@ public:
     QVariant headerData(int section, Qt::Orientation orientation, int role) const override;
 
 private:
-    QString text(const Event& event, int column) const;
-
     Engine engine_;
     std::vector<Event> events_;
     std::vector<QString> hours_;

@@ -32,6 +32,12 @@ bool reads_a_quantity(const Event& event)
     return kind && kind->concerns == "instrument";
 }
 
+bool of_the_ship(const Event& event)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    return kind && kind->concerns == "ship";
+}
+
 } // namespace
 
 EventsPage::EventsPage(Workplace& place, QWidget* parent)
@@ -45,6 +51,7 @@ EventsPage::EventsPage(Workplace& place, QWidget* parent)
     ui_->diary->setTabKeyNavigation(false);
     fill_quantities(*ui_->quantity_field);
     make_kind_buttons();
+    keep_room_for_bold(*this);
     connect_fields();
     connect_diary();
 }
@@ -98,6 +105,8 @@ void EventsPage::connect_fields()
     connect(ui_->save_button, &QPushButton::clicked, this, &EventsPage::save);
     connect(ui_->remove_button, &QPushButton::clicked, this, &EventsPage::remove);
     connect(ui_->undo_button, &QPushButton::clicked, &diary_.undo(), &QUndoStack::undo);
+    connect(ui_->added_undo_button, &QPushButton::clicked, &diary_.undo(), &QUndoStack::undo);
+    ui_->added_line->hide();
     connect(ui_->redo_button, &QPushButton::clicked, &diary_.undo(), &QUndoStack::redo);
     connect(new QShortcut(QKeySequence::Undo, this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut), &QShortcut::activated, &diary_.undo(), &QUndoStack::undo);
     connect(new QShortcut(QKeySequence::Redo, this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut), &QShortcut::activated, &diary_.undo(), &QUndoStack::redo);
@@ -114,6 +123,7 @@ void EventsPage::connect_diary()
     connect(&diary_.undo(), &QUndoStack::indexChanged, this, [this] {
         ui_->undo_button->setEnabled(diary_.undo().canUndo());
         ui_->redo_button->setEnabled(diary_.undo().canRedo());
+        ui_->added_line->hide();
     });
     connect(ui_->diary->selectionModel(), &QItemSelectionModel::currentRowChanged, this, [this] {
         if (ui_->diary->currentIndex().isValid())
@@ -147,6 +157,8 @@ void EventsPage::refresh()
     if (judgement && judgement->record)
         engine_ = judgement->record->engine;
     typing_.set_engine(engine_);
+    if (engine_id != shown_engine_)
+        ui_->added_line->hide();
     if (engine_id != shown_engine_ || typing_.empty()) {
         shown_engine_ = engine_id;
         typing_.set_day(today_);
@@ -183,6 +195,7 @@ void EventsPage::show_diary()
 void EventsPage::take_key(QChar key)
 {
     ui_->diary->setCurrentIndex({});
+    ui_->added_line->hide();
     typing_.take(key);
     say(typing_.complaint());
     show_line();
@@ -217,6 +230,7 @@ void EventsPage::show_in_hand()
     ui_->reminder->setText(reminder);
     ui_->reminder->setVisible(!reminder.isEmpty());
     ui_->quantity_field->setEnabled(event && reads_a_quantity(*event));
+    ui_->hours_field->setEnabled(!event || !of_the_ship(*event)); // a ship has no running hours
     ui_->why_field->setEnabled(row);
     ui_->remove_button->setEnabled(row && !workplace().read_only());
     ui_->save_button->setEnabled(event.has_value() && !workplace().read_only());
@@ -240,7 +254,7 @@ Result<Event> EventsPage::with_fields(Event event) const
         event.date_only = true;
     }
     event.running_hours.reset();
-    if (const QString hours = ui_->hours_field->text().trimmed(); !hours.isEmpty()) {
+    if (const QString hours = ui_->hours_field->text().trimmed(); !hours.isEmpty() && ui_->hours_field->isEnabled()) {
         const auto number = parse_number(hours.toStdString());
         if (!number.has_value())
             return number.error();
@@ -256,6 +270,8 @@ Result<Event> EventsPage::with_fields(Event event) const
 /// Enter in the key line: today's event with what stands in the fields.
 void EventsPage::accept()
 {
+    if (!typing_.complaint().isEmpty())
+        return say(typing_.complaint());
     const auto typed = typing_.event();
     if (!typed.has_value())
         return say(to_qstring(typed.error().text()));
@@ -272,14 +288,30 @@ void EventsPage::save()
     if (!whole.has_value())
         return say(to_qstring(whole.error().text()));
     const QString why = ui_->why_field->text();
-    if (typing()) {
+    if (!typing_.complaint().isEmpty())
+        return say(typing_.complaint());
+    const bool fresh = typing();
+    if (fresh) {
         typing_.clear();
         diary_.add(whole.value());
     } else {
         diary_.change(whole.value(), why);
     }
-    if (!diary_.problem())
-        begin_new();
+    if (diary_.problem())
+        return;
+    begin_new();
+    if (fresh)
+        say_added(whole.value());
+}
+
+/// "Added: Fuel valves changed, cylinder 4, 14 Mar 2031. From here on ..." and its undo.
+void EventsPage::say_added(const Event& event)
+{
+    QStringList parts;
+    for (const int column : {EventModel::what, EventModel::part, EventModel::date})
+        parts.append(model_.text_of(event, column));
+    ui_->added->setText(tr("Added: %1. %2").arg(parts.join(QStringLiteral(", ")), to_qstring(event_effect_sentence(event, engine_))));
+    ui_->added_line->show();
 }
 
 void EventsPage::begin_new()

@@ -53,6 +53,7 @@ private:
     void save();
     void remove();
     void begin_new();
+    void say_added(const Event& event);
     /// What is being typed, else the row in hand.
     bool typing() const { return !typing_.empty(); }
     std::optional<Event> in_hand() const;

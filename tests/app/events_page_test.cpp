@@ -9,6 +9,7 @@
 #include <QAbstractItemModelTester>
 #include <QLabel>
 #include <QLineEdit>
+#include <QPushButton>
 #include <QTableView>
 
 namespace evenstroke {
@@ -66,6 +67,31 @@ TEST_F(EventsDesk, RefusesACylinderThatIsNotThere)
     QTest::keyClick(box_, Qt::Key_O);
     QTest::keyClick(box_, Qt::Key_9);
     EXPECT_TRUE(words("problem").contains("6 cylinders")) << words("problem").toStdString();
+}
+
+TEST_F(EventsDesk, EnterDoesNothingWhileTheRedLineStands)
+{
+    for (const Qt::Key key : {Qt::Key_O, Qt::Key_9, Qt::Key_Return})
+        QTest::keyClick(box_, key);
+    EXPECT_TRUE(stored().empty()) << "an overhaul of cylinder 9 is none of the whole engine";
+    EXPECT_TRUE(words("problem").contains("6 cylinders"));
+    QTest::keyClick(box_, Qt::Key_4);
+    QTest::keyClick(box_, Qt::Key_Return);
+    ASSERT_EQ(stored().size(), 1u);
+    EXPECT_EQ(stored()[0].place, Place::cylinder(4));
+}
+
+TEST_F(EventsDesk, SaysWhatWasAddedAndTakesItBackAtOnce)
+{
+    for (const Qt::Key key : {Qt::Key_O, Qt::Key_4, Qt::Key_Return})
+        QTest::keyClick(box_, key);
+    auto* undo = page_->findChild<QPushButton*>("added_undo_button");
+    ASSERT_TRUE(undo->isVisible());
+    EXPECT_TRUE(words("added").startsWith("Added: Overhaul, Cylinder 4, 14 Mar 2031.")) << words("added").toStdString();
+    EXPECT_TRUE(words("added").contains("cylinder 4 is compared anew"));
+    undo->click();
+    EXPECT_TRUE(stored().empty());
+    EXPECT_FALSE(undo->isVisible());
 }
 
 TEST_F(EventsDesk, ArrowKeysMoveTheDay)
