@@ -91,6 +91,14 @@ Done ReadingChange::set_state(ReadingState state)
     return change.run(static_cast<int>(state), reading_.key);
 }
 
+Done ReadingChange::set_time(StampedTime taken_at)
+{
+    Query change(history_.database(),
+                 "UPDATE reading SET taken_at = ?, offset_minutes = ? WHERE reading_key = ?", undone_);
+    reading_.taken_at = taken_at;
+    return change.run(seconds_of(taken_at.utc), taken_at.offset_minutes, reading_.key);
+}
+
 Done ReadingChange::touch()
 {
     Query change(history_.database(), "UPDATE reading SET changed_at = ? WHERE reading_key = ?", undone_);

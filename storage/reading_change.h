@@ -26,6 +26,7 @@ public:
     Done remove_value(const ValueRow& where);
     Done add_value(const ValueRow& value);
     Done set_state(ReadingState state);
+    Done set_time(StampedTime taken_at);
     /// Notes the time of the change; for a closed or withdrawn reading also the trail and the revision.
     Done finish();
     Done finish(const char* action, const std::string& detail, const Signature& by);

@@ -106,6 +106,21 @@ Done ReadingStore::correct(const std::string& reading_id, const Value& new_value
     return change.finish("corrected", detail, by);
 }
 
+Done ReadingStore::correct_time(const std::string& reading_id, StampedTime taken_at, const Signature& by)
+{
+    BOOST_OUTCOME_TRYV(check_signature(by, true));
+    ReadingChange change(history_, "the reading's time was not corrected");
+    BOOST_OUTCOME_TRYV(change.begin(reading_id, ReadingState::closed));
+    const StampedTime before = change.reading().taken_at;
+    if (before.utc == taken_at.utc && before.offset_minutes == taken_at.offset_minutes)
+        return invalid_input("The reading stands at this time already.",
+                             "Give another time, or leave it as it is.");
+    BOOST_OUTCOME_TRYV(change.set_time(taken_at));
+    const std::string detail = "time of " + change.reading().name + ": " + utc_text(before.utc) + " -> " +
+                               utc_text(taken_at.utc);
+    return change.finish("corrected", detail, by);
+}
+
 Done ReadingStore::set_confirmed(const std::string& reading_id, const ValuePlace& place, bool confirmed,
                                  const Signature& by)
 {

@@ -91,6 +91,9 @@ public:
     /// Changes a value of a closed reading, or adds one that was forgotten. The old value, who, when and why
     /// stay. @par Problems invalid_input: no name or no reason given, or nothing changes
     Done correct(const std::string& reading_id, const Value& new_value, const Signature& by);
+    /// Corrects when a closed reading was taken; its name stays, the old time stays in the audit trail.
+    /// @par Problems invalid_input: no name or no reason given, or it is the time already
+    Done correct_time(const std::string& reading_id, StampedTime taken_at, const Signature& by);
     /// Marks that the engineer read the value again and it stands.
     Done set_confirmed(const std::string& reading_id, const ValuePlace& place, bool confirmed,
                        const Signature& by);

@@ -6,6 +6,7 @@
 #include "app/desk/sentence_bar.h"
 #include "app/desk/workplace.h"
 
+#include <QAbstractButton>
 #include <QApplication>
 #include <QDateTime>
 #include <QFileInfo>
@@ -14,13 +15,15 @@
 #include <QPrinter>
 #include <QShortcut>
 
+#include <array>
+
 namespace evenstroke {
 
 namespace {
 
 constexpr QChar workings_letter(u'W');
 
-/// "history saved 09:41", or the day where it was not today.
+/// "history last written 09:41", or the day where it was not today.
 QString saved_text(const Workplace& workplace)
 {
     if (!workplace.is_open())
@@ -29,8 +32,8 @@ QString saved_text(const Workplace& workplace)
         return Frame::tr("history, for reading only");
     const QDateTime saved = QFileInfo(workplace.path()).lastModified();
     return saved.date() == QDate::currentDate()
-               ? Frame::tr("history saved %1").arg(saved.time().toString(QStringLiteral("HH:mm")))
-               : Frame::tr("history saved %1").arg(day_text(TimePoint(std::chrono::seconds(saved.toSecsSinceEpoch()))));
+               ? Frame::tr("history last written %1").arg(saved.time().toString(QStringLiteral("HH:mm")))
+               : Frame::tr("history last written %1").arg(day_text(TimePoint(std::chrono::seconds(saved.toSecsSinceEpoch()))));
 }
 
 /// "reference 25 °C inlet air, 25 °C coolant, 1000 mbar"
@@ -81,6 +84,34 @@ void Frame::add_keys()
     qApp->installEventFilter(this);
 }
 
+namespace {
+
+/// The first thing in a part of the window that can be seen and takes keys; null where there is none.
+QWidget* first_reachable(QWidget* part)
+{
+    const auto reachable = [](const QWidget* widget) {
+        return widget->isVisible() && widget->isEnabled() && (widget->focusPolicy() & Qt::TabFocus) == Qt::TabFocus;
+    };
+    for (QWidget* widget = part->nextInFocusChain(); widget && widget != part; widget = widget->nextInFocusChain())
+        if (part->isAncestorOf(widget) && reachable(widget))
+            return widget;
+    return reachable(part) ? part : nullptr;
+}
+
+/// Return presses the button in hand, as Space does. Later, as what it does may take the button away.
+bool press_button(QWidget* widget, const QKeyEvent& key)
+{
+    auto* button = qobject_cast<QAbstractButton*>(widget);
+    const bool enter = key.key() == Qt::Key_Return || key.key() == Qt::Key_Enter;
+    if (!button || !enter || (key.modifiers() & ~Qt::KeypadModifier) != Qt::NoModifier || !button->isEnabled())
+        return false;
+    if (!key.isAutoRepeat())
+        QMetaObject::invokeMethod(button, "click", Qt::QueuedConnection);
+    return true;
+}
+
+} // namespace
+
 /// Letters change the page or open a chooser unless they are being typed somewhere.
 bool Frame::eventFilter(QObject* watched, QEvent* event)
 {
@@ -91,6 +122,8 @@ bool Frame::eventFilter(QObject* watched, QEvent* event)
     if (widget->window() != this)
         return QWidget::eventFilter(watched, event);
     const auto* key = static_cast<QKeyEvent*>(event);
+    if (press_button(widget, *key))
+        return true;
     const bool with_alt = key->modifiers() == Qt::AltModifier;
     if (key->matches(QKeySequence::Copy) && current_ && !widget->testAttribute(Qt::WA_InputMethodEnabled)) {
         current_->copy();
@@ -132,12 +165,22 @@ bool Frame::show_workings()
 void Frame::walk_focus()
 {
     QWidget* focus = QApplication::focusWidget();
+    std::array<QWidget*, 3> parts{sentence_, rail_, current_};
     if (focus && sentence_->isAncestorOf(focus))
-        rail_->nextInFocusChain()->setFocus(Qt::TabFocusReason);
-    else if (focus && rail_->isAncestorOf(focus) && current_)
-        current_->first_focus()->setFocus(Qt::TabFocusReason);
-    else
-        sentence_->nextInFocusChain()->setFocus(Qt::TabFocusReason);
+        parts = {rail_, current_, sentence_};
+    else if (focus && rail_->isAncestorOf(focus))
+        parts = {current_, sentence_, rail_};
+    for (QWidget* part : parts) {
+        if (!part)
+            continue;
+        QWidget* first = part == current_ ? current_->first_focus() : nullptr;
+        if (!first || first == part || !first->isVisible() || !first->isEnabled())
+            first = first_reachable(part);
+        if (first) {
+            first->setFocus(Qt::TabFocusReason);
+            return;
+        }
+    }
 }
 
 void Frame::print_page()

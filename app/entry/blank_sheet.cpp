@@ -22,7 +22,8 @@ QString tr_(const char* text)
 // All lengths in points (1/72 inch).
 constexpr double margin = 34, label_width = 158, unit_width = 44, row_height = 17, heading_height = 22;
 constexpr double widest_box = 62, narrowest_box = 26;
-constexpr double half_width = 268, half_label = 142, half_unit = 40, half_box = 74; // sections of lone boxes
+constexpr double half_width = 268, half_label = 142, half_unit = 40, half_box = 46; // sections of lone boxes
+constexpr double under_height = 8, beside_width = 30; // last time's value, under a box or beside a lone one
 const QColor ink(Qt::black), grey(0x70, 0x70, 0x70);
 
 QFont face(int points, bool bold = false)
@@ -70,7 +71,10 @@ private:
     bool in_two_columns(const LogRow& row) const;
     void boxes(const LogSection& section, const LogRow& row, std::size_t from, std::size_t count,
                double width);
-    void box(const LogBox& box, const QRectF& area);
+    void box(const QRectF& area);
+    void before(const LogBox& box, const QRectF& area, int flags);
+    QString before_text(const LogBox& box) const;
+    double line_height(const LogRow& row) const;
     void text(const QRectF& area, int flags, const QString& words, const QFont& font, const QColor& colour);
     double box_width(const LogSection& section) const;
     std::size_t boxes_a_line(const LogSection& section) const;
@@ -107,7 +111,7 @@ int SheetPrinter::run()
             if (each.columns.size() == 1 && in_two_columns(each_row))
                 continue;
             const auto lines = (each_row.boxes.size() + boxes_a_line(each) - 1) / boxes_a_line(each);
-            make_room(row_height * static_cast<double>(lines), &each);
+            make_room(line_height(each_row) * static_cast<double>(lines), &each);
             row(each, each_row);
         }
         y_ += 6;
@@ -221,17 +225,22 @@ void SheetPrinter::row(const LogSection& section, const LogRow& row)
     text({margin, y_, label_width - 4, row_height}, Qt::AlignLeft | Qt::AlignVCenter, label, face(8), ink);
     text({margin + label_width, y_, unit_width - 5, row_height}, Qt::AlignRight | Qt::AlignVCenter,
          to_qstring(row_unit_text(row.quantity, sheet_.row_unit(row.quantity))), face(7), grey);
-    if (row.boxes.size() == 1) {
-        const double wide =
-            meant.type == ValueType::words ? room() : widest_box * (meant.type == ValueType::choice ? 2 : 1);
-        boxes(section, row, 0, 1, wide);
+    if (section.columns.size() == 1 && row.boxes.size() == 1) {
+        // Words take the rest of the line, from where the boxes of the two columns above begin.
+        const double left = margin + half_label + half_unit;
+        box({left, y_, page_.width() - margin - left, row_height});
         y_ += row_height;
+        return;
+    }
+    if (row.boxes.size() == 1) {
+        boxes(section, row, 0, 1, meant.type == ValueType::words ? room() : widest_box);
+        y_ += line_height(row);
         return;
     }
     const std::size_t a_line = boxes_a_line(section);
     for (std::size_t from = 0; from < row.boxes.size(); from += a_line) {
         boxes(section, row, from, std::min(a_line, row.boxes.size() - from), box_width(section));
-        y_ += row_height;
+        y_ += line_height(row);
     }
 }
 
@@ -264,7 +273,9 @@ void SheetPrinter::single_row(const LogRow& row, double left, double y)
          to_qstring(meant.title) + (row.shared ? QStringLiteral(" *") : QString()), face(8), ink);
     text({left + half_label, y, half_unit - 5, row_height}, Qt::AlignRight | Qt::AlignVCenter,
          to_qstring(row_unit_text(row.quantity, sheet_.row_unit(row.quantity))), face(7), grey);
-    box(row.boxes.front(), {left + half_label + half_unit, y, half_box, row_height});
+    box({left + half_label + half_unit, y, half_box, row_height});
+    before(row.boxes.front(), {left + half_label + half_unit + half_box + 2, y, beside_width, row_height},
+           Qt::AlignLeft | Qt::AlignVCenter);
 }
 
 void SheetPrinter::boxes(const LogSection& section, const LogRow& row, std::size_t from, std::size_t count,
@@ -274,7 +285,8 @@ void SheetPrinter::boxes(const LogSection& section, const LogRow& row, std::size
     double x = margin + label_width + unit_width;
     for (std::size_t i = from; i < from + count; ++i) {
         const QRectF area(x, y_, width, row_height);
-        box(row.boxes[i], area);
+        box(area);
+        before(row.boxes[i], {x, y_ + row_height - 2, width, under_height}, Qt::AlignHCenter | Qt::AlignVCenter);
         if (wrapped && i < section.columns.size())
             text(area.adjusted(2, 1, -3, -2), Qt::AlignRight | Qt::AlignTop, to_qstring(section.columns[i]),
                  face(6), grey);
@@ -282,19 +294,37 @@ void SheetPrinter::boxes(const LogSection& section, const LogRow& row, std::size
     }
 }
 
-void SheetPrinter::box(const LogBox& box, const QRectF& area)
+void SheetPrinter::box(const QRectF& area)
 {
     if (!draws())
         return;
     painter_.setPen(QPen(ink, 0.5));
     painter_.setBrush(Qt::NoBrush);
     painter_.drawRect(area.adjusted(1, 1, -1, -1));
+}
+
+/// Last time's value as it was typed; empty where there was none, or no number.
+QString SheetPrinter::before_text(const LogBox& box) const
+{
     const Value* before =
         sheet_.last && box.phase == Phase::reading ? sheet_.last->find(box.quantity, box.place) : nullptr;
     if (!before || quantity(box.quantity).type != ValueType::number || before->missing != MissingReason::none)
-        return;
-    text(area.adjusted(3, 2, -3, -2), Qt::AlignLeft | Qt::AlignBottom,
-         to_qstring(box_text(*before, sheet_.row_unit(box.quantity))), face(6), grey);
+        return {};
+    return to_qstring(box_text(*before, sheet_.row_unit(box.quantity)));
+}
+
+/// Outside the box, or it could be taken for this time's.
+void SheetPrinter::before(const LogBox& box, const QRectF& area, int flags)
+{
+    text(area, flags, before_text(box), face(6), grey);
+}
+
+/// With room for last time's values under the boxes where there are any.
+double SheetPrinter::line_height(const LogRow& row) const
+{
+    const bool any = std::any_of(row.boxes.begin(), row.boxes.end(),
+                                 [this](const LogBox& box) { return !before_text(box).isEmpty(); });
+    return row_height + (any ? under_height - 2 : 0);
 }
 
 } // namespace

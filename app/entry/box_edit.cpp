@@ -80,8 +80,41 @@ void BoxEdit::begin_typing(const QString& first)
     emit textEdited(first);
 }
 
+bool BoxEdit::only_modifies(int key)
+{
+    switch (key) {
+    case Qt::Key_Shift:
+    case Qt::Key_Control:
+    case Qt::Key_Meta:
+    case Qt::Key_Alt:
+    case Qt::Key_AltGr:
+    case Qt::Key_CapsLock:
+    case Qt::Key_NumLock:
+    case Qt::Key_ScrollLock:
+    case Qt::Key_Super_L:
+    case Qt::Key_Super_R:
+    case Qt::Key_Hyper_L:
+    case Qt::Key_Hyper_R:
+    case Qt::Key_Mode_switch:
+    case Qt::Key_Multi_key:
+        return true;
+    default:
+        return key == Qt::Key_unknown || (key >= Qt::Key_Dead_Grave && key <= Qt::Key_Dead_Longsolidusoverlay);
+    }
+}
+
 bool BoxEdit::event(QEvent* event)
 {
+    // The page's own keys are not the line's: Ctrl+D would delete here, Ctrl+U empty the box.
+    if (event->type() == QEvent::ShortcutOverride) {
+        const auto* key = static_cast<QKeyEvent*>(event);
+        if (key->modifiers() == Qt::ControlModifier &&
+            (key->key() == Qt::Key_D || key->key() == Qt::Key_N || key->key() == Qt::Key_Return ||
+             key->key() == Qt::Key_Enter)) {
+            event->ignore();
+            return true;
+        }
+    }
     // Tab would move the focus before keyPressEvent sees it.
     if (event->type() == QEvent::KeyPress) {
         auto* key = static_cast<QKeyEvent*>(event);
@@ -95,6 +128,14 @@ bool BoxEdit::event(QEvent* event)
 
 void BoxEdit::keyPressEvent(QKeyEvent* event)
 {
+    if (only_modifies(event->key())) {
+        event->accept(); // the table behind must not take it for a key of its own
+        return;
+    }
+    if (event->key() == Qt::Key_U && event->modifiers() == Qt::ControlModifier) {
+        event->ignore(); // the unit of the row
+        return;
+    }
     switch (event->key()) {
     case Qt::Key_Escape:
         emit give_up();

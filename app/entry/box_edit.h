@@ -19,6 +19,9 @@ public:
     /// Begun by typing a character: arrows then leave the box, as there is nothing to move the cursor in.
     void begin_typing(const QString& first);
 
+    /// Shift, Ctrl, a dead key and their like: pressed alone they say nothing yet.
+    static bool only_modifies(int key);
+
 signals:
     void leave(int key, Qt::KeyboardModifiers modifiers); ///< Enter, Tab or an arrow: take the text and go on
     void give_up();                                       ///< Escape: what was there before stands

@@ -34,11 +34,12 @@ QString ClosedView::text() const
         .join(u'\n');
 }
 
-void ClosedView::show_reading(const EntrySession& session, Workplace& workplace,
+void ClosedView::show_reading(const EntrySession& session, Workplace& workplace, const QStringList& kept,
                               std::shared_ptr<const Judgement> judgement)
 {
     const EntrySheet& sheet = session.sheet();
     const Reading& reading = sheet.reading();
+    kept_ = kept;
     reading_id_ = to_qstring(reading.id);
     ui_->heading->setText(tr("The reading of %1 is closed.").arg(day_text(reading.taken_at.utc)));
     const Completeness state = find_completeness(sheet.sections(), sheet.whole());
@@ -59,11 +60,24 @@ void ClosedView::show_reading(const EntrySession& session, Workplace& workplace,
                                 : std::vector<Reading>::const_iterator();
     if (!readings || found == readings->end()) {
         ui_->found_label->setText(tr("The reading is being judged…"));
-        ui_->findings->show_lines({});
+        ui_->findings->show_lines(kept_lines());
     } else {
         show_findings(*judgement, static_cast<std::size_t>(found - readings->begin()));
     }
     show_engines(workplace, session);
+}
+
+QWidget* ClosedView::first_focus()
+{
+    return ui_->board_button;
+}
+
+std::vector<NoteLines::Line> ClosedView::kept_lines() const
+{
+    std::vector<NoteLines::Line> lines;
+    for (const QString& sentence : kept_)
+        lines.push_back({tr("Kept as it is, in doubt when it was closed: %1").arg(sentence), false, {}});
+    return lines;
 }
 
 void ClosedView::show_findings(const Judgement& judgement, std::size_t reading)
@@ -80,6 +94,8 @@ void ClosedView::show_findings(const Judgement& judgement, std::size_t reading)
     for (const Doubt& doubt : judgement.doubts)
         if (doubt.reading == reading && !doubt.sentence.empty())
             lines.push_back({to_qstring(doubt.sentence), false, {}});
+    const auto kept = kept_lines();
+    lines.insert(lines.end(), kept.begin(), kept.end());
     if (lines.empty())
         ui_->found_label->setText(tr("Nothing new began with this reading."));
     else if (flags > 0)
@@ -99,6 +115,9 @@ void ClosedView::show_engines(Workplace& workplace, const EntrySession& session)
                     {engine.name, false, {{tr("Enter %1").arg(engine.name), [this, id = engine.id] {
                                                emit engine_wanted(id);
                                            }}}});
+    ui_->engines_label->setText(session.sheet().ship_values().empty()
+                                    ? tr("The other engines of this ship:")
+                                    : tr("The other engines of this ship; what the ship shares is already entered:"));
     ui_->engines_label->setVisible(!lines.empty());
     ui_->engines->show_lines(lines);
 }

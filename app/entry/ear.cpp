@@ -22,6 +22,21 @@ std::optional<double> own_number(const LogSheetModel& model, const LogBox& box,
     return value ? number_in_own_unit(value.value(), barometer) : std::nullopt;
 }
 
+/// The last words or choice that stood in this box, with their reading; null where there are none.
+std::pair<const Reading*, const Value*> words_before(const EntryOpinions& opinions, const LogBox& box,
+                                                     TimePoint before)
+{
+    if (!opinions.judgement() || !opinions.judgement()->record)
+        return {nullptr, nullptr};
+    const auto& readings = opinions.judgement()->record->readings;
+    for (auto reading = readings.rbegin(); reading != readings.rend(); ++reading)
+        if (reading->taken_at.utc < before)
+            for (const Value& value : reading->values)
+                if (box_of(value) == box && value.missing == MissingReason::none && !value.words.empty())
+                    return {&*reading, &value};
+    return {nullptr, nullptr};
+}
+
 } // namespace
 
 Ear::Ear(QWidget* parent) : QWidget(parent), ui_(std::make_unique<Ui::Ear>())
@@ -29,7 +44,9 @@ Ear::Ear(QWidget* parent) : QWidget(parent), ui_(std::make_unique<Ui::Ear>())
     ui_->setupUi(this);
     connect(ui_->take_button, &QPushButton::clicked, this, &Ear::take_suggestion);
     connect(ui_->confirm_button, &QPushButton::clicked, this, &Ear::confirm);
+    connect(ui_->newest_button, &QPushButton::clicked, this, &Ear::newest_wanted);
     show_nothing();
+    show_newest({});
 }
 
 Ear::~Ear() = default;
@@ -37,6 +54,18 @@ Ear::~Ear() = default;
 QString Ear::sentence() const
 {
     return ui_->sentence->text();
+}
+
+void Ear::show_newest(const QString& sentence)
+{
+    ui_->newest->setText(sentence);
+    ui_->newest->setVisible(!sentence.isEmpty());
+    ui_->newest_button->setVisible(!sentence.isEmpty());
+}
+
+QString Ear::newest() const
+{
+    return ui_->newest->text();
 }
 
 void Ear::show_nothing()
@@ -56,16 +85,43 @@ void Ear::show_box(const LogSheetModel& model, const LogBox& box, const EntryOpi
     ui_->box_name->setText(model.box_name(box));
     if (quantity(box.quantity).type == ValueType::number)
         show_numbers(model, box, opinions, own_number(model, box, typing));
-    if (quantity(box.quantity).type == ValueType::choice) {
-        QStringList choices;
-        for (const std::string& choice : quantity(box.quantity).choices)
-            choices << to_qstring(choice_text(choice));
-        ui_->sentence->setText(
-            tr("One of: %1. The first letters are enough.").arg(choices.join(QStringLiteral(", "))));
+    QStringList sentences = choices_of(model, box, opinions);
+    if (!typing)
+        show_doubt(model, box, opinions, sentences);
+    if (!sentences.isEmpty()) {
+        ui_->sentence->setText(sentences.join(QStringLiteral("\n\n")));
         ui_->sentence->show();
     }
-    if (!typing)
-        show_doubt(model, box, opinions);
+}
+
+/// What may be written where it is no number, and the words that stood there last time.
+QStringList Ear::choices_of(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions)
+{
+    const Quantity& meant = quantity(box.quantity);
+    QStringList sentences;
+    if (meant.type == ValueType::choice) {
+        QStringList choices;
+        for (const std::string& choice : meant.choices)
+            choices << to_qstring(choice_text(choice));
+        sentences << tr("One of: %1. The first letters are enough.").arg(choices.join(QStringLiteral(", ")));
+    } else if (meant.type == ValueType::yes_no) {
+        sentences << tr("Yes or no; the first letter is enough.");
+    }
+    if (meant.type == ValueType::number || box.phase != Phase::reading)
+        return sentences;
+    const auto [last, before] = words_before(opinions, box, model.sheet().reading().taken_at.utc);
+    if (!before)
+        return sentences;
+    const QString words = to_qstring(box_text(*before, model.sheet().row_unit(box.quantity)));
+    if (words.isEmpty())
+        return sentences;
+    sentences << tr("Last time, %1: %2").arg(day_text(last->taken_at.utc), words);
+    if (!model.sheet().value(box)) {
+        suggestion_ = words;
+        ui_->take_button->setText(tr("F3  take %1").arg(words));
+        ui_->take_button->show();
+    }
+    return sentences;
 }
 
 void Ear::show_numbers(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
@@ -102,13 +158,12 @@ void Ear::show_numbers(const LogSheetModel& model, const LogBox& box, const Entr
         ui_->scale->show_content(content);
 }
 
-void Ear::show_doubt(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions)
+void Ear::show_doubt(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
+                     QStringList& sentences)
 {
     const Value* value = model.sheet().value(box);
-    QStringList sentences;
-    const auto unreadable = model.unreadable().find(box);
-    if (unreadable != model.unreadable().end() && model.refusal())
-        sentences << to_qstring(model.refusal()->text());
+    if (const auto refusal = model.refusal(box))
+        sentences << to_qstring(refusal->text());
     const ValueOpinion* opinion = opinions.of(box);
     const bool confirmed = value && value->confirmed;
     const bool doubts = opinion && value && !opinion->sentence.empty();
@@ -126,10 +181,6 @@ void Ear::show_doubt(const LogSheetModel& model, const LogBox& box, const EntryO
     else if (sentences.isEmpty() && !opinions.has_history())
         sentences << tr(
             "There is no earlier reading of this engine to compare with. Ranges are checked all the same.");
-    if (!sentences.isEmpty()) {
-        ui_->sentence->setText(sentences.join(QStringLiteral("\n\n")));
-        ui_->sentence->show();
-    }
     if (doubts && !confirmed && opinion->suggestion) {
         suggestion_ = to_qstring(*opinion->suggestion);
         ui_->take_button->setText(tr("F3  take %1 instead").arg(suggestion_));

@@ -3,6 +3,7 @@
 
 #include "app/entry/entry_opinions.h"
 
+#include <QStringList>
 #include <QWidget>
 
 #include <memory>
@@ -27,6 +28,9 @@ public:
     void show_box(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
                   const std::optional<QString>& typing = {});
     void show_nothing();
+    /// The newest doubt nobody answered yet, in a box other than the one in hand; empty: none.
+    void show_newest(const QString& sentence);
+    QString newest() const;
     /// The reading as a whole: steadiness, how many required boxes are answered.
     void show_whole(const EntrySheet& sheet, const EntryOpinions& opinions);
 
@@ -37,11 +41,14 @@ public:
 signals:
     void take_suggestion();
     void confirm();
+    void newest_wanted(); ///< back to the box of the newest doubt
 
 private:
     void show_numbers(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
                       std::optional<double> typed);
-    void show_doubt(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions);
+    QStringList choices_of(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions);
+    void show_doubt(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
+                    QStringList& sentences);
 
     std::unique_ptr<Ui::Ear> ui_;
     QString suggestion_;

@@ -71,7 +71,8 @@ void EntryOpinions::ask(const EntrySheet& sheet, std::shared_ptr<const Judgement
     const ReadingContext context{earlier, judgement_->record->events, now};
     for (const Relation& relation : check_relations(sheet.engine(), whole, context)) {
         SheetNote note{
-            to_qstring(relation.sentence), {}, relation.impossible, relation.name == "copied_from_previous"};
+            to_qstring(relation.sentence), {}, relation.impossible,
+                       relation.name == "copied_from_previous", relation.name.rfind("time_", 0) == 0};
         for (const ConcernedValue& concerned : relation.concerned)
             note.boxes.push_back({concerned.quantity, concerned.place, Phase::reading});
         if (!all_confirmed(sheet, note.boxes))
@@ -92,7 +93,7 @@ void EntryOpinions::note_doubts(const EntrySheet& sheet, const std::vector<Doubt
         const bool one_box = doubt.quantity && doubt.place;
         if (one_box || doubt.sentence.empty())
             continue;
-        SheetNote note{to_qstring(doubt.sentence), {}, false, false};
+        SheetNote note{to_qstring(doubt.sentence), {}, false, false, false};
         if (doubt.quantity || doubt.place)
             note.boxes = boxes_of(sheet, doubt);
         if (!all_confirmed(sheet, note.boxes))

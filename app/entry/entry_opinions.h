@@ -19,6 +19,7 @@ struct SheetNote
     std::vector<LogBox> boxes;
     bool impossible = false;
     bool whole = false; ///< last time's whole sheet seems to stand here again
+    bool time = false;  ///< the reading's own time
 };
 
 /// What the core says of the sheet as it stands: asked after every change, kept until the next.

@@ -14,6 +14,8 @@
 #include <QApplication>
 #include <QMenu>
 
+#include <algorithm>
+
 namespace evenstroke {
 
 EntryPage::EntryPage(Workplace& workplace, QWidget* parent)
@@ -27,6 +29,7 @@ EntryPage::EntryPage(Workplace& workplace, QWidget* parent)
     connect(&judge_soon_, &QTimer::timeout, this, &EntryPage::judge_now);
     connect_sheet();
     connect_actions();
+    connect_keys();
     connect(&workplace, &Workplace::judgement_ready, this, [this](const QString& engine_id) {
         if (engine_id == session_.engine_id())
             judge_soon_.start();
@@ -62,6 +65,9 @@ void EntryPage::connect_sheet()
         paste_plan_.reset();
         time_problem_.reset();
         close_problem_.reset();
+        asked_at_closing_.clear();
+        typed_lately_.clear();
+        notice_.clear();
         opinions_.forget();
         judge_soon_.start();
         show_state();
@@ -71,13 +77,26 @@ void EntryPage::connect_sheet()
         show_state();
         emit foot_changed();
     });
-    connect(&session_.sheet(), &EntrySheet::value_put, this, [this] {
+    connect(&session_.sheet(), &EntrySheet::value_put, this, [this](const LogBox& box) {
         close_problem_.reset();
+        asked_at_closing_.clear();
+        notice_.clear();
+        typed_lately_.erase(std::remove(typed_lately_.begin(), typed_lately_.end(), box), typed_lately_.end());
+        typed_lately_.push_back(box);
+        judge_soon_.start();
+    });
+    connect(&session_.sheet(), &EntrySheet::row_unit_changed, this, [this] {
+        show_previous();
+        show_box();
         judge_soon_.start();
     });
     connect(&model_, &LogSheetModel::folding_changed, this, &EntryPage::show_words);
     connect(&model_, &LogSheetModel::refused, this, [this] { show_box(); });
-    connect(ui_->grid, &LogSheetView::current_box_changed, this, &EntryPage::show_box);
+    connect(ui_->grid, &LogSheetView::current_box_changed, this, [this] {
+        show_box();
+        show_newest();
+    });
+    connect(ui_->grid, &LogSheetView::left_sheet, this, &EntryPage::leave_sheet);
     connect(ui_->grid, &LogSheetView::typing, this, [this](const QString& text) {
         if (const auto box = ui_->grid->current_box())
             ui_->ear->show_box(model_, *box, opinions_, text);
@@ -99,12 +118,13 @@ void EntryPage::connect_actions()
 {
     connect(ui_->ear, &Ear::take_suggestion, this, &EntryPage::take_suggestion);
     connect(ui_->ear, &Ear::confirm, this, &EntryPage::confirm_boxes);
+    connect(ui_->ear, &Ear::newest_wanted, this, &EntryPage::go_to_doubt);
     for (QLineEdit* field : {ui_->date_field, ui_->clock_field, ui_->offset_field})
         connect(field, &QLineEdit::editingFinished, this, &EntryPage::read_time_fields);
     for (QLineEdit* field : {ui_->who_field, ui_->why_field})
         connect(field, &QLineEdit::editingFinished, this, &EntryPage::read_signature);
-    connect(ui_->close_button, &QPushButton::clicked, this, &EntryPage::close_reading);
-    connect(ui_->copy_button, &QPushButton::clicked, this, &EntryPage::copy_all);
+    connect(ui_->close_button, &QPushButton::clicked, this, [this] { close_reading(); });
+    connect(ui_->copy_button, &QPushButton::clicked, this, [this] { copy_all(); });
     connect(ui_->fold_button, &QPushButton::clicked, this, [this] { model_.show_all(!model_.shows_all()); });
     connect(ui_->walk_button, &QPushButton::clicked, this, [this] {
         set_walk_order(ui_->grid->walk_order() == WalkOrder::along_cylinders ? WalkOrder::along_quantities
@@ -188,7 +208,7 @@ void EntryPage::show_state()
 void EntryPage::show_closed()
 {
     ui_->closed_page->show_reading(
-        session_, workplace(),
+        session_, workplace(), kept_doubtful_,
         workplace().judging(session_.engine_id()) ? nullptr : workplace().judgement(session_.engine_id()));
 }
 
@@ -203,7 +223,7 @@ void EntryPage::show_head()
         ui_->offset_field->setText(time.offset);
     }
     for (QLineEdit* field : {ui_->date_field, ui_->clock_field, ui_->offset_field})
-        field->setReadOnly(!writing);
+        field->setReadOnly(!writing && !correcting);
     ui_->state_label->setText(writing ? session_.sheet().reading().id.empty() ? tr("not begun") : tr("draft")
                               : correcting ? tr("closed")
                                            : tr("for reading only"));
@@ -238,40 +258,6 @@ void EntryPage::show_box()
         ui_->ear->show_nothing();
 }
 
-void EntryPage::show_notes()
-{
-    std::vector<NoteLines::Line> lines;
-    const auto problem_line = [&](const std::optional<Problem>& problem) {
-        if (problem)
-            lines.push_back({to_qstring(problem->text()), true, {}});
-    };
-    problem_line(session_.problem());
-    problem_line(time_problem_);
-    problem_line(close_problem_);
-    if (paste_plan_) {
-        NoteLines::Line line{refusal_text(*paste_plan_), true, {}};
-        if (!paste_plan_->values.empty())
-            line.actions.push_back({tr("Paste the %1 that can be read").arg(paste_plan_->values.size()),
-                                    [this] { take_paste_that_can_be_read(); }});
-        line.actions.push_back({tr("Leave it"), [this] {
-                                    paste_plan_.reset();
-                                    show_notes();
-                                }});
-        lines.push_back(std::move(line));
-    }
-    for (const SheetNote& note : opinions_.notes()) {
-        NoteLines::Line line{note.sentence, note.impossible, {}};
-        if (!note.boxes.empty())
-            line.actions.push_back({tr("Go there"), [this, box = note.boxes.front()] {
-                                        ui_->grid->go_to(box);
-                                        ui_->grid->setFocus();
-                                    }});
-        lines.push_back(std::move(line));
-    }
-    ui_->notes->show_lines(lines);
-    ui_->notes_area->setVisible(!lines.empty());
-}
-
 const EntryOpinions& EntryPage::judge_now()
 {
     judge_soon_.stop();
@@ -285,6 +271,7 @@ const EntryOpinions& EntryPage::judge_now()
         show_previous();
         if (!ui_->grid->is_editing())
             show_box();
+        show_newest();
         ui_->ear->show_whole(session_.sheet(), opinions_);
         show_notes();
     }
@@ -312,6 +299,9 @@ void EntryPage::show_previous()
 
 QString EntryPage::foot_text() const
 {
+    if (takes_letters())
+        return tr("Alt and a page's letter leaves this page · shaded: usual for this engine at this load · line: "
+                  "expected · ring: last time");
     return tr("shaded: usual for this engine at this load · line: expected · ring: last time");
 }
 
@@ -319,6 +309,8 @@ QString EntryPage::draft_text() const
 {
     if (session_.state() == EntrySession::State::correcting && session_.waits())
         return tr("correction waits");
+    if (session_.problem() && session_.waits())
+        return tr("not saved");
     if (!session_.saved_at().isValid())
         return {};
     return session_.state() == EntrySession::State::writing
@@ -334,16 +326,16 @@ bool EntryPage::takes_letters() const
 
 QWidget* EntryPage::first_focus()
 {
-    return ui_->stack->currentWidget() == ui_->sheet_page ? static_cast<QWidget*>(ui_->grid) : this;
+    if (ui_->stack->currentWidget() == ui_->closed_page)
+        return ui_->closed_page->first_focus();
+    if (ui_->stack->currentWidget() != ui_->sheet_page)
+        return this;
+    return ui_->grid->isEnabled() ? static_cast<QWidget*>(ui_->grid) : ui_->readings_button;
 }
 
 bool EntryPage::may_leave()
 {
-    const bool read = ui_->grid->finish_editing();
-    if (!read || !model_.unreadable().empty()) {
-        go_to_unreadable();
-        return false;
-    }
+    ui_->grid->finish_editing(); // a text that cannot be read waits in its box
     if (session_.state() == EntrySession::State::nothing ||
         session_.state() == EntrySession::State::read_only)
         return true;
@@ -358,8 +350,7 @@ void EntryPage::go_to_unreadable()
     if (model_.unreadable().empty())
         return;
     const auto& [box, text] = *model_.unreadable().begin();
-    if (!ui_->grid->is_editing())
-        ui_->grid->go_to(box);
+    ui_->grid->go_to(box);
     close_problem_ = invalid_input(
         to_std(tr("%1 holds “%2”, which cannot be read and is not kept.").arg(model_.box_name(box), text)),
         to_std(tr("Put it right, or empty the box with Delete.")));

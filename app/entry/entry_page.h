@@ -6,8 +6,11 @@
 #include "app/entry/entry_opinions.h"
 #include "app/entry/entry_session.h"
 #include "app/entry/log_sheet_model.h"
+#include "app/entry/note_lines.h"
+#include "app/entry/open_matters.h"
 #include "app/entry/walk.h"
 
+#include <QStringList>
 #include <QTimer>
 
 #include <memory>
@@ -22,7 +25,6 @@ namespace evenstroke {
 
 class LogSheetView;
 class Ear;
-class NoteLines;
 
 /// Where a reading is written down: the log sheet in walking order with the ear beside it.
 class EntryPage : public Page
@@ -55,11 +57,15 @@ public:
     const EntryOpinions& judge_now();
 
     void correct(const QString& reading_id);
+    /// Stops once for what is open and lists it; told again, what is kept is kept as confirmed.
     void close_reading();
+    /// The newest doubt that has no answer yet, else the next one behind the box in hand.
+    void go_to_doubt();
+    void go_to_date();
     void take_suggestion();
     void confirm_boxes();
     void take_paste_that_can_be_read();
-    void copy_all() const;
+    void copy_all();
     void set_walk_order(WalkOrder order);
     bool save_blank_sheet(const QString& path);
     void set_time(const QString& date, const QString& clock, const QString& offset);
@@ -85,6 +91,18 @@ private:
     void ask_blank_sheet(QMenu& menu);
     void recall_walk_order();
     void go_to_unreadable();
+    void connect_keys();
+    void leave_sheet(bool forward);
+    void show_newest();
+    std::optional<LogBox> newest_doubt() const;
+    void go_to_matter(const OpenMatter& matter);
+    bool may_close();
+    void keep_doubts();
+    void add_paste_line(std::vector<NoteLines::Line>& lines);
+    void add_closing_line(std::vector<NoteLines::Line>& lines);
+    void add_matter_lines(std::vector<NoteLines::Line>& lines);
+    void withdraw_reading();
+    void say(const QString& notice);
 
     std::unique_ptr<Ui::EntryPage> ui_;
     EntrySession session_;
@@ -93,6 +111,10 @@ private:
     QTimer judge_soon_;
     std::optional<PastePlan> paste_plan_;
     std::optional<Problem> time_problem_, close_problem_;
+    std::vector<OpenMatter> asked_at_closing_; ///< empty: closing was not asked for, or nothing was open
+    QStringList kept_doubtful_;                ///< what the last closing kept although it was doubted
+    std::vector<LogBox> typed_lately_;         ///< newest last
+    QString notice_;                           ///< what was just done, until the next change
     QString shown_history_;
 };
 

@@ -12,6 +12,7 @@
 #include "ui_entry_page.h"
 
 #include <QClipboard>
+#include <QDir>
 #include <QFileDialog>
 #include <QGuiApplication>
 #include <QLocale>
@@ -34,29 +35,17 @@ void EntryPage::correct(const QString& reading_id)
     session_.correct(reading_id);
     ui_->why_field->clear();
     emit sentence_changed();
-    ui_->why_field->setFocus();
-}
-
-void EntryPage::close_reading()
-{
-    if (!ui_->grid->finish_editing() || !model_.unreadable().empty()) {
-        go_to_unreadable();
-        return;
-    }
-    close_problem_ = session_.close();
-    if (close_problem_)
-        show_notes();
-    else
-        show_state();
+    (ui_->who_field->text().trimmed().isEmpty() ? ui_->who_field : ui_->why_field)->setFocus();
 }
 
 void EntryPage::take_suggestion()
 {
     const auto box = ui_->grid->current_box();
-    const Value* value = box ? session_.sheet().value(*box) : nullptr;
-    if (!value || ui_->ear->suggestion().isEmpty())
+    if (!box || ui_->ear->suggestion().isEmpty())
         return;
-    const auto read = read_box(*box, to_std(ui_->ear->suggestion()), {value->unit, value->kind});
+    const Value* value = session_.sheet().value(*box);
+    const WrittenUnit written = value ? WrittenUnit{value->unit, value->kind} : session_.sheet().row_unit(box->quantity);
+    const auto read = read_box(*box, to_std(ui_->ear->suggestion()), written);
     if (read)
         model_.put(read.value(), tr("take %1 for %2").arg(ui_->ear->suggestion(), model_.box_name(*box)));
     judge_now();
@@ -98,10 +87,11 @@ void EntryPage::take_paste_that_can_be_read()
     judge_now();
 }
 
-void EntryPage::copy_all() const
+void EntryPage::copy_all()
 {
     QGuiApplication::clipboard()->setText(
         whole_block(session_.sheet(), QLocale::system().decimalPoint().at(0)));
+    say(tr("The whole reading is copied. It can be pasted into a spreadsheet, or into an empty sheet here."));
 }
 
 void EntryPage::copy()
@@ -171,6 +161,8 @@ void EntryPage::fill_readings_menu(QMenu& menu)
             close_problem_ = session_.discard();
             show_notes();
         });
+    if (session_.state() == EntrySession::State::correcting)
+        menu.addAction(tr("Withdraw this reading, with the reason given above"), this, &EntryPage::withdraw_reading);
     menu.addSeparator();
     const auto closed = session_.closed_readings(closed_offered);
     for (const storage::ReadingEntry& entry : closed)
@@ -274,7 +266,11 @@ void EntryPage::ask_blank_sheet(QMenu& menu)
     menu.addAction(tr("Save it as PDF…"), this, [this] {
         const QString path = QFileDialog::getSaveFileName(this, tr("Save the blank sheet"),
                                                           tr("log sheet.pdf"), tr("PDF (*.pdf)"));
-        if (!path.isEmpty() && !save_blank_sheet(path)) {
+        if (path.isEmpty())
+            return;
+        if (save_blank_sheet(path)) {
+            say(tr("The blank sheet is saved as %1.").arg(QDir::toNativeSeparators(path)));
+        } else {
             close_problem_ =
                 invalid_input(to_std(tr("The sheet could not be written to %1.").arg(path)),
                               to_std(tr("Choose another folder, or look whether the disk is full.")));

@@ -32,6 +32,32 @@ std::optional<EngineLayout> read_layout(const std::optional<std::string>& text)
     return EngineLayout{std::clamp(parts[0].toInt(), 0, 8), std::clamp(parts[1].toInt(), 0, 8)};
 }
 
+/// The name under which is remembered which reading was the last when a row's unit was chosen.
+std::string unit_since(QuantityId id)
+{
+    return "entry.unit_since." + quantity(id).name;
+}
+
+/// The unit in which most boxes of a row were written the last time any was.
+std::map<QuantityId, WrittenUnit> units_of_last(std::span<const Reading> readings)
+{
+    std::map<QuantityId, WrittenUnit> units;
+    for (auto reading = readings.rbegin(); reading != readings.rend(); ++reading) {
+        std::map<QuantityId, std::map<std::pair<UnitId, PressureKind>, int>> counted;
+        for (const Value& value : reading->values)
+            if (value.number && quantity(value.quantity).type == ValueType::number &&
+                units.count(value.quantity) == 0)
+                ++counted[value.quantity][{value.unit, value.kind}];
+        for (const auto& [id, written] : counted) {
+            const auto most = std::max_element(
+                written.begin(), written.end(),
+                [](const auto& a, const auto& b) { return a.second < b.second; });
+            units[id] = {most->first.first, most->first.second};
+        }
+    }
+    return units;
+}
+
 EngineLayout widest(EngineLayout a, EngineLayout b)
 {
     return {std::max(a.turbochargers, b.turbochargers), std::max(a.coolers, b.coolers)};
@@ -114,13 +140,20 @@ bool EntrySession::open_engine()
     engine_start_.engine = engine.value().engine;
     engine_start_.used = quantities_used(readings.value());
     engine_start_.layout = find_layout(readings.value());
+    engine_start_.units = units_of_last(readings.value());
+    const std::string last = readings.value().empty() ? std::string() : readings.value().back().id;
     const storage::PreferenceStore preferences(*workplace_.history());
     if (const auto layout = preferences.choice(to_std(engine_id_), layout_choice))
         if (const auto chosen = read_layout(layout.value()))
             engine_start_.layout = widest(engine_start_.layout, *chosen);
     if (const auto units = preferences.units(to_std(engine_id_)))
-        for (const auto& [quantity, chosen] : units.value())
-            engine_start_.units[quantity] = {chosen.unit, chosen.kind};
+        for (const auto& [id, chosen] : units.value()) {
+            // A choice holds until a later reading was written in another unit.
+            const auto since = preferences.choice(to_std(engine_id_), unit_since(id));
+            const bool newer = !since || !since.value() || *since.value() == last;
+            if (newer || engine_start_.units.count(id) == 0)
+                engine_start_.units[id] = {chosen.unit, chosen.kind};
+        }
     return true;
 }
 
@@ -163,6 +196,8 @@ void EntrySession::load(Reading reading, State state)
     undo_.clear();
     waiting_reading_.clear();
     waiting_ship_.clear();
+    waiting_time_ = false;
+    saved_at_ = {}; // nothing of this one was written yet
     SheetStart start = engine_start_;
     start.layout = widest(start.layout, find_layout(std::span(&reading, 1)));
     start.ship = find_ship_values(reading.taken_at, start.ship_open);
@@ -235,9 +270,16 @@ std::vector<storage::ReadingEntry> EntrySession::closed_readings(std::size_t at_
 void EntrySession::set_taken_at(StampedTime time)
 {
     const Reading& reading = sheet_.reading();
-    if (state_ != State::writing ||
+    if ((state_ != State::writing && state_ != State::correcting) ||
         (time.utc == reading.taken_at.utc && time.offset_minutes == reading.taken_at.offset_minutes))
         return;
+    if (state_ == State::correcting) {
+        waiting_time_ = time.utc != stored_.taken_at.utc || time.offset_minutes != stored_.taken_at.offset_minutes;
+        sheet_.set_head(reading.id, reading.name, time);
+        write_soon_.start();
+        emit changed();
+        return;
+    }
     std::string name = reading.name;
     if (!reading.id.empty()) {
         name = free_name(store().list(Owner::engine(to_std(engine_id_))), time, reading.id);
@@ -283,8 +325,13 @@ void EntrySession::set_row_unit(QuantityId quantity, WrittenUnit unit)
     storage::PreferenceStore preferences(*workplace_.history());
     const auto kept =
         preferences.set_unit(to_std(engine_id_), quantity, storage::ChosenUnit{unit.id, unit.kind});
+    const auto last = closed_readings(1);
+    const auto dated = preferences.set_choice(to_std(engine_id_), unit_since(quantity),
+                                              last.empty() ? std::string() : last.front().id);
     if (!kept)
         failed(kept.error());
+    else if (!dated)
+        failed(dated.error());
 }
 
 void EntrySession::set_layout(EngineLayout layout)

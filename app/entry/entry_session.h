@@ -55,6 +55,7 @@ public:
     std::vector<storage::ReadingEntry> closed_readings(std::size_t at_most) const;
 
     const StampedTime& taken_at() const { return sheet_.reading().taken_at; }
+    /// Of a draft at once; of a closed reading as a correction, when name and reason are given.
     void set_taken_at(StampedTime time);
     void set_row_unit(QuantityId quantity, WrittenUnit unit);
     void set_layout(EngineLayout layout);
@@ -64,7 +65,7 @@ public:
 
     /// Writes what waits. False: something stood in the way (`problem`), or corrections wait for a reason.
     bool flush();
-    bool waits() const { return !waiting_reading_.empty() || !waiting_ship_.empty(); }
+    bool waits() const { return !waiting_reading_.empty() || !waiting_ship_.empty() || waiting_time_; }
     /// When something was last written; none before.
     const QDateTime& saved_at() const { return saved_at_; }
     const std::optional<Problem>& problem() const { return problem_; }
@@ -73,6 +74,8 @@ public:
     std::optional<Problem> close();
     /// Throws the draft away; what was typed stays in the audit trail only.
     std::optional<Problem> discard();
+    /// Takes the closed reading that is being corrected out of use; it stays in the history with the reason.
+    std::optional<Problem> withdraw();
 
 signals:
     void changed();  ///< state, time, saved or problem
@@ -88,6 +91,7 @@ private:
     bool make_drafts();
     bool write_drafts();
     bool write_corrections();
+    bool write_correction(const LogBox& box);
     storage::Signature signed_by() const;
     bool failed(const Problem& problem);
 
@@ -101,6 +105,7 @@ private:
     TimePoint ship_taken_at_{};
     Reading stored_; ///< a closed reading as it stands in the history
     std::set<LogBox> waiting_reading_, waiting_ship_;
+    bool waiting_time_ = false; ///< a closed reading's time was corrected
     storage::Signature signature_;
     QTimer write_soon_;
     QDateTime saved_at_;

@@ -119,23 +119,16 @@ bool EntrySession::write_corrections()
             invalid_input(to_std(tr("The correction is not kept yet: it needs a name and a reason.")),
                           to_std(tr("Write both above the sheet, or take the change back with Ctrl+Z."))));
     const std::string id = sheet_.reading().id;
+    if (waiting_time_) {
+        const auto redated = store().correct_time(id, sheet_.reading().taken_at, signature_);
+        if (!redated)
+            return failed(redated.error());
+        waiting_time_ = false;
+    }
     while (!waiting_reading_.empty()) {
         const LogBox box = *waiting_reading_.begin();
-        const Value now = value_or_empty(sheet_.reading().values, box),
-                    before = value_or_empty(stored_.values, box);
-        Value with_old_answer = now;
-        with_old_answer.confirmed = before.confirmed;
-        if (!same_value(with_old_answer, before)) {
-            const auto corrected = store().correct(id, now, signature_);
-            if (!corrected)
-                return failed(corrected.error());
-        }
-        if (now.confirmed != before.confirmed) {
-            const auto confirmed =
-                store().set_confirmed(id, {box.quantity, box.place, box.phase}, now.confirmed, signature_);
-            if (!confirmed)
-                return failed(confirmed.error());
-        }
+        if (!write_correction(box))
+            return false;
         waiting_reading_.erase(box);
     }
     const auto reading = store().reading(id);
@@ -143,6 +136,39 @@ bool EntrySession::write_corrections()
         stored_ = reading.value();
     workplace_.changed();
     return true;
+}
+
+bool EntrySession::write_correction(const LogBox& box)
+{
+    const std::string id = sheet_.reading().id;
+    const Value now = value_or_empty(sheet_.reading().values, box),
+                before = value_or_empty(stored_.values, box);
+    Value with_old_answer = now;
+    with_old_answer.confirmed = before.confirmed;
+    if (!same_value(with_old_answer, before)) {
+        const auto corrected = store().correct(id, now, signature_);
+        if (!corrected)
+            return failed(corrected.error());
+    }
+    if (now.confirmed == before.confirmed)
+        return true;
+    const auto confirmed =
+        store().set_confirmed(id, {box.quantity, box.place, box.phase}, now.confirmed, signature_);
+    return confirmed ? true : failed(confirmed.error());
+}
+
+std::optional<Problem> EntrySession::withdraw()
+{
+    if (signature_.who.empty() || signature_.why.empty())
+        return invalid_input(to_std(tr("The reading is not withdrawn: that needs a name and a reason.")),
+                             to_std(tr("Write both above the sheet, then withdraw it.")));
+    waiting_reading_.clear();
+    waiting_time_ = false;
+    if (const auto gone = store().withdraw(sheet_.reading().id, signature_); !gone)
+        return gone.error();
+    workplace_.changed();
+    begin_new();
+    return std::nullopt;
 }
 
 std::optional<Problem> EntrySession::close()

@@ -8,16 +8,21 @@
 
 namespace evenstroke {
 
+namespace {
+
+/// Which reading stands on the sheet, also before it has a place in the history.
+std::string reading_key(const EntrySheet& sheet)
+{
+    return sheet.engine().id + '/' + sheet.engine().name + '/' + sheet.reading().id;
+}
+
+} // namespace
+
 LogSheetModel::LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* parent)
     : QAbstractTableModel(parent), sheet_(sheet), undo_(undo)
 {
-    connect(&sheet_, &EntrySheet::restarted, this, [this] {
-        marks_.clear();
-        previous_.clear();
-        unreadable_.clear();
-        refusal_.reset();
-        rebuild();
-    });
+    connect(&sheet_, &EntrySheet::restarted, this, &LogSheetModel::restart);
+    connect(&sheet_, &EntrySheet::head_changed, this, [this] { shown_reading_ = reading_key(sheet_); });
     connect(&sheet_, &EntrySheet::value_put, this, [this](const LogBox& put_box) { tell_box(put_box); });
     connect(&sheet_, &EntrySheet::ship_changed, this, &LogSheetModel::rebuild);
     connect(&sheet_, &EntrySheet::row_unit_changed, this, [this] {
@@ -26,6 +31,36 @@ LogSheetModel::LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* paren
         emit headerDataChanged(Qt::Vertical, 0, std::max(0, rowCount() - 1));
     });
     rebuild();
+}
+
+/// Another reading is on the sheet. Texts that could not be read wait with their own reading.
+void LogSheetModel::restart()
+{
+    if (!unreadable_.empty())
+        put_aside_[shown_reading_] = std::move(unreadable_);
+    unreadable_.clear();
+    shown_reading_ = reading_key(sheet_);
+    if (const auto waiting = put_aside_.find(shown_reading_); waiting != put_aside_.end()) {
+        unreadable_ = std::move(waiting->second);
+        put_aside_.erase(waiting);
+    }
+    marks_.clear();
+    previous_.clear();
+    rebuild();
+}
+
+void LogSheetModel::unfold_filled()
+{
+    rebuild();
+}
+
+std::optional<Problem> LogSheetModel::refusal(const LogBox& where) const
+{
+    const auto waiting = unreadable_.find(where);
+    if (waiting == unreadable_.end())
+        return std::nullopt;
+    const auto read = read_box(where, to_std(waiting->second), sheet_.row_unit(where.quantity));
+    return read ? std::nullopt : std::optional<Problem>(read.error());
 }
 
 void LogSheetModel::rebuild()
@@ -304,12 +339,10 @@ bool LogSheetModel::setData(const QModelIndex& at, const QVariant& text, int rol
     const auto read = read_box(*typed, to_std(wanted), sheet_.row_unit(typed->quantity));
     if (!read) {
         unreadable_[*typed] = wanted;
-        refusal_ = read.error();
         tell_box(*typed);
         emit refused(at);
         return false;
     }
-    refusal_.reset();
     if (unreadable_.erase(*typed) > 0)
         tell_box(*typed);
     put(read.value(),
@@ -321,7 +354,6 @@ void LogSheetModel::forget_unreadable(const LogBox& where)
 {
     if (unreadable_.erase(where) > 0)
         tell_box(where);
-    refusal_.reset();
 }
 
 void LogSheetModel::put(const Value& value, const QString& what)

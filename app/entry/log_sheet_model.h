@@ -68,7 +68,10 @@ public:
     /// Texts that could not be read and wait to be put right.
     const std::map<LogBox, QString>& unreadable() const { return unreadable_; }
     void forget_unreadable(const LogBox& box);
-    const std::optional<Problem>& refusal() const { return refusal_; }
+    /// Why the text that waits in a box cannot be read; none where none waits.
+    std::optional<Problem> refusal(const LogBox& box) const;
+    /// Rows that were folded away and hold something now come up.
+    void unfold_filled();
 
     /// Pushes one undoable step for a box; nothing where it would change nothing.
     void put(const Value& value, const QString& what);
@@ -86,6 +89,7 @@ private:
     void rebuild();
     bool unfolded(const LogRow& row) const;
     void tell_box(const LogBox& box);
+    void restart();
     BoxMark mark_of(const LogBox& box, const Value* value) const;
     QVariant heading_data(const QModelIndex& index, int role) const;
     QVariant beside_data(const QModelIndex& index, int role) const;
@@ -100,7 +104,8 @@ private:
     std::map<LogBox, BoxMark> marks_;
     std::map<QuantityId, QString> previous_;
     std::map<LogBox, QString> unreadable_;
-    std::optional<Problem> refusal_;
+    std::map<std::string, std::map<LogBox, QString>> put_aside_; ///< of the readings not shown just now
+    std::string shown_reading_;
 };
 
 } // namespace evenstroke

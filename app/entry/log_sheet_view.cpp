@@ -7,7 +7,6 @@
 #include <QClipboard>
 #include <QGuiApplication>
 #include <QHeaderView>
-#include <QKeyEvent>
 #include <QLocale>
 
 #include <algorithm>
@@ -16,6 +15,14 @@ namespace evenstroke {
 namespace {
 
 constexpr int narrowest_column = 56, widest_column = 92;
+
+/// The heading above a section's first row comes into sight with it.
+void show_with_heading(LogSheetView& view, const LogSheetModel& model, const QModelIndex& index)
+{
+    if (index.row() > 0 && !model.row(index.row() - 1))
+        view.scrollTo(model.index(index.row() - 1, index.column()));
+    view.scrollTo(index);
+}
 
 } // namespace
 
@@ -81,8 +88,9 @@ void LogSheetView::resizeEvent(QResizeEvent* event)
     lay_out_columns();
     // Sentences that appear below take room; the box in hand stays in sight.
     if (currentIndex().isValid())
-        scrollTo(currentIndex());
+        show_with_heading(*this, *model_, currentIndex());
 }
+
 
 std::optional<LogBox> LogSheetView::current_box() const
 {
@@ -94,10 +102,7 @@ void LogSheetView::go_to(const QModelIndex& index)
     if (!index.isValid())
         return;
     setCurrentIndex(index);
-    // The heading above a section's first row comes into sight with it.
-    if (index.row() > 0 && !model_->row(index.row() - 1))
-        scrollTo(model_->index(index.row() - 1, index.column()));
-    scrollTo(index);
+    show_with_heading(*this, *model_, index);
 }
 
 void LogSheetView::go_to(const LogBox& box)
@@ -170,18 +175,18 @@ bool LogSheetView::finish_editing()
         return true;
     const bool reason_kept =
         editor_->text().isEmpty() && editor_->index.data(LogSheetModel::missing_role).toBool();
-    if (!reason_kept && !model_->setData(editor_->index, editor_->text())) {
-        editor_->setFocus();
-        return false;
-    }
+    const bool read = reason_kept || model_->setData(editor_->index, editor_->text());
     close_editor();
-    return true;
+    return read;
 }
 
 void LogSheetView::leave_editor(int key, Qt::KeyboardModifiers modifiers)
 {
-    if (!finish_editing())
+    finish_editing();
+    if ((modifiers & Qt::ControlModifier) && (key == Qt::Key_PageUp || key == Qt::Key_PageDown)) {
+        go_to_section(key == Qt::Key_PageDown);
         return;
+    }
     if (walk_key(key, modifiers))
         return;
     const CursorAction action = key == Qt::Key_Up       ? MoveUp
@@ -200,109 +205,6 @@ void LogSheetView::begin_edit(const QString& first)
     edit(currentIndex());
     if (editor_ && !first.isEmpty())
         editor_->begin_typing(first);
-}
-
-// ---------------------------------------------------------------------------------------------- keys
-
-bool LogSheetView::event(QEvent* event)
-{
-    if (event->type() == QEvent::KeyPress) {
-        auto* key = static_cast<QKeyEvent*>(event);
-        if ((key->key() == Qt::Key_Tab || key->key() == Qt::Key_Backtab) &&
-            !(key->modifiers() & Qt::ControlModifier)) {
-            keyPressEvent(key);
-            return true;
-        }
-    }
-    return QTableView::event(event);
-}
-
-bool LogSheetView::walk_key(int key, Qt::KeyboardModifiers modifiers)
-{
-    const bool enter = key == Qt::Key_Return || key == Qt::Key_Enter;
-    const bool tab = key == Qt::Key_Tab || key == Qt::Key_Backtab;
-    if (!enter && !tab)
-        return false;
-    const bool back = key == Qt::Key_Backtab || (modifiers & Qt::ShiftModifier);
-    go_to(next_box(*model_, currentIndex(), order_, tab, !back));
-    return true;
-}
-
-bool LogSheetView::sheet_key(QKeyEvent* event)
-{
-    if (event->matches(QKeySequence::Copy))
-        copy();
-    else if (event->matches(QKeySequence::Cut))
-        cut();
-    else if (event->matches(QKeySequence::Paste))
-        paste();
-    else if (event->matches(QKeySequence::Undo))
-        model_->undo_stack().undo();
-    else if (event->matches(QKeySequence::Redo) ||
-             (event->key() == Qt::Key_Y && event->modifiers() == Qt::ControlModifier))
-        model_->undo_stack().redo();
-    else if (event->key() == Qt::Key_PageDown && event->modifiers() == Qt::ControlModifier)
-        go_to(next_section(*model_, currentIndex(), true));
-    else if (event->key() == Qt::Key_PageUp && event->modifiers() == Qt::ControlModifier)
-        go_to(next_section(*model_, currentIndex(), false));
-    else if (event->key() == Qt::Key_U && event->modifiers() == Qt::ControlModifier)
-        emit unit_wanted(currentIndex().row());
-    else
-        return false;
-    return true;
-}
-
-/// A key for the whole box came up from the editor: a reason replaces what is being typed, others take it
-/// first.
-bool LogSheetView::leave_for_key(int key)
-{
-    if (key == Qt::Key_F5 || key == Qt::Key_F7 || key == Qt::Key_F9) {
-        if (const auto box = model_->box(editor_->index))
-            model_->forget_unreadable(*box);
-        close_editor();
-        return true;
-    }
-    return finish_editing();
-}
-
-void LogSheetView::keyPressEvent(QKeyEvent* event)
-{
-    if (!model_ || sheet_key(event) || walk_key(event->key(), event->modifiers()))
-        return;
-    if (is_editing() && !leave_for_key(event->key()))
-        return;
-    switch (event->key()) {
-    case Qt::Key_F2:
-        begin_edit({});
-        return;
-    case Qt::Key_F3:
-        emit suggestion_wanted();
-        return;
-    case Qt::Key_F4:
-        emit confirm_wanted();
-        return;
-    case Qt::Key_F5:
-        set_reason(MissingReason::not_read);
-        return;
-    case Qt::Key_F7:
-        set_reason(MissingReason::not_fitted);
-        return;
-    case Qt::Key_F9:
-        set_reason(MissingReason::out_of_order);
-        return;
-    case Qt::Key_Delete:
-    case Qt::Key_Backspace:
-        clear_boxes();
-        return;
-    default:
-        break;
-    }
-    const bool plain = !(event->modifiers() & (Qt::ControlModifier | Qt::AltModifier | Qt::MetaModifier));
-    if (plain && !event->text().isEmpty() && event->text().at(0).isPrint()) {
-        begin_edit(event->text());
-        return;
-    }
-    QTableView::keyPressEvent(event);
 }
 
 // ------------------------------------------------------------------------------------ blocks of boxes

@@ -32,7 +32,8 @@ public:
     void go_to(const QModelIndex& index);
     void go_to(const LogBox& box);
 
-    /// Takes what is being typed, if anything is. False: it cannot be read; it stays in its box, marked.
+    /// Takes what is being typed, if anything is. False: it cannot be read; the text stands in its box, marked,
+    /// and waits there to be put right.
     bool finish_editing();
     bool is_editing() const;
 
@@ -53,6 +54,7 @@ signals:
     void suggestion_wanted(); ///< F3
     void confirm_wanted();    ///< F4
     void unreadable(const QModelIndex& index);
+    void left_sheet(bool forward); ///< Tab behind the last box, Shift+Tab before the first
 
 protected:
     void keyPressEvent(QKeyEvent* event) override;
@@ -60,6 +62,7 @@ protected:
     QModelIndex moveCursor(CursorAction action, Qt::KeyboardModifiers modifiers) override;
     void currentChanged(const QModelIndex& current, const QModelIndex& previous) override;
     void resizeEvent(QResizeEvent* event) override;
+    void inputMethodEvent(QInputMethodEvent* event) override;
 
 private:
     void lay_out();
@@ -71,6 +74,9 @@ private:
     bool walk_key(int key, Qt::KeyboardModifiers modifiers);
     bool sheet_key(QKeyEvent* event);
     void begin_edit(const QString& first);
+    void take_back(bool again);
+    void go_to_section(bool forward);
+    void go_to_end(bool first);
     QModelIndexList selected_boxes() const;
 
     LogSheetModel* model_ = nullptr;

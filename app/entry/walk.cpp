@@ -34,6 +34,15 @@ QModelIndexList walk_of(const LogSheetModel& model, WalkOrder order)
     return boxes + after_the_walk;
 }
 
+QModelIndex first_after_the_walk(const LogSheetModel& model)
+{
+    for (int row = 0; row < model.rowCount(); ++row)
+        for (int column = 0; column < model.columnCount(); ++column)
+            if (const auto box = model.box(model.index(row, column)); box && box->phase == Phase::after)
+                return model.index(row, column);
+    return {};
+}
+
 } // namespace
 
 QModelIndex next_box(const LogSheetModel& model, const QModelIndex& from, WalkOrder order, bool across,
@@ -49,7 +58,7 @@ QModelIndex next_box(const LogSheetModel& model, const QModelIndex& from, WalkOr
              row += forward ? 1 : -1)
             if (const LogRow* in_row = model.row(row))
                 return model.index(row, std::min(from.column(), static_cast<int>(in_row->boxes.size()) - 1));
-        return {};
+        return forward ? first_after_the_walk(model) : QModelIndex();
     }
     const QModelIndexList walk = walk_of(model, across ? other : order);
     const auto at = walk.indexOf(from) + (forward ? 1 : -1);

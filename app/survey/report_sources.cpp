@@ -10,6 +10,8 @@
 #include <QCryptographicHash>
 
 #include <algorithm>
+#include <map>
+#include <optional>
 
 namespace evenstroke {
 namespace {
@@ -34,6 +36,49 @@ CorrectionLine correction_line(const Engine& engine, const storage::Correction& 
         if (reading.id == correction.reading_id)
             line.what = reading.name + ": " + line.what;
     return line;
+}
+
+/// A reading as a whole was given another time, withdrawn or brought back: only the trail has that.
+std::optional<CorrectionLine> whole_reading_line(const storage::AuditEntry& entry, const std::string& name)
+{
+    const std::string time_of = "time of " + name + ": ", arrow = " -> ";
+    if (entry.action == "withdrawn" || entry.action == "brought back")
+        return CorrectionLine{entry.at, entry.who, name + ": the whole reading",
+                              entry.action == "withdrawn" ? "in use" : "withdrawn",
+                              entry.action == "withdrawn" ? "withdrawn" : "in use", entry.why};
+    if (entry.action != "corrected" || entry.detail.rfind(time_of, 0) != 0)
+        return std::nullopt;
+    const std::size_t at = entry.detail.find(arrow);
+    if (at == std::string::npos)
+        return std::nullopt;
+    return CorrectionLine{entry.at,
+                          entry.who,
+                          name + ": time of the reading",
+                          entry.detail.substr(time_of.size(), at - time_of.size()),
+                          entry.detail.substr(at + arrow.size()),
+                          entry.why};
+}
+
+/// Adds what happened to whole readings among the corrections, in order of time.
+storage::Done add_whole_readings(storage::History& history, const storage::Owner& owner, std::vector<CorrectionLine>& lines)
+{
+    constexpr int whole_trail = 1'000'000;
+    const auto readings = storage::ReadingStore(history).list(owner);
+    if (!readings)
+        return readings.error();
+    const auto trail = storage::audit_entries(history, {}, whole_trail);
+    if (!trail)
+        return trail.error();
+    std::map<std::string, std::string> names;
+    for (const storage::ReadingEntry& reading : readings.value())
+        names[reading.id] = reading.name;
+    for (const storage::AuditEntry& entry : trail.value())
+        if (const auto named = names.find(entry.subject_id); named != names.end())
+            if (auto line = whole_reading_line(entry, named->second))
+                lines.push_back(std::move(*line));
+    std::stable_sort(lines.begin(), lines.end(),
+                     [](const CorrectionLine& a, const CorrectionLine& b) { return a.when < b.when; });
+    return storage::done();
 }
 
 } // namespace
@@ -73,7 +118,9 @@ Result<ReportSources> load_report_sources(storage::History& history, const std::
         return corrections.error();
     for (const storage::Correction& correction : corrections.value())
         sources.details.corrections.push_back(correction_line(sources.record->engine, correction, *sources.record));
-    sources.details.revisions = corrections.value().size();
+    if (const auto added = add_whole_readings(history, owner, sources.details.corrections); !added)
+        return added.error();
+    sources.details.revisions = sources.details.corrections.size();
     const auto cards = storage::CardStore(history).list(engine_id);
     if (!cards.has_value())
         return cards.error();

@@ -84,7 +84,8 @@ void check_copied(const Numbers& numbers, const ReadingContext& context, std::ve
     const Reading& last = context.earlier.back();
     int common = 0, equal = 0;
     for (const Value& value : numbers.reading().values) {
-        if (value.phase != Phase::reading || !value.value_si)
+        // What the ship shares is carried over to every engine by the program itself.
+        if (value.phase != Phase::reading || !value.value_si || value.place.kind == Place::Kind::ship)
             continue;
         const Value* before = last.find(value.quantity, value.place);
         if (!before || !before->value_si)

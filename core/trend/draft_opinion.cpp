@@ -4,6 +4,7 @@
 #include "core/trend/drift_input.h"
 #include "core/trend/drift_results.h"
 #include "core/trend/flag_text.h"
+#include "core/trend/other_unit.h"
 
 #include <algorithm>
 #include <cmath>
@@ -95,6 +96,23 @@ std::optional<double> previous_value(const EngineRecord& record, const std::vect
     return std::nullopt;
 }
 
+/// A unit mixed up is said beside what else the number may mean.
+void judge_unit(ValueOpinion& one, const Value& value, std::optional<double> own)
+{
+    const auto reference = one.expected ? one.expected : one.previous;
+    if (!own || !reference || value.confirmed || value.phase != Phase::reading)
+        return;
+    const auto other =
+        guess_other_unit(value, *own, *reference, one.expected ? "expected is" : "last time it was");
+    if (!other)
+        return;
+    if (one.verdict != ValueOpinion::Verdict::impossible)
+        one.verdict = ValueOpinion::Verdict::doubtful;
+    one.sentence += (one.sentence.empty() ? "" : " ") + other->sentence;
+    if (!one.suggestion)
+        one.suggestion = other->suggestion;
+}
+
 } // namespace
 
 DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
@@ -143,6 +161,7 @@ DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
             one.suggestion = doubt.suggestion;
             one.sentence = doubt.sentence;
         }
+        judge_unit(one, value, own ? std::optional<double>(own->value) : std::nullopt);
         opinion.values.push_back(std::move(one));
     }
     const SteadinessVerdict steadiness = judge_steadiness(draft, !engine.two_stroke());

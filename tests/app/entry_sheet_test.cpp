@@ -167,11 +167,14 @@ TEST_F(SheetOnScreen, WhatCannotBeReadStaysInItsBoxWithTheReason)
     QSignalSpy refused(&model, &LogSheetModel::refused);
     type(QStringLiteral("7x5"));
     press(Qt::Key_Return);
-    EXPECT_TRUE(view.is_editing());
+    EXPECT_FALSE(view.is_editing());
     EXPECT_EQ(refused.count(), 1);
-    ASSERT_TRUE(model.refusal().has_value());
-    EXPECT_NE(model.refusal()->what_happened.find("x5"), std::string::npos);
-    EXPECT_EQ(here(), "load_percent 0");
+    ASSERT_TRUE(model.refusal(box("load_percent")).has_value());
+    EXPECT_NE(model.refusal(box("load_percent"))->what_happened.find("x5"), std::string::npos);
+    EXPECT_NE(here(), "load_percent 0") << "Enter goes on";
+    EXPECT_EQ(at("load_percent"), QStringLiteral("7x5"));
+    stand_on("load_percent");
+    press(Qt::Key_F2);
     press(Qt::Key_Escape);
     EXPECT_EQ(at("load_percent"), QString());
     EXPECT_TRUE(model.unreadable().empty());

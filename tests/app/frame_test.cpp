@@ -5,6 +5,7 @@
 #include "app/desk/frame.h"
 #include "app/desk/history_page.h"
 #include "app/desk/pages.h"
+#include "app/desk/rail.h"
 #include "app/desk/sample_files.h"
 #include "app/desk/workplace.h"
 #include "app/trends/trend_page.h"
@@ -148,6 +149,26 @@ TEST_F(Desk, LettersTurnThePagesAndTheSelectionGoesAlong)
     EXPECT_EQ(workplace_.page(), QStringLiteral("board"));
     key(Qt::Key_Right, Qt::AltModifier);
     EXPECT_EQ(workplace_.page(), QStringLiteral("trend"));
+}
+
+TEST_F(Desk, ReturnPressesTheButtonInHandAndF6AlwaysLandsOnSomethingInSight)
+{
+    open(QStringLiteral("sample.evenstroke"), QStringLiteral("enter"));
+    for (int press = 0; press < 7; ++press) {
+        key(Qt::Key_F6);
+        const QWidget* focus = QApplication::focusWidget();
+        ASSERT_NE(focus, nullptr);
+        EXPECT_TRUE(focus->isVisible() && focus->focusPolicy() != Qt::NoFocus) << focus->metaObject()->className();
+    }
+    RailButton* events = nullptr;
+    for (RailButton* button : frame_.findChildren<RailButton*>())
+        if (button->text() == QStringLiteral("Events"))
+            events = button;
+    ASSERT_NE(events, nullptr);
+    events->setFocus();
+    key(Qt::Key_Return);
+    QTest::qWait(20);
+    EXPECT_EQ(workplace_.page(), QStringLiteral("events"));
 }
 
 TEST_F(Desk, APartOfTheSentenceIsChosenByItsLetter)

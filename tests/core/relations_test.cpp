@@ -358,6 +358,24 @@ TEST(Relations, MoreThanHalfOfAllValuesAsLastTimeLooksCopied)
     EXPECT_NE(find(with({341, 352, 363, 344, 355, 301}), "copied_from_previous"), nullptr);
 }
 
+TEST(Relations, WhatTheShipLendsIsNotCounted)
+{
+    const auto shared = [](TimePoint taken, double exhaust) {
+        ReadingMaker maker(taken);
+        for (const char* name : {"barometric_pressure", "sea_water_temperature", "draught_forward",
+                                 "draught_aft", "speed_over_ground", "water_depth"})
+            maker.number(name, 12, Place{Place::Kind::ship, 0});
+        return maker.cylinders("exhaust_temperature", {exhaust, exhaust + 1, exhaust + 2, exhaust + 3, exhaust + 4, exhaust + 5})
+            .number("speed", 98)
+            .number("load_percent", 75)
+            .done();
+    };
+    const std::vector<Reading> earlier{shared(day(0), 341)};
+    EXPECT_EQ(find(check_relations(invented_engine(), shared(day(30), 351), {earlier, {}, {}}), "copied_from_previous"),
+              nullptr)
+        << "two of the engine's own eight are equal";
+}
+
 TEST(Relations, AnEmptyReadingSaysNothing)
 {
     EXPECT_TRUE(check(Reading{}).empty());

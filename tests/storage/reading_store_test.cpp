@@ -172,6 +172,20 @@ TEST_F(Readings, AreCorrectedOnlyWithANameAReasonAndAChange)
         << "a forgotten value was added";
 }
 
+TEST_F(Readings, TakeAnotherTimeOnlyWithAReasonAndKeepTheOldOneInTheTrail)
+{
+    const Reading reading = closed();
+    const StampedTime right{reading.taken_at.utc - std::chrono::hours(24), reading.taken_at.offset_minutes};
+    EXPECT_FALSE(store().correct_time(reading.id, right, {"A. Chief", ""}).has_value());
+    EXPECT_FALSE(store().correct_time(reading.id, reading.taken_at, chief_).has_value());
+    expect_done(store().correct_time(reading.id, right, chief_));
+    EXPECT_EQ(readings_of(*history_).front().taken_at.utc, right.utc);
+    const auto trail = value_of_result(audit_entries(*history_, reading.id));
+    EXPECT_EQ(trail.front().detail, "time of " + reading.name + ": " + utc_text(reading.taken_at.utc) + " -> " +
+                                        utc_text(right.utc));
+    EXPECT_TRUE(value_of_result(verify(*history_)).sound());
+}
+
 TEST_F(Readings, RememberThatAValueWasConfirmed)
 {
     const Reading reading = closed();
