@@ -2,8 +2,11 @@
 #include "app/settings/engine_fields.h"
 
 #include "app/desk/number_text.h"
+#include "core/reference/reference_conditions.h"
 
 #include <QCoreApplication>
+
+#include <cmath>
 
 namespace evenstroke {
 namespace {
@@ -68,9 +71,9 @@ EngineField length(const char* title, Length Engine::* member)
                   [member](State& state, double value) { state.engine.*member = millimetres(value); });
 }
 
-EngineField choice(const char* title, QStringList choices, std::function<int(const State&)> get, std::function<void(State&, int)> set)
+EngineField choice(const char* group, const char* title, QStringList choices, std::function<int(const State&)> get, std::function<void(State&, int)> set)
 {
-    return {tr_("Engine"), tr_(title), {}, [choices, get](const State& state) { return choices.value(get(state)); },
+    return {tr_(group), tr_(title), {}, [choices, get](const State& state) { return choices.value(get(state)); },
             [choices, set](State& state, const QString& text) -> std::optional<Problem> {
                 set(state, static_cast<int>(choices.indexOf(text)));
                 return std::nullopt;
@@ -148,7 +151,7 @@ void add_vessel(std::vector<EngineField>& fields)
 void add_engine(std::vector<EngineField>& fields)
 {
     fields.push_back(words("Engine", "Name of the engine", [](State& s) -> std::string& { return s.engine.name; }));
-    fields.push_back(choice("Working cycle", {tr_("two-stroke"), tr_("four-stroke")},
+    fields.push_back(choice("Engine", "Working cycle", {tr_("two-stroke"), tr_("four-stroke")},
                             [](const State& s) { return s.engine.two_stroke() ? 0 : 1; },
                             [](State& s, int index) { s.engine.kind = index == 1 ? EngineKind::four_stroke : EngineKind::two_stroke; }));
     fields.push_back(cylinder_count());
@@ -161,7 +164,7 @@ void add_engine(std::vector<EngineField>& fields)
                             [](State& s, double value) { s.engine.rated_power = kilowatts(value); }));
     fields.push_back(number("Engine", "Rated speed", "r/min", [](const State& s) { return s.engine.rated_speed.value() * 60.0; },
                             [](State& s, double value) { s.engine.rated_speed = per_minute(value); }));
-    fields.push_back(choice("Maximum pressure", {tr_("follows the load"), tr_("held by the control")},
+    fields.push_back(choice("Engine", "Maximum pressure", {tr_("follows the load"), tr_("held by the control")},
                             [](const State& s) { return s.engine.maximum_pressure_controlled ? 1 : 0; },
                             [](State& s, int index) { s.engine.maximum_pressure_controlled = index == 1; }));
     fields.push_back(optional_member("Engine", "Mechanical efficiency", "", &Engine::mechanical_efficiency));
@@ -170,16 +173,73 @@ void add_engine(std::vector<EngineField>& fields)
                            [](State& s, std::optional<double> value) {
                                s.engine.propeller_pitch = value ? std::optional<Length>(*value * si::metres) : std::nullopt;
                            }));
+    fields.push_back(optional_member("Engine", "Generator efficiency", "", &Engine::generator_efficiency));
+    fields.push_back(maybe("Engine", "Moving mass of one cylinder", "kg",
+                           [](const State& s) { return s.engine.moving_mass ? std::optional<double>(s.engine.moving_mass->value()) : std::nullopt; },
+                           [](State& s, std::optional<double> value) {
+                               s.engine.moving_mass = value ? std::optional<Mass>(*value * si::kilograms) : std::nullopt;
+                           }));
+    fields.push_back(choice("Engine", "Aspiration", {tr_("turbocharged, charge-air cooler"), tr_("turbocharged, no cooler"), tr_("naturally aspirated")},
+                            [](const State& s) { return static_cast<int>(s.engine.aspiration); },
+                            [](State& s, int index) { s.engine.aspiration = static_cast<AspirationClass>(index); }));
+}
+
+/// What the numbers are where no set of the program has them.
+QString own_conditions() { return tr_("the engine's own, as of its shop trial"); }
+
+bool same(const ReferenceConditions& a, const ReferenceConditions& b)
+{
+    const auto near = [](double x, double y) { return std::abs(x - y) < 1e-6; }; // typed numbers, back from SI
+    return near(a.inlet_air.value(), b.inlet_air.value()) && near(a.cooler_coolant.value(), b.cooler_coolant.value()) &&
+           near(in_bar(a.barometer), in_bar(b.barometer)) &&
+           (!a.relative_humidity || near(*a.relative_humidity, b.relative_humidity.value_or(-1.0)));
+}
+
+/// Fills the boxes below it with one of the known sets; the engine's own conditions are typed there.
+EngineField reference_set()
+{
+    QStringList choices;
+    for (const ReferenceSet& set : all_reference_sets())
+        choices.append(to_qstring(std::string(set.title)));
+    choices.append(own_conditions());
+    return {tr_("Reference conditions"), tr_("Conditions"), {},
+            [](const State& state) {
+                for (const ReferenceSet& set : all_reference_sets())
+                    if (same(state.engine.reference, set.conditions()))
+                        return to_qstring(std::string(set.title));
+                return own_conditions();
+            },
+            [](State& state, const QString& text) -> std::optional<Problem> {
+                for (const ReferenceSet& set : all_reference_sets())
+                    if (text == to_qstring(std::string(set.title)))
+                        state.engine.reference = set.conditions();
+                if (text == own_conditions())
+                    return invalid_input("The engine's own conditions are those that its shop trial was brought to.",
+                                         "Type them into the boxes below, with their source.");
+                return std::nullopt;
+            },
+            choices};
 }
 
 void add_reference(std::vector<EngineField>& fields)
 {
+    fields.push_back(reference_set());
     fields.push_back(number("Reference conditions", "Inlet air", "°C", [](const State& s) { return in_celsius(s.engine.reference.inlet_air); },
                             [](State& s, double value) { s.engine.reference.inlet_air = celsius(value); }));
     fields.push_back(number("Reference conditions", "Charge-air coolant", "°C", [](const State& s) { return in_celsius(s.engine.reference.cooler_coolant); },
                             [](State& s, double value) { s.engine.reference.cooler_coolant = celsius(value); }));
     fields.push_back(number("Reference conditions", "Barometer", "mbar", [](const State& s) { return in_bar(s.engine.reference.barometer) * 1000.0; },
                             [](State& s, double value) { s.engine.reference.barometer = bar_absolute(value / 1000.0); }));
+    fields.push_back(maybe("Reference conditions", "Relative humidity", "%",
+                           [](const State& s) { return s.engine.reference.relative_humidity ? std::optional(*s.engine.reference.relative_humidity * 100.0) : std::nullopt; },
+                           [](State& s, std::optional<double> value) {
+                               s.engine.reference.relative_humidity = value ? std::optional(*value / 100.0) : std::nullopt;
+                           }));
+    fields.push_back(choice("Reference conditions", "Consumption", {tr_("by the engine's own coefficients"), tr_("by ISO 3046-1")},
+                            [](const State& s) { return s.engine.consumption_correction == ConsumptionCorrection::iso_3046 ? 1 : 0; },
+                            [](State& s, int index) {
+                                s.engine.consumption_correction = index == 1 ? ConsumptionCorrection::iso_3046 : ConsumptionCorrection::linear;
+                            }));
     fields.push_back(words("Reference conditions", "Source", [](State& s) -> std::string& { return s.engine.reference.source; }));
 }
 

@@ -16,7 +16,7 @@
 namespace evenstroke {
 namespace {
 
-enum Section { particulars, baseline_section, coefficients, limits, instruments };
+enum Section { particulars, baseline_section, coefficients, limits, instruments, load_and_walls };
 
 QLabel* small_label(const QString& words, QWidget* parent)
 {
@@ -30,7 +30,8 @@ QLabel* small_label(const QString& words, QWidget* parent)
 
 EnginePage::EnginePage(Workplace& place, QWidget* parent)
     : Page(place, parent), ui_(std::make_unique<Ui::EnginePage>()), draft_(this), baseline_(draft_, this),
-      coefficients_(draft_, coefficients_table(), this), limits_(draft_, limits_table(), this), instruments_(draft_, instruments_table(), this)
+      coefficients_(draft_, coefficients_table(), this), limits_(draft_, limits_table(), this), instruments_(draft_, instruments_table(), this),
+      load_limits_(draft_, load_limits_table(), this), walls_(draft_, walls_table(), this)
 {
     ui_->setupUi(this);
     make_fields();
@@ -40,6 +41,8 @@ EnginePage::EnginePage(Workplace& place, QWidget* parent)
     set_up_table(*ui_->coefficients_table, coefficients_, *ui_->coefficients_remove_button);
     set_up_table(*ui_->limits_table, limits_, *ui_->limits_remove_button);
     set_up_table(*ui_->instruments_table, instruments_, *ui_->instruments_remove_button);
+    set_up_table(*ui_->load_limits_table, load_limits_, *ui_->load_limit_clear_button);
+    set_up_table(*ui_->walls_table, walls_, *ui_->wall_remove_button);
     connect_saving();
     open_section(particulars);
     say({});
@@ -104,11 +107,17 @@ void EnginePage::make_fields()
         column->addStretch(1);
 }
 
+std::vector<QPushButton*> EnginePage::section_buttons() const
+{
+    return {ui_->particulars_button, ui_->baseline_button,    ui_->coefficients_button,
+            ui_->limits_button,      ui_->instruments_button, ui_->load_button};
+}
+
 void EnginePage::connect_sections()
 {
-    QPushButton* const buttons[] = {ui_->particulars_button, ui_->baseline_button, ui_->coefficients_button, ui_->limits_button, ui_->instruments_button};
-    for (int i = 0; i < 5; ++i) {
-        connect(buttons[i], &QPushButton::clicked, this, [this, i] { open_section(i); });
+    const auto buttons = section_buttons();
+    for (int i = 0; i < static_cast<int>(buttons.size()); ++i) {
+        connect(buttons[static_cast<std::size_t>(i)], &QPushButton::clicked, this, [this, i] { open_section(i); });
         connect(new QShortcut(QKeySequence(Qt::CTRL | static_cast<Qt::Key>(Qt::Key_1 + i)), this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut),
                 &QShortcut::activated, this, [this, i] { open_section(i); });
     }
@@ -118,9 +127,9 @@ void EnginePage::connect_sections()
 
 void EnginePage::open_section(int index)
 {
-    QPushButton* const buttons[] = {ui_->particulars_button, ui_->baseline_button, ui_->coefficients_button, ui_->limits_button, ui_->instruments_button};
-    for (int i = 0; i < 5; ++i)
-        buttons[i]->setChecked(i == index);
+    const auto buttons = section_buttons();
+    for (int i = 0; i < static_cast<int>(buttons.size()); ++i)
+        buttons[static_cast<std::size_t>(i)]->setChecked(i == index);
     ui_->stack->setCurrentIndex(index);
     if (index == baseline_section)
         show_plot();
@@ -136,8 +145,9 @@ void EnginePage::set_up_table(QTableView& view, EngineTable& model, QPushButton&
     view.setEditTriggers(QAbstractItemView::AllEditTriggers);
     view.setTabKeyNavigation(true);
     for (std::size_t column = 0; column < model.columns().size(); ++column)
-        view.setColumnWidth(static_cast<int>(column), model.columns()[column].names_quantity ? 250 : 150);
-    view.setItemDelegateForColumn(0, new QuantityDelegate(&view));
+        view.setColumnWidth(static_cast<int>(column), model.columns()[column].names_quantity || !model.columns()[column].editable ? 250 : 150);
+    if (model.columns().front().names_quantity)
+        view.setItemDelegateForColumn(0, new QuantityDelegate(&view));
     connect(&model, &EngineTable::refused, this, &EnginePage::say);
     connect(&remove, &QPushButton::clicked, this, [&view, &model] { model.remove_row(view.currentIndex().row()); });
 }
@@ -161,7 +171,7 @@ QString EnginePage::sentence() const
     return draft_.is_new() ? tr("A new engine, not saved yet.") : tr("{engine} of {vessel} as it is described.");
 }
 
-QString EnginePage::foot_text() const { return tr("Ctrl+1 to Ctrl+5: particulars, baseline, corrections, limits, instruments"); }
+QString EnginePage::foot_text() const { return tr("Ctrl+1 to Ctrl+6: particulars, baseline, corrections, limits, instruments, load and walls"); }
 QString EnginePage::draft_text() const { return draft_.dirty() ? tr("engine: changes not saved") : QString(); }
 QWidget* EnginePage::first_focus() { return ui_->particulars_button; }
 

@@ -23,7 +23,8 @@ class EnginePage;
 
 namespace evenstroke {
 
-/// The engine as it is described: particulars, baseline, coefficients, limits, instruments, each with its source.
+/// The engine as it is described: particulars, baseline, coefficients, limits, instruments, load diagram and walls,
+/// each with its source.
 /// Also where a new ship or engine is made. Changes are kept until they are saved as a revision.
 class EnginePage : public Page
 {
@@ -56,6 +57,7 @@ private:
     void set_up_table(QTableView& view, EngineTable& model, QPushButton& remove);
     void connect_saving();
     void open_section(int index);
+    std::vector<QPushButton*> section_buttons() const;
     void take_field(std::size_t index, const QString& text);
     void show_state();
     void show_plot();
@@ -73,7 +75,7 @@ private:
     std::unique_ptr<Ui::EnginePage> ui_;
     EngineDraft draft_;
     BaselineModel baseline_;
-    EngineTable coefficients_, limits_, instruments_;
+    EngineTable coefficients_, limits_, instruments_, load_limits_, walls_;
     std::vector<Box> boxes_;
     std::optional<ShopTrial> trial_;
     QString shown_engine_, plotted_ = {};

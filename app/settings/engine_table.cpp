@@ -23,7 +23,7 @@ EngineTable::EngineTable(EngineDraft& draft, Kind kind, QObject* parent)
 
 int EngineTable::rowCount(const QModelIndex& parent) const
 {
-    return parent.isValid() ? 0 : shown_rows_ + 1;
+    return parent.isValid() ? 0 : shown_rows_ + (kind_.fixed ? 0 : 1);
 }
 
 int EngineTable::columnCount(const QModelIndex& parent) const

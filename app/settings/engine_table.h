@@ -32,6 +32,7 @@ public:
         std::vector<EngineColumn> columns;
         std::function<int(const Engine&)> rows;
         std::function<void(Engine&, int row)> remove;
+        bool fixed = false; ///< always the same rows: none is added
     };
 
     EngineTable(EngineDraft& draft, Kind kind, QObject* parent = nullptr);
@@ -58,6 +59,8 @@ private:
 EngineTable::Kind limits_table();
 EngineTable::Kind instruments_table();
 EngineTable::Kind coefficients_table();
+EngineTable::Kind load_limits_table();
+EngineTable::Kind walls_table();
 
 /// The quantity that somebody names by its title or identifier. @par Problems invalid_input with the nearest names
 Result<std::string> read_quantity_name(const QString& text);
