@@ -28,7 +28,7 @@ struct ReviewLine
     bool has_workings = false;    ///< find_workings or the estimate has a sheet for it
     std::optional<std::size_t> estimate; ///< index in PowerAgreement::estimates
     bool spread = false;          ///< a line that stands for all cylinders: value is the mean, `low` to `high` the spread
-    std::optional<double> low, high;
+    std::optional<double> low, high; ///< of a criterion of steadiness: the numbers before and after the walk
 };
 
 struct ReviewSection

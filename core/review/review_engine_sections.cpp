@@ -120,10 +120,24 @@ std::string cylinder_words(const ReviewContext& context, int number, const std::
            patterns_sentence(context, Place::cylinder(number), own);
 }
 
+void say_light_running(const ReviewContext& context, ReviewLine& line)
+{
+    if (line.level >= Level::note)
+        return; // a flag speaks of it
+    line.level = context.held.empty() ? Level::quiet : Level::no_data;
+    const bool surely_heavy = line.half_width && *line.value < -*line.half_width;
+    line.verdict = !context.held.empty()    ? "not judged: " + context.held
+                   : context.power_in_doubt ? "not judged while the power is in doubt"
+                   : surely_heavy           ? "heavy: slower than the propeller curve through the rating"
+                                            : "";
+}
+
 std::optional<ReviewLine> light_running_line(const ReviewContext& context, const PowerAgreement& power)
 {
-    if (auto line = derived_line(context, "light_running_margin"); line && line->value)
+    if (auto line = derived_line(context, "light_running_margin"); line && line->value) {
+        say_light_running(context, *line);
         return line;
+    }
     const auto speed = context.number("speed");
     const Quantity& of_speed = quantity(*find_quantity("speed"));
     const auto typed = std::find_if(power.estimates.begin(), power.estimates.end(),
@@ -146,12 +160,7 @@ std::optional<ReviewLine> light_running_line(const ReviewContext& context, const
     line.decimals = 1;
     line.value = solved->value;
     line.half_width = solved->half_width;
-    line.level = context.held.empty() ? Level::quiet : Level::no_data;
-    const bool surely_heavy = solved->half_width && solved->value < -*solved->half_width;
-    line.verdict = !context.held.empty()      ? "not judged: " + context.held
-                   : context.power_in_doubt   ? "not judged while the power is in doubt"
-                   : surely_heavy             ? "heavy: slower than the propeller curve through the rating"
-                                              : "";
+    say_light_running(context, line);
     return line;
 }
 
@@ -161,20 +170,25 @@ ReviewSection air_side_section(const ReviewContext& context)
 {
     ReviewSection section{ReviewTopic::air_side, "Air side", {}, Level::quiet, {}};
     auto& lines = section.lines;
-    for (const char* name : {"inlet_air_temperature", "air_filter_pressure_drop", "compressor_outlet_temperature"})
+    for (const char* name : {"inlet_air_temperature", "air_filter_pressure_drop"})
         add_typed(lines, context, name);
+    add_derived(lines, context, "filter_drop_at_reference_flow");
+    add_typed(lines, context, "compressor_outlet_temperature");
     add_derived(lines, context, "compressor_pressure_ratio");
     add_derived(lines, context, "compressor_efficiency");
-    for (const char* name : {"cooler_pressure_drop", "cooler_coolant_inlet_temperature", "cooler_air_outlet_temperature",
-                             "scavenge_temperature"})
+    add_typed(lines, context, "cooler_pressure_drop");
+    add_derived(lines, context, "cooler_drop_at_reference_flow");
+    for (const char* name : {"cooler_coolant_inlet_temperature", "cooler_coolant_outlet_temperature",
+                             "cooler_air_outlet_temperature", "scavenge_temperature"})
         add_typed(lines, context, name);
-    add_derived(lines, context, "cooler_temperature_difference");
-    add_derived(lines, context, "cooler_effectiveness");
+    for (const char* name : {"cooler_temperature_difference", "cooler_approach", "cooler_coolant_rise", "cooler_effectiveness"})
+        add_derived(lines, context, name);
     for (const char* name : {"scavenge_pressure", "turbocharger_speed", "exhaust_before_turbine", "exhaust_after_turbine",
                              "exhaust_receiver_pressure", "exhaust_back_pressure"})
         add_typed(lines, context, name);
-    add_derived(lines, context, "turbocharger_efficiency");
-    add_derived(lines, context, "charge_air_condensate");
+    for (const char* name : {"back_pressure_at_reference_flow", "turbocharger_efficiency", "turbine_efficiency",
+                             "charge_air_dew_point", "charge_air_condensate"})
+        add_derived(lines, context, name);
     section.level = worst(lines);
     const auto departing = departures(lines);
     if (!departing.empty())
@@ -194,8 +208,10 @@ ReviewSection means_section(const ReviewContext& context)
     add(section.lines, compression);
     add(section.lines, maximum);
     add(section.lines, derived_mean_line(context, "compression_pressure_ratio"));
-    if (compression && maximum)
-        add(section.lines, rise_line(*maximum, *compression));
+    auto rise = derived_mean_line(context, "combustion_pressure_rise");
+    if (!rise && compression && maximum)
+        rise = rise_line(*maximum, *compression);
+    add(section.lines, std::move(rise));
     add(section.lines, mean_line(context, "jacket_outlet_temperature"));
     section.level = worst(section.lines);
     const auto departing = departures(section.lines);
@@ -246,6 +262,7 @@ ReviewSection ship_section(const ReviewContext& context, const PowerAgreement& p
         for (const char* name : {"speed_through_water", "speed_over_ground", "propeller_pitch"})
             add_typed(section.lines, context, name);
         add_derived(section.lines, context, "apparent_slip");
+        add_derived(section.lines, context, "admiralty_coefficient");
         add(section.lines, light_running_line(context, power));
     }
     if (const auto state = load_state(context, power)) {
@@ -267,7 +284,9 @@ ReviewSection fuel_section(const ReviewContext& context)
 {
     ReviewSection section{ReviewTopic::fuel, "Fuel", {}, Level::quiet, {}};
     add_typed(section.lines, context, "fuel_consumption");
+    add_derived(section.lines, context, "fuel_mass_flow");
     add_typed(section.lines, context, "fuel_lower_heating_value");
+    add_derived(section.lines, context, "calculated_heating_value");
     add_derived(section.lines, context, "specific_fuel_consumption");
     if (context.power_in_doubt) {
         for (ReviewLine& line : section.lines)

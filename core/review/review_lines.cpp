@@ -235,6 +235,16 @@ std::optional<ReviewLine> derived_line(const ReviewContext& context, std::string
 
 void add_derived(std::vector<ReviewLine>& lines, const ReviewContext& context, std::string_view name)
 {
+    bool any = false;
+    for (const DerivedValue& row : context.derived) {
+        if (row.quantity != name || row.place.kind == Place::Kind::cylinder)
+            continue;
+        any = true;
+        if (auto line = derived_line(context, name, row.place))
+            lines.push_back(std::move(*line));
+    }
+    if (any)
+        return;
     if (auto line = derived_line(context, name))
         lines.push_back(std::move(*line));
 }
