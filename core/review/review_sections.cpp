@@ -78,10 +78,13 @@ ReviewSection entry_section(const ReviewContext& context)
     for (const Relation& relation : check_relations(context.engine, context.reading, around)) {
         if (all_confirmed(context, relation) || told_by_a_flag(context, relation))
             continue;
-        const auto first = relation.concerned.empty() ? std::nullopt : std::optional(relation.concerned.front());
-        section.lines.push_back(words_line(relation.sentence, first ? std::optional(first->quantity) : std::nullopt,
-                                           first ? first->place : Place::engine(),
-                                           relation.impossible ? "cannot be" : "look again"));
+        ReviewLine line = words_line(relation.sentence, std::nullopt, Place::engine(),
+                                     relation.impossible ? "cannot be" : "look again");
+        if (!relation.concerned.empty()) {
+            line.quantity = relation.concerned.front().quantity;
+            line.place = relation.concerned.front().place;
+        }
+        section.lines.push_back(std::move(line));
     }
     if (section.lines.empty())
         return section;
