@@ -23,6 +23,9 @@ void EnginePage::connect_baseline()
     table.verticalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
     table.horizontalHeader()->setDefaultSectionSize(84);
     table.setEditTriggers(QAbstractItemView::AllEditTriggers);
+    auto* cells = new BaselineDelegate(&table);
+    table.setItemDelegate(cells);
+    connect(cells, &BaselineDelegate::table_pasted, this, &EnginePage::paste, Qt::QueuedConnection); // when the cell is closed
     for (const Quantity& of : all_quantities())
         if (of.type == ValueType::number && ui_->quantity_box->findData(to_qstring(of.name)) < 0)
             ui_->quantity_box->addItem(to_qstring(of.title), to_qstring(of.name));
@@ -107,9 +110,11 @@ void EnginePage::take_trial()
         return;
     EngineDraft::State state = draft_.state();
     state.engine.baseline = merged_baseline(std::move(state.engine.baseline), trial_->points);
+    state.engine.baseline_source = tr("pasted on %1, source not given").arg(day_text(time_now())).toStdString();
     trial_.reset();
     draft_.change(state, tr("pasted shop test"));
     ui_->baseline_source_field->setFocus();
+    ui_->baseline_source_field->selectAll();
 }
 
 void EnginePage::drop_trial()

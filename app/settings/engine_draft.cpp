@@ -1,8 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/settings/engine_draft.h"
 
+#include "app/settings/engine_fields.h"
 #include "storage/vessel_store.h"
 
+#include <QSignalBlocker>
 #include <QUndoCommand>
 
 namespace evenstroke {
@@ -22,12 +24,18 @@ private:
     EngineDraft::State before_, after_;
 };
 
-EngineDraft::EngineDraft(QObject* parent) : QObject(parent) {}
+EngineDraft::EngineDraft(QObject* parent) : QObject(parent)
+{
+    // Not from within a step: the list of steps must have moved on before anybody asks whether there is one to undo.
+    connect(&undo_, &QUndoStack::indexChanged, this, &EngineDraft::changed);
+}
 
 void EngineDraft::begin(const State& state)
 {
+    const QSignalBlocker one_signal(undo_);
     undo_.clear();
     put(state);
+    emit changed();
 }
 
 void EngineDraft::put(const State& state)
@@ -40,7 +48,6 @@ void EngineDraft::put(const State& state)
         state_.vessel.id = vessel_id;
         state_.engine.id = engine_id;
     }
-    emit changed();
 }
 
 void EngineDraft::change(const State& state, const QString& what)
@@ -50,10 +57,9 @@ void EngineDraft::change(const State& state, const QString& what)
 
 std::optional<Problem> EngineDraft::problem() const
 {
-    if (state_.vessel.name.empty())
-        return invalid_input("The ship has no name yet.", "Write the ship's name under \u201cParticulars\u201d.");
-    if (state_.engine.name.empty())
-        return invalid_input("The engine has no name yet.", "Write a name such as \u201cMain engine\u201d under \u201cParticulars\u201d.");
+    if (const QStringList needed = still_needed(state_); !needed.isEmpty())
+        return invalid_input(tr("Still needed: %1.").arg(needed.join(QStringLiteral(", "))).toStdString(),
+                             tr("Fill in the boxes marked with a star under \u201cParticulars\u201d.").toStdString());
     return find_problem(state_.engine);
 }
 

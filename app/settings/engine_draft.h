@@ -38,7 +38,7 @@ public:
 
     /// @param what for the undo list: "bore"
     void change(const State& state, const QString& what);
-    /// What speaks against saving: find_problem's answer, or a name that is missing.
+    /// What speaks against saving: boxes that must be filled in and are not, else find_problem's answer.
     std::optional<Problem> problem() const;
     /// Saves vessel and engine. @par Problems those of `problem`; storage
     Result<void> save(storage::History& history, const storage::Signature& by);

@@ -106,6 +106,8 @@ EngineField cylinder_names()
             },
             [](State& state, const QString& text) -> std::optional<Problem> {
                 const QStringList names = text.simplified().split(QLatin1Char(' '), Qt::SkipEmptyParts);
+                if (!names.isEmpty() && state.engine.cylinders == 0)
+                    return invalid_input("How many cylinders there are is not written yet.", "Type their number first, then their names.");
                 if (!names.isEmpty() && names.size() != state.engine.cylinders)
                     return invalid_input(QStringLiteral("%1 names for %2 cylinders.").arg(names.size()).arg(state.engine.cylinders).toStdString(),
                                          "Give one name a cylinder with blanks between, or none at all.");
@@ -139,9 +141,15 @@ EngineField firing_order()
             }};
 }
 
+EngineField needed(EngineField field, const char* as)
+{
+    field.needed_as = tr_(as);
+    return field;
+}
+
 void add_vessel(std::vector<EngineField>& fields)
 {
-    fields.push_back(words("Ship", "Name of the ship", [](State& s) -> std::string& { return s.vessel.name; }));
+    fields.push_back(needed(words("Ship", "Name of the ship", [](State& s) -> std::string& { return s.vessel.name; }), "name of the ship"));
     fields.push_back(words("Ship", "IMO number", [](State& s) -> std::string& { return s.vessel.imo; }));
     fields.push_back(words("Ship", "Flag", [](State& s) -> std::string& { return s.vessel.flag; }));
     fields.push_back(words("Ship", "Class", [](State& s) -> std::string& { return s.vessel.class_society; }));
@@ -150,20 +158,22 @@ void add_vessel(std::vector<EngineField>& fields)
 
 void add_engine(std::vector<EngineField>& fields)
 {
-    fields.push_back(words("Engine", "Name of the engine", [](State& s) -> std::string& { return s.engine.name; }));
+    fields.push_back(needed(words("Engine", "Name of the engine", [](State& s) -> std::string& { return s.engine.name; }), "name of the engine"));
     fields.push_back(choice("Engine", "Working cycle", {tr_("two-stroke"), tr_("four-stroke")},
                             [](const State& s) { return s.engine.two_stroke() ? 0 : 1; },
                             [](State& s, int index) { s.engine.kind = index == 1 ? EngineKind::four_stroke : EngineKind::two_stroke; }));
-    fields.push_back(cylinder_count());
+    fields.push_back(needed(cylinder_count(), "number of cylinders"));
     fields.push_back(cylinder_names());
     fields.push_back(firing_order());
-    fields.push_back(length("Bore", &Engine::bore));
-    fields.push_back(length("Stroke", &Engine::stroke));
-    fields.push_back(length("Length of connecting rod", &Engine::rod_length));
-    fields.push_back(number("Engine", "Rated power", "kW", [](const State& s) { return s.engine.rated_power.value() / 1000.0; },
-                            [](State& s, double value) { s.engine.rated_power = kilowatts(value); }));
-    fields.push_back(number("Engine", "Rated speed", "r/min", [](const State& s) { return s.engine.rated_speed.value() * 60.0; },
-                            [](State& s, double value) { s.engine.rated_speed = per_minute(value); }));
+    fields.push_back(needed(length("Bore", &Engine::bore), "bore"));
+    fields.push_back(needed(length("Stroke", &Engine::stroke), "stroke"));
+    fields.push_back(needed(length("Length of connecting rod", &Engine::rod_length), "length of connecting rod"));
+    fields.push_back(needed(number("Engine", "Rated power", "kW", [](const State& s) { return s.engine.rated_power.value() / 1000.0; },
+                                   [](State& s, double value) { s.engine.rated_power = kilowatts(value); }),
+                            "rated power"));
+    fields.push_back(needed(number("Engine", "Rated speed", "r/min", [](const State& s) { return s.engine.rated_speed.value() * 60.0; },
+                                   [](State& s, double value) { s.engine.rated_speed = per_minute(value); }),
+                            "rated speed"));
     fields.push_back(choice("Engine", "Maximum pressure", {tr_("follows the load"), tr_("held by the control")},
                             [](const State& s) { return s.engine.maximum_pressure_controlled ? 1 : 0; },
                             [](State& s, int index) { s.engine.maximum_pressure_controlled = index == 1; }));
@@ -283,6 +293,15 @@ const std::vector<EngineField>& engine_fields()
         return list;
     }();
     return fields;
+}
+
+QStringList still_needed(const EngineDraft::State& state)
+{
+    QStringList names;
+    for (const EngineField& field : engine_fields())
+        if (!field.needed_as.isEmpty() && field.show(state).isEmpty())
+            names.append(field.needed_as);
+    return names;
 }
 
 } // namespace evenstroke

@@ -83,11 +83,14 @@ void EnginePage::make_fields()
             column->addSpacing(10);
         }
         const int row = grid->rowCount();
-        grid->addWidget(small_label(fields[i].title, ui_->particulars), row, 0);
+        const bool must = !fields[i].needed_as.isEmpty();
+        grid->addWidget(small_label(must ? tr("%1 *").arg(fields[i].title) : fields[i].title, ui_->particulars), row, 0);
         Box box;
         if (fields[i].choices.isEmpty()) {
             box.line = new QLineEdit(ui_->particulars);
             box.line->setAccessibleName(fields[i].title);
+            if (must)
+                box.line->setAccessibleDescription(tr("needed"));
             connect(box.line, &QLineEdit::editingFinished, this, [this, i] { take_field(i, boxes_[i].line->text()); });
             grid->addWidget(box.line, row, 1);
         } else {
@@ -213,7 +216,7 @@ void EnginePage::begin_new(bool new_ship)
     draft_.begin(new_engine_state(vessel));
     open_section(particulars);
     boxes_[new_ship ? 0 : 5].line->setFocus();
-    say(tr("Name ship and engine, fill in what is known, and save. The rest can follow."));
+    say(tr("Fill in the boxes marked with a star and save. The rest can follow."));
     emit sentence_changed();
 }
 
@@ -223,6 +226,8 @@ void EnginePage::take_field(std::size_t index, const QString& text)
     if (text.trimmed() == field.show(draft_.state()))
         return;
     EngineDraft::State state = draft_.state();
+    if (text.trimmed().isEmpty() && !field.needed_as.isEmpty() && field.show(state).isEmpty())
+        return; // left empty on the way to another box; saving asks for it
     if (const auto problem = field.set(state, text)) {
         say(to_qstring(problem->text()));
         return show_state();
@@ -244,6 +249,7 @@ void EnginePage::show_state()
             boxes_[i].choice->setCurrentText(text);
     }
     ui_->baseline_source_field->setText(to_qstring(draft_.state().engine.baseline_source));
+    ui_->baseline_question->setVisible(draft_.state().engine.baseline_source.ends_with("source not given"));
     ui_->undo_button->setEnabled(draft_.undo().canUndo());
     ui_->redo_button->setEnabled(draft_.undo().canRedo());
     ui_->save_button->setEnabled(draft_.dirty() && workplace().is_open() && !workplace().read_only());

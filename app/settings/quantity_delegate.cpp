@@ -3,7 +3,10 @@
 
 #include "app/desk/number_text.h"
 
+#include <QClipboard>
 #include <QCompleter>
+#include <QGuiApplication>
+#include <QKeyEvent>
 #include <QLineEdit>
 
 namespace evenstroke {
@@ -21,6 +24,19 @@ QWidget* QuantityDelegate::createEditor(QWidget* parent, const QStyleOptionViewI
     completer->setFilterMode(Qt::MatchContains);
     line->setCompleter(completer);
     return line;
+}
+
+bool BaselineDelegate::eventFilter(QObject* editor, QEvent* event)
+{
+    if (event->type() == QEvent::KeyPress && static_cast<QKeyEvent*>(event)->matches(QKeySequence::Paste)) {
+        const QString text = QGuiApplication::clipboard()->text().trimmed();
+        if (text.contains(QLatin1Char('\t')) || text.contains(QLatin1Char('\n'))) {
+            emit closeEditor(static_cast<QWidget*>(editor), QAbstractItemDelegate::RevertModelCache);
+            emit table_pasted();
+            return true;
+        }
+    }
+    return QStyledItemDelegate::eventFilter(editor, event);
 }
 
 } // namespace evenstroke

@@ -15,4 +15,19 @@ public:
     QWidget* createEditor(QWidget* parent, const QStyleOptionViewItem& option, const QModelIndex& index) const override;
 };
 
+/// Cells of the baseline: a table on the clipboard that is pasted while a cell is open is a table, not the cell's text.
+class BaselineDelegate : public QStyledItemDelegate
+{
+    Q_OBJECT
+
+public:
+    using QStyledItemDelegate::QStyledItemDelegate;
+
+signals:
+    void table_pasted();
+
+protected:
+    bool eventFilter(QObject* editor, QEvent* event) override;
+};
+
 } // namespace evenstroke

@@ -113,6 +113,57 @@ TEST_F(EngineDesk, PastedShopTrialIsShownBeforeItIsTaken)
     EXPECT_EQ(page_->draft().state().engine.baseline.size(), 3u) << "one undo takes the whole paste back";
 }
 
+TEST_F(EngineDesk, APastedTableReplacesTheCurveAndAsksForItsSource)
+{
+    page_->findChild<QPushButton*>("baseline_button")->click();
+    ASSERT_TRUE(page_->show_trial("Load\t%\t55\t85\nMax. pressure\tbar\t121,5\t150,2\n"));
+    page_->take_trial();
+    const Engine& engine = page_->draft().state().engine;
+    for (const BaselinePoint& point : engine.baseline)
+        EXPECT_EQ(point.values.count("maximum_pressure"), point.load_percent == 55.0 || point.load_percent == 85.0 ? 1u : 0u) << point.load_percent;
+    EXPECT_TRUE(QString::fromStdString(engine.baseline_source).startsWith("pasted on")) << engine.baseline_source;
+    EXPECT_TRUE(child<QLabel>("baseline_question").isVisible());
+    EXPECT_TRUE(child<QPushButton>("save_button").isEnabled()) << "the first change can be saved at once";
+    EXPECT_TRUE(child<QPushButton>("undo_button").isEnabled());
+    EXPECT_EQ(page_->draft_text(), "engine: changes not saved");
+    type_into(child<QLineEdit>("baseline_source_field"), "shop test 4711, invented");
+    EXPECT_FALSE(child<QLabel>("baseline_question").isVisible());
+}
+
+TEST_F(EngineDesk, ATablePastedIntoAnOpenCellIsTakenAsATable)
+{
+    page_->findChild<QPushButton*>("baseline_button")->click();
+    auto& table = child<QTableView>("baseline_table");
+    table.setFocus();
+    table.setCurrentIndex(page_->baseline().index(1, 0));
+    table.edit(page_->baseline().index(1, 0));
+    QLineEdit* cell = table.viewport()->findChild<QLineEdit*>();
+    ASSERT_TRUE(cell);
+    QGuiApplication::clipboard()->setText("Load\t%\t50\t85\nMax. pressure\tbar\t121,5\t150,2\n");
+    const auto before = page_->draft().state().engine.baseline.size();
+    QTest::keyClick(cell, Qt::Key_V, Qt::ControlModifier);
+    QApplication::processEvents();
+    EXPECT_TRUE(child<QWidget>("trial").isVisible());
+    EXPECT_EQ(page_->draft().state().engine.baseline.size(), before) << "nothing is changed yet";
+    QGuiApplication::clipboard()->setText("99.5");
+    table.edit(page_->baseline().index(1, 0));
+    cell = table.viewport()->findChild<QLineEdit*>();
+    ASSERT_TRUE(cell);
+    cell->selectAll();
+    QTest::keyClick(cell, Qt::Key_V, Qt::ControlModifier);
+    EXPECT_EQ(cell->text(), "99.5") << "one number is the cell's text";
+}
+
+TEST_F(EngineDesk, ANewEngineAsksForAllThatIsMissingInOneSentence)
+{
+    page_->begin_new(false);
+    EXPECT_FALSE(page_->save());
+    EXPECT_TRUE(problem().contains("Still needed: name of the engine, number of cylinders, bore, stroke, length of connecting rod, rated power, rated speed."))
+        << problem().toStdString();
+    type_into(box("Bore"), "");
+    EXPECT_TRUE(problem().contains("Still needed")) << "walking through an empty box is no mistake";
+}
+
 TEST_F(EngineDesk, PasteWithoutATableSaysSo)
 {
     EXPECT_FALSE(page_->show_trial("good morning"));
