@@ -13,10 +13,11 @@ const std::vector<Command>& all_commands()
     static const Option engine{"engine", "E", "only this engine"};
     static const Option format{"format", "csv|json", "how rows are written; csv where nothing is said"};
     static const std::vector<Command> commands = {
-        {"take", "takes folders of engines, ships and fleets into a history; made where there is none",
+        {"take", "takes folders of engines, ships and fleets into a history; made where there is none.\n      One transaction an engine "
+                 "folder: a folder with a row that is not understood is refused whole and does not stop the others",
          "FOLDER...",
          {history, {"keep-good", nullptr, "take the good rows of files that hold bad ones"}},
-         run_take},
+         run_take, "a folder was refused whole, nothing of it was taken; the other folders were"},
         {"evaluate", "every value: typed, corrected, expected, deviation, apart, uncertainty",
          nullptr,
          {history, vessel, engine, {"reading", "R", "only this reading"},

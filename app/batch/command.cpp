@@ -52,8 +52,7 @@ int explain_command(const Command& command, Streams& streams)
         streams.out << "    " << left.leftJustified(24) << " " << utf8(option.help)
                     << (option.needed ? " (needed)" : "") << "\n";
     }
-    streams.out << "Exit code: 0 done; 1 the data were refused, nothing changed; 2 wrong use; 3 the file or disk "
-                   "failed.\n";
+    streams.out << "Exit code: 0 done; 1 " << command.refused << "; 2 wrong use; 3 the file or disk failed.\n";
     streams.out.flush();
     return done;
 }

@@ -45,6 +45,7 @@ struct Command
     const char* rest; ///< name of the words after the options; null: none are taken
     std::vector<Option> options;
     std::function<int(const QCommandLineParser&, Streams&)> run;
+    const char* refused = "the data were refused, nothing changed"; ///< what exit code 1 means
 };
 
 const std::vector<Command>& all_commands();

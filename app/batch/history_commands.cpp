@@ -46,6 +46,37 @@ void print_folder(const storage::FolderReport& folder, Streams& streams)
         streams.err << name << ": " << QString::fromStdString(remark) << "\n";
 }
 
+/// "3 folders taken: a, b, c"; more than a screen holds are only counted, stdout has a line for each.
+void print_names(const QStringList& names, const char* what, Streams& streams)
+{
+    constexpr int most_named = 20;
+    if (names.isEmpty())
+        return;
+    streams.err << names.size() << (names.size() == 1 ? " folder " : " folders ") << what;
+    if (names.size() <= most_named)
+        streams.err << ": " << names.join(QStringLiteral(", "));
+    streams.err << "\n";
+}
+
+/// What was taken, what was refused whole, and what can be done about it. @return the exit code
+int print_refusals(const storage::TakeReport& report, bool keep_good, Streams& streams)
+{
+    QStringList taken, refused;
+    bool good_rows_wait = false;
+    for (const storage::FolderReport& folder : report.folders) {
+        (folder.taken ? taken : refused).append(QString::fromStdString(folder.folder));
+        good_rows_wait = good_rows_wait || (!folder.taken && folder.rows().fresh + folder.rows().same > 0);
+    }
+    print_names(taken, "taken", streams);
+    print_names(refused, "refused whole, nothing of it is in the history", streams);
+    if (keep_good && !taken.isEmpty())
+        streams.err << "Rows that could not be understood were left out, as --keep-good says; they are named above.\n";
+    if (!refused.isEmpty())
+        streams.err << "The reasons are named above. Put them right and take the folder in again"
+                    << (good_rows_wait && !keep_good ? ", or use --keep-good to take the good rows only.\n" : ".\n");
+    return refused.isEmpty() ? done : data_refused;
+}
+
 /// Writes one file of the sample vessel; leaves an equal one as it is, refuses to write over another.
 Result<bool> write_sample_file(const QDir& folder, const sample::SampleFile& file)
 {
@@ -98,18 +129,7 @@ int run_take(const QCommandLineParser& parser, Streams& streams)
         streams.err << "Stopped. Nothing was taken in.\n";
         return data_refused;
     }
-    if (!report.value().anything_refused())
-        return done;
-    if (options.keep_good) {
-        streams.err << "Rows were left out, as --keep-good says; they are named above.\n";
-        for (const storage::FolderReport& folder : report.value().folders)
-            if (!folder.taken)
-                return data_refused;
-        return done;
-    }
-    streams.err << "What was refused is named above. Put it right and take it in again, or use --keep-good to take the "
-                   "good rows only.\n";
-    return data_refused;
+    return report.value().anything_refused() ? print_refusals(report.value(), options.keep_good, streams) : done;
 }
 
 int run_verify(const QCommandLineParser& parser, Streams& streams)

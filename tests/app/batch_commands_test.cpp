@@ -265,6 +265,9 @@ TEST_F(TakeByCommand, AFolderThatIsNotThereDoesNotStopTheOthers)
     EXPECT_EQ(taken.code, 1);
     EXPECT_TRUE(taken.err.contains(path("nowhere") + ": There is no folder of this name.")) << taken.err.toStdString();
     EXPECT_TRUE(taken.out.contains("2 values new")) << taken.out.toStdString();
+    EXPECT_TRUE(taken.err.contains("1 folder taken: " + path("engine"))) << taken.err.toStdString();
+    EXPECT_TRUE(taken.err.contains("1 folder refused whole, nothing of it is in the history: " + path("nowhere"))) << taken.err.toStdString();
+    EXPECT_FALSE(taken.err.contains("keep-good")) << "a folder that is not there has no good rows";
     EXPECT_EQ(run({"evaluate", "--history", path("h.evenstroke")}).rows().size(), 2);
 }
 
@@ -298,6 +301,7 @@ TEST_F(TakeByCommand, CountsValuesEventsAndCards)
     EXPECT_EQ(refused.code, 1);
     EXPECT_TRUE(refused.out.contains("4 rows were good, 1 not")) << refused.out.toStdString();
     EXPECT_TRUE(refused.err.contains("events.csv, line 3")) << refused.err.toStdString();
+    EXPECT_TRUE(refused.err.contains("--keep-good")) << refused.err.toStdString();
     const Outcome kept = take({path("engine"), "--keep-good"});
     EXPECT_EQ(kept.code, 0);
     EXPECT_TRUE(kept.out.contains("2 values new, 0 known, 0 left out; 1 events new, 0 known, 1 left out; 1 cards new, 0 "
