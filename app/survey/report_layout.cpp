@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/survey/report_layout.h"
 
+#include "app/survey/event_labels.h"
 #include "app/survey/typesetter.h"
 
 #include <QCoreApplication>
@@ -18,12 +19,49 @@ constexpr double free_enough = 0.45;  ///< of a page's height: then a section go
 
 QString words_of(const std::string& text) { return QString::fromUtf8(text.data(), static_cast<qsizetype>(text.size())); }
 
+/// The sections' titles and first pages. While the pages are laid out the numbers are not known: a letter of the
+/// private use area holds the place of each.
+class PageNumbers
+{
+public:
+    explicit PageNumbers(const SurveyReport& report) : first_pages_(report.sections.size(), 0)
+    {
+        for (const Section& section : report.sections)
+            titles_.push_back(section.title);
+    }
+    void begins(std::size_t section, std::size_t page) { first_pages_[section] = page; }
+    std::string with_places_held(const std::string& text) const
+    {
+        return with_page_references(text, [&](const std::string& title) {
+            const auto found = std::find(titles_.begin(), titles_.end(), title);
+            if (found == titles_.end())
+                return std::string();
+            return QStringLiteral(", page\u00a0").append(QChar(first_letter + static_cast<ushort>(found - titles_.begin()))).toStdString();
+        });
+    }
+    void fill_in(QString& text) const
+    {
+        for (qsizetype i = 0; i < text.size(); ++i)
+            if (const int section = text[i].unicode() - first_letter; section >= 0 && section < static_cast<int>(first_pages_.size()))
+                text.replace(i, 1, QString::number(first_pages_[static_cast<std::size_t>(section)]));
+    }
+
+private:
+    static constexpr ushort first_letter = 0xE000;
+    std::vector<std::string> titles_;
+    std::vector<std::size_t> first_pages_;
+};
+
 /// Sets one section, block by block.
 class SectionSetter
 {
 public:
     /// @param next the section after it, or null: a short one need not stand up before one that lies
-    SectionSetter(const Section& section, const Section* next, Typesetter& setter) : section_(section), next_(next), setter_(setter) {}
+    SectionSetter(const Section& section, const Section* next, Typesetter& setter, const PageNumbers& numbers)
+        : section_(section), next_(next), setter_(setter), numbers_(numbers)
+    {
+    }
+    std::size_t first_page() const { return first_page_; }
 
     void set()
     {
@@ -34,6 +72,7 @@ public:
         else if (!setter_.at_page_top())
             setter_.move_down(8.0);
         setter_.need(line_height(ReportFont::heading) + std::max(60.0, signatures_height()));
+        first_page_ = setter_.pages();
         setter_.text(Typesetter::left, 0.0, words_of(section_.title), fresh || setter_.at_page_top() ? ReportFont::title : ReportFont::heading);
         setter_.move_down((setter_.at_page_top() ? line_height(ReportFont::title) : line_height(ReportFont::heading)) + 6.0);
         for (at_ = 0; at_ < section_.blocks.size(); ++at_)
@@ -85,7 +124,7 @@ private:
         if (paragraph.style == Paragraph::Style::boxed)
             return put_boxed(paragraph);
         const bool strong = paragraph.style == Paragraph::Style::strong;
-        setter_.paragraph(words_of(paragraph.text), strong ? ReportFont::bold : ReportFont::body, Typesetter::left,
+        setter_.paragraph(words_of(numbers_.with_places_held(paragraph.text)), strong ? ReportFont::bold : ReportFont::body, Typesetter::left,
                           std::min(setter_.width(), 520.0), paragraph.style == Paragraph::Style::muted);
         setter_.move_down(5.0);
     }
@@ -166,9 +205,15 @@ private:
     void put(const Plot& plot)
     {
         if (plot.across == Plot::Across::time) {
-            setter_.need(plot_height);
-            setter_.item(PlotItem{QRectF(Typesetter::left, setter_.y(), std::min(setter_.width(), 560.0), plot_height), &plot});
-            setter_.move_down(plot_height + 10.0);
+            const double wide = std::min(setter_.width(), 560.0);
+            const QString key = label_events(plot, wide, setter_.measure()).key;
+            const auto lines = key.isEmpty() ? 0 : setter_.measure().wrapped(key, wide, ReportFont::body).size();
+            setter_.need(plot_height + static_cast<double>(lines) * line_height(ReportFont::body));
+            setter_.item(PlotItem{QRectF(Typesetter::left, setter_.y(), wide, plot_height), &plot});
+            setter_.move_down(plot_height);
+            if (lines > 0)
+                setter_.paragraph(key, ReportFont::body, Typesetter::left, wide, true);
+            setter_.move_down(10.0);
             return;
         }
         constexpr double between = 16.0;
@@ -238,7 +283,8 @@ private:
     const Section& section_;
     const Section* next_;
     Typesetter& setter_;
-    std::size_t at_ = 0;
+    const PageNumbers& numbers_;
+    std::size_t at_ = 0, first_page_ = 0;
 };
 
 void add_running_head(const SurveyReport& report, ReportPage& page, std::size_t number, std::size_t of, const TextMeasure& measure)
@@ -264,11 +310,19 @@ ReportLayout lay_out(std::shared_ptr<const SurveyReport> report)
 {
     Typesetter setter;
     setter.new_page(false);
-    for (std::size_t i = 0; i < report->sections.size(); ++i)
-        SectionSetter(report->sections[i], i + 1 < report->sections.size() ? &report->sections[i + 1] : nullptr, setter).set();
+    PageNumbers numbers(*report);
+    for (std::size_t i = 0; i < report->sections.size(); ++i) {
+        SectionSetter section(report->sections[i], i + 1 < report->sections.size() ? &report->sections[i + 1] : nullptr, setter, numbers);
+        section.set();
+        numbers.begins(i, section.first_page());
+    }
     const TextMeasure measure;
     ReportLayout layout{report, setter.take_pages()};
     std::size_t number = 0;
+    for (ReportPage& page : layout.pages)
+        for (PageItem& item : page.items)
+            if (TextItem* text = std::get_if<TextItem>(&item))
+                numbers.fill_in(text->text);
     for (ReportPage& page : layout.pages)
         add_running_head(*report, page, ++number, layout.pages.size(), measure);
     return layout;

@@ -2,6 +2,7 @@
 #include "app/survey/report_painter.h"
 
 #include "app/desk/theme.h"
+#include "app/survey/event_labels.h"
 
 #include <qcustomplot.h>
 
@@ -151,7 +152,7 @@ private:
     QCPItemPosition *from_, *to_;
 };
 
-void add_text(QCustomPlot& widget, double across, double value, const QString& words, Qt::Alignment anchor, bool bold = false)
+void add_text(QCustomPlot& widget, double across, double value, const QString& words, Qt::Alignment anchor, bool bold = false, int padding = 3)
 {
     auto* label = new QCPItemText(&widget);
     label->position->setCoords(across, value);
@@ -159,7 +160,7 @@ void add_text(QCustomPlot& widget, double across, double value, const QString& w
     label->setText(words);
     label->setFont(report_font(bold ? ReportFont::bold : ReportFont::body));
     label->setColor(ink().ink);
-    label->setPadding(QMargins(3, 0, 3, 0));
+    label->setPadding(QMargins(padding, 0, padding, 0));
     label->setClipToAxisRect(false);
 }
 
@@ -181,7 +182,20 @@ void add_points(QCustomPlot& widget, const PlotLine& line, PlotPoint::Mark mark,
     graph->setData(across, value, true);
 }
 
-void add_line(QCustomPlot& widget, const PlotLine& line, int style, double label_value)
+bool has_label(const PlotLine& line) { return line.in_question && !line.points_only && !line.points.empty() && !line.label.empty(); }
+
+/// From the last point to the label at the right edge; dotted, so that nobody takes it for a stretch of the line.
+void add_leader(QCustomPlot& widget, const PlotPoint& last, double to, double label_value)
+{
+    auto* leader = new QCPItemLine(&widget);
+    leader->start->setCoords(last.across, last.value);
+    leader->end->setCoords(to, label_value);
+    QPen pen = thin(ink().muted, 0.4);
+    pen.setStyle(Qt::DotLine);
+    leader->setPen(pen);
+}
+
+void add_line(QCustomPlot& widget, const PlotLine& line, int style, double label_across, double label_value)
 {
     const QColor colour = line.in_question ? ink().ink : ink().others;
     if (!line.points_only) {
@@ -201,19 +215,24 @@ void add_line(QCustomPlot& widget, const PlotLine& line, int style, double label
         add_points(widget, line, PlotPoint::Mark::hollow, {QCPScatterStyle::ssCircle, colour, Qt::white, 4.0});
         add_points(widget, line, PlotPoint::Mark::crossed, {QCPScatterStyle::ssCross, 4.0});
     }
-    if (line.in_question && !line.points_only && !line.points.empty() && !line.label.empty())
-        add_text(widget, line.points.back().across, label_value, words_of(line.label), Qt::AlignLeft | Qt::AlignVCenter, true);
+    if (!has_label(line))
+        return;
+    add_leader(widget, line.points.back(), label_across, label_value);
+    add_text(widget, label_across, label_value, words_of(line.label), Qt::AlignLeft | Qt::AlignVCenter, true);
 }
 
-/// Heights of the labels at the lines' ends, pushed apart where they would cover each other.
+/// Heights of the labels at the right edge, of the lines and then of the limits, pushed apart where they would cover
+/// each other.
 std::vector<double> label_heights(const Plot& plot, double apart)
 {
     std::vector<std::pair<double, std::size_t>> wanted;
     for (std::size_t i = 0; i < plot.lines.size(); ++i)
-        if (plot.lines[i].in_question && !plot.lines[i].points.empty())
+        if (has_label(plot.lines[i]))
             wanted.push_back({plot.lines[i].points.back().value, i});
+    for (std::size_t i = 0; i < plot.limits.size(); ++i)
+        wanted.push_back({plot.limits[i].value, plot.lines.size() + i});
     std::sort(wanted.begin(), wanted.end());
-    std::vector<double> heights(plot.lines.size(), 0.0);
+    std::vector<double> heights(plot.lines.size() + plot.limits.size(), 0.0);
     double last = -std::numeric_limits<double>::infinity();
     for (const auto& [value, index] : wanted) {
         last = std::max(value, last + apart);
@@ -222,34 +241,31 @@ std::vector<double> label_heights(const Plot& plot, double apart)
     return heights;
 }
 
-/// Small flags on the time axis; a word is left out where it would run into the one before.
-void add_events(QCustomPlot& widget, const Plot& plot, double points_per_second)
+/// Small flags on the time axis, each with its word, or a number that the key below the plot explains.
+void add_events(QCustomPlot& widget, const Plot& plot, double width)
 {
-    const QFontMetricsF metrics(report_font(ReportFont::body));
+    const EventLabels labels = label_events(plot, width, TextMeasure());
     const double low = widget.yAxis->range().lower, high = widget.yAxis->range().upper;
-    double free_from = -std::numeric_limits<double>::infinity();
-    for (const Plot::At& event : plot.events) {
+    const double top = low + (high - low) * 0.16;
+    for (std::size_t i = 0; i < plot.events.size(); ++i) {
         auto* stem = new QCPItemLine(&widget);
-        stem->start->setCoords(event.across, low);
-        stem->end->setCoords(event.across, low + (high - low) * 0.16);
+        stem->start->setCoords(plot.events[i].across, low);
+        stem->end->setCoords(plot.events[i].across, top);
         stem->setPen(thin(ink().ink, 0.5));
-        const QString words = words_of(event.text);
-        const double wide = (metrics.horizontalAdvance(words) + 8.0) / points_per_second;
-        if (event.across < free_from || event.across + wide > plot.to + 90.0 / points_per_second)
-            continue;
-        add_text(widget, event.across, low + (high - low) * 0.16, words, Qt::AlignLeft | Qt::AlignVCenter);
-        free_from = event.across + wide;
+        if (!labels.at_tick[i].isEmpty())
+            add_text(widget, plot.events[i].across, top, labels.at_tick[i], Qt::AlignLeft | (labels.is_number[i] ? Qt::AlignBottom : Qt::AlignVCenter), false,
+                     labels.is_number[i] ? 0 : 3);
     }
 }
 
-void add_limits(QCustomPlot& widget, const Plot& plot)
+void add_limits(QCustomPlot& widget, const Plot& plot, const std::vector<double>& heights)
 {
-    for (const Plot::Limit& limit : plot.limits) {
+    for (std::size_t i = 0; i < plot.limits.size(); ++i) {
         auto* line = new QCPItemLine(&widget);
-        line->start->setCoords(plot.from, limit.value);
-        line->end->setCoords(plot.to, limit.value);
+        line->start->setCoords(plot.from, plot.limits[i].value);
+        line->end->setCoords(plot.to, plot.limits[i].value);
         line->setPen(thin(ink().ink, 0.7, 1));
-        add_text(widget, plot.to, limit.value, words_of(limit.text), Qt::AlignLeft | Qt::AlignVCenter);
+        add_text(widget, plot.to, heights[i], words_of(plot.limits[i].text), Qt::AlignLeft | Qt::AlignVCenter);
     }
 }
 
@@ -302,7 +318,7 @@ void reset(QCustomPlot& widget, const Plot& plot)
     widget.clearGraphs();
     widget.axisRect()->setAutoMargins(QCP::msNone);
     const bool labels = plot.across == Plot::Across::time;
-    widget.axisRect()->setMargins(QMargins(36, 26, labels ? 84 : 6, 16));
+    widget.axisRect()->setMargins(QMargins(static_cast<int>(plot_margin_left), 26, labels ? static_cast<int>(plot_margin_right) : 6, 16));
     widget.axisRect()->setBackground(Qt::NoBrush);
 }
 
@@ -313,18 +329,18 @@ void draw_report_plot(QCustomPlot& widget, const Plot& plot, const QSizeF& size,
     reset(widget, plot);
     style_axes(widget, plot);
     const double low = widget.yAxis->range().lower, high = widget.yAxis->range().upper;
-    const double inner_width = size.width() - (plot.across == Plot::Across::time ? 120.0 : 42.0), inner_height = size.height() - 42.0;
+    const double inner_height = size.height() - 42.0;
     if (plot.band)
         add_band(widget, plot);
     for (const Plot::Stretch& part : plot.learning)
         new LearningItem(&widget, part);
-    add_limits(widget, plot);
     const std::vector<double> heights = label_heights(plot, 11.0 * (high - low) / inner_height);
+    add_limits(widget, plot, {heights.begin() + static_cast<std::ptrdiff_t>(plot.lines.size()), heights.end()});
     int style = 0;
     for (std::size_t i = 0; i < plot.lines.size(); ++i)
-        add_line(widget, plot.lines[i], plot.lines[i].in_question ? style++ : 0, heights[i]);
+        add_line(widget, plot.lines[i], plot.lines[i].in_question ? style++ : 0, plot.to, heights[i]);
     if (plot.across == Plot::Across::time)
-        add_events(widget, plot, inner_width / (plot.to - plot.from));
+        add_events(widget, plot, size.width());
     for (const Plot::FlagMark& mark : plot.flags)
         new FlagItem(&widget, mark);
     add_title(widget, plot);

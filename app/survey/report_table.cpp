@@ -85,7 +85,10 @@ public:
     /// So that a head never stands alone at the foot of a page.
     double least_height() const
     {
-        return head_height(true) + std::max(3.0 * line_height(ReportFont::body), first_group_height() + 2.0);
+        double rows = group_height(0) + 2.0;
+        if (const std::size_t second = group_end(0); second < table_.rows.size() && group_end(second) == table_.rows.size())
+            rows += group_height(second) + 2.0; // of two, neither is left alone
+        return head_height(true) + std::max(3.0 * line_height(ReportFont::body), rows);
     }
 
     void draw(bool first_part)
@@ -93,9 +96,7 @@ public:
         setter_.need(least_height());
         head(!first_part);
         for (std::size_t r = 0; r < table_.rows.size();) {
-            std::size_t end = r + 1;
-            while (end < table_.rows.size() && !table_.rows[end].starts_group)
-                ++end;
+            const std::size_t end = group_end(r);
             group(r, end);
             r = end;
         }
@@ -164,16 +165,30 @@ private:
         return remark(i) ? setter_.measure().wrapped(words, widths_[i], ReportFont::body) : QStringList{words};
     }
 
-    double first_group_height() const
+    std::size_t group_end(std::size_t begin) const
+    {
+        std::size_t end = begin + 1;
+        while (end < table_.rows.size() && !table_.rows[end].starts_group)
+            ++end;
+        return end;
+    }
+
+    double group_height(std::size_t begin) const
     {
         double height = 0.0;
-        for (std::size_t r = 0; r < table_.rows.size() && (r == 0 || !table_.rows[r].starts_group); ++r) {
+        for (std::size_t r = begin; r < group_end(begin); ++r) {
             qsizetype most = 1;
             for (std::size_t i = 0; i < columns_.size(); ++i)
                 most = std::max(most, cell_lines(r, i).size());
             height += static_cast<double>(most) * line_height(ReportFont::body);
         }
         return height;
+    }
+
+    /// What has to fit besides a group that ends at `end`: a last single row, which would stand alone on the next page.
+    double height_of_last_single(std::size_t end) const
+    {
+        return end + 1 == table_.rows.size() ? group_height(end) + 2.0 : 0.0;
     }
 
     /// Rows from `begin` to `end` stay on one page if they fit on any.
@@ -192,7 +207,7 @@ private:
             heights.push_back(static_cast<double>(most) * line_height(ReportFont::body));
             height += heights.back();
         }
-        if (height + 2.0 > setter_.room() && !setter_.at_page_top()) {
+        if (height + height_of_last_single(end) + 2.0 > setter_.room() && !setter_.at_page_top() && (begin > 0 || height + 2.0 > setter_.room())) {
             setter_.rule(Typesetter::left, right_edge(), 1.0, 0.5, true);
             setter_.new_page(setter_.landscape());
             head(true);

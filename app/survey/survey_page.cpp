@@ -126,7 +126,7 @@ void SurveyPage::show_choices()
     ui_->year_button->setChecked(period_kind == QLatin1String("year"));
     ui_->five_years_button->setChecked(period_kind == QLatin1String("five_years"));
     ui_->free_button->setChecked(period_kind == QLatin1String("free"));
-    const QString depth = chosen(depth_choice, QStringLiteral("full"));
+    const QString depth = chosen(depth_choice, QStringLiteral("usual"));
     ui_->brief_button->setChecked(depth == QLatin1String("brief"));
     ui_->usual_button->setChecked(depth == QLatin1String("usual"));
     ui_->full_button->setChecked(depth == QLatin1String("full"));

@@ -16,6 +16,7 @@ public:
     std::vector<ReportPage> take_pages() { return std::move(pages_); }
 
     void new_page(bool landscape);
+    std::size_t pages() const { return pages_.size(); } ///< begun so far: the number of the page in hand
     bool at_page_top() const { return y_ <= top + 0.5; }
     bool landscape() const { return !pages_.empty() && pages_.back().landscape; }
     double width() const { return sheet_size(landscape()).width() - left - right; }

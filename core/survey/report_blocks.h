@@ -20,6 +20,23 @@ struct Paragraph
     Style style = Style::body;
 };
 
+/// Stands in a paragraph for ", page 3": the page on which the section of that title begins, which only who lays the
+/// pages out can know. Nothing is printed where there is no such section.
+std::string page_reference(const std::string& section_title);
+/// The text with `words_for(title)` in place of each reference.
+template <typename WordsFor>
+std::string with_page_references(std::string text, WordsFor words_for)
+{
+    constexpr char open = '\x01', close = '\x02';
+    for (std::size_t begin = text.find(open); begin != std::string::npos; begin = text.find(open, begin)) {
+        const std::size_t end = text.find(close, begin);
+        if (end == std::string::npos)
+            break;
+        text.replace(begin, end - begin + 1, words_for(text.substr(begin + 1, end - begin - 1)));
+    }
+    return text;
+}
+
 /// A small heading inside a section; kept together with what follows.
 struct Heading
 {

@@ -26,7 +26,10 @@ std::string line_of(const std::vector<std::string>& cells)
 
 struct AsText
 {
-    std::string operator()(const Paragraph& paragraph) const { return paragraph.text + "\n"; }
+    std::string operator()(const Paragraph& paragraph) const
+    {
+        return with_page_references(paragraph.text, [](const std::string&) { return std::string(); }) + "\n"; // text has no pages
+    }
     std::string operator()(const Heading& heading) const { return "\n" + heading.text + "\n"; }
     std::string operator()(const FieldList& list) const
     {
@@ -80,6 +83,8 @@ struct AsText
 };
 
 } // namespace
+
+std::string report::page_reference(const std::string& section_title) { return "\x01" + section_title + "\x02"; }
 
 std::string report_as_text(const SurveyReport& report)
 {

@@ -123,6 +123,9 @@ Section summary_section(const Context& context)
         section.blocks.push_back(Paragraph{"None. No quantity has left its own level beyond the thresholds of the method.", {}});
     for (const std::string& line : context.summary.standing)
         section.blocks.push_back(Paragraph{capitalized(line), {}});
+    if (!context.flags.empty() && context.details.depth != ReportDepth::brief)
+        section.blocks.push_back(Paragraph{"Each flag with its workings: under \u201cFlags and questions\u201d" + page_reference("Flags and questions")
+                                               + "; the readings behind it: \u201cTrends\u201d" + page_reference("Trends") + ".", {}});
     section.blocks.push_back(Heading{"What changed in the period"});
     section.blocks.push_back(changes(context));
     section.blocks.push_back(Paragraph{"The day of the last report is not recorded here; the changes are counted from the first day of "

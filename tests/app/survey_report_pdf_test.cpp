@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/survey/event_labels.h"
 #include "app/survey/report_layout.h"
 #include "app/survey/report_writer.h"
 #include "tests/core/survey_fixture.h"
@@ -248,6 +249,46 @@ TEST_F(SurveyPdf, HeadsOfTablesRepeatOnEachPage)
             if (const TextItem* text = std::get_if<TextItem>(&item); text && text->text.endsWith("(continued)"))
                 ++continued;
     EXPECT_GT(continued, 10);
+}
+
+TEST_F(SurveyPdf, TheSummaryNamesThePagesOfFlagsAndTrends)
+{
+    const ReportLayout layout = lay_out(std::make_shared<SurveyReport>(report_of(long_judgement(6, 14), 12)));
+    const auto page_of = [&](const QString& title) {
+        for (std::size_t page = 0; page < layout.pages.size(); ++page)
+            for (const PageItem& item : layout.pages[page].items)
+                if (const TextItem* text = std::get_if<TextItem>(&item); text && text->text == title)
+                    return QString::number(page + 1);
+        return QString();
+    };
+    QString all;
+    for (const PageItem& item : layout.pages[0].items)
+        if (const TextItem* text = std::get_if<TextItem>(&item))
+            all += text->text + QLatin1Char(' ');
+    for (const PageItem& item : layout.pages[1].items)
+        if (const TextItem* text = std::get_if<TextItem>(&item))
+            all += text->text + QLatin1Char(' ');
+    EXPECT_TRUE(all.contains(QStringLiteral("\u201cFlags and questions\u201d, page\u00a0") + page_of("Flags and questions"))) << all.toStdString();
+    EXPECT_TRUE(all.contains(QStringLiteral("\u201cTrends\u201d, page\u00a0") + page_of("Trends"))) << all.toStdString();
+}
+
+TEST(EventLabels, EveryTickHasItsWordOrANumberWithAKey)
+{
+    report::Plot plot;
+    plot.from = 0.0;
+    plot.to = 365.0 * 86400.0;
+    const auto add = [&](double days, const char* text) { plot.events.push_back({days * 86400.0, text}); };
+    add(20.0, "overhaul");
+    add(100.0, "fuel valves changed");
+    add(105.0, "turbocharger washed");
+    add(106.0, "fuel changed");
+    add(250.0, "note");
+    const EventLabels labels = label_events(plot, 500.0, TextMeasure());
+    EXPECT_EQ(labels.at_tick[0], "overhaul");
+    EXPECT_TRUE(labels.is_number[1] && labels.is_number[2]) << "a word would run through the next tick";
+    EXPECT_EQ(labels.at_tick[3], "fuel changed");
+    EXPECT_EQ(labels.at_tick[4], "note");
+    EXPECT_TRUE(labels.key.contains(QStringLiteral("1\u00a01970-04-11\u00a0fuel valves changed"))) << labels.key.toStdString();
 }
 
 TEST_F(SurveyPdf, StoppedWritingLeavesTheOldFile)
