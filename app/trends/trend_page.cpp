@@ -278,6 +278,13 @@ void TrendPage::show_table(bool shown)
 
 void TrendPage::keyPressEvent(QKeyEvent* event)
 {
+    if (ui_->table->isVisible()) {
+        if (event->key() == Qt::Key_Escape)
+            return ui_->table_button->setChecked(false);
+        for (const int key : {Qt::Key_Left, Qt::Key_Right, Qt::Key_Up, Qt::Key_Down, Qt::Key_PageUp, Qt::Key_PageDown})
+            if (event->key() == key)
+                return event->accept(); // the table has come to its end; it does not turn to another quantity
+    }
     switch (event->key()) {
     case Qt::Key_1:
     case Qt::Key_2:
@@ -306,11 +313,13 @@ void TrendPage::resizeEvent(QResizeEvent* event)
 {
     Page::resizeEvent(event);
     ui_->side->setVisible(width() >= 760);
+    // 188 px beside the rail at 1366, up to 420 px on wide screens: lines any longer are hard to follow.
+    ui_->side->setFixedWidth(std::clamp(188 + (width() - 1190) * 42 / 100, 188, 420));
 }
 
 QString TrendPage::foot_text() const
 {
-    return judgement_ ? tr("shaded: usual range · %1").arg(last_reading_text(*judgement_)) : QString();
+    return judgement_ ? tr("shaded: usual range · hollow: not steady, or usable with care · %1").arg(last_reading_text(*judgement_)) : QString();
 }
 
 } // namespace evenstroke

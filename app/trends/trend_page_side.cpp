@@ -43,13 +43,13 @@ std::vector<SideBlock> side_blocks(const TrendPicture& picture)
             mind.append(caution.title);
     if (!mind.isEmpty()) // before what to do; the words in full follow below it
         blocks.push_back({TrendPage::tr("Caution"), mind.join(u'\n'), TrendPage::tr("in full below"), true, false});
+    if (!picture.next_check.isEmpty())
+        blocks.push_back({TrendPage::tr("Check next"), picture.next_check, {}, false, false});
     if (!picture.limit_figure.isEmpty())
         blocks.push_back({TrendPage::tr("Until the limit"), picture.limit_figure, picture.limit_words, false, true});
     if (!picture.fits.isEmpty() || !picture.moved.isEmpty())
         blocks.push_back({picture.fits.isEmpty() ? TrendPage::tr("What moved") : TrendPage::tr("What fits"), picture.fits,
                           picture.moved.join(u'\n'), false, false});
-    if (!picture.next_check.isEmpty())
-        blocks.push_back({TrendPage::tr("Check next"), picture.next_check, {}, false, false});
     add_cautions(false);
     return blocks;
 }

@@ -118,8 +118,10 @@ void add_points(TrendPicture& picture, const Judgement& judgement, const Trend& 
         shown.doubtful = point.doubtful;
         shown.starts_stretch = stretch >= 0 && point.stretch != stretch;
         stretch = point.stretch;
-        if (point.reading < judgement.readings.size()) // same order as the readings
+        if (point.reading < judgement.readings.size()) { // same order as the readings
             shown.load_percent = judgement.readings[point.reading].load_percent;
+            shown.with_care = judgement.readings[point.reading].steadiness == Steadiness::usable_with_care;
+        }
         add_band(shown, trend, point, picture.view);
         shown.spoken = spoken_point(picture, shown, point);
         picture.points.push_back(std::move(shown));

@@ -20,6 +20,7 @@ struct PicturePoint
     double value = 0.0; ///< in the view that is shown
     std::size_t reading = 0;
     bool unsteady = false, doubtful = false;
+    bool with_care = false; ///< usable with care: drawn hollow like an unsteady one
     bool starts_stretch = false; ///< not joined to the point before: work was done between them
     std::optional<double> band_low, band_high;
     std::optional<double> load_percent;
@@ -45,6 +46,8 @@ struct PictureFlag
     double time = 0.0, value = 0.0;
     Level severity = Level::watch;
     bool standing = false;
+    std::optional<double> raised_time, raised_value; ///< where it rose to the level it has now
+    Level level_now = Level::watch;
     QString words; ///< "watch since 12 Nov 2030: Has fallen ..."
 };
 
@@ -64,6 +67,7 @@ struct TrendPicture
     std::vector<PictureFlag> flags;
     std::vector<double> evidence_times, evidence; ///< NaN where nothing could be said
     std::optional<double> threshold;
+    QString threshold_words; ///< "watch from here,\nact since 11 May 2031"
     double first_time = 0.0, last_time = 0.0; ///< of the axis
     // Words
     QString headline, second_line, level_words;

@@ -66,11 +66,18 @@ QString TrendPlot::newest_label() const
 /// Direct labels stand at the right of the lines; they get the room they need.
 void TrendPlot::set_margins()
 {
-    const int words = std::max(QFontMetrics(type(TypeSize::body, true)).horizontalAdvance(newest_label()),
-                               QFontMetrics(type(TypeSize::label)).horizontalAdvance(threshold_label()));
+    const int words = std::max(QFontMetrics(type(TypeSize::body, true)).horizontalAdvance(newest_label()), threshold_label_width());
     const int right = words + label_gap() + 6;
     values_->setMargins(QMargins(left_margin, 20, right, 24));
     evidence_->setMargins(QMargins(left_margin, 20, right, 4));
+}
+
+int TrendPlot::threshold_label_width() const
+{
+    int widest = 0;
+    for (const QString& line : picture_.threshold_words.split(u'\n'))
+        widest = std::max(widest, QFontMetrics(type(TypeSize::label)).horizontalAdvance(line));
+    return widest;
 }
 
 int TrendPlot::label_gap() const { return load_shown_ ? 10 + load_margin : 10; }
@@ -239,8 +246,9 @@ void TrendPlot::add_points()
 {
     QVector<double> steady_times, steady_values, unsteady_times, unsteady_values, doubtful_times, doubtful_values;
     for (const PicturePoint& point : picture_.points) {
-        auto& times = point.doubtful ? doubtful_times : point.unsteady ? unsteady_times : steady_times;
-        auto& values = point.doubtful ? doubtful_values : point.unsteady ? unsteady_values : steady_values;
+        const bool hollow = point.unsteady || point.with_care;
+        auto& times = point.doubtful ? doubtful_times : hollow ? unsteady_times : steady_times;
+        auto& values = point.doubtful ? doubtful_values : hollow ? unsteady_values : steady_values;
         times.append(point.time);
         values.append(std::clamp(point.value, low_, high_)); // a wild one is shown at the edge
     }

@@ -47,7 +47,7 @@ private:
     void set_margins();
     int label_gap() const;
     QString newest_label() const;
-    QString threshold_label() const { return tr("watch from here"); }
+    int threshold_label_width() const;
     void draw_all();
     void style_axes();
     void add_band();

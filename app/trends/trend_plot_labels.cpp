@@ -41,11 +41,16 @@ QCPItemText* TrendPlot::add_text(const QString& text, QCPAxisRect* rect, const Q
 
 void TrendPlot::add_marks()
 {
-    for (const PictureFlag& flag : picture_.flags) {
-        auto* mark = new MarkItem(this, flag.severity, *theme_);
+    const auto add_mark = [this](Level level, double time, double value) {
+        auto* mark = new MarkItem(this, level, *theme_);
         mark->position->setAxes(values_->axis(QCPAxis::atBottom), values_->axis(QCPAxis::atLeft));
-        mark->position->setCoords(flag.time, std::clamp(flag.value, low_, high_));
+        mark->position->setCoords(time, std::clamp(value, low_, high_));
         mark->setClipToAxisRect(false);
+    };
+    for (const PictureFlag& flag : picture_.flags) {
+        add_mark(flag.severity, flag.time, flag.value);
+        if (flag.raised_time && flag.raised_value && flag.standing)
+            add_mark(flag.level_now, *flag.raised_time, *flag.raised_value);
     }
     for (const PictureEvent& event : picture_.events) {
         auto* item = new EventItem(this, values_, *theme_, event.word);
@@ -123,8 +128,9 @@ void TrendPlot::add_evidence()
     if (!picture_.threshold)
         return;
     add_line_at(*picture_.threshold, theme_->watch, 1);
-    QCPItemText* name = add_text(threshold_label(), evidence_, theme_->watch, false);
+    QCPItemText* name = add_text(picture_.threshold_words, evidence_, theme_->watch, false);
     name->position->setCoords(x->range().upper, *picture_.threshold);
+    name->setTextAlignment(Qt::AlignLeft);
     name->setPadding(QMargins(8, 0, 0, 0));
 }
 

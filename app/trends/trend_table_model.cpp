@@ -7,6 +7,8 @@ namespace evenstroke {
 
 void TrendTableModel::show_trend(std::shared_ptr<const Judgement> judgement, const Trend* trend)
 {
+    if (judgement == judgement_ && trend == trend_)
+        return; // so that whoever walks through the table keeps the place
     beginResetModel();
     judgement_ = std::move(judgement);
     trend_ = trend;
@@ -56,6 +58,8 @@ QString TrendTableModel::remark_text(const TrendPoint& value) const
     QStringList words;
     if (value.unsteady)
         words.append(tr("not steady"));
+    else if (value.reading < judgement_->readings.size() && judgement_->readings[value.reading].steadiness == Steadiness::usable_with_care)
+        words.append(tr("usable with care"));
     if (value.doubtful)
         words.append(tr("in doubt"));
     return words.join(QStringLiteral(", "));

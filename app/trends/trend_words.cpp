@@ -55,6 +55,12 @@ void add_flags(TrendPicture& picture, const Judgement& judgement)
             continue;
         shown.value = point->value;
         shown.severity = flag.severity;
+        shown.level_now = flag.level_now;
+        if (flag.raised_at && flag.level_now != flag.severity) {
+            const auto raised = std::find_if(point, picture.points.end(), [&](const PicturePoint& p) { return p.reading >= *flag.raised_at; });
+            shown.raised_time = static_cast<double>(time_of(judgement, *flag.raised_at).time_since_epoch().count());
+            shown.raised_value = (raised == picture.points.end() ? picture.points.back() : *raised).value;
+        }
         shown.standing = has_mark(flag.level_now);
         const QString when = day_text(time_of(judgement, flag.reading));
         shown.words = shown.standing
@@ -62,6 +68,40 @@ void add_flags(TrendPicture& picture, const Judgement& judgement)
                           : tr_("%1 on %2, closed: %3").arg(level_text(flag.severity), when, to_qstring(flag.sentence));
         picture.flags.push_back(std::move(shown));
     }
+}
+
+/// "watch from here,\nact since 11 May 2031": the level it began with at the line, the present one with its day.
+QString threshold_words(const Judgement& judgement, const Flag* flag)
+{
+    if (!flag || flag->absolute_limit)
+        return tr_("flag from here");
+    const QString began = tr_("%1 from here").arg(level_text(flag->severity));
+    if (flag->level_now == flag->severity || !has_mark(flag->level_now))
+        return began;
+    return flag->raised_at ? tr_("%1,\n%2 since %3").arg(began, level_text(flag->level_now), day_text(time_of(judgement, *flag->raised_at)))
+                           : tr_("%1,\n%2 now").arg(began, level_text(flag->level_now));
+}
+
+/// Whether the newest usable reading is beyond the limit already: the engine's own where it has one on that side, else
+/// the customary one, counted from the place's level before the change.
+bool limit_is_passed(const Judgement& judgement, const Flag& flag)
+{
+    const Trend* trend = judgement.find_trend(flag.quantity, flag.subject);
+    if (!trend || !flag.time_to_limit)
+        return false;
+    const auto newest = std::find_if(trend->points.rbegin(), trend->points.rend(), [](const TrendPoint& p) { return !p.doubtful && !p.unsteady; });
+    if (newest == trend->points.rend())
+        return false;
+    const bool rising = flag.time_to_limit->distance > 0.0;
+    for (const AbsoluteLimit& limit : judgement.record->engine.limits)
+        if (limit.quantity == quantity(flag.quantity).name && (rising ? limit.high : limit.low))
+            return rising ? newest->raw >= *limit.high : newest->raw <= *limit.low;
+    const auto value = flag.subject.kind == Place::Kind::cylinder ? newest->apart : newest->deviation;
+    const bool percent = !flag.moved.empty() && flag.moved.front().percent; // then the trend has another unit than the distance
+    if (percent || !value || !trend->usual_low || !trend->usual_high)
+        return false;
+    const double mark = 0.5 * (*trend->usual_low + *trend->usual_high) + flag.time_to_limit->distance;
+    return rising ? *value >= mark : *value <= mark;
 }
 
 const Flag* leading_flag(const TrendPicture& picture, const Judgement& judgement)
@@ -99,6 +139,21 @@ void add_cautions(TrendPicture& picture, const Flag& flag)
                 {to_qstring(caution->title), to_qstring(caution->short_text), caution->emergency});
 }
 
+bool with_care(const Judgement& judgement, std::size_t reading)
+{
+    return reading < judgement.readings.size() && judgement.readings[reading].steadiness == Steadiness::usable_with_care;
+}
+
+/// As it was typed, in its own unit: "67.0 kgf/cm² (65.7 bar)"; the second only where the unit is another one.
+QString read_words(const Judgement& judgement, const Trend& trend, const TrendPoint& point)
+{
+    const QString usual = with_unit(number_text(point.raw, decimals_of(trend.quantity)), unit_text(trend.quantity));
+    const Value* value = judgement.record->readings.at(point.reading).find(trend.quantity, trend.place);
+    if (!value || value->typed.empty() || value->unit == quantity(trend.quantity).unit)
+        return usual;
+    return tr_("%1 (%2)").arg(with_unit(to_qstring(value->typed), to_qstring(unit(value->unit).symbol)), usual);
+}
+
 } // namespace
 
 QString months_text(const TimeToLimit& limit)
@@ -129,6 +184,8 @@ QString spoken_point(const TrendPicture& picture, const PicturePoint& shown, con
     words.append(with_unit(number, picture.unit_symbol));
     if (shown.unsteady)
         words.append(tr_("not steady"));
+    else if (shown.with_care)
+        words.append(tr_("usable with care"));
     if (shown.doubtful)
         words.append(tr_("in doubt"));
     return words.join(QStringLiteral(", "));
@@ -138,6 +195,7 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
 {
     add_flags(picture, judgement);
     const Flag* flag = leading_flag(picture, judgement);
+    picture.threshold_words = threshold_words(judgement, flag);
     if (!flag) {
         add_quiet_words(picture, trend);
         return;
@@ -147,8 +205,10 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     picture.second_line = to_qstring(flag->chance_sentence);
     picture.level_words = standing_words(judgement, *flag);
     if (flag->time_to_limit) {
-        picture.limit_figure = months_text(*flag->time_to_limit);
-        picture.limit_words = tr_("%1, nine times in ten").arg(to_qstring(flag->time_to_limit->limit_text));
+        const bool passed = limit_is_passed(judgement, *flag);
+        const QString limit = to_qstring(flag->time_to_limit->limit_text);
+        picture.limit_figure = passed ? tr_("limit passed") : months_text(*flag->time_to_limit);
+        picture.limit_words = passed ? tr_("by the newest usable reading: %1").arg(limit) : tr_("to %1; nine times in ten").arg(limit);
     }
     picture.fits = to_qstring(flag->pattern_words);
     for (const MovedQuantity& moved : flag->moved)
@@ -165,7 +225,7 @@ QString point_words(const Judgement& judgement, const Trend& trend, std::size_t 
         return {};
     const int decimals = decimals_of(trend.quantity);
     const QString unit_symbol = unit_text(trend.quantity);
-    QStringList words{tr_("read %1").arg(with_unit(number_text(point->raw, decimals), unit_symbol))};
+    QStringList words{tr_("read %1").arg(read_words(judgement, trend, *point))};
     if (point->corrected)
         words.append(tr_("corrected %1").arg(number_text(*point->corrected, decimals)));
     if (point->expected)
@@ -178,6 +238,8 @@ QString point_words(const Judgement& judgement, const Trend& trend, std::size_t 
         words.append(QStringLiteral("± ") + number_text(*point->uncertainty, decimals));
     if (point->unsteady)
         words.append(tr_("not steady"));
+    else if (with_care(judgement, reading))
+        words.append(tr_("usable with care"));
     if (point->doubtful)
         words.append(tr_("in doubt, left out of the judging"));
     return tr_("%1: %2").arg(day_text(time_of(judgement, reading)), words.join(QStringLiteral(", ")));

@@ -216,7 +216,12 @@ TEST_F(Desk, DigitsChangeTheViewOfTheTrendAndArrowsWalkThroughIt)
     EXPECT_TRUE(page->plot().load_shown());
     key(Qt::Key_A);
     EXPECT_FALSE(page->plot().isVisible());
-    key(Qt::Key_A);
+    for (int i = 0; i < 30; ++i)
+        key(Qt::Key_PageDown);
+    EXPECT_EQ(workplace_.selection().quantity, find_quantity("exhaust_temperature")) << "the end of the table is no way to another quantity";
+    EXPECT_EQ(workplace_.selection().place, Place::cylinder(3));
+    key(Qt::Key_Escape);
+    EXPECT_TRUE(page->plot().isVisible());
     page->copy();
     EXPECT_TRUE(QApplication::clipboard()->text().contains(u'\t'));
     EXPECT_TRUE(page->save_as(folder_.filePath(QStringLiteral("trend.csv"))));

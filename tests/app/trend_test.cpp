@@ -48,6 +48,66 @@ TEST(TrendPicture, CarriesTheFlagWhereItStartedAndItsWords)
     EXPECT_FALSE(picture.next_check.isEmpty());
 }
 
+TEST(TrendPicture, NamesTheLevelItBeganWithAndTheOneItHas)
+{
+    auto judgement = std::make_shared<Judgement>(*invented::judgement());
+    EXPECT_EQ(make_trend_picture(*judgement, compression_of(4)).threshold_words, "watch from here");
+    EXPECT_EQ(make_trend_picture(*judgement, compression_of(2)).threshold_words, "flag from here");
+    for (Flag& flag : judgement->flags)
+        if (flag.subject == Place::cylinder(4)) {
+            flag.level_now = Level::act;
+            flag.raised_at = judgement->readings.size() - 1;
+        }
+    const TrendPicture picture = make_trend_picture(*judgement, compression_of(4));
+    EXPECT_TRUE(picture.threshold_words.startsWith("watch from here,\nact since ")) << picture.threshold_words.toStdString();
+    ASSERT_EQ(picture.flags.size(), 1U);
+    ASSERT_TRUE(picture.flags.front().raised_time);
+    EXPECT_EQ(*picture.flags.front().raised_time, picture.points.back().time) << "each level has its mark at its own point";
+}
+
+TEST(TrendPicture, SaysThatALimitIsPassedWhereTheNewestReadingIsBeyondIt)
+{
+    auto judgement = std::make_shared<Judgement>(*invented::judgement());
+    auto record = std::make_shared<EngineRecord>(*judgement->record);
+    const Trend* trend = judgement->find_trend(*find_quantity("compression_pressure"), Place::cylinder(4));
+    AbsoluteLimit limit;
+    limit.quantity = "compression_pressure";
+    limit.low = trend->points.back().raw + 0.1;
+    record->engine.limits = {limit};
+    judgement->record = record;
+    EXPECT_EQ(make_trend_picture(*judgement, compression_of(4)).limit_figure, "limit passed");
+    record->engine.limits[0].low = trend->points.back().raw - 20.0;
+    EXPECT_EQ(make_trend_picture(*judgement, compression_of(4)).limit_figure, "3 to 11 months");
+}
+
+TEST(TrendPicture, ReadingsToBeUsedWithCareAreHollowAndNamed)
+{
+    auto judgement = std::make_shared<Judgement>(*invented::judgement());
+    judgement->readings.back().steadiness = Steadiness::usable_with_care;
+    const TrendPicture picture = make_trend_picture(*judgement, compression_of(4));
+    EXPECT_TRUE(picture.points.back().with_care);
+    EXPECT_TRUE(picture.points.back().spoken.contains("usable with care")) << picture.points.back().spoken.toStdString();
+}
+
+TEST(TrendPicture, WhatWasReadIsShownInTheUnitItWasTypedIn)
+{
+    auto judgement = std::make_shared<Judgement>(*invented::judgement());
+    auto record = std::make_shared<EngineRecord>(*judgement->record);
+    const Trend* trend = judgement->find_trend(*find_quantity("compression_pressure"), Place::cylinder(4));
+    const std::size_t reading = trend->points.back().reading;
+    auto& values = record->readings[reading].values;
+    std::erase_if(values, [&](const Value& value) { return value.quantity == trend->quantity && value.place == trend->place; });
+    Value value;
+    value.quantity = trend->quantity;
+    value.place = trend->place;
+    value.typed = "67.0";
+    value.number = 67.0;
+    value.unit = find_unit("kgf/cm2").value().id;
+    values.push_back(value);
+    judgement->record = record;
+    EXPECT_TRUE(point_words(*judgement, *trend, reading).contains("read 67.0\u00a0kgf/cm² (")) << point_words(*judgement, *trend, reading).toStdString();
+}
+
 TEST(TrendPicture, FallsBackToAViewThatThePlaceHas)
 {
     const auto judgement = invented::judgement();
