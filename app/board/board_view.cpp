@@ -116,6 +116,12 @@ BoardView::BoardView(QWidget* parent) : QTableView(parent)
     setHorizontalScrollMode(ScrollPerPixel);
     setVerticalScrollMode(ScrollPerPixel);
     setAccessibleName(tr("Strip board"));
+    connect(this, &QTableView::entered, this, [this](const QModelIndex& index) {
+        update_around(hovered_);
+        hovered_ = index;
+        update_around(index);
+    });
+    connect(this, &QTableView::viewportEntered, this, [this] { update_around(hovered_); });
     connect(this, &QTableView::doubleClicked, this, [this](const QModelIndex& index) {
         if (const BoardCell* cell = model_.cell(index))
             emit asked_for(cell->quantity, cell->place);
@@ -198,9 +204,18 @@ void BoardView::focusInEvent(QFocusEvent* event)
     viewport()->update();
 }
 
+/// Frame and hover reach a little beyond the cell, over its neighbours' edges.
+void BoardView::update_around(const QModelIndex& index)
+{
+    if (index.isValid())
+        viewport()->update(visualRect(index).adjusted(-8, -2, 8, 2));
+}
+
 void BoardView::currentChanged(const QModelIndex& current, const QModelIndex& previous)
 {
     QTableView::currentChanged(current, previous);
+    update_around(previous);
+    update_around(current);
     const BoardCell* cell = model_.cell(current);
     if (cell && !filling_)
         emit moved_to(cell->quantity, cell->place);

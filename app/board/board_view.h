@@ -3,6 +3,7 @@
 
 #include "app/board/board_model.h"
 
+#include <QPersistentModelIndex>
 #include <QTableView>
 
 namespace evenstroke {
@@ -31,6 +32,8 @@ protected:
     void keyPressEvent(QKeyEvent* event) override;
 
 private:
+    void update_around(const QModelIndex& index);
+    QPersistentModelIndex hovered_;
     void set_sizes();
     void set_spans();
     int wanted_span() const;
