@@ -13,6 +13,8 @@
 #include <QStandardItemModel>
 #include <QVBoxLayout>
 
+#include <algorithm>
+
 namespace evenstroke {
 
 namespace {
@@ -60,16 +62,19 @@ Chooser::Chooser(const std::vector<Choice>& choices, Take take, QWidget* parent)
 void Chooser::fill(const std::vector<Choice>& choices)
 {
     int chosen_row = 0, widest = 0;
+    // Where one line has a mark the others keep its room, so that the texts stand under each other.
+    const bool any_mark = std::any_of(choices.begin(), choices.end(), [](const Choice& choice) { return has_mark(choice.level); });
+    QPixmap blank(mark_size, mark_size);
+    blank.fill(Qt::transparent);
     for (const Choice& choice : choices) {
-        auto* item = new QStandardItem(choice.text);
+        const QString text = has_mark(choice.level) ? tr("%1 · %2").arg(choice.text, level_text(choice.level)) : choice.text;
+        auto* item = new QStandardItem(text);
         item->setData(choice.value);
-        if (has_mark(choice.level)) {
-            item->setIcon(mark_pixmap(choice.level, mark_size, devicePixelRatioF()));
-            item->setAccessibleText(tr("%1, %2").arg(choice.text, level_text(choice.level)));
-        }
+        if (any_mark)
+            item->setIcon(has_mark(choice.level) ? mark_pixmap(choice.level, mark_size, devicePixelRatioF()) : blank);
         QFont font = type(TypeSize::body, choice.chosen);
         item->setFont(font);
-        widest = std::max(widest, QFontMetrics(font).horizontalAdvance(choice.text));
+        widest = std::max(widest, QFontMetrics(font).horizontalAdvance(text));
         if (choice.chosen)
             chosen_row = model_->rowCount();
         model_->appendRow(item);

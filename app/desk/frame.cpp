@@ -52,7 +52,7 @@ void Frame::lay_out()
     grid->addWidget(foot_, 2, 0, 1, 2);
     grid->setRowStretch(1, 1);
     grid->setColumnStretch(1, 1);
-    setMinimumSize(960, 600);
+    setMinimumSize(1024, 700); // nothing is cut down to here
     resize(1366, 768);
 }
 
@@ -149,6 +149,9 @@ void Frame::refresh_now()
     refresh_.stop();
     if (current_)
         current_->refresh();
+    for (const Entry& entry : entries_)
+        if (entry.about.remark)
+            rail_->set_remark(entry.about.name, workplace_.is_open() ? entry.about.remark(workplace_) : QString());
     refresh_frame();
 }
 

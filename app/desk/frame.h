@@ -26,6 +26,8 @@ struct PageEntry
     QChar key;
     std::function<Page*(Workplace&)> make;
     std::function<int(const Workplace&)> count_new = {}; ///< shown on the rail; none: never a count
+    /// Shown small on the rail, asked for when the page or the history changes: "draft of 1 Dec".
+    std::function<QString(Workplace&)> remark = {};
     bool without_history = false; ///< can be shown while no history is open
     bool on_rail = true;          ///< else it is reached from where its subject stands
 };

@@ -91,6 +91,8 @@ HistoryPage::HistoryPage(Workplace& place, QWidget* parent)
     ui_->problem->hide();
     ui_->work->hide();
     ui_->report->hide();
+    ui_->page->setStretchFactor(ui_->report, 1); // what was taken in and refused has the free half of the page
+    ui_->report->setMinimumHeight(160);
     connect(ui_->open_button, &QPushButton::clicked, this, &HistoryPage::ask_open);
     connect(ui_->new_button, &QPushButton::clicked, this, &HistoryPage::ask_new);
     connect(ui_->folder_button, &QPushButton::clicked, this, &HistoryPage::ask_folder);

@@ -4,6 +4,7 @@
 #include "app/board/board_page.h"
 #include "app/desk/frame.h"
 #include "app/desk/history_page.h"
+#include "app/desk/number_text.h"
 #include "app/desk/workplace.h"
 #include "app/entry/entry_page.h"
 #include "app/events/events_page.h"
@@ -13,6 +14,7 @@
 #include "app/settings/engine_page.h"
 #include "app/survey/survey_page.h"
 #include "app/trends/trend_page.h"
+#include "storage/reading_store.h"
 
 #include <algorithm>
 
@@ -37,6 +39,19 @@ int new_flags(const Workplace& workplace)
                                           [newest](const Flag& flag) { return flag.reading == newest; }));
 }
 
+/// The newest reading of the engine that was begun and is not closed.
+QString open_draft(Workplace& workplace)
+{
+    if (!workplace.history() || workplace.selection().engine.isEmpty())
+        return {};
+    const auto readings = storage::ReadingStore(*workplace.history()).list(storage::Owner::engine(to_std(workplace.selection().engine)));
+    if (!readings.has_value())
+        return {};
+    const auto& all = readings.value();
+    const auto draft = std::find_if(all.rbegin(), all.rend(), [](const storage::ReadingEntry& entry) { return entry.state == ReadingState::draft; });
+    return draft == all.rend() ? QString() : Frame::tr("draft of %1").arg(day_text(draft->taken_at.utc).section(QLatin1Char(' '), 0, 1));
+}
+
 } // namespace
 
 void add_all_pages(Frame& frame)
@@ -45,12 +60,12 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("board"), Frame::tr("Strip board"), u'B', maker<BoardPage>(), new_flags});
     frame.add_page({QStringLiteral("trend"), Frame::tr("Trend"), u'T', maker<TrendPage>()});
     frame.add_page({QStringLiteral("reading"), Frame::tr("One reading"), u'R', maker<ReadingPage>()});
-    frame.add_page({QStringLiteral("enter"), Frame::tr("Enter"), u'E', maker<EntryPage>()});
+    frame.add_page({QStringLiteral("enter"), Frame::tr("Enter"), u'E', maker<EntryPage>(), {}, open_draft});
     frame.add_page({QStringLiteral("events"), Frame::tr("Events"), u'D', maker<EventsPage>()});
     frame.add_page({QStringLiteral("engine"), Frame::tr("Engine"), u'G', maker<EnginePage>()});
     frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});
-    frame.add_page({QStringLiteral("workings"), Frame::tr("Workings"), u'W', maker<WorkingsPage>(), {}, false, false});
-    frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, true});
+    frame.add_page({QStringLiteral("workings"), Frame::tr("Workings"), u'W', maker<WorkingsPage>(), {}, {}, false, false});
+    frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, {}, true});
 }
 
 } // namespace evenstroke

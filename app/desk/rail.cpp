@@ -32,6 +32,14 @@ void RailButton::set_count(int count)
     update();
 }
 
+void RailButton::set_remark(const QString& remark)
+{
+    remark_ = remark;
+    setAccessibleDescription(remark);
+    setToolTip(remark.isEmpty() ? tr("%1, key %2").arg(title_, QString(key_)) : tr("%1, key %2: %3").arg(title_, QString(key_), remark));
+    update();
+}
+
 QSize RailButton::sizeHint() const { return {rail_width, line_height}; }
 
 void RailButton::paintEvent(QPaintEvent*)
@@ -54,6 +62,13 @@ void RailButton::paintEvent(QPaintEvent*)
         painter.setFont(type(TypeSize::label));
         painter.setPen(t.ink);
         painter.drawText(rect().adjusted(0, 0, -20, 0), Qt::AlignVCenter | Qt::AlignRight, QString::number(count_));
+    }
+    if (count_ == 0 && !remark_.isEmpty()) {
+        const int title_right = title_left + QFontMetrics(painter.font()).horizontalAdvance(title_) + 8;
+        painter.setFont(type(TypeSize::label));
+        painter.setPen(t.ink);
+        const QRect area = rect().adjusted(title_right, 0, -8, 0);
+        painter.drawText(area, Qt::AlignVCenter | Qt::AlignRight, painter.fontMetrics().elidedText(remark_, Qt::ElideRight, area.width()));
     }
     if (hasFocus()) {
         painter.setPen(t.line);
@@ -107,6 +122,12 @@ void Rail::set_count(const QString& name, int count)
 {
     if (RailButton* button = find(name))
         button->set_count(count);
+}
+
+void Rail::set_remark(const QString& name, const QString& remark)
+{
+    if (RailButton* button = find(name))
+        button->set_remark(remark);
 }
 
 void Rail::set_enabled(const QString& name, bool enabled)

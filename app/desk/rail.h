@@ -19,6 +19,7 @@ class RailButton : public QAbstractButton
 public:
     RailButton(QChar key, const QString& title, QWidget* parent = nullptr);
     void set_count(int count);
+    void set_remark(const QString& remark); ///< "draft of 1 Dec": small, at the right; a count goes before
     QSize sizeHint() const override;
 
 protected:
@@ -26,7 +27,7 @@ protected:
 
 private:
     QChar key_;
-    QString title_;
+    QString title_, remark_;
     int count_ = 0;
 };
 
@@ -42,6 +43,7 @@ public:
     void add_space();
     void set_current(const QString& name);
     void set_count(const QString& name, int count);
+    void set_remark(const QString& name, const QString& remark);
     void set_enabled(const QString& name, bool enabled);
 
 signals:

@@ -75,7 +75,23 @@ int FleetModel::row_of(const QString& engine_id) const
     return -1;
 }
 
-QString FleetModel::fold_text() const { return tr("%n engine(s) quiet", nullptr, quiet()); }
+QString FleetModel::fold_text() const
+{
+    const auto count = [this](auto wanted) {
+        return static_cast<int>(std::count_if(rows_.begin() + troubled_, rows_.end(), [&](const FleetRow& row) { return wanted(row.summary.level); }));
+    };
+    const int none = count([](Level level) { return level == Level::no_data; });
+    const int learning = count([](Level level) { return level == Level::learning; });
+    const int still = quiet() - none - learning;
+    QStringList words;
+    if (still > 0)
+        words.append(tr("%n engine(s) quiet", nullptr, still));
+    if (learning > 0)
+        words.append(still > 0 ? tr("%1 learning").arg(learning) : tr("%n engine(s) learning", nullptr, learning));
+    if (none > 0)
+        words.append(words.isEmpty() ? tr("%n engine(s) without data yet", nullptr, none) : tr("%1 without data yet").arg(none));
+    return words.join(QStringLiteral(" · "));
+}
 
 bool FleetModel::is_late(const FleetRow& row) const { return days_late(row.summary, now_).has_value(); }
 
@@ -98,6 +114,10 @@ QString FleetModel::sentence_words(const FleetRow& row) const
     QString words = row.summary.sentence;
     if (words.isEmpty() && is_late(row))
         words = tr("No usable reading since %1.").arg(day_text(*row.summary.last_usable));
+    if (words.isEmpty() && row.summary.level == Level::learning)
+        words = tr("Learning: too few usable readings to compare with yet.");
+    if (words.isEmpty() && row.summary.level == Level::no_data)
+        words = tr("No data yet to compare.");
     if (row.summary.places_concerned > 1)
         words += tr(" %n place(s) concerned.", nullptr, row.summary.places_concerned);
     return words;

@@ -28,7 +28,7 @@ public:
     QVariant data(const QModelIndex& index, int role = Qt::DisplayRole) const override;
     QVariant headerData(int section, Qt::Orientation orientation, int role = Qt::DisplayRole) const override;
 
-    /// The line "31 engines quiet".
+    /// The line "31 engines quiet"; engines that learn or have no data are counted apart.
     bool is_fold(int row) const { return row == troubled_ && quiet() > 0; }
     /// Null for the fold line.
     const FleetRow* row(int number) const;

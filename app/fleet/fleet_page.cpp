@@ -52,7 +52,7 @@ QString FleetPage::foot_text() const
     if (model.engines() == 0)
         return {};
     return tr("%n engine(s)", nullptr, model.engines()) + QStringLiteral(" · ")
-           + tr("%1 quiet").arg(model.quiet()) + QStringLiteral(" · ") + tr("shaded: usual range");
+           + (model.quiet() > 0 ? model.fold_text() : tr("none quiet")) + QStringLiteral(" · ") + tr("shaded: usual range");
 }
 
 QWidget* FleetPage::first_focus() { return view_; }

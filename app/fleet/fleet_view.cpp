@@ -49,8 +49,12 @@ void paint_strip(QPainter& painter, const QRectF& area, const FleetStrip& strip,
     painter.setBrush(t.line);
     painter.drawEllipse(last, 2.0, 2.0);
     painter.restore();
-    if (has_mark(strip.level))
-        draw_mark(painter, QRectF(area.right() - 10.0, area.top() - 9.0, 9.0, 9.0), strip.level, t);
+    if (!has_mark(strip.level))
+        return;
+    draw_mark(painter, QRectF(area.right() - 10.0, area.top() - 9.0, 9.0, 9.0), strip.level, t);
+    painter.setFont(type(TypeSize::label));
+    painter.setPen(t.level_colour(strip.level));
+    painter.drawText(QRectF(area.left(), area.top() - 12.0, area.width() - 14.0, 14.0), Qt::AlignRight | Qt::AlignVCenter, level_text(strip.level));
 }
 
 void paint_two_lines(QPainter& painter, const QRect& area, const QString& first, const QString& second, const Theme& t)

@@ -113,6 +113,21 @@ TEST(Fleet, FoldsTheQuietOnesIntoOneLine)
     EXPECT_EQ(model.rowCount(), 2);
 }
 
+TEST(Fleet, EnginesThatLearnAreNotCountedAmongTheQuiet)
+{
+    FleetRow learning = row("Long Furrow", false), empty = row("High Meadow", false);
+    learning.summary.level = Level::learning;
+    empty.summary.level = Level::no_data;
+    FleetModel model;
+    model.show_fleet({row("Quiet Barley", false), learning, empty}, now);
+    EXPECT_TRUE(model.fold_text().startsWith("1 engine")) << model.fold_text().toStdString();
+    EXPECT_TRUE(model.fold_text().contains("1 learning")) << model.fold_text().toStdString();
+    EXPECT_TRUE(model.fold_text().contains("1 without data")) << model.fold_text().toStdString();
+    model.show_fleet({learning}, now);
+    EXPECT_FALSE(model.fold_text().contains("quiet")) << model.fold_text().toStdString();
+    EXPECT_TRUE(model.sentence_words(learning).startsWith("Learning")) << model.sentence_words(learning).toStdString();
+}
+
 TEST(Fleet, SaysInWordsHowOldALateReadingIs)
 {
     FleetModel model;

@@ -73,6 +73,14 @@ TEST(Theme, KeepsTextReadableOnPageAndSheet)
     }
 }
 
+TEST(Theme, AnEmptyBoxIsSeenOnTheScreen)
+{
+    // 3:1: Web Content Accessibility Guidelines 2.1, criterion 1.4.11, non-text contrast (from memory).
+    for (const ThemeKind kind : {ThemeKind::day, ThemeKind::night})
+        for (const QColor& ground : {theme_of(kind).page, theme_of(kind).sheet})
+            EXPECT_GE(contrast(theme_of(kind).box, ground), 3.0) << static_cast<int>(kind);
+}
+
 TEST(Theme, PrintNeedsNoColour)
 {
     const Theme& t = theme_of(ThemeKind::print);
