@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/desk/theme.h"
 
+#include "app/desk/box_colour.h"
+
 #include <QApplication>
 #include <QFontDatabase>
 #include <QPalette>
@@ -18,7 +20,7 @@ Theme make_day()
     t.kind = ThemeKind::day;
     t.page = QColor(0xF6F3EA), t.sheet = QColor(0xFFFDF8);
     t.ink = QColor(0x1F2A33), t.muted = QColor(0x57616B);
-    t.rule = QColor(0xDDD6C6), t.box = QColor(0x8C8778);
+    t.rule = QColor(0xDDD6C6);
     t.line = QColor(0x1D4E79), t.others = QColor(0xB4AFA3), t.band = QColor(0xDDE7EE);
     t.note = QColor(0x57616B), t.watch = QColor(0x96600F), t.act = QColor(0x8A2B5C), t.ask = QColor(0x1B6670);
     return t;
@@ -30,7 +32,7 @@ Theme make_night()
     t.kind = ThemeKind::night;
     t.page = QColor(0x14171A), t.sheet = QColor(0x1B2024);
     t.ink = QColor(0xD9D3C5), t.muted = QColor(0xA09A8E);
-    t.rule = QColor(0x2C3339), t.box = QColor(0x6E757B);
+    t.rule = QColor(0x2C3339);
     t.line = QColor(0x8DB7DA), t.others = QColor(0x565C61), t.band = QColor(0x25323D);
     t.note = QColor(0xA09A8E), t.watch = QColor(0xE0A94A), t.act = QColor(0xDB7FAE), t.ask = QColor(0x68B9C2);
     return t;
@@ -43,7 +45,7 @@ Theme make_print()
     t.page = t.sheet = Qt::white;
     t.ink = t.line = t.note = t.watch = t.act = t.ask = Qt::black;
     t.muted = t.others = QColor(0x666666); // 60 % grey
-    t.rule = t.box = QColor(0xC8C8C8);
+    t.rule = QColor(0xC8C8C8);
     t.band = QColor(0xE6E6E6);
     return t;
 }
@@ -141,6 +143,11 @@ void keep_room_for_bold(QWidget& within)
             button->setMinimumWidth(bold.horizontalAdvance(button->text()) + 2);
 }
 
+QColor box_colour(ThemeKind kind)
+{
+    return kind == ThemeKind::night ? QColor(0x6E757B) : kind == ThemeKind::day ? QColor(0x8C8778) : QColor(0xC8C8C8);
+}
+
 QString style_sheet(const Theme& t)
 {
     QString sheet = QStringLiteral(R"(
@@ -197,7 +204,7 @@ QSplitter::handle { background: %rule; }
     const std::pair<const char*, QColor> colours[] = {
         {"%online", t.kind == ThemeKind::night ? t.page : t.sheet}, {"%ink", t.ink}, {"%muted", t.muted},
         {"%sheet", t.sheet}, {"%rule", t.rule}, {"%line", t.line}, {"%band", t.band}, {"%act", t.act},
-        {"%page", t.page}, {"%box", t.box}};
+        {"%page", t.page}, {"%box", box_colour(t.kind)}};
     for (const auto& [name, colour] : colours)
         sheet.replace(QLatin1String(name), colour.name());
     return sheet;

@@ -24,7 +24,6 @@ struct Theme
     QColor page, sheet;  ///< behind everything; behind what is typed or chosen
     QColor ink, muted;   ///< text; labels and second lines
     QColor rule;         ///< lines between groups and the grid of plots
-    QColor box;          ///< around a box to be filled in: 3:1 on page and sheet, so that an empty one is seen
     QColor line, others; ///< the line in question; the lines it is compared with
     QColor band;         ///< the usual or expected band, opaque (print: use `band_brush`)
     QColor note, watch, act, ask;

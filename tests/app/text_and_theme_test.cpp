@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/desk/box_colour.h"
 #include "app/desk/theme.h"
 #include "app/desk/trail.h"
 #include "tests/app/pictures.h"
@@ -78,7 +79,7 @@ TEST(Theme, AnEmptyBoxIsSeenOnTheScreen)
     // 3:1: Web Content Accessibility Guidelines 2.1, criterion 1.4.11, non-text contrast (from memory).
     for (const ThemeKind kind : {ThemeKind::day, ThemeKind::night})
         for (const QColor& ground : {theme_of(kind).page, theme_of(kind).sheet})
-            EXPECT_GE(contrast(theme_of(kind).box, ground), 3.0) << static_cast<int>(kind);
+            EXPECT_GE(contrast(box_colour(kind), ground), 3.0) << static_cast<int>(kind);
 }
 
 TEST(Theme, PrintNeedsNoColour)
