@@ -18,7 +18,7 @@ namespace evenstroke {
 
 namespace {
 
-constexpr int row_height = 56, fold_height = 32, ship_width = 172, date_width = 104, strip_width = 88, gap = 12;
+constexpr int row_height = 56, fold_height = 32, ship_width = 172, date_width = 104, strip_width = 88, strip_least = 46, sentence_least = 240, gap = 12;
 constexpr int sentence_top = 8, sentence_indent = 64;
 constexpr double strip_reach = 3.2; // standard deviations from the middle to the edge while quiet
 
@@ -185,10 +185,13 @@ void FleetView::set_sizes()
 {
     setColumnWidth(FleetModel::ship, ship_width);
     setColumnWidth(FleetModel::last_reading, date_width);
+    // In a narrow window the strips give way before the sentence does.
+    const int room = (viewport()->width() - ship_width - date_width - sentence_least) / fleet_strip_count;
+    const int strip = std::clamp(room, strip_least, strip_width);
     for (int i = 0; i < fleet_strip_count; ++i)
-        setColumnWidth(FleetModel::first_strip + i, strip_width);
-    const int taken = ship_width + date_width + fleet_strip_count * strip_width;
-    setColumnWidth(FleetModel::sentence, std::max(240, viewport()->width() - taken));
+        setColumnWidth(FleetModel::first_strip + i, strip);
+    const int taken = ship_width + date_width + fleet_strip_count * strip;
+    setColumnWidth(FleetModel::sentence, std::max(sentence_least, viewport()->width() - taken));
     for (int row = 0; row < model_.rowCount(); ++row)
         if (const int height = height_of(row); rowHeight(row) != height)
             setRowHeight(row, height);

@@ -78,6 +78,20 @@
 <context>
     <name>evenstroke::FleetModel</name>
     <message numerus="yes">
+        <source>%n engine(s) learning</source>
+        <translation>
+            <numerusform>1 engine learning</numerusform>
+            <numerusform>%n engines learning</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n engine(s) without data yet</source>
+        <translation>
+            <numerusform>1 engine without data yet</numerusform>
+            <numerusform>%n engines without data yet</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
         <source>%n engine(s) quiet</source>
         <translation>
             <numerusform>1 engine quiet</numerusform>
