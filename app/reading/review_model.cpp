@@ -114,7 +114,7 @@ QVariant ReviewModel::data(const QModelIndex& index, int role) const
             return has_mark(level) ? QStringLiteral("%1: %2").arg(level_text(level), text(shown, index.column()))
                                    : text(shown, index.column());
         return text(shown, index.column());
-    case Qt::ToolTipRole: return index.column() == verdict || !shown.line ? text(shown, index.column()) : QVariant();
+    case Qt::ToolTipRole: return index.column() == verdict || index.column() == words || !shown.line ? text(shown, index.column()) : QVariant();
     default: return {};
     }
 }

@@ -17,7 +17,7 @@ namespace {
 
 constexpr int row_height = 24, heading_top = 12, sentence_gap = 2, mark_side = 12, indent = 12;
 /// Pixels at 96 dots an inch; words and verdict share what is left.
-constexpr std::array<int, ReviewModel::column_count> widths{0, 24, 66, 54, 60, 60, 62, 50, 0};
+constexpr std::array<int, ReviewModel::column_count> widths{0, 22, 66, 54, 62, 62, 62, 50, 0};
 constexpr int fewest_words = 184, fraction_room = 30;
 constexpr double share_of_words = 0.6;
 
@@ -50,10 +50,15 @@ public:
             return;
         const Theme& t = theme();
         const bool in_hand = index.row() == view_.currentIndex().row();
-        if (in_hand)
-            painter->fillRect(row->line ? option.rect : option.rect.adjusted(0, heading_top - 2, 0, 0), t.band);
-        else if (option.state & QStyle::State_MouseOver)
-            painter->fillRect(option.rect, t.sheet);
+        // Words may reach into the column of numbers of places: both have their ground painted at once.
+        const QRect ground = index.column() == ReviewModel::words && row->line
+                                 ? option.rect.adjusted(0, 0, widths[ReviewModel::place], 0)
+                                 : option.rect;
+        const bool painted = index.column() == ReviewModel::place && row->line;
+        if (in_hand && !painted)
+            painter->fillRect(row->line ? ground : ground.adjusted(0, heading_top - 2, 0, 0), t.band);
+        else if (option.state & QStyle::State_MouseOver && !painted)
+            painter->fillRect(ground, t.sheet);
         if (!row->line) {
             if (index.column() == 0)
                 paint_heading(*painter, option.rect, *row->section, t);
@@ -121,7 +126,8 @@ private:
     {
         if (row.repeats)
             return;
-        const QRect room = area.adjusted(indent, 0, -4, 0);
+        const bool no_number = row.line->place.kind == Place::Kind::engine && !row.line->spread;
+        const QRect room = area.adjusted(indent, 0, no_number ? widths[ReviewModel::place] - 4 : -4, 0);
         const QString unit = to_qstring(row.line->unit);
         const QFontMetrics small(type(TypeSize::label));
         const int unit_width = unit.isEmpty() ? 0 : small.horizontalAdvance(unit) + 6;
@@ -176,7 +182,7 @@ ReviewView::ReviewView(QWidget* parent) : QTableView(parent)
     horizontalHeader()->setMinimumSectionSize(10);
     horizontalHeader()->setSectionsClickable(false);
     horizontalHeader()->setHighlightSections(false);
-    horizontalHeader()->setDefaultAlignment(Qt::AlignRight | Qt::AlignVCenter);
+    horizontalHeader()->setStyleSheet(QStringLiteral("QHeaderView::section { padding: 4px 1px; }"));
     setShowGrid(false);
     setWordWrap(false);
     setFrameShape(QFrame::NoFrame);

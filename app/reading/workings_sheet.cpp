@@ -14,7 +14,7 @@ namespace evenstroke {
 
 namespace {
 
-constexpr int bar_width = 60, bar_height = 10, sharpness = 3; // a bar is drawn finer than it is shown, for paper
+constexpr int bar_width = 60, narrow_bar_width = 36, bar_height = 10, sharpness = 3; // a bar is drawn finer than it is shown, for paper
 constexpr double bar_thickness = 4.0;
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
@@ -73,7 +73,10 @@ private:
     QString number_cells(const QString& number, int space = 16) const
     {
         const auto [left, right] = at_decimal_sign(number);
-        return QStringLiteral("<td align=\"right\" style=\"padding-left: %3px;\">%1</td><td>%2</td>").arg(left, right).arg(space);
+        return QStringLiteral("<td align=\"right\" style=\"padding-left: %3px; white-space: pre;\">%1</td>"
+                              "<td style=\"white-space: pre;\">%2</td>")
+            .arg(left, right)
+            .arg(space);
     }
     QString cell(const QString& words, int space = 0) const
     {
@@ -137,6 +140,10 @@ private:
         QString words = plain(input.words);
         if (input.place.kind == Place::Kind::cylinder || input.place.number > 1)
             words += small(QStringLiteral(" %1").arg(to_qstring(place_text(input.place)).toHtmlEscaped()));
+        if (narrow_) {
+            add_narrow_input(input, words);
+            return;
+        }
         const QString half = input.half_width ? QStringLiteral("±%1%2").arg(QChar(0x00A0)).arg(sheet_number(*input.half_width))
                                               : small(tr_("no ±"));
         text_ += QStringLiteral("<tr>") + cell(plain(input.symbol)) + cell(words, 10) + number_cells(sheet_number(input.value))
@@ -144,11 +151,22 @@ private:
         text_ += QStringLiteral("<td style=\"padding-left: 14px;\" align=\"right\">%1</td><td style=\"padding-left: 6px;\">%2</td>")
                      .arg(input.share ? number_text(100.0 * *input.share, 0) + QChar(0x00A0) + u'%' : QString(),
                           input.share ? bar(*input.share) : QString());
-        if (!narrow_)
-            text_ += cell(small(plain(input.origin)), 14);
-        text_ += QStringLiteral("</tr>");
-        if (narrow_ && !input.origin.empty())
-            text_ += QStringLiteral("<tr><td></td><td colspan=\"7\" style=\"padding-left: 10px;\">%1</td></tr>").arg(small(plain(input.origin)));
+        text_ += cell(small(plain(input.origin)), 14) + QStringLiteral("</tr>");
+    }
+
+    /// Beside the judged reading: words and number in one line, symbol, ± and origin in small type below them.
+    void add_narrow_input(const WorkingInput& input, const QString& words)
+    {
+        text_ += QStringLiteral("<tr>") + cell(words) + number_cells(sheet_number(input.value), 8)
+                 + QStringLiteral("<td style=\"padding-left: 6px; white-space: pre;\">%1</td>").arg(small(plain(input.unit)))
+                 + QStringLiteral("<td style=\"padding-left: 10px; white-space: pre;\" align=\"right\">%1</td><td style=\"padding-left: 4px;\">%2</td></tr>")
+                       .arg(input.share ? number_text(100.0 * *input.share, 0) + QChar(0x00A0) + u'%' : QString(),
+                            input.share ? bar(*input.share) : QString());
+        QStringList below{plain(input.symbol)};
+        below.append(input.half_width ? QStringLiteral("±%1%2").arg(QChar(0x00A0)).arg(sheet_number(*input.half_width)) : tr_("no ±"));
+        below.append(plain(input.origin));
+        below.removeAll(QString());
+        text_ += QStringLiteral("<tr><td colspan=\"6\" style=\"padding-bottom: 3px;\">%1</td></tr>").arg(small(below.join(QStringLiteral(" · "))));
     }
 
     QString bar(double share)
@@ -158,13 +176,13 @@ private:
         QImage picture(bar_width * sharpness, bar_height * sharpness, QImage::Format_ARGB32_Premultiplied);
         picture.fill(Qt::transparent);
         QPainter painter(&picture);
-        painter.scale(sharpness, sharpness);
+        painter.scale(sharpness, sharpness); // drawn for the wide sheet; the narrow one shows it smaller
         const double top = (bar_height - bar_thickness) / 2.0;
         painter.fillRect(QRectF(0, top, bar_width, bar_thickness), theme_.rule);
         painter.fillRect(QRectF(0, top, bar_width * percent / 100.0, bar_thickness), theme_.line);
         painter.end();
         document_.addResource(QTextDocument::ImageResource, QUrl(name), picture);
-        return QStringLiteral("<img src=\"%1\" width=\"%2\" height=\"%3\">").arg(name).arg(bar_width).arg(bar_height);
+        return QStringLiteral("<img src=\"%1\" width=\"%2\" height=\"%3\">").arg(name).arg(narrow_ ? narrow_bar_width : bar_width).arg(bar_height);
     }
 
     void add_steps()
