@@ -48,7 +48,9 @@ QString open_draft(Workplace& workplace)
     if (!readings.has_value())
         return {};
     const auto& all = readings.value();
-    const auto draft = std::find_if(all.rbegin(), all.rend(), [](const storage::ReadingEntry& entry) { return entry.state == ReadingState::draft; });
+    const auto draft = std::find_if(all.rbegin(), all.rend(), [](const storage::ReadingEntry& entry) {
+        return entry.state == storage::ReadingState::draft;
+    });
     return draft == all.rend() ? QString() : Frame::tr("draft of %1").arg(day_text(draft->taken_at.utc).section(QLatin1Char(' '), 0, 1));
 }
 
