@@ -92,7 +92,7 @@ bool limit_is_passed(const Judgement& judgement, const Flag& flag)
     const auto newest = std::find_if(trend->points.rbegin(), trend->points.rend(), [](const TrendPoint& p) { return !p.doubtful && !p.unsteady; });
     if (newest == trend->points.rend())
         return false;
-    const bool rising = flag.time_to_limit->distance > 0.0;
+    const bool rising = flag.time_to_limit->limit > 0.0;
     for (const AbsoluteLimit& limit : judgement.record->engine.limits)
         if (limit.quantity == quantity(flag.quantity).name && (rising ? limit.high : limit.low))
             return rising ? newest->raw >= *limit.high : newest->raw <= *limit.low;
@@ -100,7 +100,7 @@ bool limit_is_passed(const Judgement& judgement, const Flag& flag)
     const bool percent = !flag.moved.empty() && flag.moved.front().percent; // then the trend has another unit than the distance
     if (percent || !value || !trend->usual_low || !trend->usual_high)
         return false;
-    const double mark = 0.5 * (*trend->usual_low + *trend->usual_high) + flag.time_to_limit->distance;
+    const double mark = 0.5 * (*trend->usual_low + *trend->usual_high) + flag.time_to_limit->limit;
     return rising ? *value >= mark : *value <= mark;
 }
 
