@@ -42,6 +42,9 @@ EntryPage::~EntryPage()
     disconnect(&session_, nullptr, this, nullptr);
     ui_->grid->finish_editing();
     session_.flush();
+    // A field that loses the focus while the window goes says what was typed to a page that is half gone.
+    for (QWidget* child : findChildren<QWidget*>())
+        child->blockSignals(true);
 }
 
 LogSheetView& EntryPage::view()

@@ -41,7 +41,7 @@ int heading_height(const ReviewSection& section, int width)
 class RowDelegate : public QStyledItemDelegate
 {
 public:
-    explicit RowDelegate(ReviewView& view) : view_(view) {}
+    explicit RowDelegate(ReviewView& view) : QStyledItemDelegate(&view), view_(view) {}
 
     void paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const override
     {

@@ -50,6 +50,8 @@ EnginePage::EnginePage(Workplace& place, QWidget* parent)
 
 EnginePage::~EnginePage()
 {
+    // The draft takes back its steps as it goes, when the boxes that would show them are gone already.
+    disconnect(&draft_, nullptr, this, nullptr);
     // A field that loses the focus while the window goes says what was typed to a page that is half gone.
     for (QWidget* child : findChildren<QWidget*>())
         child->blockSignals(true);

@@ -103,6 +103,7 @@ TEST(TrendPicture, WhatWasReadIsShownInTheUnitItWasTypedIn)
     value.typed = "67.0";
     value.number = 67.0;
     value.unit = find_unit("kgf/cm2").value().id;
+    value.value_si = unit(value.unit).to_si(67.0);
     values.push_back(value);
     judgement->record = record;
     EXPECT_TRUE(point_words(*judgement, *trend, reading).contains("read 67.0\u00a0kgf/cm² (")) << point_words(*judgement, *trend, reading).toStdString();
