@@ -135,8 +135,8 @@ TEST_F(EngineDesk, ATablePastedIntoAnOpenCellIsTakenAsATable)
     page_->findChild<QPushButton*>("baseline_button")->click();
     auto& table = child<QTableView>("baseline_table");
     table.setFocus();
-    table.setCurrentIndex(page_->baseline().index(1, 0));
-    table.edit(page_->baseline().index(1, 0));
+    table.setCurrentIndex(page_->baseline().index(1, 0)); // which opens it
+    QCoreApplication::sendPostedEvents(nullptr, QEvent::DeferredDelete); // the cell before it is closed for good
     QLineEdit* cell = table.viewport()->findChild<QLineEdit*>();
     ASSERT_TRUE(cell);
     QGuiApplication::clipboard()->setText("Load\t%\t50\t85\nMax. pressure\tbar\t121,5\t150,2\n");
@@ -146,6 +146,7 @@ TEST_F(EngineDesk, ATablePastedIntoAnOpenCellIsTakenAsATable)
     EXPECT_TRUE(child<QWidget>("trial").isVisible());
     EXPECT_EQ(page_->draft().state().engine.baseline.size(), before) << "nothing is changed yet";
     QGuiApplication::clipboard()->setText("99.5");
+    QCoreApplication::sendPostedEvents(nullptr, QEvent::DeferredDelete);
     table.edit(page_->baseline().index(1, 0));
     cell = table.viewport()->findChild<QLineEdit*>();
     ASSERT_TRUE(cell);
