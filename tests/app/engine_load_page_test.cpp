@@ -1,51 +1,25 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "app/settings/engine_page.h"
-
-#include "storage/vessel_store.h"
-#include "tests/app/page_desk.h"
+#include "tests/app/engine_desk.h"
 
 #include <QAbstractItemModelTester>
 #include <QComboBox>
-#include <QLabel>
-#include <QLineEdit>
 #include <QPushButton>
 #include <QTableView>
 
 namespace evenstroke {
 namespace {
 
-class EngineLoadPage : public test::PageDesk
+class EngineLoadPage : public test::EngineOnDesk
 {
 protected:
-    void SetUp() override
-    {
-        open(6);
-        page_ = make_page<EnginePage>();
-    }
-    template <typename Widget>
-    Widget& child(const char* name) { return *page_->findChild<Widget*>(QString::fromLatin1(name)); }
-    template <typename Box>
-    Box& box(const QString& title)
-    {
-        for (Box* one : page_->findChildren<Box*>())
-            if (one->accessibleName() == title)
-                return *one;
-        throw std::runtime_error("no box " + title.toStdString());
-    }
-    QString problem() { return child<QLabel>("problem").text(); }
-    void type_into(const QString& title, const QString& text)
-    {
-        box<QLineEdit>(title).setText(text);
-        emit box<QLineEdit>(title).editingFinished();
-    }
+    void type_into(const QString& title, const QString& text) { EngineOnDesk::type_into(box(title), text); }
     bool put(const char* table, int row, int column, const QString& text)
     {
         QAbstractItemModel* model = child<QTableView>(table).model();
         return model->setData(model->index(row, column), text, Qt::EditRole);
     }
     const Engine& engine_now() { return page_->draft().state().engine; }
-    Engine stored() { return storage::VesselStore(*workplace_->history()).engine(engine().toStdString()).value().engine; }
-    std::unique_ptr<EnginePage> page_;
+    Engine stored() { return EngineOnDesk::stored().engine; }
 };
 
 TEST_F(EngineLoadPage, LimitsOfTheLoadDiagramAreTypedInPerCentAndSaved)

@@ -1,49 +1,16 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "app/settings/engine_page.h"
-
-#include "storage/vessel_store.h"
-#include "tests/app/page_desk.h"
+#include "tests/app/engine_desk.h"
 
 #include <QAbstractItemModelTester>
 #include <QClipboard>
 #include <QGuiApplication>
-#include <QLabel>
-#include <QLineEdit>
 #include <QPushButton>
 #include <QTableView>
 
 namespace evenstroke {
 namespace {
 
-class EngineDesk : public test::PageDesk
-{
-protected:
-    void SetUp() override
-    {
-        open(6);
-        page_ = make_page<EnginePage>();
-    }
-    template <typename Widget>
-    Widget& child(const char* name) { return *page_->findChild<Widget*>(QString::fromLatin1(name)); }
-    QString problem() { return child<QLabel>("problem").text(); }
-    QLineEdit& box(const QString& title)
-    {
-        for (QLineEdit* line : page_->findChildren<QLineEdit*>())
-            if (line->accessibleName() == title)
-                return *line;
-        throw std::runtime_error("no box " + title.toStdString());
-    }
-    void type_into(QLineEdit& line, const QString& text)
-    {
-        line.setText(text);
-        emit line.editingFinished();
-    }
-    storage::StoredEngine stored()
-    {
-        return storage::VesselStore(*workplace_->history()).engine(engine().toStdString()).value();
-    }
-    std::unique_ptr<EnginePage> page_;
-};
+using EngineDesk = test::EngineOnDesk;
 
 TEST_F(EngineDesk, ShowsWhatTheHistoryHolds)
 {

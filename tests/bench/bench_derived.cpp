@@ -2,11 +2,11 @@
 // How long the computed quantities of ten years take, one reading a month, with their uncertainties (aim: at most 20 ms
 // for one engine), beside the same written with pandas and scipy. Processor time; nothing fails on it.
 #include "core/derived/derived.h"
+#include "tests/bench/processor_time.h"
 #include "tests/core/example_engine.h"
 
 #include <algorithm>
 #include <cstdio>
-#include <ctime>
 #include <string>
 
 using namespace evenstroke;
@@ -41,24 +41,6 @@ Reading full_reading(int cylinders)
         add("maximum_pressure", Place::cylinder(i), "150");
     }
     return reading;
-}
-
-double processor_ms()
-{
-    timespec time{};
-    clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &time);
-    return static_cast<double>(time.tv_sec) * 1e3 + static_cast<double>(time.tv_nsec) * 1e-6;
-}
-
-template <typename Work> double best_of(int runs, const Work& work)
-{
-    double best = 1e300;
-    for (int run = 0; run < runs; ++run) {
-        const double start = processor_ms();
-        work();
-        best = std::min(best, processor_ms() - start);
-    }
-    return best;
 }
 
 /// What the script prints; empty where there is no interpreter. That of the system has the packages of tests.txt.

@@ -4,6 +4,7 @@
 // here.
 //
 // bench_drift [engines without a fault, default 400] [engines per fault, default 60] [seed]
+#include "tests/bench/processor_time.h"
 #include "tests/core/fleet_tally.h"
 
 #include "core/trend/drift_catalogue.h"
@@ -11,19 +12,11 @@
 #include <algorithm>
 #include <cstdio>
 #include <cstdlib>
-#include <ctime>
 
 using namespace evenstroke;
 using namespace evenstroke::simulation;
 
 namespace {
-
-double processor_ms()
-{
-    timespec time{};
-    clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &time);
-    return static_cast<double>(time.tv_sec) * 1e3 + static_cast<double>(time.tv_nsec) * 1e-6;
-}
 
 void print_cost()
 {

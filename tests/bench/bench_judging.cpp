@@ -2,12 +2,12 @@
 // What judging costs: one engine of 12 cylinders with 10 years of monthly readings (aim: at most 20 ms), and one
 // draft against its history, as at every value typed. Prints processor time; nothing fails on it.
 #include "core/trend/drift_input.h"
+#include "tests/bench/processor_time.h"
 #include "tests/core/example_engine.h"
 
 #include <algorithm>
 #include <cstdint>
 #include <cstdio>
-#include <ctime>
 
 using namespace evenstroke;
 
@@ -27,24 +27,6 @@ EngineRecord twelve_cylinders(std::size_t readings)
             }
     }
     return record;
-}
-
-double processor_ms()
-{
-    timespec time{};
-    clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &time);
-    return static_cast<double>(time.tv_sec) * 1e3 + static_cast<double>(time.tv_nsec) * 1e-6;
-}
-
-template <typename Work> double best_of(int runs, const Work& work)
-{
-    double best = 1e300;
-    for (int run = 0; run < runs; ++run) {
-        const double start = processor_ms();
-        work();
-        best = std::min(best, processor_ms() - start);
-    }
-    return best;
 }
 
 /// A yardstick: how fast this machine is just now, and how busy.
