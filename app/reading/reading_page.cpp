@@ -19,11 +19,6 @@ namespace evenstroke {
 
 namespace {
 
-std::array<QPushButton*, 5> side_buttons(const Ui::ReadingPage& ui)
-{
-    return {ui.workings_button, ui.power_button, ui.load_button, ui.wall_button, ui.crank_button};
-}
-
 std::array<QLineEdit*, 5> trial_boxes(const Ui::ReadingPage& ui)
 {
     return {ui.coolant_box, ui.deposit_box, ui.deposit_lambda_box, ui.scale_box, ui.scale_lambda_box};
@@ -48,7 +43,7 @@ ReadingPage::~ReadingPage() = default;
 
 void ReadingPage::connect_all()
 {
-    const auto buttons = side_buttons(*ui_);
+    const auto buttons = side_buttons();
     for (std::size_t i = 0; i < buttons.size(); ++i)
         connect(buttons[i], &QPushButton::clicked, this, [this, i] { choose_side(static_cast<Side>(i)); });
     connect(ui_->view, &ReviewView::row_chosen, this, &ReadingPage::take_row);
@@ -122,6 +117,7 @@ void ReadingPage::refresh()
 void ReadingPage::show_nothing()
 {
     review_.reset();
+    sheet_ = {};
     ui_->view->show_review(nullptr, nullptr);
     ui_->body->hide();
     ui_->cautions->hide();

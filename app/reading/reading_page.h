@@ -2,12 +2,15 @@
 #pragma once
 
 #include "app/desk/page.h"
+#include "app/desk/theme.h"
 #include "app/reading/figure_table_model.h"
 #include "app/reading/side_views.h"
 #include "core/review/reading_review.h"
 
+#include <array>
 #include <memory>
 
+class QPushButton;
 namespace Ui {
 class ReadingPage;
 }
@@ -66,6 +69,16 @@ private:
     const Cards& cards();
     int cylinder_in_hand() const;
     void copy_picture();
+    std::array<QPushButton*, 5> side_buttons() const; ///< in the order of Side
+
+    /// What the sheet beside the reading was filled from.
+    struct ShownSheet
+    {
+        std::shared_ptr<const ReadingReview> review;
+        int row = -1;
+        ThemeKind theme = ThemeKind::day;
+        friend bool operator==(const ShownSheet&, const ShownSheet&) = default;
+    };
 
     std::unique_ptr<Ui::ReadingPage> ui_;
     std::shared_ptr<const Judgement> judgement_;
@@ -73,6 +86,7 @@ private:
     std::optional<std::size_t> reading_;
     FigureTableModel table_;
     SideView shown_;
+    ShownSheet sheet_;
     Side side_ = Side::workings;
     std::optional<std::pair<QuantityId, Place>> seen_; ///< what the selection named when this page last followed it
     std::size_t wall_ = 0;

@@ -34,6 +34,11 @@ std::optional<double> typed(const QLineEdit& box)
 
 } // namespace
 
+std::array<QPushButton*, 5> ReadingPage::side_buttons() const
+{
+    return {ui_->workings_button, ui_->power_button, ui_->load_button, ui_->wall_button, ui_->crank_button};
+}
+
 WallTrial ReadingPage::wall_trial() const
 {
     return {typed(*ui_->coolant_box),       typed(*ui_->deposit_box), typed(*ui_->scale_box), typed(*ui_->deposit_lambda_box),
@@ -85,9 +90,9 @@ void ReadingPage::show_side()
 {
     if (!review_ || !reading_)
         return;
-    const QPushButton* buttons[] = {ui_->workings_button, ui_->power_button, ui_->load_button, ui_->wall_button, ui_->crank_button};
-    for (std::size_t i = 0; i < std::size(buttons); ++i)
-        const_cast<QPushButton*>(buttons[i])->setChecked(side_ == static_cast<Side>(i));
+    const auto buttons = side_buttons();
+    for (std::size_t i = 0; i < buttons.size(); ++i)
+        buttons[i]->setChecked(side_ == static_cast<Side>(i));
     const ReviewRow* row = ui_->view->row_in_hand();
     // The section on power has no number of its own: all its estimates stand beside it.
     const bool all_estimates = side_ == Side::workings && row && !row->line && row->section->topic == ReviewTopic::power;
@@ -111,6 +116,11 @@ void ReadingPage::show_workings()
                                                            ui_->side_table, ui_->copy_picture_button, ui_->copy_data_button,
                                                            ui_->table_button})
         widget->hide();
+    // A step to another row changes the selection too, and so asks for the same sheet a second time.
+    const ShownSheet wanted{review_, ui_->view->currentIndex().row(), theme().kind};
+    if (wanted == sheet_)
+        return;
+    sheet_ = wanted;
     const ReviewRow* row = ui_->view->row_in_hand();
     std::optional<Workings> workings;
     if (row && row->line && row->line->estimate && *row->line->estimate < review_->power.estimates.size())

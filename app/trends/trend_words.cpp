@@ -5,6 +5,7 @@
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
 #include "core/explanation/cautions.h"
+#include "core/trend/limit_passed.h"
 
 #include <QCoreApplication>
 
@@ -80,28 +81,6 @@ QString threshold_words(const Judgement& judgement, const Flag* flag)
         return began;
     return flag->raised_at ? tr_("%1,\n%2 since %3").arg(began, level_text(flag->level_now), day_text(time_of(judgement, *flag->raised_at)))
                            : tr_("%1,\n%2 now").arg(began, level_text(flag->level_now));
-}
-
-/// Whether the newest usable reading is beyond the limit already: the engine's own where it has one on that side, else
-/// the customary one, counted from the place's level before the change.
-bool limit_is_passed(const Judgement& judgement, const Flag& flag)
-{
-    const Trend* trend = judgement.find_trend(flag.quantity, flag.subject);
-    if (!trend || !flag.time_to_limit)
-        return false;
-    const auto newest = std::find_if(trend->points.rbegin(), trend->points.rend(), [](const TrendPoint& p) { return !p.doubtful && !p.unsteady; });
-    if (newest == trend->points.rend())
-        return false;
-    const bool rising = flag.time_to_limit->limit > 0.0;
-    for (const AbsoluteLimit& limit : judgement.record->engine.limits)
-        if (limit.quantity == quantity(flag.quantity).name && (rising ? limit.high : limit.low))
-            return rising ? newest->raw >= *limit.high : newest->raw <= *limit.low;
-    const auto value = flag.subject.kind == Place::Kind::cylinder ? newest->apart : newest->deviation;
-    const bool percent = !flag.moved.empty() && flag.moved.front().percent; // then the trend has another unit than the distance
-    if (percent || !value || !trend->usual_low || !trend->usual_high)
-        return false;
-    const double mark = 0.5 * (*trend->usual_low + *trend->usual_high) + flag.time_to_limit->limit;
-    return rising ? *value >= mark : *value <= mark;
 }
 
 const Flag* leading_flag(const TrendPicture& picture, const Judgement& judgement)
