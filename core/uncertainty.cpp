@@ -56,4 +56,20 @@ std::optional<Propagated> propagate(std::span<const UncertainInput> inputs, cons
     return result;
 }
 
+std::vector<std::optional<double>> budget_shares(const Propagated& solved, std::span<const int> instruments)
+{
+    std::vector<std::optional<double>> shares(instruments.size());
+    if (!solved.half_width || !(*solved.half_width > 0.0))
+        return shares;
+    const std::size_t count = std::min(instruments.size(), solved.parts.size());
+    std::map<int, double> of_instruments;
+    for (std::size_t i = 0; i < count; ++i)
+        of_instruments[instruments[i]] += solved.parts[i];
+    for (std::size_t i = 0; i < count; ++i) {
+        const double together = instruments[i] == UncertainInput::own ? solved.parts[i] : of_instruments[instruments[i]];
+        shares[i] = solved.parts[i] * together / (*solved.half_width * *solved.half_width);
+    }
+    return shares;
+}
+
 } // namespace evenstroke

@@ -38,4 +38,9 @@ struct Propagated
 /// @par Validity results that are near to straight lines over the half-widths
 std::optional<Propagated> propagate(std::span<const UncertainInput> inputs, const Formula& formula);
 
+/// Share of each input in the squared half-width, 0 to 1 in sum: slips of one instrument are added before they are
+/// squared, and each of its inputs has its part of the sum. Nothing where the half-width is not known, or 0.
+/// @param instruments of the inputs, in the order of the parts
+std::vector<std::optional<double>> budget_shares(const Propagated& solved, std::span<const int> instruments);
+
 } // namespace evenstroke

@@ -15,23 +15,6 @@ constexpr const char* coefficients_expected =
     "Write [per °C of inlet air, per °C of coolant], or {\"per_inlet_air\": …, \"per_coolant\": …, "
     "\"source\": …}; write 0 for a coefficient that is nought.";
 
-/// Steps of writing one text over the other, a letter each.
-std::size_t letters_apart(std::string_view a, std::string_view b)
-{
-    std::vector<std::size_t> row(b.size() + 1);
-    for (std::size_t j = 0; j <= b.size(); ++j)
-        row[j] = j;
-    for (std::size_t i = 0; i < a.size(); ++i) {
-        std::size_t diagonal = row[0]++;
-        for (std::size_t j = 0; j < b.size(); ++j) {
-            const std::size_t replaced = diagonal + (a[i] == b[j] ? 0 : 1);
-            diagonal = row[j + 1];
-            row[j + 1] = std::min({row[j] + 1, diagonal + 1, replaced});
-        }
-    }
-    return row.back();
-}
-
 std::string lacking(const JsonReader& coefficients)
 {
     const bool air = coefficients.has("per_inlet_air"), coolant = coefficients.has("per_coolant");
@@ -96,7 +79,7 @@ std::string likely_quantity(const std::string& name)
                 return known.name;
     const std::vector<std::string> nearest = nearest_names_of_all(name, 1);
     // A third of the letters wrong is still a likeness; more is chance.
-    if (nearest.empty() || name.size() > 64 || letters_apart(name, nearest.front()) > name.size() / 3)
+    if (nearest.empty() || name.size() > 64 || edit_distance(name, nearest.front()) > name.size() / 3)
         return {};
     return nearest.front();
 }

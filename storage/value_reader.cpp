@@ -3,19 +3,12 @@
 
 #include "core/plain_text.h"
 #include "core/reading/fitting_unit.h"
+#include "core/sentence_words.h"
 
 #include <algorithm>
 
 namespace evenstroke::storage {
 namespace {
-
-std::string joined(const std::vector<std::string>& names)
-{
-    std::string text;
-    for (const std::string& name : names)
-        text += (text.empty() ? "" : ", ") + name;
-    return text;
-}
 
 RowProblem problem_of(std::string_view value, const Problem& problem)
 {
@@ -81,7 +74,7 @@ const ValueReader::KnownQuantity* ValueReader::find_quantity_entry(std::string_v
             name.empty() ? "The quantity is missing."
                          : "The quantity " + evenstroke::quoted(name) + " is not known.",
             "Write a name of the catalogue" +
-                (name.empty() ? "." : "; near to it are " + joined(nearest_quantity_names(name)) + ".")};
+                (name.empty() ? "." : "; near to it are " + comma_list(nearest_quantity_names(name)) + ".")};
         return nullptr;
     }
     const auto key = names_.quantity_key(name);
@@ -239,7 +232,7 @@ std::optional<RowProblem> ValueReader::read_words(const ValueTexts& texts, const
                                    [&](const std::string& choice) { return names_choice(text, choice); });
     if (!known)
         return RowProblem{std::string(text), evenstroke::quoted(text) + " is no choice of " + q.name + ".",
-                          "Write one of " + joined(q.choices) + "."};
+                          "Write one of " + comma_list(q.choices) + "."};
     return std::nullopt;
 }
 

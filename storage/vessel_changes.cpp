@@ -6,6 +6,7 @@
 #include "storage/transaction.h"
 
 #include "core/plain_text.h"
+#include "core/sentence_words.h"
 
 #include <QUuid>
 
@@ -13,14 +14,6 @@ namespace evenstroke::storage {
 namespace {
 
 const std::string not_saved = "the engine was not saved";
-
-std::string joined(const std::vector<std::string>& words)
-{
-    std::string text;
-    for (const std::string& word : words)
-        text += (text.empty() ? "" : ", ") + word;
-    return text;
-}
 
 struct FoundVessel
 {
@@ -300,7 +293,7 @@ Result<TakenDocument> take_document(History& history, const EngineDocument& docu
     BOOST_OUTCOME_TRYV(check_same_engine(history, engine, document.engine));
     BOOST_OUTCOME_TRYV(change_engine(history, audit, engine, document, by));
     taken.remarks.push_back("engine.json differs from what the history knew of the engine (" +
-                            joined(changed_keys(engine.document, document.text)) +
+                            comma_list(changed_keys(engine.document, document.text)) +
                             "); it is kept as revision " + std::to_string(engine.revision + 1) + " of " +
                             date_text(history.now()) +
                             ", and all deviations, past ones too, are judged with it");

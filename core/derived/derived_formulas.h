@@ -37,6 +37,9 @@ std::span<const DerivedFormula> charge_air_formulas();
 std::span<const DerivedFormula> cylinder_formulas();
 std::span<const DerivedFormula> ship_formulas();
 
+/// What the ambient of the reading makes of the specific consumption at reference, by the correction that the engine
+/// has for it: 1 where it has none, nothing where a condition for it was not read.
+Number consumption_ambient_factor(DerivedInputs& of);
 /// kW as read, or torque times speed.
 Number shaft_kilowatts(DerivedInputs& of);
 /// Sum over all cylinders; nothing where one is missing.

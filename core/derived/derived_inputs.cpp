@@ -8,7 +8,6 @@
 namespace evenstroke {
 namespace {
 
-constexpr double bar_of_millibar = 1e-3;
 constexpr double litres_per_hour = 3.6e6; // of a m³/s
 
 } // namespace

@@ -19,6 +19,7 @@
 namespace evenstroke {
 
 using Number = std::optional<double>;
+inline constexpr double bar_of_millibar = 1e-3;
 
 /// One reading with everything that formulas need of it.
 struct DerivedReading

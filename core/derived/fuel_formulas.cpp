@@ -193,6 +193,18 @@ Number mass_flow(DerivedInputs& of, Place place)
 
 } // namespace
 
+Number consumption_ambient_factor(DerivedInputs& of)
+{
+    if (of.engine().consumption_correction == ConsumptionCorrection::iso_3046)
+        return iso_factor(of);
+    const auto linear = of.engine().correction.find("specific_fuel_consumption");
+    if (linear == of.engine().correction.end())
+        return 1.0;
+    constexpr double any = 100.0; // g/kWh: the correction is a factor
+    const Number at_reference = corrected_linearly(of, any, linear->second);
+    return at_reference ? std::optional(any / *at_reference) : std::nullopt;
+}
+
 std::span<const DerivedFormula> fuel_formulas()
 {
     static const DerivedFormula formulas[] = {

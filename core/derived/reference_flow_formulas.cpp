@@ -9,7 +9,6 @@ namespace evenstroke {
 namespace {
 
 constexpr double millibar = 100.0; // Pa
-constexpr double bar_of_millibar = 1e-3;
 
 /// What is in proportion to the air flow, now and on the baseline.
 struct Flows

@@ -2,22 +2,10 @@
 #include "core/derived/derived_formulas.h"
 
 #include "core/airside/turbocharger.h"
-
-#include <algorithm>
+#include "core/reading/typed_number.h"
 
 namespace evenstroke {
 namespace {
-
-constexpr double bar_of_millibar = 1e-3;
-
-bool blower_running(const Reading& reading)
-{
-    static const QuantityId id = *find_quantity("auxiliary_blower_running");
-    return std::any_of(reading.values.begin(), reading.values.end(), [](const Value& value) {
-        return value.quantity == id && value.phase == Phase::reading &&
-               (value.words == "yes" || (value.words.empty() && value.typed == "yes"));
-    });
-}
 
 Number pressure_ratio_of(DerivedInputs& of, Place place)
 {
@@ -79,7 +67,7 @@ Number turbine_of(DerivedInputs& of, Place place)
 /// With an auxiliary blower running nothing is said: it stands between compressor and receiver.
 template <Number (*part)(DerivedInputs&, Place)> Number without_blower(DerivedInputs& of, Place place)
 {
-    if (blower_running(of.of().reading))
+    if (words_of(of.of().reading, "auxiliary_blower_running") == "yes")
         return of.not_known("An auxiliary blower was running, which stands between compressor and receiver.",
                             "Read the air side again without it.");
     return mean_over(of, Place::Kind::turbocharger, place, part);

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/explanation/event_effect.h"
 
+#include "core/sentence_words.h"
+
 #include <algorithm>
 
 namespace evenstroke {
@@ -9,20 +11,12 @@ namespace {
 /// Turbochargers and coolers are not counted in the engine's particulars; more than this is a slip of the pen.
 constexpr int most_machines = 9;
 
-std::string place_words(const Engine& engine, const Place& place)
-{
-    return place.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(place.number) : place_text(place);
-}
-
 std::string lower_title(const std::string& quantity_name)
 {
     const auto id = find_quantity(quantity_name);
     if (!id)
         return quantity_name;
-    std::string title = quantity(*id).title;
-    if (title.size() > 1 && title[1] >= 'a')
-        title.front() = static_cast<char>(title.front() | 0x20);
-    return title;
+    return lower_first(quantity(*id).title);
 }
 
 bool of_air_side(const EventKind& kind, const Place& place)

@@ -4,6 +4,7 @@
 #include "core/catalogue_table.h"
 #include "core/catalogue_text.h"
 #include "core/reading/place_kinds.h"
+#include "core/sentence_words.h"
 
 #include <algorithm>
 #include <map>
@@ -127,17 +128,6 @@ LogSection make_section(const SectionPlan& plan, const Engine& engine, EngineLay
     return section;
 }
 
-std::string joined(const std::vector<std::string>& parts)
-{
-    std::string words;
-    for (std::size_t i = 0; i < parts.size(); ++i) {
-        if (i > 0)
-            words += i + 1 == parts.size() ? " and " : ", ";
-        words += parts[i];
-    }
-    return words;
-}
-
 std::string places_words(const Engine& engine, const std::vector<LogBox>& boxes)
 {
     std::vector<std::string> numbers;
@@ -158,7 +148,7 @@ std::string places_words(const Engine& engine, const std::vector<LogBox>& boxes)
     default:
         return {};
     }
-    return std::string(" of ") + what + (boxes.size() > 1 ? "s " : " ") + joined(numbers);
+    return std::string(" of ") + what + (boxes.size() > 1 ? "s " : " ") + and_list(numbers);
 }
 
 bool is_answered(const Value* value)

@@ -116,6 +116,8 @@ bool may_stand_at(const Quantity& q, Place::Kind place)
            (q.group == "turbocharger" || q.group == "cooler" || q.name == "inlet_air_temperature");
 }
 
+} // namespace
+
 std::size_t edit_distance(std::string_view a, std::string_view b)
 {
     std::vector<std::size_t> row(b.size() + 1);
@@ -130,8 +132,6 @@ std::size_t edit_distance(std::string_view a, std::string_view b)
     }
     return row.back();
 }
-
-} // namespace
 
 std::span<const Quantity> all_quantities() { return catalogue().quantities; }
 

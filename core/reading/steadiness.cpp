@@ -5,6 +5,7 @@
 #include "core/catalogue_text.h"
 #include "core/reading/place_kinds.h"
 #include "core/reading/typed_number.h"
+#include "core/sentence_words.h"
 
 #include <algorithm>
 #include <charconv>
@@ -131,14 +132,6 @@ Steadiness grade(double amount, double steady, double care)
     if (amount <= steady * (1.0 + rounding_room))
         return Steadiness::steady;
     return amount <= care * (1.0 + rounding_room) ? Steadiness::usable_with_care : Steadiness::unsteady;
-}
-
-std::string lower_first(std::string text)
-{
-    if (!text.empty() && text[0] >= 'A' && text[0] <= 'Z' &&
-        (text.size() < 2 || text[1] < 'A' || text[1] > 'Z'))
-        text[0] = static_cast<char>(text[0] - 'A' + 'a');
-    return text;
 }
 
 std::string limit_words(const std::string& steady, const std::string& care, Steadiness verdict)

@@ -60,6 +60,15 @@ std::optional<double> absolute_in_own_unit(const Value& value, std::optional<Abs
     return pascal ? std::optional(unit(meant.unit).from_si(*pascal)) : std::nullopt;
 }
 
+std::string words_of(const Reading& reading, std::string_view quantity_name)
+{
+    const auto id = find_quantity(quantity_name, Place::Kind::engine);
+    for (const Value& value : reading.values)
+        if (id && value.quantity == *id && value.phase == Phase::reading)
+            return value.words.empty() ? value.typed : value.words;
+    return {};
+}
+
 std::string plain_number(double number, int decimals)
 {
     // to_chars rounds half to even on the binary value; printed records round half away from zero.

@@ -21,6 +21,9 @@ std::optional<double> number_in_own_unit(const Value& value, std::optional<Absol
 /// The same pressure over vacuum, in the quantity's unit.
 std::optional<double> absolute_in_own_unit(const Value& value, std::optional<AbsolutePressure> barometer);
 
+/// A choice or words of the engine, or as they were typed; empty where the reading does not have them.
+std::string words_of(const Reading& reading, std::string_view quantity_name);
+
 /// "9800", "385.4": point as decimal sign whatever the locale, half away from zero.
 std::string plain_number(double number, int decimals);
 

@@ -3,6 +3,7 @@
 
 #include "core/reading/typed_number.h"
 #include "core/review/power_ways.h"
+#include "core/sentence_words.h"
 
 #include <algorithm>
 #include <cmath>
@@ -74,13 +75,6 @@ std::string percent_apart(double power, double of)
 {
     const double percent = 100.0 * (power / of - 1.0);
     return plain_number(std::abs(percent), 1) + " % " + (percent > 0.0 ? "above" : "below");
-}
-
-std::string lower_first(std::string text)
-{
-    if (!text.empty() && text[0] >= 'A' && text[0] <= 'Z')
-        text[0] = static_cast<char>(text[0] - 'A' + 'a');
-    return text;
 }
 
 /// What to look at where one way does not fit (common practice).

@@ -1,9 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/review/power_curves.h"
 
-#include "core/reading/typed_number.h"
-#include "core/reference/humid_air.h"
-#include "core/reference/linear_correction.h"
+#include "core/derived/derived_formulas.h"
 #include "core/trend/deviations.h"
 #include "core/trend/drift_catalogue.h"
 
@@ -133,34 +131,8 @@ Way PowerCurves::fuel_index() const
 
 std::optional<double> PowerCurves::consumption_at_site() const
 {
-    const auto point = [](std::optional<double> degrees) {
-        return degrees ? std::optional(celsius(*degrees)) : std::nullopt;
-    };
-    const auto air = point(conditions_.inlet_air), coolant = point(conditions_.cooler_coolant);
-    if (engine_.consumption_correction == ConsumptionCorrection::iso_3046) {
-        if (!air)
-            return std::nullopt;
-        const auto steam = [](Temperature at, std::optional<double> share) -> std::optional<AbsolutePressure> {
-            const auto found = share ? vapour_pressure(at, Ratio(*share)) : Result<AbsolutePressure>(Problem{});
-            return found.has_value() ? std::optional(found.value()) : std::nullopt;
-        };
-        const auto humidity = engine_mean(reading_, "relative_humidity", conditions_);
-        const ReferenceConditions& to = engine_.reference;
-        const auto adjusted = adjust_iso_3046(
-            engine_.aspiration,
-            {bar_absolute(conditions_.barometer_or_one_bar()), *air, coolant,
-             steam(*air, humidity ? std::optional(*humidity / 100.0) : std::nullopt)},
-            {to.barometer, to.inlet_air, to.cooler_coolant, steam(to.inlet_air, to.relative_humidity)},
-            engine_.mechanical_efficiency.value_or(iso_3046_mechanical_efficiency));
-        return adjusted.has_value() ? std::optional(adjusted.value().beta) : std::nullopt;
-    }
-    const auto found = engine_.correction.find("specific_fuel_consumption");
-    if (found == engine_.correction.end())
-        return 1.0;
-    const auto corrected = correct_linearly(grams_per_kilowatt_hour(100.0),
-                                            ambient_difference(air, coolant, engine_.reference), found->second);
-    return corrected.has_value() ? std::optional(100.0 / in_grams_per_kilowatt_hour(corrected.value().value))
-                                 : std::nullopt;
+    const DerivedReading reading(engine_, baseline_, reading_, conditions_);
+    return DerivedInputs(reading).run(consumption_ambient_factor);
 }
 
 Way PowerCurves::fuel_consumption() const

@@ -1,49 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/review/power_inputs.h"
 
-#include "core/plain_text.h"
-#include "core/reading/typed_number.h"
 #include "core/trend/deviations.h"
-
-#include <map>
+#include "core/workings/working_words.h"
 
 namespace evenstroke {
-namespace {
-
-std::string kind_words(const Quantity& q)
-{
-    switch (q.kind) {
-    case PressureKind::gauge: return " gauge";
-    case PressureKind::absolute: return " abs";
-    default: return {};
-    }
-}
-
-/// The shares of inputs that one instrument gave add up to the share of the instrument.
-void write_budget(std::vector<WorkingInput>& words, const std::vector<UncertainInput>& inputs, const Propagated& solved)
-{
-    std::map<int, double> of_instrument;
-    for (std::size_t i = 0; i < inputs.size(); ++i)
-        of_instrument[inputs[i].instrument] += solved.parts[i];
-    for (std::size_t i = 0; i < inputs.size(); ++i) {
-        words[i].moved = solved.parts[i];
-        words[i].share.reset();
-        if (!solved.half_width || !(*solved.half_width > 0.0))
-            continue;
-        const double with_its_like =
-            inputs[i].instrument == UncertainInput::own ? solved.parts[i] : of_instrument[inputs[i].instrument];
-        words[i].share = solved.parts[i] * with_its_like / (*solved.half_width * *solved.half_width);
-    }
-}
-
-} // namespace
-
-std::string typed_words(const Value& value)
-{
-    const std::string text = value.typed.empty() && value.number ? number_text(*value.number) : value.typed;
-    const std::string unit_words = value.unit_typed.empty() ? unit_behind(value.unit) : value.unit_typed;
-    return "typed " + text + (unit_words.empty() ? "" : " " + unit_words);
-}
 
 std::size_t PowerInputs::add(WorkingInput input, int instrument)
 {
@@ -61,7 +22,7 @@ WorkingInput PowerInputs::described(std::string_view name, const std::string& sy
     input.symbol = symbol;
     input.place = place;
     input.value = own;
-    input.unit = unit_behind(q.unit) + kind_words(q);
+    input.unit = unit_words(q);
     input.half_width = instrument_uncertainty(engine_, q, own);
     return input;
 }
@@ -75,7 +36,7 @@ std::optional<std::size_t> PowerInputs::at(std::string_view name, const std::str
         if (!own || own->outside_hard)
             continue;
         WorkingInput input = described(name, symbol, place, own->value);
-        input.origin = typed_words(value);
+        input.origin = words_as_typed(value);
         return add(std::move(input), instrument);
     }
     return std::nullopt;
@@ -100,7 +61,7 @@ std::optional<std::size_t> PowerInputs::mean(std::string_view name, const std::s
         ++places;
         last = &value;
     }
-    input.origin = places == 1 && last ? typed_words(*last) : "mean of " + std::to_string(places) + " places";
+    input.origin = places == 1 && last ? words_as_typed(*last) : "mean of " + std::to_string(places) + " places";
     return add(std::move(input), UncertainInput::own);
 }
 
@@ -109,8 +70,16 @@ std::size_t PowerInputs::given(WorkingInput input) { return add(std::move(input)
 std::optional<Propagated> PowerInputs::solve(const Formula& formula)
 {
     auto solved = propagate(inputs_, formula);
-    if (solved)
-        write_budget(words_, inputs_, *solved);
+    if (!solved)
+        return solved;
+    std::vector<int> instruments;
+    for (const UncertainInput& input : inputs_)
+        instruments.push_back(input.instrument);
+    const auto shares = budget_shares(*solved, instruments);
+    for (std::size_t i = 0; i < words_.size(); ++i) {
+        words_[i].moved = solved->parts[i];
+        words_[i].share = shares[i];
+    }
     return solved;
 }
 

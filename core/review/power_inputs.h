@@ -45,7 +45,4 @@ private:
     std::vector<WorkingInput> words_;
 };
 
-/// "typed 2,51 bar abs": a value as it was typed, for the origin of an input.
-std::string typed_words(const Value& value);
-
 } // namespace evenstroke

@@ -16,20 +16,12 @@ using Index = std::optional<std::size_t>;
 
 constexpr int indicator = 1; ///< one instrument for all cylinders
 
-std::string power_source(const Reading& reading)
-{
-    for (const Value& value : reading.values)
-        if (value.phase == Phase::reading && quantity(value.quantity).name == "power_source")
-            return value.words.empty() ? value.typed : value.words;
-    return {};
-}
-
 class Ways
 {
 public:
     Ways(const Engine& engine, const Baseline& baseline, const Reading& reading, const Conditions& conditions,
          const BaselineScatter& scatter)
-        : engine_(engine), reading_(reading), conditions_(conditions), source_(power_source(reading)),
+        : engine_(engine), reading_(reading), conditions_(conditions), source_(words_of(reading, "power_source")),
           curves_(engine, baseline, reading, conditions, scatter)
     {
     }

@@ -3,6 +3,7 @@
 
 #include "core/engine/baseline.h"
 #include "core/review/reading_review.h"
+#include "core/sentence_words.h"
 #include "core/trend/conditions.h"
 #include "core/derived/derived.h"
 
@@ -71,9 +72,6 @@ std::optional<ReviewLine> mean_line(const ReviewContext& context, std::string_vi
 /// The lines that carry a note or more: "turbocharger speed low (watch)".
 std::vector<std::string> departures(const std::vector<ReviewLine>& lines);
 Level worst(const std::vector<ReviewLine>& lines);
-std::string joined(const std::vector<std::string>& parts);
-std::string upper_first(std::string text);
-std::string lower_first(std::string text);
 
 ReviewSection entry_section(const ReviewContext& context);
 ReviewSection steadiness_section(const ReviewContext& context);

@@ -26,21 +26,13 @@ std::string patterns_sentence(const ReviewContext& context, Place subject, const
             std::find(patterns.begin(), patterns.end(), flag->pattern_words) == patterns.end())
             patterns.push_back(flag->pattern_words);
     }
-    return patterns.empty() ? "" : " Fits " + joined(patterns) + ".";
+    return patterns.empty() ? "" : " Fits " + and_list(patterns) + ".";
 }
 
 void add(std::vector<ReviewLine>& lines, std::optional<ReviewLine> line)
 {
     if (line)
         lines.push_back(std::move(*line));
-}
-
-bool blower_running(const ReviewContext& context)
-{
-    return std::any_of(context.reading.values.begin(), context.reading.values.end(), [](const Value& value) {
-        return quantity(value.quantity).name == "auxiliary_blower_running" && value.phase == Phase::reading &&
-               (value.words == "yes" || (value.words.empty() && value.typed == "yes"));
-    });
 }
 
 /// Burning adds p_max - p_comp to what the air brings along: how late or weak it is shows here.
@@ -116,7 +108,7 @@ std::string cylinder_words(const ReviewContext& context, int number, const std::
     }
     if (parts.empty())
         return {};
-    return " Cylinder " + context.engine.cylinder_name(number) + ": " + joined(parts) + "." +
+    return " Cylinder " + context.engine.cylinder_name(number) + ": " + and_list(parts) + "." +
            patterns_sentence(context, Place::cylinder(number), own);
 }
 
@@ -192,9 +184,9 @@ ReviewSection air_side_section(const ReviewContext& context)
     section.level = worst(lines);
     const auto departing = departures(lines);
     if (!departing.empty())
-        section.sentence = upper_first(joined(departing)) + "." + patterns_sentence(context, Place::engine(), lines) +
+        section.sentence = upper_first(and_list(departing)) + "." + patterns_sentence(context, Place::engine(), lines) +
                            " Settle the air side before cylinders are blamed: it moves them all alike.";
-    if (blower_running(context))
+    if (words_of(context.reading, "auxiliary_blower_running") == "yes")
         section.sentence += std::string(section.sentence.empty() ? "" : " ") +
                             "The auxiliary blower was running: what the compressor does is not known.";
     return section;
@@ -217,7 +209,7 @@ ReviewSection means_section(const ReviewContext& context)
     const auto departing = departures(section.lines);
     if (!departing.empty())
         section.sentence =
-            upper_first(joined(departing)) + "." + patterns_sentence(context, Place::engine(), section.lines);
+            upper_first(and_list(departing)) + "." + patterns_sentence(context, Place::engine(), section.lines);
     return section;
 }
 
@@ -301,7 +293,7 @@ ReviewSection fuel_section(const ReviewContext& context)
     section.level = worst(section.lines);
     const auto departing = departures(section.lines);
     if (!departing.empty())
-        section.sentence = upper_first(joined(departing)) + ". It gathers every fault and slip above: settle those first.";
+        section.sentence = upper_first(and_list(departing)) + ". It gathers every fault and slip above: settle those first.";
     return section;
 }
 

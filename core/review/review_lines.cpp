@@ -10,38 +10,31 @@
 namespace evenstroke::reviewing {
 namespace {
 
-/// What a derived number needs, and how it is written where the catalogue of quantities does not list it.
+/// What a derived number cannot do without. A line says what is missing only where the engine has it read otherwise.
 struct DerivedLine
 {
-    std::string_view name, words;
-    int decimals;
+    std::string_view name;
     bool uses_barometer;
-    std::vector<std::string_view> inputs;
+    std::vector<std::string_view> inputs; ///< one alone is never missing beside others: none are named
 };
 
 const std::vector<DerivedLine>& derived_lines()
 {
     static const std::vector<DerivedLine> lines{
-        {"indicated_power", "Indicated power of all cylinders", 0, false, {"mean_indicated_pressure", "speed"}},
-        {"mean_effective_pressure", "Mean effective pressure", 2, false, {"speed", "shaft_power"}},
-        {"mechanical_efficiency", "Mechanical efficiency", 3, false, {"speed", "shaft_power", "mean_indicated_pressure"}},
-        {"specific_fuel_consumption", "Specific fuel consumption", 1, false, {"fuel_consumption"}},
-        {"compressor_pressure_ratio", "Compressor pressure ratio", 3, true, {"scavenge_pressure"}},
-        {"compressor_efficiency", "Compressor efficiency", 3, true,
-         {"scavenge_pressure", "inlet_air_temperature", "compressor_outlet_temperature"}},
-        {"turbocharger_efficiency", "Turbocharger efficiency", 3, true,
+        {"mean_effective_pressure", false, {"speed", "shaft_power"}},
+        {"mechanical_efficiency", false, {"speed", "shaft_power", "mean_indicated_pressure"}},
+        {"compressor_pressure_ratio", true, {}},
+        {"compressor_efficiency", true, {"scavenge_pressure", "inlet_air_temperature", "compressor_outlet_temperature"}},
+        {"turbocharger_efficiency", true,
          {"scavenge_pressure", "inlet_air_temperature", "exhaust_before_turbine", "exhaust_receiver_pressure",
           "exhaust_back_pressure"}},
-        {"cooler_effectiveness", "Effectiveness of the air cooler", 3, false,
+        {"cooler_effectiveness", false,
          {"compressor_outlet_temperature", "scavenge_temperature", "cooler_coolant_inlet_temperature"}},
-        {"cooler_temperature_difference", "Scavenge temperature over coolant", 1, false,
-         {"scavenge_temperature", "cooler_coolant_inlet_temperature"}},
-        {"charge_air_condensate", "Water from the charge air", 1, true,
+        {"cooler_temperature_difference", false, {"scavenge_temperature", "cooler_coolant_inlet_temperature"}},
+        {"charge_air_condensate", true,
          {"inlet_air_temperature", "relative_humidity", "scavenge_temperature", "scavenge_pressure"}},
-        {"compression_pressure_ratio", "Compression over scavenge pressure", 2, true,
-         {"compression_pressure", "scavenge_pressure"}},
-        {"apparent_slip", "Apparent slip", 1, false, {"speed_through_water", "speed"}},
-        {"light_running_margin", "Light running", 1, false, {"speed"}}};
+        {"compression_pressure_ratio", true, {"compression_pressure", "scavenge_pressure"}},
+        {"apparent_slip", false, {"speed_through_water", "speed"}}};
     return lines;
 }
 
@@ -128,29 +121,6 @@ std::optional<std::string> missing_input(const ReviewContext& context, const Der
 
 } // namespace
 
-std::string upper_first(std::string text)
-{
-    if (!text.empty() && text[0] >= 'a' && text[0] <= 'z')
-        text[0] = static_cast<char>(text[0] - 'a' + 'A');
-    return text;
-}
-
-std::string lower_first(std::string text)
-{
-    const bool mark = text.size() > 1 && text[1] >= 'A' && text[1] <= 'Z'; // "MIP" stays
-    if (!text.empty() && text[0] >= 'A' && text[0] <= 'Z' && !mark)
-        text[0] = static_cast<char>(text[0] - 'A' + 'a');
-    return text;
-}
-
-std::string joined(const std::vector<std::string>& parts)
-{
-    std::string text;
-    for (std::size_t i = 0; i < parts.size(); ++i)
-        text += (i == 0 ? "" : i + 1 == parts.size() ? " and " : ", ") + parts[i];
-    return text;
-}
-
 std::string direction(const ReviewLine& line)
 {
     const auto& by = line.place.kind == Place::Kind::cylinder && line.apart ? line.apart : line.deviation;
@@ -208,10 +178,6 @@ std::optional<ReviewLine> derived_line(const ReviewContext& context, std::string
     ReviewLine line;
     if (id)
         line = empty_line(*id, place);
-    if (known && (!id || !quantity(*id).derived())) {
-        line.words = known->words;
-        line.decimals = known->decimals;
-    }
     line.place = place;
     if (row == context.derived.end()) {
         const auto missing = known ? missing_input(context, *known) : std::nullopt;

@@ -95,7 +95,7 @@ ReviewSection entry_section(const ReviewContext& context)
         what.push_back(count_words(doubts, "value is in doubt", "values are in doubt"));
     if (relations > 0)
         what.push_back(count_words(relations, "comparison between values does not fit", "comparisons between values do not fit"));
-    section.sentence = upper_first(joined(what)) + ". Settle this first: it spoils everything below.";
+    section.sentence = upper_first(and_list(what)) + ". Settle this first: it spoils everything below.";
     return section;
 }
 

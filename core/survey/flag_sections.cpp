@@ -125,7 +125,7 @@ void add_flag(const Context& context, const Flag& flag, int number, Section& sec
     blocks.push_back(std::move(fields));
     for (const std::string& name : flag.cautions)
         if (const Caution* caution = find_caution(name))
-            blocks.push_back(Paragraph{"Caution, " + in_sentence(caution->title) + ": " + caution->short_text,
+            blocks.push_back(Paragraph{"Caution, " + lower_first(caution->title) + ": " + caution->short_text,
                                        caution->emergency ? Paragraph::Style::boxed : Paragraph::Style::body});
     if (auto plot = flag_plot(context, flag))
         blocks.push_back(std::move(*plot));
@@ -157,7 +157,7 @@ std::string work_since(const Context& context, const Flag& flag)
     for (const Event* event : context.events) {
         if (event->date.utc < time_of(context, flag.reading) || event->place != flag.subject)
             continue;
-        words += (words.empty() ? "" : "; ") + date_text(event->date.utc) + ", " + in_sentence(event_title(*event));
+        words += (words.empty() ? "" : "; ") + date_text(event->date.utc) + ", " + lower_first(event_title(*event));
         if (!event->note.empty())
             words += " (" + event->note + ")";
         if (!event->done_by.empty())

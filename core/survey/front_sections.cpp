@@ -128,8 +128,8 @@ Row item_row(const Context& context, const Place& place, const Item& item, bool 
     const Event* event = last_opened(context, place, item.kinds);
     std::string opened = event ? date_text(event->date.utc) : "not recorded";
     if (event && event->kind != item.kinds.front())
-        opened += ", " + in_sentence(event_title(*event));
-    return {{starts_group ? capitalized(place_words(context.engine, place)) : "", item.title, opened, hours_since(context, event),
+        opened += ", " + lower_first(event_title(*event));
+    return {{starts_group ? upper_first(place_words(context.engine, place)) : "", item.title, opened, hours_since(context, event),
              starts_group ? level_words(context.judgement.level_of(place)) : "", ""},
             starts_group};
 }

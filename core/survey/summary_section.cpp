@@ -73,7 +73,7 @@ std::string flags_listed(const Context& context, Day day)
         if (const std::optional<std::size_t> reading = day(*flag); reading && *reading < context.record.readings.size()) {
             const TimePoint at = context.record.readings[*reading].taken_at.utc;
             if (context.contains(at))
-                parts.push_back(date_text(at) + ", " + in_sentence(flag_subject(context.judgement, *flag)));
+                parts.push_back(date_text(at) + ", " + lower_first(flag_subject(context.judgement, *flag)));
         }
     return listed(parts);
 }
@@ -84,7 +84,7 @@ FieldList changes(const Context& context)
     using Reading = std::optional<std::size_t>;
     std::vector<std::string> work;
     for (const Event* event : context.events)
-        work.push_back(date_text(event->date.utc) + ", " + in_sentence(event_title(*event)) + " (" + place_words(context.engine, event->place) + ")");
+        work.push_back(date_text(event->date.utc) + ", " + lower_first(event_title(*event)) + " (" + place_words(context.engine, event->place) + ")");
     std::size_t settings = 0;
     for (const EngineChangeLine& change : context.details.engine_changes)
         settings += context.contains(change.when) ? 1 : 0;
@@ -122,7 +122,7 @@ Section summary_section(const Context& context)
     if (context.summary.standing.empty())
         section.blocks.push_back(Paragraph{"None. No quantity has left its own level beyond the thresholds of the method.", {}});
     for (const std::string& line : context.summary.standing)
-        section.blocks.push_back(Paragraph{capitalized(line), {}});
+        section.blocks.push_back(Paragraph{upper_first(line), {}});
     if (!context.flags.empty() && context.details.depth != ReportDepth::brief)
         section.blocks.push_back(Paragraph{"Each flag with its workings: under \u201cFlags and questions\u201d" + page_reference("Flags and questions")
                                                + "; the readings behind it: \u201cTrends\u201d" + page_reference("Trends") + ".", {}});

@@ -54,18 +54,6 @@ TimePoint end_of_day(TimePoint day)
     return std::chrono::floor<std::chrono::days>(day) + std::chrono::days(1) - std::chrono::seconds(1);
 }
 
-std::string place_words(const Engine& engine, const Place& place)
-{
-    return place.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(place.number) : place_text(place);
-}
-
-std::string capitalized(std::string text)
-{
-    if (!text.empty())
-        text.front() = static_cast<char>(std::toupper(static_cast<unsigned char>(text.front())));
-    return text;
-}
-
 std::string unit_words(UnitId id, PressureKind kind)
 {
     const Unit& known = unit(id);
@@ -137,16 +125,9 @@ std::string state_words(const ReadingJudgement& reading)
     return words;
 }
 
-std::string in_sentence(std::string title)
-{
-    if (title.size() > 1 && !std::isupper(static_cast<unsigned char>(title[1])))
-        title.front() = static_cast<char>(std::tolower(static_cast<unsigned char>(title.front())));
-    return title;
-}
-
 std::string flag_subject(const Judgement& judgement, const Flag& flag)
 {
-    return capitalized(place_words(judgement.record->engine, flag.subject)) + ", " + in_sentence(quantity(flag.quantity).title);
+    return upper_first(place_words(judgement.record->engine, flag.subject)) + ", " + lower_first(quantity(flag.quantity).title);
 }
 
 std::string level_words(Level level)

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/sentence_words.h"
 #include "core/survey/report_blocks.h"
 #include "core/survey/survey_report.h"
 
@@ -42,9 +43,6 @@ struct Context
 
 /// The whole of a day: a period's last day counts to its end.
 TimePoint end_of_day(TimePoint day);
-/// "cylinder A3", "turbocharger 2", "engine"; with a capital where it begins a line.
-std::string place_words(const Engine& engine, const Place& place);
-std::string capitalized(std::string text);
 /// "bar gauge", "°C", "r/min"; empty for bare numbers and words.
 std::string unit_words(UnitId unit, PressureKind kind);
 std::string unit_of(const Quantity& quantity);
@@ -72,8 +70,6 @@ std::string standing_words(const Judgement& judgement, const Flag& flag);
 std::string flag_line(const Judgement& judgement, const Flag& flag);
 /// "Cylinder 4, compression pressure"
 std::string flag_subject(const Judgement& judgement, const Flag& flag);
-/// "Exhaust temperature" as it stands inside a sentence: "exhaust temperature".
-std::string in_sentence(std::string title);
 
 // The sections, in the order of print.
 Section title_section(const Context&);

@@ -76,7 +76,7 @@ Plot empty_plot(const Context& context)
 
 PlotLine trend_line(const Context& context, const Trend& trend, View view)
 {
-    PlotLine line{capitalized(place_words(context.engine, trend.place)), {}, false, false};
+    PlotLine line{upper_first(place_words(context.engine, trend.place)), {}, false, false};
     for (const TrendPoint& point : trend.points) {
         const TimePoint at = context.record.readings[point.reading].taken_at.utc;
         const auto amount = amount_of(point, view);
@@ -96,7 +96,7 @@ void add_events(const Context& context, const Place& subject, Plot& plot)
         const bool on_machine = event->place.kind == Place::Kind::turbocharger || event->place.kind == Place::Kind::cooler;
         const bool concerns = event->place == subject || (of_cylinder ? !on_cylinder && !on_machine : !on_cylinder);
         if (concerns)
-            plot.events.push_back({seconds(event->date.utc), in_sentence(event_title(*event))});
+            plot.events.push_back({seconds(event->date.utc), lower_first(event_title(*event))});
     }
 }
 

@@ -302,11 +302,11 @@ std::vector<Paragraph> never_read(const Context& context)
         if (!reason || !belongs(of, context.engine) || (of.need == Need::optional && *reason == MissingReason::not_read))
             continue;
         std::string& list = names[*reason];
-        list += (list.empty() ? "" : ", ") + in_sentence(of.title) + (of.per == Place::Kind::cylinder ? " (cylinders)" : "");
+        list += (list.empty() ? "" : ", ") + lower_first(of.title) + (of.per == Place::Kind::cylinder ? " (cylinders)" : "");
     }
     std::vector<Paragraph> paragraphs;
     for (const auto& [reason, list] : names)
-        paragraphs.push_back({capitalized(missing_words(reason)) + " in this period: " + list + ".", {}});
+        paragraphs.push_back({upper_first(missing_words(reason)) + " in this period: " + list + ".", {}});
     return paragraphs;
 }
 

@@ -2,6 +2,7 @@
 #include "core/trend/conditions.h"
 
 #include "core/reading/fitting_unit.h"
+#include "core/reading/typed_number.h"
 #include "core/reading/quantity_names.h"
 #include "core/reference/fuel.h"
 
@@ -39,15 +40,6 @@ std::optional<double> density_at_meter(const Conditions& conditions)
 std::optional<double> single(const Reading& reading, std::string_view name, const Conditions& conditions)
 {
     return engine_mean(reading, name, conditions);
-}
-
-std::string words_of(const Reading& reading, std::string_view name)
-{
-    const auto id = find_quantity(name, Place::Kind::engine);
-    for (const Value& value : reading.values)
-        if (id && value.quantity == *id && value.phase == Phase::reading)
-            return value.words.empty() ? value.typed : value.words;
-    return {};
 }
 
 } // namespace

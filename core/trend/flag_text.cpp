@@ -4,6 +4,7 @@
 #include "core/catalogue_table.h"
 #include "core/catalogue_text.h"
 #include "core/explanation/cautions.h"
+#include "core/sentence_words.h"
 #include "core/trend/drift_catalogue.h"
 
 #include <algorithm>
@@ -14,14 +15,6 @@
 
 namespace evenstroke {
 namespace {
-
-std::string lower_first(std::string text)
-{
-    // "MIP" and the like stay as they are.
-    if (text.size() > 1 && !std::isupper(static_cast<unsigned char>(text[1])))
-        text[0] = static_cast<char>(std::tolower(static_cast<unsigned char>(text[0])));
-    return text;
-}
 
 std::string quantity_words(const MovedQuantity& moved) { return lower_first(quantity(moved.quantity).title); }
 

@@ -5,7 +5,6 @@
 #include "core/workings/working_words.h"
 
 #include <algorithm>
-#include <map>
 
 namespace evenstroke {
 namespace {
@@ -90,7 +89,7 @@ bool is_exact(const Input& input) { return input.how == How::particular || input
 std::string title_of(const DerivedInputs::Missing& missing)
 {
     const auto id = find_quantity(missing.name);
-    return within_sentence(id ? quantity(*id).title : std::string(missing.name));
+    return lower_first(id ? quantity(*id).title : std::string(missing.name));
 }
 
 /// A cylinder's number beside those of the others, as the judging sets typed ones apart.
@@ -127,20 +126,18 @@ void append(std::vector<std::string>& to, const std::vector<std::string>& from)
 std::vector<WorkingInput> working_inputs(const DerivedInputs& inputs, const std::optional<Propagated>& solved)
 {
     std::vector<WorkingInput> list;
-    std::map<int, double> of_instruments;
-    const auto part = [&](std::size_t i) { return solved && i < solved->parts.size() ? solved->parts[i] : 0.0; };
-    for (std::size_t i = 0; i < inputs.inputs().size(); ++i)
-        of_instruments[inputs.inputs()[i].instrument] += part(i);
+    std::vector<int> instruments;
+    for (const Input& from : inputs.inputs())
+        instruments.push_back(from.instrument);
+    const auto shares = solved ? budget_shares(*solved, instruments) : std::vector<std::optional<double>>(instruments.size());
     for (std::size_t i = 0; i < inputs.inputs().size(); ++i) {
         const Input& from = inputs.inputs()[i];
         WorkingInput input = describe(inputs, from);
         if (!is_exact(from))
             input.half_width = inputs.half_width(from);
-        input.moved = part(i);
-        // Slips of one instrument are added before they are squared; each input has its part of the sum.
-        const double together = from.instrument == UncertainInput::own ? input.moved : of_instruments[from.instrument];
-        if (solved && solved->half_width && *solved->half_width > 0.0 && !is_exact(from))
-            input.share = input.moved * together / (*solved->half_width * *solved->half_width);
+        input.moved = solved && i < solved->parts.size() ? solved->parts[i] : 0.0;
+        if (!is_exact(from))
+            input.share = shares[i];
         list.push_back(std::move(input));
     }
     return list;
@@ -150,7 +147,7 @@ std::vector<WorkingStep> working_steps(const DerivedInputs& inputs)
 {
     std::vector<WorkingStep> steps;
     for (const DerivedInputs::Step& step : inputs.steps()) {
-        const std::string place = place_words(inputs.engine(), step.place);
+        const std::string place = part_words(inputs.engine(), step.place);
         steps.push_back({std::string(step.words) + (place.empty() ? "" : ", " + place), step.value, std::string(step.unit)});
     }
     return steps;
@@ -162,7 +159,7 @@ std::string missing_words(const DerivedInputs& inputs, const std::string& what)
         return inputs.problem()->text();
     std::vector<std::string> reasons, to_read, of_baseline;
     for (const DerivedInputs::Missing& each : inputs.missing()) {
-        const std::string place = place_words(inputs.engine(), each.place);
+        const std::string place = part_words(inputs.engine(), each.place);
         const std::string words = title_of(each) + (place.empty() ? "" : " of " + place);
         std::vector<std::string>& list = each.of_baseline ? of_baseline : to_read;
         if (std::find(list.begin(), list.end(), words) != list.end())
@@ -173,11 +170,11 @@ std::string missing_words(const DerivedInputs& inputs, const std::string& what)
     }
     if (reasons.empty())
         return what + " is not known.";
-    std::string text = what + " is not known, because " + listed(reasons) + ".";
+    std::string text = what + " is not known, because " + and_list(reasons) + ".";
     if (!to_read.empty())
-        text += " Read " + listed(to_read) + ".";
+        text += " Read " + and_list(to_read) + ".";
     if (!of_baseline.empty())
-        text += " Enter " + listed(of_baseline) + " with the engine's baseline.";
+        text += " Enter " + and_list(of_baseline) + " with the engine's baseline.";
     return text;
 }
 

@@ -54,7 +54,7 @@ public:
 private:
     void say_missing()
     {
-        const std::string place = place_words(engine_, place_);
+        const std::string place = part_words(engine_, place_);
         const std::string of = place.empty() ? "" : " of " + place;
         if (typed_ && typed_->number) {
             sheet_.missing = q_.title + of + " is not known, because " + words_as_typed(*typed_) +
@@ -63,7 +63,7 @@ private:
             return;
         }
         sheet_.missing = q_.title + of + " is not known, because it " + why_missing(reading_, q_.name, place_) + ". Read " +
-                         within_sentence(q_.title) + of + ".";
+                         lower_first(q_.title) + of + ".";
     }
 
     WorkingInput& input(std::string_view quantity_name, double value, std::optional<double> half, double moved)
@@ -149,7 +149,7 @@ private:
         const auto half = degrees ? instrument_uncertainty(engine_, quantity(*find_quantity(name)), *degrees) : std::nullopt;
         input(name, degrees.value_or(reference), half, moved);
         step(difference + ", over the reference of " + short_number_text(reference) + " °C", degrees.value_or(reference) - reference, "K");
-        sheet_.inputs.push_back({"Coefficient of " + within_sentence(quantity(*find_quantity(name)).title), coefficient,
+        sheet_.inputs.push_back({"Coefficient of " + lower_first(quantity(*find_quantity(name)).title), coefficient,
                                  Place::engine(), per_kelvin, "1/K", {}, 0.0, {}, "engine's particulars"});
     }
 

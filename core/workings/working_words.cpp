@@ -9,23 +9,6 @@
 
 namespace evenstroke {
 
-std::string within_sentence(std::string_view title)
-{
-    std::string text(title);
-    const bool word = text.size() > 1 && text[0] >= 'A' && text[0] <= 'Z' && text[1] >= 'a' && text[1] <= 'z';
-    if (word)
-        text[0] = static_cast<char>(text[0] - 'A' + 'a');
-    return text;
-}
-
-std::string listed(const std::vector<std::string>& words)
-{
-    std::string text;
-    for (std::size_t i = 0; i < words.size(); ++i)
-        text += (i == 0 ? "" : i + 1 == words.size() ? " and " : ", ") + words[i];
-    return text;
-}
-
 std::string symbol_of(const Quantity& q)
 {
     static const std::map<std::string, std::string, std::less<>> symbols = [] {
@@ -52,11 +35,9 @@ std::string unit_words(const Quantity& q)
     return text;
 }
 
-std::string place_words(const Engine& engine, const Place& place)
+std::string part_words(const Engine& engine, const Place& place)
 {
-    if (place.kind == Place::Kind::engine || place.kind == Place::Kind::ship)
-        return {};
-    return place.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(place.number) : place_text(place);
+    return place.kind == Place::Kind::engine || place.kind == Place::Kind::ship ? std::string() : place_words(engine, place);
 }
 
 std::string words_as_typed(const Value& value)
