@@ -127,7 +127,7 @@ int run_evaluate(const QCommandLineParser& parser, Streams& streams)
         {"vessel", "engine", "reading", "taken_at", "quantity", "cylinder", "value", "unit", "corrected", "expected",
          "deviation", "apart", "uncertainty"},
         [&](TableOutput& table, const Judgement& judgement) {
-            const Baseline baseline(judgement.record->engine);
+            const Baseline baseline = derived ? Baseline(judgement.record->engine) : Baseline();
             for (const ReadingJudgement& reading : judgement.readings)
                 if (wanted.isEmpty() ||
                     QString::fromStdString(judgement.record->readings[reading.reading].name) == wanted) {
