@@ -355,7 +355,7 @@ void EntryPage::go_to_unreadable()
     const auto& [box, text] = *model_.unreadable().begin();
     ui_->grid->go_to(box);
     close_problem_ = invalid_input(
-        to_std(tr("%1 holds “%2”, which cannot be read and is not kept.").arg(model_.box_name(box), text)),
+        to_std(tr("%1 holds “%2”, which cannot be read.").arg(model_.box_name(box), text)),
         to_std(tr("Put it right, or empty the box with Delete.")));
     show_notes();
 }

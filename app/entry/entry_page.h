@@ -102,6 +102,7 @@ private:
     void add_closing_line(std::vector<NoteLines::Line>& lines);
     void add_matter_lines(std::vector<NoteLines::Line>& lines);
     void withdraw_reading();
+    void ask_bring_back(const QString& reading_id);
     void say(const QString& notice);
 
     std::unique_ptr<Ui::EntryPage> ui_;

@@ -168,6 +168,9 @@ void EntryPage::fill_readings_menu(QMenu& menu)
     for (const storage::ReadingEntry& entry : closed)
         menu.addAction(tr("Correct %1").arg(label(entry)), this,
                        [this, id = entry.id] { correct(to_qstring(id)); });
+    for (const storage::ReadingEntry& entry : session_.withdrawn_readings(closed_offered))
+        menu.addAction(tr("Bring back %1, which was withdrawn…").arg(label(entry)), this,
+                       [this, id = entry.id] { ask_bring_back(to_qstring(id)); });
     if (closed.empty())
         menu.addAction(tr("No closed reading of this engine yet"))->setEnabled(false);
 }

@@ -5,6 +5,7 @@
 #include "app/entry/ear.h"
 #include "app/entry/entry_page.h"
 #include "app/entry/log_sheet_view.h"
+#include "app/entry/signature_dialog.h"
 #include "ui_entry_page.h"
 
 #include <QScrollBar>
@@ -248,6 +249,18 @@ void EntryPage::close_reading()
     }
     show_state();
     ui_->closed_page->first_focus()->setFocus();
+}
+
+void EntryPage::ask_bring_back(const QString& reading_id)
+{
+    SignatureDialog dialog(tr("Bring a withdrawn reading back"),
+                           tr("The reading counts again in baselines of comparison, trends and reports. The history "
+                              "keeps who brought it back and why."),
+                           tr("Bring it back"), session_.signature(), this);
+    if (dialog.exec() != QDialog::Accepted)
+        return;
+    close_problem_ = session_.bring_back(reading_id, dialog.signature());
+    show_notes();
 }
 
 void EntryPage::withdraw_reading()

@@ -4,6 +4,7 @@
 #include "app/desk/number_text.h"
 #include "app/desk/workplace.h"
 #include "app/entry/reading_name.h"
+#include "app/entry/unreadable_texts.h"
 #include "storage/preference_store.h"
 #include "storage/vessel_store.h"
 
@@ -71,6 +72,8 @@ EntrySession::EntrySession(Workplace& workplace, QObject* parent) : QObject(pare
     write_soon_.setInterval(0); // a pasted block is written in one go
     connect(&write_soon_, &QTimer::timeout, this, &EntrySession::flush);
     connect(&sheet_, &EntrySheet::value_put, this, &EntrySession::remember);
+    connect(&sheet_, &EntrySheet::unreadable_changed, this,
+            [this] { keep_unreadable(sheet_.reading().id, sheet_.unreadable()); });
 }
 
 EntrySession::~EntrySession()
@@ -203,6 +206,9 @@ void EntrySession::load(Reading reading, State state)
     start.ship = find_ship_values(reading.taken_at, start.ship_open);
     if (state == State::correcting)
         start.ship_open = false;
+    const storage::PreferenceStore preferences(*workplace_.history());
+    if (const auto texts = preferences.choice(to_std(engine_id_), unreadable_choice(reading.id)))
+        start.unreadable = read_unreadable(to_qstring(texts.value().value_or(std::string())));
     start.reading = std::move(reading);
     state_ = state;
     sheet_.start(std::move(start));
@@ -251,18 +257,19 @@ std::vector<storage::ReadingEntry> EntrySession::other_drafts() const
     return drafts;
 }
 
-std::vector<storage::ReadingEntry> EntrySession::closed_readings(std::size_t at_most) const
+std::vector<storage::ReadingEntry> EntrySession::readings_in(storage::ReadingState state,
+                                                             std::size_t at_most) const
 {
-    std::vector<storage::ReadingEntry> closed;
+    std::vector<storage::ReadingEntry> found;
     if (!workplace_.history())
-        return closed;
+        return found;
     const auto readings = store().list(Owner::engine(to_std(engine_id_)));
     if (readings)
         for (auto entry = readings.value().rbegin();
-             entry != readings.value().rend() && closed.size() < at_most; ++entry)
-            if (entry->state == ReadingState::closed)
-                closed.push_back(*entry);
-    return closed;
+             entry != readings.value().rend() && found.size() < at_most; ++entry)
+            if (entry->state == state)
+                found.push_back(*entry);
+    return found;
 }
 
 // ------------------------------------------------------------------------------------------- choices

@@ -52,7 +52,10 @@ public:
     std::vector<storage::ReadingEntry> other_drafts() const;
     void open_draft(const QString& reading_id);
     /// The last closed readings, newest first.
-    std::vector<storage::ReadingEntry> closed_readings(std::size_t at_most) const;
+    std::vector<storage::ReadingEntry> closed_readings(std::size_t at_most) const
+    {
+        return readings_in(storage::ReadingState::closed, at_most);
+    }
 
     const StampedTime& taken_at() const { return sheet_.reading().taken_at; }
     /// Of a draft at once; of a closed reading as a correction, when name and reason are given.
@@ -76,6 +79,12 @@ public:
     std::optional<Problem> discard();
     /// Takes the closed reading that is being corrected out of use; it stays in the history with the reason.
     std::optional<Problem> withdraw();
+    /// Closed readings that were taken out of use, newest first.
+    std::vector<storage::ReadingEntry> withdrawn_readings(std::size_t at_most) const
+    {
+        return readings_in(storage::ReadingState::withdrawn, at_most);
+    }
+    std::optional<Problem> bring_back(const QString& reading_id, const storage::Signature& by);
 
 signals:
     void changed();  ///< state, time, saved or problem
@@ -83,11 +92,13 @@ signals:
 
 private:
     storage::ReadingStore store() const;
+    std::vector<storage::ReadingEntry> readings_in(storage::ReadingState state, std::size_t at_most) const;
     bool open_engine();
     void load(Reading reading, State state);
     std::vector<Value> find_ship_values(StampedTime near, bool& open);
     void follow_ship(StampedTime time);
     void remember(const LogBox& box, EntrySheet::Owner owner);
+    void keep_unreadable(const std::string& reading_id, const std::map<LogBox, QString>& texts);
     bool make_drafts();
     bool write_drafts();
     bool write_corrections();

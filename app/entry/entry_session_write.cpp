@@ -5,6 +5,8 @@
 #include "app/desk/number_text.h"
 #include "app/desk/workplace.h"
 #include "app/entry/reading_name.h"
+#include "app/entry/unreadable_texts.h"
+#include "storage/preference_store.h"
 
 namespace evenstroke {
 namespace {
@@ -30,6 +32,20 @@ void EntrySession::remember(const LogBox& box, EntrySheet::Owner owner)
         return;
     (owner == EntrySheet::Owner::ship ? waiting_ship_ : waiting_reading_).insert(box);
     write_soon_.start();
+}
+
+/// Texts that cannot be read wait in the history beside their draft: no value, and yet typed.
+void EntrySession::keep_unreadable(const std::string& reading_id, const std::map<LogBox, QString>& texts)
+{
+    if ((state_ != State::writing && state_ != State::correcting) || !workplace_.history() ||
+        workplace_.read_only())
+        return;
+    storage::PreferenceStore preferences(*workplace_.history());
+    const auto kept = preferences.set_choice(
+        to_std(engine_id_), unreadable_choice(reading_id),
+        texts.empty() ? std::nullopt : std::optional(to_std(write_unreadable(texts))));
+    if (!kept)
+        failed(kept.error());
 }
 
 storage::Signature EntrySession::signed_by() const
@@ -70,6 +86,10 @@ bool EntrySession::make_drafts()
             store().make_draft(owner, free_name(store().list(owner), time, {}), time, signed_by());
         if (!draft)
             return failed(draft.error());
+        if (!sheet_.unreadable().empty()) { // they waited on a sheet that had no place in the history yet
+            keep_unreadable({}, {});
+            keep_unreadable(draft.value().id, sheet_.unreadable());
+        }
         sheet_.set_head(draft.value().id, draft.value().name, time);
     }
     if (ship_reading_id_.empty() && !waiting_ship_.empty()) {
@@ -171,6 +191,15 @@ std::optional<Problem> EntrySession::withdraw()
     return std::nullopt;
 }
 
+std::optional<Problem> EntrySession::bring_back(const QString& reading_id, const storage::Signature& by)
+{
+    if (const auto back = store().restore(to_std(reading_id), by); !back)
+        return back.error();
+    workplace_.changed();
+    emit changed();
+    return std::nullopt;
+}
+
 std::optional<Problem> EntrySession::close()
 {
     if (!flush() && problem_)
@@ -197,6 +226,7 @@ std::optional<Problem> EntrySession::discard()
 {
     waiting_reading_.clear();
     waiting_ship_.clear();
+    keep_unreadable(sheet_.reading().id, {});
     if (!sheet_.reading().id.empty()) {
         const auto gone = store().discard_draft(sheet_.reading().id, signed_by());
         if (!gone)

@@ -113,6 +113,20 @@ void EntrySheet::put(const Value& value)
     emit value_put(box, owner);
 }
 
+void EntrySheet::keep_unreadable(const LogBox& box, const QString& text)
+{
+    start_.unreadable[box] = text;
+    emit unreadable_changed(box);
+}
+
+bool EntrySheet::forget_unreadable(const LogBox& box)
+{
+    if (start_.unreadable.erase(box) == 0)
+        return false;
+    emit unreadable_changed(box);
+    return true;
+}
+
 bool EntrySheet::empty() const
 {
     return start_.reading.values.empty() && (!start_.ship_open || start_.ship.empty());

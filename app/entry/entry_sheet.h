@@ -5,6 +5,7 @@
 #include "core/reading/typed_box.h"
 
 #include <QObject>
+#include <QString>
 
 #include <map>
 #include <optional>
@@ -23,6 +24,7 @@ struct SheetStart
     Reading reading;                         ///< its own values
     std::vector<Value> ship;                 ///< what the whole ship shares
     bool ship_open = true; ///< false: the ship's values are closed; typing over them is this engine's own
+    std::map<LogBox, QString> unreadable; ///< texts typed before that could not be read and wait in their boxes
 };
 
 /// The log sheet that is being filled in, in memory: the reading's own values, what the ship lends, the rows'
@@ -61,6 +63,11 @@ public:
     bool lent(const LogBox& box) const;
     /// Puts a value in its box; one without number, words or reason empties the box.
     void put(const Value& value);
+    /// Texts that could not be read and wait in their boxes to be put right.
+    const std::map<LogBox, QString>& unreadable() const { return start_.unreadable; }
+    void keep_unreadable(const LogBox& box, const QString& text);
+    /// False where none waited.
+    bool forget_unreadable(const LogBox& box);
     /// Whether there is anything in the reading, apart from what was lent.
     bool empty() const;
 
@@ -71,6 +78,7 @@ signals:
     void restarted();
     void value_put(const evenstroke::LogBox& box, evenstroke::EntrySheet::Owner owner);
     void row_unit_changed(evenstroke::QuantityId quantity);
+    void unreadable_changed(const evenstroke::LogBox& box);
     void head_changed();
     void ship_changed();
 

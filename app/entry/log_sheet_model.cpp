@@ -8,22 +8,12 @@
 
 namespace evenstroke {
 
-namespace {
-
-/// Which reading stands on the sheet, also before it has a place in the history.
-std::string reading_key(const EntrySheet& sheet)
-{
-    return sheet.engine().id + '/' + sheet.engine().name + '/' + sheet.reading().id;
-}
-
-} // namespace
-
 LogSheetModel::LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* parent)
     : QAbstractTableModel(parent), sheet_(sheet), undo_(undo)
 {
     connect(&sheet_, &EntrySheet::restarted, this, &LogSheetModel::restart);
-    connect(&sheet_, &EntrySheet::head_changed, this, [this] { shown_reading_ = reading_key(sheet_); });
     connect(&sheet_, &EntrySheet::value_put, this, [this](const LogBox& put_box) { tell_box(put_box); });
+    connect(&sheet_, &EntrySheet::unreadable_changed, this, &LogSheetModel::tell_box);
     connect(&sheet_, &EntrySheet::ship_changed, this, &LogSheetModel::rebuild);
     connect(&sheet_, &EntrySheet::row_unit_changed, this, [this] {
         if (!rows_.empty())
@@ -33,17 +23,9 @@ LogSheetModel::LogSheetModel(EntrySheet& sheet, QUndoStack& undo, QObject* paren
     rebuild();
 }
 
-/// Another reading is on the sheet. Texts that could not be read wait with their own reading.
+/// Another reading is on the sheet.
 void LogSheetModel::restart()
 {
-    if (!unreadable_.empty())
-        put_aside_[shown_reading_] = std::move(unreadable_);
-    unreadable_.clear();
-    shown_reading_ = reading_key(sheet_);
-    if (const auto waiting = put_aside_.find(shown_reading_); waiting != put_aside_.end()) {
-        unreadable_ = std::move(waiting->second);
-        put_aside_.erase(waiting);
-    }
     marks_.clear();
     previous_.clear();
     rebuild();
@@ -56,8 +38,8 @@ void LogSheetModel::unfold_filled()
 
 std::optional<Problem> LogSheetModel::refusal(const LogBox& where) const
 {
-    const auto waiting = unreadable_.find(where);
-    if (waiting == unreadable_.end())
+    const auto waiting = unreadable().find(where);
+    if (waiting == unreadable().end())
         return std::nullopt;
     const auto read = read_box(where, to_std(waiting->second), sheet_.row_unit(where.quantity));
     return read ? std::nullopt : std::optional<Problem>(read.error());
@@ -96,7 +78,7 @@ bool LogSheetModel::unfolded(const LogRow& row) const
     if (row.need == Need::recommended && sheet_.used().empty())
         return true; // a first reading: nobody knows yet what this engine has instruments for
     return std::any_of(row.boxes.begin(), row.boxes.end(), [this](const LogBox& b) {
-        return sheet_.value(b) != nullptr || unreadable_.count(b) > 0;
+        return sheet_.value(b) != nullptr || unreadable().count(b) > 0;
     });
 }
 
@@ -185,8 +167,8 @@ QString LogSheetModel::box_name(const LogBox& named) const
 
 QString LogSheetModel::shown_text(const LogBox& shown) const
 {
-    const auto waiting = unreadable_.find(shown);
-    if (waiting != unreadable_.end())
+    const auto waiting = unreadable().find(shown);
+    if (waiting != unreadable().end())
         return waiting->second;
     const Value* value = sheet_.value(shown);
     return value ? to_qstring(box_text(*value, sheet_.row_unit(shown.quantity))) : QString();
@@ -194,7 +176,7 @@ QString LogSheetModel::shown_text(const LogBox& shown) const
 
 BoxMark LogSheetModel::mark_of(const LogBox& marked, const Value* value) const
 {
-    if (unreadable_.count(marked) > 0)
+    if (unreadable().count(marked) > 0)
         return BoxMark::unreadable;
     if (value && value->confirmed)
         return BoxMark::confirmed;
@@ -334,34 +316,24 @@ bool LogSheetModel::setData(const QModelIndex& at, const QVariant& text, int rol
     if (role != Qt::EditRole || !typed)
         return false;
     const QString wanted = text.toString().trimmed();
-    if (wanted == shown_text(*typed) && unreadable_.count(*typed) == 0)
+    if (wanted == shown_text(*typed) && unreadable().count(*typed) == 0)
         return true; // an untouched box keeps every digit, and what the ship lends stays lent
     const auto read = read_box(*typed, to_std(wanted), sheet_.row_unit(typed->quantity));
     if (!read) {
-        unreadable_[*typed] = wanted;
-        tell_box(*typed);
+        sheet_.keep_unreadable(*typed, wanted);
         emit refused(at);
         return false;
     }
-    if (unreadable_.erase(*typed) > 0)
-        tell_box(*typed);
     put(read.value(),
         wanted.isEmpty() ? tr("empty %1").arg(box_name(*typed)) : tr("enter %1").arg(box_name(*typed)));
     return true;
-}
-
-void LogSheetModel::forget_unreadable(const LogBox& where)
-{
-    if (unreadable_.erase(where) > 0)
-        tell_box(where);
 }
 
 void LogSheetModel::put(const Value& value, const QString& what)
 {
     const LogBox where = box_of(value);
     const Value* old = sheet_.value(where);
-    if (unreadable_.erase(where) > 0)
-        tell_box(where);
+    sheet_.forget_unreadable(where);
     if (old ? same_value(*old, value) : !says_something(value))
         return;
     undo_.push(new PutValue(sheet_, value, what));

@@ -66,8 +66,8 @@ public:
     void set_previous(std::map<QuantityId, QString> previous);
     void set_marks(std::map<LogBox, BoxMark> marks);
     /// Texts that could not be read and wait to be put right.
-    const std::map<LogBox, QString>& unreadable() const { return unreadable_; }
-    void forget_unreadable(const LogBox& box);
+    const std::map<LogBox, QString>& unreadable() const { return sheet_.unreadable(); }
+    void forget_unreadable(const LogBox& box) { sheet_.forget_unreadable(box); }
     /// Why the text that waits in a box cannot be read; none where none waits.
     std::optional<Problem> refusal(const LogBox& box) const;
     /// Rows that were folded away and hold something now come up.
@@ -103,9 +103,6 @@ private:
     bool all_rows_ = false;
     std::map<LogBox, BoxMark> marks_;
     std::map<QuantityId, QString> previous_;
-    std::map<LogBox, QString> unreadable_;
-    std::map<std::string, std::map<LogBox, QString>> put_aside_; ///< of the readings not shown just now
-    std::string shown_reading_;
 };
 
 } // namespace evenstroke

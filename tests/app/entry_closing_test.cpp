@@ -109,6 +109,13 @@ TEST_F(EntryClosing, AClosedReadingIsWithdrawnOnlyWithAReason)
     EXPECT_FALSE(page->session().withdraw().has_value());
     EXPECT_EQ(listed(storage::ReadingState::withdrawn).size(), 1u);
     EXPECT_EQ(state(), EntrySession::State::writing);
+    const auto offered = page->session().withdrawn_readings(5);
+    ASSERT_EQ(offered.size(), 1u);
+    const QString id = QString::fromStdString(offered.front().id);
+    EXPECT_TRUE(page->session().bring_back(id, {"A. Chief", ""}).has_value()) << "no reason given";
+    EXPECT_FALSE(page->session().bring_back(id, {"A. Chief", "it was this engine after all"}).has_value());
+    EXPECT_EQ(listed(storage::ReadingState::withdrawn).size(), 0u);
+    EXPECT_EQ(listed(storage::ReadingState::closed).size(), 3u);
 }
 
 TEST_F(EntryClosing, ARowBeginsInTheUnitOfTheLastReading)

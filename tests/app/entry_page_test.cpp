@@ -106,6 +106,14 @@ TEST_F(EntryDesk, ATextThatCannotBeReadWaitsInItsBoxAndHoldsUpOnlyTheClosing)
     look_at("main engine");
     page->refresh();
     EXPECT_EQ(shown(box("load_percent")), QStringLiteral("6 8"));
+    page.reset();
+    make_page();
+    EXPECT_EQ(shown(box("load_percent")), QStringLiteral("6 8")) << "the program was closed and opened";
+    enter(box("speed"), QStringLiteral("90"));
+    page.reset();
+    make_page();
+    EXPECT_EQ(shown(box("load_percent")), QStringLiteral("6 8")) << "the draft has a place in the history now";
+    page->view().go_to(box("load_percent"));
     page->close_reading();
     EXPECT_TRUE(page->notes().text().contains(QStringLiteral("6 8"))) << page->notes().text().toStdString();
     EXPECT_EQ(page->session().state(), EntrySession::State::writing);
