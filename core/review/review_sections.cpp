@@ -110,8 +110,6 @@ ReviewSection steadiness_section(const ReviewContext& context)
         line.unit = finding.unit;
         line.decimals = finding.unit == "%" ? 2 : finding.unit == "min" ? 0 : q.decimals;
         line.value = finding.amount;
-        line.low = finding.before;
-        line.high = finding.after;
         line.level = finding.verdict == Steadiness::steady ? Level::quiet : Level::note;
         line.verdict = steadiness_word(finding.verdict) + ": " + finding.words;
         section.lines.push_back(std::move(line));

@@ -40,8 +40,12 @@ std::string change_text(const MovedQuantity& moved, bool ramp, bool first)
     return std::string(first ? " stands " : " ") + amount_text(moved) + (up ? " higher" : " lower");
 }
 
+/// Whether the drift of an engine's value is that of its deviation from a baseline curve. The charge air is
+/// followed as its difference to the coolant, whatever curve it may have (core/trend/drift_input.cpp).
 bool in_baseline(const Engine& engine, const std::string& name)
 {
+    if (name == "scavenge_temperature")
+        return false;
     return std::any_of(engine.baseline.begin(), engine.baseline.end(),
                        [&](const BaselinePoint& point) { return point.values.count(name) != 0; });
 }
@@ -176,7 +180,10 @@ std::string doubt_sentence(const Engine& engine, const Doubt& doubt, const std::
     const std::string meant = doubt.suggestion ? " Was " + *doubt.suggestion + " meant?" : "";
     switch (doubt.verdict) {
     case Doubt::Verdict::decimal_slip: return where + typed + " looks as if the decimal sign slipped." + meant;
-    case Doubt::Verdict::digits_swapped: return where + typed + " looks as if two digits changed places." + meant;
+    case Doubt::Verdict::digits_swapped:
+        if (doubt.suggestion && doubt.suggestion->size() > typed_text.size() && !typed_text.empty())
+            return where + typed + " looks as if a digit were missing." + meant;
+        return where + typed + " looks as if two digits changed places." + meant;
     case Doubt::Verdict::unit_slip:
         return where + ": the whole row looks as if it were in another unit. Look at the gauge's face and the unit chosen.";
     case Doubt::Verdict::cylinders_swapped:

@@ -347,6 +347,20 @@ TEST(JudgeDraft, ShowsPreviousAndExpectedAndDoubtsASlip)
     }
 }
 
+TEST(FlagText, ADigitMoreThanWasTypedIsAMissingDigitAndNoExchange)
+{
+    Doubt doubt;
+    doubt.verdict = Doubt::Verdict::digits_swapped;
+    doubt.quantity = find_quantity("maximum_pressure", Place::Kind::cylinder);
+    doubt.place = Place::cylinder(3);
+    doubt.suggestion = "105.2"; // 15.2 was typed: the nought is gone
+    EXPECT_EQ(doubt_sentence(example_engine(), doubt, "15.2"),
+              "Cylinder 3 maximum pressure, typed 15.2, looks as if a digit were missing. Was 105.2 meant?");
+    doubt.suggestion = "152";
+    EXPECT_EQ(doubt_sentence(example_engine(), doubt, "125"),
+              "Cylinder 3 maximum pressure, typed 125, looks as if two digits changed places. Was 152 meant?");
+}
+
 TEST(FlagText, NumbersKeepTwoDigits)
 {
     EXPECT_EQ(two_digits(0.5954), "0.60");
