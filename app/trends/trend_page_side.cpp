@@ -119,7 +119,7 @@ bool TrendPage::save_as(const QString& path)
         QSaveFile file(path);
         saved = file.open(QIODevice::WriteOnly) && file.write(table_.as_csv()) >= 0 && file.commit();
     } else if (ending == QLatin1String("pdf") || ending == QLatin1String("png")) {
-        saved = TrendPlot::save(ui_->plot->picture(), ui_->plot->load_shown(), path, QSize(1000, 560));
+        saved = TrendPlot::save(ui_->plot->picture(), ui_->plot->extras(), path, QSize(1000, 560));
     } else {
         ui_->saved->setText(tr("The ending of %1 is not known here. Use .pdf, .png or .csv.").arg(path));
         ui_->saved->show();
@@ -160,7 +160,7 @@ void TrendPage::print(QPrinter& printer)
     const QSize plot_size(page.width(), static_cast<int>(plot_height_on_paper * page.height()));
     painter.save();
     painter.translate(0, top + 4.0);
-    TrendPlot::paint(picture, ui_->plot->load_shown(), painter, plot_size);
+    TrendPlot::paint(picture, ui_->plot->extras(), painter, plot_size);
     painter.restore();
     top += plot_size.height() + 8.0;
     write(top, ui_->reading->text(), TypeSize::label, false);

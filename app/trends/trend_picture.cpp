@@ -123,7 +123,9 @@ void add_points(TrendPicture& picture, const Judgement& judgement, const Trend& 
             shown.with_care = judgement.readings[point.reading].steadiness == Steadiness::usable_with_care;
         }
         add_band(shown, trend, point, picture.view);
-        shown.spoken = spoken_point(picture, shown, point);
+        if (picture.view != ValueView::raw)
+            shown.half_width = point.uncertainty;
+        shown.spoken = spoken_point(picture, shown);
         picture.points.push_back(std::move(shown));
     }
 }

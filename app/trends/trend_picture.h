@@ -23,6 +23,7 @@ struct PicturePoint
     bool with_care = false; ///< usable with care: drawn hollow like an unsteady one
     bool starts_stretch = false; ///< not joined to the point before: work was done between them
     std::optional<double> band_low, band_high;
+    std::optional<double> half_width; ///< 95 %; of everything but the value as read, which holds its instrument's only
     std::optional<double> load_percent;
     QString spoken; ///< "14 Mar 2031, 76 % load: −5.9 ± 1.2 bar, not steady"
 };

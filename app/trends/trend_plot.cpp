@@ -80,7 +80,7 @@ int TrendPlot::threshold_label_width() const
     return widest;
 }
 
-int TrendPlot::label_gap() const { return load_shown_ ? 10 + load_margin : 10; }
+int TrendPlot::label_gap() const { return extras_.load ? 10 + load_margin : 10; }
 
 void TrendPlot::show_picture(const TrendPicture& picture, const Theme& colours)
 {
@@ -89,9 +89,9 @@ void TrendPlot::show_picture(const TrendPicture& picture, const Theme& colours)
     draw_all();
 }
 
-void TrendPlot::show_load(bool shown)
+void TrendPlot::show_extras(const TrendExtras& extras)
 {
-    load_shown_ = shown;
+    extras_ = extras;
     draw_all();
 }
 
@@ -110,6 +110,7 @@ void TrendPlot::draw_all()
     clearItems();
     event_items_.clear();
     ring_ = nullptr;
+    ring_whiskers_ = nullptr;
     setBackground(QBrush(theme_->page));
     set_margins();
     style_axes();
@@ -118,6 +119,7 @@ void TrendPlot::draw_all()
         add_band();
         add_others();
         add_line();
+        add_uncertainty();
         add_points();
         add_marks();
         add_load();
@@ -149,7 +151,7 @@ void TrendPlot::style_axes()
     values_->axis(QCPAxis::atLeft)->setTicker(QSharedPointer<QCPAxisTicker>(new NumberTicker(picture_.difference)));
     evidence_->axis(QCPAxis::atLeft)->setTicks(false);
     evidence_->axis(QCPAxis::atLeft)->setTickLabels(false);
-    values_->axis(QCPAxis::atRight)->setVisible(load_shown_);
+    values_->axis(QCPAxis::atRight)->setVisible(extras_.load);
 }
 
 void TrendPlot::set_ranges()
@@ -164,6 +166,10 @@ void TrendPlot::set_ranges()
     for (const PicturePoint& point : picture_.points) {
         if (!point.doubtful) // a slip of the pen must not flatten everything else
             widen(point.value);
+        if (extras_.uncertainty && point.half_width && !point.doubtful) {
+            widen(point.value - *point.half_width);
+            widen(point.value + *point.half_width);
+        }
         if (point.band_low && point.band_high) {
             widen(*point.band_low);
             widen(*point.band_high);
@@ -269,10 +275,40 @@ void TrendPlot::add_points()
         QCPScatterStyle(QCPScatterStyle::ssCross, theme_->muted, Qt::NoBrush, point_size + 3.0));
 }
 
+/// Bars of the half-width over the points of a graph, drawn beneath them.
+QCPErrorBars* TrendPlot::add_whiskers(QCPGraph* graph)
+{
+    auto* whiskers = new QCPErrorBars(graph->keyAxis(), graph->valueAxis());
+    whiskers->setDataPlottable(graph);
+    whiskers->setErrorType(QCPErrorBars::etValueError);
+    whiskers->setWhiskerWidth(point_size);
+    whiskers->setSymbolGap(0.0);
+    whiskers->setPen(theme_->pen(theme_->muted));
+    whiskers->setAntialiased(false);
+    return whiskers;
+}
+
+void TrendPlot::add_uncertainty()
+{
+    if (!extras_.uncertainty)
+        return;
+    QVector<double> times, values, half_widths;
+    for (const PicturePoint& point : picture_.points)
+        if (point.half_width && !point.doubtful) {
+            times.append(point.time);
+            values.append(point.value);
+            half_widths.append(*point.half_width);
+        }
+    QCPGraph* graph = addGraph(values_->axis(QCPAxis::atBottom), values_->axis(QCPAxis::atLeft));
+    graph->setLineStyle(QCPGraph::lsNone);
+    graph->setData(times, values, true);
+    add_whiskers(graph)->setData(half_widths);
+}
+
 void TrendPlot::add_load()
 {
     QCPAxis* axis = values_->axis(QCPAxis::atRight);
-    if (!load_shown_)
+    if (!extras_.load)
         return;
     QVector<double> times, loads;
     for (const PicturePoint& point : picture_.points)
@@ -300,14 +336,18 @@ void TrendPlot::add_chosen()
         ring_ = addGraph(values_->axis(QCPAxis::atBottom), values_->axis(QCPAxis::atLeft));
         ring_->setLineStyle(QCPGraph::lsNone);
         ring_->setScatterStyle(QCPScatterStyle(QCPScatterStyle::ssCircle, theme_->ink, Qt::NoBrush, ring_size));
+        ring_whiskers_ = add_whiskers(ring_);
+        ring_whiskers_->setPen(theme_->pen(theme_->ink));
     }
-    QVector<double> times, values;
+    QVector<double> times, values, half_widths;
     for (const PicturePoint& point : picture_.points)
         if (chosen_ && point.reading == *chosen_) {
             times.append(point.time);
             values.append(std::clamp(point.value, low_, high_));
+            half_widths.append(point.half_width.value_or(std::numeric_limits<double>::quiet_NaN()));
         }
     ring_->setData(times, values, true);
+    ring_whiskers_->setData(half_widths);
 }
 
 std::optional<std::size_t> TrendPlot::reading_at(const QPointF& place) const

@@ -12,6 +12,13 @@ namespace evenstroke {
 
 class EventItem;
 
+/// What is drawn besides the line itself.
+struct TrendExtras
+{
+    bool load = false;
+    bool uncertainty = false; ///< of every reading; that of the reading in hand is drawn always
+};
+
 /// Draws a TrendPicture: values above, evidence below, one time axis. Lines are one pixel wide and solid colours
 /// only, which keeps drawing fast and survives PDF/A.
 class TrendPlot : public QCustomPlot
@@ -21,8 +28,8 @@ class TrendPlot : public QCustomPlot
 public:
     explicit TrendPlot(QWidget* parent = nullptr);
     void show_picture(const TrendPicture& picture, const Theme& theme);
-    void show_load(bool shown);
-    bool load_shown() const { return load_shown_; }
+    void show_extras(const TrendExtras& extras);
+    const TrendExtras& extras() const { return extras_; }
     /// The reading in hand is ringed.
     void choose(std::optional<std::size_t> reading);
     const TrendPicture& picture() const { return picture_; }
@@ -31,8 +38,8 @@ public:
     std::optional<std::size_t> reading_at(const QPointF& place) const;
 
     /// The same plot on paper or in a file, in black and grey.
-    static bool save(const TrendPicture& picture, bool with_load, const QString& path, const QSize& size);
-    static void paint(const TrendPicture& picture, bool with_load, QCPPainter& painter, const QSize& size);
+    static bool save(const TrendPicture& picture, const TrendExtras& extras, const QString& path, const QSize& size);
+    static void paint(const TrendPicture& picture, const TrendExtras& extras, QCPPainter& painter, const QSize& size);
 
 signals:
     void reading_chosen(std::size_t reading);
@@ -54,6 +61,8 @@ private:
     void add_others();
     void add_line();
     void add_points();
+    QCPErrorBars* add_whiskers(QCPGraph* graph);
+    void add_uncertainty();
     void add_marks();
     void add_labels();
     void add_evidence();
@@ -65,12 +74,13 @@ private:
 
     TrendPicture picture_;
     const Theme* theme_;
-    bool load_shown_ = false;
+    TrendExtras extras_;
     std::optional<std::size_t> chosen_;
     QCPAxisRect* values_;
     QCPAxisRect* evidence_;
     std::vector<EventItem*> event_items_;
     QCPGraph* ring_ = nullptr;
+    QCPErrorBars* ring_whiskers_ = nullptr;
     double low_ = 0.0, high_ = 1.0;
 };
 

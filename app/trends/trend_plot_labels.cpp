@@ -150,10 +150,10 @@ void TrendPlot::thin_event_words()
             event_items_[i]->set_word_shown(false);
 }
 
-bool TrendPlot::save(const TrendPicture& picture, bool with_load, const QString& path, const QSize& size)
+bool TrendPlot::save(const TrendPicture& picture, const TrendExtras& extras, const QString& path, const QSize& size)
 {
     TrendPlot plot;
-    plot.load_shown_ = with_load;
+    plot.extras_ = extras;
     plot.resize(size);
     const bool pdf = QFileInfo(path).suffix().compare(QLatin1String("pdf"), Qt::CaseInsensitive) == 0;
     plot.show_picture(picture, pdf ? theme_of(ThemeKind::print) : theme());
@@ -161,10 +161,10 @@ bool TrendPlot::save(const TrendPicture& picture, bool with_load, const QString&
                : plot.savePng(path, size.width(), size.height(), 2.0);
 }
 
-void TrendPlot::paint(const TrendPicture& picture, bool with_load, QCPPainter& painter, const QSize& size)
+void TrendPlot::paint(const TrendPicture& picture, const TrendExtras& extras, QCPPainter& painter, const QSize& size)
 {
     TrendPlot plot;
-    plot.load_shown_ = with_load;
+    plot.extras_ = extras;
     plot.resize(size);
     plot.show_picture(picture, theme_of(ThemeKind::print));
     plot.toPainter(&painter, size.width(), size.height());

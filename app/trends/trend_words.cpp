@@ -151,12 +151,12 @@ QString months_text(const TimeToLimit& limit)
     return tr_("%1 to %2 months").arg(early).arg(late);
 }
 
-QString spoken_point(const TrendPicture& picture, const PicturePoint& shown, const TrendPoint& point)
+QString spoken_point(const TrendPicture& picture, const PicturePoint& shown)
 {
     QString number = picture.difference ? signed_text(shown.value, picture.decimals)
                                         : number_text(shown.value, picture.decimals);
-    if (picture.difference && point.uncertainty)
-        number += QStringLiteral(" ± ") + number_text(*point.uncertainty, picture.decimals);
+    if (shown.half_width)
+        number += QStringLiteral(" ± ") + number_text(*shown.half_width, picture.decimals);
     QStringList words{day_text(TimePoint(std::chrono::seconds(static_cast<long long>(shown.time))))};
     if (shown.load_percent)
         words.append(tr_("%1 load").arg(with_unit(number_text(*shown.load_percent, 0), u"%")));

@@ -24,9 +24,20 @@ struct Burnt
     double fuel, power;
 };
 
+/// kg/h of the meter; where none was read, of the tank's soundings.
+Number fuel_burnt(DerivedInputs& of)
+{
+    if (!of.optional_mean("fuel_consumption"))
+        if (const Number sounded = of.optional_mean("fuel_consumption_sounded")) {
+            of.remark("No meter was read: the consumption is that of the tank's soundings.");
+            return sounded;
+        }
+    return of.mean("fuel_consumption");
+}
+
 std::optional<Burnt> burnt(DerivedInputs& of)
 {
-    const Number fuel = of.mean("fuel_consumption");
+    const Number fuel = fuel_burnt(of);
     const bool measured = of.optional_mean("shaft_power") || (of.optional_mean("shaft_torque") && of.optional_mean("speed"));
     Number power;
     if (measured) {
@@ -156,6 +167,26 @@ Number ignition(DerivedInputs& of, Place)
     return of.known(ignition_index(*density * si::kilogrammes_per_cubic_metre, square_millimetres_per_second(*viscosity), celsius(*at)));
 }
 
+/// The temperature at which the fuel has the viscosity that injection wants.
+Number injection_temperature(DerivedInputs& of, Place)
+{
+    constexpr double wanted = 13.0; // mm²/s, common practice, no source
+    const Number at_50 = of.mean("fuel_viscosity_50");
+    const Number at_engine = of.mean("fuel_viscosity"), engine_temperature = of.mean("fuel_temperature");
+    if (!at_50 || !at_engine || !engine_temperature)
+        return std::nullopt;
+    if (*at_50 <= wanted)
+        return of.not_known("A fuel that is not thicker than 13 mm²/s at 50 °C needs no heating for the injection.", "");
+    of.remark("13 mm²/s is common practice; the maker's instructions state the viscosity wanted and how far off it may be.");
+    const double viscosity = of.particular("Viscosity wanted at the injection", "ν", wanted, "mm²/s");
+    const auto line = ViscosityLine::through({square_millimetres_per_second(*at_50), celsius(50.0)},
+                                             {square_millimetres_per_second(*at_engine), celsius(*engine_temperature)});
+    if (!of.holds(line))
+        return std::nullopt;
+    const Number kelvin = of.known(line.value().temperature_for(square_millimetres_per_second(viscosity)));
+    return kelvin ? std::optional(in_celsius(Temperature::from_value(*kelvin))) : std::nullopt;
+}
+
 Number heating_value(DerivedInputs& of, Place)
 {
     if (of.optional_mean("fuel_lower_heating_value"))
@@ -210,6 +241,7 @@ std::span<const DerivedFormula> fuel_formulas()
     static const DerivedFormula formulas[] = {
         {"specific_fuel_consumption", raw_consumption, corrected_consumption, compared_consumption, true},
         {"calculated_ignition_index", ignition},
+        {"fuel_injection_temperature", injection_temperature},
         {"calculated_heating_value", heating_value},
         {"fuel_density_at_meter", density_as_metered},
         {"fuel_mass_flow", mass_flow}};

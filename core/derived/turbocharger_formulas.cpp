@@ -4,6 +4,8 @@
 #include "core/airside/turbocharger.h"
 #include "core/reading/typed_number.h"
 
+#include <cmath>
+
 namespace evenstroke {
 namespace {
 
@@ -64,6 +66,38 @@ Number turbine_of(DerivedInputs& of, Place place)
     return compressor ? of.known(turbine_efficiency(Ratio(*whole), Ratio(*compressor))) : std::nullopt;
 }
 
+/// A given pressure ratio asks a sound turbocharger for one speed (at one inlet temperature); one that needs more
+/// than the baseline did has lost on its compressor side.
+Number speed_at_ratio_of(DerivedInputs& of, Place place)
+{
+    const Number speed = of.at("turbocharger_speed", place), scavenge = of.mean("scavenge_pressure");
+    const Number inlet = of.at_or_mean("inlet_air_temperature", place);
+    if (!speed || !scavenge || !inlet)
+        return std::nullopt;
+    const double barometer = of.barometer();
+    const Baseline& baseline = of.of().baseline;
+    const BaselineCurve* pressures = baseline.curve(of.of().conditions.mode, "scavenge_pressure");
+    const BaselineCurve* speeds = baseline.curve(of.of().conditions.mode, "turbocharger_speed");
+    if (!pressures || !speeds)
+        return of.not_known("The baseline has no scavenge pressure and turbocharger speed to compare with.",
+                            "Enter both with the engine's baseline.");
+    const double reference = in_bar(of.engine().reference.barometer);
+    const double ratio = (*scavenge + barometer) / barometer;
+    of.step("Scavenge over barometric pressure", ratio, "");
+    const auto load = pressures->load_at((ratio - 1.0) * reference);
+    if (!load)
+        return of.not_known("The baseline has this pressure ratio at no load, or at more than one.",
+                            "Compare at a load within the baseline.");
+    of.step("Load at which the baseline has this ratio", *load, "%");
+    const Number expected = of.step("Speed of the baseline there", speeds->at(*load), "1/min");
+    const double kelvin = celsius(*inlet).value(), reference_kelvin = of.engine().reference.inlet_air.value();
+    if (!expected || !(*expected > 0.0) || !(kelvin > 0.0))
+        return std::nullopt;
+    const double at_reference = *speed * std::sqrt(reference_kelvin / kelvin);
+    of.step("Speed at reference inlet air", at_reference, "1/min", place);
+    return 100.0 * (at_reference / *expected - 1.0);
+}
+
 /// With an auxiliary blower running nothing is said: it stands between compressor and receiver.
 template <Number (*part)(DerivedInputs&, Place)> Number without_blower(DerivedInputs& of, Place place)
 {
@@ -80,7 +114,8 @@ std::span<const DerivedFormula> turbocharger_formulas()
     static const DerivedFormula formulas[] = {{"compressor_pressure_ratio", without_blower<pressure_ratio_of>},
                                                   {"compressor_efficiency", without_blower<compressor_of>},
                                                   {"turbocharger_efficiency", without_blower<turbocharger_of>},
-                                                  {"turbine_efficiency", without_blower<turbine_of>}};
+                                                  {"turbine_efficiency", without_blower<turbine_of>},
+                                                  {"turbocharger_speed_at_ratio", without_blower<speed_at_ratio_of>}};
     return formulas;
 }
 

@@ -178,8 +178,8 @@ ReviewSection air_side_section(const ReviewContext& context)
     for (const char* name : {"scavenge_pressure", "turbocharger_speed", "exhaust_before_turbine", "exhaust_after_turbine",
                              "exhaust_receiver_pressure", "exhaust_back_pressure"})
         add_typed(lines, context, name);
-    for (const char* name : {"back_pressure_at_reference_flow", "turbocharger_efficiency", "turbine_efficiency",
-                             "charge_air_dew_point", "charge_air_condensate"})
+    for (const char* name : {"turbocharger_speed_at_ratio", "back_pressure_at_reference_flow",
+                             "turbocharger_efficiency", "turbine_efficiency", "charge_air_dew_point", "charge_air_condensate"})
         add_derived(lines, context, name);
     section.level = worst(lines);
     const auto departing = departures(lines);
@@ -276,10 +276,12 @@ ReviewSection fuel_section(const ReviewContext& context)
 {
     ReviewSection section{ReviewTopic::fuel, "Fuel", {}, Level::quiet, {}};
     add_typed(section.lines, context, "fuel_consumption");
+    add_typed(section.lines, context, "fuel_consumption_sounded");
     add_derived(section.lines, context, "fuel_mass_flow");
     add_typed(section.lines, context, "fuel_lower_heating_value");
     add_derived(section.lines, context, "calculated_heating_value");
-    add_derived(section.lines, context, "specific_fuel_consumption");
+    for (const char* name : {"fuel_injection_temperature", "calculated_ignition_index", "specific_fuel_consumption"})
+        add_derived(section.lines, context, name);
     if (context.power_in_doubt) {
         for (ReviewLine& line : section.lines)
             if (line.expected || (line.quantity && quantity(*line.quantity).name == "specific_fuel_consumption")) {

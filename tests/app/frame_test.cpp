@@ -213,7 +213,10 @@ TEST_F(Desk, DigitsChangeTheViewOfTheTrendAndArrowsWalkThroughIt)
     key(Qt::Key_Left);
     EXPECT_FALSE(workplace_.selection().reading.isEmpty());
     key(Qt::Key_5);
-    EXPECT_TRUE(page->plot().load_shown());
+    EXPECT_TRUE(page->plot().extras().load);
+    EXPECT_FALSE(page->plot().extras().uncertainty);
+    key(Qt::Key_6);
+    EXPECT_TRUE(page->plot().extras().uncertainty);
     key(Qt::Key_A);
     EXPECT_FALSE(page->plot().isVisible());
     for (int i = 0; i < 30; ++i)

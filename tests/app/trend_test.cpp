@@ -131,7 +131,7 @@ TEST(TrendPlot, DrawsEveryViewAndTheLoad)
         TrendPlot plot;
         plot.resize(950, 520);
         plot.show_picture(make_trend_picture(*judgement, compression_of(4, static_cast<ValueView>(view))), theme());
-        plot.show_load(view == 1);
+        plot.show_extras({view == 1, view == 2});
         plot.show();
         plot.choose(20);
         EXPECT_TRUE(shows_something(plot.grab().toImage()));
@@ -163,11 +163,11 @@ TEST(TrendPlot, IsWrittenAsPictureAndAsPaper)
     const QTemporaryDir folder;
     const TrendPicture picture = make_trend_picture(*invented::judgement(), compression_of(4));
     const QString png = folder.filePath(QStringLiteral("trend.png")), pdf = folder.filePath(QStringLiteral("trend.pdf"));
-    ASSERT_TRUE(TrendPlot::save(picture, false, png, QSize(1000, 560)));
-    ASSERT_TRUE(TrendPlot::save(picture, true, pdf, QSize(1000, 560)));
+    ASSERT_TRUE(TrendPlot::save(picture, {}, png, QSize(1000, 560)));
+    ASSERT_TRUE(TrendPlot::save(picture, {true, true}, pdf, QSize(1000, 560)));
     EXPECT_TRUE(shows_something(QImage(png)));
     EXPECT_GT(QFileInfo(pdf).size(), 3000);
-    EXPECT_FALSE(TrendPlot::save(picture, false, folder.filePath(QStringLiteral("absent/trend.pdf")), QSize(1000, 560)));
+    EXPECT_FALSE(TrendPlot::save(picture, {}, folder.filePath(QStringLiteral("absent/trend.pdf")), QSize(1000, 560)));
 }
 
 TEST(TrendTable, KeepsTheRulesOfItemModelsAndShowsTheNewestFirst)

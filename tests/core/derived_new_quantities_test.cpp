@@ -238,6 +238,55 @@ TEST(DerivedTurbocharger, EachOfSeveralHasItsRowAndTheEngineTheMean)
     EXPECT_NEAR(value_of(engine, reading, "cooler_approach"), 9.5, 1e-12);
 }
 
+// Baseline and reading invented: at a ratio of 2.95 the baseline runs 10500 1/min; the reading needs one per cent more.
+TEST(DerivedTurbocharger, SpeedIsComparedAtTheSamePressureRatio)
+{
+    Engine engine = invented_engine();
+    engine.reference.barometer = bar_absolute(1.0);
+    engine.reference.inlet_air = celsius(25.0);
+    engine.baseline = {{50.0, "", {{"scavenge_pressure", 1.4}, {"turbocharger_speed", 9000.0}}},
+                       {75.0, "", {{"scavenge_pressure", 2.5}, {"turbocharger_speed", 12000.0}}}};
+    ReadingMaker made;
+    made.number("load_percent", 70.0).number("inlet_air_temperature", 30.0);
+    made.number("barometric_pressure", 1013.0, at_ship()).number("scavenge_pressure", 1.95 * 1.013);
+    made.number("turbocharger_speed", 10605.0 * std::sqrt(303.15 / 298.15), at_turbocharger(1));
+    const auto row = find(engine, made.done(), "turbocharger_speed_at_ratio");
+    ASSERT_TRUE(row);
+    EXPECT_NEAR(row->value, 1.0, 1e-9);
+    EXPECT_TRUE(row->uncertainty);
+    ReadingMaker beyond;
+    beyond.number("load_percent", 70.0).number("inlet_air_temperature", 30.0);
+    beyond.number("barometric_pressure", 1013.0, at_ship()).number("scavenge_pressure", 4.5);
+    beyond.number("turbocharger_speed", 15000.0, at_turbocharger(1));
+    EXPECT_FALSE(find(engine, beyond.done(), "turbocharger_speed_at_ratio")) << "no load of the baseline has this ratio";
+}
+
+// ASTM D341 worked out separately (bc): through 380 mm²/s at 50 °C and 15 mm²/s at 125 °C, 13 mm²/s at 130.5 °C.
+TEST(DerivedFuel, TheTemperatureForTheInjectionFollowsFromTwoViscosities)
+{
+    ReadingMaker made;
+    made.number("fuel_viscosity_50", 380.0).number("fuel_viscosity", 15.0).number("fuel_temperature", 125.0);
+    EXPECT_NEAR(value_of(invented_engine(), made.done(), "fuel_injection_temperature"), 130.52, 0.05);
+    ReadingMaker thin;
+    thin.number("fuel_viscosity_50", 4.0).number("fuel_viscosity", 3.0).number("fuel_temperature", 60.0);
+    EXPECT_FALSE(find(invented_engine(), thin.done(), "fuel_injection_temperature")) << "a distillate is not heated";
+}
+
+TEST(DerivedFuel, SoundingsStandInForAMeterWithTheirOwnUncertainty)
+{
+    ReadingMaker metered, sounded;
+    for (ReadingMaker* made : {&metered, &sounded})
+        made->number("shaft_power", 8000.0).number("fuel_lower_heating_value", 42.7);
+    metered.number("fuel_consumption", 1400.0).number("fuel_consumption_sounded", 1500.0);
+    sounded.number("fuel_consumption_sounded", 1400.0);
+    const auto by_meter = find(invented_engine(), metered.done(), "specific_fuel_consumption"),
+               by_tank = find(invented_engine(), sounded.done(), "specific_fuel_consumption");
+    ASSERT_TRUE(by_meter && by_tank);
+    EXPECT_NEAR(by_meter->value, 175.0, 1e-9);
+    EXPECT_NEAR(by_tank->value, 175.0, 1e-9);
+    EXPECT_GT(by_tank->uncertainty.value(), by_meter->uncertainty.value());
+}
+
 TEST(DerivedCylinders, MeanPressureIsThatOfAllOrOfNone)
 {
     const Engine engine = invented_engine();
