@@ -2,6 +2,7 @@
 #include "storage/engine_record.h"
 
 #include "storage/event_store.h"
+#include "storage/flag_note_store.h"
 #include "storage/reading_store.h"
 #include "storage/sql.h"
 #include "storage/transaction.h"
@@ -21,6 +22,9 @@ Result<LoadedRecord> load_record(History& history, const std::string& engine_id)
     auto events = EventStore(history).load(engine_id);
     if (!events)
         return events.error();
+    auto notes = FlagNoteStore(history).load(engine_id);
+    if (!notes)
+        return notes.error();
     Query revision(history.database(), "SELECT input_revision FROM engine WHERE id = ?",
                    "the engine was not read");
     BOOST_OUTCOME_TRYV(revision.run(engine_id));
@@ -31,6 +35,7 @@ Result<LoadedRecord> load_record(History& history, const std::string& engine_id)
     record->engine = std::move(engine.value().engine);
     record->readings = std::move(readings.value());
     record->events = std::move(events.value());
+    record->notes = std::move(notes.value());
     return LoadedRecord{std::move(record), revision.integer(0)};
 }
 

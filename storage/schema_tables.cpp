@@ -113,6 +113,20 @@ const std::vector<const char*> card_tables = {
         UNIQUE (reading_key, cylinder)) STRICT)",
 };
 
+// said: 0 seen, 1 no work was done, 2 withdrawn. level: as in core/trend/judgement.h.
+const std::vector<const char*> flag_note_tables = {
+    R"(CREATE TABLE flag_note (
+        note_key INTEGER PRIMARY KEY, id TEXT NOT NULL UNIQUE, engine_key INTEGER NOT NULL REFERENCES engine,
+        place INTEGER NOT NULL, flagged_at INTEGER NOT NULL, said INTEGER NOT NULL, evidence REAL NOT NULL,
+        level INTEGER NOT NULL, words TEXT NOT NULL, event_id TEXT NOT NULL, written_at INTEGER NOT NULL,
+        who TEXT NOT NULL) STRICT)",
+    R"(CREATE INDEX flag_note_of_engine ON flag_note (engine_key))",
+    R"(CREATE TRIGGER flag_note_no_update BEFORE UPDATE ON flag_note
+        BEGIN SELECT RAISE(ABORT, 'notes on flags are only added to'); END)",
+    R"(CREATE TRIGGER flag_note_no_delete BEFORE DELETE ON flag_note
+        BEGIN SELECT RAISE(ABORT, 'notes on flags are only added to'); END)",
+};
+
 } // namespace
 
 std::span<const Migration> all_migrations()
@@ -120,6 +134,7 @@ std::span<const Migration> all_migrations()
     static const std::vector<Migration> steps = {
         {1, "readings, events and their audit trail", first_tables},
         {2, "indicator cards", card_tables},
+        {3, "notes on flags", flag_note_tables},
     };
     return steps;
 }

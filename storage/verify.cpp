@@ -5,6 +5,7 @@
 #include "storage/card_rows.h"
 #include "storage/content_hash.h"
 #include "storage/event_rows.h"
+#include "storage/flag_note_rows.h"
 #include "storage/subject_hash.h"
 #include "storage/transaction.h"
 #include "storage/value_rows.h"
@@ -40,6 +41,7 @@ private:
     Done check_readings();
     void check_reading(const ReadingRow& reading, const std::vector<ValueRow>& values);
     Done check_events();
+    Done check_flag_notes();
     Done check_cards();
     void compare(const std::string& kind, const std::string& id, const std::string& hash,
                  const std::string& name);
@@ -206,6 +208,20 @@ Done Verification::check_events()
     return rows.finished();
 }
 
+Done Verification::check_flag_notes()
+{
+    Query rows(history_.database(), "SELECT engine_key, id FROM engine", not_verified);
+    BOOST_OUTCOME_TRYV(rows.run());
+    while (rows.next()) {
+        const auto notes = load_flag_notes(history_, rows.integer(0));
+        if (!notes)
+            return notes.error();
+        for (const FlagNote& note : notes.value())
+            compare("flag note", note.id, flag_note_hash(note, rows.text(1)), "on the flag of " + date_text(note.flagged_at));
+    }
+    return rows.finished();
+}
+
 Done Verification::check_cards()
 {
     Query rows(history_.database(),
@@ -228,6 +244,7 @@ Result<AuditFindings> Verification::run()
     BOOST_OUTCOME_TRYV(check_engines());
     BOOST_OUTCOME_TRYV(check_readings());
     BOOST_OUTCOME_TRYV(check_events());
+    BOOST_OUTCOME_TRYV(check_flag_notes());
     BOOST_OUTCOME_TRYV(check_cards());
     BOOST_OUTCOME_TRYV(go_on());
     for (const auto& [id, claim] : claims_)

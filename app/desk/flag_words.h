@@ -11,4 +11,7 @@ namespace evenstroke {
 /// 8 Sep 2030 as watch)". A flag that rose is never dated back to its beginning.
 QString standing_words(const Judgement& judgement, const Flag& flag);
 
+/// What was last said of a flag: "12 Nov 2030, A. Chief: fuel valve changed (with fuel valves of 10 Nov 2030)."
+QString note_words(const Judgement& judgement, const Flag& flag);
+
 } // namespace evenstroke

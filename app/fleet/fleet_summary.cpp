@@ -17,7 +17,7 @@ namespace evenstroke {
 
 namespace {
 
-constexpr quint16 layout_version = 4;
+constexpr quint16 layout_version = 5;
 constexpr std::size_t points_in_a_strip = 36; // three years of monthly readings
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
@@ -99,12 +99,15 @@ FleetSummary summarise(const Judgement& judgement)
     const std::vector<const Flag*> flags = judgement.standing_flags();
     for (const Flag* flag : flags) {
         places.insert(flag->subject);
-        summary.limit_passed = summary.limit_passed || flag->absolute_limit;
+        summary.limit_passed = summary.limit_passed || (flag->absolute_limit && !flag->seen());
     }
     summary.places_concerned = static_cast<int>(places.size());
     if (!flags.empty()) {
         const Flag& worst = *flags.front();
+        summary.seen = worst.seen(); // those that were not stand first
         summary.sentence = to_qstring(short_sentence(worst, judgement.record->engine));
+        if (summary.seen)
+            summary.sentence = tr_("Seen %1: %2").arg(day_text(worst.note->written_at), summary.sentence);
         summary.worsening = worst.ramp;
         summary.excess = worst.threshold > 0.0 ? worst.evidence / worst.threshold : 0.0;
     } else if (summary.level == Level::note) {
@@ -126,6 +129,8 @@ int trouble_rank(const FleetSummary& summary, TimePoint now)
 {
     if (summary.limit_passed)
         return 0;
+    if (summary.seen)
+        return !summary.last_usable || days_late(summary, now) ? 4 : 7;
     if (summary.level == Level::act)
         return summary.worsening ? 1 : 2;
     if (summary.level == Level::watch && summary.worsening)
@@ -149,7 +154,7 @@ QByteArray pack(const FleetSummary& summary)
     const auto seconds = [](const std::optional<TimePoint>& time) {
         return time ? static_cast<qint64>(time->time_since_epoch().count()) : std::numeric_limits<qint64>::min();
     };
-    out << layout_version << static_cast<qint8>(summary.level) << summary.limit_passed << summary.worsening
+    out << layout_version << static_cast<qint8>(summary.level) << summary.seen << summary.limit_passed << summary.worsening
         << summary.excess << summary.places_concerned << summary.readings << seconds(summary.last_reading)
         << seconds(summary.last_usable) << summary.sentence << static_cast<qint32>(summary.strips.size());
     for (const FleetStrip& strip : summary.strips) {
@@ -174,7 +179,7 @@ std::optional<FleetSummary> unpack(const QByteArray& bytes)
     qint8 level = 0;
     qint64 last = 0, usable = 0;
     qint32 strips = 0;
-    in >> level >> summary.limit_passed >> summary.worsening >> summary.excess >> summary.places_concerned
+    in >> level >> summary.seen >> summary.limit_passed >> summary.worsening >> summary.excess >> summary.places_concerned
         >> summary.readings >> last >> usable >> summary.sentence >> strips;
     const auto time = [](qint64 seconds) {
         return seconds == std::numeric_limits<qint64>::min()

@@ -26,6 +26,7 @@ struct FleetStrip
 struct FleetSummary
 {
     Level level = Level::no_data;
+    bool seen = false;         ///< somebody has looked at every flag that stands, and nothing new came since
     bool limit_passed = false; ///< an absolute limit stands
     bool worsening = false;    ///< the worst flag grows from month to month
     double excess = 0.0;       ///< its evidence over its threshold
@@ -46,7 +47,7 @@ inline constexpr int late_after_days = 45;
 /// Days since the last usable reading where that is more than `late_after_days`.
 std::optional<int> days_late(const FleetSummary& summary, TimePoint now);
 /// Place in the order of trouble, lower first: limit passed, act and worsening, act, watch and worsening, no
-/// usable reading for 45 days, watch, ask, note, quiet.
+/// usable reading for 45 days, watch, ask, note and what was seen, quiet.
 int trouble_rank(const FleetSummary& summary, TimePoint now);
 
 } // namespace evenstroke

@@ -58,6 +58,7 @@ void TrendPage::connect_buttons()
     connect(ui_->copy_picture_button, &QPushButton::clicked, this, &TrendPage::copy_picture);
     connect(ui_->copy_data_button, &QPushButton::clicked, this, &TrendPage::copy);
     connect(ui_->save_button, &QPushButton::clicked, this, &TrendPage::ask_file);
+    connect(ui_->note_button, &QPushButton::clicked, this, &TrendPage::ask_note);
     connect(ui_->plot, &TrendPlot::reading_chosen, this, &TrendPage::choose_reading);
     connect(ui_->table->selectionModel(), &QItemSelectionModel::currentRowChanged, this,
             [this](const QModelIndex& current) {
@@ -107,6 +108,16 @@ void TrendPage::refresh()
     show_views(*shown, picture);
     show_side(picture);
     show_reading();
+    show_note_button(picture);
+}
+
+/// Only where a flag stands that something can be said of.
+void TrendPage::show_note_button(const TrendPicture& picture)
+{
+    ui_->note_button->setVisible(picture.flag_index.has_value() && !workplace().read_only());
+    if (picture.flag_index)
+        ui_->note_button->setText(judgement_->flags[*picture.flag_index].severity == Level::ask ? tr("answer the question… (O)")
+                                                                                               : tr("what was found… (O)"));
 }
 
 void TrendPage::show_nothing()
@@ -296,6 +307,7 @@ void TrendPage::keyPressEvent(QKeyEvent* event)
     case Qt::Key_5: ui_->load_button->toggle(); return;
     case Qt::Key_6: ui_->uncertainty_button->toggle(); return;
     case Qt::Key_A: ui_->table_button->toggle(); return;
+    case Qt::Key_O: ask_note(); return;
     case Qt::Key_Left: walk_readings(-1); return;
     case Qt::Key_Right: walk_readings(1); return;
     case Qt::Key_Up: walk_places(-1); return;

@@ -20,7 +20,8 @@ struct Selection;
 
 /// Trend: one quantity at one place over time, how the evidence grew, how long it may last, what to check.
 ///
-/// Keys: W the workings of the point in hand; 1 to 4 as read, corrected, deviation, apart; 5 the load; A the table; left and right walk through the
+/// Keys: W the workings of the point in hand; 1 to 4 as read, corrected, deviation, apart; 5 the load; 6 the ±; A the
+/// table; O says what was found about the flag; left and right walk through the
 /// readings, up and down through the places, Page Up and Page Down through the quantities.
 class TrendPage : public Page
 {
@@ -39,6 +40,8 @@ public:
     void copy() override;
     std::optional<Selection> number_in_hand() const override;
     void copy_picture();
+    /// Writes what was said of the flag shown; false, with the reason under the plot, where it was not kept.
+    bool keep_note(const FlagNote& note);
     /// By the file's ending: png, pdf or csv. Says under the plot what stood in the way.
     bool save_as(const QString& path);
 
@@ -57,6 +60,7 @@ private:
     void show_side(const TrendPicture& picture);
     void show_views(const Trend& trend, const TrendPicture& picture);
     void show_reading();
+    void show_note_button(const TrendPicture& picture);
     void choose_view(int number);
     void choose_reading(std::size_t reading);
     void walk_readings(int step);
@@ -64,6 +68,7 @@ private:
     void walk_quantities(int step);
     void show_table(bool shown);
     void ask_file();
+    void ask_note();
     std::optional<std::size_t> chosen_reading() const;
     const Trend* trend() const;
 

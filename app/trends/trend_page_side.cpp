@@ -2,8 +2,11 @@
 // The column beside the plot, and what leaves the page: copies, files, paper.
 #include "app/desk/number_text.h"
 #include "app/desk/workplace.h"
+#include "app/trends/flag_note_dialog.h"
 #include "app/trends/trend_page.h"
 #include "app/trends/trend_plot.h"
+#include "storage/flag_note_store.h"
+#include "storage/preference_store.h"
 #include "ui_trend_page.h"
 
 #include <QClipboard>
@@ -19,6 +22,7 @@ namespace evenstroke {
 
 namespace {
 
+const std::string note_signed_by = "trend.note_signed_by";
 constexpr int dots_per_inch = 96; // paper is drawn in the same measure as the screen
 constexpr double plot_height_on_paper = 0.62;
 
@@ -45,6 +49,8 @@ std::vector<SideBlock> side_blocks(const TrendPicture& picture)
         blocks.push_back({TrendPage::tr("Caution"), mind.join(u'\n'), TrendPage::tr("in full below"), true, false});
     if (!picture.next_check.isEmpty())
         blocks.push_back({TrendPage::tr("Check next"), picture.next_check, {}, false, false});
+    if (!picture.note_words.isEmpty())
+        blocks.push_back({TrendPage::tr("What was said"), picture.note_words, {}, false, false});
     if (!picture.limit_figure.isEmpty())
         blocks.push_back({TrendPage::tr("Until the limit"), picture.limit_figure, picture.limit_words, false, true});
     if (!picture.fits.isEmpty() || !picture.moved.isEmpty())
@@ -85,6 +91,32 @@ void TrendPage::show_side(const TrendPicture& picture)
         add_label(*ui_->side_lines, block.second, "muted", 2);
     }
     ui_->side_lines->addStretch(1);
+}
+
+void TrendPage::ask_note()
+{
+    const auto index = ui_->plot->picture().flag_index;
+    if (!index || !judgement_ || !workplace().history() || workplace().read_only())
+        return;
+    storage::PreferenceStore preferences(*workplace().history());
+    const auto who = preferences.choice({}, note_signed_by);
+    FlagNoteDialog dialog(*judgement_->record, judgement_->flags[*index],
+                          who && who.value() ? to_qstring(*who.value()) : QString(), this);
+    if (dialog.exec() == QDialog::Accepted && dialog.note())
+        keep_note(*dialog.note());
+}
+
+bool TrendPage::keep_note(const FlagNote& note)
+{
+    const auto kept = storage::FlagNoteStore(*workplace().history()).add(judgement_->record->engine.id, note);
+    if (!kept) {
+        ui_->saved->setText(to_qstring(kept.error().text()));
+        ui_->saved->show();
+        return false;
+    }
+    static_cast<void>(storage::PreferenceStore(*workplace().history()).set_choice({}, note_signed_by, note.who)); // a convenience only
+    workplace().changed();
+    return true;
 }
 
 void TrendPage::copy_picture()

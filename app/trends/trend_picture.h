@@ -75,6 +75,8 @@ struct TrendPicture
     Level level = Level::no_data;
     QString limit_figure, limit_words; ///< "3 to 11 months", what the limit is
     QString fits;                      ///< pattern in words
+    std::optional<std::size_t> flag_index; ///< the standing flag that leads the words, in Judgement::flags
+    QString note_words;                ///< what was said of it
     QStringList moved;                 ///< "maximum pressure −0.5 bar a month"
     QString next_check;
     struct CautionWords

@@ -193,6 +193,8 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     for (const MovedQuantity& moved : flag->moved)
         picture.moved.append(moved_text(moved, flag->ramp));
     picture.next_check = to_qstring(flag->next_check);
+    picture.flag_index = static_cast<std::size_t>(flag - judgement.flags.data());
+    picture.note_words = note_words(judgement, *flag);
     add_cautions(picture, *flag);
 }
 

@@ -50,6 +50,14 @@ Table moved_table(const Flag& flag)
     return table;
 }
 
+std::string note_text(const FlagNote& note)
+{
+    std::string text = date_text(note.written_at) + ", " + note.who + ": ";
+    if (note.said == FlagNote::Said::no_work)
+        text += note.words.empty() ? "no work was done" : "no work was done; ";
+    return text + note.words;
+}
+
 /// "the customary limit (not the maker's), 5.0 bar below its earlier level," as the subject of a sentence.
 std::string limit_as_subject(const TimeToLimit& limit)
 {
@@ -121,6 +129,8 @@ void add_flag(const Context& context, const Flag& flag, int number, Section& sec
         fields.fields.push_back({"Time to limit", limit_sentence(*flag.time_to_limit)});
     if (!flag.next_check.empty())
         fields.fields.push_back({"To check next", flag.next_check});
+    if (flag.note)
+        fields.fields.push_back({"Noted on board", note_text(*flag.note)});
     fields.fields.push_back({"Work recorded since", work_since(context, flag)});
     blocks.push_back(std::move(fields));
     for (const std::string& name : flag.cautions)

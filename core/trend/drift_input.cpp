@@ -2,6 +2,7 @@
 #include "core/trend/drift_input.h"
 
 #include "core/trend/drift_catalogue.h"
+#include "core/trend/flag_notes.h"
 #include "core/trend/limits_ahead.h"
 #include "core/trend/robust.h"
 #include "core/trend/work_marks.h"
@@ -322,6 +323,7 @@ drift::Input make_drift_input(const EngineRecord& record, const Baseline& baseli
         }
     }
     mark_recorded_work(record, input);
+    input.answers = answers_from_notes(record);
     return input;
 }
 

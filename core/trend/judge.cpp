@@ -2,6 +2,7 @@
 #include "core/trend/absolute_limits.h"
 #include "core/trend/drift_input.h"
 #include "core/trend/drift_results.h"
+#include "core/trend/flag_notes.h"
 #include "core/trend/judgement.h"
 #include "core/trend/trend_rows.h"
 
@@ -56,6 +57,7 @@ Judgement judge(std::shared_ptr<const EngineRecord> record, const std::function<
     add_evidence(judgement, output);
     add_flags(judgement, input, output);
     add_absolute_limit_flags(judgement);
+    add_notes(judgement);
     add_trends(judgement, prepared, input, output);
     set_levels(judgement, input, output);
     return judgement;

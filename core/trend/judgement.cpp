@@ -56,6 +56,8 @@ std::vector<const Flag*> Judgement::standing_flags() const
         if (flag.level_now >= Level::note)
             standing.push_back(&flag);
     std::stable_sort(standing.begin(), standing.end(), [](const Flag* a, const Flag* b) {
+        if (a->seen() != b->seen())
+            return b->seen();
         if (a->level_now != b->level_now)
             return a->level_now > b->level_now;
         return a->evidence > b->evidence;

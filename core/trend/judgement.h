@@ -17,7 +17,7 @@
 /// is of the quantity's own kind, whatever kind was typed.
 namespace evenstroke {
 
-inline constexpr int method_version = 1;
+inline constexpr int method_version = 2;
 
 /// Worst last. A level is always shown as word and mark, never as colour alone.
 enum class Level { no_data, learning, quiet, note, ask, watch, act };
@@ -114,6 +114,27 @@ struct TimeToLimit
     std::optional<double> months_5, months_50, months_95; ///< none: not within ten years
 };
 
+/// What people on board said of one flag or question. Notes are only added, never changed; of several about one
+/// flag the newest counts. A note takes nothing out of the record: it says that somebody has looked.
+struct FlagNote
+{
+    enum class Said : unsigned char {
+        seen,    ///< known and dealt with; the flag comes up again on new evidence
+        no_work, ///< the answer to a question: no work was done, so the change is the engine's
+        withdrawn ///< what was said before counts no more
+    };
+    std::string id;
+    Place subject;          ///< a cylinder, or the engine
+    TimePoint flagged_at{}; ///< of the reading that raised the flag
+    Said said = Said::seen;
+    double evidence = 0.0;  ///< of the flag when it was said
+    Level level = Level::quiet; ///< of the flag when it was said
+    std::string words;      ///< "fuel valve changed, looked at again next month"
+    std::string event_id;   ///< work that it is tied to; empty: none
+    TimePoint written_at{};
+    std::string who;
+};
+
 /// A flag or a question. It starts once and is never taken back; it may close.
 struct Flag
 {
@@ -140,6 +161,10 @@ struct Flag
     std::optional<TimeToLimit> time_to_limit;
     bool absolute_limit = false;    ///< raised by a limit of the maker, not by drift
     std::vector<std::size_t> carrying; ///< readings from the onset on
+    std::optional<FlagNote> note;   ///< what was last said of it, if anything that still counts
+    bool reopened = false;          ///< new evidence came after it was seen
+    /// Somebody has looked, and nothing new has come since.
+    bool seen() const { return note && note->said == FlagNote::Said::seen && !reopened; }
 };
 
 /// Everything the judging needs about one engine.
@@ -149,6 +174,7 @@ struct EngineRecord
     Engine engine;
     std::vector<Reading> readings; ///< closed ones, in order of time, the ship's shared values merged in
     std::vector<Event> events;     ///< in order of time; whole-ship ones included
+    std::vector<FlagNote> notes;   ///< in the order in which they were written
 };
 
 struct Judgement
@@ -164,7 +190,7 @@ struct Judgement
 
     const Trend* find_trend(QuantityId quantity, Place place) const;
     const Evidence* find_evidence(Place place) const;
-    /// Flags that stand at the last reading, worst first, then the strongest.
+    /// Flags that stand at the last reading: first those that nobody has seen to; worst first, then the strongest.
     std::vector<const Flag*> standing_flags() const;
     Level level_of(Place subject) const;
 };

@@ -8,6 +8,7 @@
 #include "app/desk/rail.h"
 #include "app/desk/sample_files.h"
 #include "app/desk/workplace.h"
+#include "app/trends/flag_note_dialog.h"
 #include "app/trends/trend_page.h"
 #include "app/trends/trend_plot.h"
 #include "storage/event_store.h"
@@ -192,6 +193,35 @@ TEST_F(Desk, APartOfTheSentenceIsChosenByItsLetter)
     const QString before = workplace_.selection().engine;
     QTest::keyClick(chooser->findChild<QListView*>(), Qt::Key_Escape);
     EXPECT_EQ(workplace_.selection().engine, before);
+}
+
+TEST_F(Desk, WhatWasFoundIsKeptWithItsFlag)
+{
+    open(QStringLiteral("sample.evenstroke"), QStringLiteral("board"));
+    const auto judgement = workplace_.judgement();
+    const auto standing = judgement->standing_flags();
+    ASSERT_FALSE(standing.empty());
+    Selection selection = workplace_.selection();
+    selection.quantity = standing.front()->quantity;
+    selection.place = standing.front()->subject;
+    workplace_.select(selection);
+    workplace_.open_page(QStringLiteral("trend"));
+    QTest::qWait(1);
+    auto* page = static_cast<TrendPage*>(frame_.current_page());
+    ASSERT_TRUE(page->plot().picture().flag_index);
+    FlagNoteDialog dialog(*judgement->record, judgement->flags[*page->plot().picture().flag_index], QString());
+    dialog.write(QStringLiteral("rings looked at through the ports"), QStringLiteral("A. Chief"));
+    dialog.press(FlagNote::Said::seen);
+    ASSERT_TRUE(dialog.note());
+    EXPECT_TRUE(page->keep_note(*dialog.note()));
+    ASSERT_TRUE(QTest::qWaitFor(
+        [&] {
+            const auto now = workplace_.judgement();
+            return now && !now->record->notes.empty() && !page->plot().picture().note_words.isEmpty();
+        },
+        patience));
+    EXPECT_TRUE(page->plot().picture().note_words.contains(QStringLiteral("rings looked at through the ports")));
+    EXPECT_TRUE(page->plot().picture().level_words.contains(QStringLiteral("seen")));
 }
 
 TEST_F(Desk, DigitsChangeTheViewOfTheTrendAndArrowsWalkThroughIt)
