@@ -84,7 +84,12 @@ void TrendPage::show_side(const TrendPicture& picture)
         delete item->widget();
         delete item;
     }
-    for (const SideBlock& block : side_blocks(picture)) {
+    std::vector<SideBlock> blocks = side_blocks(picture);
+    if (ui_->fixed_button->isChecked())
+        blocks.push_back({tr("Second opinion"),
+                          picture.fixed_limit_words.isEmpty() ? tr("Custom knows no fixed limit for this.") : picture.fixed_limit_words,
+                          tr("It is only shown: lasting differences between cylinders make it speak without cause."), false, false});
+    for (const SideBlock& block : blocks) {
         const bool first = ui_->side_lines->count() == 0;
         add_label(*ui_->side_lines, block.heading, block.caution ? "cautionhead" : "muted", first ? 0 : 16);
         add_label(*ui_->side_lines, block.first, block.figure ? "sidefigure" : nullptr, 2);

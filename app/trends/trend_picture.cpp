@@ -231,6 +231,7 @@ TrendPicture make_trend_picture(const Judgement& judgement, const Selection& sel
     add_others(picture, judgement);
     add_events(picture, judgement);
     add_evidence(picture, judgement);
+    add_fixed_limit(picture, judgement);
     add_trend_words(picture, judgement, *trend);
     return picture;
 }

@@ -69,6 +69,8 @@ struct TrendPicture
     std::vector<double> evidence_times, evidence; ///< NaN where nothing could be said
     std::optional<double> threshold;
     QString threshold_words; ///< "watch from here,\nact since 11 May 2031"
+    std::optional<double> fixed_limit; ///< the customary distance from the others, either way; only where apart is shown
+    QString fixed_limit_words;         ///< when it would have spoken
     double first_time = 0.0, last_time = 0.0; ///< of the axis
     // Words
     QString headline, second_line, level_words;

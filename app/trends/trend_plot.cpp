@@ -117,6 +117,7 @@ void TrendPlot::draw_all()
     if (!picture_.points.empty()) {
         set_ranges();
         add_band();
+        add_fixed_limits();
         add_others();
         add_line();
         add_uncertainty();
@@ -175,6 +176,9 @@ void TrendPlot::set_ranges()
             widen(*point.band_high);
         }
     }
+    if (extras_.fixed_limits && picture_.fixed_limit)
+        for (const double side : {-1.0, 1.0})
+            widen(side * *picture_.fixed_limit);
     for (const PictureLine& line : picture_.others)
         for (const double value : line.values)
             widen(value);
@@ -273,61 +277,6 @@ void TrendPlot::add_points()
         QCPScatterStyle(QCPScatterStyle::ssCircle, theme_->line, theme_->page, point_size + 1.0));
     add(doubtful_times, doubtful_values,
         QCPScatterStyle(QCPScatterStyle::ssCross, theme_->muted, Qt::NoBrush, point_size + 3.0));
-}
-
-/// Bars of the half-width over the points of a graph, drawn beneath them.
-QCPErrorBars* TrendPlot::add_whiskers(QCPGraph* graph)
-{
-    auto* whiskers = new QCPErrorBars(graph->keyAxis(), graph->valueAxis());
-    whiskers->setDataPlottable(graph);
-    whiskers->setErrorType(QCPErrorBars::etValueError);
-    whiskers->setWhiskerWidth(point_size);
-    whiskers->setSymbolGap(0.0);
-    whiskers->setPen(theme_->pen(theme_->muted));
-    whiskers->setAntialiased(false);
-    return whiskers;
-}
-
-void TrendPlot::add_uncertainty()
-{
-    if (!extras_.uncertainty)
-        return;
-    QVector<double> times, values, half_widths;
-    for (const PicturePoint& point : picture_.points)
-        if (point.half_width && !point.doubtful) {
-            times.append(point.time);
-            values.append(point.value);
-            half_widths.append(*point.half_width);
-        }
-    QCPGraph* graph = addGraph(values_->axis(QCPAxis::atBottom), values_->axis(QCPAxis::atLeft));
-    graph->setLineStyle(QCPGraph::lsNone);
-    graph->setData(times, values, true);
-    add_whiskers(graph)->setData(half_widths);
-}
-
-void TrendPlot::add_load()
-{
-    QCPAxis* axis = values_->axis(QCPAxis::atRight);
-    if (!extras_.load)
-        return;
-    QVector<double> times, loads;
-    for (const PicturePoint& point : picture_.points)
-        if (point.load_percent) {
-            times.append(point.time);
-            loads.append(*point.load_percent);
-        }
-    QCPGraph* graph = addGraph(values_->axis(QCPAxis::atBottom), axis);
-    graph->setData(times, loads, true);
-    QPen pen = theme_->pen(theme_->muted);
-    pen.setStyle(Qt::DotLine);
-    graph->setPen(pen);
-    axis->setTicker(QSharedPointer<QCPAxisTicker>(new NumberTicker(false)));
-    axis->setRange(0.0, 110.0);
-    QCPItemText* name = add_text(tr("load, %"), values_, theme_->muted, false);
-    name->position->setType(QCPItemPosition::ptAxisRectRatio);
-    name->position->setAxisRect(values_);
-    name->position->setCoords(1.0, 0.0);
-    name->setPositionAlignment(Qt::AlignRight | Qt::AlignBottom);
 }
 
 void TrendPlot::add_chosen()

@@ -16,6 +16,7 @@ class EventItem;
 struct TrendExtras
 {
     bool load = false;
+    bool fixed_limits = false; ///< the customary distance from the others, as a second opinion
     bool uncertainty = false; ///< of every reading; that of the reading in hand is drawn always
 };
 
@@ -63,6 +64,7 @@ private:
     void add_points();
     QCPErrorBars* add_whiskers(QCPGraph* graph);
     void add_uncertainty();
+    void add_fixed_limits();
     void add_marks();
     void add_labels();
     void add_evidence();

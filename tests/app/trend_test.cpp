@@ -131,7 +131,11 @@ TEST(TrendPlot, DrawsEveryViewAndTheLoad)
         TrendPlot plot;
         plot.resize(950, 520);
         plot.show_picture(make_trend_picture(*judgement, compression_of(4, static_cast<ValueView>(view))), theme());
-        plot.show_extras({view == 1, view == 2});
+        TrendExtras extras;
+        extras.load = view == 1;
+        extras.uncertainty = view == 2;
+        extras.fixed_limits = view == 3;
+        plot.show_extras(extras);
         plot.show();
         plot.choose(20);
         EXPECT_TRUE(shows_something(plot.grab().toImage()));
@@ -164,7 +168,9 @@ TEST(TrendPlot, IsWrittenAsPictureAndAsPaper)
     const TrendPicture picture = make_trend_picture(*invented::judgement(), compression_of(4));
     const QString png = folder.filePath(QStringLiteral("trend.png")), pdf = folder.filePath(QStringLiteral("trend.pdf"));
     ASSERT_TRUE(TrendPlot::save(picture, {}, png, QSize(1000, 560)));
-    ASSERT_TRUE(TrendPlot::save(picture, {true, true}, pdf, QSize(1000, 560)));
+    TrendExtras everything;
+    everything.load = everything.uncertainty = everything.fixed_limits = true;
+    ASSERT_TRUE(TrendPlot::save(picture, everything, pdf, QSize(1000, 560)));
     EXPECT_TRUE(shows_something(QImage(png)));
     EXPECT_GT(QFileInfo(pdf).size(), 3000);
     EXPECT_FALSE(TrendPlot::save(picture, {}, folder.filePath(QStringLiteral("absent/trend.pdf")), QSize(1000, 560)));
