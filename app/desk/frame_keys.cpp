@@ -144,7 +144,7 @@ bool Frame::take_letter(QChar letter)
     if (letter == workings_letter && show_workings())
         return true;
     for (const Entry& entry : entries_)
-        if (entry.about.on_rail && entry.about.key == letter && (workplace_.is_open() || entry.about.without_history)) {
+        if (letter != workings_letter && entry.about.key == letter && (workplace_.is_open() || entry.about.without_history)) {
             workplace_.open_page(entry.about.name);
             return true;
         }

@@ -6,6 +6,7 @@
 #include "app/desk/history_page.h"
 #include "app/desk/number_text.h"
 #include "app/desk/workplace.h"
+#include "app/detection/detection_page.h"
 #include "app/entry/entry_page.h"
 #include "app/events/events_page.h"
 #include "app/fleet/fleet_page.h"
@@ -67,6 +68,7 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("engine"), Frame::tr("Engine"), u'G', maker<EnginePage>()});
     frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});
     frame.add_page({QStringLiteral("workings"), Frame::tr("Workings"), u'W', maker<WorkingsPage>(), {}, {}, false, false});
+    frame.add_page({QStringLiteral("detection"), Frame::tr("How good is this?"), u'I', maker<DetectionPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, {}, true});
 }
 

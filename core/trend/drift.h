@@ -16,7 +16,7 @@
 /// Shapes: T readings in order of time, N cylinders. Per-cell vectors are row-major: cell of reading i and
 /// cylinder j at [i * N + j]. Flag vectors (`std::vector<char>`, 1 = yes) may be left empty for "never".
 /// Causal: a row of the output depends on readings up to its own and never changes when more come in.
-/// Source of method and figures: own simulations (tests/core/fleet_simulator.h); where a published
+/// Source of method and figures: own simulations (core/simulation/fleet_simulator.h); where a published
 /// result backs a part, it is named there.
 namespace evenstroke::drift {
 

@@ -5,7 +5,7 @@
 //
 // bench_drift [engines without a fault, default 400] [engines per fault, default 60] [seed]
 #include "tests/bench/processor_time.h"
-#include "tests/core/fleet_tally.h"
+#include "core/simulation/fleet_tally.h"
 
 #include "core/trend/drift_catalogue.h"
 

@@ -5,7 +5,7 @@
 // digits of the mathematical library. A bound fails only where the exact 95 % interval of what was counted
 // lies wholly on its wrong side: chance alone does that for one of forty seeds at the very bound. The number
 // of engines fits about ten seconds; bench_drift takes as many as one likes.
-#include "tests/core/fleet_tally.h"
+#include "core/simulation/fleet_tally.h"
 
 #include <gtest/gtest.h>
 

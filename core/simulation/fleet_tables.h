@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "tests/core/fleet_simulator.h"
+#include "core/simulation/fleet_simulator.h"
 
 #include <algorithm>
 #include <iterator>
@@ -50,6 +50,12 @@ inline const Look& look_of(const std::string& quantity)
 {
     return *std::find_if(std::begin(looks), std::end(looks),
                          [&](const Look& look) { return quantity == look.quantity; });
+}
+/// Whether the simulator can make this quantity.
+inline bool has_look(const std::string& quantity)
+{
+    return std::any_of(std::begin(looks), std::end(looks),
+                       [&](const Look& look) { return quantity == look.quantity; });
 }
 
 /// What a fault does to one quantity: a month (ramp) or once (step), deviation's unit.

@@ -5,11 +5,13 @@
 
 #include <cstddef>
 #include <cstdint>
+#include <map>
 #include <optional>
 #include <string>
 #include <vector>
 
-/// Invented engines whose truth is known, for calibrating and checking the drift scan.
+/// Invented engines whose truth is known: for calibrating and checking the drift scan, and for telling an engineer what
+/// silence means on an engine like his.
 ///
 /// All figures are invented: noise as in the catalogue, of which 15 % of the variance lasts with 0.6 a month,
 /// 5 % of the values have 2.5 times the spread, and a slow walk of 0.03 noise units per root month; lasting
@@ -51,6 +53,8 @@ struct Recipe
     double coolant_factor = 1.0;                  ///< noise and offsets of cooling water over the catalogue's
     std::vector<std::string> cylinder_quantities; ///< empty: the seven counted ones of the catalogue
     std::vector<std::string> engine_quantities;   ///< empty: the counted ones
+    double months_between_readings = 1.0;         ///< on average
+    std::map<std::string, double> cylinder_noise, engine_noise; ///< one sigma of this engine; empty: the catalogue's
 };
 
 struct TypingError

@@ -1,8 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "tests/core/fleet_simulator.h"
+#include "core/simulation/fleet_simulator.h"
 
-#include "tests/core/fleet_noise.h"
-#include "tests/core/fleet_tables.h"
+#include "core/simulation/fleet_noise.h"
+#include "core/simulation/fleet_tables.h"
 
 #include "core/trend/drift_catalogue.h"
 
@@ -76,7 +76,7 @@ private:
     {
         double month = 0.0;
         while (input().months.size() < readings()) {
-            const double gap = dice_.uniform(0.5, 1.5);
+            const double gap = recipe_.months_between_readings * dice_.uniform(0.5, 1.5);
             month += gap;
             if (!dice_.chance(0.06)) { // otherwise nobody took the reading
                 input().months.push_back(month);
@@ -162,6 +162,12 @@ private:
         input().engine_channels.push_back(std::move(channel));
     }
 
+    static double noise_of(const std::string& quantity, double usual, const std::map<std::string, double>& own)
+    {
+        const auto found = own.find(quantity);
+        return found == own.end() ? usual : found->second;
+    }
+
     /// The season that the correction leaves over: small, of the quantity's own phase.
     std::vector<double> season(double amplitude)
     {
@@ -206,7 +212,7 @@ private:
                     const double random =
                         noise[k * cylinders() + j].next(dice_, gap_before(i), white[k], spread_[i]);
                     double deviation =
-                        shared[k] + own + recipe_.noise_factor * factor * channel.noise * random;
+                        shared[k] + own + recipe_.noise_factor * factor * noise_of(channel.quantity, channel.noise, recipe_.cylinder_noise) * random;
                     if (is_of_engine(recipe_.fault) || engine_.cylinder == j)
                         deviation += fault_effect(channel.quantity, i);
                     write(channel.cells[i * cylinders() + j], channel.quantity, *channel.expected_typed[i],
@@ -254,7 +260,7 @@ private:
         const Look& look = look_of(channel.quantity);
         for (std::size_t i = 0; i < readings(); ++i) {
             const double random = noise.next(dice_, gap_before(i), dice_.normal(), 0.5 * (1.0 + spread_[i]));
-            double deviation = seasonal[i] + recipe_.noise_factor * channel.noise * random;
+            double deviation = seasonal[i] + recipe_.noise_factor * noise_of(channel.quantity, channel.noise, recipe_.engine_noise) * random;
             if (is_of_engine(recipe_.fault))
                 deviation += fault_effect(channel.quantity, i);
             const double expected = look.at_no_load + look.per_percent * *input().load_percent[i];
@@ -295,6 +301,8 @@ private:
         const std::size_t k =
             dice_.below(of_engine ? input().engine_channels.size() : input().channels.size());
         const std::size_t j = dice_.below(cylinders());
+        if (!of_engine && input().channels.empty())
+            return;
         drift::Cell& cell = of_engine ? input().engine_channels[k].cells[reading]
                                       : input().channels[k].cells[reading * cylinders() + j];
         if (!cell.present)

@@ -1,7 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "tests/core/fleet_simulator.h"
+#include "core/simulation/exact_intervals.h"
+#include "core/simulation/fleet_simulator.h"
 
 #include <cstddef>
 #include <map>
@@ -54,15 +55,6 @@ struct Tally
     /// The delay that so many per cent of the faults do not exceed; 0: more than the rest were never found.
     std::size_t delay_at(double share) const;
 };
-
-/// Exact 95 % interval for the mean of a Poisson count (Garwood 1936, Biometrika 28).
-struct Interval
-{
-    double low, high;
-};
-Interval poisson_interval(std::size_t count);
-/// Exact 95 % interval for a share (Clopper and Pearson 1934, Biometrika 26). @param of > 0
-Interval binomial_interval(std::size_t count, std::size_t of);
 
 /// Simulates engines `seed`, `seed + 1`, ... of a recipe and judges them.
 Tally judge_fleet(const Recipe& recipe, std::size_t engines, std::uint64_t seed);
