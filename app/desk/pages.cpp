@@ -13,6 +13,7 @@
 #include "app/reading/reading_page.h"
 #include "app/reading/workings_page.h"
 #include "app/settings/engine_page.h"
+#include "app/sisters/sisters_page.h"
 #include "app/survey/survey_page.h"
 #include "app/trends/trend_page.h"
 #include "storage/reading_store.h"
@@ -69,6 +70,7 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});
     frame.add_page({QStringLiteral("workings"), Frame::tr("Workings"), u'W', maker<WorkingsPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("detection"), Frame::tr("How good is this?"), u'I', maker<DetectionPage>(), {}, {}, false, false});
+    frame.add_page({QStringLiteral("sisters"), Frame::tr("Sister engines"), u'U', maker<SistersPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, {}, true});
 }
 
