@@ -50,12 +50,12 @@ void TrendPage::connect_buttons()
     const auto buttons = view_buttons(*ui_);
     for (int i = 0; i < 4; ++i)
         connect(buttons[static_cast<std::size_t>(i)], &QPushButton::clicked, this, [this, i] { choose_view(i); });
-    for (QPushButton* button : {ui_->load_button, ui_->uncertainty_button, ui_->fixed_button})
+    for (QPushButton* button : {ui_->load_button, ui_->uncertainty_button, ui_->opinions_button})
         connect(button, &QPushButton::toggled, this, [this] {
             TrendExtras extras;
             extras.load = ui_->load_button->isChecked();
             extras.uncertainty = ui_->uncertainty_button->isChecked();
-            extras.fixed_limits = ui_->fixed_button->isChecked();
+            extras.fixed_limits = ui_->opinions_button->isChecked();
             ui_->plot->show_extras(extras);
             show_side(ui_->plot->picture());
         });
@@ -312,7 +312,7 @@ void TrendPage::keyPressEvent(QKeyEvent* event)
     case Qt::Key_4: choose_view(event->key() - Qt::Key_1); return;
     case Qt::Key_5: ui_->load_button->toggle(); return;
     case Qt::Key_6: ui_->uncertainty_button->toggle(); return;
-    case Qt::Key_7: ui_->fixed_button->toggle(); return;
+    case Qt::Key_7: ui_->opinions_button->toggle(); return;
     case Qt::Key_A: ui_->table_button->toggle(); return;
     case Qt::Key_O: ask_note(); return;
     case Qt::Key_Left: walk_readings(-1); return;

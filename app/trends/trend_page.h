@@ -20,7 +20,7 @@ struct Selection;
 
 /// Trend: one quantity at one place over time, how the evidence grew, how long it may last, what to check.
 ///
-/// Keys: W the workings of the point in hand; 1 to 4 as read, corrected, deviation, apart; 5 the load; 6 the ±; 7 the customary fixed limits; A the
+/// Keys: W the workings of the point in hand; 1 to 4 as read, corrected, deviation, apart; 5 the load; 6 the ±; 7 second opinions; A the
 /// table; O says what was found about the flag; left and right walk through the
 /// readings, up and down through the places, Page Up and Page Down through the quantities.
 class TrendPage : public Page

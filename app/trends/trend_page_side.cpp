@@ -85,10 +85,11 @@ void TrendPage::show_side(const TrendPicture& picture)
         delete item;
     }
     std::vector<SideBlock> blocks = side_blocks(picture);
-    if (ui_->fixed_button->isChecked())
-        blocks.push_back({tr("Second opinion"),
-                          picture.fixed_limit_words.isEmpty() ? tr("Custom knows no fixed limit for this.") : picture.fixed_limit_words,
-                          tr("It is only shown: lasting differences between cylinders make it speak without cause."), false, false});
+    if (ui_->opinions_button->isChecked())
+        blocks.push_back({tr("Second opinions"),
+                          picture.second_opinions.isEmpty() ? tr("Too few values for any.") : picture.second_opinions.join(QStringLiteral("\n")),
+                          tr("They are only shown, and raise nothing: lasting differences, a common change or one slip make them speak "
+                             "without cause."), false, false});
     for (const SideBlock& block : blocks) {
         const bool first = ui_->side_lines->count() == 0;
         add_label(*ui_->side_lines, block.heading, block.caution ? "cautionhead" : "muted", first ? 0 : 16);

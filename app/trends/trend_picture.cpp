@@ -2,6 +2,7 @@
 #include "app/trends/trend_picture.h"
 
 #include "app/desk/number_text.h"
+#include "app/trends/second_opinion_words.h"
 #include "app/trends/trend_words.h"
 
 #include <QCoreApplication>
@@ -231,7 +232,7 @@ TrendPicture make_trend_picture(const Judgement& judgement, const Selection& sel
     add_others(picture, judgement);
     add_events(picture, judgement);
     add_evidence(picture, judgement);
-    add_fixed_limit(picture, judgement);
+    add_second_opinions(picture, judgement);
     add_trend_words(picture, judgement, *trend);
     return picture;
 }

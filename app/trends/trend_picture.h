@@ -70,7 +70,7 @@ struct TrendPicture
     std::optional<double> threshold;
     QString threshold_words; ///< "watch from here,\nact since 11 May 2031"
     std::optional<double> fixed_limit; ///< the customary distance from the others, either way; only where apart is shown
-    QString fixed_limit_words;         ///< when it would have spoken
+    QStringList second_opinions;       ///< what well-known rules would have said, a sentence each
     double first_time = 0.0, last_time = 0.0; ///< of the axis
     // Words
     QString headline, second_line, level_words;

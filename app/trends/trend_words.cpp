@@ -5,7 +5,6 @@
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
 #include "core/explanation/cautions.h"
-#include "core/trend/fixed_limits.h"
 #include "core/trend/limit_passed.h"
 
 #include <QCoreApplication>
@@ -197,29 +196,6 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     picture.flag_index = static_cast<std::size_t>(flag - judgement.flags.data());
     picture.note_words = note_words(judgement, *flag);
     add_cautions(picture, *flag);
-}
-
-void add_fixed_limit(TrendPicture& picture, const Judgement& judgement)
-{
-    const auto opinion = fixed_limit_opinion(judgement, picture.quantity, picture.place);
-    if (!opinion)
-        return;
-    if (picture.view == ValueView::apart)
-        picture.fixed_limit = opinion->own_limit;
-    const QString limit = with_unit(number_text(opinion->limit, 0), to_qstring(opinion->unit));
-    const QString rule = tr_("A fixed limit of %1 from the mean of the others (%2)").arg(limit, to_qstring(opinion->source));
-    if (opinion->began.empty()) {
-        picture.fixed_limit_words = tr_("%1 would never have spoken.").arg(rule);
-        return;
-    }
-    QStringList days;
-    constexpr std::size_t days_named = 3;
-    for (std::size_t i = 0; i < std::min(days_named, opinion->began.size()); ++i)
-        days.append(day_text(time_of(judgement, judgement.readings[opinion->began[i]].reading)));
-    picture.fixed_limit_words = tr_("%1 would have spoken at %n reading(s)", static_cast<int>(opinion->beyond)).arg(rule) +
-                                tr_(", first on %1").arg(days.join(QStringLiteral(", "))) +
-                                (opinion->began.size() > days_named ? tr_(" and later again") : QString()) +
-                                (opinion->now ? tr_("; it speaks now.") : QStringLiteral("."));
 }
 
 QString point_words(const Judgement& judgement, const Trend& trend, std::size_t reading)

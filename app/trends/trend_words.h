@@ -7,8 +7,6 @@
 namespace evenstroke {
 
 /// Headline, flags, time to the limit, what fits, what to check, cautions.
-/// What the customary fixed limit would have said, and where it lies.
-void add_fixed_limit(TrendPicture& picture, const Judgement& judgement);
 void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Trend& trend);
 QString spoken_point(const TrendPicture& picture, const PicturePoint& shown);
 /// "3 to 11 months", "less than a month", "more than ten years"

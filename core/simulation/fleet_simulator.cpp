@@ -101,6 +101,8 @@ private:
         for (const Effect& effect : effects) {
             const double spread = std::exp(recipe_.size_spread * dice_.normal());
             size_.push_back(effect.amount * (is_of_sensor(effect.fault) ? 1.0 : spread));
+            if (effect.fault == recipe_.fault)
+                engine_.growth[effect.quantity] = size_.back();
         }
     }
 

@@ -77,6 +77,7 @@ struct SimulatedEngine
     Fault fault = Fault::none;
     std::optional<std::size_t> cylinder; ///< of the fault; none: the engine
     std::size_t onset = 0;               ///< first reading with the fault in it
+    std::map<std::string, double> growth; ///< of the fault by quantity: a month (ramp) or once (step), deviation's unit
     std::vector<UnrecordedWork> unrecorded;
     std::vector<std::size_t> unsteady;
     std::vector<TypingError> errors;

@@ -6,6 +6,34 @@
 <context>
     <name>evenstroke</name>
     <message numerus="yes">
+        <source>%1 would have spoken at %n reading(s)</source>
+        <translation>
+            <numerusform>%1 would have spoken at one reading</numerusform>
+            <numerusform>%1 would have spoken at %n readings</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%1: %n cylinder(s)</source>
+        <translation>
+            <numerusform>%1: 1 cylinder</numerusform>
+            <numerusform>%1: %n cylinders</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>, read every %1 months, scatter as in its own %n reading(s).</source>
+        <translation>
+            <numerusform>, read every %1 months, scatter as in its own one reading.</numerusform>
+            <numerusform>, read every %1 months, scatter as in its own %n readings.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n reading(s)</source>
+        <translation>
+            <numerusform>1 reading</numerusform>
+            <numerusform>%n readings</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
         <source>%n value(s) to look at again at the next reading; nothing else stands out.</source>
         <translation>
             <numerusform>One value to look at again at the next reading; nothing else stands out.</numerusform>
