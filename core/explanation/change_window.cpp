@@ -12,7 +12,7 @@ namespace {
 constexpr std::size_t level_window = 24;   ///< values that the level before is learned from
 constexpr std::size_t ramp_needs = 4;      ///< readings from the onset on, for a slope to be told from a step
 constexpr double pull_to = 2.5;            ///< noise sigmas to which one odd value among several is pulled in
-constexpr double lasting_noise = 0.3;      ///< noise units that averaging does not take away (slow wander, season)
+constexpr double lasting_noise = 0.35;      ///< noise units that averaging does not take away (slow wander, season)
 
 double square(double x) { return x * x; }
 

@@ -16,7 +16,8 @@ namespace {
 
 /// Standard deviations of the strongest sign from which something is called out of the usual, and with a standing
 /// flag of the drift method. Settled by simulation of sound engines (tests/core/fault_statistics_test.cpp).
-constexpr double claim_from = 5.0, claim_with_flag_from = 3.0;
+constexpr double claim_from = 4.3, claim_with_flag_from = 3.0;
+constexpr double claim_one_reading_from = 6.0; ///< one reading may be odd by itself
 /// After so many readings an unanswered question about work is taken as work done, as the drift method takes it.
 constexpr std::size_t question_lasts = 12;
 constexpr double misread_from = 4.0, others_below = 1.5; ///< noise units, of one value that stands alone
@@ -105,12 +106,15 @@ private:
         const auto window = find_change(series, faults, earliest_onset(series.subject));
         comparable_ = comparable_ || window.has_value();
         const Flag* flag = standing_drift(judgement_, series.subject);
-        if (!window || window->strength < (flag ? claim_with_flag_from : claim_from))
+        if (!window || window->strength < (flag                    ? claim_with_flag_from
+                                           : window->readings == 1 ? claim_one_reading_from
+                                                                   : claim_from))
             return false;
         SubjectExplanation subject;
         subject.subject = series.subject;
         subject.flagged = flag != nullptr;
         subject.sudden = !window->ramp;
+        subject.last_reading_only = window->readings == 1;
         subject.since = record_.readings[window->onset - 1].taken_at.utc;
         subject.months = window->months;
         subject.causes = rank_causes(faults, *window);
@@ -197,7 +201,13 @@ private:
             slip.fault = find_fault(cause);
             word_hypothesis(slip, nullptr, record_.engine.two_stroke());
             slip.fits.push_back(doubt.sentence);
-            put_first(subject, std::move(slip));
+            // A change that several readings carry is no slip of the pen: then it is said last.
+            if (subject.causes.empty() || subject.last_reading_only)
+                put_first(subject, std::move(slip));
+            else {
+                slip.rank = static_cast<int>(subject.causes.size()) + 1;
+                subject.causes.push_back(std::move(slip));
+            }
             if (subject.answer.empty())
                 word_subject(subject, record_, nullptr);
         }

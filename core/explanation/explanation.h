@@ -56,6 +56,7 @@ struct SubjectExplanation
     std::vector<Hypothesis> causes;  ///< in order of rank; none: no fault on the list looks like it
     bool flagged = false;            ///< a flag of the drift method stands on it
     bool sudden = true;              ///< came at once; else it crept up
+    bool last_reading_only = false;  ///< no earlier reading shows it
     TimePoint since{};
     double months = 0.0;
     std::string answer;              ///< one sentence: what can be said at all

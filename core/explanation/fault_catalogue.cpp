@@ -67,7 +67,17 @@ Fault load_fault(const CatalogueTable& table, std::size_t row)
     fault.reference_size = table.cell(row, "reference_size");
     for (const FaultQuantity& quantity_of : fault_quantities())
         fault.levels.push_back(table.number(row, quantity_of.name));
+    fault.full_levels = fault.levels;
     return fault;
+}
+
+void set_large_levels(std::vector<Fault>& faults)
+{
+    const CatalogueTable table(catalogue_text::fault_large_levels);
+    for (std::size_t row = 0; row < table.rows(); ++row)
+        for (Fault& fault : faults)
+            if (fault.id == table.cell(row, "fault_id"))
+                fault.full_levels[find_fault_quantity(table.cell(row, "quantity")).value()] = table.number(row, "level");
 }
 
 std::vector<Fault> load_faults()
@@ -84,6 +94,7 @@ std::vector<Fault> load_faults()
         fault.check_next = next_check(fault.id, {});
         faults.push_back(std::move(fault));
     }
+    set_large_levels(faults);
     return faults;
 }
 

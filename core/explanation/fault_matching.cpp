@@ -10,11 +10,11 @@ namespace {
 
 constexpr double most_size = 1.5;        ///< of the reference size: beyond it levels of 3 are "3 or more" all the same
 constexpr double unstated_weight = 0.8;  ///< of a movement that the signature does not speak of
-constexpr double cut = most_size * largest_level; ///< changes beyond it say no more about the pattern
+constexpr double cut = 15.0;             ///< noise units: changes beyond it say no more about the pattern
 /// How well the pattern's proportions are known: a third of each part (estimate), a tenth of a noise unit where
 /// "should not move" was rounded, and 1.2 noise units where the signature says nothing. Settled by simulation.
 constexpr double part_spread = 0.33, rounding_spread = 0.3, unstated_spread = 1.2;
-constexpr std::array<double, 6> sizes = {0.35, 0.5, 0.7, 1.0, 1.4, 2.0};
+constexpr std::array<double, 7> sizes = {0.35, 0.5, 0.7, 1.0, 1.4, 2.0, 2.8};
 
 double square(double x) { return x * x; }
 
@@ -48,7 +48,7 @@ double log_ratio(const Fault& fault, double size, const ChangeVector& changes)
         if (!changes[k] || redundant().at(k, changes))
             continue;
         const double d = cut_at(changes[k]->amount, cut), noise = square(changes[k]->error);
-        const auto& level = fault.levels[k];
+        const auto& level = fault.full_levels[k];
         const double expected = level ? cut_at(size * *level, cut) : 0.0;
         const double own = !level          ? unstated_spread * size
                            : *level == 0.0 ? rounding_spread * size
@@ -200,10 +200,10 @@ double strongest_sign(std::span<const Fault* const> faults, const ChangeVector& 
     for (const Fault* fault : faults) {
         double product = 0.0, levels = 0.0;
         for (std::size_t k = 0; k < changes.size(); ++k)
-            if (changes[k] && fault->levels[k] && !redundant().at(k, changes)) {
+            if (changes[k] && fault->full_levels[k] && !redundant().at(k, changes)) {
                 const double weight = 1.0 / square(changes[k]->error);
-                product += weight * *fault->levels[k] * changes[k]->amount;
-                levels += weight * square(*fault->levels[k]);
+                product += weight * *fault->full_levels[k] * changes[k]->amount;
+                levels += weight * square(*fault->full_levels[k]);
             }
         if (levels > 0.0) {
             const double sign = product / std::sqrt(levels);

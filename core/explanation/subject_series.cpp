@@ -2,6 +2,7 @@
 #include "core/explanation/subject_series.h"
 
 #include "core/reading/steadiness.h"
+#include "core/trend/common_mode.h"
 #include "core/trend/deviations.h"
 #include "core/trend/drift_input.h"
 #include "core/trend/robust.h"
@@ -105,7 +106,7 @@ SeriesMaker::SeriesMaker(const Judgement& judgement)
         row.cylinders.assign(cylinders_, Values(readings_));
         row.whole.assign(cylinders_, Values(readings_));
         row.engine.assign(readings_, std::nullopt);
-        row.cylinder_starts.assign(cylinders_, 0);
+        row.cylinder_starts.assign(cylinders_, {0});
         if (!quantity_of.read_as.empty() && quantity_of.per == FaultQuantity::Per::cylinder)
             gather(quantity_of, row);
         else if (!quantity_of.read_as.empty())
@@ -113,6 +114,54 @@ SeriesMaker::SeriesMaker(const Judgement& judgement)
         rows_.push_back(std::move(row));
     }
     find_starts();
+    for (std::size_t k = 0; k < rows_.size(); ++k)
+        if (fault_quantities()[k].per == FaultQuantity::Per::cylinder)
+            take_out_what_all_share(fault_quantities()[k], rows_[k]);
+}
+
+/// The usual difference of one cylinder from the middle of the others at each reading, a stretch at a time.
+std::vector<double> SeriesMaker::own_offsets(const Row& row, std::size_t cylinder) const
+{
+    std::vector<double> offsets(readings_, 0.0);
+    const auto& starts = row.cylinder_starts[cylinder];
+    for (std::size_t s = 0; s < starts.size(); ++s) {
+        const std::size_t end = s + 1 < starts.size() ? starts[s + 1] : readings_;
+        std::vector<double> differences;
+        for (std::size_t i = starts[s]; i < end; ++i) {
+            std::vector<double> others;
+            for (std::size_t j = 0; j < cylinders_; ++j)
+                if (j != cylinder && row.whole[j][i])
+                    others.push_back(*row.whole[j][i]);
+            if (row.whole[cylinder][i] && !others.empty())
+                differences.push_back(*row.whole[cylinder][i] - drift::median_in_place(others));
+        }
+        const double usual = drift::median(std::move(differences)).value_or(0.0);
+        std::fill(offsets.begin() + static_cast<std::ptrdiff_t>(starts[s]), offsets.begin() + static_cast<std::ptrdiff_t>(end), usual);
+    }
+    return offsets;
+}
+
+/// Better than the middle of the others alone: that jumps by their lasting differences when one of them was not read
+/// or took a new level.
+void SeriesMaker::take_out_what_all_share(const FaultQuantity& from, Row& row) const
+{
+    if (cylinders_ <= drift::others_needed)
+        return; // what the trend says stays
+    std::vector<std::vector<double>> offsets;
+    for (std::size_t j = 0; j < cylinders_; ++j)
+        offsets.push_back(own_offsets(row, j));
+    for (std::size_t i = 0; i < readings_; ++i) {
+        drift::MaybeValues values(cylinders_);
+        std::vector<double> own(cylinders_);
+        for (std::size_t j = 0; j < cylinders_; ++j) {
+            values[j] = row.whole[j][i];
+            own[j] = offsets[j][i];
+        }
+        const auto shared = drift::common_mode(values, own, from.noise);
+        for (std::size_t j = 0; j < cylinders_; ++j)
+            if (values[j] && shared[j])
+                row.cylinders[j][i] = *values[j] - *shared[j];
+    }
 }
 
 bool SeriesMaker::takes_part(std::size_t reading, const Trend& trend, const TrendPoint& point) const
@@ -198,7 +247,8 @@ void SeriesMaker::find_starts()
             for (std::size_t j = 0; j < cylinders_; ++j) {
                 const std::size_t cell = i * cylinders_ + j;
                 if (marks.cylinder_work[cell] || (!of_cylinders.empty() && of_cylinders[cell]))
-                    rows_[k].cylinder_starts[j] = i;
+                    if (i > 0)
+                        rows_[k].cylinder_starts[j].push_back(i);
             }
             const auto& of_engine = marks.engine_channels[k].segment_starts;
             if (marks.engine_work[i] || (!of_engine.empty() && of_engine[i]))
@@ -224,10 +274,10 @@ SubjectSeries SeriesMaker::cylinder(int number) const
             one.noise = learned_noise(of.noise, std::move(differences), 8.0);
         } else if (of.per == FaultQuantity::Per::cylinder) {
             one.values = row.cylinders[j];
-            one.start = row.cylinder_starts[j];
+            one.start = row.cylinder_starts[j].back();
             for (std::size_t other = 0; other < cylinders_; ++other)
-                add_differences(differences, row.cylinders[other], row.cylinder_starts[other]);
-            // The middle of the others scatters too.
+                add_differences(differences, row.cylinders[other], row.cylinder_starts[other].back());
+            // What the others share scatters too.
             one.noise = learned_noise(of.noise * std::sqrt(1.0 + 1.1 / others), std::move(differences), 30.0);
         } else {
             one.values.assign(readings_, std::nullopt);
@@ -236,6 +286,23 @@ SubjectSeries SeriesMaker::cylinder(int number) const
         series.quantities.push_back(std::move(one));
     }
     return series;
+}
+
+/// Each cylinder without its lasting difference, so that a missing one does not move the middle.
+Values SeriesMaker::middle_of_cylinders(const Row& row, const std::set<int>& left_out) const
+{
+    std::vector<std::vector<double>> offsets;
+    for (std::size_t j = 0; j < cylinders_; ++j)
+        offsets.push_back(own_offsets(row, j));
+    Values middle(readings_);
+    for (std::size_t i = 0; i < readings_; ++i) {
+        std::vector<double> values;
+        for (std::size_t j = 0; j < cylinders_; ++j)
+            if (row.whole[j][i] && left_out.count(static_cast<int>(j) + 1) == 0)
+                values.push_back(*row.whole[j][i] - offsets[j][i]);
+        middle[i] = drift::median(std::move(values));
+    }
+    return middle;
 }
 
 SubjectSeries SeriesMaker::engine(const std::set<int>& left_out) const
@@ -248,13 +315,7 @@ SubjectSeries SeriesMaker::engine(const std::set<int>& left_out) const
         one.values = row.engine;
         one.start = row.engine_start;
         if (of.per == FaultQuantity::Per::cylinder)
-            for (std::size_t i = 0; i < readings_; ++i) {
-                std::vector<double> middle;
-                for (std::size_t j = 0; j < cylinders_; ++j)
-                    if (row.whole[j][i] && left_out.count(static_cast<int>(j) + 1) == 0)
-                        middle.push_back(*row.whole[j][i]);
-                one.values[i] = drift::median(std::move(middle));
-            }
+            one.values = middle_of_cylinders(row, left_out);
         std::vector<double> differences;
         add_differences(differences, one.values, one.start);
         one.noise = std::max(learned_noise(of.noise, std::move(differences), 8.0), row.floor);

@@ -46,15 +46,18 @@ private:
     struct Row ///< one fault quantity, [place][reading]
     {
         std::vector<std::vector<std::optional<double>>> cylinders; ///< apart
-        std::vector<std::vector<std::optional<double>>> whole;     ///< of each cylinder, what all share still in it
+        std::vector<std::vector<std::optional<double>>> whole; ///< of each cylinder, what all share still in it
         std::vector<std::optional<double>> engine;
-        std::vector<std::size_t> cylinder_starts;
+        std::vector<std::vector<std::size_t>> cylinder_starts; ///< of every stretch, the first of them 0
         std::size_t engine_start = 0;
         double floor = 0.0; ///< half of the instrument's half-width
     };
     void gather(const FaultQuantity& from, Row& row) const;
     void gather_engine(const FaultQuantity& from, Row& row) const;
     void find_starts();
+    void take_out_what_all_share(const FaultQuantity& from, Row& row) const;
+    std::vector<std::optional<double>> middle_of_cylinders(const Row& row, const std::set<int>& left_out) const;
+    std::vector<double> own_offsets(const Row& row, std::size_t cylinder) const;
     bool takes_part(std::size_t reading, const Trend& trend, const TrendPoint& point) const;
 
     const Judgement& judgement_;

@@ -87,14 +87,16 @@ Counts run(FaultRecipe recipe, std::size_t engines, std::uint64_t seed)
 
 void print_sound(const char* name, FaultRecipe recipe, std::size_t engines, std::uint64_t seed)
 {
-    std::size_t with_any = 0, subjects = 0;
+    std::size_t with_any = 0, subjects = 0, slips = 0;
     for (std::size_t n = 0; n < engines; ++n) {
-        const std::size_t claimed = judge_trial(simulate_fault(recipe, seed + n)).other_subjects;
+        const FaultOutcome outcome = judge_trial(simulate_fault(recipe, seed + n));
+        const std::size_t claimed = outcome.other_subjects;
+        slips += outcome.slips;
         with_any += claimed > 0 ? 1 : 0;
         subjects += claimed;
     }
-    std::printf("%-28s something out of the usual at the last reading: %s of %zu engines, %zu subjects\n", name,
-                share(with_any, engines).c_str(), engines, subjects);
+    std::printf("%-28s something out of the usual at the last reading: %s of %zu engines, %zu subjects; miswritten only: %zu\n",
+                name, share(with_any, engines).c_str(), engines, subjects, slips);
 }
 
 void print_cost()

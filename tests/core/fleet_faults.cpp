@@ -362,7 +362,7 @@ FaultOutcome judge_trial(const FaultTrial& trial)
     const Explanation explanation = explain(judge(trial.record));
     for (const SubjectExplanation& subject : explanation.subjects) {
         if (trial.fault.empty() || subject.subject != trial.subject) {
-            ++outcome.other_subjects;
+            ++(subject.history.empty() ? outcome.slips : outcome.other_subjects);
             continue;
         }
         outcome.claimed = true;

@@ -51,6 +51,7 @@ struct FaultOutcome
     bool equals_said = false; ///< "cannot tell apart"
     bool true_among_equals = false;
     std::size_t other_subjects = 0; ///< said to be out of the usual without a fault
+    std::size_t slips = 0; ///< subjects without a fault of which only a value looks miswritten
     double explained = 0.0;
 };
 FaultOutcome judge_trial(const FaultTrial& trial);
