@@ -94,6 +94,8 @@ void write_subject(QTextStream& out, const SubjectExplanation& subject)
     if (!subject.history.empty())
         out << " " << QString::fromStdString(subject.history);
     out << "\n";
+    if (!subject.moved.empty())
+        out << "  Moved: " << QString::fromStdString(comma_list(subject.moved)) << ".\n";
     for (const std::string& remark : subject.remarks)
         out << "  " << QString::fromStdString(remark) << "\n";
     write_cautions(out, subject.cautions);

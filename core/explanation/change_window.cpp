@@ -81,6 +81,31 @@ std::optional<Estimate> estimate_ramp(const SubjectSeries& of, const QuantitySer
     return Estimate{whole * product / squares, square(whole) * (1.0 / squares + square(sum / squares) / level.count), count};
 }
 
+/// Maximum less compression pressure: it is not read by itself.
+void add_pressure_rise(ChangeWindow& window)
+{
+    static const std::size_t rise = find_fault_quantity("combustion_pressure_rise").value(),
+                             maximum = find_fault_quantity("maximum_pressure").value(),
+                             compression = find_fault_quantity("compression_pressure").value();
+    const auto quantities = fault_quantities();
+    if (!window.changes[maximum] || !window.changes[compression])
+        return;
+    const double noise = quantities[rise].noise;
+    window.amounts[rise] = *window.amounts[maximum] - *window.amounts[compression];
+    window.changes[rise] = Change{*window.amounts[rise] / noise,
+                                  std::hypot(window.changes[maximum]->error * quantities[maximum].noise,
+                                             window.changes[compression]->error * quantities[compression].noise) / noise};
+}
+
+/// Without the gauges of the engine, which are no reason to claim anything of one cylinder.
+ChangeVector claiming(const SubjectSeries& series, ChangeVector changes)
+{
+    for (std::size_t k = 0; k < changes.size(); ++k)
+        if (series.quantities[k].gauge_of_engine)
+            changes[k].reset();
+    return changes;
+}
+
 } // namespace
 
 std::optional<ChangeWindow> change_since(const SubjectSeries& series, std::size_t onset, bool ramp)
@@ -92,6 +117,7 @@ std::optional<ChangeWindow> change_since(const SubjectSeries& series, std::size_
     window.ramp = ramp;
     window.months = series.months.back() - series.months[onset - 1];
     window.changes.resize(series.quantities.size());
+    window.without_wander.resize(series.quantities.size());
     window.amounts.resize(series.quantities.size());
     for (std::size_t k = 0; k < series.quantities.size(); ++k) {
         const QuantitySeries& one = series.quantities[k];
@@ -105,10 +131,12 @@ std::optional<ChangeWindow> change_since(const SubjectSeries& series, std::size_
         // Levels of a signature are sizes in the table's units; the engine's own scatter says how sure the change is.
         const double noise = one.noise / table;
         window.amounts[k] = found->amount;
-        window.changes[k] =
-            Change{found->amount / table, std::sqrt(square(noise) * found->variance + square(lasting_noise))};
+        const double variance = square(noise) * found->variance;
+        window.changes[k] = Change{found->amount / table, std::sqrt(variance + square(lasting_noise))};
+        window.without_wander[k] = Change{found->amount / table, std::sqrt(variance)};
         window.readings = std::max(window.readings, found->count);
     }
+    add_pressure_rise(window);
     const bool any = std::any_of(window.changes.begin(), window.changes.end(), [](const auto& one) { return one.has_value(); });
     return any ? std::optional(std::move(window)) : std::nullopt;
 }
@@ -124,14 +152,12 @@ std::optional<ChangeWindow> find_change(const SubjectSeries& series, std::span<c
             auto window = change_since(series, onset, ramp);
             if (!window)
                 continue;
-            ChangeVector claiming = window->changes;
-            for (std::size_t k = 0; k < claiming.size(); ++k)
-                if (series.quantities[k].gauge_of_engine)
-                    claiming[k].reset();
-            window->strength = strongest_sign(faults, claiming);
-            if (!best || window->strength > best->strength)
+            window->likelihood = strongest_sign(faults, claiming(series, window->without_wander));
+            if (!best || window->likelihood > best->likelihood)
                 best = std::move(window);
         }
+    if (best)
+        best->strength = strongest_sign(faults, claiming(series, best->changes));
     return best;
 }
 

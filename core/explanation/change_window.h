@@ -12,8 +12,10 @@ struct ChangeWindow
     bool ramp = false;      ///< crept up since then; else it came at once
     std::size_t readings = 0; ///< that carry it
     double months = 0.0;    ///< from the reading before the onset to the last
-    double strength = 0.0;  ///< of the strongest sign, in standard deviations
+    double strength = 0.0;  ///< of the strongest sign, in standard deviations, slow wander allowed for
+    double likelihood = 0.0; ///< the same without that: among onsets and shapes the largest fits best
     ChangeVector changes;   ///< as they stand at the last reading
+    ChangeVector without_wander; ///< the same with the errors of averaging alone
     std::vector<std::optional<double>> amounts; ///< the same in the unit of the deviation
 };
 

@@ -16,7 +16,7 @@ namespace {
 
 /// Standard deviations of the strongest sign from which something is called out of the usual, and with a standing
 /// flag of the drift method. Settled by simulation of sound engines (tests/core/fault_statistics_test.cpp).
-constexpr double claim_from = 4.3, claim_with_flag_from = 3.0;
+constexpr double claim_from = 4.2, claim_with_flag_from = 3.0;
 constexpr double claim_one_reading_from = 6.0; ///< one reading may be odd by itself
 /// After so many readings an unanswered question about work is taken as work done, as the drift method takes it.
 constexpr std::size_t question_lasts = 12;
@@ -242,6 +242,9 @@ private:
                                           change_words(k, *window.amounts[k]) +
                                           ": pressures that stay may hide wear, and pressures that move may come from it.");
         }
+        const Flag* flag = standing_drift(judgement_, subject.subject);
+        if (flag && subject.causes.empty() && !flag->pattern_words.empty())
+            subject.remarks.push_back("The flag that stands here goes by the pattern of " + flag->pattern_words + ".");
         const Flag* question = last_question(judgement_, subject.subject);
         if (question && question->level_now == Level::ask)
             subject.remarks.push_back(question->sentence + " If so, enter it, and the comparison starts anew.");

@@ -61,6 +61,7 @@ struct SubjectExplanation
     double months = 0.0;
     std::string answer;              ///< one sentence: what can be said at all
     std::string history;             ///< since when, sudden or creeping, after which event
+    std::vector<std::string> moved;  ///< what moved clearly, most first: "scavenge pressure 3.1 % down"
     std::string cannot_tell;         ///< empty where the first stands alone; else with the cheapest observation
     std::vector<std::string> cautions; ///< of an alarm value beyond its range; those of a cause stand with it
     std::vector<std::string> remarks; ///< what else belongs here: offsets set in a control, an open question

@@ -8,6 +8,7 @@
 #include <algorithm>
 #include <chrono>
 #include <cmath>
+#include <utility>
 
 namespace evenstroke {
 namespace {
@@ -82,6 +83,21 @@ std::string history_sentence(const SubjectExplanation& subject, const EngineReco
     return text;
 }
 
+/// Clearly out: by one and a half noise units and three of its own standard errors.
+std::vector<std::string> moved_words(const ChangeWindow& window)
+{
+    std::vector<std::pair<double, std::string>> moved;
+    for (std::size_t k = 0; k < window.changes.size(); ++k)
+        if (const auto& change = window.changes[k];
+            change && std::abs(change->amount) >= 1.5 && std::abs(change->amount) >= 3.0 * change->error)
+            moved.emplace_back(-std::abs(change->amount), fault_quantity_words(k) + " " + change_words(k, *window.amounts[k]));
+    std::sort(moved.begin(), moved.end());
+    std::vector<std::string> words;
+    for (const auto& one : moved)
+        words.push_back(one.second);
+    return words;
+}
+
 std::string cannot_tell_sentence(const SubjectExplanation& subject)
 {
     std::vector<std::string> equals;
@@ -152,6 +168,7 @@ void word_subject(SubjectExplanation& subject, const EngineRecord& record, const
         subject.answer = who + " is out of its usual" +
                          (subject.causes.empty() ? ", and it does not look like any fault on the list." : ".");
         subject.history = history_sentence(subject, record, *window);
+        subject.moved = moved_words(*window);
     } else if (!subject.causes.empty()) {
         subject.answer = who + ": something looks miswritten at this reading.";
     } else {

@@ -50,7 +50,7 @@ double log_ratio(const Fault& fault, double size, const ChangeVector& changes)
         const double d = cut_at(changes[k]->amount, cut), noise = square(changes[k]->error);
         const auto& level = fault.full_levels[k];
         const double expected = level ? cut_at(size * *level, cut) : 0.0;
-        const double own = !level          ? unstated_spread * size
+        const double own = !level          ? unstated_spread * std::min(std::abs(size), 1.0)
                            : *level == 0.0 ? rounding_spread * size
                                            : std::max(part_spread * std::abs(expected), rounding_spread * std::abs(size));
         sum += log_density(d - expected, noise + square(own)) - log_density(d, noise);
@@ -71,7 +71,12 @@ double log_prior(const Fault& fault)
 {
     // How often a cause is met, as the catalogue's three words have it (estimates): 1, 0.7 and 0.4.
     constexpr std::array<double, 3> shares = {0.4, 0.7, 1.0};
-    return std::log(shares[static_cast<std::size_t>(fault.commonness)]);
+    double share = shares[static_cast<std::size_t>(fault.commonness)];
+    if (fault.reference_size.empty()) // a pattern in outline only
+        share *= 0.5;
+    if (fault.urgency == Urgency::emergency) // seen by the alarm, long before a monthly sheet
+        share *= 0.25;
+    return std::log(share);
 }
 
 double log_weight(const Fault& fault, const ChangeVector& changes)
@@ -90,13 +95,13 @@ struct Sums
     double product = 0.0, levels = 0.0, all_levels = 0.0;
 };
 
-/// @param weighted by the errors; else every observed quantity alike
+/// @param weighted by the errors, and without what says nothing of its own; else every observed quantity alike
 Sums sums_of(const Fault& fault, const ChangeVector& changes, bool weighted)
 {
     Sums sums;
     for (std::size_t k = 0; k < changes.size(); ++k) {
         const auto& level = fault.levels[k];
-        if (!level)
+        if (!level || (weighted && redundant().at(k, changes)))
             continue;
         sums.all_levels += square(*level);
         if (!changes[k])
@@ -118,11 +123,11 @@ struct Residual
     double left = 0.0, whole = 0.0, scatter = 0.0; ///< sums of squares; `scatter`: what errors alone bring
 };
 
-Residual residual_of(const Fault& fault, double size, const ChangeVector& changes)
+Residual residual_of(const Fault& fault, double size, const ChangeVector& changes, bool with_redundant)
 {
     Residual residual;
     for (std::size_t k = 0; k < changes.size(); ++k) {
-        if (!changes[k])
+        if (!changes[k] || (!with_redundant && redundant().at(k, changes)))
             continue;
         const double d = cut_at(changes[k]->amount, largest_level);
         residual.whole += square(d);
@@ -149,7 +154,7 @@ std::optional<PlainMatch> match_plainly(const Fault& fault, const ChangeVector& 
     PlainMatch match;
     match.size = size_from(fault, sums);
     match.coverage = sums.levels / sums.all_levels;
-    const Residual residual = residual_of(fault, match.size, changes);
+    const Residual residual = residual_of(fault, match.size, changes, true);
     if (residual.whole > 0.0)
         match.explained = 1.0 - residual.left / residual.whole;
     return match;
@@ -166,7 +171,7 @@ std::vector<FaultMatch> match_faults(std::span<const Fault* const> faults, const
         match.fault = fault;
         match.size = size_from(*fault, sums);
         match.coverage = observed_share(*fault, changes);
-        const Residual residual = residual_of(*fault, match.size, changes);
+        const Residual residual = residual_of(*fault, match.size, changes, false);
         const double beyond_scatter = residual.whole - residual.scatter;
         if (beyond_scatter > 0.0)
             match.explained =

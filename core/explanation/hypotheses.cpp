@@ -3,6 +3,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <iterator>
+#include <utility>
 
 namespace evenstroke {
 namespace {
@@ -14,6 +16,7 @@ constexpr double equal_odds = 1.1;
 /// Of the odds at which the plainer of two comes first although it is a little less likely.
 constexpr double plain_first_odds = 0.4;
 constexpr double rest_needed = 2.5; ///< noise units, in some quantity, for a second cause to be looked for
+constexpr double rest_explained = 0.7, pair_explained = 0.5; ///< share of that rest, beside a first cause that stands alone or not
 constexpr double moved_from = 1.0, contradicts_from = 1.5; ///< noise units
 
 Hypothesis made_from(const FaultMatch& match, const ChangeWindow& window)
@@ -47,26 +50,64 @@ void put_plain_first(std::vector<FaultMatch>& matches)
     std::rotate(matches.begin(), plainest, plainest + 1);
 }
 
-/// What is left when the first cause is taken away, if it is worth a look.
-std::optional<Hypothesis> second_cause(std::span<const Fault* const> faults, const FaultMatch& first,
-                                       const ChangeWindow& window)
+/// The likeliest cause of what the first one leaves over, if that is worth a look.
+std::optional<FaultMatch> match_in_the_rest(std::span<const Fault* const> faults, const FaultMatch& first,
+                                            const ChangeVector& changes, double least)
 {
-    ChangeWindow rest = window;
-    rest.changes = without_fault(*first.fault, first.size, window.changes);
-    const bool enough = std::any_of(rest.changes.begin(), rest.changes.end(), [](const auto& change) {
+    const ChangeVector rest = without_fault(*first.fault, first.size, changes);
+    const bool enough = std::any_of(rest.begin(), rest.end(), [](const auto& change) {
         return change && std::abs(change->amount) >= rest_needed && std::abs(change->amount) >= 3.0 * change->error;
     });
     if (!enough)
         return std::nullopt;
-    const auto matches = match_faults(faults, rest.changes);
+    const auto matches = match_faults(faults, rest);
     const auto found = std::find_if(matches.begin(), matches.end(), [&](const FaultMatch& match) {
-        return match.fault != first.fault && match.explained >= 0.7 && match.log_weight > 3.0;
+        return match.fault != first.fault && match.explained >= least && match.log_weight > 3.0;
     });
-    if (found == matches.end() || found->log_weight < log_weight_of_no_pattern(rest.changes))
+    if (found == matches.end() || found->log_weight < log_weight_of_no_pattern(rest))
         return std::nullopt;
-    Hypothesis second = made_from(*found, window);
-    second.in_the_rest = true;
-    return second;
+    return *found;
+}
+
+/// Two causes together where none alone accounts for half: the likeliest pair of those whose first is likely.
+std::vector<Hypothesis> two_together(std::span<const Fault* const> faults, const std::vector<FaultMatch>& matches,
+                                     const ChangeWindow& window)
+{
+    constexpr std::size_t firsts = 6;
+    std::optional<std::pair<FaultMatch, FaultMatch>> best;
+    for (std::size_t i = 0; i < std::min(firsts, matches.size()); ++i) {
+        const auto second = match_in_the_rest(faults, matches[i], window.changes, pair_explained);
+        if (second && (!best || matches[i].log_weight + second->log_weight > best->first.log_weight + best->second.log_weight))
+            best = {matches[i], *second};
+    }
+    if (!best)
+        return {};
+    std::vector<Hypothesis> pair = {made_from(best->first, window), made_from(best->second, window)};
+    pair.back().in_the_rest = true;
+    return pair;
+}
+
+/// The first three, and further ones only where they are as likely as the first and would not wait.
+std::vector<Hypothesis> shown_of(std::vector<FaultMatch> matches, const ChangeWindow& window)
+{
+    const double likeliest = matches.empty() ? 0.0 : matches.front().log_weight;
+    put_plain_first(matches);
+    std::vector<Hypothesis> shown;
+    for (std::size_t i = 0; i < matches.size(); ++i) {
+        const bool equal = likeliest - matches[i].log_weight < equal_odds;
+        if (i >= most_shown && !(equal && will_not_wait(*matches[i].fault)))
+            continue;
+        Hypothesis hypothesis = made_from(matches[i], window);
+        hypothesis.as_likely_as_first = i > 0 && equal;
+        hypothesis.only_for_its_urgency = i >= most_shown;
+        shown.push_back(std::move(hypothesis));
+    }
+    return shown;
+}
+
+const FaultMatch* first_shown(const std::vector<FaultMatch>& matches, const std::vector<Hypothesis>& shown)
+{
+    return &*std::find_if(matches.begin(), matches.end(), [&](const FaultMatch& match) { return match.fault == shown.front().fault; });
 }
 
 QuantityEvidence::Says what_it_says(double moved, double expected)
@@ -118,29 +159,20 @@ std::vector<QuantityEvidence> weigh_evidence(const Fault& fault, double size, co
 
 std::vector<Hypothesis> rank_causes(std::span<const Fault* const> faults, const ChangeWindow& window)
 {
-    std::vector<FaultMatch> matches = match_faults(faults, window.changes);
-    matches.erase(std::remove_if(matches.begin(), matches.end(),
-                                 [](const FaultMatch& match) { return match.explained < least_explained; }),
-                  matches.end());
-    put_plain_first(matches);
-    double likeliest = matches.empty() ? 0.0 : matches.front().log_weight;
-    for (const FaultMatch& match : matches)
-        likeliest = std::max(likeliest, match.log_weight);
-    std::vector<Hypothesis> shown;
-    for (std::size_t i = 0; i < matches.size(); ++i) {
-        const bool equal = likeliest - matches[i].log_weight < equal_odds;
-        const bool urgent = equal && will_not_wait(*matches[i].fault);
-        if (i >= most_shown && !urgent)
-            continue;
-        Hypothesis hypothesis = made_from(matches[i], window);
-        hypothesis.as_likely_as_first = i > 0 && equal && likeliest - matches[0].log_weight < equal_odds;
-        hypothesis.only_for_its_urgency = i >= most_shown;
-        shown.push_back(std::move(hypothesis));
+    const std::vector<FaultMatch> all = match_faults(faults, window.changes);
+    std::vector<FaultMatch> matches;
+    std::copy_if(all.begin(), all.end(), std::back_inserter(matches),
+                 [](const FaultMatch& match) { return match.explained >= least_explained; });
+    std::vector<Hypothesis> shown = shown_of(matches, window);
+    if (matches.empty()) {
+        shown = two_together(faults, all, window);
+    } else if (const auto second = match_in_the_rest(faults, *first_shown(matches, shown), window.changes, rest_explained)) {
+        const bool known = std::any_of(shown.begin(), shown.end(), [&](const Hypothesis& one) { return one.fault == second->fault; });
+        if (!known) {
+            shown.push_back(made_from(*second, window));
+            shown.back().in_the_rest = true;
+        }
     }
-    if (!matches.empty())
-        if (auto second = second_cause(faults, matches.front(), window))
-            if (std::none_of(shown.begin(), shown.end(), [&](const Hypothesis& one) { return one.fault == second->fault; }))
-                shown.push_back(std::move(*second));
     for (std::size_t i = 0; i < shown.size(); ++i)
         shown[i].rank = static_cast<int>(i) + 1;
     return shown;
