@@ -71,9 +71,9 @@ Fault load_fault(const CatalogueTable& table, std::size_t row)
     return fault;
 }
 
-void set_large_levels(std::vector<Fault>& faults)
+void set_finer_levels(std::vector<Fault>& faults)
 {
-    const CatalogueTable table(catalogue_text::fault_large_levels);
+    const CatalogueTable table(catalogue_text::fault_finer_levels);
     for (std::size_t row = 0; row < table.rows(); ++row)
         for (Fault& fault : faults)
             if (fault.id == table.cell(row, "fault_id"))
@@ -94,7 +94,7 @@ std::vector<Fault> load_faults()
         fault.check_next = next_check(fault.id, {});
         faults.push_back(std::move(fault));
     }
-    set_large_levels(faults);
+    set_finer_levels(faults);
     return faults;
 }
 

@@ -10,7 +10,7 @@
 #include <vector>
 
 /// What faults do to readings, as data that can be edited without touching the program:
-/// resources/catalogue/fault_signatures.csv, fault_large_levels.csv, fault_words.csv, fault_noise.csv and
+/// resources/catalogue/fault_signatures.csv, fault_finer_levels.csv, fault_words.csv, fault_noise.csv and
 /// fault_pairs.csv.
 ///
 /// No size in there comes from a published table: they are common practice, computed from a plain cycle, or
@@ -56,7 +56,7 @@ struct Fault
     /// One a fault quantity: expected change in noise units at the reference size, from -3 ("3 or more") to 3.
     /// 0 is a statement (should not move), nothing is none.
     std::vector<std::optional<double>> levels;
-    /// The same, with the level itself where "3 or more" stands above and its size is known.
+    /// The same, with the level itself where "3 or more" or a rounded one stands above and more is known.
     std::vector<std::optional<double>> full_levels;
     std::string title, sets_apart, check_next;
 

@@ -85,6 +85,46 @@ Counts run(FaultRecipe recipe, std::size_t engines, std::uint64_t seed)
     return counts;
 }
 
+void print_over_all(const char* name, FaultRecipe recipe, std::size_t each, std::uint64_t seed, bool told_apart_only)
+{
+    Counts of;
+    std::size_t number = 0;
+    for (const std::string& fault : simulated_faults()) {
+        recipe.fault = fault;
+        ++number;
+        if (fault == "indicator_dead_centre" && recipe.cards == false)
+            continue; // says nothing without diagrams
+        for (std::size_t n = 0; n < each; ++n) {
+            const FaultTrial trial = simulate_fault(recipe, seed + 100'000 * number + n);
+            if (!told_apart_only || can_be_told_apart(trial))
+                of.add(judge_trial(trial));
+        }
+    }
+    print(name, of);
+}
+
+/// The share explained alone as the order, for comparison: at the same change, and whether or not it is claimed.
+void print_plain_ranking(std::size_t each, std::uint64_t seed)
+{
+    FaultRecipe recipe;
+    recipe.fewest_after = 6;
+    std::size_t first = 0, three = 0, trials = 0, number = 0;
+    for (const std::string& fault : simulated_faults()) {
+        recipe.fault = fault;
+        ++number;
+        for (std::size_t n = 0; n < each; ++n) {
+            const FaultTrial trial = simulate_fault(recipe, seed + 100'000 * number + n);
+            if (!can_be_told_apart(trial))
+                continue;
+            const int rank = rank_plainly(trial);
+            ++trials;
+            first += rank == 1 ? 1 : 0;
+            three += rank >= 1 && rank <= 3 ? 1 : 0;
+        }
+    }
+    std::printf("ordered by share explained   first %s  three %s\n", share(first, trials).c_str(), share(three, trials).c_str());
+}
+
 void print_sound(const char* name, FaultRecipe recipe, std::size_t engines, std::uint64_t seed)
 {
     std::size_t with_any = 0, subjects = 0, slips = 0;
@@ -134,7 +174,7 @@ int main(int count, char** arguments)
         recipe.unrecorded_work = true;
         print_sound("work left out of the events", recipe, sound, seed + 50'000);
     }
-    Counts all, with_cards, without;
+    Counts all;
     std::size_t number = 0;
     for (const std::string& fault : simulated_faults()) {
         ++number;
@@ -150,18 +190,18 @@ int main(int count, char** arguments)
     }
     print("all", all);
     for (const bool cards : {true, false}) {
-        Counts of;
-        number = 0;
-        for (const std::string& fault : simulated_faults()) {
-            ++number;
-            if (count > 4 || fault == "indicator_dead_centre")
-                continue;
-            FaultRecipe recipe;
-            recipe.fault = fault;
-            recipe.cards = cards;
-            of.add(run(recipe, each / 2, seed + 100'000 * number + 50'000));
-        }
-        if (of.trials > 0)
-            print(cards ? "all, with diagrams" : "all, peak gauge only", of);
+        FaultRecipe recipe;
+        recipe.cards = cards;
+        if (count <= 4)
+            print_over_all(cards ? "all, with diagrams" : "all, peak gauge only", recipe, each / 2, seed + 50'000, false);
+    }
+    FaultRecipe later;
+    later.fewest_after = 6;
+    if (count <= 4) {
+        print_over_all("all, six readings since", later, each, seed + 60'000, false);
+        print_over_all("those that can be told apart", later, each, seed + 60'000, true);
+        later.cards = later.gauges = true;
+        print_over_all("... everything read", later, each / 2, seed + 70'000, true);
+        print_plain_ranking(each / 2, seed + 60'000);
     }
 }

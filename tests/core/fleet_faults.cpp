@@ -5,6 +5,7 @@
 #include "tests/core/fleet_noise.h"
 
 #include "core/explanation/explanation.h"
+#include "core/explanation/hypotheses.h"
 #include "core/trend/deviations.h"
 
 #include <algorithm>
@@ -137,7 +138,7 @@ private:
         trial_.onset = 12 + dice_.below(13);
         const bool creeping = fault && (fault->course == Fault::Course::creeping || (fault->course == Fault::Course::any && dice_.chance(0.4)));
         trial_.ramp = creeping;
-        readings_ = trial_.onset + (creeping ? 6 + dice_.below(10) : 2 + dice_.below(11));
+        readings_ = trial_.onset + (creeping ? std::max<std::size_t>(recipe_.fewest_after, 6) + dice_.below(10) : recipe_.fewest_after + dice_.below(11));
         if (fault && !fault->of_engine)
             trial_.subject = Place::cylinder(1 + static_cast<int>(dice_.below(static_cast<std::size_t>(engine().cylinders))));
         draw_sizes(fault);
@@ -353,6 +354,44 @@ const std::vector<std::string>& simulated_faults()
 FaultTrial simulate_fault(const FaultRecipe& recipe, std::uint64_t seed)
 {
     return Trial(recipe, seed).run();
+}
+
+bool can_be_told_apart(const FaultTrial& trial)
+{
+    const auto read = [&](const char* name) {
+        const auto id = find_quantity(name);
+        const auto& values = trial.record->readings.back().values;
+        return std::any_of(values.begin(), values.end(), [&](const Value& value) { return value.quantity == *id; });
+    };
+    const std::string& fault = trial.fault;
+    if (fault == "liner_wear" || fault == "inlet_valve_leak")
+        return false;
+    if (fault == "indicator_zero" || fault == "indicator_gain")
+        return trial.cards;
+    if (fault == "exhaust_back_pressure_high" || fault == "turbine_efficiency_loss")
+        return read("exhaust_back_pressure");
+    return true;
+}
+
+int rank_plainly(const FaultTrial& trial)
+{
+    const Judgement judgement = judge(trial.record);
+    const SeriesMaker maker(judgement);
+    const bool of_engine = trial.subject.kind != Place::Kind::cylinder;
+    const SubjectSeries series = of_engine ? maker.engine({}) : maker.cylinder(trial.subject.number);
+    const auto faults = possible_faults(trial.record->engine, trial.subject, {});
+    const auto window = find_change(series, faults, 1);
+    if (!window)
+        return 0;
+    std::vector<std::pair<double, std::string>> ranked;
+    for (const Fault* fault : faults)
+        if (const auto match = match_plainly(*fault, window->changes); match && match->explained >= 0.5)
+            ranked.emplace_back(-match->explained * std::sqrt(match->coverage), fault->id);
+    std::sort(ranked.begin(), ranked.end());
+    for (std::size_t i = 0; i < ranked.size(); ++i)
+        if (ranked[i].second == trial.fault)
+            return static_cast<int>(i) + 1;
+    return 0;
 }
 
 FaultOutcome judge_trial(const FaultTrial& trial)

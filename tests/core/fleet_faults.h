@@ -27,6 +27,7 @@ struct FaultRecipe
     std::optional<bool> cards;     ///< whether diagrams are taken; nothing: half of the engines
     std::optional<bool> gauges;    ///< whether filter drop, back pressure and the like are read; nothing: most of them
     double size = 1.0;             ///< times the usual size
+    std::size_t fewest_after = 2;  ///< readings with the fault in them, at least; 11 more at most
     bool unrecorded_work = false;  ///< one cylinder takes new levels without an event, a year before the end
 };
 
@@ -55,5 +56,13 @@ struct FaultOutcome
     double explained = 0.0;
 };
 FaultOutcome judge_trial(const FaultTrial& trial);
+
+/// Whether what the readings of this engine hold can tell the fault from every other of the list: a worn liner is
+/// weak rings and a leaking inlet valve is leaking rings, a zero of a peak gauge is its gain, and back pressure without
+/// its gauge is a tired turbine.
+bool can_be_told_apart(const FaultTrial& trial);
+
+/// Rank of the true cause by the share explained times the root of the coverage, at the same change; 0: below a half.
+int rank_plainly(const FaultTrial& trial);
 
 } // namespace evenstroke::simulation
