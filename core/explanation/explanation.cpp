@@ -14,10 +14,12 @@
 namespace evenstroke {
 namespace {
 
-/// Standard deviations of the strongest sign from which something is called out of the usual, and with a standing
-/// flag of the drift method. Settled by simulation of sound engines (tests/core/fault_statistics_test.cpp).
-constexpr double claim_from = 4.2, claim_with_flag_from = 3.0;
-constexpr double claim_one_reading_from = 6.0; ///< one reading may be odd by itself
+/// From which evidence on something is called out of the usual: logarithm of how much likelier some fault makes the
+/// pattern than nothing does, or, for a pattern that no fault has, standard deviations of the strongest sign. Settled
+/// by simulation of sound engines (tests/core/fault_statistics_test.cpp).
+constexpr double claim_from = 5.8, claim_without_fault_from = 5.2;
+constexpr double claim_one_reading_from = 6.0; ///< standard deviations: one reading may be odd by itself
+constexpr double claim_with_flag_from = 3.0;   ///< standard deviations, where a flag of the drift method stands
 /// After so many readings an unanswered question about work is taken as work done, as the drift method takes it.
 constexpr std::size_t question_lasts = 12;
 constexpr double misread_from = 4.0, others_below = 1.5; ///< noise units, of one value that stands alone
@@ -99,6 +101,18 @@ private:
         return question && last - question->reading > question_lasts ? question->carrying.front() + level_needs : 1;
     }
 
+    static bool is_out_of_usual(std::span<const Fault* const> faults, const ChangeWindow& window, bool flagged)
+    {
+        if (flagged)
+            return window.strength >= claim_with_flag_from;
+        if (window.readings == 1)
+            return window.strength >= claim_one_reading_from;
+        if (window.strength >= claim_without_fault_from)
+            return true;
+        const auto matches = match_faults(faults, window.changes);
+        return !matches.empty() && matches.front().log_weight >= claim_from;
+    }
+
     /// @return whether it is out of the usual
     bool look_at(const SubjectSeries& series)
     {
@@ -106,9 +120,7 @@ private:
         const auto window = find_change(series, faults, earliest_onset(series.subject));
         comparable_ = comparable_ || window.has_value();
         const Flag* flag = standing_drift(judgement_, series.subject);
-        if (!window || window->strength < (flag                    ? claim_with_flag_from
-                                           : window->readings == 1 ? claim_one_reading_from
-                                                                   : claim_from))
+        if (!window || !is_out_of_usual(faults, *window, flag != nullptr))
             return false;
         SubjectExplanation subject;
         subject.subject = series.subject;
