@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/batch/command.h"
+#include "app/batch/explain_command.h"
 #include "app/batch/history_commands.h"
 #include "app/batch/judging_commands.h"
 #include "app/batch/report_command.h"
@@ -25,6 +26,11 @@ const std::vector<Command>& all_commands()
          run_evaluate},
         {"flags", "a row each time a flag or a question starts", nullptr, {history, vessel, engine, format}, run_flags},
         {"doubts", "what looks mistyped", nullptr, {history, vessel, engine, format}, run_doubts},
+        {"explain", "what may lie behind a reading that is out of the usual: possible causes, what fits, what speaks against",
+         nullptr,
+         {history, {"engine", "E", "the engine", true}, vessel, {"reading", "R", "this reading; the newest where nothing is said"},
+          {"format", "text|csv|json", "how it is written; text where nothing is said"}},
+         run_explain, "the engine or the reading is not there, or several are meant"},
         {"report", "the survey report of one engine as PDF",
          nullptr,
          {history, {"engine", "E", "the engine", true}, vessel, {"from", "D", "first day, 2026-01-31", true},

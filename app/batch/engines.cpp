@@ -55,6 +55,23 @@ Result<std::vector<storage::EngineEntry>> chosen_engines(storage::History& histo
     return chosen;
 }
 
+Result<storage::EngineEntry> chosen_engine(storage::History& history, const QCommandLineParser& parser)
+{
+    const auto chosen = chosen_engines(history, parser);
+    if (!chosen.has_value())
+        return chosen.error();
+    const std::string name = parser.value(QStringLiteral("engine")).toStdString();
+    if (chosen.value().empty())
+        return Problem{Problem::Kind::not_found, not_held(parser.value(QStringLiteral("vessel")).toStdString(), name),
+                       "Take the files of an engine in first."};
+    if (chosen.value().size() == 1)
+        return chosen.value().front();
+    std::string vessels;
+    for (const storage::EngineEntry& entry : chosen.value())
+        vessels += (vessels.empty() ? " " : "; ") + entry.vessel_name;
+    return invalid_input("Several vessels have an engine \"" + name + "\":" + vessels + ".", "Name one with --vessel.");
+}
+
 Result<void> for_each_judgement(storage::History& history, const std::vector<storage::EngineEntry>& engines,
                                 Streams& streams, const std::function<void(const Judgement&)>& use)
 {

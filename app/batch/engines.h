@@ -20,6 +20,10 @@ Result<std::unique_ptr<storage::History>> open_history(const QCommandLineParser&
 /// @par Problems not_found: no such vessel or engine, with those there are
 Result<std::vector<storage::EngineEntry>> chosen_engines(storage::History& history, const QCommandLineParser& parser);
 
+/// The one engine meant by `--engine` and `--vessel`.
+/// @par Problems not_found: there is none, with those there are; invalid_input: several, with their vessels
+Result<storage::EngineEntry> chosen_engine(storage::History& history, const QCommandLineParser& parser);
+
 /// Judges engine after engine and hands each judgement on. Answers the first problem.
 Result<void> for_each_judgement(storage::History& history, const std::vector<storage::EngineEntry>& engines,
                                 Streams& streams, const std::function<void(const Judgement&)>& use);

@@ -45,17 +45,10 @@ int run_report(const QCommandLineParser& parser, Streams& streams)
     auto history = open_history(parser);
     if (!history.has_value())
         return refuse(streams, history.error());
-    const auto engines = chosen_engines(*history.value(), parser);
-    if (!engines.has_value())
-        return refuse(streams, engines.error());
-    if (engines.value().size() != 1) {
-        streams.err << "Several vessels have an engine \"" << parser.value(QStringLiteral("engine")) << "\":";
-        for (const storage::EngineEntry& entry : engines.value())
-            streams.err << " " << QString::fromStdString(entry.vessel_name) << ";";
-        streams.err << " name one with --vessel.\n";
-        return data_refused;
-    }
-    const auto sources = load_report_sources(*history.value(), engines.value().front().id);
+    const auto engine = chosen_engine(*history.value(), parser);
+    if (!engine.has_value())
+        return refuse(streams, engine.error());
+    const auto sources = load_report_sources(*history.value(), engine.value().id);
     if (!sources.has_value())
         return refuse(streams, sources.error());
     ReportDetails details = sources.value().details;

@@ -1,0 +1,175 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/batch/explain_command.h"
+
+#include "app/batch/engines.h"
+#include "app/batch/table_output.h"
+#include "core/explanation/cautions.h"
+#include "core/explanation/explanation.h"
+#include "core/sentence_words.h"
+#include "core/trend/flag_text.h"
+#include "storage/engine_record.h"
+
+#include <cmath>
+
+namespace evenstroke::batch {
+namespace {
+
+using Cell = TableOutput::Cell;
+
+std::string subject_cell(const Engine& engine, const Place& subject)
+{
+    return subject.kind == Place::Kind::cylinder ? "cylinder " + engine.cylinder_name(subject.number) : std::string("engine");
+}
+
+/// A thousandth is more than the share explained can be held to.
+Cell share_cell(std::optional<double> share)
+{
+    return share ? Cell(std::round(*share * 1000.0) / 1000.0) : Cell();
+}
+
+void write_rows(TableOutput& table, const Explanation& explanation)
+{
+    const EngineRecord& record = *explanation.record;
+    for (const SubjectExplanation& subject : explanation.subjects) {
+        const auto row = [&](double rank, Cell cause, Cell explained, Cell urgency) {
+            const auto& time = subject.time_to_limit;
+            table.row({record.vessel.name, record.engine.name, record.readings[*explanation.reading].name,
+                       subject_cell(record.engine, subject.subject), rank, std::move(cause), std::move(explained),
+                       std::move(urgency), subject.limit_quantity ? Cell(quantity(*subject.limit_quantity).name) : Cell(),
+                       TableOutput::number(time ? time->months_5 : std::nullopt),
+                       TableOutput::number(time ? time->months_50 : std::nullopt),
+                       TableOutput::number(time ? time->months_95 : std::nullopt)});
+        };
+        for (const Hypothesis& cause : subject.causes)
+            row(cause.rank, cause.fault->id, share_cell(cause.explained), urgency_word(cause.fault->urgency));
+        if (subject.causes.empty() && !subject.history.empty())
+            row(0, Cell(), Cell(), Cell()); // out of its usual, and like no fault on the list
+    }
+}
+
+void write_lines(QTextStream& out, const char* lead, const std::vector<std::string>& lines)
+{
+    for (const std::string& line : lines)
+        out << "     " << lead << ": " << QString::fromStdString(line) << "\n";
+}
+
+void write_line(QTextStream& out, const char* lead, const std::string& line)
+{
+    if (!line.empty())
+        write_lines(out, lead, {line});
+}
+
+void write_cautions(QTextStream& out, const std::vector<std::string>& names)
+{
+    for (const std::string& name : names)
+        if (const Caution* caution = find_caution(name))
+            write_line(out, "caution", caution->title + ". " + caution->short_text + " " + caution->authority);
+}
+
+void write_cause(QTextStream& out, const Hypothesis& cause)
+{
+    out << "  " << cause.rank << ". " << QString::fromStdString(cause.what);
+    if (cause.explained)
+        out << " (" << static_cast<int>(std::lround(100.0 * *cause.explained)) << " % of the pattern)";
+    out << "\n";
+    write_lines(out, "fits", cause.fits);
+    write_lines(out, "speaks against", cause.against);
+    if (!cause.not_read.empty())
+        write_line(out, "not read", comma_list(cause.not_read));
+    write_line(out, "course", cause.course);
+    write_line(out, "sets it apart", cause.fault->sets_apart);
+    write_line(out, "check next", cause.check_next);
+    write_line(out, "urgency", urgency_word(cause.fault->urgency) + ": " + cause.urgency);
+    write_cautions(out, cause.cautions);
+}
+
+std::string months_words(const std::optional<double>& months)
+{
+    return months ? two_digits(*months) : std::string("more than 120");
+}
+
+void write_subject(QTextStream& out, const SubjectExplanation& subject)
+{
+    out << "\n" << QString::fromStdString(subject.answer);
+    if (!subject.history.empty())
+        out << " " << QString::fromStdString(subject.history);
+    out << "\n";
+    if (!subject.moved.empty())
+        out << "  Moved: " << QString::fromStdString(comma_list(subject.moved)) << ".\n";
+    for (const std::string& remark : subject.remarks)
+        out << "  " << QString::fromStdString(remark) << "\n";
+    write_cautions(out, subject.cautions);
+    if (!subject.cannot_tell.empty())
+        out << "  " << QString::fromStdString(subject.cannot_tell) << "\n";
+    if (subject.time_to_limit && subject.limit_quantity)
+        out << "  If it goes on, " << QString::fromStdString(lower_first(quantity(*subject.limit_quantity).title))
+            << " reaches " << QString::fromStdString(subject.time_to_limit->limit_text) << " in "
+            << QString::fromStdString(months_words(subject.time_to_limit->months_50)) << " months (5 % to 95 %: "
+            << QString::fromStdString(months_words(subject.time_to_limit->months_5)) << " to "
+            << QString::fromStdString(months_words(subject.time_to_limit->months_95)) << ").\n";
+    for (const Hypothesis& cause : subject.causes)
+        write_cause(out, cause);
+}
+
+void write_text(QTextStream& out, const Explanation& explanation)
+{
+    const EngineRecord& record = *explanation.record;
+    out << QString::fromStdString(record.vessel.name) << ", " << QString::fromStdString(record.engine.name) << "\n"
+        << QString::fromStdString(explanation.sentence) << "\n";
+    for (const SubjectExplanation& subject : explanation.subjects)
+        write_subject(out, subject);
+    if (!explanation.subjects.empty())
+        out << "\nThese are possible causes, not findings: the people on board, the maker and the class society decide.\n";
+    out.flush();
+}
+
+/// The record up to the reading that is meant; nothing where it has none of this name.
+std::shared_ptr<const EngineRecord> up_to_reading(const std::shared_ptr<const EngineRecord>& record, const QString& name)
+{
+    if (name.isEmpty())
+        return record;
+    for (std::size_t i = 0; i < record->readings.size(); ++i)
+        if (QString::fromStdString(record->readings[i].name) == name)
+            return std::make_shared<const EngineRecord>(record_until(*record, i));
+    return nullptr;
+}
+
+} // namespace
+
+int run_explain(const QCommandLineParser& parser, Streams& streams)
+{
+    const QString format = parser.value(QStringLiteral("format"));
+    const bool as_text = format.isEmpty() || format == QStringLiteral("text");
+    if (!as_text && format != QStringLiteral("csv") && format != QStringLiteral("json")) {
+        streams.err << "\"" << format << "\" is no format. Use --format text, --format csv or --format json.\n";
+        return wrong_use;
+    }
+    auto history = open_history(parser);
+    if (!history.has_value())
+        return refuse(streams, history.error());
+    const auto engine = chosen_engine(*history.value(), parser);
+    if (!engine.has_value())
+        return refuse(streams, engine.error());
+    const auto loaded = storage::load_record(*history.value(), engine.value().id);
+    if (!loaded.has_value())
+        return refuse(streams, loaded.error());
+    const QString wanted = parser.value(QStringLiteral("reading"));
+    const auto record = up_to_reading(loaded.value().record, wanted);
+    if (!record) {
+        streams.err << "The engine has no reading \"" << wanted << "\". Leave --reading out for the newest.\n";
+        return data_refused;
+    }
+    const Explanation explanation = explain(judge(record));
+    if (as_text) {
+        write_text(streams.out, explanation);
+        return done;
+    }
+    TableOutput table(streams, format == QStringLiteral("json") ? TableOutput::Format::json : TableOutput::Format::csv,
+                      {"vessel", "engine", "reading", "subject", "rank", "cause", "explained", "urgency", "limit_quantity",
+                       "months_5", "months_50", "months_95"});
+    write_rows(table, explanation);
+    table.finish();
+    return done;
+}
+
+} // namespace evenstroke::batch
