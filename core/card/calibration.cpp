@@ -50,7 +50,7 @@ private:
     void find_slopes(const Unknowns& x, bool held_too);
     void find_weights(const Unknowns& x);
     std::optional<LeastSquares<unknown_count>::Solution> solve(const Unknowns& x) const;
-    void carry_held(Calibration& found) const;
+    void widen_and_carry(Calibration& found) const;
 
     const Cylinder& cylinder_;
     const WallLoss& walls_;
@@ -105,10 +105,16 @@ std::optional<LeastSquares<unknown_count>::Solution> Fit::solve(const Unknowns& 
     return rows.solve();
 }
 
-/// The spread of what is held moves what is free: δ free = -C Aᵀ W slope δ held.
-void Fit::carry_held(Calibration& found) const
+/// Where the samples scatter more than noise and model say, or the beliefs are strained, the samples say less of the
+/// unknowns. The spread of what is held moves what is free: δ free = -C Aᵀ W slope δ held.
+void Fit::widen_and_carry(Calibration& found) const
 {
+    constexpr double usual_strain = 3.0;
     const UnknownCovariance own = found.covariance;
+    const double widen = std::max({1.0, found.misfit * found.misfit, found.strain / usual_strain});
+    for (auto& row : found.covariance)
+        for (double& entry : row)
+            entry *= widen;
     for (std::size_t held = 0; held < unknown_count; ++held) {
         if (free(held) || !counts(held))
             continue;
@@ -162,13 +168,13 @@ std::optional<Calibration> Fit::run(const Unknowns& start)
         squares += residual * residual;
     }
     found.misfit = std::sqrt(squares / static_cast<double>(f_.size()));
-    // Where the samples scatter more than noise and model say, they say less of the unknowns.
-    const double widen = std::max(1.0, found.misfit * found.misfit);
-    for (auto& row : found.covariance)
-        for (double& entry : row)
-            entry *= widen;
+    for (std::size_t unknown = 0; unknown < unknown_count; ++unknown)
+        if (free(unknown) && beliefs_[unknown].spread) {
+            const double away = (found.values[unknown] - beliefs_[unknown].mean) / *beliefs_[unknown].spread;
+            found.strain += away * away;
+        }
     find_slopes(found.values, true);
-    carry_held(found);
+    widen_and_carry(found);
     return found;
 }
 

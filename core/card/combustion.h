@@ -45,8 +45,12 @@ struct HeatInputs
     double wall_multiplier = 1.0;
     int rounds = 4;                          ///< of working out the burnt fuel
     const std::vector<double>* known_fuel = nullptr; ///< taken instead of the first round's none
+    double expansion_drift = 0.0;            ///< bar taken off the expansion as far as the flame has heated
     std::optional<Range> samples = {};         ///< of the closed part, where another offset must not change them
 };
+
+/// How far a flame that began at dead centre has heated the transducer, 0 to 1 (common practice, no source).
+double hot_share(double true_angle);
 
 inline constexpr double fuel_heat = 42.7e6; ///< J/kg, only for the burnt fuel's mass (common practice)
 

@@ -6,6 +6,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <numeric>
 
 namespace evenstroke::indicator {
 namespace {
@@ -39,6 +40,28 @@ double smoothed(std::span<const double> p, std::size_t at, std::size_t m)
         sum += p[i] * (s4 - s2 * from * from);
     }
     return sum / (n * s4 - s2 * s2);
+}
+
+/// Vertex of the parabola through the samples around one of them.
+std::optional<Peak> vertex(std::span<const double> angle, std::span<const double> pressure, double noise, std::size_t top,
+                           std::size_t half)
+{
+    const auto around = [&](std::span<const double> all) { return all.subspan(top - half, 2 * half + 1); };
+    const auto fit = fit_parabola(around(angle), around(pressure), angle[top]);
+    if (!fit || !std::isfinite(fit->constant))
+        return std::nullopt;
+    const double step = (angle.back() - angle.front()) / static_cast<double>(angle.size() - 1);
+    const double count = 2.0 * static_cast<double>(half) + 1.0;
+    const double squares = step * step * static_cast<double>(half * (half + 1)) * count / 3.0;
+    Peak peak{pressure[top], angle[top], 1.5 * noise / std::sqrt(count), 2.0 * step};
+    if (fit->square < 0.0) {
+        peak.angle = angle[top] + std::clamp(-0.5 * fit->linear / fit->square, -2.0, 2.0);
+        peak.angle_spread = noise / std::sqrt(squares) / (2.0 * std::abs(fit->square));
+        // The square of the slope's noise always lifts the vertex.
+        peak.pressure = fit->at(peak.angle) - std::min(std::abs(fit->square) * peak.angle_spread * peak.angle_spread,
+                                                       peak.pressure_spread);
+    }
+    return peak;
 }
 
 } // namespace
@@ -104,20 +127,22 @@ std::optional<Peak> find_peak(std::span<const double> angle, std::span<const dou
     const std::size_t half = std::max<std::size_t>(m, 2);
     if (top < half || top + half >= angle.size())
         return std::nullopt;
-    const auto around = [&](std::span<const double> all) { return all.subspan(top - half, 2 * half + 1); };
-    const auto fit = fit_parabola(around(angle), around(pressure), angle[top]);
-    if (!fit || !std::isfinite(fit->constant))
-        return std::nullopt;
-    const double count = 2.0 * static_cast<double>(half) + 1.0;
-    const double squares = step * step * static_cast<double>(half * (half + 1)) * count / 3.0;
-    Peak peak{pressure[top], angle[top], 1.5 * noise / std::sqrt(count), 2.0 * step};
-    if (fit->square < 0.0) {
-        const double vertex = std::clamp(-0.5 * fit->linear / fit->square, -2.0, 2.0);
-        peak.angle = angle[top] + vertex;
-        peak.pressure = fit->at(peak.angle);
-        peak.angle_spread = noise / std::sqrt(squares) / (2.0 * std::abs(fit->square));
+    return vertex(angle, pressure, noise, top, half);
+}
+
+std::optional<Peak> find_peak_near(std::span<const double> angle, std::span<const double> pressure, double noise,
+                                   double near)
+{
+    constexpr double too_far = 1.5; // degrees
+    const double step = (angle.back() - angle.front()) / static_cast<double>(angle.size() - 1);
+    const auto half = static_cast<std::size_t>(std::max(2.0, std::round(2.0 / step)));
+    const auto top = static_cast<std::ptrdiff_t>(std::llround((near - angle.front()) / step));
+    if (top >= static_cast<std::ptrdiff_t>(half) && top + static_cast<std::ptrdiff_t>(half) < static_cast<std::ptrdiff_t>(angle.size())) {
+        const auto peak = vertex(angle, pressure, noise, static_cast<std::size_t>(top), half);
+        if (peak && std::abs(peak->angle - near) <= too_far)
+            return peak;
     }
-    return peak;
+    return find_peak(angle, pressure, noise);
 }
 
 std::optional<double> local_pressure(std::span<const double> angle, std::span<const double> pressure, double at,
@@ -130,19 +155,26 @@ std::optional<double> local_pressure(std::span<const double> angle, std::span<co
     return fit->constant;
 }
 
-std::optional<double> steepest_rise(std::span<const double> angle, std::span<const double> pressure, double step)
+std::optional<Rise> steepest_rise(std::span<const double> angle, std::span<const double> pressure, double step,
+                                  double noise)
 {
-    const int m = std::max(2, static_cast<int>(std::lround(1.0 / step)));
-    const std::vector<double> weights = cubic_slope_weights(m, step);
+    constexpr double quiet = 0.06; // bar a degree of noise that the narrow window may leave
+    int m = std::max(2, static_cast<int>(std::lround(1.0 / step)));
+    std::vector<double> weights = cubic_slope_weights(m, step);
+    const auto noise_of = [&] {
+        return noise * std::sqrt(std::inner_product(weights.begin(), weights.end(), weights.begin(), 0.0));
+    };
+    if (step < 0.9 && noise_of() > quiet) {
+        m = std::max(3, static_cast<int>(std::lround(2.0 / step)));
+        weights = cubic_slope_weights(m, step);
+    }
     const Range range = samples_within(angle, -40.0, 40.0);
-    std::optional<double> steepest;
+    std::optional<Rise> steepest;
     const auto width = static_cast<std::size_t>(m);
     for (std::size_t i = std::max(range.first, width); i < range.first + range.count && i + width < angle.size(); ++i) {
-        double slope = 0.0;
-        for (std::size_t k = 0; k < weights.size(); ++k)
-            slope += weights[k] * pressure[i - width + k];
-        if (std::isfinite(slope) && (!steepest || slope > *steepest))
-            steepest = slope;
+        const double slope = std::inner_product(weights.begin(), weights.end(), pressure.begin() + static_cast<std::ptrdiff_t>(i - width), 0.0);
+        if (std::isfinite(slope) && (!steepest || slope > steepest->value))
+            steepest = Rise{slope, noise_of()};
     }
     return steepest;
 }

@@ -24,16 +24,27 @@ struct Peak
     double pressure = 0.0, angle = 0.0;             ///< vertex of a parabola within ±2° of the smoothed maximum
     double pressure_spread = 0.0, angle_spread = 0.0; ///< one standard deviation, from the noise alone
 };
-/// @param from,to where the maximum is looked for  @return nothing where there are too few samples
+/// The vertex freed of what noise adds to it. @param from,to where the maximum is looked for
+/// @return nothing where there are too few samples
 std::optional<Peak> find_peak(std::span<const double> angle, std::span<const double> pressure, double noise,
                               double from = -1e9, double to = 1e9);
+
+/// The same round a place that is known already, as from the mean of many cycles: the noise of one cycle then has no
+/// choice of places. Looks elsewhere where the vertex is over 1.5° away.
+std::optional<Peak> find_peak_near(std::span<const double> angle, std::span<const double> pressure, double noise,
+                                   double near);
 
 /// Pressure at an angle from a parabola through the samples within ±`half_width`.
 std::optional<double> local_pressure(std::span<const double> angle, std::span<const double> pressure, double at,
                                      double half_width);
 
-/// Steepest rise within -40 to 40°, bar a degree: slope of a cubic 2° wide (4° where the samples are 1° apart).
-std::optional<double> steepest_rise(std::span<const double> angle, std::span<const double> pressure, double step);
+struct Rise
+{
+    double value = 0.0, spread = 0.0; ///< bar a degree; one standard deviation from the noise
+};
+/// Steepest rise within -40 to 40°: slope of a cubic 2° wide, 4° where the samples are 1° apart or noisy.
+std::optional<Rise> steepest_rise(std::span<const double> angle, std::span<const double> pressure, double step,
+                                  double noise);
 
 /// Polytropic exponent: straight line of ln(p - zero) over ln V between two true angles.
 std::optional<double> polytropic_exponent(const SliderCrank& gear, double clearance, std::span<const double> angle,

@@ -25,7 +25,8 @@ ClosedSamples take_closed(const Cylinder& cylinder, const Unknowns& x, const Hea
         const double angle = inputs.angle[i] - x[offset];
         const double position = cylinder.gear.position(angle * radians_per_degree);
         samples.angle.push_back(angle);
-        samples.pressure.push_back(std::max(inputs.pressure[i] - zero_at(cylinder, x, angle), 0.2) * 1e5);
+        const double off = zero_at(cylinder, x, angle) + inputs.expansion_drift * hot_share(angle);
+        samples.pressure.push_back(std::max(inputs.pressure[i] - off, 0.2) * 1e5);
         samples.position.push_back(position);
         samples.volume.push_back(clearance + cylinder.gear.area() * position);
     }
@@ -114,6 +115,8 @@ void find_temperatures(HeatRelease& heat)
 }
 
 } // namespace
+
+double hot_share(double true_angle) { return true_angle > 0.0 ? 1.0 - std::exp(-true_angle / 25.0) : 0.0; }
 
 std::optional<HeatRelease> release_heat(const Cylinder& cylinder, const WallLoss& walls, const Unknowns& x,
                                         const HeatInputs& inputs)

@@ -30,8 +30,10 @@ void read_peaks(const CleanTrace& trace, DirectReadings& direct)
 {
     Peak mean;
     double count = 0.0;
+    const auto common = find_peak(trace.angle, trace.mean, trace.noise_mean);
     for (const Cycle& cycle : trace.cycles) {
-        const auto peak = find_peak(trace.angle, cycle.pressure, trace.noise_one);
+        const auto peak = common ? find_peak_near(trace.angle, cycle.pressure, trace.noise_one, common->angle)
+                                 : find_peak(trace.angle, cycle.pressure, trace.noise_one);
         direct.maxima.push_back(peak ? peak->pressure : std::nan(""));
         const bool unlike = std::find(trace.unlike_cycles.begin(), trace.unlike_cycles.end(), cycle.number) !=
                             trace.unlike_cycles.end();
@@ -77,7 +79,7 @@ void fill_readings(Evaluation& card, const Engine& engine, const SliderCrank& ge
             std::hypot(offset_deviation, direct.peak->angle_spread));
     }
     if (direct.rise)
-        put(card, CardResult::pressure_rise, *direct.rise, 0.3);
+        put(card, CardResult::pressure_rise, direct.rise->value, std::hypot(direct.rise->spread, 0.2));
     const double at = engine.expansion_angle_deg;
     const auto there = local_pressure(thin.angle, thin.pressure, at + moved, 2.0);
     const auto later = local_pressure(thin.angle, thin.pressure, at + moved + 1.0, 2.0);
@@ -131,7 +133,7 @@ DirectReadings read_directly(Evaluation& card, const SliderCrank& gear)
     if (std::all_of(direct.work.begin(), direct.work.end(), [](double w) { return std::isfinite(w); }))
         average(trace, direct.work);
     read_peaks(trace, direct);
-    direct.rise = steepest_rise(trace.angle, trace.mean, trace.step);
+    direct.rise = steepest_rise(trace.angle, trace.mean, trace.step, trace.noise_mean);
     card.plain_mean_indicated = mean_indicated(gear, trace, 0.0);
     card.plain_maximum = direct.peak ? direct.peak->pressure : std::nan("");
     if (trace.cycles.size() > 1)

@@ -100,7 +100,8 @@ void remark_on_combustion(Evaluation& card, const SelfCalibration& found)
         return;
     }
     const double start = found.start->start;
-    if (card.firing_peak) {
+    constexpr double well_after = 4.0; // degrees from the compression's peak
+    if (card.firing_peak && start > card[CardResult::maximum_pressure_angle]->value + well_after) {
         card.remarks.push_back(make_remark("maximum_not_from_combustion",
                                            {shown(start), shown(card.firing_peak->pressure), shown(card.firing_peak->angle)},
                                            card.firing_peak->angle));

@@ -11,8 +11,8 @@ namespace {
 
 constexpr double expansion_half_width = 2.0; // degrees
 constexpr double wall_spread = 0.35;         // of the film formula's wall loss (common practice, no source)
-constexpr double drift_of_work = 0.10;       // bar of mean indicated pressure from a zero that moves within the cycle
-constexpr double drift_of_expansion = 0.06;  // bar
+constexpr double hot_drift = 0.13;           // bar by which the flame may move the zero (common practice, no source)
+constexpr double drift_of_work = 0.09;       // bar of mean indicated pressure from a zero that moves within the cycle
 constexpr double coverage = 2.0;             // JCGM 100: half-width at 95 % over the standard uncertainty
 
 /// How far each unknown is moved for a difference quotient.
@@ -41,7 +41,7 @@ double mean_indicated(const SliderCrank& gear, const CleanTrace& clean, double r
     return sum / static_cast<double>(clean.cycles.size());
 }
 
-Numbers ResultMaker::at(const Unknowns& x, double wall_multiplier, const HeatRelease* base,
+Numbers ResultMaker::at(const Unknowns& x, const Beside& beside, const HeatRelease* base,
                         std::optional<HeatRelease>& heat) const
 {
     const Cylinder& cylinder = setting_.cylinder;
@@ -56,7 +56,8 @@ Numbers ResultMaker::at(const Unknowns& x, double wall_multiplier, const HeatRel
     }
     const double expansion = engine_.expansion_angle_deg;
     if (const auto p = local_pressure(thin_.angle, thin_.pressure, expansion + x[offset], expansion_half_width))
-        set(CardResult::expansion_pressure, *p - zero_at(cylinder, x, expansion));
+        set(CardResult::expansion_pressure,
+            *p - zero_at(cylinder, x, expansion) - beside.expansion_drift * hot_share(expansion));
     const CompressionWindow window = make_window(thin_, found_.closing_pressure, found_.fit.values[offset],
                                                  found_.window_from, found_.window_to);
     const LineEnd end = line_end(cylinder, walls_, window, x);
@@ -67,7 +68,8 @@ Numbers ResultMaker::at(const Unknowns& x, double wall_multiplier, const HeatRel
     const double mass = trapped_mass(cylinder, found_.closing_pressure, x);
     set(CardResult::trapped_mass, mass);
     const double kept = x[offset] - found_.fit.values[offset]; // what was recorded stays where it was
-    HeatInputs inputs{thin_.angle, thin_.pressure, mass, std::nullopt, wall_multiplier};
+    HeatInputs inputs{thin_.angle, thin_.pressure, mass, std::nullopt, beside.wall_multiplier};
+    inputs.expansion_drift = beside.expansion_drift;
     if (found_.start) {
         inputs.start = found_.start->start - kept;
         set(CardResult::start_of_combustion, *inputs.start);
@@ -91,10 +93,11 @@ Numbers ResultMaker::at(const Unknowns& x, double wall_multiplier, const HeatRel
 
 Numbers ResultMaker::numbers(std::optional<HeatRelease>& heat) const
 {
-    Numbers numbers = at(found_.fit.values, 1.0, nullptr, heat);
+    Numbers numbers = at(found_.fit.values, {}, nullptr, heat);
     numbers[index(CardResult::mean_indicated_pressure)] =
         mean_indicated(setting_.cylinder.gear, clean_, found_.fit.values[offset]);
-    numbers[index(CardResult::pressure_rise)] = direct_.rise;
+    if (direct_.rise)
+        numbers[index(CardResult::pressure_rise)] = direct_.rise->value;
     return numbers;
 }
 
@@ -114,9 +117,14 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     if (result == CardResult::mean_indicated_pressure)
         squares += drift_of_work * drift_of_work;
     if (result == CardResult::expansion_pressure)
-        squares += drift_of_expansion * drift_of_expansion + thin_.noise * thin_.noise / 4.0;
-    if (result == CardResult::pressure_rise)
-        squares += 0.5 * clean_.noise_mean * clean_.noise_mean / (clean_.step * std::max(2.0, 2.0 / clean_.step));
+        squares += thin_.noise * thin_.noise / 4.0;
+    if (result == CardResult::pressure_rise && direct_.rise)
+        squares += direct_.rise->spread * direct_.rise->spread;
+    if (result == CardResult::start_of_combustion && !found_.line_log.empty()) {
+        // ln p rises by about 0.02 a degree where the start is laid back from (common practice).
+        const double share = thin_.noise / std::exp(found_.line_log.front()) / 0.02;
+        squares += 0.25 * share * share;
+    }
     return std::sqrt(squares);
 }
 
@@ -132,7 +140,7 @@ Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat) const
         Unknowns moved = values;
         moved[unknown] += moved_by[unknown];
         std::optional<HeatRelease> ignored;
-        Numbers there = at(moved, 1.0, heat ? &*heat : nullptr, ignored);
+        Numbers there = at(moved, {}, heat ? &*heat : nullptr, ignored);
         if (unknown == offset)
             there[index(CardResult::mean_indicated_pressure)] =
                 *middle[index(CardResult::mean_indicated_pressure)] +
@@ -143,14 +151,17 @@ Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat) const
                 slopes[i][unknown] = (*there[i] - *middle[i]) / moved_by[unknown];
     }
     std::optional<HeatRelease> ignored;
-    const Numbers walls = at(values, 1.0 + wall_spread, heat ? &*heat : nullptr, ignored);
+    const HeatRelease* base = heat ? &*heat : nullptr;
+    const Numbers walls = at(values, {1.0 + wall_spread, 0.0}, base, ignored);
+    const Numbers drifted = at(values, {1.0, hot_drift}, base, ignored);
     Estimates estimates;
     for (std::size_t i = 0; i < result_count; ++i) {
         if (!middle[i] || !std::isfinite(*middle[i]))
             continue;
         const double own = own_spread(static_cast<CardResult>(i), *middle[i]).value_or(0.0);
         const double wall = walls[i] ? *walls[i] - *middle[i] : 0.0;
-        double variance = own * own + wall * wall;
+        const double hot = drifted[i] ? *drifted[i] - *middle[i] : 0.0;
+        double variance = own * own + wall * wall + hot * hot;
         for (std::size_t a = 0; a < unknown_count; ++a)
             for (std::size_t b = 0; b < unknown_count; ++b)
                 variance += slopes[i][a] * covariance[a][b] * slopes[i][b];

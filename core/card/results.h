@@ -12,7 +12,7 @@ struct DirectReadings
     std::vector<double> maxima;         ///< of each cycle, bar as recorded
     std::optional<Peak> peak;           ///< means over the cycles, as recorded
     double maximum_spread = 0.0;        ///< standard deviation of one cycle's maximum
-    std::optional<double> rise;         ///< bar a degree
+    std::optional<Rise> rise;
     std::optional<Peak> firing_peak;    ///< as recorded, where the largest pressure is that of compression
 };
 
@@ -31,7 +31,12 @@ public:
     Estimates estimate(std::optional<HeatRelease>& heat) const;
 
 private:
-    Numbers at(const Unknowns& x, double wall_multiplier, const HeatRelease* base, std::optional<HeatRelease>& heat) const;
+    /// What is not among the unknowns of the compression and moves results all the same.
+    struct Beside
+    {
+        double wall_multiplier = 1.0, expansion_drift = 0.0; ///< of the film formula; bar
+    };
+    Numbers at(const Unknowns& x, const Beside& beside, const HeatRelease* base, std::optional<HeatRelease>& heat) const;
     std::optional<double> own_spread(CardResult result, double value) const;
 
     const Engine& engine_;

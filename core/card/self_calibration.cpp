@@ -13,7 +13,7 @@ constexpr double unfired_reach = 60.0;
 constexpr double largest_offset = 3.0;
 constexpr double ratio_spread = 0.017;   // of the entered ratio: as built ± 3 % at 95 % (common practice, no source)
 constexpr double drift_spread = 0.1;     // bar in 180°
-constexpr double plausible_ratio = 0.045;
+constexpr double plausible_strain = 12.0; // of the beliefs together, before another ratio is no explanation any more
 constexpr double lowest_multiplier = -1.0, highest_multiplier = 4.0;
 
 class Calibrator
@@ -192,7 +192,7 @@ std::optional<SelfCalibration> Calibrator::run()
     const SelfCalibration before = found_;
     const bool unfired = !found_.start;
     if (with_everything_uncertain() &&
-        (!found_.doubtful || (std::abs(found_.fit.values[ratio]) <= plausible_ratio && !too_much_heat()))) {
+        (!found_.doubtful || (found_.fit.strain <= plausible_strain && !too_much_heat()))) {
         if (unfired)
             found_.method = CalibrationMethod::unfired_cycle;
         return found_;

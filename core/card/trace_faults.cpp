@@ -74,22 +74,27 @@ double find_noise(std::span<const double> angle, std::span<const double> pressur
 void remove_spikes(CleanTrace& trace, Cycle& cycle, double noise)
 {
     constexpr std::size_t most_in_a_row = 3;
-    constexpr double near = 5.0; // degrees
-    const std::vector<SpikeRun> runs = find_spikes(cycle.pressure, std::max(6.0 * noise, smallest_spike));
-    for (std::size_t i = 0; i < runs.size(); ++i) {
-        const double here = trace.angle[runs[i].first];
-        std::size_t close = 0;
-        for (const SpikeRun& other : runs)
-            close += std::abs(trace.angle[other.first] - here) <= near ? 1 : 0;
-        if (close > most_in_a_row) {
-            if (!trace.ringing)
-                trace.ringing_at = here;
+    constexpr double near = 5.0, rings_around = 10.0; // degrees
+    const std::vector<SpikeRun> runs = find_spikes(cycle.pressure, std::max(8.0 * noise, smallest_spike));
+    const auto count_within = [&](double here, double width) {
+        return static_cast<std::size_t>(std::count_if(runs.begin(), runs.end(), [&](const SpikeRun& other) {
+            return std::abs(trace.angle[other.first] - here) <= width;
+        }));
+    };
+    for (const SpikeRun& run : runs)
+        if (!trace.ringing && count_within(trace.angle[run.first], near) > most_in_a_row) {
             trace.ringing = true;
-            continue;
+            trace.ringing_at = trace.angle[run.first];
         }
+    for (const SpikeRun& run : runs) {
+        // What stands together rings, and so does what stands near a place where another cycle rings.
+        const double here = trace.angle[run.first];
+        if (count_within(here, near) > most_in_a_row ||
+            (trace.ringing && std::abs(here - trace.ringing_at) <= rings_around))
+            continue;
         ++trace.spikes;
-        for (std::size_t k = 0; k < runs[i].length; ++k)
-            cycle.pressure[runs[i].first + k] = nan;
+        for (std::size_t k = 0; k < run.length; ++k)
+            cycle.pressure[run.first + k] = nan;
     }
 }
 

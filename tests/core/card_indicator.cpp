@@ -133,12 +133,12 @@ SimulatedCase healthy_case(bool two_stroke, Dice& dice)
     what.fuel_kg = (two_stroke ? 0.0405 : 1.65e-3) * (0.1 + 0.9 * load);
     if (two_stroke)
         what.engine.speed_rpm *= std::cbrt(load);
-    what.start = between(dice, -3.0, 3.0);
+    what.start = between(dice, -4.0, 2.0);
     what.duration = between(dice, 40.0, 60.0);
     what.premixed = between(dice, 0.02, 0.12);
     what.form = between(dice, 0.6, 1.1);
     what.closing_kelvin = between(dice, 330.0, 360.0);
-    what.wall_multiplier = between(dice, 0.72, 1.68);
+    what.wall_multiplier = between(dice, 0.6, 1.4);
     what.virial_factor = between(dice, 0.95, 1.05);
     what.ratio_error = between(dice, -0.005, 0.005);
     what.closing_slip = spread(dice, 0.01);
@@ -153,8 +153,10 @@ SimulatedCase doubtful_inputs_case(bool two_stroke, Dice& dice)
 {
     SimulatedCase what = healthy_case(two_stroke, dice);
     what.ratio_error = between(dice, -0.03, 0.03);
-    what.drift = between(dice, -0.3, 0.3);
-    what.shock = between(dice, 0.0, 0.3);
+    if (between(dice, 0.0, 1.0) < 0.5)
+        what.drift = between(dice, -0.3, 0.3);
+    else
+        what.shock = between(dice, 0.0, 0.3);
     what.noise = between(dice, 0.05, 0.5);
     what.cycles = between(dice, 0.0, 1.0) < 0.5 ? 1 : 20;
     return what;
