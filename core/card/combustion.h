@@ -49,6 +49,9 @@ struct HeatInputs
     std::optional<Range> samples = {};         ///< of the closed part, where another offset must not change them
 };
 
+/// Where this share of the heat is released, degrees; nothing where nothing is.
+std::optional<double> angle_of_share(const HeatRelease& heat, double share);
+
 /// How far a flame that began at dead centre has heated the transducer, 0 to 1 (common practice, no source).
 double hot_share(double true_angle);
 

@@ -119,7 +119,7 @@ void find_firing_peak(Evaluation& card, const SelfCalibration& found)
 void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& setting, const ThinTrace& thin,
                      const DirectReadings& direct, const SelfCalibration& found)
 {
-    const ResultMaker maker(engine, card.trace, thin, direct, setting, found);
+    ResultMaker maker(engine, card.trace, thin, direct, setting, found);
     card.method = found.method;
     card.unknowns = found.fit.values;
     card.wall_multiplier = found.wall_multiplier;

@@ -78,26 +78,36 @@ void shift_to_start(HeatRelease& heat, double start)
     }
 }
 
+/// Gross heat as a mean over a stretch that widens with the distance from the start: at the end a single sample's noise
+/// is per cents of the heat, and the largest of many would be taken for the total.
+std::vector<double> smooth_late(const HeatRelease& heat, double start)
+{
+    constexpr double widens = 0.15, widest = 10.0; // degrees either way
+    const std::size_t n = heat.angle.size();
+    std::vector<double> sums(n + 1, 0.0), smooth(n);
+    for (std::size_t i = 0; i < n; ++i)
+        sums[i + 1] = sums[i] + heat.gross[i];
+    const double step = (heat.angle.back() - heat.angle.front()) / static_cast<double>(n - 1);
+    for (std::size_t i = 0; i < n; ++i) {
+        const double half = std::clamp(widens * (heat.angle[i] - start), 0.0, widest);
+        const auto reach = std::min({static_cast<std::size_t>(half / step), i, n - 1 - i});
+        smooth[i] = (sums[i + reach + 1] - sums[i - reach]) / static_cast<double>(2 * reach + 1);
+    }
+    return smooth;
+}
+
 void burn(HeatRelease& heat, double start)
 {
+    const std::vector<double> gross = smooth_late(heat, start);
     double most = 0.0;
+    // The last samples have no neighbours to be averaged with.
+    const double end = heat.angle.back() - 3.0;
     for (std::size_t i = 0; i < heat.angle.size(); ++i) {
-        if (heat.angle[i] >= start - 2.0)
-            most = std::max(most, heat.gross[i]);
+        if (heat.angle[i] >= start - 2.0 && heat.angle[i] <= end)
+            most = std::max(most, gross[i]);
         heat.fuel[i] = most / fuel_heat;
     }
     heat.total = most;
-}
-
-std::optional<double> reaches(const HeatRelease& heat, double share)
-{
-    const double wanted = share * heat.total / fuel_heat;
-    for (std::size_t i = 1; i < heat.angle.size(); ++i)
-        if (heat.fuel[i] >= wanted && heat.fuel[i] > heat.fuel[i - 1]) {
-            const double part = (wanted - heat.fuel[i - 1]) / (heat.fuel[i] - heat.fuel[i - 1]);
-            return heat.angle[i - 1] + part * (heat.angle[i] - heat.angle[i - 1]);
-        }
-    return std::nullopt;
 }
 
 void find_temperatures(HeatRelease& heat)
@@ -117,6 +127,17 @@ void find_temperatures(HeatRelease& heat)
 } // namespace
 
 double hot_share(double true_angle) { return true_angle > 0.0 ? 1.0 - std::exp(-true_angle / 25.0) : 0.0; }
+
+std::optional<double> angle_of_share(const HeatRelease& heat, double share)
+{
+    const double wanted = share * heat.total / fuel_heat;
+    for (std::size_t i = 1; i < heat.angle.size(); ++i)
+        if (heat.fuel[i] >= wanted && heat.fuel[i] > heat.fuel[i - 1]) {
+            const double part = (wanted - heat.fuel[i - 1]) / (heat.fuel[i] - heat.fuel[i - 1]);
+            return heat.angle[i - 1] + part * (heat.angle[i] - heat.angle[i - 1]);
+        }
+    return std::nullopt;
+}
 
 std::optional<HeatRelease> release_heat(const Cylinder& cylinder, const WallLoss& walls, const Unknowns& x,
                                         const HeatInputs& inputs)
@@ -147,9 +168,9 @@ std::optional<HeatRelease> release_heat(const Cylinder& cylinder, const WallLoss
     }
     find_temperatures(heat);
     if (inputs.start && heat.total > 0.0) {
-        heat.ca10 = reaches(heat, 0.10);
-        heat.ca50 = reaches(heat, 0.50);
-        heat.ca90 = reaches(heat, 0.90);
+        heat.ca10 = angle_of_share(heat, 0.10);
+        heat.ca50 = angle_of_share(heat, 0.50);
+        heat.ca90 = angle_of_share(heat, 0.90);
     }
     return heat;
 }

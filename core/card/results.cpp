@@ -58,9 +58,7 @@ Numbers ResultMaker::at(const Unknowns& x, const Beside& beside, const HeatRelea
     if (const auto p = local_pressure(thin_.angle, thin_.pressure, expansion + x[offset], expansion_half_width))
         set(CardResult::expansion_pressure,
             *p - zero_at(cylinder, x, expansion) - beside.expansion_drift * hot_share(expansion));
-    const CompressionWindow window = make_window(thin_, found_.closing_pressure, found_.fit.values[offset],
-                                                 found_.window_from, found_.window_to);
-    const LineEnd end = line_end(cylinder, walls_, window, x);
+    const LineEnd end = line_end(cylinder, walls_, found_.window, x);
     const double dead_centre = 0.0;
     const auto line = carry_line(cylinder, walls_, x, found_.closing_pressure, end.angle, end.log_pressure,
                                  std::span(&dead_centre, 1));
@@ -91,6 +89,23 @@ Numbers ResultMaker::at(const Unknowns& x, const Beside& beside, const HeatRelea
     return numbers;
 }
 
+/// Degrees by which the noise of the late expansion moves the shares of the heat, through the total.
+std::array<double, 3> ResultMaker::heat_noise(const HeatRelease& heat) const
+{
+    constexpr double capacity_over_constant = 3.0, averaged = 20.0; // c_v/R of hot gas; degrees of the late mean
+    const Cylinder& cylinder = setting_.cylinder;
+    const double volume = cylinder.gear.volume(cylinder.opens * radians_per_degree, cylinder.clearance(cylinder.compression_ratio));
+    const double joules = capacity_over_constant * volume * thin_.noise * 1e5 / std::sqrt(averaged / thin_.step);
+    std::array<double, 3> degrees{};
+    const double shares[] = {0.1, 0.5, 0.9};
+    for (std::size_t i = 0; i < degrees.size(); ++i) {
+        const auto there = angle_of_share(heat, shares[i]);
+        const auto later = angle_of_share(heat, std::min(0.999, shares[i] * (1.0 + joules / std::max(heat.total, 1.0))));
+        degrees[i] = there && later ? *later - *there : 0.0;
+    }
+    return degrees;
+}
+
 Numbers ResultMaker::numbers(std::optional<HeatRelease>& heat) const
 {
     Numbers numbers = at(found_.fit.values, {}, nullptr, heat);
@@ -116,6 +131,10 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
         squares += direct_.peak->angle_spread * direct_.peak->angle_spread;
     if (result == CardResult::mean_indicated_pressure)
         squares += drift_of_work * drift_of_work;
+    if (base_spread_ && (result == CardResult::ca10 || result == CardResult::ca50 || result == CardResult::ca90)) {
+        const double noisy = (*base_spread_)[index(result) - index(CardResult::ca10)];
+        squares += noisy * noisy;
+    }
     if (result == CardResult::expansion_pressure)
         squares += thin_.noise * thin_.noise / 4.0;
     if (result == CardResult::pressure_rise && direct_.rise)
@@ -123,14 +142,17 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     if (result == CardResult::start_of_combustion && !found_.line_log.empty()) {
         // ln p rises by about 0.02 a degree where the start is laid back from (common practice).
         const double share = thin_.noise / std::exp(found_.line_log.front()) / 0.02;
-        squares += 0.25 * share * share;
+        squares += share * share;
     }
     return std::sqrt(squares);
 }
 
-Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat) const
+Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat)
 {
     const Numbers middle = numbers(heat);
+    base_spread_.reset();
+    if (heat)
+        base_spread_ = heat_noise(*heat);
     const UnknownCovariance& covariance = found_.fit.covariance;
     std::array<Unknowns, result_count> slopes{};
     Unknowns values = found_.fit.values;

@@ -28,7 +28,7 @@ public:
     /// The numbers, and the heat release they come from.
     Numbers numbers(std::optional<HeatRelease>& heat) const;
     /// The same with half-widths. @param heat filled
-    Estimates estimate(std::optional<HeatRelease>& heat) const;
+    Estimates estimate(std::optional<HeatRelease>& heat);
 
 private:
     /// What is not among the unknowns of the compression and moves results all the same.
@@ -37,6 +37,7 @@ private:
         double wall_multiplier = 1.0, expansion_drift = 0.0; ///< of the film formula; bar
     };
     Numbers at(const Unknowns& x, const Beside& beside, const HeatRelease* base, std::optional<HeatRelease>& heat) const;
+    std::array<double, 3> heat_noise(const HeatRelease& heat) const;
     std::optional<double> own_spread(CardResult result, double value) const;
 
     const Engine& engine_;
@@ -46,6 +47,7 @@ private:
     const Setting& setting_;
     const SelfCalibration& found_;
     WallLoss walls_;
+    std::optional<std::array<double, 3>> base_spread_; ///< of the three shares of heat, degrees
 };
 
 /// Mean indicated pressure of the mean cycle at an offset.

@@ -74,6 +74,7 @@ bool Calibrator::fit(const Beliefs& beliefs, double from, double to)
     if (!fitted || !std::isfinite(fitted->values[offset]) || !std::isfinite(fitted->misfit))
         return false;
     found_.fit = *fitted;
+    found_.window = window;
     found_.window_from = from;
     found_.window_to = to;
     found_.end = line_end(cylinder_, walls_, window, found_.fit.values);

@@ -29,6 +29,7 @@ struct SelfCalibration
     CalibrationMethod method = CalibrationMethod::offset_assumed;
     Calibration fit;
     Parabola closing_pressure;
+    CompressionWindow window;                    ///< the samples of the fit; views of the thin trace
     double window_from = 0.0, window_to = 0.0;   ///< true degrees
     LineEnd end;
     std::vector<double> line_angle, line_log;    ///< true degrees, ln of bar; from the window's end on
@@ -46,7 +47,7 @@ CompressionWindow make_window(const ThinTrace& trace, const Parabola& closing_pr
 /// Zero, in bar, that makes the pressure after closing what the charge pressure asks for.
 std::optional<double> peg_zero(const ThinTrace& trace, const Setting& setting, double recorded_offset);
 
-/// @return nothing where the compression does not determine anything
+/// @param trace outlives the answer  @return nothing where the compression does not determine anything
 std::optional<SelfCalibration> self_calibrate(const ThinTrace& trace, const Setting& setting);
 
 } // namespace evenstroke::indicator

@@ -159,6 +159,8 @@ SimulatedCase doubtful_inputs_case(bool two_stroke, Dice& dice)
         what.shock = between(dice, 0.0, 0.3);
     what.noise = between(dice, 0.05, 0.5);
     what.cycles = between(dice, 0.0, 1.0) < 0.5 ? 1 : 20;
+    if (what.cycles == 1)
+        what.fuel_variation = 0.0; // a single cycle says nothing of the others
     return what;
 }
 
