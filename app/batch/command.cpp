@@ -9,8 +9,7 @@ namespace {
 QString utf8(const char* text) { return QString::fromUtf8(text); }
 
 /// Commands of the contract that this version does not have yet.
-const QStringList later_commands = {QStringLiteral("explain"), QStringLiteral("card"), QStringLiteral("parcel"),
-                                    QStringLiteral("receive")};
+const QStringList later_commands = {QStringLiteral("explain"), QStringLiteral("parcel"), QStringLiteral("receive")};
 
 QString usage_line(const Command& command)
 {

@@ -42,6 +42,15 @@ double smoothed(std::span<const double> p, std::size_t at, std::size_t m)
     return sum / (n * s4 - s2 * s2);
 }
 
+/// Samples either side of the peak: within 2°, or 1° where the noise allows it, as a sharp peak is no parabola for long.
+std::size_t peak_window(double step, double noise)
+{
+    constexpr double quiet = 0.02; // bar that the narrow window may leave of the noise
+    const double narrow = std::max(2.0, std::round(1.0 / step));
+    const bool enough = noise / std::sqrt(2.0 * narrow + 1.0) < quiet;
+    return static_cast<std::size_t>(enough ? narrow : std::max(2.0, std::round(2.0 / step)));
+}
+
 /// Vertex of the parabola through the samples around one of them.
 std::optional<Peak> vertex(std::span<const double> angle, std::span<const double> pressure, double noise, std::size_t top,
                            std::size_t half)
@@ -124,7 +133,7 @@ std::optional<Peak> find_peak(std::span<const double> angle, std::span<const dou
     for (std::size_t i = low; i <= high; ++i)
         if (const double value = smoothed(pressure, i, m); value > best && angle[i] >= from && angle[i] <= to)
             best = value, top = i;
-    const std::size_t half = std::max<std::size_t>(m, 2);
+    const std::size_t half = peak_window(step, noise);
     if (top < half || top + half >= angle.size())
         return std::nullopt;
     return vertex(angle, pressure, noise, top, half);
@@ -135,7 +144,7 @@ std::optional<Peak> find_peak_near(std::span<const double> angle, std::span<cons
 {
     constexpr double too_far = 1.5; // degrees
     const double step = (angle.back() - angle.front()) / static_cast<double>(angle.size() - 1);
-    const auto half = static_cast<std::size_t>(std::max(2.0, std::round(2.0 / step)));
+    const std::size_t half = peak_window(step, noise);
     const auto top = static_cast<std::ptrdiff_t>(std::llround((near - angle.front()) / step));
     if (top >= static_cast<std::ptrdiff_t>(half) && top + static_cast<std::ptrdiff_t>(half) < static_cast<std::ptrdiff_t>(angle.size())) {
         const auto peak = vertex(angle, pressure, noise, static_cast<std::size_t>(top), half);

@@ -21,7 +21,7 @@ double polygon_pressure(const SliderCrank& gear, std::span<const double> angle, 
 
 struct Peak
 {
-    double pressure = 0.0, angle = 0.0;             ///< vertex of a parabola within ±2° of the smoothed maximum
+    double pressure = 0.0, angle = 0.0;             ///< vertex of a parabola near the smoothed maximum
     double pressure_spread = 0.0, angle_spread = 0.0; ///< one standard deviation, from the noise alone
 };
 /// The vertex freed of what noise adds to it. @param from,to where the maximum is looked for

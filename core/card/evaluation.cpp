@@ -15,7 +15,7 @@ namespace {
 
 constexpr double two_stroke_wall = 545.0, four_stroke_wall = 500.0; // K, common practice, no source
 constexpr double usual_closing = 345.0;                              // K, common practice, no source
-constexpr double known_spread = 6.0, assumed_spread = 15.0;          // K, one standard deviation
+constexpr double known_spread = 5.2, assumed_spread = 15.0;          // K, one standard deviation
 
 /// What the energy balance needs, as far as it is known; nothing where it lacks something.
 std::optional<Setting> find_setting(const Engine& engine, const Conditions& conditions, const SliderCrank& gear,

@@ -32,7 +32,7 @@ void read_peaks(const CleanTrace& trace, DirectReadings& direct)
     double count = 0.0;
     const auto common = find_peak(trace.angle, trace.mean, trace.noise_mean);
     for (const Cycle& cycle : trace.cycles) {
-        const auto peak = common ? find_peak_near(trace.angle, cycle.pressure, trace.noise_one, common->angle)
+        const auto peak = common && trace.cycles.size() > 1 ? find_peak_near(trace.angle, cycle.pressure, trace.noise_one, common->angle)
                                  : find_peak(trace.angle, cycle.pressure, trace.noise_one);
         direct.maxima.push_back(peak ? peak->pressure : std::nan(""));
         const bool unlike = std::find(trace.unlike_cycles.begin(), trace.unlike_cycles.end(), cycle.number) !=

@@ -10,9 +10,9 @@ namespace evenstroke::indicator {
 namespace {
 
 constexpr double expansion_half_width = 2.0; // degrees
-constexpr double wall_spread = 0.35;         // of the film formula's wall loss (common practice, no source)
-constexpr double hot_drift = 0.13;           // bar by which the flame may move the zero (common practice, no source)
-constexpr double drift_of_work = 0.09;       // bar of mean indicated pressure from a zero that moves within the cycle
+constexpr double wall_spread = 0.25;         // of the film formula's wall loss (common practice, no source)
+constexpr double hot_drift = 0.08;           // bar by which the flame may move the zero (common practice, no source)
+constexpr double drift_of_work = 0.08;       // bar of mean indicated pressure from a zero that moves within the cycle
 constexpr double coverage = 2.0;             // JCGM 100: half-width at 95 % over the standard uncertainty
 
 /// How far each unknown is moved for a difference quotient.
@@ -131,6 +131,13 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
         squares += direct_.peak->angle_spread * direct_.peak->angle_spread;
     if (result == CardResult::mean_indicated_pressure)
         squares += drift_of_work * drift_of_work;
+    if (result == CardResult::trapped_mass || result == CardResult::dead_centre_temperature ||
+        result == CardResult::maximum_temperature) {
+        // The charge is read from a parabola over 8° after closing.
+        const double closing_pressure = std::max(found_.closing_pressure.constant - found_.fit.values[zero], 0.2);
+        const double noisy = 1.3 * thin_.noise / std::sqrt(8.0 / thin_.step + 1.0) / closing_pressure * value;
+        squares += noisy * noisy;
+    }
     if (base_spread_ && (result == CardResult::ca10 || result == CardResult::ca50 || result == CardResult::ca90)) {
         const double noisy = (*base_spread_)[index(result) - index(CardResult::ca10)];
         squares += noisy * noisy;
@@ -142,7 +149,7 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     if (result == CardResult::start_of_combustion && !found_.line_log.empty()) {
         // ln p rises by about 0.02 a degree where the start is laid back from (common practice).
         const double share = thin_.noise / std::exp(found_.line_log.front()) / 0.02;
-        squares += share * share;
+        squares += 2.0 * share * share;
     }
     return std::sqrt(squares);
 }

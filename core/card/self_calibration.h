@@ -19,7 +19,7 @@ struct Setting
 {
     Cylinder cylinder;
     std::optional<double> scavenge;  ///< bar abs
-    double closing_spread = 6.0;     ///< K, one standard deviation
+    double closing_spread = 5.2;     ///< K, one standard deviation
     std::optional<double> known_offset, fuel_heat; ///< degrees; J a cycle
     bool closing_known = true, speed_known = true;
 };

@@ -124,14 +124,14 @@ Result<CleanTrace> clean(const Trace& trace, const TraceFrame& frame)
         return recorded.error();
     CleanTrace result = lay_on_grid(recorded.value(), frame);
     std::vector<double> noises;
-    for (Cycle& cycle : result.cycles) {
-        const double noise = find_noise(result.angle, cycle.pressure);
-        remove_spikes(result, cycle, noise);
-        fill_gaps(result, cycle);
+    for (const Cycle& cycle : result.cycles)
         noises.push_back(find_noise(result.angle, cycle.pressure));
-    }
     std::nth_element(noises.begin(), noises.begin() + static_cast<std::ptrdiff_t>(noises.size() / 2), noises.end());
     result.noise_one = noises[noises.size() / 2];
+    for (Cycle& cycle : result.cycles) {
+        remove_spikes(result, cycle, result.noise_one);
+        fill_gaps(result, cycle);
+    }
     average(result, {});
     if (!result.covers(frame.compression_begins(), -3.0))
         return invalid_input("The card does not cover the compression from " +

@@ -80,8 +80,13 @@ Trace record(const SimulatedCase& what, const FineCycle& fired, const FineCycle&
     Trace trace;
     std::normal_distribution<double> noise(0.0, what.noise);
     std::vector<double> pressure(fired.pressure);
+    // The cycles differ, and their mean is the cycle whose truth is known.
+    std::vector<double> variation(static_cast<std::size_t>(what.cycles));
+    double mean = 0.0;
+    for (double& v : variation)
+        mean += (v = spread(dice, what.fuel_variation)) / what.cycles;
     for (int c = 0; c < what.cycles; ++c) {
-        const double more = what.fired ? spread(dice, what.fuel_variation) : 0.0;
+        const double more = what.fired ? variation[static_cast<std::size_t>(c)] - mean : 0.0;
         for (std::size_t i = 0; i < unfired.pressure.size(); ++i)
             pressure[i] = fired.pressure[i] + more * (fired.pressure[i] - unfired.pressure[i]);
         const std::vector<double> shown = through_passage(what, fired, pressure);
@@ -130,7 +135,7 @@ SimulatedCase healthy_case(bool two_stroke, Dice& dice)
     what.engine = two_stroke ? large_two_stroke() : medium_four_stroke();
     const double load = between(dice, 0.5, 1.0);
     what.scavenge = (two_stroke ? 3.9 : 3.6) * (0.25 + 0.75 * load);
-    what.fuel_kg = (two_stroke ? 0.0405 : 1.65e-3) * (0.1 + 0.9 * load);
+    what.fuel_kg = (two_stroke ? 0.056 : 3.3e-3) * (0.1 + 0.9 * load);
     if (two_stroke)
         what.engine.speed_rpm *= std::cbrt(load);
     what.start = between(dice, -4.0, 2.0);
@@ -159,8 +164,6 @@ SimulatedCase doubtful_inputs_case(bool two_stroke, Dice& dice)
         what.shock = between(dice, 0.0, 0.3);
     what.noise = between(dice, 0.05, 0.5);
     what.cycles = between(dice, 0.0, 1.0) < 0.5 ? 1 : 20;
-    if (what.cycles == 1)
-        what.fuel_variation = 0.0; // a single cycle says nothing of the others
     return what;
 }
 
