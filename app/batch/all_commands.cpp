@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/batch/card_command.h"
 #include "app/batch/command.h"
 #include "app/batch/explain_command.h"
 #include "app/batch/history_commands.h"
@@ -31,6 +32,12 @@ const std::vector<Command>& all_commands()
          {history, {"engine", "E", "the engine", true}, vessel, {"reading", "R", "this reading; the newest where nothing is said"},
           {"format", "text|csv|json", "how it is written; text where nothing is said"}},
          run_explain, "the engine or the reading is not there, or several are meant"},
+        {"card", "evaluates indicator cards: pressures, combustion, heat, each with its uncertainty, and remarks; JSON",
+         "TRACE...",
+         {{"engine", "engine.json", "the engine's file", true}, {"speed-rpm", "N", "speed; the rated one where nothing is said"},
+          {"scavenge-pressure-bar-abs", "P", "scavenge or charge-air pressure, absolute"},
+          {"charge-temperature-k", "T", "gas temperature when the cylinder closes"}},
+         run_card, "a card was refused; the others are printed"},
         {"report", "the survey report of one engine as PDF",
          nullptr,
          {history, {"engine", "E", "the engine", true}, vessel, {"from", "D", "first day, 2026-01-31", true},

@@ -9,7 +9,7 @@ namespace {
 QString utf8(const char* text) { return QString::fromUtf8(text); }
 
 /// Commands of the contract that this version does not have yet.
-const QStringList later_commands = {QStringLiteral("card"), QStringLiteral("parcel"), QStringLiteral("receive")};
+const QStringList later_commands = {QStringLiteral("parcel"), QStringLiteral("receive")};
 
 QString usage_line(const Command& command)
 {

@@ -219,7 +219,7 @@ TEST(BatchUse, WrongUseIsExitTwoAndSaysHow)
     EXPECT_EQ(run({"flags", "--history", "x", "--colour"}).code, 2);
     EXPECT_EQ(run({"flags", "--history", "x", "--format", "xml"}).code, 2);
     EXPECT_EQ(run({"take", "--history", "x"}).code, 2);
-    for (const char* later : {"card", "parcel", "receive"}) {
+    for (const char* later : {"parcel", "receive"}) {
         EXPECT_EQ(run({later}).code, 2) << later;
         EXPECT_TRUE(run({later}).err.contains("not in this version")) << later;
     }
