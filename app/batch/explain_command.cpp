@@ -3,10 +3,8 @@
 
 #include "app/batch/engines.h"
 #include "app/batch/table_output.h"
-#include "core/explanation/cautions.h"
+#include "app/causes/causes_text.h"
 #include "core/explanation/explanation.h"
-#include "core/sentence_words.h"
-#include "core/trend/flag_text.h"
 #include "storage/engine_record.h"
 
 #include <cmath>
@@ -47,79 +45,32 @@ void write_rows(TableOutput& table, const Explanation& explanation)
     }
 }
 
-void write_lines(QTextStream& out, const char* lead, const std::vector<std::string>& lines)
+/// How far in a line of its kind stands.
+const char* indent(CausesLine::Kind kind)
 {
-    for (const std::string& line : lines)
-        out << "     " << lead << ": " << QString::fromStdString(line) << "\n";
-}
-
-void write_line(QTextStream& out, const char* lead, const std::string& line)
-{
-    if (!line.empty())
-        write_lines(out, lead, {line});
-}
-
-void write_cautions(QTextStream& out, const std::vector<std::string>& names)
-{
-    for (const std::string& name : names)
-        if (const Caution* caution = find_caution(name))
-            write_line(out, "caution", caution->title + ". " + caution->short_text + " " + caution->authority);
-}
-
-void write_cause(QTextStream& out, const Hypothesis& cause)
-{
-    out << "  " << cause.rank << ". " << QString::fromStdString(cause.what);
-    if (cause.explained)
-        out << " (" << static_cast<int>(std::lround(100.0 * *cause.explained)) << " % of the pattern)";
-    out << "\n";
-    write_lines(out, "fits", cause.fits);
-    write_lines(out, "speaks against", cause.against);
-    if (!cause.not_read.empty())
-        write_line(out, "not read", comma_list(cause.not_read));
-    write_line(out, "course", cause.course);
-    write_line(out, "sets it apart", cause.fault->sets_apart);
-    write_line(out, "check next", cause.check_next);
-    write_line(out, "urgency", urgency_word(cause.fault->urgency) + ": " + cause.urgency);
-    write_cautions(out, cause.cautions);
-}
-
-std::string months_words(const std::optional<double>& months)
-{
-    return months ? two_digits(*months) : std::string("more than 120");
-}
-
-void write_subject(QTextStream& out, const SubjectExplanation& subject)
-{
-    out << "\n" << QString::fromStdString(subject.answer);
-    if (!subject.history.empty())
-        out << " " << QString::fromStdString(subject.history);
-    out << "\n";
-    if (!subject.moved.empty())
-        out << "  Moved: " << QString::fromStdString(comma_list(subject.moved)) << ".\n";
-    for (const std::string& remark : subject.remarks)
-        out << "  " << QString::fromStdString(remark) << "\n";
-    write_cautions(out, subject.cautions);
-    if (!subject.cannot_tell.empty())
-        out << "  " << QString::fromStdString(subject.cannot_tell) << "\n";
-    if (subject.time_to_limit && subject.limit_quantity)
-        out << "  If it goes on, " << QString::fromStdString(lower_first(quantity(*subject.limit_quantity).title))
-            << " reaches " << QString::fromStdString(subject.time_to_limit->limit_text) << " in "
-            << QString::fromStdString(months_words(subject.time_to_limit->months_50)) << " months (5 % to 95 %: "
-            << QString::fromStdString(months_words(subject.time_to_limit->months_5)) << " to "
-            << QString::fromStdString(months_words(subject.time_to_limit->months_95)) << ").\n";
-    for (const Hypothesis& cause : subject.causes)
-        write_cause(out, cause);
+    switch (kind) {
+    case CausesLine::Kind::subject: return "\n";
+    case CausesLine::Kind::cause: return "  ";
+    case CausesLine::Kind::label: return "     ";
+    case CausesLine::Kind::last: return "\n";
+    case CausesLine::Kind::caution:
+    case CausesLine::Kind::plain: break;
+    }
+    return "";
 }
 
 void write_text(QTextStream& out, const Explanation& explanation)
 {
     const EngineRecord& record = *explanation.record;
-    out << QString::fromStdString(record.vessel.name) << ", " << QString::fromStdString(record.engine.name) << "\n"
-        << QString::fromStdString(explanation.sentence) << "\n";
-    for (const SubjectExplanation& subject : explanation.subjects)
-        write_subject(out, subject);
-    if (!explanation.subjects.empty())
-        out << "\nThese are possible causes, not findings: the people on board, the maker and the class society decide.\n";
+    out << QString::fromStdString(record.vessel.name) << ", " << QString::fromStdString(record.engine.name) << "\n";
+    for (const CausesLine& line : causes_lines(explanation)) {
+        out << indent(line.kind);
+        if (line.kind == CausesLine::Kind::caution)
+            out << "  Caution: ";
+        else if (!line.lead.isEmpty())
+            out << line.lead << ": ";
+        out << line.words << "\n";
+    }
     out.flush();
 }
 

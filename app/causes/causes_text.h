@@ -1,0 +1,30 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/explanation/explanation.h"
+
+#include <QString>
+
+#include <vector>
+
+namespace evenstroke {
+
+/// One line of the sheet of possible causes.
+struct CausesLine
+{
+    enum class Kind {
+        subject, ///< what can be said at all of one cylinder or the engine
+        caution, ///< stands before what it warns of
+        cause,   ///< "1. This looks like ... (62 % of the pattern)"
+        plain,   ///< a sentence
+        label,   ///< `lead` and words: "speaks against", "..."
+        last,    ///< who decides
+    };
+    Kind kind = Kind::plain;
+    QString lead, words;
+};
+
+/// The sheet from top to bottom.
+std::vector<CausesLine> causes_lines(const Explanation& explanation);
+
+} // namespace evenstroke
