@@ -166,50 +166,6 @@ TEST_F(SampleVesselEndToEnd, VerifyBackupAndReport)
     EXPECT_LT(file.size(), 1000000);
 }
 
-TEST_F(SampleVesselEndToEnd, ExplainsTheNewestReadingOrTheOneAskedFor)
-{
-    const QStringList main{"explain", "--history", history(), "--engine", "main engine"};
-    const Outcome csv = run(main + QStringList{"--format", "csv"});
-    EXPECT_EQ(csv.code, 0) << csv.err.toStdString();
-    EXPECT_TRUE(csv.out.startsWith("vessel,engine,reading,subject,rank,cause,explained,urgency,limit_quantity,months_5,months_50,months_95\n"));
-    for (const QString& row : csv.rows()) {
-        const QStringList parts = cells(row);
-        ASSERT_EQ(parts.size(), 12) << row.toStdString();
-        EXPECT_EQ(parts[1], "main engine");
-        EXPECT_TRUE(parts[3] == "engine" || parts[3].startsWith("cylinder ")) << row.toStdString();
-        EXPECT_GE(parts[4].toInt(), 0);
-        EXPECT_TRUE(parts[6].isEmpty() || (parts[6].toDouble() >= 0.0 && parts[6].toDouble() <= 1.0));
-    }
-    const Outcome text = run(main);
-    EXPECT_EQ(text.code, 0);
-    EXPECT_EQ(text.out, run(main + QStringList{"--format", "text"}).out);
-    EXPECT_TRUE(text.out.contains("out of the usual")) << text.out.toStdString();
-    for (const char* never : {"diagnos", "certain", "nan"})
-        EXPECT_FALSE(text.out.contains(never)) << never;
-    const Outcome json = run(main + QStringList{"--format", "json"});
-    EXPECT_EQ(QJsonDocument::fromJson(json.out.toUtf8()).array().size(), csv.rows().size());
-    // Causal: an earlier reading is explained as if nothing had come after it.
-    const QStringList readings = run({"evaluate", "--history", history(), "--engine", "main engine"}).rows();
-    const QString first = cells(readings.first())[2];
-    const Outcome earlier = run(main + QStringList{"--reading", first});
-    EXPECT_EQ(earlier.code, 0);
-    EXPECT_TRUE(earlier.out.contains("too few readings")) << earlier.out.toStdString();
-    EXPECT_TRUE(run(main + QStringList{"--reading", first, "--format", "csv"}).rows().isEmpty());
-}
-
-TEST_F(SampleVesselEndToEnd, ExplainRefusesInWords)
-{
-    const Outcome reading = run({"explain", "--history", history(), "--engine", "main engine", "--reading", "nix"});
-    EXPECT_EQ(reading.code, 1);
-    EXPECT_TRUE(reading.out.isEmpty());
-    EXPECT_TRUE(reading.err.contains("\"nix\""));
-    const Outcome engine = run({"explain", "--history", history(), "--engine", "steam engine"});
-    EXPECT_EQ(engine.code, 1);
-    EXPECT_TRUE(engine.err.contains("Choose one of")) << engine.err.toStdString();
-    EXPECT_EQ(run({"explain", "--history", history(), "--engine", "main engine", "--format", "xml"}).code, 2);
-    EXPECT_EQ(run({"explain", "--history", history()}).code, 2);
-}
-
 TEST(BatchUse, WrongUseIsExitTwoAndSaysHow)
 {
     EXPECT_EQ(run({}).code, 2);
@@ -375,21 +331,6 @@ TEST_F(TakeByCommand, TheChosenEngineIsMissedInWords)
                                     "engine."));
     EXPECT_TRUE(run({"flags", "--history", history, "--engine", "nope"})
                     .err.startsWith("The history holds no engine \"nope\". Choose one of"));
-}
-
-TEST_F(TakeByCommand, AnEngineOfSeveralVesselsIsRefusedWithTheirNames)
-{
-    write("second/engine.json", engine_json().replace("Quiet Barley", "Grey Heron"));
-    write("second/readings.csv", "reading,taken_at,quantity,cylinder,value,unit\n2029-01,2029-01-12T08:30Z,speed,,95,r/min\n");
-    ASSERT_EQ(take({path("engine"), path("second")}).code, 0);
-    const QString history = path("h.evenstroke");
-    const Outcome refused = run({"explain", "--history", history, "--engine", "main engine"});
-    EXPECT_EQ(refused.code, 1);
-    EXPECT_TRUE(refused.out.isEmpty());
-    EXPECT_TRUE(refused.err.contains("Grey Heron") && refused.err.contains("Quiet Barley")) << refused.err.toStdString();
-    const Outcome chosen = run({"explain", "--history", history, "--engine", "main engine", "--vessel", "Grey Heron", "--format", "csv"});
-    EXPECT_EQ(chosen.code, 0) << chosen.err.toStdString();
-    EXPECT_TRUE(chosen.rows().isEmpty());
 }
 
 TEST_F(TakeByCommand, AReadingThatIsNotThereLeavesStandardOutputEmpty)
