@@ -67,6 +67,7 @@ private:
     void show_view(const SideView& view);
     SideView make_view();
     const Cards& cards();
+    std::optional<CardPair> card_pair();
     int cylinder_in_hand() const;
     void copy_picture();
     std::array<QPushButton*, 5> side_buttons() const; ///< in the order of Side

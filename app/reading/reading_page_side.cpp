@@ -18,6 +18,8 @@
 #include <QPrinter>
 #include <QTextDocument>
 
+#include <cmath>
+
 namespace evenstroke {
 
 namespace {
@@ -73,12 +75,39 @@ const Cards& ReadingPage::cards()
     return cards_;
 }
 
+/// The earliest card of this cylinder within 5 % of this load (common practice, no source) stands for the healthy one.
+std::optional<CardPair> ReadingPage::card_pair()
+{
+    const int cylinder = cylinder_in_hand();
+    const auto& load = judgement_->readings[*reading_].load_percent;
+    if (!load || !workplace().history() || !cards().contains(cylinder))
+        return std::nullopt;
+    const storage::CardStore store(*workplace().history());
+    const auto entries = store.list(judgement_->record->engine.id); // by time
+    if (!entries)
+        return std::nullopt;
+    for (const storage::CardEntry& entry : entries.value()) {
+        if (entry.cylinder != cylinder)
+            continue;
+        for (std::size_t i = 0; i < *reading_; ++i) {
+            const auto& then = judgement_->readings[i].load_percent;
+            constexpr double same_load = 5.0; // per cent of rated power
+            if (judgement_->record->readings[i].id != entry.reading_id || !then || std::abs(*then - *load) > same_load)
+                continue;
+            if (auto trace = store.load(entry.id))
+                return CardPair{cylinder, cards().at(cylinder), std::move(trace).value(), i};
+        }
+    }
+    return std::nullopt;
+}
+
 SideView ReadingPage::make_view()
 {
     const Engine& engine = judgement_->record->engine;
     switch (side_) {
     case Side::load: return load_view(*judgement_, *reading_);
-    case Side::wall: return wall_view(*judgement_, *reading_, engine.walls.empty() ? 0 : wall_ % engine.walls.size(), wall_trial());
+    case Side::wall:
+        return wall_view(*judgement_, *reading_, engine.walls.empty() ? 0 : wall_ % engine.walls.size(), wall_trial(), card_pair());
     case Side::crank: return crank_view(*judgement_, *reading_, cards(), cylinder_in_hand());
     case Side::power:
     case Side::workings: break;

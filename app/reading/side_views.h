@@ -30,11 +30,21 @@ struct WallTrial
 };
 /// Conductivities where none is typed, W/(m K): common practice, no source.
 inline constexpr double usual_deposit_conductivity = 0.2, usual_scale_conductivity = 1.5;
-/// Temperatures from the gas to the coolant: as described and now. Relative to the description only.
-/// @param wall index in Engine::walls
-SideView wall_view(const Judgement& judgement, std::size_t reading, std::size_t wall, const WallTrial& trial);
-
 using Cards = std::map<int, storage::CardTrace>; ///< by cylinder
+
+/// A cylinder's card of this reading, and its earliest at nearly this load, which is taken as the healthy one.
+struct CardPair
+{
+    int cylinder = 0;
+    storage::CardTrace now, healthy;
+    std::size_t healthy_reading = 0;
+};
+/// Temperatures from the gas to the coolant: as described and now. Relative to the description only; the gas side moves
+/// with the cards where there are two.
+/// @param wall index in Engine::walls
+SideView wall_view(const Judgement& judgement, std::size_t reading, std::size_t wall, const WallTrial& trial,
+                   const std::optional<CardPair>& cards = {});
+
 /// Forces of one cylinder over its crank angle, and the turning moment summed over the firing order.
 SideView crank_view(const Judgement& judgement, std::size_t reading, const Cards& cards, int cylinder);
 

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/desk/number_text.h"
 #include "app/reading/side_views.h"
+#include "core/card/card_wall.h"
+#include "core/card/reading_conditions.h"
 #include "core/heat/hottest_point.h"
 #include "core/heat/wall_chain.h"
 #include "core/trend/conditions.h"
@@ -217,13 +219,47 @@ QString result_words(const WallDescription& wall, const WallChange& change)
     return words.join(u' ');
 }
 
+indicator::Trace absolute_trace(const storage::CardTrace& card, const Conditions& conditions)
+{
+    indicator::Trace trace{card.cycle, card.crank_angle_deg, card.pressure_bar};
+    if (card.gauge)
+        for (double& pressure : trace.pressure)
+            pressure += conditions.barometer_or_one_bar();
+    return trace;
+}
+
+/// Moves the gas side as the two cards say; what was done, or why not, in words.
+QString follow_cards(const Judgement& judgement, std::size_t reading, const std::optional<CardPair>& cards, WallChain& after)
+{
+    if (!cards)
+        return tr_("The gas side is that of the description: no two cards of this cylinder at this load are stored.");
+    const Engine& engine = judgement.record->engine;
+    const auto side = [&](const storage::CardTrace& card, std::size_t of, indicator::Trace& trace) {
+        const Reading& taken = judgement.record->readings[of];
+        trace = absolute_trace(card, find_conditions(engine, taken));
+        return indicator::CardAtReading{trace, indicator::conditions_at(engine, taken)};
+    };
+    indicator::Trace now, healthy;
+    const auto change = indicator::gas_side_change(engine, side(cards->now, reading, now),
+                                                   side(cards->healthy, cards->healthy_reading, healthy));
+    if (!change)
+        return tr_("The gas side is that of the description: %1").arg(to_qstring(change.error().what_happened));
+    after.gas_film = HeatTransferCoefficient::from_value(after.gas_film->value() * change.value().film_ratio);
+    after.gas = Temperature::from_value(after.gas->value() * change.value().gas_ratio);
+    return tr_("Gas side moved as the cards of cylinder %1 moved since %2: film %3 times, mean gas temperature %4 times (Woschni, "
+               "closed part of the cycle).")
+        .arg(to_qstring(engine.cylinder_name(cards->cylinder)),
+             day_text(judgement.record->readings[cards->healthy_reading].taken_at.utc), number_text(change.value().film_ratio, 3),
+             number_text(change.value().gas_ratio, 3));
+}
+
 QString assumption_words(const Judgement& judgement, std::size_t reading, const WallDescription& wall, const CoolantNow& now,
                          const WallTrial& trial)
 {
     QStringList words{tr_("Relative to the description, no claim of its own.")};
     const auto& load = judgement.readings[reading].load_percent;
     if (load && std::abs(*load - wall.load_percent) > other_load_percent)
-        words.append(tr_("It was described at %1 % load; this reading was taken at %2 %, and the gas side is still that of the description.")
+        words.append(tr_("It was described at %1 % load; this reading was taken at %2 %.")
                          .arg(number_text(wall.load_percent, 0), number_text(*load, 0)));
     if (trial.coolant)
         words.append(tr_("Coolant as tried, %1.").arg(degrees(*trial.coolant)));
@@ -241,7 +277,8 @@ QString assumption_words(const Judgement& judgement, std::size_t reading, const 
 
 } // namespace
 
-SideView wall_view(const Judgement& judgement, std::size_t reading, std::size_t number, const WallTrial& trial)
+SideView wall_view(const Judgement& judgement, std::size_t reading, std::size_t number, const WallTrial& trial,
+                   const std::optional<CardPair>& cards)
 {
     SideView view;
     const std::vector<WallDescription>& walls = judgement.record->engine.walls;
@@ -257,13 +294,14 @@ SideView wall_view(const Judgement& judgement, std::size_t reading, std::size_t 
     WallChain before = described(wall), after = with_trial(before, now, trial);
     if (now.pressure)
         before.coolant_pressure = after.coolant_pressure = bar_absolute(*now.pressure);
+    const QString gas_words = follow_cards(judgement, reading, cards, after);
     const auto change = wall_change(before, after);
     if (!change) {
         view.empty = to_qstring(change.error().text());
         return view;
     }
     view.sentence = result_words(wall, change.value());
-    view.second_sentence = assumption_words(judgement, reading, wall, now, trial);
+    view.second_sentence = assumption_words(judgement, reading, wall, now, trial) + u' ' + gas_words;
     view.table = wall_table(before, after, change.value());
     const auto iron_before = equivalent_iron(before), iron_after = equivalent_iron(after);
     if (iron_after)
