@@ -61,7 +61,8 @@ TEST(DetectionPower, AQuietEngineShowsItsFaultsSooner)
     for (auto& [quantity, noise] : loud.cylinder_noise)
         noise *= 9.0;
     const auto found = [](const Likeness& likeness) {
-        for (const FaultPower& fault : measure_detection_power(likeness, {1, 12, 5})->faults)
+        const auto power = measure_detection_power(likeness, {1, 12, 5});
+        for (const FaultPower& fault : power->faults)
             if (fault.fault == Fault::slow_ring_wear)
                 return fault.found;
         return std::size_t{0};
