@@ -3,7 +3,6 @@
 
 #include <algorithm>
 #include <cmath>
-#include <iterator>
 #include <utility>
 
 namespace evenstroke {
@@ -62,7 +61,7 @@ std::optional<FaultMatch> match_in_the_rest(std::span<const Fault* const> faults
         return std::nullopt;
     const auto matches = match_faults(faults, rest);
     const auto found = std::find_if(matches.begin(), matches.end(), [&](const FaultMatch& match) {
-        return match.fault != first.fault && match.explained >= least && match.log_weight > 3.0;
+        return match.fault->id != first.fault->id && match.explained >= least && match.log_weight > 3.0;
     });
     if (found == matches.end() || found->log_weight < log_weight_of_no_pattern(rest))
         return std::nullopt;
@@ -161,13 +160,17 @@ std::vector<Hypothesis> rank_causes(std::span<const Fault* const> faults, const 
 {
     const std::vector<FaultMatch> all = match_faults(faults, window.changes);
     std::vector<FaultMatch> matches;
-    std::copy_if(all.begin(), all.end(), std::back_inserter(matches),
-                 [](const FaultMatch& match) { return match.explained >= least_explained; });
+    for (const FaultMatch& match : all) {
+        const bool known = std::any_of(matches.begin(), matches.end(),
+                                       [&](const FaultMatch& before) { return before.fault->id == match.fault->id; });
+        if (match.explained >= least_explained && !known) // of two patterns of a fault the likelier one
+            matches.push_back(match);
+    }
     std::vector<Hypothesis> shown = shown_of(matches, window);
     if (matches.empty()) {
         shown = two_together(faults, all, window);
     } else if (const auto second = match_in_the_rest(faults, *first_shown(matches, shown), window.changes, rest_explained)) {
-        const bool known = std::any_of(shown.begin(), shown.end(), [&](const Hypothesis& one) { return one.fault == second->fault; });
+        const bool known = std::any_of(shown.begin(), shown.end(), [&](const Hypothesis& one) { return one.fault->id == second->fault->id; });
         if (!known) {
             shown.push_back(made_from(*second, window));
             shown.back().in_the_rest = true;
