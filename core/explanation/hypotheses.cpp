@@ -112,13 +112,13 @@ const FaultMatch* first_shown(const std::vector<FaultMatch>& matches, const std:
 QuantityEvidence::Says what_it_says(double moved, double expected)
 {
     using Says = QuantityEvidence::Says;
-    const bool both_moved = std::abs(moved) >= moved_from && std::abs(expected) >= moved_from;
-    const bool contradicts = std::abs(moved - expected) >= contradicts_from;
-    if (both_moved && moved * expected > 0.0)
-        return contradicts && std::abs(expected) < largest_level ? Says::partly_fits : Says::fits;
-    if (contradicts)
+    const bool should_move = std::abs(expected) >= moved_from, has_moved = std::abs(moved) >= moved_from;
+    const bool far_off = std::abs(moved - expected) >= contradicts_from, same_way = moved * expected > 0.0;
+    if (!should_move)
+        return far_off ? Says::against : Says::as_usual;
+    if (!same_way || (far_off && !has_moved))
         return Says::against;
-    return std::abs(moved) < moved_from && std::abs(expected) < moved_from ? Says::as_usual : Says::partly_fits;
+    return has_moved && (!far_off || std::abs(expected) >= largest_level) ? Says::fits : Says::partly_fits;
 }
 
 } // namespace

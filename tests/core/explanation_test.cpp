@@ -5,6 +5,7 @@
 #include <gtest/gtest.h>
 
 #include <algorithm>
+#include <cmath>
 
 using namespace evenstroke;
 
@@ -218,6 +219,17 @@ TEST(Explanation, ATwoFoldPatternNamesASecondCauseInTheRest)
     EXPECT_TRUE(std::any_of(fourth->causes.begin(), fourth->causes.end(), [](const Hypothesis& one) {
         return one.fault->id == "jacket_cooling_restricted" && one.in_the_rest && contains(one.what, "perhaps also");
     })) << all_words(explanation);
+}
+
+TEST(Explanation, WhatMovedTheOtherWaySpeaksAgainst)
+{
+    const Explanation explanation = explained(with_leaking_valve());
+    for (const Hypothesis& cause : subject_at(explanation, Place::cylinder(4))->causes)
+        for (const QuantityEvidence& evidence : cause.evidence)
+            if (evidence.amount && evidence.says != QuantityEvidence::Says::against
+                && std::abs(*evidence.expected) >= fault_quantities()[evidence.quantity].noise) {
+                EXPECT_GT(*evidence.amount * *evidence.expected, 0.0) << cause.fault->id << ": " << evidence.words;
+            }
 }
 
 TEST(Explanation, OddEnginesGetAnAnswerAndNoCrash)
