@@ -93,6 +93,8 @@ TEST(Explanation, NamesALeakingExhaustValveWithItsEvidence)
         return contains(line, "exhaust temperature") && contains(line, "up");
     }));
     EXPECT_TRUE(std::find(first.not_read.begin(), first.not_read.end(), "expansion pressure") != first.not_read.end());
+    EXPECT_TRUE(std::find(first.not_read.begin(), first.not_read.end(), "crankcase pressure") == first.not_read.end())
+        << "a crosshead engine has none";
     EXPECT_FALSE(first.check_next.empty());
     EXPECT_FALSE(first.cautions.empty());
     EXPECT_TRUE(fourth->sudden);
