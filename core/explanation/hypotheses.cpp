@@ -9,6 +9,7 @@ namespace evenstroke {
 namespace {
 
 constexpr double least_explained = 0.5;
+constexpr double least_log_weight = 1.0; ///< a cause has to be likelier than nothing at all: three to one
 constexpr std::size_t most_shown = 3;
 /// Logarithm of the odds below which two causes count as equals: three to one. Settled by simulation.
 constexpr double equal_odds = 1.1;
@@ -163,7 +164,7 @@ std::vector<Hypothesis> rank_causes(std::span<const Fault* const> faults, const 
     for (const FaultMatch& match : all) {
         const bool known = std::any_of(matches.begin(), matches.end(),
                                        [&](const FaultMatch& before) { return before.fault->id == match.fault->id; });
-        if (match.explained >= least_explained && !known) // of two patterns of a fault the likelier one
+        if (match.explained >= least_explained && match.log_weight >= least_log_weight && !known) // of two patterns of a fault the likelier one
             matches.push_back(match);
     }
     std::vector<Hypothesis> shown = shown_of(matches, window);

@@ -223,6 +223,19 @@ TEST(Explanation, ATwoFoldPatternNamesASecondCauseInTheRest)
     })) << all_words(explanation);
 }
 
+TEST(Explanation, ASmallDipIsNotCalledACylinderThatDoesNotFire)
+{
+    EngineRecord record = example_record(readings);
+    change(record, "exhaust_temperature", Place::cylinder(2), -16.0);
+    change(record, "maximum_pressure", Place::cylinder(2), -2.4);
+    change(record, "fuel_index", Place::cylinder(2), -1.2);
+    const Explanation explanation = explained(record);
+    const SubjectExplanation* second = subject_at(explanation, Place::cylinder(2));
+    ASSERT_NE(second, nullptr);
+    for (const Hypothesis& cause : second->causes)
+        EXPECT_NE(cause.fault->id, "misfire") << all_words(explanation);
+}
+
 TEST(Explanation, WhatMovedTheOtherWaySpeaksAgainst)
 {
     const Explanation explanation = explained(with_leaking_valve());
