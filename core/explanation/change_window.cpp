@@ -156,8 +156,10 @@ std::optional<ChangeWindow> find_change(const SubjectSeries& series, std::span<c
             if (!best || window->likelihood > best->likelihood)
                 best = std::move(window);
         }
-    if (best)
+    if (best) {
+        best->at_edge = best->onset == first && first > earliest;
         best->strength = strongest_sign(faults, claiming(series, best->changes));
+    }
     return best;
 }
 

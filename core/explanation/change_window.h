@@ -11,6 +11,7 @@ struct ChangeWindow
     std::size_t onset = 0;  ///< the first changed reading
     bool ramp = false;      ///< crept up since then; else it came at once
     std::size_t readings = 0; ///< that carry it
+    bool at_edge = false;   ///< the earliest onset that was tried: it may have begun before
     double months = 0.0;    ///< from the reading before the onset to the last
     double strength = 0.0;  ///< of the strongest sign, in standard deviations, slow wander allowed for
     double likelihood = 0.0; ///< the same without that: among onsets and shapes the largest fits best
@@ -22,9 +23,9 @@ struct ChangeWindow
 /// Readings before the change that a quantity's own usual level needs.
 inline constexpr std::size_t level_needs = 4;
 /// The longest stretch over which a change is sought.
-inline constexpr std::size_t longest_window = 24;
+inline constexpr std::size_t longest_window = 36;
 
-/// Tries every onset within the last 24 readings, as a step and as a ramp, and keeps the strongest.
+/// Tries every onset within the last 36 readings, as a step and as a ramp, and keeps the strongest.
 /// @param faults   those that may be meant
 /// @param earliest no onset before this reading
 /// @return nothing where no quantity has enough readings before and after

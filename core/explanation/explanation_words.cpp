@@ -19,6 +19,14 @@ using namespace std::chrono_literals;
 constexpr double fits_from = 0.8;          ///< share explained from which "fits" is said without "partly"
 constexpr std::size_t course_needs = 3;    ///< readings from which its course over time is spoken of
 
+/// A crankcase pressure is no reading of a crosshead engine, nor a piston coolant of a trunk piston engine.
+bool can_be_read(std::size_t index, bool two_stroke)
+{
+    const FaultQuantity& of = fault_quantities()[index];
+    const auto id = find_quantity(of.read_as.empty() ? of.name : of.read_as);
+    return !id || quantity(*id).only_for.empty() || (quantity(*id).only_for == "two-stroke") == two_stroke;
+}
+
 std::string words_of(const QuantityEvidence& evidence)
 {
     const std::string name = fault_quantity_words(evidence.quantity);
@@ -74,7 +82,8 @@ std::string readings_words(std::size_t count)
 std::string history_sentence(const SubjectExplanation& subject, const EngineRecord& record, const ChangeWindow& window)
 {
     const std::string since = short_date(record.readings[window.onset - 1].taken_at.utc);
-    std::string text = window.readings == 1 ? "Only the last reading shows it; before that nothing did."
+    std::string text = window.at_edge ? "It stands for " + readings_words(window.readings) + " or more."
+                       : window.readings == 1 ? "Only the last reading shows it; before that nothing did."
                        : window.ramp ? "It crept up since " + since + ", over " + readings_words(window.readings) + "."
                                      : "It came at once after " + since + " and stands for " + readings_words(window.readings) + ".";
     const auto events = events_before(record, subject.subject, window.onset);
@@ -151,7 +160,7 @@ void word_hypothesis(Hypothesis& hypothesis, const ChangeWindow* window, bool tw
             hypothesis.fits.push_back(evidence.words + " (partly fits)");
         else if (evidence.says == Says::against)
             hypothesis.against.push_back(evidence.words);
-        else if (evidence.says == Says::not_read)
+        else if (evidence.says == Says::not_read && can_be_read(evidence.quantity, two_stroke))
             hypothesis.not_read.push_back(evidence.words);
     }
     if (window)

@@ -5,6 +5,7 @@
 #include "core/catalogue_text.h"
 #include "core/trend/flag_text.h"
 
+#include <algorithm>
 #include <array>
 #include <stdexcept>
 #include <utility>
@@ -76,7 +77,7 @@ void set_finer_levels(std::vector<Fault>& faults)
     const CatalogueTable table(catalogue_text::fault_finer_levels);
     for (std::size_t row = 0; row < table.rows(); ++row)
         for (Fault& fault : faults)
-            if (fault.id == table.cell(row, "fault_id"))
+            if (!fault.variant && fault.id == table.cell(row, "fault_id"))
                 fault.full_levels[find_fault_quantity(table.cell(row, "quantity")).value()] = table.number(row, "level");
 }
 
@@ -86,6 +87,7 @@ std::vector<Fault> load_faults()
     std::vector<Fault> faults;
     for (std::size_t row = 0; row < table.rows(); ++row) {
         Fault fault = load_fault(table, row);
+        fault.variant = std::any_of(faults.begin(), faults.end(), [&](const Fault& before) { return before.id == fault.id; });
         for (std::size_t line = 0; line < words.rows(); ++line)
             if (words.cell(line, "fault_id") == fault.id) {
                 fault.title = words.cell(line, "title");

@@ -43,6 +43,7 @@ struct Fault
     enum class Test { signature, unit, swap, single_value, alarm_only };
     enum class Course { any, sudden, creeping };
     std::string id;
+    bool variant = false; ///< a second pattern of a fault listed before
     Group group = Group::cylinder;
     bool of_engine = false; ///< all cylinders or the engine as a whole; else one cylinder
     std::string engine_kind; ///< "two_stroke", "four_stroke" or "any"

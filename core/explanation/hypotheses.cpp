@@ -3,13 +3,13 @@
 
 #include <algorithm>
 #include <cmath>
-#include <iterator>
 #include <utility>
 
 namespace evenstroke {
 namespace {
 
 constexpr double least_explained = 0.5;
+constexpr double least_log_weight = 1.0; ///< a cause has to be likelier than nothing at all: three to one
 constexpr std::size_t most_shown = 3;
 /// Logarithm of the odds below which two causes count as equals: three to one. Settled by simulation.
 constexpr double equal_odds = 1.1;
@@ -62,7 +62,7 @@ std::optional<FaultMatch> match_in_the_rest(std::span<const Fault* const> faults
         return std::nullopt;
     const auto matches = match_faults(faults, rest);
     const auto found = std::find_if(matches.begin(), matches.end(), [&](const FaultMatch& match) {
-        return match.fault != first.fault && match.explained >= least && match.log_weight > 3.0;
+        return match.fault->id != first.fault->id && match.explained >= least && match.log_weight > 3.0;
     });
     if (found == matches.end() || found->log_weight < log_weight_of_no_pattern(rest))
         return std::nullopt;
@@ -113,13 +113,13 @@ const FaultMatch* first_shown(const std::vector<FaultMatch>& matches, const std:
 QuantityEvidence::Says what_it_says(double moved, double expected)
 {
     using Says = QuantityEvidence::Says;
-    const bool both_moved = std::abs(moved) >= moved_from && std::abs(expected) >= moved_from;
-    const bool contradicts = std::abs(moved - expected) >= contradicts_from;
-    if (both_moved && moved * expected > 0.0)
-        return contradicts && std::abs(expected) < largest_level ? Says::partly_fits : Says::fits;
-    if (contradicts)
+    const bool should_move = std::abs(expected) >= moved_from, has_moved = std::abs(moved) >= moved_from;
+    const bool far_off = std::abs(moved - expected) >= contradicts_from, same_way = moved * expected > 0.0;
+    if (!should_move)
+        return far_off ? Says::against : Says::as_usual;
+    if (!same_way || (far_off && !has_moved))
         return Says::against;
-    return std::abs(moved) < moved_from && std::abs(expected) < moved_from ? Says::as_usual : Says::partly_fits;
+    return has_moved && (!far_off || std::abs(expected) >= largest_level) ? Says::fits : Says::partly_fits;
 }
 
 } // namespace
@@ -161,13 +161,17 @@ std::vector<Hypothesis> rank_causes(std::span<const Fault* const> faults, const 
 {
     const std::vector<FaultMatch> all = match_faults(faults, window.changes);
     std::vector<FaultMatch> matches;
-    std::copy_if(all.begin(), all.end(), std::back_inserter(matches),
-                 [](const FaultMatch& match) { return match.explained >= least_explained; });
+    for (const FaultMatch& match : all) {
+        const bool known = std::any_of(matches.begin(), matches.end(),
+                                       [&](const FaultMatch& before) { return before.fault->id == match.fault->id; });
+        if (match.explained >= least_explained && match.log_weight >= least_log_weight && !known) // of two patterns of a fault the likelier one
+            matches.push_back(match);
+    }
     std::vector<Hypothesis> shown = shown_of(matches, window);
     if (matches.empty()) {
         shown = two_together(faults, all, window);
     } else if (const auto second = match_in_the_rest(faults, *first_shown(matches, shown), window.changes, rest_explained)) {
-        const bool known = std::any_of(shown.begin(), shown.end(), [&](const Hypothesis& one) { return one.fault == second->fault; });
+        const bool known = std::any_of(shown.begin(), shown.end(), [&](const Hypothesis& one) { return one.fault->id == second->fault->id; });
         if (!known) {
             shown.push_back(made_from(*second, window));
             shown.back().in_the_rest = true;

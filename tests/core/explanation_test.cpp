@@ -5,6 +5,7 @@
 #include <gtest/gtest.h>
 
 #include <algorithm>
+#include <cmath>
 
 using namespace evenstroke;
 
@@ -92,6 +93,8 @@ TEST(Explanation, NamesALeakingExhaustValveWithItsEvidence)
         return contains(line, "exhaust temperature") && contains(line, "up");
     }));
     EXPECT_TRUE(std::find(first.not_read.begin(), first.not_read.end(), "expansion pressure") != first.not_read.end());
+    EXPECT_TRUE(std::find(first.not_read.begin(), first.not_read.end(), "crankcase pressure") == first.not_read.end())
+        << "a crosshead engine has none";
     EXPECT_FALSE(first.check_next.empty());
     EXPECT_FALSE(first.cautions.empty());
     EXPECT_TRUE(fourth->sudden);
@@ -218,6 +221,30 @@ TEST(Explanation, ATwoFoldPatternNamesASecondCauseInTheRest)
     EXPECT_TRUE(std::any_of(fourth->causes.begin(), fourth->causes.end(), [](const Hypothesis& one) {
         return one.fault->id == "jacket_cooling_restricted" && one.in_the_rest && contains(one.what, "perhaps also");
     })) << all_words(explanation);
+}
+
+TEST(Explanation, ASmallDipIsNotCalledACylinderThatDoesNotFire)
+{
+    EngineRecord record = example_record(readings);
+    change(record, "exhaust_temperature", Place::cylinder(2), -16.0);
+    change(record, "maximum_pressure", Place::cylinder(2), -2.4);
+    change(record, "fuel_index", Place::cylinder(2), -1.2);
+    const Explanation explanation = explained(record);
+    const SubjectExplanation* second = subject_at(explanation, Place::cylinder(2));
+    ASSERT_NE(second, nullptr);
+    for (const Hypothesis& cause : second->causes)
+        EXPECT_NE(cause.fault->id, "misfire") << all_words(explanation);
+}
+
+TEST(Explanation, WhatMovedTheOtherWaySpeaksAgainst)
+{
+    const Explanation explanation = explained(with_leaking_valve());
+    for (const Hypothesis& cause : subject_at(explanation, Place::cylinder(4))->causes)
+        for (const QuantityEvidence& evidence : cause.evidence)
+            if (evidence.amount && evidence.says != QuantityEvidence::Says::against
+                && std::abs(*evidence.expected) >= fault_quantities()[evidence.quantity].noise) {
+                EXPECT_GT(*evidence.amount * *evidence.expected, 0.0) << cause.fault->id << ": " << evidence.words;
+            }
 }
 
 TEST(Explanation, OddEnginesGetAnAnswerAndNoCrash)

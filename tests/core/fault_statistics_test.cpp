@@ -42,7 +42,7 @@ Named named_causes()
         FaultRecipe recipe;
         recipe.fault = fault;
         recipe.fewest_after = 6;
-        for (std::size_t n = 0; n < engines(6); ++n) {
+        for (std::size_t n = 0; n < engines(5); ++n) {
             const FaultTrial trial = simulate_fault(recipe, ++seed);
             if (!can_be_told_apart(trial))
                 continue;
@@ -83,7 +83,7 @@ TEST(FaultStatistics, TheTrueCauseIsMostlyNamedFirstAndNearlyAlwaysAmongTheFirst
 TEST(FaultStatistics, SoundEnginesAreSeldomSaidToBeOutOfTheUsual)
 {
     std::size_t claimed = 0;
-    const std::size_t count = engines(80);
+    const std::size_t count = engines(60);
     for (std::size_t n = 0; n < count; ++n)
         claimed += judge_trial(simulate_fault(FaultRecipe{}, first_seed + 1'000'000 + n)).other_subjects > 0 ? 1 : 0;
     const Interval share = binomial_interval(claimed, count);
