@@ -9,7 +9,8 @@
 namespace evenstroke::indicator {
 namespace {
 
-constexpr double lowest_possible = -1.0, highest_possible = 400.0; // bar; common practice, no source
+// bar as recorded: a transducer's zero may be some bars low; common practice, no source
+constexpr double lowest_possible = -6.0, highest_possible = 400.0;
 constexpr std::size_t fewest_samples = 60, most_spikes = 3;
 
 bool possible(double pressure) { return pressure >= lowest_possible && pressure <= highest_possible; }
@@ -60,7 +61,7 @@ std::optional<Problem> find_sample_problem(const Trace& trace)
     // A few are spikes of the cable.
     if (outside > std::max(most_spikes, trace.angle.size() / 500))
         return invalid_input(sample_text(first_outside) + " has " + short_number_text(trace.pressure[first_outside]) +
-                                 " bar at " + number_text(trace.angle[first_outside]) + "°; a cylinder has -1 to 400 bar.",
+                                 " bar at " + number_text(trace.angle[first_outside]) + "°; a card has -6 to 400 bar.",
                              "Check the unit of the pressures: they are expected in bar.");
     if (!(highest > lowest))
         return invalid_input(highest < lowest ? std::string("The card has no pressure at all.")
