@@ -45,8 +45,7 @@ class CardCommand : public testing::Test
 protected:
     void SetUp() override
     {
-        ASSERT_EQ(run({"sample", "--out", folder_.filePath("sample")}).code, 0);
-        const QDir engine(folder_.filePath("sample/main_engine"));
+        const QDir engine(QStringLiteral(EVENSTROKE_SOURCE_DIR "/sample_vessel/files/main_engine"));
         engine_ = engine.filePath("engine.json");
         cards_ = engine.filePath("cards/2026-10");
     }
