@@ -13,7 +13,7 @@ using namespace evenstroke::indicator;
 
 namespace {
 
-struct Row
+struct BenchCard
 {
     const char* name;
     bool two_stroke;
@@ -21,7 +21,7 @@ struct Row
     int cycles;
 };
 
-void measure(const Row& row)
+void measure(const BenchCard& row)
 {
     Dice dice(1);
     SimulatedCase what = healthy_case(row.two_stroke, dice);
@@ -41,14 +41,14 @@ void measure(const Row& row)
 
 int main()
 {
-    const Row rows[] = {{"two-stroke, one cycle, 0.5 degree", true, 0.5, 1},
+    const BenchCard rows[] = {{"two-stroke, one cycle, 0.5 degree", true, 0.5, 1},
                         {"four-stroke, one cycle, 0.5 degree", false, 0.5, 1},
                         {"two-stroke, one cycle, 0.1 degree", true, 0.1, 1},
                         {"four-stroke, one cycle, 0.1 degree", false, 0.1, 1},
                         {"two-stroke, twenty cycles, 0.5 degree", true, 0.5, 20},
                         {"two-stroke, twenty cycles, 0.1 degree", true, 0.1, 20},
                         {"four-stroke, twenty cycles, 0.1 degree", false, 0.1, 20}};
-    for (const Row& row : rows)
+    for (const BenchCard& row : rows)
         measure(row);
     return 0;
 }
