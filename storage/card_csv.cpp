@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "storage/card_rows.h"
+#include "storage/card_with_gaps.h"
 
 #include "core/plain_text.h"
 #include "core/units/unit_catalogue.h"
@@ -66,10 +67,17 @@ Result<double> read_number(std::string_view field)
     return parse_number(field);
 }
 
+/// How recorders write a sample that they did not get.
+bool is_missing(std::string_view field)
+{
+    const std::string_view word = trimmed(field);
+    return word.empty() || word == "nan" || word == "NaN" || word == "NAN" || word == "-";
+}
+
 class CardText
 {
 public:
-    explicit CardText(std::string_view text) : rest_(text) {}
+    explicit CardText(std::string_view text, bool gaps = false) : rest_(text), gaps_(gaps) {}
     Result<CardTrace> read();
     qint64 line() const { return line_; } ///< the last one read: where it was refused
 
@@ -77,6 +85,7 @@ private:
     Done read_row(std::string_view row);
 
     std::string_view rest_;
+    bool gaps_; ///< pressures may be missing
     Layout layout_;
     CardTrace trace_;
     qint64 line_ = 1;
@@ -101,7 +110,7 @@ Done CardText::read_row(std::string_view row)
         return invalid_input(
             "The crank angle " + number_text(angle.value()) + "° is beyond one working cycle.",
             "Write -180 to 180 degrees, or -360 to 360 for a four-stroke; firing dead centre is 0.");
-    const auto pressure = read_number(row);
+    const auto pressure = gaps_ && is_missing(row) ? Result<double>(std::nan("")) : read_number(row);
     if (!pressure.has_value())
         return invalid_input("The pressure is not readable: " + pressure.error().what_happened,
                              pressure.error().what_to_do);
@@ -188,6 +197,21 @@ Result<CardTrace> read_card_file(const QString& path)
     if (!content)
         return content.error();
     return read_card_text(as_text(content.value()), from_qt(QFileInfo(path).fileName()));
+}
+
+Result<CardTrace> read_card_with_gaps(const QString& path)
+{
+    const auto content = card_content(path);
+    if (!content)
+        return content.error();
+    CardText card(as_text(content.value()), true);
+    auto trace = card.read();
+    if (trace)
+        return trace;
+    Problem problem = trace.error();
+    problem.what_happened =
+        from_qt(QFileInfo(path).fileName()) + ", line " + std::to_string(card.line()) + ": " + problem.what_happened;
+    return problem;
 }
 
 std::string card_text(const CardTrace& trace)

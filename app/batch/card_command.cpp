@@ -5,7 +5,7 @@
 #include "core/card/evaluation.h"
 #include "core/plain_text.h"
 #include "core/units/unit_catalogue.h"
-#include "storage/card_store.h"
+#include "storage/card_with_gaps.h"
 #include "storage/engine_json.h"
 
 #include <QDir>
@@ -101,7 +101,7 @@ struct Answer
 
 Answer evaluate_file(const Engine& engine, Conditions conditions, const QString& file)
 {
-    auto read = storage::read_card_file(file);
+    auto read = storage::read_card_with_gaps(file);
     if (!read)
         return {{}, read.error()};
     storage::CardTrace& recorded = read.value();

@@ -116,9 +116,29 @@ void find_firing_peak(Evaluation& card, const SelfCalibration& found)
     card.firing_peak = peak;
 }
 
-void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& setting, const ThinTrace& thin,
-                     const DirectReadings& direct, const SelfCalibration& found)
+/// Rings the passage after the flame's own peak?
+std::optional<Ringing> find_passage(const Evaluation& card, const Setting& setting, const DirectReadings& direct,
+                                    const SelfCalibration& found)
 {
+    if (!direct.peak || !found.start || !setting.speed_known)
+        return std::nullopt;
+    const double start = found.start->start + found.fit.values[offset];
+    double peak = direct.peak->angle;
+    if (start > peak) // the largest pressure is that of compression
+        if (const auto own = find_peak(card.trace.angle, card.trace.mean, card.trace.noise_mean, start + 2.0, start + 52.0))
+            peak = own->angle;
+    return start > peak ? std::nullopt
+                        : find_ringing(card.trace.angle, card.trace.mean, peak, card.trace.noise_mean, setting.cylinder.speed_rpm);
+}
+
+void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& setting, const ThinTrace& thin,
+                     DirectReadings direct, const SelfCalibration& found)
+{
+    const auto ringing = find_passage(card, setting, direct, found);
+    if (ringing) {
+        direct.passage_lag = ringing->lag;
+        direct.passage_swing = 3.0 * ringing->amplitude; // at the peak it swings more than on average after it
+    }
     ResultMaker maker(engine, card.trace, thin, direct, setting, found);
     card.method = found.method;
     card.unknowns = found.fit.values;
@@ -136,7 +156,7 @@ void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& sett
     fill_line(card, setting.cylinder, found);
     fill_exponents(card, setting.cylinder);
     find_firing_peak(card, found);
-    remark_on_compression(card, thin, setting, found);
+    remark_on_compression(card, thin, setting, found, ringing);
     remark_on_combustion(card, found);
 }
 

@@ -144,7 +144,7 @@ DirectReadings read_directly(Evaluation& card, const SliderCrank& gear)
 std::optional<Problem> find_unit_problem(const Engine& engine, const Conditions& conditions, const SliderCrank& gear,
                                          const ThinTrace& thin)
 {
-    constexpr double lowest_charge = 0.35, highest_charge = 12.0, far = 2.5; // bar; factor. Common practice, no source
+    constexpr double lowest_charge = 0.55, highest_charge = 12.0, far = 2.5; // bar; factor. Common practice, no source
     if (!engine.compression_ratio || !engine.cylinder_closes_deg)
         return std::nullopt;
     const auto clearance = gear.clearance_volume(*engine.compression_ratio);

@@ -66,10 +66,10 @@ void remark_on_drift(Evaluation& card, const ThinTrace& thin, const Setting& set
 
 } // namespace
 
-void remark_on_compression(Evaluation& card, const ThinTrace& thin, const Setting& setting, const SelfCalibration& found)
+void remark_on_compression(Evaluation& card, const ThinTrace& thin, const Setting& setting, const SelfCalibration& found,
+                           const std::optional<Ringing>& ringing)
 {
     constexpr double ratio_worth_saying = 0.02;
-    constexpr double damping = 0.1, harmless = 0.1; // of a passage; degrees of lag
     if (found.doubtful) {
         card.remarks.push_back(
             make_remark("geometry_or_zero_doubtful", {shown(found.wall_multiplier), method_sentence(found.method)}));
@@ -81,15 +81,9 @@ void remark_on_compression(Evaluation& card, const ThinTrace& thin, const Settin
         card.remarks.push_back(make_remark("tdc_assumed", {shown(found.fit.values[offset])}));
     remark_on_zero(card, setting, found);
     remark_on_drift(card, thin, setting, found);
-    const auto& peak_angle = card[CardResult::maximum_pressure_angle];
-    if (!peak_angle || !setting.speed_known)
-        return;
-    const double speed = setting.cylinder.speed_rpm;
-    const double too_slow = 6.0 * speed * 2.0 * damping / (2.0 * 3.14159265358979323846 * harmless);
-    const auto ringing = find_ringing(card.trace.angle, card.trace.mean, peak_angle->value + found.fit.values[offset],
-                                      card.trace.noise_mean, speed);
-    if (ringing && *ringing < too_slow)
-        card.remarks.push_back(make_remark("passage_resonance", {short_number_text(std::round(*ringing))}, peak_angle->value));
+    if (ringing)
+        card.remarks.push_back(make_remark("passage_resonance", {short_number_text(std::round(ringing->frequency))},
+                                           card[CardResult::maximum_pressure_angle]->value));
 }
 
 void remark_on_combustion(Evaluation& card, const SelfCalibration& found)

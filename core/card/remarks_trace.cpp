@@ -68,7 +68,7 @@ void remark_on_extent(Evaluation& card, const SliderCrank& gear)
 
 void remark_on_trace(Evaluation& card, const SliderCrank& gear, const DirectReadings& direct)
 {
-    constexpr double noise_worth_saying = 0.35, filled_worth_saying = 0.02;
+    constexpr double noise_worth_saying = 0.42, filled_worth_saying = 0.02;
     const CleanTrace& trace = card.trace;
     remark_on_extent(card, gear);
     if (trace.complete())
@@ -89,9 +89,10 @@ void remark_on_trace(Evaluation& card, const SliderCrank& gear, const DirectRead
     remark_on_cycles(card, direct);
 }
 
-std::optional<double> find_ringing(std::span<const double> angle, std::span<const double> pressure, double peak_angle,
-                                   double noise, double speed_rpm)
+std::optional<Ringing> find_ringing(std::span<const double> angle, std::span<const double> pressure, double peak_angle,
+                                    double noise, double speed_rpm)
 {
+    constexpr double damping = 0.1, harmless = 0.1; // of a passage (common practice); degrees
     constexpr double stretch = 40.0, shortest = 1.5, longest = 10.0; // degrees
     const Range range = samples_within(angle, peak_angle + 1.0, peak_angle + 1.0 + stretch);
     if (range.count < 30)
@@ -128,7 +129,10 @@ std::optional<double> find_ringing(std::span<const double> angle, std::span<cons
     const double by_chance = 5.0 * noise * std::sqrt(2.0 / static_cast<double>(rest.size()));
     if (best < std::max(by_chance, 0.25) || best_period > 0.95 * longest)
         return std::nullopt;
-    return 6.0 * speed_rpm / best_period;
+    const double lag = 2.0 * damping * best_period / (2.0 * 3.14159265358979323846);
+    if (lag < harmless)
+        return std::nullopt;
+    return Ringing{6.0 * speed_rpm / best_period, best, lag};
 }
 
 } // namespace evenstroke::indicator

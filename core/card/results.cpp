@@ -125,7 +125,8 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     const double cycles = static_cast<double>(clean_.cycles.size());
     if (result == CardResult::maximum_pressure && direct_.peak) {
         const double noise = direct_.peak->pressure_spread;
-        squares += noise * noise + direct_.maximum_spread * direct_.maximum_spread / cycles;
+        squares += noise * noise + direct_.maximum_spread * direct_.maximum_spread / cycles +
+                   direct_.passage_swing * direct_.passage_swing;
     }
     if (result == CardResult::maximum_pressure_angle && direct_.peak)
         squares += direct_.peak->angle_spread * direct_.peak->angle_spread;
@@ -149,7 +150,8 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     if (result == CardResult::start_of_combustion && !found_.line_log.empty()) {
         // ln p rises by about 0.02 a degree where the start is laid back from (common practice).
         const double share = thin_.noise / std::exp(found_.line_log.front()) / 0.02;
-        squares += 2.0 * share * share;
+        // Fewer samples to lay it through where they are far apart.
+        squares += 2.0 * share * share * std::pow(thin_.step / 0.5, 3.0) + 4.0 * direct_.passage_lag * direct_.passage_lag;
     }
     return std::sqrt(squares);
 }
@@ -160,7 +162,8 @@ Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat)
     base_spread_.reset();
     if (heat)
         base_spread_ = heat_noise(*heat);
-    const UnknownCovariance& covariance = found_.fit.covariance;
+    UnknownCovariance covariance = found_.fit.covariance;
+    covariance[offset][offset] += direct_.passage_lag * direct_.passage_lag;
     std::array<Unknowns, result_count> slopes{};
     Unknowns values = found_.fit.values;
     for (std::size_t unknown = 0; unknown < unknown_count; ++unknown) {

@@ -13,7 +13,7 @@ struct DirectReadings
     std::optional<Peak> peak;           ///< means over the cycles, as recorded
     double maximum_spread = 0.0;        ///< standard deviation of one cycle's maximum
     std::optional<Rise> rise;
-    std::optional<Peak> firing_peak;    ///< as recorded, where the largest pressure is that of compression
+    double passage_lag = 0.0, passage_swing = 0.0; ///< degrees, bar: one standard deviation of what a ringing passage adds
 };
 
 using Numbers = std::array<std::optional<double>, result_count>;

@@ -70,7 +70,7 @@ struct CleanTrace
 inline constexpr std::size_t most_samples = 4'000'000; ///< 500 cycles of a four-stroke in tenths of a degree
 
 /// @par Problems invalid_input, naming the sample: no or too few samples, angles that fall or stand twice, more than
-///      one period in a cycle, all pressures the same, pressures outside -1 to 400 bar, a compression that is not
+///      one period in a cycle, all pressures the same, pressures outside -6 to 400 bar, a compression that is not
 ///      covered
 Result<CleanTrace> clean(const Trace& trace, const TraceFrame& frame);
 

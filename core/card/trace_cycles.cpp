@@ -9,8 +9,11 @@
 namespace evenstroke::indicator {
 namespace {
 
-constexpr double lowest_possible = -1.0, highest_possible = 400.0; // bar; common practice, no source
-constexpr std::size_t fewest_samples = 60;
+// bar as recorded: a transducer's zero may be some bars low; common practice, no source
+constexpr double lowest_possible = -6.0, highest_possible = 400.0;
+constexpr std::size_t fewest_samples = 60, most_spikes = 3;
+
+bool possible(double pressure) { return pressure >= lowest_possible && pressure <= highest_possible; }
 
 std::string sample_text(std::size_t index)
 {
@@ -41,19 +44,25 @@ std::optional<Problem> find_sample_problem(const Trace& trace)
                                  " samples, too few for a diagram.",
                              "Take a card with at least one sample every 2 degrees of crank angle.");
     double lowest = 1e9, highest = -1e9;
+    std::size_t outside = 0, first_outside = 0;
     for (std::size_t i = 0; i < trace.angle.size(); ++i) {
         const double p = trace.pressure[i];
         if (!std::isfinite(trace.angle[i]) || std::isinf(p))
             return invalid_input(sample_text(i) + " is no number.", "Check the card around this sample.");
         if (std::isnan(p))
             continue;
-        if (p < lowest_possible || p > highest_possible)
-            return invalid_input(sample_text(i) + " has " + short_number_text(p) + " bar at " +
-                                     number_text(trace.angle[i]) + "°; a cylinder has -1 to 400 bar.",
-                                 "Check the unit of the pressures: they are expected in bar.");
+        if (!possible(p)) {
+            first_outside = outside++ == 0 ? i : first_outside;
+            continue;
+        }
         lowest = std::min(lowest, p);
         highest = std::max(highest, p);
     }
+    // A few are spikes of the cable.
+    if (outside > std::max(most_spikes, trace.angle.size() / 500))
+        return invalid_input(sample_text(first_outside) + " has " + short_number_text(trace.pressure[first_outside]) +
+                                 " bar at " + number_text(trace.angle[first_outside]) + "°; a card has -6 to 400 bar.",
+                             "Check the unit of the pressures: they are expected in bar.");
     if (!(highest > lowest))
         return invalid_input(highest < lowest ? std::string("The card has no pressure at all.")
                                               : "All pressures of the card are " + short_number_text(highest) + " bar.",
@@ -92,12 +101,14 @@ Result<std::vector<RecordedCycle>> split_cycles(const Trace& trace, const TraceF
         const bool begins = i == 0 || (numbered ? trace.cycle[i] != trace.cycle[i - 1]
                                                 : trace.angle[i] < trace.angle[i - 1] - 0.5 * period);
         if (begins)
-            cycles.push_back({numbered ? trace.cycle[i] : static_cast<int>(cycles.size()) + 1, {}, {}});
+            cycles.push_back({numbered ? trace.cycle[i] : static_cast<int>(cycles.size()) + 1, 0, {}, {}});
         else if (!(trace.angle[i] > trace.angle[i - 1]))
             return steps_back(trace, i);
         RecordedCycle& cycle = cycles.back();
         cycle.angle.push_back(trace.angle[i]);
-        cycle.pressure.push_back(trace.pressure[i]);
+        const bool spike = !std::isnan(trace.pressure[i]) && !possible(trace.pressure[i]);
+        cycle.pressure.push_back(spike ? std::nan("") : trace.pressure[i]);
+        cycle.spikes += spike ? 1 : 0;
         if (trace.angle[i] - cycle.angle.front() > period + 1e-6)
             return invalid_input(sample_text(i) + " lies " + short_number_text(trace.angle[i] - cycle.angle.front()) +
                                      "° after the first of its cycle; a " +

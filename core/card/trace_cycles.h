@@ -9,6 +9,7 @@ namespace evenstroke::indicator {
 struct RecordedCycle
 {
     int number = 1;
+    int spikes = 0; ///< samples that no cylinder has, now missing
     std::vector<double> angle, pressure;
 };
 

@@ -25,14 +25,17 @@ bool sticks_out(double before, double here, double after, double limit)
     return (left > limit && right > limit) || (left < -limit && right < -limit);
 }
 
+/// Round the end of the cycle as well.
 std::vector<SpikeRun> find_spikes(const std::vector<double>& p, double limit)
 {
     std::vector<SpikeRun> runs;
-    for (std::size_t i = 1; i + 2 < p.size(); ++i) {
-        if (sticks_out(p[i - 1], p[i], p[i + 1], limit))
+    const std::size_t n = p.size();
+    for (std::size_t i = 0; i < n; ++i) {
+        const double before = p[(i + n - 1) % n], here = p[i], next = p[(i + 1) % n], after = p[(i + 2) % n];
+        if (sticks_out(before, here, next, limit))
             runs.push_back({i++, 1});
-        else if (sticks_out(p[i - 1], p[i], p[i + 2], limit) && sticks_out(p[i - 1], p[i + 1], p[i + 2], limit) &&
-                 std::abs(p[i + 2] - p[i - 1]) < std::abs(p[i] - p[i - 1]))
+        else if (sticks_out(before, here, after, limit) && sticks_out(before, next, after, limit) &&
+                 std::abs(after - before) < std::abs(here - before))
             runs.push_back({i, 2}), i += 2;
     }
     return runs;
@@ -94,7 +97,7 @@ void remove_spikes(CleanTrace& trace, Cycle& cycle, double noise)
             continue;
         ++trace.spikes;
         for (std::size_t k = 0; k < run.length; ++k)
-            cycle.pressure[run.first + k] = nan;
+            cycle.pressure[(run.first + k) % cycle.pressure.size()] = nan;
     }
 }
 

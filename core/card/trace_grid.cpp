@@ -179,6 +179,7 @@ CleanTrace lay_on_grid(const std::vector<RecordedCycle>& cycles, const TraceFram
     trace.filled.assign(grid.places, false);
     for (const RecordedCycle& recorded : cycles) {
         const bool even = stands_on(recorded, grid);
+        trace.spikes += recorded.spikes;
         Cycle cycle{recorded.number, even ? take_samples(recorded, grid) : resample(recorded, grid), {}, {}};
         if (!even) {
             trace.uneven = true;

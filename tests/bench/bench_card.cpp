@@ -1,0 +1,54 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// How long a card takes: evaluated whole (aim: at most 4 ms), its file read (aim: at most a tenth of that), and twenty
+// cycles in tenths of a degree (aim: at most 40 ms). Processor time of one thread; nothing fails on it.
+#include "core/card/evaluation.h"
+#include "storage/card_store.h"
+#include "tests/bench/processor_time.h"
+#include "tests/core/card_simulator.h"
+
+#include <cstdio>
+
+using namespace evenstroke;
+using namespace evenstroke::indicator;
+
+namespace {
+
+struct BenchCard
+{
+    const char* name;
+    bool two_stroke;
+    double step;
+    int cycles;
+};
+
+void measure(const BenchCard& row)
+{
+    Dice dice(1);
+    SimulatedCase what = healthy_case(row.two_stroke, dice);
+    what.step = row.step;
+    what.cycles = row.cycles;
+    const SimulatedCard card = simulate(what, dice);
+    const std::string text = storage::card_text({card.trace.cycle, card.trace.angle, card.trace.pressure, false});
+    bool good = true;
+    const double reading = best_of(7, [&] { good = storage::read_card_text(text, "card").has_value() && good; });
+    const double evaluating =
+        best_of(7, [&] { good = evaluate(card.engine, card.conditions, card.trace).has_value() && good; });
+    std::printf("%-44s %7zu samples: evaluated %7.2f ms, file read %7.2f ms (%.0f %%)%s\n", row.name, card.trace.angle.size(),
+                evaluating, reading, 100.0 * reading / evaluating, good ? "" : " REFUSED");
+}
+
+} // namespace
+
+int main()
+{
+    const BenchCard rows[] = {{"two-stroke, one cycle, 0.5 degree", true, 0.5, 1},
+                        {"four-stroke, one cycle, 0.5 degree", false, 0.5, 1},
+                        {"two-stroke, one cycle, 0.1 degree", true, 0.1, 1},
+                        {"four-stroke, one cycle, 0.1 degree", false, 0.1, 1},
+                        {"two-stroke, twenty cycles, 0.5 degree", true, 0.5, 20},
+                        {"two-stroke, twenty cycles, 0.1 degree", true, 0.1, 20},
+                        {"four-stroke, twenty cycles, 0.1 degree", false, 0.1, 20}};
+    for (const BenchCard& row : rows)
+        measure(row);
+    return 0;
+}
