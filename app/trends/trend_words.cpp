@@ -192,6 +192,9 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     picture.fits = to_qstring(flag->pattern_words);
     for (const MovedQuantity& moved : flag->moved)
         picture.moved.append(moved_text(moved, flag->ramp));
+    if (!flag->carrying.empty())
+        picture.moved.append(tr_("carried by %n reading(s) since %1", static_cast<int>(flag->carrying.size()))
+                                 .arg(day_text(time_of(judgement, flag->carrying.front()))));
     picture.next_check = to_qstring(flag->next_check);
     picture.flag_index = static_cast<std::size_t>(flag - judgement.flags.data());
     picture.note_words = note_words(judgement, *flag);

@@ -6,6 +6,13 @@
 <context>
     <name>evenstroke</name>
     <message numerus="yes">
+        <source>carried by %n reading(s) since %1</source>
+        <translation>
+            <numerusform>carried by the reading of %1</numerusform>
+            <numerusform>carried by %n readings since %1</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
         <source>%1 would have spoken at %n reading(s)</source>
         <translation>
             <numerusform>%1 would have spoken at one reading</numerusform>
