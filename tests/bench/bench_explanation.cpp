@@ -165,7 +165,7 @@ int main(int count, char** arguments)
     const auto argument = [&](int at, unsigned long otherwise) {
         return count > at ? std::strtoul(arguments[at], nullptr, 10) : otherwise;
     };
-    const std::size_t each = argument(1, 60), sound = argument(2, 400);
+    const std::size_t each = argument(1, 20), sound = argument(2, 200);
     const std::uint64_t seed = argument(3, 52'000'000);
     print_cost();
     if (sound > 0) {
