@@ -9,6 +9,7 @@
 #include <QCoreApplication>
 
 #include <cmath>
+#include <set>
 
 namespace evenstroke {
 namespace {
@@ -28,11 +29,25 @@ public:
             lines_.push_back({kind, lead, words});
     }
 
+    /// Each once a subject: where it was read already it is not read again.
     void add_cautions(const std::vector<std::string>& names)
     {
         for (const std::string& name : names)
-            if (const Caution* caution = find_caution(name))
-                add(Kind::caution, to_qstring(caution->title + ". " + caution->short_text + " " + caution->authority));
+            if (const Caution* caution = find_caution(name); caution && warned_.insert(name).second)
+                add(Kind::caution, to_qstring(caution->title + ". " + caution->short_text +
+                                              (caution->emergency ? " " + caution->authority : std::string())));
+    }
+
+    /// An alarm matter stands before everything that could be read instead of acting on it.
+    void add_emergencies(const SubjectExplanation& subject)
+    {
+        warned_.clear();
+        std::vector<std::string> names;
+        for (const Hypothesis& cause : subject.causes)
+            for (const std::string& name : cause.cautions)
+                if (const Caution* caution = find_caution(name); caution && caution->emergency)
+                    names.push_back(name);
+        add_cautions(names);
     }
 
     void add_cause(const Hypothesis& cause)
@@ -42,8 +57,9 @@ public:
             what += tr_(" (%1 % of the pattern)").arg(std::lround(100.0 * *cause.explained));
         add(Kind::cause, what);
         add_cautions(cause.cautions);
-        add_list(tr_("fits"), cause.fits);
-        add_list(tr_("speaks against"), cause.against);
+        for (const QuantityEvidence& evidence : cause.evidence)
+            if (const QString lead = lead_of(evidence.says); !lead.isEmpty())
+                add(Kind::label, to_qstring(evidence.words), lead);
         add(Kind::label, to_qstring(comma_list(cause.not_read)), tr_("not read"));
         add(Kind::label, to_qstring(cause.course), tr_("course"));
         add(Kind::label, to_qstring(cause.fault->sets_apart), tr_("sets it apart"));
@@ -65,13 +81,21 @@ public:
     }
 
 private:
-    void add_list(const QString& lead, const std::vector<std::string>& items)
+    /// Empty for what is not worth a line of its own.
+    static QString lead_of(QuantityEvidence::Says says)
     {
-        for (const std::string& item : items)
-            add(Kind::label, to_qstring(item), lead);
+        switch (says) {
+        case QuantityEvidence::Says::fits: return tr_("fits");
+        case QuantityEvidence::Says::partly_fits: return tr_("partly fits");
+        case QuantityEvidence::Says::against: return tr_("speaks against");
+        case QuantityEvidence::Says::as_usual:
+        case QuantityEvidence::Says::not_read: break;
+        }
+        return {};
     }
 
     std::vector<CausesLine>& lines_;
+    std::set<std::string> warned_; ///< cautions of the subject in hand
 };
 
 } // namespace
@@ -83,6 +107,7 @@ std::vector<CausesLine> causes_lines(const Explanation& explanation)
     writer.add(Kind::plain, to_qstring(explanation.sentence));
     for (const SubjectExplanation& subject : explanation.subjects) {
         writer.add(Kind::subject, to_qstring(subject.answer));
+        writer.add_emergencies(subject);
         writer.add_cautions(subject.cautions);
         writer.add(Kind::plain, to_qstring(subject.history));
         writer.add(Kind::label, to_qstring(comma_list(subject.moved)), tr_("moved"));
@@ -94,7 +119,8 @@ std::vector<CausesLine> causes_lines(const Explanation& explanation)
             writer.add_cause(cause);
     }
     if (!explanation.subjects.empty())
-        writer.add(Kind::last, tr_("These are possible causes, not findings: the people on board, the maker and the class society "
+        writer.add(Kind::last, tr_("These are possible causes, not findings. The maker's instructions, the ship's safety management "
+                                   "system and the class society come before this text; the people on board and licensed engineers "
                                    "decide."));
     return lines;
 }

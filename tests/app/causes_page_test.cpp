@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/causes/causes_page.h"
 #include "app/causes/causes_text.h"
+#include "core/explanation/cautions.h"
 #include "tests/app/invented_judgement.h"
 #include "tests/app/page_desk.h"
 #include "tests/app/pictures.h"
@@ -24,8 +25,12 @@ TEST(CausesText, ACautionStandsBeforeWhatItWarnsOfAndTheLastWordIsNotOurs)
                 return line.kind == CausesLine::Kind::cause && line.words.contains(QString::fromStdString(cause.what));
             });
             ASSERT_NE(at, lines.end()) << cause.what;
-            if (!cause.cautions.empty()) {
-                EXPECT_EQ((at + 1)->kind, CausesLine::Kind::caution) << cause.what;
+            for (const std::string& name : cause.cautions) {
+                const QString caution = QString::fromStdString(find_caution(name)->title);
+                const auto reach = at + std::min<std::ptrdiff_t>(lines.end() - at, 1 + static_cast<std::ptrdiff_t>(cause.cautions.size()));
+                EXPECT_TRUE(std::any_of(lines.begin(), reach, [&](const CausesLine& line) {
+                    return line.kind == CausesLine::Kind::caution && line.words.startsWith(caution);
+                })) << cause.what << ", " << name;
             }
         }
     if (!explanation.subjects.empty()) {
