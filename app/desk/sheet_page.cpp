@@ -9,6 +9,7 @@
 #include <QGuiApplication>
 #include <QKeyEvent>
 #include <QPrinter>
+#include <QScrollBar>
 #include <QTextDocument>
 
 #include <algorithm>
@@ -37,9 +38,14 @@ QPushButton* SheetPage::add_action()
 void SheetPage::show_sheet()
 {
     shown_ = true;
+    const QString words = plain_text();
+    const int scrolled = words == words_ ? ui_->sheet->verticalScrollBar()->value() : 0;
+    words_ = words;
     fill(*ui_->sheet->document(), theme());
+    ui_->sheet->moveCursor(QTextCursor::Start); // setting a document leaves it at its end
+    ui_->sheet->verticalScrollBar()->setValue(scrolled);
     ui_->sheet->setAccessibleName(title());
-    ui_->sheet->setAccessibleDescription(plain_text());
+    ui_->sheet->setAccessibleDescription(words);
     ui_->sheet->show();
     ui_->empty->hide();
 }

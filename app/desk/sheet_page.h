@@ -52,6 +52,7 @@ private:
     void go_back();
 
     std::unique_ptr<Ui::SheetPage> ui_;
+    QString words_;      ///< of the sheet as it was filled last: the same again stays where it was scrolled to
     bool shown_ = false; ///< the sheet, and not words instead
 };
 

@@ -63,8 +63,11 @@ void TrendPage::connect_buttons()
     connect(ui_->copy_picture_button, &QPushButton::clicked, this, &TrendPage::copy_picture);
     connect(ui_->copy_data_button, &QPushButton::clicked, this, &TrendPage::copy);
     connect(ui_->save_button, &QPushButton::clicked, this, &TrendPage::ask_file);
-    connect(ui_->causes_button, &QPushButton::clicked, this, [this] { workplace().open_page(QStringLiteral("causes")); });
-    connect(ui_->detection_button, &QPushButton::clicked, this, [this] { workplace().open_page(QStringLiteral("detection")); });
+    const std::pair<QPushButton*, QString> pages[] = {{ui_->causes_button, QStringLiteral("causes")},
+                                                      {ui_->detection_button, QStringLiteral("detection")},
+                                                      {ui_->sisters_button, QStringLiteral("sisters")}};
+    for (const auto& [button, page] : pages)
+        connect(button, &QPushButton::clicked, this, [this, page = page] { workplace().open_page(page); });
     connect(ui_->note_button, &QPushButton::clicked, this, &TrendPage::ask_note);
     connect(ui_->plot, &TrendPlot::reading_chosen, this, &TrendPage::choose_reading);
     connect(ui_->table->selectionModel(), &QItemSelectionModel::currentRowChanged, this,
