@@ -18,7 +18,7 @@ protected:
     FlagNotes()
     {
         write_engine(QStringLiteral("one"), header + "2029-01,2029-01-10T08:00Z,load_percent,,75,%\n");
-        take_folder(*history_, path(QStringLiteral("one")));
+        take_folder(*history_, QStringLiteral("one"));
         engine_ = only_engine(*history_);
         note_.subject = Place::cylinder(3);
         note_.flagged_at = TimePoint(std::chrono::seconds(1'862'726'400));
