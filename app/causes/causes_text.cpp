@@ -64,7 +64,7 @@ public:
         add(Kind::label, to_qstring(cause.course), tr_("course"));
         add(Kind::label, to_qstring(cause.fault->sets_apart), tr_("sets it apart"));
         add(Kind::label, to_qstring(cause.check_next), tr_("check next"));
-        add(Kind::label, to_qstring(cause.urgency), tr_("urgency"));
+        add(Kind::label, to_qstring(urgency_word(cause.fault->urgency) + ": " + cause.urgency), tr_("urgency"));
     }
 
     void add_time(const SubjectExplanation& subject)
@@ -75,6 +75,11 @@ public:
             return number ? to_qstring(two_digits(*number)) : tr_("more than 120");
         };
         const TimeToLimit& time = *subject.time_to_limit;
+        if (time.months_95 && *time.months_95 < 0.5) {
+            add(Kind::plain, tr_("By now %1 has reached %2 (nine times in ten).")
+                                 .arg(to_qstring(lower_first(quantity(*subject.limit_quantity).title)), to_qstring(time.limit_text)));
+            return;
+        }
         add(Kind::plain, tr_("If it goes on, %1 reaches %2 in %3 months (nine times in ten: %4 to %5).")
                              .arg(to_qstring(lower_first(quantity(*subject.limit_quantity).title)), to_qstring(time.limit_text),
                                   months(time.months_50), months(time.months_5), months(time.months_95)));
