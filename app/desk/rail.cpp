@@ -114,8 +114,13 @@ RailButton* Rail::find(const QString& name) const
 
 void Rail::set_current(const QString& name)
 {
-    if (RailButton* button = find(name))
+    if (RailButton* button = find(name)) {
         button->setChecked(true);
+    } else if (QAbstractButton* before = group_->checkedButton()) {
+        group_->setExclusive(false); // a group that is exclusive keeps one checked
+        before->setChecked(false);
+        group_->setExclusive(true);
+    }
 }
 
 void Rail::set_count(const QString& name, int count)

@@ -41,6 +41,7 @@ public:
     void add(const QString& name, QChar key, const QString& title);
     /// Room before the next line: it is not part of the daily work.
     void add_space();
+    /// A page that has no line here leaves none marked.
     void set_current(const QString& name);
     void set_count(const QString& name, int count);
     void set_remark(const QString& name, const QString& remark);

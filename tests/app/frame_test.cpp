@@ -19,6 +19,7 @@
 
 #include <gtest/gtest.h>
 
+#include <QAbstractButton>
 #include <QApplication>
 #include <QClipboard>
 #include <QElapsedTimer>
@@ -30,6 +31,7 @@
 #include <QTemporaryDir>
 #include <QTest>
 
+#include <algorithm>
 #include <iostream>
 
 namespace evenstroke {
@@ -193,6 +195,21 @@ TEST_F(Desk, APartOfTheSentenceIsChosenByItsLetter)
     const QString before = workplace_.selection().engine;
     QTest::keyClick(chooser->findChild<QListView*>(), Qt::Key_Escape);
     EXPECT_EQ(workplace_.selection().engine, before);
+}
+
+TEST_F(Desk, APageThatIsNotOnTheRailLeavesNoLineMarked)
+{
+    open(QStringLiteral("sample.evenstroke"), QStringLiteral("trend"));
+    const auto marked = [this] {
+        const auto buttons = frame_.findChild<Rail*>()->findChildren<QAbstractButton*>();
+        return std::count_if(buttons.begin(), buttons.end(), [](const QAbstractButton* button) { return button->isChecked(); });
+    };
+    EXPECT_EQ(marked(), 1);
+    key(Qt::Key_Y);
+    EXPECT_EQ(frame_.current_page()->name(), QStringLiteral("causes"));
+    EXPECT_EQ(marked(), 0);
+    key(Qt::Key_B);
+    EXPECT_EQ(marked(), 1);
 }
 
 TEST_F(Desk, WhatWasFoundIsKeptWithItsFlag)
