@@ -27,11 +27,11 @@ SheetPage::SheetPage(Workplace& place, QWidget* parent) : Page(place, parent), u
 
 SheetPage::~SheetPage() = default;
 
-QPushButton* SheetPage::add_action()
+QPushButton* SheetPage::add_action(const QString& words)
 {
-    auto* button = new QPushButton(this);
+    auto* button = new QPushButton(words, this);
     button->setProperty("worded", true);
-    ui_->actions->insertWidget(0, button);
+    ui_->actions->insertWidget(actions_++, button);
     return button;
 }
 
@@ -39,7 +39,7 @@ void SheetPage::show_sheet()
 {
     shown_ = true;
     const QString words = plain_text();
-    const int scrolled = words == words_ ? ui_->sheet->verticalScrollBar()->value() : 0;
+    const int scrolled = keeps_place() || words == words_ ? ui_->sheet->verticalScrollBar()->value() : 0;
     words_ = words;
     fill(*ui_->sheet->document(), theme());
     ui_->sheet->moveCursor(QTextCursor::Start); // setting a document leaves it at its end
@@ -81,7 +81,7 @@ void SheetPage::go_back()
     if (workplace().can_go_back())
         workplace().go_back();
     else
-        workplace().open_page(QStringLiteral("board"));
+        workplace().open_page(page_before());
 }
 
 bool SheetPage::key_taken(const QKeyEvent& event)

@@ -36,10 +36,15 @@ protected:
     virtual QString plain_text() const = 0;
     /// A key of the page's own, asked for before Escape goes back.
     virtual bool take_key(int) { return false; }
+    /// Where Escape leads when nothing was looked at before.
+    virtual QString page_before() const { return QStringLiteral("board"); }
+    /// Whether another sheet stays scrolled to where the one before was; else it begins at its top.
+    virtual bool keeps_place() const { return false; }
 
     void show_sheet();
     void show_instead(const QString& words); ///< where there is nothing for the sheet
-    QPushButton* add_action(); ///< before the others
+    QPushButton* add_action(const QString& words = {}); ///< before the others, in the order of the calls
+    void go_back();
     void show_progress(int done, int total, const QString& words);
     void hide_progress();
 
@@ -49,9 +54,9 @@ protected:
 
 private:
     bool key_taken(const QKeyEvent& event);
-    void go_back();
 
     std::unique_ptr<Ui::SheetPage> ui_;
+    int actions_ = 0;    ///< of the page's own
     QString words_;      ///< of the sheet as it was filled last: the same again stays where it was scrolled to
     bool shown_ = false; ///< the sheet, and not words instead
 };

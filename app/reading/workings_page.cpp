@@ -8,32 +8,20 @@
 #include "app/desk/workplace.h"
 #include "app/reading/workings_sheet.h"
 #include "core/workings/find_workings.h"
-#include "ui_workings_page.h"
 
-#include <QClipboard>
-#include <QGuiApplication>
-#include <QKeyEvent>
-#include <QPrinter>
-#include <QScrollBar>
-#include <QTextDocument>
+#include <QPushButton>
 
 #include <algorithm>
 
 namespace evenstroke {
 
 WorkingsPage::WorkingsPage(Workplace& place, QWidget* parent)
-    : Page(place, parent), ui_(std::make_unique<Ui::WorkingsPage>())
+    : SheetPage(place, parent), earlier_button_(add_action(tr("reading before (Page Up)"))),
+      later_button_(add_action(tr("reading after (Page Down)")))
 {
-    ui_->setupUi(this);
-    ui_->sheet->installEventFilter(this);
-    ui_->sheet->setAccessibleName(tr("Sheet of workings"));
-    connect(ui_->back_button, &QPushButton::clicked, this, &WorkingsPage::go_back);
-    connect(ui_->copy_button, &QPushButton::clicked, this, &WorkingsPage::copy);
-    connect(ui_->earlier_button, &QPushButton::clicked, this, [this] { walk_readings(-1); });
-    connect(ui_->later_button, &QPushButton::clicked, this, [this] { walk_readings(1); });
+    connect(earlier_button_, &QPushButton::clicked, this, [this] { walk_readings(-1); });
+    connect(later_button_, &QPushButton::clicked, this, [this] { walk_readings(1); });
 }
-
-WorkingsPage::~WorkingsPage() = default;
 
 QString WorkingsPage::sentence() const
 {
@@ -64,32 +52,20 @@ void WorkingsPage::refresh()
     workings_.reset();
     reading_ = judgement_ ? reading_in_hand(*judgement_, workplace().selection()) : std::nullopt;
     if (!reading_) {
-        show_nothing(empty_words(workplace()));
+        show_instead(empty_words(workplace()));
         return;
     }
     if (!workplace().selection().quantity && workplace().selection().estimate.isEmpty())
         workplace().step_to(settled(workplace().selection(), *judgement_));
     workings_ = wanted(*reading_);
     if (!workings_) {
-        show_nothing(tr("This value was not read on that day and is not worked out. Choose another reading (key M) or "
+        show_instead(tr("This value was not read on that day and is not worked out. Choose another reading (key M) or "
                         "quantity (key Q), or go back (Esc)."));
         return;
     }
-    const int scrolled = ui_->sheet->verticalScrollBar()->value();
-    fill_sheet(*ui_->sheet->document(), *workings_, heading(), theme());
-    ui_->sheet->setAccessibleDescription(text());
-    ui_->sheet->show();
-    ui_->empty->hide();
-    ui_->sheet->verticalScrollBar()->setValue(scrolled);
-    ui_->earlier_button->setEnabled(*reading_ > 0);
-    ui_->later_button->setEnabled(*reading_ + 1 < judgement_->readings.size());
-}
-
-void WorkingsPage::show_nothing(const QString& words)
-{
-    ui_->sheet->hide();
-    ui_->empty->setText(words);
-    ui_->empty->show();
+    show_sheet();
+    earlier_button_->setEnabled(*reading_ > 0);
+    later_button_->setEnabled(*reading_ + 1 < judgement_->readings.size());
 }
 
 SheetHeading WorkingsPage::heading() const
@@ -106,22 +82,17 @@ SheetHeading WorkingsPage::heading() const
                             reading_words(*judgement_, *reading_))};
 }
 
-QString WorkingsPage::text() const
+QString WorkingsPage::plain_text() const
 {
     if (!workings_)
-        return ui_->empty->text();
+        return {};
     const SheetHeading words = heading();
     return to_qstring(workings_text(*workings_, to_std(words.title + QStringLiteral(", ") + words.where)));
 }
 
-QWidget* WorkingsPage::first_focus() { return ui_->sheet->isHidden() ? static_cast<QWidget*>(this) : ui_->sheet; }
-
-void WorkingsPage::go_back()
+void WorkingsPage::fill(QTextDocument& document, const Theme& colours) const
 {
-    if (workplace().can_go_back())
-        workplace().go_back();
-    else
-        workplace().open_page(QStringLiteral("reading"));
+    fill_sheet(document, *workings_, heading(), colours);
 }
 
 void WorkingsPage::walk_readings(int step)
@@ -130,12 +101,9 @@ void WorkingsPage::walk_readings(int step)
         workplace().step_to(with_reading_step(workplace().selection(), *judgement_, step));
 }
 
-bool WorkingsPage::take_key(const QKeyEvent& event)
+bool WorkingsPage::take_key(int key)
 {
-    if (event.modifiers() & ~Qt::KeypadModifier)
-        return false;
-    switch (event.key()) {
-    case Qt::Key_Escape:
+    switch (key) {
     case Qt::Key_W: go_back(); return true;
     case Qt::Key_PageUp:
     case Qt::Key_Left: walk_readings(-1); return true;
@@ -143,34 +111,6 @@ bool WorkingsPage::take_key(const QKeyEvent& event)
     case Qt::Key_Right: walk_readings(1); return true;
     default: return false;
     }
-}
-
-void WorkingsPage::keyPressEvent(QKeyEvent* event)
-{
-    if (!take_key(*event))
-        Page::keyPressEvent(event);
-}
-
-bool WorkingsPage::eventFilter(QObject* watched, QEvent* event)
-{
-    if (watched == ui_->sheet && event->type() == QEvent::KeyPress && take_key(*static_cast<QKeyEvent*>(event)))
-        return true;
-    return Page::eventFilter(watched, event);
-}
-
-void WorkingsPage::copy()
-{
-    const QString marked = ui_->sheet->textCursor().selectedText();
-    QGuiApplication::clipboard()->setText(marked.isEmpty() ? text() : QString(marked).replace(QChar::ParagraphSeparator, u'\n'));
-}
-
-void WorkingsPage::print(QPrinter& printer)
-{
-    if (!workings_)
-        return;
-    QTextDocument paper;
-    fill_sheet(paper, *workings_, heading(), theme_of(ThemeKind::print));
-    paper.print(&printer);
 }
 
 } // namespace evenstroke

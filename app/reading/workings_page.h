@@ -1,14 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "app/desk/page.h"
+#include "app/desk/sheet_page.h"
 #include "core/review/reading_review.h"
-
-#include <memory>
-
-namespace Ui {
-class WorkingsPage;
-}
 
 namespace evenstroke {
 
@@ -19,38 +13,34 @@ struct SheetHeading;
 ///
 /// Keys: Escape or W back to where it was asked for, Page Up and Page Down (or left and right) the same number of
 /// the reading before and after, up and down scroll.
-class WorkingsPage : public Page
+class WorkingsPage : public SheetPage
 {
     Q_OBJECT
 
 public:
     explicit WorkingsPage(Workplace& workplace, QWidget* parent = nullptr);
-    ~WorkingsPage() override;
     QString name() const override { return QStringLiteral("workings"); }
     QString title() const override { return tr("Workings"); }
     QString sentence() const override;
     void refresh() override;
-    QWidget* first_focus() override;
-    bool can_print() const override { return true; }
-    void print(QPrinter& printer) override;
-    void copy() override;
 
     /// The sheet as plain text, as it is copied.
-    QString text() const;
+    QString text() const { return plain_text(); }
 
 protected:
-    void keyPressEvent(QKeyEvent* event) override;
-    bool eventFilter(QObject* watched, QEvent* event) override;
+    void fill(QTextDocument& document, const Theme& colours) const override;
+    QString plain_text() const override;
+    bool take_key(int key) override;
+    QString page_before() const override { return QStringLiteral("reading"); }
+    bool keeps_place() const override { return true; } // the next reading's sheet has the same lines
 
 private:
     std::optional<Workings> wanted(std::size_t reading) const;
     SheetHeading heading() const;
-    bool take_key(const QKeyEvent& event);
-    void go_back();
     void walk_readings(int step);
-    void show_nothing(const QString& words);
 
-    std::unique_ptr<Ui::WorkingsPage> ui_;
+    QPushButton* earlier_button_;
+    QPushButton* later_button_;
     std::shared_ptr<const Judgement> judgement_;
     std::optional<std::size_t> reading_;
     std::optional<Workings> workings_;
