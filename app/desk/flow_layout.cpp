@@ -46,6 +46,8 @@ int FlowLayout::lay_out(const QRect& area, bool place) const
     const QRect inner = area.marginsRemoved(margins);
     int x = inner.left(), y = inner.top(), line_height = 0;
     for (QLayoutItem* item : items_) {
+        if (item->isEmpty())
+            continue; // hidden
         const QSize size = item->sizeHint();
         if (x + size.width() > inner.right() + 1 && x > inner.left()) {
             x = inner.left();
@@ -54,7 +56,7 @@ int FlowLayout::lay_out(const QRect& area, bool place) const
         }
         if (place)
             item->setGeometry(QRect(QPoint(x, y), size));
-        x += size.width();
+        x += size.width() + gap_;
         line_height = std::max(line_height, size.height());
     }
     return y + line_height - area.top() + margins.bottom();

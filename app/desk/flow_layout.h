@@ -13,7 +13,8 @@ class FlowLayout : public QLayout
     Q_OBJECT
 
 public:
-    explicit FlowLayout(QWidget* parent = nullptr) : QLayout(parent) {}
+    /// @param gap between neighbours of a line, pixels
+    explicit FlowLayout(QWidget* parent = nullptr, int gap = 0) : QLayout(parent), gap_(gap) {}
     ~FlowLayout() override;
     void addItem(QLayoutItem* item) override { items_.push_back(item); }
     int count() const override { return static_cast<int>(items_.size()); }
@@ -29,6 +30,7 @@ public:
 private:
     int lay_out(const QRect& area, bool place) const;
     std::vector<QLayoutItem*> items_;
+    int gap_;
 };
 
 } // namespace evenstroke

@@ -2,6 +2,7 @@
 #include "app/trends/trend_page.h"
 
 #include "app/board/board_page.h"
+#include "app/desk/flow_layout.h"
 #include "app/desk/number_text.h"
 #include "app/desk/reading_in_hand.h"
 #include "app/desk/sentence_choices.h"
@@ -27,6 +28,20 @@ std::array<QPushButton*, 4> view_buttons(const Ui::TrendPage& ui)
     return {ui.raw_button, ui.corrected_button, ui.deviation_button, ui.apart_button};
 }
 
+/// On a narrow window the words of a row go on in the next line.
+void let_flow(QHBoxLayout& row)
+{
+    auto* words = new QWidget;
+    auto* flow = new FlowLayout(words, row.spacing());
+    flow->setContentsMargins(0, 0, 0, 0);
+    while (QLayoutItem* item = row.takeAt(0)) {
+        if (QWidget* button = item->widget())
+            flow->addWidget(button);
+        delete item;
+    }
+    row.addWidget(words);
+}
+
 } // namespace
 
 TrendPage::TrendPage(Workplace& place, QWidget* parent) : Page(place, parent), ui_(std::make_unique<Ui::TrendPage>())
@@ -39,6 +54,8 @@ TrendPage::TrendPage(Workplace& place, QWidget* parent) : Page(place, parent), u
     ui_->table->horizontalHeader()->setDefaultAlignment(Qt::AlignRight | Qt::AlignVCenter);
     ui_->table->hide();
     ui_->saved->hide();
+    let_flow(*ui_->views);
+    let_flow(*ui_->questions);
     connect_buttons();
     keep_room_for_bold(*this);
 }
