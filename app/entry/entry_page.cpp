@@ -124,6 +124,11 @@ void EntryPage::connect_actions()
     connect(ui_->ear, &Ear::newest_wanted, this, &EntryPage::go_to_doubt);
     for (QLineEdit* field : {ui_->date_field, ui_->clock_field, ui_->offset_field})
         connect(field, &QLineEdit::editingFinished, this, &EntryPage::read_time_fields);
+    for (QLineEdit* field : {ui_->date_field, ui_->clock_field, ui_->offset_field})
+        connect(field, &QLineEdit::returnPressed, this, [this] {
+            if (!time_problem_)
+                ui_->grid->setFocus(); // from the date to the first box without the mouse
+        });
     for (QLineEdit* field : {ui_->who_field, ui_->why_field})
         connect(field, &QLineEdit::editingFinished, this, &EntryPage::read_signature);
     connect(ui_->close_button, &QPushButton::clicked, this, [this] { close_reading(); });
