@@ -122,6 +122,9 @@ TEST_F(EntryKeys, TheDateTheDoubtAndTheClosingHaveKeys)
     type(QStringLiteral("75"));
     press(Qt::Key_D, Qt::ControlModifier);
     EXPECT_EQ(focus_name(), "date_field");
+    press(Qt::Key_Return);
+    EXPECT_EQ(focus_name(), "grid") << "from the date into the sheet";
+    press(Qt::Key_D, Qt::ControlModifier);
     EXPECT_EQ(shown(box("load_percent")), QStringLiteral("75"));
     press(Qt::Key_N, Qt::ControlModifier);
     EXPECT_EQ(page->view().current_box(), box("exhaust_temperature", Place::cylinder(4)));
