@@ -1,6 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "app/batch/command.h"
 #include "sample_vessel/sample_vessel.h"
+#include "tests/app/command_run.h"
 
 #include <gtest/gtest.h>
 
@@ -15,26 +15,10 @@
 #include <set>
 
 using namespace evenstroke;
+using test::Outcome;
+using test::run;
 
 namespace {
-
-struct Outcome
-{
-    int code = 0;
-    QString out, err;
-    QStringList rows() const { return out.split(QLatin1Char('\n'), Qt::SkipEmptyParts).mid(1); }
-};
-
-Outcome run(const QStringList& arguments)
-{
-    Outcome outcome;
-    QTextStream out(&outcome.out), err(&outcome.err);
-    batch::Streams streams{out, err, false, false};
-    outcome.code = batch::run_command_line(arguments, streams);
-    out.flush();
-    err.flush();
-    return outcome;
-}
 
 /// The sample vessel taken into a history, once for all tests of this file.
 class SampleVesselEndToEnd : public testing::Test

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "app/batch/command.h"
+
+#include "tests/app/command_run.h"
 
 #include <gtest/gtest.h>
 
@@ -13,26 +14,12 @@
 #include <cmath>
 
 using namespace evenstroke;
+using test::Outcome;
+using test::run;
 
 namespace {
 
-struct Outcome
-{
-    int code = 0;
-    QString out, err;
-    QJsonArray cards() const { return QJsonDocument::fromJson(out.toUtf8()).array(); }
-};
-
-Outcome run(const QStringList& arguments)
-{
-    Outcome outcome;
-    QTextStream out(&outcome.out), err(&outcome.err);
-    batch::Streams streams{out, err, false, false};
-    outcome.code = batch::run_command_line(arguments, streams);
-    out.flush();
-    err.flush();
-    return outcome;
-}
+QJsonArray cards(const Outcome& outcome) { return QJsonDocument::fromJson(outcome.out.toUtf8()).array(); }
 
 const char* const result_names[] = {
     "mean_indicated_pressure_bar", "maximum_pressure_bar_abs", "maximum_pressure_angle_deg", "compression_pressure_bar_abs",
@@ -79,8 +66,8 @@ TEST_F(CardCommand, GivesOneObjectACardWithEveryResultAndItsUncertainty)
 {
     const Outcome outcome = card({cards_ + "/1.csv", cards_ + "/5.csv"});
     ASSERT_EQ(outcome.code, 0) << outcome.err.toStdString();
-    ASSERT_EQ(outcome.cards().size(), 2);
-    const QJsonObject first = outcome.cards().at(0).toObject();
+    ASSERT_EQ(cards(outcome).size(), 2);
+    const QJsonObject first = cards(outcome).at(0).toObject();
     EXPECT_TRUE(first["file"].toString().endsWith("1.csv"));
     EXPECT_EQ(first["cycles"].toInt(), 1);
     for (const char* name : result_names) {
@@ -98,15 +85,15 @@ TEST_F(CardCommand, GivesOneObjectACardWithEveryResultAndItsUncertainty)
 TEST_F(CardCommand, TakesAFolderInTheOrderOfItsNames)
 {
     const Outcome outcome = card({cards_});
-    ASSERT_EQ(outcome.cards().size(), 6);
-    EXPECT_TRUE(outcome.cards().at(5).toObject()["file"].toString().endsWith("6.csv"));
+    ASSERT_EQ(cards(outcome).size(), 6);
+    EXPECT_TRUE(cards(outcome).at(5).toObject()["file"].toString().endsWith("6.csv"));
 }
 
 TEST_F(CardCommand, WithoutConditionsGivesWhatIsKnownAndNullForTheRest)
 {
     const Outcome outcome = run({"card", "--engine", engine_, cards_ + "/1.csv"});
     ASSERT_EQ(outcome.code, 0) << outcome.err.toStdString();
-    const QJsonObject card = outcome.cards().at(0).toObject();
+    const QJsonObject card = cards(outcome).at(0).toObject();
     EXPECT_TRUE(card["trapped_mass_kg"].isNull());
     EXPECT_TRUE(card["maximum_temperature_k"].isNull());
     EXPECT_TRUE(card["mean_indicated_pressure_bar"].isDouble());
@@ -126,8 +113,8 @@ TEST_F(CardCommand, MissingSamplesAreBridged)
         lines[line] = lines[line].left(lines[line].indexOf(',') + 1) + (line == 200 ? "nan" : "");
     const Outcome gaps = card({write("gaps.csv", lines.join('\n'))}), whole = card({cards_ + "/1.csv"});
     ASSERT_EQ(gaps.code, 0) << gaps.err.toStdString();
-    EXPECT_NEAR(gaps.cards().at(0).toObject()["mean_indicated_pressure_bar"].toDouble(),
-                whole.cards().at(0).toObject()["mean_indicated_pressure_bar"].toDouble(), 0.03);
+    EXPECT_NEAR(cards(gaps).at(0).toObject()["mean_indicated_pressure_bar"].toDouble(),
+                cards(whole).at(0).toObject()["mean_indicated_pressure_bar"].toDouble(), 0.03);
 }
 
 TEST_F(CardCommand, BadFilesAreRefusedInWords)
@@ -168,7 +155,7 @@ TEST_F(CardCommand, AGoodCardIsPrintedBesideABadOne)
 {
     const Outcome outcome = card({write("bad.csv", "nothing\n"), cards_ + "/1.csv"});
     EXPECT_EQ(outcome.code, 1);
-    EXPECT_EQ(outcome.cards().size(), 1);
+    EXPECT_EQ(cards(outcome).size(), 1);
     EXPECT_TRUE(outcome.err.contains("bad.csv"));
 }
 

@@ -1,13 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // What `evaluate` prints of small hand-made engines (invented numbers).
-#include "app/batch/command.h"
+#include "tests/app/command_run.h"
 
 #include <gtest/gtest.h>
 
 #include <QDir>
 #include <QFile>
 #include <QTemporaryDir>
-#include <QTextStream>
 
 using namespace evenstroke;
 
@@ -51,15 +50,10 @@ protected:
 private:
     int run(const QStringList& arguments)
     {
-        out_.clear();
-        QString problems;
-        QTextStream out(&out_), err(&problems);
-        batch::Streams streams{out, err, false, false};
-        const int code = batch::run_command_line(arguments, streams);
-        out.flush();
-        err.flush();
-        EXPECT_EQ(code, 0) << problems.toStdString();
-        return code;
+        const test::Outcome outcome = test::run(arguments);
+        out_ = outcome.out;
+        EXPECT_EQ(outcome.code, 0) << outcome.err.toStdString();
+        return outcome.code;
     }
     void write(const QString& name, const std::string& content)
     {

@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // `evenstroke-batch explain`: rows, text, refusals (invented numbers).
-#include "app/batch/command.h"
 #include "sample_vessel/sample_vessel.h"
+#include "tests/app/command_run.h"
 
 #include <gtest/gtest.h>
 
@@ -12,34 +12,17 @@
 #include <QJsonDocument>
 #include <QJsonObject>
 #include <QTemporaryDir>
-#include <QTextStream>
 
 #include <cmath>
 
 using namespace evenstroke;
+using test::Outcome;
+using test::run;
 
 namespace {
 
 constexpr char header_line[] =
     "vessel,engine,reading,subject,rank,cause,explained,urgency,limit_quantity,months_5,months_50,months_95\n";
-
-struct Outcome
-{
-    int code = 0;
-    QString out, err;
-    QStringList rows() const { return out.split(u'\n', Qt::SkipEmptyParts).mid(1); }
-};
-
-Outcome run(const QStringList& arguments)
-{
-    Outcome outcome;
-    QTextStream out(&outcome.out), err(&outcome.err);
-    batch::Streams streams{out, err, false, false};
-    outcome.code = batch::run_command_line(arguments, streams);
-    out.flush();
-    err.flush();
-    return outcome;
-}
 
 QByteArray engine_json(const char* vessel)
 {
