@@ -6,6 +6,7 @@
 #include "core/simulation/fleet_tables.h"
 #include "core/simulation/fleet_tally.h"
 #include "core/trend/drift_catalogue.h"
+#include "core/trend/drift_input.h"
 #include "core/trend/robust.h"
 
 #include <algorithm>
@@ -14,8 +15,7 @@
 namespace evenstroke::simulation {
 namespace {
 
-constexpr double days_in_month = 30.4375;
-constexpr double two_years = 24.0 * days_in_month; // days
+constexpr double two_years = 24.0; // months
 constexpr std::size_t fewest_readings = 3;
 
 double median_interval(const EngineRecord& record)
@@ -23,13 +23,12 @@ double median_interval(const EngineRecord& record)
     std::vector<double> gaps;
     const auto& readings = record.readings;
     for (std::size_t i = 1; i < readings.size(); ++i) {
-        const double day = 86400.0;
-        const double age = static_cast<double>((readings.back().taken_at.utc - readings[i].taken_at.utc).count()) / day;
-        if (age <= two_years)
-            gaps.push_back(static_cast<double>((readings[i].taken_at.utc - readings[i - 1].taken_at.utc).count()) / day);
+        const double month = months_of(readings[i].taken_at.utc);
+        if (months_of(readings.back().taken_at.utc) - month <= two_years)
+            gaps.push_back(month - months_of(readings[i - 1].taken_at.utc));
     }
     const auto middle = drift::median(std::move(gaps));
-    return std::clamp(middle.value_or(days_in_month) / days_in_month, 0.1, 12.0);
+    return std::clamp(middle.value_or(1.0), 0.1, 12.0);
 }
 
 /// The scatter of a trend in the unit in which the drift method works.

@@ -15,8 +15,6 @@
 namespace evenstroke {
 namespace {
 
-constexpr double days_in_month = 30.4375;
-
 bool is_percent(const drift::CatalogueChannel& channel) { return channel.form == drift::DeviationForm::percent; }
 
 drift::Cell make_cell(const Value& typed, const JudgedValue& value, const OwnValue& own, const DeviationForm& form)

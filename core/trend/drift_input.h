@@ -23,6 +23,8 @@ struct PreparedReading
 /// A reading's conditions and values, judged but for drift.
 PreparedReading prepare_reading(const Engine& engine, const Baseline& baseline, const Reading& reading);
 
+inline constexpr double days_in_month = 30.4375; ///< on average
+
 /// Months since the first day of 1970, as the drift method counts them.
 double months_of(TimePoint time);
 

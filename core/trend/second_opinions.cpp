@@ -2,6 +2,7 @@
 #include "core/trend/second_opinions.h"
 
 #include "core/trend/control_charts.h"
+#include "core/trend/drift_input.h"
 
 #include <numeric>
 
@@ -23,9 +24,7 @@ Series series_of(const Judgement& judgement, const Trend& trend)
         const auto value = cylinder ? point.apart : point.deviation;
         if (!value || point.unsteady || point.doubtful || point.stretch != trend.points.back().stretch)
             continue;
-        constexpr double seconds_in_month = 30.4375 * 86400.0;
-        const auto at = judgement.record->readings.at(point.reading).taken_at.utc.time_since_epoch();
-        series.months.push_back(static_cast<double>(at.count()) / seconds_in_month);
+        series.months.push_back(months_of(judgement.record->readings.at(point.reading).taken_at.utc));
         series.values.push_back(*value);
         series.readings.push_back(point.reading);
     }

@@ -4,6 +4,7 @@
 #include "core/sentence_words.h"
 #include "core/trend/drift.h"
 #include "core/trend/drift_catalogue.h"
+#include "core/trend/drift_input.h"
 #include "core/trend/flag_text.h"
 #include "core/trend/robust.h"
 
@@ -14,7 +15,7 @@
 namespace evenstroke {
 namespace {
 
-constexpr double seconds_in_month = 30.4375 * 86400.0;
+constexpr double seconds_in_month = days_in_month * 86400.0;
 constexpr std::size_t most_months = 1200; // a century: a year that was mistyped must not ask for all memory
 constexpr std::size_t newest_taken = 3;
 
