@@ -5,9 +5,6 @@
 #include "storage/history.h"
 #include "storage/vessel_store.h"
 
-#include <QPointer>
-#include <QThread>
-
 #include <algorithm>
 #include <functional>
 
@@ -60,53 +57,17 @@ Result<std::shared_ptr<const SistersFound>> compare(const QString& path, const s
 
 } // namespace
 
-SisterRun::SisterRun(QObject* parent) : QObject(parent)
-{
-    pool_.setMaxThreadCount(1);
-    pool_.setThreadPriority(QThread::LowPriority);
-}
-
-SisterRun::~SisterRun()
-{
-    stop();
-    pool_.waitForDone();
-}
-
-void SisterRun::stop()
-{
-    if (stopped_)
-        *stopped_ = true;
-    stopped_.reset();
-    pool_.clear();
-}
-
 void SisterRun::start(const QString& history_path, const QString& engine_id)
 {
-    stop();
-    done_ = total_ = 0;
     found_.reset();
     problem_.reset();
-    const auto stopped = stopped_ = std::make_shared<std::atomic<bool>>(false);
-    const QPointer<SisterRun> self(this);
-    pool_.start([self, stopped, history_path, engine_id] {
-        const auto answer = compare(history_path, engine_id.toStdString(), [&](int done, int of) {
-            QMetaObject::invokeMethod(self, [self, stopped, done, of] {
-                if (!self || self->stopped_ != stopped)
-                    return;
-                self->done_ = done;
-                self->total_ = of;
-                emit self->progressed();
-            }, Qt::QueuedConnection);
-            return !*stopped;
-        });
-        QMetaObject::invokeMethod(self, [self, stopped, answer] {
-            if (!self || self->stopped_ != stopped)
-                return;
-            self->stopped_.reset();
-            self->found_ = answer.has_value() ? answer.value() : nullptr;
-            self->problem_ = answer.has_value() ? std::nullopt : std::optional<Problem>(answer.error());
-            emit self->finished();
-        }, Qt::QueuedConnection);
+    begin([this, history_path, engine_id](const Told& tell) -> Delivery {
+        const auto answer = compare(history_path, engine_id.toStdString(), tell);
+        return [this, answer] {
+            found_ = answer.has_value() ? answer.value() : nullptr;
+            problem_ = answer.has_value() ? std::nullopt : std::optional<Problem>(answer.error());
+            emit finished();
+        };
     });
 }
 
