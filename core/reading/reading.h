@@ -32,6 +32,9 @@ std::string short_date(TimePoint time); ///< "14 Mar 2026", as the sentences of 
 enum class Phase : unsigned char { before, reading, after };
 enum class MissingReason : unsigned char { none, not_fitted, not_read, out_of_order };
 
+/// Where a value came from: somebody read an instrument, or an indicator card was evaluated.
+enum class Origin : unsigned char { read, card };
+
 /// One value as it was typed. `value_si` is what the text means; it is never changed by the program.
 struct Value
 {
@@ -46,6 +49,7 @@ struct Value
     std::string words;               ///< for choices and words
     MissingReason missing = MissingReason::none;
     bool confirmed = false;          ///< the engineer read it again: no longer doubted
+    Origin origin = Origin::read;
     std::string unit_typed;          ///< the unit as it was written ("degC"); empty: as the catalogue writes it
     std::string place_typed;         ///< the place as it was written, where that is not `cylinder_name`; else empty
 };
