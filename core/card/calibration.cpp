@@ -112,6 +112,7 @@ void Fit::widen_and_carry(Calibration& found) const
     constexpr double usual_strain = 3.0;
     const UnknownCovariance own = found.covariance;
     const double widen = std::max({1.0, found.misfit * found.misfit, found.strain / usual_strain});
+    found.widened = widen;
     for (auto& row : found.covariance)
         for (double& entry : row)
             entry *= widen;

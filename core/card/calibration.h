@@ -54,6 +54,7 @@ struct Calibration
     Unknowns values{};
     UnknownCovariance covariance{};
     double misfit = 0.0; ///< weighted root mean square of the residuals; near 1 where model and noise fit
+    double widened = 1.0; ///< what the covariance was multiplied by for misfit and strain
     double strain = 0.0; ///< squares of how far the unknowns had to leave what was believed, in its spreads
     bool converged = false;
 };

@@ -60,6 +60,8 @@ std::optional<Setting> find_setting(const Engine& engine, const Conditions& cond
         setting.fuel_heat = conditions.fuel_heat->value();
     if (conditions.known_offset)
         setting.known_offset = in_degrees(*conditions.known_offset);
+    if (conditions.known_offset_spread)
+        setting.known_offset_spread = in_degrees(*conditions.known_offset_spread);
     return setting;
 }
 
@@ -73,7 +75,7 @@ void fill_line(Evaluation& card, const Cylinder& cylinder, const SelfCalibration
 {
     const WallLoss walls(cylinder);
     std::vector<double> before;
-    for (double angle = found.end.angle; angle > std::max(cylinder.closes, -90.0); angle -= 1.0)
+    for (double angle = found.end.angle; angle > cylinder.closes; angle -= 1.0)
         before.push_back(angle);
     const auto back = carry_line(cylinder, walls, found.fit.values, found.closing_pressure, found.end.angle,
                                  found.end.log_pressure, before);
@@ -146,7 +148,10 @@ void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& sett
     card.misfit = found.fit.misfit;
     card.window_from = found.window_from;
     card.window_to = found.window_to;
-    card.results = maker.estimate(card.heat);
+    card.carried.emplace();
+    card.results = maker.estimate(card.heat, *card.carried);
+    if (found.method != CalibrationMethod::offset_assumed)
+        card.own_offset = Estimate{found.own_offset, 2.0 * found.own_offset_spread};
     if (found.method == CalibrationMethod::offset_assumed)
         withhold(card, {CardResult::start_of_combustion});
     if (!setting.closing_known)
@@ -176,6 +181,9 @@ Result<Evaluation> evaluate(const Engine& engine, const Conditions& conditions, 
     Evaluation card;
     card.trace = std::move(cleaned.value());
     card.cycles = card.trace.cycles.size();
+    card.closes = engine.cylinder_closes_deg;
+    card.opens = engine.cylinder_opens_deg;
+    card.expansion_angle = engine.expansion_angle_deg;
     const DirectReadings direct = read_directly(card, gear.value());
     const ThinTrace thin = make_thin(card.trace);
     if (auto problem = find_unit_problem(engine, conditions, gear.value(), thin))

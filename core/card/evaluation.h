@@ -19,7 +19,7 @@
 namespace evenstroke::indicator {
 
 /// Raise it when results change.
-inline constexpr int method_version = 1;
+inline constexpr int method_version = 2;
 
 /// What was read beside the card. Empty: not known.
 struct Conditions
@@ -29,6 +29,7 @@ struct Conditions
     std::optional<Temperature> charge_temperature; ///< of the gas when the cylinder closes
     std::optional<Energy> fuel_heat;               ///< burnt in one cycle of this cylinder
     std::optional<PlaneAngle> known_offset;        ///< of the installation, from its healthy cards
+    std::optional<PlaneAngle> known_offset_spread; ///< its standard deviation; with it the card's own is weighed against it
     bool barometer_assumed = false;                ///< a gauge record was made absolute with a usual barometer
 };
 
@@ -88,6 +89,16 @@ struct CycleSpread
     double mean_indicated = 0.0, maximum = 0.0; ///< standard deviations, bar
 };
 
+/// Where a card's uncertainty comes from. Two cards of one cylinder are off alike in some of it: see comparison.h.
+struct Carried
+{
+    UnknownCovariance covariance{};
+    Unknowns believed{}; ///< standard deviations of what was believed of the unknowns before the card; 0: nothing was
+    std::array<Unknowns, result_count> slopes{}; ///< of each result by each unknown
+    /// One standard deviation, in the result's unit: of reading and model; by the film formula; by a heated transducer.
+    std::array<double, result_count> own{}, walls{}, heated{};
+};
+
 struct Evaluation
 {
     int version = method_version;
@@ -98,10 +109,14 @@ struct Evaluation
     CleanTrace trace;
     CalibrationMethod method = CalibrationMethod::offset_assumed;
     Unknowns unknowns{};                ///< as taken for the results
+    std::optional<Carried> carried;     ///< empty: dead centre was not found by a fit
+    std::optional<Estimate> own_offset; ///< degrees, from this card alone, whatever the installation's is
+    std::optional<double> closes, opens; ///< of the cylinder, true degrees
+    double expansion_angle = 40.0;      ///< of the engine, true degrees
     std::optional<double> wall_multiplier; ///< with the entered compression ratio; far from 1 where that is not true
     double misfit = 0.0;                ///< of the compression against the line, near 1 where it fits
     double window_from = 0.0, window_to = 0.0; ///< of the fit, true degrees
-    std::vector<double> line_angle, line_pressure; ///< the unfired line: true degrees, bar abs
+    std::vector<double> line_angle, line_pressure; ///< the unfired line: true degrees, bar abs, from closing to 25°
     std::optional<HeatRelease> heat;
     std::optional<CycleSpread> spread;
     std::optional<Peak> firing_peak;    ///< true, where the largest pressure is that of compression

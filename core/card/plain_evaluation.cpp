@@ -230,6 +230,12 @@ void fill_without_balance(Evaluation& card, const Engine& engine, const Conditio
     if (found->start)
         put(card, CardResult::start_of_combustion, found->start->start, std::hypot(offset_deviation, 0.3));
     fill_readings(card, engine, gear, thin, direct, offset_deviation, zero_deviation);
+    card.own_offset = card[CardResult::offset];
+    Carried& carried = card.carried.emplace();
+    carried.covariance[offset][offset] = offset_deviation * offset_deviation;
+    carried.covariance[zero][zero] = zero_deviation * zero_deviation;
+    for (std::size_t i = 0; i < result_count; ++i)
+        carried.own[i] = card.results[i] ? *card.results[i]->half_width / coverage : 0.0;
 }
 
 } // namespace evenstroke::indicator

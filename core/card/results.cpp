@@ -156,15 +156,17 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     return std::sqrt(squares);
 }
 
-Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat)
+Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat, Carried& carried)
 {
     const Numbers middle = numbers(heat);
     base_spread_.reset();
     if (heat)
         base_spread_ = heat_noise(*heat);
-    UnknownCovariance covariance = found_.fit.covariance;
+    carried.covariance = found_.fit.covariance;
+    carried.believed = found_.believed;
+    UnknownCovariance& covariance = carried.covariance;
     covariance[offset][offset] += direct_.passage_lag * direct_.passage_lag;
-    std::array<Unknowns, result_count> slopes{};
+    std::array<Unknowns, result_count>& slopes = carried.slopes;
     Unknowns values = found_.fit.values;
     for (std::size_t unknown = 0; unknown < unknown_count; ++unknown) {
         if (!(covariance[unknown][unknown] > 0.0))
@@ -193,6 +195,9 @@ Estimates ResultMaker::estimate(std::optional<HeatRelease>& heat)
         const double own = own_spread(static_cast<CardResult>(i), *middle[i]).value_or(0.0);
         const double wall = walls[i] ? *walls[i] - *middle[i] : 0.0;
         const double hot = drifted[i] ? *drifted[i] - *middle[i] : 0.0;
+        carried.own[i] = own;
+        carried.walls[i] = wall;
+        carried.heated[i] = hot;
         double variance = own * own + wall * wall + hot * hot;
         for (std::size_t a = 0; a < unknown_count; ++a)
             for (std::size_t b = 0; b < unknown_count; ++b)

@@ -27,8 +27,8 @@ public:
 
     /// The numbers, and the heat release they come from.
     Numbers numbers(std::optional<HeatRelease>& heat) const;
-    /// The same with half-widths. @param heat filled
-    Estimates estimate(std::optional<HeatRelease>& heat);
+    /// The same with half-widths. @param heat filled  @param carried where they come from
+    Estimates estimate(std::optional<HeatRelease>& heat, Carried& carried);
 
 private:
     /// What is not among the unknowns of the compression and moves results all the same.

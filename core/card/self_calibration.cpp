@@ -34,6 +34,7 @@ private:
     bool with_everything_uncertain();
     bool with_angle_alone();
     bool with_offset_kept();
+    void take_known_offset();
     bool too_much_heat() const;
     double window_start() const { return std::max(window_begin, cylinder_.closes + 5.0); }
 
@@ -75,6 +76,10 @@ bool Calibrator::fit(const Beliefs& beliefs, double from, double to)
         return false;
     found_.fit = *fitted;
     found_.window = window;
+    for (std::size_t i = 0; i < unknown_count; ++i)
+        found_.believed[i] = beliefs[i].spread.value_or(0.0) * (beliefs[i].held ? 1.0 : std::sqrt(fitted->widened));
+    found_.own_offset = fitted->values[offset];
+    found_.own_offset_spread = std::sqrt(fitted->covariance[offset][offset]);
     found_.window_from = from;
     found_.window_to = to;
     found_.end = line_end(cylinder_, walls_, window, found_.fit.values);
@@ -139,8 +144,42 @@ bool Calibrator::with_everything_uncertain()
     constexpr double beyond_usual = 2.0, drawn_by = 0.12; // multiple of the formula; degrees for each 1 above it
     const double drawn = drawn_by * std::max(0.0, found_.wall_multiplier - beyond_usual);
     found_.fit.covariance[offset][offset] += drawn * drawn;
+    found_.own_offset_spread = std::sqrt(found_.fit.covariance[offset][offset]);
+    take_known_offset();
     find_combustion();
     return true;
+}
+
+/// Weighs the installation's offset against the card's own (a Kalman step). What ratio and film formula are wrong by draws
+/// all cards of the engine alike, so the installation's offset does not know it better: it stays in the covariance.
+void Calibrator::take_known_offset()
+{
+    if (!setting_.known_offset || !setting_.known_offset_spread)
+        return;
+    constexpr Unknown shared[] = {ratio, wall_loss};
+    UnknownCovariance& all = found_.fit.covariance;
+    Unknowns gain{};
+    for (std::size_t i = 0; i < unknown_count; ++i) {
+        gain[i] = all[i][offset];
+        for (const Unknown j : shared)
+            if (found_.believed[j] > 0.0)
+                gain[i] -= all[i][j] * all[offset][j] / (found_.believed[j] * found_.believed[j]);
+    }
+    gain[offset] = std::max(gain[offset], 0.0);
+    const double known = *setting_.known_offset_spread, total = gain[offset] + known * known;
+    if (!(total > 0.0))
+        return;
+    const double away = *setting_.known_offset - found_.fit.values[offset];
+    for (std::size_t i = 0; i < unknown_count; ++i)
+        found_.fit.values[i] += gain[i] / total * away;
+    for (std::size_t i = 0; i < unknown_count; ++i)
+        for (std::size_t j = 0; j < unknown_count; ++j)
+            all[i][j] -= gain[i] * gain[j] / total;
+    // Card and installation further apart than both say: one of them is wrong, and what is taken is less certain.
+    constexpr double usual = 2.0;
+    if (const double apart = std::abs(away) / std::sqrt(total); apart > usual)
+        all[offset][offset] += (apart / usual - 1.0) * gain[offset] * known * known / total;
+    found_.end = line_end(cylinder_, walls_, found_.window, found_.fit.values);
 }
 
 bool Calibrator::with_angle_alone()

@@ -21,6 +21,7 @@ struct Setting
     std::optional<double> scavenge;  ///< bar abs
     double closing_spread = 5.2;     ///< K, one standard deviation
     std::optional<double> known_offset, fuel_heat; ///< degrees; J a cycle
+    std::optional<double> known_offset_spread;     ///< degrees, one standard deviation
     bool closing_known = true, speed_known = true;
 };
 
@@ -28,6 +29,8 @@ struct SelfCalibration
 {
     CalibrationMethod method = CalibrationMethod::offset_assumed;
     Calibration fit;
+    Unknowns believed{};                         ///< standard deviations of the beliefs of that fit; 0: none
+    double own_offset = 0.0, own_offset_spread = 0.0; ///< degrees, of this card alone
     Parabola closing_pressure;
     CompressionWindow window;                    ///< the samples of the fit; views of the thin trace
     double window_from = 0.0, window_to = 0.0;   ///< true degrees
