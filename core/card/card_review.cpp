@@ -2,11 +2,12 @@
 #include "core/card/card_review.h"
 
 #include "core/card/card_values.h"
-#include "core/card/healthy_cards.h"
 #include "core/card/reading_conditions.h"
+#include "core/card/remarks_review.h"
 #include "core/trend/conditions.h"
 
 #include <algorithm>
+#include <cmath>
 #include <map>
 #include <set>
 
@@ -30,7 +31,11 @@ private:
     bool fetch();
     bool evaluate_alone();
     bool evaluate_with_offset();
+    void follow_pickup();
     void compare_all();
+    void remark();
+    std::vector<CardInReview> in_review() const;
+    std::optional<KnownOffset> known_offset(const CardPlace& place) const;
     bool tell() { return !progress_ || progress_(done_, of_); }
     Conditions conditions_of(std::size_t reading) const;
     Answer evaluated(const CardPlace& place, const std::optional<KnownOffset>& offset) const;
@@ -48,6 +53,7 @@ private:
     std::map<CardPlace, Result<RecordedCard>> recorded_;
     std::map<CardPlace, Answer> evaluations_;
     InstallationOffset offset_;
+    std::optional<double> pickup_moved_; // degrees since the healthy cards
     int done_ = 0, of_ = 0;
 };
 
@@ -133,10 +139,28 @@ bool Reviewer::evaluate_alone()
     return true;
 }
 
+std::optional<KnownOffset> Reviewer::known_offset(const CardPlace& place) const
+{
+    auto known = offset_.of_cylinder(place.cylinder);
+    if (known && pickup_moved_ && place.reading == reading_) {
+        constexpr double moved_spread = 0.04; // degrees: how well a few cards tell by how much (common practice, no source)
+        known->value += *pickup_moved_;
+        known->spread = std::hypot(known->spread, moved_spread);
+    }
+    return known;
+}
+
+/// A pickup that moved since the healthy cards has moved for all cylinders alike.
+void Reviewer::follow_pickup()
+{
+    pickup_moved_ = moved_pickup(engine_, in_review());
+}
+
 bool Reviewer::evaluate_with_offset()
 {
+    follow_pickup();
     for (const CardPlace& place : compared_) {
-        if (const auto known = offset_.of_cylinder(place.cylinder); known && evaluations_.at(place))
+        if (const auto known = known_offset(place); known && evaluations_.at(place))
             evaluations_.at(place) = evaluated(place, known);
         ++done_;
         if (!tell())
@@ -185,6 +209,42 @@ void Reviewer::compare_all()
     }
 }
 
+/// Dead centre is looked at against the healthy cards as they are, whether or not the pickup moved.
+std::vector<CardInReview> Reviewer::in_review() const
+{
+    std::vector<CardInReview> cards;
+    for (std::size_t i = 0; i < cylinders_.size(); ++i) {
+        CardInReview card;
+        card.cylinder = cylinders_[i];
+        const Answer& answer = evaluations_.at({reading_, card.cylinder});
+        card.now = answer ? answer.value().get() : nullptr;
+        card.known = offset_.of_cylinder(card.cylinder);
+        if (i < review_.cards.size() && review_.cards[i].comparison) {
+            card.comparison = &*review_.cards[i].comparison;
+            for (const Comparison::From& from : card.comparison->from)
+                card.healthy.push_back(evaluations_.at({from.reading, card.cylinder}).value().get());
+        }
+        cards.push_back(std::move(card));
+    }
+    return cards;
+}
+
+void Reviewer::remark()
+{
+    const std::vector<CardInReview> cards = in_review();
+    const Reading& reading = judgement_.record->readings[reading_];
+    for (std::size_t i = 0; i < cards.size(); ++i)
+        for (Remark& said : remarks_against_healthy(engine_, reading, cards, i))
+            review_.cards[i].remarks.push_back(std::move(said));
+    review_.remarks = remarks_of_all(engine_, cards);
+    std::vector<PlacedCard> recorded;
+    for (const auto& [place, card] : recorded_)
+        if (card)
+            recorded.push_back({place, &card.value().trace});
+    for (Remark& said : remarks_on_foreign_cards(judgement_, reading_, cards, recorded))
+        review_.remarks.push_back(std::move(said));
+}
+
 CardReview Reviewer::run()
 {
     review_.reading = reading_;
@@ -194,6 +254,7 @@ CardReview Reviewer::run()
     if (!fetch() || !evaluate_alone() || !evaluate_with_offset())
         return CardReview{reading_, review_.load_percent, {}, {}, {}, false, {}};
     compare_all();
+    remark();
     return review_;
 }
 

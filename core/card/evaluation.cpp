@@ -145,6 +145,7 @@ void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& sett
     card.method = found.method;
     card.unknowns = found.fit.values;
     card.wall_multiplier = found.wall_multiplier;
+    card.wall_multiplier_spread = found.wall_spread;
     card.misfit = found.fit.misfit;
     card.window_from = found.window_from;
     card.window_to = found.window_to;

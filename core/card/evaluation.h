@@ -114,6 +114,7 @@ struct Evaluation
     std::optional<double> closes, opens; ///< of the cylinder, true degrees
     double expansion_angle = 40.0;      ///< of the engine, true degrees
     std::optional<double> wall_multiplier; ///< with the entered compression ratio; far from 1 where that is not true
+    double wall_multiplier_spread = 0.0; ///< from the card's noise, one standard deviation
     double misfit = 0.0;                ///< of the compression against the line, near 1 where it fits
     double window_from = 0.0, window_to = 0.0; ///< of the fit, true degrees
     std::vector<double> line_angle, line_pressure; ///< the unfired line: true degrees, bar abs, from closing to 25°

@@ -232,6 +232,8 @@ std::optional<SelfCalibration> Calibrator::run()
     if (!stands || !found_.fit.converged || std::abs(found_.fit.values[offset]) > largest_offset)
         return std::nullopt;
     found_.wall_multiplier = found_.fit.values[wall_loss];
+    const double spread = found_.fit.covariance[wall_loss][wall_loss], believed = found_.believed[wall_loss];
+    found_.wall_spread = std::sqrt(std::max(0.0, spread - spread * spread / (believed * believed)));
     found_.doubtful = !(found_.wall_multiplier >= lowest_multiplier && found_.wall_multiplier <= highest_multiplier) ||
                       too_much_heat();
     const SelfCalibration before = found_;

@@ -39,6 +39,7 @@ struct SelfCalibration
     std::optional<CombustionStart> start;        ///< empty: nothing burns
     double highest_excess = 0.0;                 ///< ln p over the line, largest
     double wall_multiplier = 1.0;                ///< with the entered compression ratio held
+    double wall_spread = 0.0;                    ///< of it from this card's own noise, one standard deviation
     double pegged_zero = 0.0;                    ///< zero that the charge pressure asks for
     bool doubtful = false;                       ///< multiplier outside -1 to 4, or more heat than fuel
 };
