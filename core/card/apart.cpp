@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/card/apart.h"
 
+#include "core/trend/robust.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -12,13 +14,6 @@ struct Moved
 {
     double value = 0.0, own = 0.0, common = 0.0; // own and common: one standard deviation
 };
-
-double median(std::vector<double> values)
-{
-    std::sort(values.begin(), values.end());
-    const std::size_t n = values.size();
-    return n % 2 == 1 ? values[n / 2] : 0.5 * (values[n / 2 - 1] + values[n / 2]);
-}
 
 std::optional<Moved> moved_result(const CardInReview& card, CardResult result)
 {
@@ -57,8 +52,8 @@ std::optional<Moved> moved_number(const CardInReview& card, Number number, Sprea
 std::optional<Moved> moved_wall(const CardInReview& card)
 {
     return moved_number(
-        card, [](const Evaluation& e) { return e.wall_multiplier; },
-        [](const Evaluation& e) { return std::hypot(e.wall_multiplier_spread, 0.05); });
+        card, [](const Evaluation& e) { return e.compared_wall; },
+        [](const Evaluation& e) { return std::hypot(e.compared_wall_spread, 0.05); });
 }
 
 std::optional<Moved> moved_exponent(const CardInReview& card)
@@ -73,8 +68,8 @@ std::optional<Moved> moved_offset(const CardInReview& card)
 {
     if (!card.known || !card.now || !card.now->own_offset || card.now->method != CalibrationMethod::energy_balance)
         return std::nullopt;
-    const double own = 0.5 * card.now->own_offset->half_width.value_or(1.0);
-    return Moved{card.now->own_offset->value - card.known->value, std::hypot(own, card.known->spread), 0.0};
+    return Moved{card.now->own_offset->value - card.known->value,
+                 std::hypot(card.now->own_offset_noise, card.known->spread), 0.0};
 }
 
 std::optional<Moved> moved_part(const CardInReview& card, CyclePart part)
@@ -102,8 +97,8 @@ template <typename Own> std::optional<Shift> Apart::against_others(std::size_t c
         }
     if (others.size() < fewest_others)
         return Shift{mine->value, std::hypot(mine->own, mine->common)};
-    const double of_median = 1.25 * median(spreads) / std::sqrt(static_cast<double>(others.size()));
-    return Shift{mine->value - median(others), std::hypot(mine->own, of_median)};
+    const double of_median = 1.25 * drift::median_in_place(spreads) / std::sqrt(static_cast<double>(others.size()));
+    return Shift{mine->value - drift::median_in_place(others), std::hypot(mine->own, of_median)};
 }
 
 template <typename Own> std::optional<Shift> Apart::of_all(Own own) const
@@ -118,11 +113,11 @@ template <typename Own> std::optional<Shift> Apart::of_all(Own own) const
         }
     if (values.size() < fewest)
         return std::nullopt;
-    const double middle = median(values);
+    const double middle = drift::median_in_place(values);
     for (const double value : values)
         away.push_back(std::abs(value - middle));
     const double n = static_cast<double>(values.size());
-    const double of_median = 1.25 * 1.4826 * median(away) * (1.0 + 2.0 / n) / std::sqrt(n);
+    const double of_median = 1.25 * 1.4826 * drift::median_in_place(away) * (1.0 + 2.0 / n) / std::sqrt(n);
     return Shift{middle, std::hypot(of_median, common)};
 }
 
@@ -135,7 +130,22 @@ std::optional<Shift> Apart::exponent(std::size_t card) const { return against_ot
 std::optional<Shift> Apart::offset(std::size_t card) const { return against_others(card, moved_offset); }
 std::optional<Shift> Apart::part(std::size_t card, CyclePart part) const
 {
-    return against_others(card, [part](const CardInReview& c) { return moved_part(c, part); });
+    // Zero and drift are the transducer's, which is the same on all cylinders: how the others scatter says more than what
+    // each may be off by.
+    std::vector<double> others;
+    for (std::size_t i = 0; i < cards_.size(); ++i)
+        if (const auto other = i != card ? moved_part(cards_[i], part) : std::nullopt)
+            others.push_back(other->value);
+    auto shift = against_others(card, [part](const CardInReview& c) { return moved_part(c, part); });
+    constexpr std::size_t enough = 4;
+    if (!shift || others.size() < enough)
+        return shift;
+    const double middle = drift::median_in_place(others), n = static_cast<double>(others.size());
+    for (double& value : others)
+        value = std::abs(value - middle);
+    constexpr double least = 0.03; // bar
+    shift->spread = std::hypot(std::max(least, 0.2 * shift->spread), 1.4826 * drift::median_in_place(others) * (1.0 + 2.0 / n));
+    return shift;
 }
 std::optional<Shift> Apart::all(CardResult result) const
 {

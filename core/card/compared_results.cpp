@@ -56,6 +56,15 @@ double per_cent_of_load(CardResult result)
     }
 }
 
+/// Places on the curve, whose own spread is mostly the method's: both cards share it.
+bool by_method(CardResult result)
+{
+    return result == CardResult::maximum_pressure_angle || result == CardResult::start_of_combustion ||
+           result == CardResult::pressure_rise || result == CardResult::ca10 || result == CardResult::ca50 ||
+           result == CardResult::ca90;
+}
+constexpr double not_shared = 0.5; // of the variance; by simulation (card_comparison_test.cpp)
+
 struct Variances
 {
     double alone = 0.0, common = 0.0; ///< common: of all cylinders of the reading
@@ -73,7 +82,8 @@ Variances variances(std::size_t i, const std::vector<DifferenceMember>& members,
         if (const auto& carried = member.card->carried) {
             slopes[m] = carried->slopes[i];
             walls += member.weight * carried->walls[i];
-            sum.alone += square * (carried->own[i] * carried->own[i] + carried->heated[i] * carried->heated[i]);
+            const double kept = by_method(static_cast<CardResult>(i)) ? not_shared : 1.0;
+            sum.alone += square * (kept * carried->own[i] * carried->own[i] + not_shared * carried->heated[i] * carried->heated[i]);
         } else if (const auto& estimate = member.card->results[i]; estimate && estimate->half_width) {
             sum.alone += square * *estimate->half_width * *estimate->half_width / (coverage * coverage);
         }
@@ -101,7 +111,7 @@ LoadsAndCharges weigh_loads(const Comparison& comparison, double load_percent)
     double squares = 1.0;
     for (const Comparison::From& from : comparison.from)
         squares += from.share * from.share;
-    known.load_spread = combustion_over_load * load_reading * std::sqrt(squares);
+    known.load_spread = load_reading * std::sqrt(squares); // at constant speed; less on the propeller law
     known.charge_spread = comparison.charge_pressure_taken ? charge_reading * std::sqrt(squares) : charge_not_taken;
     if (comparison.from.size() == 1 && load_percent > 0.0 && comparison.from.front().load_percent > 0.0) {
         known.load_away = std::abs(load_percent - comparison.from.front().load_percent);

@@ -83,6 +83,10 @@ private:
         double load = 0.0, charge = 0.0, between = 0.0; ///< bar, one standard deviation
     };
     Moves moves_at(double angle) const;
+    void add(Moves& sum, const Moves& here) const;
+    void divide(Moves& sum, double by) const;
+    bool look_about(double angle, double step, const Moves& here, PartDifference& found) const;
+    std::optional<PartDifference> over_part(const Part& part) const;
     double variance(const Moves& moves) const;
     double noise_variance() const;
 
@@ -152,65 +156,86 @@ void Comparer::fill_curves(Comparison& comparison) const
     }
 }
 
-/// Mean of what moves the difference over a part: what is off alike at all its angles does not average out.
+void Comparer::add(Moves& sum, const Moves& here) const
+{
+    for (std::size_t m = 0; m < members_.size(); ++m) {
+        for (std::size_t k = 0; k < unknown_count; ++k)
+            sum.slopes[m][k] += here.slopes[m][k];
+        sum.cycles[m] += here.cycles[m];
+        sum.heated[m] += here.heated[m];
+    }
+    sum.load += here.load;
+    sum.charge += here.charge;
+    sum.between += here.between;
+}
+
+void Comparer::divide(Moves& sum, double by) const
+{
+    for (std::size_t m = 0; m < members_.size(); ++m) {
+        for (double& slope : sum.slopes[m])
+            slope /= by;
+        sum.cycles[m] /= by;
+        sum.heated[m] /= by;
+    }
+    sum.load /= by;
+    sum.charge /= by;
+    sum.between /= by;
+}
+
+/// The difference about an angle, smoothed so that noise does not choose the place; true where it is clear there.
+bool Comparer::look_about(double angle, double step, const Moves& here, PartDifference& found) const
+{
+    constexpr double smoothed = 2.5, clear_place = 2.0; // degrees either way; half-widths, so four standard deviations
+    double place = 0.0, places = 0.0;
+    for (double beside = -smoothed; beside <= smoothed + 1e-9; beside += step)
+        if (const double d = now().curve.pressure(angle + beside) - healthy_at(angle + beside); std::isfinite(d))
+            place += d, ++places;
+    place /= places;
+    if (std::abs(place) > std::abs(found.largest)) {
+        found.largest = place;
+        found.largest_at = std::remainder(angle, now().curve.period());
+    }
+    return std::abs(place) > clear_place * coverage * std::sqrt(variance(here) + noise_variance() / places);
+}
+
+/// What is off alike at all angles of a part does not average out over it: its effects are averaged, then squared.
+std::optional<PartDifference> Comparer::over_part(const Part& part) const
+{
+    constexpr double clear_mean = 1.5; // half-widths: three standard deviations
+    const double step = std::max(now().curve.step(), finest);
+    PartDifference found{part.part, part.from, part.to};
+    Moves mean;
+    mean.slopes.resize(members_.size());
+    mean.cycles.resize(members_.size());
+    mean.heated.resize(members_.size());
+    double samples = 0.0;
+    const auto steps = static_cast<std::ptrdiff_t>(std::floor((part.to - part.from) / step));
+    for (std::ptrdiff_t i = 0; i <= steps; ++i) {
+        const double angle = part.from + static_cast<double>(i) * step;
+        const double difference = now().curve.pressure(angle) - healthy_at(angle);
+        if (!std::isfinite(difference))
+            continue;
+        const Moves here = moves_at(angle);
+        ++samples;
+        found.mean += difference;
+        add(mean, here);
+        if (look_about(angle, step, here, found))
+            found.clear = true;
+    }
+    if (samples < 3.0)
+        return std::nullopt;
+    found.mean /= samples;
+    divide(mean, samples);
+    found.mean_half_width = coverage * std::sqrt(variance(mean) + noise_variance() / samples);
+    found.clear = found.clear || std::abs(found.mean) > clear_mean * found.mean_half_width;
+    return found;
+}
+
 void Comparer::fill_parts(Comparison& comparison) const
 {
-    constexpr double clear_mean = 1.5, clear_place = 2.0; // half-widths: three and four standard deviations
-    constexpr double smoothed = 2.5;                      // degrees either way
-    const double period = now().curve.period(), step = std::max(now().curve.step(), finest);
-    for (const Part& part : lay_out_parts(*now().card, comparison.healthy_results, period)) {
-        PartDifference found{part.part, part.from, part.to};
-        Moves mean;
-        mean.slopes.resize(members_.size());
-        mean.cycles.resize(members_.size());
-        mean.heated.resize(members_.size());
-        double samples = 0.0;
-        const auto steps = static_cast<std::ptrdiff_t>(std::floor((part.to - part.from) / step));
-        for (std::ptrdiff_t i = 0; i <= steps; ++i) {
-            const double angle = part.from + static_cast<double>(i) * step;
-            const double difference = now().curve.pressure(angle) - healthy_at(angle);
-            if (!std::isfinite(difference))
-                continue;
-            ++samples;
-            found.mean += difference;
-            const Moves here = moves_at(angle);
-            for (std::size_t m = 0; m < members_.size(); ++m) {
-                for (std::size_t k = 0; k < unknown_count; ++k)
-                    mean.slopes[m][k] += here.slopes[m][k];
-                mean.cycles[m] += here.cycles[m];
-                mean.heated[m] += here.heated[m];
-            }
-            mean.load += here.load;
-            mean.charge += here.charge;
-            mean.between += here.between;
-            double place = 0.0, places = 0.0; // smoothed, so that noise does not choose the place
-            for (double beside = -smoothed; beside <= smoothed + 1e-9; beside += step)
-                if (const double d = now().curve.pressure(angle + beside) - healthy_at(angle + beside); std::isfinite(d))
-                    place += d, ++places;
-            place /= places;
-            if (std::abs(place) > std::abs(found.largest)) {
-                found.largest = place;
-                found.largest_at = std::remainder(angle, period);
-            }
-            const double room = coverage * std::sqrt(variance(here) + noise_variance() / places);
-            found.clear = found.clear || std::abs(place) > clear_place * room;
-        }
-        if (!(samples >= 3.0))
-            continue;
-        found.mean /= samples;
-        for (std::size_t m = 0; m < members_.size(); ++m) {
-            for (double& slope : mean.slopes[m])
-                slope /= samples;
-            mean.cycles[m] /= samples;
-            mean.heated[m] /= samples;
-        }
-        mean.load /= samples;
-        mean.charge /= samples;
-        mean.between /= samples;
-        found.mean_half_width = coverage * std::sqrt(variance(mean) + noise_variance() / samples);
-        found.clear = found.clear || std::abs(found.mean) > clear_mean * found.mean_half_width;
-        comparison.parts.push_back(found);
-    }
+    for (const Part& part : lay_out_parts(*now().card, comparison.healthy_results, now().curve.period()))
+        if (const auto found = over_part(part))
+            comparison.parts.push_back(*found);
 }
 
 } // namespace

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/card/evaluation.h"
 
+#include "core/card/card_forces.h"
 #include "core/card/plain_evaluation.h"
 #include "core/card/remarks.h"
 #include "core/card/result_catalogue.h"
@@ -145,7 +146,8 @@ void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& sett
     card.method = found.method;
     card.unknowns = found.fit.values;
     card.wall_multiplier = found.wall_multiplier;
-    card.wall_multiplier_spread = found.wall_spread;
+    card.compared_wall = found.compared_wall;
+    card.compared_wall_spread = found.compared_wall_spread;
     card.misfit = found.fit.misfit;
     card.window_from = found.window_from;
     card.window_to = found.window_to;
@@ -153,6 +155,7 @@ void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& sett
     card.results = maker.estimate(card.heat, *card.carried);
     if (found.method != CalibrationMethod::offset_assumed)
         card.own_offset = Estimate{found.own_offset, 2.0 * found.own_offset_spread};
+    card.own_offset_noise = found.own_offset_noise;
     if (found.method == CalibrationMethod::offset_assumed)
         withhold(card, {CardResult::start_of_combustion});
     if (!setting.closing_known)
@@ -164,6 +167,7 @@ void fill_calibrated(Evaluation& card, const Engine& engine, const Setting& sett
     find_firing_peak(card, found);
     remark_on_compression(card, thin, setting, found, ringing);
     remark_on_combustion(card, found);
+    remark_on_heat(card);
 }
 
 } // namespace
@@ -199,10 +203,12 @@ Result<Evaluation> evaluate(const Engine& engine, const Conditions& conditions, 
     const auto setting = find_setting(engine, conditions, gear.value(), card);
     if (!setting) {
         fill_without_balance(card, engine, conditions, gear.value(), thin, direct);
+        card.forces = card_forces(engine, conditions, card);
         return card;
     }
     if (auto found = self_calibrate(thin, *setting)) {
         fill_calibrated(card, engine, *setting, thin, direct, *found);
+        card.forces = card_forces(engine, conditions, card);
         return card;
     }
     card.remarks.push_back(make_remark("tdc_not_determined", {}));

@@ -83,6 +83,14 @@ enum class CalibrationMethod {
     offset_assumed,  ///< the installation's offset, or none
 };
 
+/// Forces of the crank gear from the true card, see core/engine/crank_forces.h.
+struct CardForces
+{
+    double largest_guide = 0.0;                  ///< kN, either way; on the guide, or the liner of a trunk piston
+    double mean_moment = 0.0, largest_moment = 0.0; ///< kNm, of this cylinder on the shaft
+    bool gas_force_only = true;                  ///< no moving mass is entered
+};
+
 /// One value and its scatter from cycle to cycle.
 struct CycleSpread
 {
@@ -111,10 +119,12 @@ struct Evaluation
     Unknowns unknowns{};                ///< as taken for the results
     std::optional<Carried> carried;     ///< empty: dead centre was not found by a fit
     std::optional<Estimate> own_offset; ///< degrees, from this card alone, whatever the installation's is
+    double own_offset_noise = 0.0;      ///< of its spread what the engine's other cards do not share, degrees
     std::optional<double> closes, opens; ///< of the cylinder, true degrees
     double expansion_angle = 40.0;      ///< of the engine, true degrees
     std::optional<double> wall_multiplier; ///< with the entered compression ratio; far from 1 where that is not true
-    double wall_multiplier_spread = 0.0; ///< from the card's noise, one standard deviation
+    std::optional<double> compared_wall;   ///< the same at the installation's offset: what a healthy card's is compared with
+    double compared_wall_spread = 0.0;     ///< from the card's noise, one standard deviation
     double misfit = 0.0;                ///< of the compression against the line, near 1 where it fits
     double window_from = 0.0, window_to = 0.0; ///< of the fit, true degrees
     std::vector<double> line_angle, line_pressure; ///< the unfired line: true degrees, bar abs, from closing to 25°
@@ -123,6 +133,7 @@ struct Evaluation
     std::optional<Peak> firing_peak;    ///< true, where the largest pressure is that of compression
     std::optional<double> compression_exponent, expansion_exponent, opening_pressure; ///< opening: bar abs
     std::optional<double> heat_over_fuel;
+    std::optional<CardForces> forces; ///< empty: incomplete card, or the pressure below the piston is not known
 
     /// As recorded, nothing taken out: for comparison with other instruments.
     double plain_mean_indicated = 0.0, plain_maximum = 0.0;

@@ -3,6 +3,8 @@
 
 #include "core/card/result_catalogue.h"
 
+#include "core/trend/robust.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -27,13 +29,6 @@ struct Fit
     bool known = false;
 };
 
-double median(std::vector<double> values)
-{
-    std::sort(values.begin(), values.end());
-    const std::size_t n = values.size();
-    return n % 2 == 1 ? values[n / 2] : 0.5 * (values[n / 2 - 1] + values[n / 2]);
-}
-
 /// How badly the card of one cylinder fits the healthy one of another: squares in standard deviations, what all cylinders
 /// moved by taken out.
 class Matcher
@@ -47,7 +42,7 @@ public:
             for (const CardInReview& card : cards)
                 if (card.comparison && card.comparison->differences[i])
                     moves.push_back(card.comparison->differences[i]->value);
-            common_.push_back(moves.size() < 3 ? std::nullopt : std::optional(median(moves)));
+            common_.push_back(moves.size() < 3 ? std::nullopt : std::optional(drift::median_in_place(moves)));
         }
     }
     Fit misfit(std::size_t card, std::size_t healthy) const
@@ -91,6 +86,7 @@ void find_exchanged(const Engine& engine, const std::vector<CardInReview>& cards
 {
     // By simulation (card_review_statistics_test.cpp): more doubts the lower they are.
     const double clearly = 16.0 + 4.0 * std::log(std::max(1.0, static_cast<double>(cards.size() * (cards.size() - 1)) / 30.0));
+    constexpr double each_gains = 3.0; // a fault on one of them makes only that card fit badly
     constexpr double fits = 16.0; // both cards on each other's healthy ones, eight features
     const Matcher matcher(cards);
     struct Pair
@@ -105,7 +101,8 @@ void find_exchanged(const Engine& engine, const std::vector<CardInReview>& cards
             if (!aa.known || !bb.known || !ab.known || !ba.known || ab.value + ba.value > fits)
                 continue;
             const double gain = aa.value + bb.value - ab.value - ba.value;
-            if (gain > clearly && (!best || gain > best->gain))
+            const bool each = aa.value - ab.value > each_gains && bb.value - ba.value > each_gains;
+            if (each && gain > clearly && (!best || gain > best->gain))
                 best = Pair{a, b, gain};
         }
     if (best)

@@ -3,6 +3,8 @@
 
 #include "core/plain_text.h"
 
+#include "core/trend/robust.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -46,13 +48,6 @@ std::vector<std::size_t> around(double load, const std::vector<Candidate>& candi
         if (c && std::abs(c->load - load) <= same_load)
             return {c->reading};
     return {};
-}
-
-double median(std::vector<double> values)
-{
-    std::sort(values.begin(), values.end());
-    const std::size_t n = values.size();
-    return n % 2 == 1 ? values[n / 2] : 0.5 * (values[n / 2 - 1] + values[n / 2]);
 }
 
 /// Of those called healthy, newest first, the ones whose load no newer one has.
@@ -148,12 +143,12 @@ std::optional<KnownOffset> InstallationOffset::weigh(const std::vector<Found>& f
         values.push_back(f.value);
         spreads.push_back(f.spread);
     }
-    const double middle = median(values);
+    const double middle = drift::median_in_place(values);
     for (const double value : values)
         away.push_back(std::abs(value - middle));
     const double n = static_cast<double>(found.size());
-    // A median of few distances is too small: up to twice for three (JCGM 100 gives the same order for few readings).
-    const double scatter = 1.4826 * median(away) * (1.0 + 2.0 / n);
+    // A median of few distances is too small and scatters itself (common practice: more room for fewer cards).
+    const double scatter = 1.4826 * drift::median_in_place(away) * (1.0 + 2.0 / n);
     constexpr double least = 0.02; // degrees: play of the pickup and twist of the shaft (common practice, no source)
     const double by_chance = scatter * scatter * 1.57 / n; // of a median
     const double lasting = one_cylinder ? 0.0 : 0.5 * scatter * scatter;
@@ -173,7 +168,7 @@ std::optional<Estimate> InstallationOffset::of_engine() const
         values.push_back(f.value);
         widest = std::max(widest, f.spread);
     }
-    return Estimate{median(values), 2.0 * widest};
+    return Estimate{drift::median_in_place(values), 2.0 * widest};
 }
 
 std::optional<KnownOffset> InstallationOffset::of_cylinder(int cylinder) const

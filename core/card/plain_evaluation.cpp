@@ -213,7 +213,7 @@ void fill_without_balance(Evaluation& card, const Engine& engine, const Conditio
         if (conditions.known_offset)
             card.unknowns[offset] = in_degrees(*conditions.known_offset);
         fill_readings(card, engine, gear, thin, direct, offset_spread, unknown_zero_spread);
-        card.remarks.push_back(make_remark("tdc_assumed", {short_number_text(card.unknowns[offset])}));
+        card.remarks.push_back(make_remark("tdc_assumed", {short_number_text(card.unknowns[offset]), short_number_text(2.0 * offset_spread)}));
         return;
     }
     const PowerLine& line = found->line;
@@ -231,6 +231,7 @@ void fill_without_balance(Evaluation& card, const Engine& engine, const Conditio
         put(card, CardResult::start_of_combustion, found->start->start, std::hypot(offset_deviation, 0.3));
     fill_readings(card, engine, gear, thin, direct, offset_deviation, zero_deviation);
     card.own_offset = card[CardResult::offset];
+    card.own_offset_noise = offset_deviation;
     Carried& carried = card.carried.emplace();
     carried.covariance[offset][offset] = offset_deviation * offset_deviation;
     carried.covariance[zero][zero] = zero_deviation * zero_deviation;

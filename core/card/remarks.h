@@ -25,6 +25,9 @@ void remark_on_trace(Evaluation& card, const SliderCrank& gear, const DirectRead
 void remark_on_compression(Evaluation& card, const ThinTrace& thin, const Setting& setting, const SelfCalibration& found,
                            const std::optional<Ringing>& ringing);
 
+/// More heat than the fuel had, where that is known.
+void remark_on_heat(Evaluation& card);
+
 /// Of start, length and place of the combustion.
 void remark_on_combustion(Evaluation& card, const SelfCalibration& found);
 

@@ -56,7 +56,7 @@ private:
     Apart apart_;
     std::size_t at_;
     std::vector<Remark> found_;
-    bool compression_moved_ = false, lags_ = false, timing_moved_ = false, drifts_ = false;
+    bool lags_ = false, drifts_ = false;
 };
 
 /// "scavenge space 62 °C, the others 48 °C; exhaust …": what tells rings from valve; empty where neither was read.
@@ -90,22 +90,27 @@ std::string Evidence::temperatures() const
 
 void Evidence::look_at_compression()
 {
-    constexpr double worth_share = 0.012, risen = 0.35, unchanged = 0.25;
+    constexpr double worth_share = 0.006, plain_share = 0.02, risen = 0.3, unchanged = 0.45;
     const auto compression = of(CardResult::compression_pressure);
     const auto wall = apart_.wall(at_);
     const double usual = healthy(CardResult::compression_pressure);
     if (!compression || !wall || !(usual > 0.0))
         return;
     const bool leaks = wall->value > risen && wall->value > sure * wall->spread;
-    compression_moved_ = compression->beyond(sure, worth_share * usual) || leaks;
-    if (leaks && compression->value < -likely * compression->spread && compression->value < -0.5 * worth_share * usual) {
+    if (leaks && compression->value < -likely * compression->spread && compression->value < -worth_share * usual) {
         say("charge_leak", {shown(-compression->value, 10.0), shown(wall->value, 10.0), temperatures()});
         return;
     }
-    const bool same_loss = std::abs(wall->value) < std::max(unchanged, likely * wall->spread);
-    if (!compression->beyond(sure, 0.02 * usual) || !same_loss)
+    if (!compression->beyond(sure, plain_share * usual))
         return;
-    say(compression->value < 0.0 ? "less_charge" : "more_charge", {shown(std::abs(compression->value), 10.0)});
+    // A wall loss that is not known to have stayed leaves the leak open.
+    const bool stayed = std::abs(wall->value) + wall->spread < unchanged;
+    if (compression->value > 0.0 && stayed)
+        say("more_charge", {shown(compression->value, 10.0)});
+    else if (compression->value < 0.0 && stayed)
+        say("less_charge", {shown(-compression->value, 10.0)});
+    else if (compression->value < 0.0 && wall->value > -likely * wall->spread)
+        say("compression_low", {shown(-compression->value, 10.0), temperatures()});
 }
 
 void Evidence::look_at_passage()
@@ -114,7 +119,9 @@ void Evidence::look_at_passage()
     const auto offset = apart_.offset(at_);
     if (!offset || offset->value < limit || offset->value < sure * offset->spread)
         return;
-    if (low(CardResult::pressure_rise, likely) || low(CardResult::maximum_pressure, likely)) {
+    // A leak draws dead centre early and other faults leave it: as late as this only the passage is.
+    constexpr double plainly = 2.0;
+    if (offset->value > plainly * limit || low(CardResult::pressure_rise, likely) || low(CardResult::maximum_pressure, likely)) {
         lags_ = true;
         say("trace_lags", {shown(offset->value)});
     }
@@ -127,7 +134,6 @@ void Evidence::look_at_combustion()
                last = of(CardResult::ca90);
     if (start && first && half && start->beyond(sure, least_start) && first->beyond(sure, 0.7 * least_start) &&
         start->value * first->value > 0.0 && half->value * first->value > 0.0) {
-        timing_moved_ = true;
         say(first->value > 0.0 ? "later_than_healthy" : "earlier_than_healthy",
             {shown(std::abs(start->value), 10.0), shown(std::abs(half->value), 10.0)},
             (*cards_[at_].now)[CardResult::start_of_combustion]->value);
@@ -145,7 +151,7 @@ void Evidence::look_at_fuel()
     constexpr double worth_share = 0.04;
     const auto work = of(CardResult::mean_indicated_pressure), expansion = of(CardResult::expansion_pressure);
     const double usual = healthy(CardResult::mean_indicated_pressure);
-    if (drifts_ || lags_ || !work || !expansion || !(usual > 0.0) || !work->beyond(sure, worth_share * usual))
+    if (drifts_ || !work || !expansion || !(usual > 0.0) || !work->beyond(sure, worth_share * usual))
         return;
     if (work->value * expansion->value > 0.0 && std::abs(expansion->value) > likely * expansion->spread)
         say(work->value > 0.0 ? "more_fuel" : "less_fuel",
@@ -156,9 +162,9 @@ void Evidence::look_at_fuel()
 /// maximum is not.
 void Evidence::look_at_transducer()
 {
-    constexpr double worth_bar = 0.15;
+    constexpr double worth_bar = 0.12;
     const auto exchange = apart_.part(at_, CyclePart::gas_exchange), late = apart_.part(at_, CyclePart::expansion);
-    if (!exchange || !late || !exchange->beyond(sure, worth_bar) || exchange->value * late->value < 0.0 ||
+    if (!exchange || !late || !exchange->beyond(sure + 0.5, worth_bar) || exchange->value * late->value < 0.0 ||
         std::abs(late->value) < std::abs(exchange->value))
         return;
     if (const auto maximum = of(CardResult::maximum_pressure); maximum && maximum->beyond(sure, 1.0))
@@ -179,8 +185,10 @@ std::vector<Remark> Evidence::remarks()
         say("compared_widely", {});
         return found_;
     }
-    look_at_compression();
     look_at_passage();
+    if (lags_) // the rest of the card is late and smoothed
+        return found_;
+    look_at_compression();
     look_at_transducer();
     look_at_combustion();
     look_at_fuel();

@@ -35,7 +35,7 @@ std::optional<Shift> shared_ratio(const std::vector<CardInReview>& cards, CardRe
 /// Load moves the work and not the compression, the charge the other way about: both by the same ratio is the instrument.
 std::optional<Remark> remark_on_gain(const std::vector<CardInReview>& cards)
 {
-    constexpr double worth_share = 0.015, alike = 2.0;
+    constexpr double worth_share = 0.02, alike = 2.0, each = 2.0;
     const auto compression = shared_ratio(cards, CardResult::compression_pressure);
     const auto work = shared_ratio(cards, CardResult::mean_indicated_pressure);
     const auto maximum = shared_ratio(cards, CardResult::maximum_pressure);
@@ -51,7 +51,7 @@ std::optional<Remark> remark_on_gain(const std::vector<CardInReview>& cards)
         apart > alike * std::hypot(compression->spread, work->spread) || std::abs(maximum->value) < 0.5 * std::abs(gain.value))
         return std::nullopt;
     // Each of the two must show it by itself: one that is far off does not carry one that stands still.
-    if (std::abs(compression->value) < 1.5 * compression->spread || std::abs(work->value) < 1.5 * work->spread)
+    if (std::abs(compression->value) < each * compression->spread || std::abs(work->value) < each * work->spread)
         return std::nullopt;
     return make_remark("gain_suspected", {shown(100.0 * std::abs(compression->value), 10.0), shown(100.0 * std::abs(work->value), 10.0),
                                           gain.value > 0.0 ? "higher" : "lower"});

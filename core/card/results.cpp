@@ -13,10 +13,26 @@ constexpr double expansion_half_width = 2.0; // degrees
 constexpr double wall_spread = 0.25;         // of the film formula's wall loss (common practice, no source)
 constexpr double hot_drift = 0.08;           // bar by which the flame may move the zero (common practice, no source)
 constexpr double drift_of_work = 0.08;       // bar of mean indicated pressure from a zero that moves within the cycle
+constexpr double jump_of_work = 0.8;         // bar of mean indicated pressure a bar of jump: a thermal shock of 0.5 bar, by simulation
 constexpr double coverage = 2.0;             // JCGM 100: half-width at 95 % over the standard uncertainty
 
 /// How far each unknown is moved for a difference quotient.
 constexpr Unknowns moved_by{0.02, 0.02, 0.05, 1e-4, 0.002, 2.0, 0.02};
+
+/// bar by which the record's end does not meet its beginning beyond what noise does; a flame that has heated the transducer
+/// leaves it so.
+double end_jump(const ThinTrace& thin)
+{
+    constexpr double width = 3.0; // degrees
+    const auto count = std::min(thin.pressure.size(), static_cast<std::size_t>(std::max(1.0, width / thin.step)));
+    if (count == 0)
+        return 0.0;
+    double jump = 0.0;
+    for (std::size_t i = 0; i < count; ++i)
+        jump += (thin.pressure[thin.pressure.size() - 1 - i] - thin.pressure[i]) / static_cast<double>(count);
+    const double by_chance = 2.0 * thin.noise * std::sqrt(2.0 / static_cast<double>(count));
+    return std::isfinite(jump) ? std::max(0.0, std::abs(jump) - by_chance) : 0.0;
+}
 
 std::size_t index(CardResult result) { return static_cast<std::size_t>(result); }
 
@@ -130,8 +146,10 @@ std::optional<double> ResultMaker::own_spread(CardResult result, double value) c
     }
     if (result == CardResult::maximum_pressure_angle && direct_.peak)
         squares += direct_.peak->angle_spread * direct_.peak->angle_spread;
-    if (result == CardResult::mean_indicated_pressure)
-        squares += drift_of_work * drift_of_work;
+    if (result == CardResult::mean_indicated_pressure) {
+        const double moved = jump_of_work * end_jump(thin_);
+        squares += drift_of_work * drift_of_work + moved * moved;
+    }
     if (result == CardResult::trapped_mass || result == CardResult::dead_centre_temperature ||
         result == CardResult::maximum_temperature) {
         // The charge is read from a parabola over 8° after closing.

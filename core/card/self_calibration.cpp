@@ -16,6 +16,13 @@ constexpr double drift_spread = 0.1;     // bar in 180°
 constexpr double plausible_strain = 12.0; // of the beliefs together, before another ratio is no explanation any more
 constexpr double lowest_multiplier = -1.0, highest_multiplier = 4.0;
 
+/// 1° either way where nothing is known of the installation.
+double kept_offset_spread(const Setting& setting)
+{
+    constexpr double unknown = 0.5, least = 0.1; // degrees, one standard deviation
+    return setting.known_offset && setting.known_offset_spread ? std::max(*setting.known_offset_spread, least) : unknown;
+}
+
 class Calibrator
 {
 public:
@@ -35,6 +42,8 @@ private:
     bool with_angle_alone();
     bool with_offset_kept();
     void take_known_offset();
+    void compare_walls();
+    double unshared(std::size_t i, std::size_t j) const;
     bool too_much_heat() const;
     double window_start() const { return std::max(window_begin, cylinder_.closes + 5.0); }
 
@@ -54,6 +63,22 @@ Beliefs Calibrator::usual_beliefs() const
     beliefs[closing] = {cylinder_.closing_kelvin, std::nullopt, true};
     beliefs[drift] = {0.0, std::nullopt, true};
     return beliefs;
+}
+
+/// What the multiplier is at the installation's offset: a leak shows in it then, and not in dead centre.
+void Calibrator::compare_walls()
+{
+    const UnknownCovariance& all = found_.fit.covariance;
+    double value = found_.fit.values[wall_loss], variance = all[wall_loss][wall_loss];
+    if (setting_.known_offset && setting_.known_offset_spread) {
+        const double known = *setting_.known_offset_spread, total = all[offset][offset] + known * known;
+        const double gain = all[wall_loss][offset] / total;
+        value += gain * (*setting_.known_offset - found_.fit.values[offset]);
+        variance -= gain * all[wall_loss][offset];
+    }
+    const double believed = found_.believed[wall_loss];
+    found_.compared_wall = value;
+    found_.compared_wall_spread = std::sqrt(std::max(0.0, variance - variance * variance / (believed * believed)));
 }
 
 void Calibrator::peg()
@@ -80,6 +105,7 @@ bool Calibrator::fit(const Beliefs& beliefs, double from, double to)
         found_.believed[i] = beliefs[i].spread.value_or(0.0) * (beliefs[i].held ? 1.0 : std::sqrt(fitted->widened));
     found_.own_offset = fitted->values[offset];
     found_.own_offset_spread = std::sqrt(fitted->covariance[offset][offset]);
+    found_.own_offset_noise = std::sqrt(unshared(offset, offset));
     found_.window_from = from;
     found_.window_to = to;
     found_.end = line_end(cylinder_, walls_, window, found_.fit.values);
@@ -150,22 +176,27 @@ bool Calibrator::with_everything_uncertain()
     return true;
 }
 
+/// An entry of the covariance without what ratio and film formula are wrong by, which all cards of the engine share.
+double Calibrator::unshared(std::size_t i, std::size_t j) const
+{
+    const UnknownCovariance& all = found_.fit.covariance;
+    double entry = all[i][j];
+    for (const Unknown shared : {ratio, wall_loss})
+        if (const double believed = found_.believed[shared]; believed > 0.0)
+            entry -= all[i][shared] * all[j][shared] / (believed * believed);
+    return i == j ? std::max(entry, 0.0) : entry;
+}
+
 /// Weighs the installation's offset against the card's own (a Kalman step). What ratio and film formula are wrong by draws
 /// all cards of the engine alike, so the installation's offset does not know it better: it stays in the covariance.
 void Calibrator::take_known_offset()
 {
     if (!setting_.known_offset || !setting_.known_offset_spread)
         return;
-    constexpr Unknown shared[] = {ratio, wall_loss};
     UnknownCovariance& all = found_.fit.covariance;
     Unknowns gain{};
-    for (std::size_t i = 0; i < unknown_count; ++i) {
-        gain[i] = all[i][offset];
-        for (const Unknown j : shared)
-            if (found_.believed[j] > 0.0)
-                gain[i] -= all[i][j] * all[offset][j] / (found_.believed[j] * found_.believed[j]);
-    }
-    gain[offset] = std::max(gain[offset], 0.0);
+    for (std::size_t i = 0; i < unknown_count; ++i)
+        gain[i] = unshared(i, offset);
     const double known = *setting_.known_offset_spread, total = gain[offset] + known * known;
     if (!(total > 0.0))
         return;
@@ -204,7 +235,7 @@ bool Calibrator::with_offset_kept()
     Beliefs beliefs = usual_beliefs();
     found_.fit.values[offset] = setting_.known_offset.value_or(0.0);
     peg();
-    beliefs[offset] = {setting_.known_offset.value_or(0.0), 0.5, true};
+    beliefs[offset] = {setting_.known_offset.value_or(0.0), kept_offset_spread(setting_), true};
     beliefs[zero] = {found_.pegged_zero, setting_.scavenge ? 0.20 : 1.0, true};
     beliefs[wall_loss] = {1.0, 0.6, true};
     beliefs[ratio] = {0.0, ratio_spread, true};
@@ -232,8 +263,7 @@ std::optional<SelfCalibration> Calibrator::run()
     if (!stands || !found_.fit.converged || std::abs(found_.fit.values[offset]) > largest_offset)
         return std::nullopt;
     found_.wall_multiplier = found_.fit.values[wall_loss];
-    const double spread = found_.fit.covariance[wall_loss][wall_loss], believed = found_.believed[wall_loss];
-    found_.wall_spread = std::sqrt(std::max(0.0, spread - spread * spread / (believed * believed)));
+    compare_walls();
     found_.doubtful = !(found_.wall_multiplier >= lowest_multiplier && found_.wall_multiplier <= highest_multiplier) ||
                       too_much_heat();
     const SelfCalibration before = found_;

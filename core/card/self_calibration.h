@@ -31,6 +31,7 @@ struct SelfCalibration
     Calibration fit;
     Unknowns believed{};                         ///< standard deviations of the beliefs of that fit; 0: none
     double own_offset = 0.0, own_offset_spread = 0.0; ///< degrees, of this card alone
+    double own_offset_noise = 0.0; ///< of that spread what the engine's other cards do not share
     Parabola closing_pressure;
     CompressionWindow window;                    ///< the samples of the fit; views of the thin trace
     double window_from = 0.0, window_to = 0.0;   ///< true degrees
@@ -39,7 +40,7 @@ struct SelfCalibration
     std::optional<CombustionStart> start;        ///< empty: nothing burns
     double highest_excess = 0.0;                 ///< ln p over the line, largest
     double wall_multiplier = 1.0;                ///< with the entered compression ratio held
-    double wall_spread = 0.0;                    ///< of it from this card's own noise, one standard deviation
+    double compared_wall = 1.0, compared_wall_spread = 0.0; ///< the same at the installation's offset; from noise alone
     double pegged_zero = 0.0;                    ///< zero that the charge pressure asks for
     bool doubtful = false;                       ///< multiplier outside -1 to 4, or more heat than fuel
 };

@@ -1,10 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // How long a card takes: evaluated whole (aim: at most 4 ms), its file read (aim: at most a tenth of that), and twenty
-// cycles in tenths of a degree (aim: at most 40 ms). Processor time of one thread; nothing fails on it.
+// cycles in tenths of a degree (aim: at most 40 ms); the review of twelve cylinders with their healthy cards at two loads
+// (aim: at most 150 ms). Processor time of one thread; nothing fails on it.
 #include "core/card/evaluation.h"
 #include "storage/card_store.h"
 #include "tests/bench/processor_time.h"
-#include "tests/core/card_simulator.h"
+#include "tests/core/card_ship.h"
 
 #include <cstdio>
 
@@ -37,6 +38,27 @@ void measure(const BenchCard& row)
                 evaluating, reading, 100.0 * reading / evaluating, good ? "" : " REFUSED");
 }
 
+void measure_review(bool two_stroke)
+{
+    Dice dice(1);
+    ShipCase what;
+    what.two_stroke = two_stroke;
+    what.cylinders = 12;
+    what.loads = {70.0, 90.0, 80.0};
+    what.called_healthy = 2;
+    what.cycles = 1;
+    const SimulatedShip ship = simulate_ship(what, dice);
+    std::size_t compared = 0;
+    const double reviewing = best_of(5, [&] {
+        compared = 0;
+        for (const ReviewedCard& card : review_cards(ship.judgement, ship.in_hand(), ship.shelf).cards)
+            compared += card.comparison ? 1 : 0;
+    });
+    std::printf("%-44s %7zu cards: reviewed %8.2f ms\n",
+                two_stroke ? "two-stroke, twelve cylinders and healthy cards" : "four-stroke, twelve cylinders and healthy cards",
+                compared, reviewing);
+}
+
 } // namespace
 
 int main()
@@ -50,5 +72,7 @@ int main()
                         {"four-stroke, twenty cycles, 0.1 degree", false, 0.1, 20}};
     for (const BenchCard& row : rows)
         measure(row);
+    measure_review(true);
+    measure_review(false);
     return 0;
 }

@@ -88,6 +88,7 @@ SimulatedShip simulate_ship(const ShipCase& what, Dice& dice, const CardFault& f
         maker.number("speed", engine.engine.speed_rpm).number("barometric_pressure", 1010.0);
         maker.number("scavenge_pressure", engine.scavenge * said_charge - 1.01);
         maker.number("scavenge_temperature", warm - 273.15 - 30.0 + spread(dice, 4.0));
+        double fuel = 0.0;
         for (int c = 1; c <= what.cylinders; ++c) {
             SimulatedCase made = with_traits(engine, traits[static_cast<std::size_t>(c - 1)]);
             made.closing_kelvin = warm;
@@ -100,6 +101,7 @@ SimulatedShip simulate_ship(const ShipCase& what, Dice& dice, const CardFault& f
                 ship.sound.emplace(c, made);
             if (in_hand && fault)
                 fault(made, c);
+            fuel += made.fuel_kg;
             const SimulatedCard card = simulate(made, dice);
             if (r == 0 && c == 1)
                 record->engine = card.engine;
@@ -109,6 +111,8 @@ SimulatedShip simulate_ship(const ShipCase& what, Dice& dice, const CardFault& f
             ship.cards->emplace(place, RecordedCard{card.trace, false});
             ship.shelf.places.push_back(place);
         }
+        const double cycles = engine.engine.speed_rpm * 60.0 / (what.two_stroke ? 1.0 : 2.0);
+        maker.number("fuel_consumption", fuel * cycles * (1.0 + spread(dice, 0.01)));
         record->readings.push_back(maker.done());
         ReadingJudgement judged;
         judged.reading = r;

@@ -12,7 +12,7 @@
 /// (0.4°) and wall loss (10 %), which gives about the lasting spread of mean indicated, maximum and compression
 /// pressure that the drift method reckons with (1.5 %, 1.5 bar, 1.0 bar); from reading to reading in fuel (0.7 %),
 /// timing (0.15°) and charge (0.3 %); the pickup's offset by 0.03° from cylinder to cylinder and 0.02° from month to
-/// month; load and scavenge pressure are read to 1 % and 0.5 %. One standard deviation each; invented.
+/// month; load, fuel and scavenge pressure are read to 1, 1 and 0.5 %. One standard deviation each; invented.
 namespace evenstroke::indicator {
 
 struct ShipCase
