@@ -85,8 +85,8 @@ private:
     Moves moves_at(double angle) const;
     void add(Moves& sum, const Moves& here) const;
     void divide(Moves& sum, double by) const;
-    bool look_about(double angle, double step, const Moves& here, PartDifference& found) const;
-    std::optional<PartDifference> over_part(const Part& part) const;
+    bool look_about(double angle, const Comparison& comparison, PartDifference& found) const;
+    std::optional<PartDifference> over_part(const Part& part, const Comparison& comparison) const;
     double variance(const Moves& moves) const;
     double noise_variance() const;
 
@@ -182,44 +182,56 @@ void Comparer::divide(Moves& sum, double by) const
     sum.between /= by;
 }
 
+/// Index of the grid angle nearest to an angle of any turn.
+std::size_t place_of(double angle, const Comparison& comparison)
+{
+    const double step = comparison.angle[1] - comparison.angle[0];
+    const double period = step * static_cast<double>(comparison.angle.size());
+    const double from_start = angle - comparison.angle.front();
+    const double within = from_start - std::floor(from_start / period) * period;
+    return static_cast<std::size_t>(std::lround(within / step)) % comparison.angle.size();
+}
+
 /// The difference about an angle, smoothed so that noise does not choose the place; true where it is clear there.
-bool Comparer::look_about(double angle, double step, const Moves& here, PartDifference& found) const
+bool Comparer::look_about(double angle, const Comparison& comparison, PartDifference& found) const
 {
     constexpr double smoothed = 2.5, clear_place = 2.0; // degrees either way; half-widths, so four standard deviations
+    const double step = comparison.angle[1] - comparison.angle[0];
+    const auto reach = static_cast<std::ptrdiff_t>(smoothed / step + 1e-9);
+    const auto at = static_cast<std::ptrdiff_t>(place_of(angle, comparison)), n = static_cast<std::ptrdiff_t>(comparison.angle.size());
     double place = 0.0, places = 0.0;
-    for (double beside = -smoothed; beside <= smoothed + 1e-9; beside += step)
-        if (const double d = now().curve.pressure(angle + beside) - healthy_at(angle + beside); std::isfinite(d))
+    for (std::ptrdiff_t beside = -reach; beside <= reach; ++beside)
+        if (const double d = comparison.difference[static_cast<std::size_t>((at + beside + n) % n)]; std::isfinite(d))
             place += d, ++places;
     place /= places;
     if (std::abs(place) > std::abs(found.largest)) {
         found.largest = place;
-        found.largest_at = std::remainder(angle, now().curve.period());
+        found.largest_at = comparison.angle[static_cast<std::size_t>(at)];
     }
-    return std::abs(place) > clear_place * coverage * std::sqrt(variance(here) + noise_variance() / places);
+    const double half_width = comparison.half_width[static_cast<std::size_t>(at)], noise = noise_variance();
+    const double without_noise = std::max(0.0, half_width * half_width / (coverage * coverage) - noise);
+    return std::abs(place) > clear_place * coverage * std::sqrt(without_noise + noise / places);
 }
 
 /// What is off alike at all angles of a part does not average out over it: its effects are averaged, then squared.
-std::optional<PartDifference> Comparer::over_part(const Part& part) const
+std::optional<PartDifference> Comparer::over_part(const Part& part, const Comparison& comparison) const
 {
     constexpr double clear_mean = 1.5; // half-widths: three standard deviations
-    const double step = std::max(now().curve.step(), finest);
+    const double step = comparison.angle[1] - comparison.angle[0];
     PartDifference found{part.part, part.from, part.to};
     Moves mean;
     mean.slopes.resize(members_.size());
     mean.cycles.resize(members_.size());
     mean.heated.resize(members_.size());
     double samples = 0.0;
-    const auto steps = static_cast<std::ptrdiff_t>(std::floor((part.to - part.from) / step));
-    for (std::ptrdiff_t i = 0; i <= steps; ++i) {
-        const double angle = part.from + static_cast<double>(i) * step;
-        const double difference = now().curve.pressure(angle) - healthy_at(angle);
+    for (double angle = std::ceil(part.from / step) * step; angle <= part.to; angle += step) {
+        const double difference = comparison.difference[place_of(angle, comparison)];
         if (!std::isfinite(difference))
             continue;
-        const Moves here = moves_at(angle);
         ++samples;
         found.mean += difference;
-        add(mean, here);
-        if (look_about(angle, step, here, found))
+        add(mean, moves_at(angle));
+        if (look_about(angle, comparison, found))
             found.clear = true;
     }
     if (samples < 3.0)
@@ -234,7 +246,7 @@ std::optional<PartDifference> Comparer::over_part(const Part& part) const
 void Comparer::fill_parts(Comparison& comparison) const
 {
     for (const Part& part : lay_out_parts(*now().card, comparison.healthy_results, now().curve.period()))
-        if (const auto found = over_part(part))
+        if (const auto found = over_part(part, comparison))
             comparison.parts.push_back(*found);
 }
 
