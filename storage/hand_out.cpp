@@ -15,6 +15,7 @@
 #include <QFile>
 #include <QSaveFile>
 
+#include <algorithm>
 #include <map>
 #include <set>
 
@@ -61,18 +62,31 @@ std::vector<std::string> value_fields(const Reading& reading, const Value& value
             missing_words[static_cast<std::size_t>(value.missing)]};
 }
 
+bool any_from_cards(const std::vector<Reading>& readings)
+{
+    return std::any_of(readings.begin(), readings.end(), [](const Reading& reading) {
+        return std::any_of(reading.values.begin(), reading.values.end(),
+                           [](const Value& value) { return value.origin == Origin::card; });
+    });
+}
+
 std::string readings_text(const std::vector<Reading>& readings, const Engine* engine)
 {
+    const bool origins = any_from_cards(readings);
     std::vector<std::string> header = {"reading", "taken_at", "quantity", "cylinder",      "value",
                                        "unit",    "phase",    "text",     "missing_reason"};
     if (!engine)
         header.erase(header.begin() + 3);
+    if (origins)
+        header.push_back("origin");
     std::string text = csv_line(header);
     for (const Reading& reading : readings) {
         for (const Value& value : reading.values) {
             std::vector<std::string> fields = value_fields(reading, value, engine, file_time(reading.taken_at));
             if (!engine)
                 fields.erase(fields.begin() + 3);
+            if (origins)
+                fields.push_back(value.origin == Origin::card ? "card" : "");
             text += csv_line(fields);
         }
     }

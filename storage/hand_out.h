@@ -19,8 +19,9 @@ namespace evenstroke::storage {
 Result<QStringList> hand_out(History& history, const std::string& vessel_id, const QString& folder,
                              const Progress& progress = {});
 
-/// The values of a reading as lines of a readings.csv with all nine columns (reading, taken_at, quantity,
-/// cylinder, value, unit, phase, text, missing_reason), the time in UTC, each ended by a line feed.
+/// The values of a reading as lines of a readings.csv with its nine usual columns (reading, taken_at, quantity,
+/// cylinder, value, unit, phase, text, missing_reason), the time in UTC, each ended by a line feed. Where a value
+/// came from is not among them.
 std::vector<std::string> value_lines(const Reading& reading, const Engine& engine);
 
 } // namespace evenstroke::storage

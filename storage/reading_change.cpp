@@ -141,6 +141,37 @@ Value completed(Value value)
     return value;
 }
 
+Done keep_correction(History& history, qint64 reading_key, const ValueRow& before, const ValueRow& after,
+                     const Signature& by)
+{
+    Query keep(history.database(),
+               "INSERT INTO correction (reading_key, quantity_key, place, phase, old_typed, old_unit_key, "
+               "old_value_si, old_words, old_missing, "
+               "old_origin, new_typed, new_unit_key, new_value_si, new_words, new_missing, new_origin, at, who, why) "
+               "VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)",
+               "the correction was not saved");
+    const auto unit = [](const ValueRow& row) {
+        return row.unit_key == 0 ? std::nullopt : std::optional(row.unit_key);
+    };
+    const auto words = [](const ValueRow& row) {
+        return row.words.empty() ? std::nullopt : std::optional(row.words);
+    };
+    return keep.run(reading_key, after.quantity_key, after.place, after.phase, before.typed, unit(before),
+                    before.value_si, words(before), before.missing, before.origin, after.typed, unit(after),
+                    after.value_si, words(after), after.missing, after.origin, seconds_of(history.now()), by.who, by.why);
+}
+
+std::string value_text(const History::Names& names, const ValueRow& row)
+{
+    if (row.missing != 0) {
+        const char* const words[] = {"", "not fitted", "not read", "out of order"};
+        return words[std::min(row.missing, 3)];
+    }
+    const UnitInFile* const unit = names.unit(row.unit_key);
+    return row.typed + (unit && !unit->written.empty() ? " " + unit->written : "") +
+           (row.typed.empty() ? row.words : "");
+}
+
 Done check_signature(const Signature& by, bool with_reason)
 {
     if (by.who.empty())

@@ -44,6 +44,11 @@ private:
 
 /// A value whose number and SI value are worked out from the text where the caller left that open.
 Value completed(Value value);
+/// Keeps the old value of a closed reading beside the new one.
+Done keep_correction(History& history, qint64 reading_key, const ValueRow& before, const ValueRow& after,
+                     const Signature& by);
+/// "112 bar", or the words, or why it is missing.
+std::string value_text(const History::Names& names, const ValueRow& row);
 /// A signature that will be kept for good. @par Problems invalid_input: nobody, or no reason
 Done check_signature(const Signature& by, bool with_reason);
 /// "maximum pressure of cylinder 4"

@@ -1,25 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "storage/reading_change.h"
 #include "storage/reading_store.h"
-#include "storage/written_unit.h"
 
 #include "core/plain_text.h"
 
 // What may happen to a reading once it is closed, and the closing itself.
 namespace evenstroke::storage {
 namespace {
-
-/// "112 bar", or the words, or why it is missing.
-std::string shown(const History::Names& names, const ValueRow& row)
-{
-    if (row.missing != 0) {
-        const char* const words[] = {"", "not fitted", "not read", "out of order"};
-        return words[std::min(row.missing, 3)];
-    }
-    const UnitInFile* const unit = names.unit(row.unit_key);
-    return row.typed + (unit && !unit->written.empty() ? " " + unit->written : "") +
-           (row.typed.empty() ? row.words : "");
-}
 
 Done check_readable(const History::Names& names, const std::vector<ValueRow>& rows)
 {
@@ -38,26 +25,6 @@ Done check_readable(const History::Names& names, const std::vector<ValueRow>& ro
         return invalid_input("The reading holds no value.",
                              "Enter at least one value, or throw the draft away.");
     return done();
-}
-
-Done keep_correction(History& history, qint64 reading_key, const ValueRow& before, const ValueRow& after,
-                     const Signature& by)
-{
-    Query keep(history.database(),
-               "INSERT INTO correction (reading_key, quantity_key, place, phase, old_typed, old_unit_key, "
-               "old_value_si, old_words, old_missing, "
-               "new_typed, new_unit_key, new_value_si, new_words, new_missing, at, who, why) VALUES (?, ?, "
-               "?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)",
-               "the correction was not saved");
-    const auto unit = [](const ValueRow& row) {
-        return row.unit_key == 0 ? std::nullopt : std::optional(row.unit_key);
-    };
-    const auto words = [](const ValueRow& row) {
-        return row.words.empty() ? std::nullopt : std::optional(row.words);
-    };
-    return keep.run(reading_key, after.quantity_key, after.place, after.phase, before.typed, unit(before),
-                    before.value_si, words(before), before.missing, after.typed, unit(after), after.value_si,
-                    words(after), after.missing, seconds_of(history.now()), by.who, by.why);
 }
 
 bool says_the_same(const ValueRow& a, const ValueRow& b)
@@ -101,8 +68,8 @@ Done ReadingStore::correct(const std::string& reading_id, const Value& new_value
                              "Give another value, or leave it as it is.");
     BOOST_OUTCOME_TRYV(keep_correction(history_, change.reading().key, before, row.value(), by));
     BOOST_OUTCOME_TRYV(change.add_value(row.value()));
-    const std::string detail = value_name(value) + ": " + shown(history_.names(), before) + " -> " +
-                               shown(history_.names(), row.value());
+    const std::string detail = value_name(value) + ": " + value_text(history_.names(), before) + " -> " +
+                               value_text(history_.names(), row.value());
     return change.finish("corrected", detail, by);
 }
 

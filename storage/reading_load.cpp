@@ -16,12 +16,12 @@ const char* const not_read = "the readings were not read";
 // QtSql makes a QVariant of every column of every row, so small numbers travel in one column, and the texts
 // that nearly all values lack travel with the typed text where there are any: as a JSON list, and a bit says
 // so.
-constexpr int phase_bits = 2, missing_bits = 2, confirmed_bits = 1, texts_bits = 1, place_bits = 13,
-              unit_bits = 16;
+constexpr int phase_bits = 2, missing_bits = 2, confirmed_bits = 1, origin_bits = 2, texts_bits = 1,
+              place_bits = 13, unit_bits = 16;
 const char* const packed_values =
     "SELECT v.reading_key, "
-    "(((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 "
-    "| (coalesce(v.words, v.place_typed) IS NOT NULL)) << 1 | v.confirmed) << 2 | v.missing) << 2 | v.phase, "
+    "((((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 "
+    "| (coalesce(v.words, v.place_typed) IS NOT NULL)) << 2 | (v.origin & 3)) << 1 | v.confirmed) << 2 | v.missing) << 2 | v.phase, "
     "CASE WHEN coalesce(v.words, v.place_typed) IS NULL THEN v.typed "
     "ELSE json_array(v.typed, v.words, v.place_typed) END, "
     "v.value_si "
@@ -38,6 +38,7 @@ bool unpack(qint64 packed, ValueRow& row)
     row.phase = take(phase_bits);
     row.missing = take(missing_bits);
     row.confirmed = take(confirmed_bits) != 0;
+    row.origin = take(origin_bits);
     const bool texts = take(texts_bits) != 0;
     row.place = take(place_bits);
     row.unit_key = take(unit_bits);

@@ -10,7 +10,8 @@ namespace {
 const char* const correction_columns =
     "SELECT r.id, c.quantity_key, c.place, c.phase, c.old_typed, c.old_unit_key, c.old_value_si, "
     "c.old_words, c.old_missing, "
-    "c.new_typed, c.new_unit_key, c.new_value_si, c.new_words, c.new_missing, c.at, c.who, c.why "
+    "c.old_origin, "
+    "c.new_typed, c.new_unit_key, c.new_value_si, c.new_words, c.new_missing, c.new_origin, c.at, c.who, c.why "
     "FROM correction c JOIN reading r USING (reading_key) ";
 
 ValueRow side_of(const Query& row, int first)
@@ -24,6 +25,7 @@ ValueRow side_of(const Query& row, int first)
     value.value_si = row.real(first + 2);
     value.words = row.text(first + 3);
     value.missing = row.small(first + 4);
+    value.origin = row.small(first + 5);
     return value;
 }
 
@@ -41,10 +43,10 @@ Result<std::vector<Correction>> corrections_where(History& history, const char* 
     std::vector<Correction> found;
     while (rows.next()) {
         const auto before = value_of(history.names(), side_of(rows, 4));
-        const auto after = value_of(history.names(), side_of(rows, 9));
+        const auto after = value_of(history.names(), side_of(rows, 10));
         if (before && after)
             found.push_back(
-                {rows.text(0), *before, *after, time_of(rows.integer(14)), {rows.text(15), rows.text(16)}});
+                {rows.text(0), *before, *after, time_of(rows.integer(16)), {rows.text(17), rows.text(18)}});
     }
     BOOST_OUTCOME_TRYV(rows.finished());
     return found;

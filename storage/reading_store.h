@@ -40,6 +40,24 @@ struct Correction
     Signature by;
 };
 
+/// A result of an indicator card that is to become a value of its reading.
+struct ValueFromCard
+{
+    QuantityId quantity = 0;
+    Place place;
+    double number = 0.0; ///< in `unit`
+    WrittenUnit unit{0, PressureKind::none}; ///< kind none: the quantity's own
+};
+
+/// What became of values from cards.
+struct AcceptedFromCards
+{
+    int added = 0;     ///< where no number stood
+    int corrected = 0; ///< in place of what an earlier card gave
+    int same = 0;      ///< an earlier card gave the same
+    std::vector<ValuePlace> left_alone; ///< somebody read these, so they stay
+};
+
 /// Whose readings: an engine's, or those that all engines of a ship share.
 struct Owner
 {
@@ -91,6 +109,12 @@ public:
     /// Changes a value of a closed reading, or adds one that was forgotten. The old value, who, when and why
     /// stay. @par Problems invalid_input: no name or no reason given, or nothing changes
     Done correct(const std::string& reading_id, const Value& new_value, const Signature& by);
+    /// Puts results of cards into a reading that is a draft or closed, all or none. What somebody read stays. In a
+    /// closed reading each is a correction, in a draft a value like a typed one; the trail says so of both. Numbers
+    /// are kept with one decimal more than the quantity is shown with. A reason is not needed: it is "from the card".
+    /// @par Problems invalid_input: nobody signed, a number that cannot be, the reading is withdrawn; not_found
+    Result<AcceptedFromCards> accept_card_values(const std::string& reading_id,
+                                                 const std::vector<ValueFromCard>& values, const Signature& by);
     /// Corrects when a closed reading was taken; its name stays, the old time stays in the audit trail.
     /// @par Problems invalid_input: no name or no reason given, or it is the time already
     Done correct_time(const std::string& reading_id, StampedTime taken_at, const Signature& by);

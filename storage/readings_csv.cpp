@@ -22,13 +22,15 @@ enum Column : std::size_t {
     unit_text,
     phase,
     words,
-    missing_reason
+    missing_reason,
+    origin
 };
 
 std::vector<CsvColumn> columns_of(bool engine)
 {
     return {{"reading"}, {"taken_at"},     {"quantity"},    {"cylinder", engine},     {"value"},
-            {"unit"},    {"phase", false}, {"text", false}, {"missing_reason", false}};
+            {"unit"},    {"phase", false}, {"text", false}, {"missing_reason", false},
+            {"origin", false}};
 }
 
 class ReadingsFile
@@ -103,7 +105,7 @@ void ReadingsFile::take_row()
         return;
     const ValueTexts texts{table_.cell(quantity_name), table_.cell(cylinder), table_.cell(value),
                            table_.cell(unit_text),     table_.cell(phase),    table_.cell(words),
-                           table_.cell(missing_reason)};
+                           table_.cell(missing_reason), table_.cell(origin)};
     if (const auto problem = values_.read(texts, row_))
         refusals_.add(table_.line(), problem->value, problem->reason, problem->expected);
     else

@@ -127,6 +127,22 @@ const std::vector<const char*> flag_note_tables = {
         BEGIN SELECT RAISE(ABORT, 'notes on flags are only added to'); END)",
 };
 
+// origin: 0 read by somebody, 1 from an indicator card (Origin in core/reading/reading.h).
+const std::vector<const char*> card_result_tables = {
+    R"(ALTER TABLE value ADD COLUMN origin INTEGER NOT NULL DEFAULT 0)",
+    R"(ALTER TABLE correction ADD COLUMN old_origin INTEGER NOT NULL DEFAULT 0)",
+    R"(ALTER TABLE correction ADD COLUMN new_origin INTEGER NOT NULL DEFAULT 0)",
+    R"(CREATE TABLE healthy_cards (
+        saying_key INTEGER PRIMARY KEY, id TEXT NOT NULL UNIQUE, reading_key INTEGER NOT NULL REFERENCES reading,
+        healthy INTEGER NOT NULL CHECK (healthy IN (0, 1)), -- 0: taken back
+        words TEXT NOT NULL, said_at INTEGER NOT NULL, who TEXT NOT NULL) STRICT)",
+    R"(CREATE INDEX healthy_cards_of_reading ON healthy_cards (reading_key))",
+    R"(CREATE TRIGGER healthy_cards_no_update BEFORE UPDATE ON healthy_cards
+        BEGIN SELECT RAISE(ABORT, 'what was said of cards is only added to'); END)",
+    R"(CREATE TRIGGER healthy_cards_no_delete BEFORE DELETE ON healthy_cards
+        BEGIN SELECT RAISE(ABORT, 'what was said of cards is only added to'); END)",
+};
+
 } // namespace
 
 std::span<const Migration> all_migrations()
@@ -135,6 +151,7 @@ std::span<const Migration> all_migrations()
         {1, "readings, events and their audit trail", first_tables},
         {2, "indicator cards", card_tables},
         {3, "notes on flags", flag_note_tables},
+        {4, "values that come from cards, and cards called healthy", card_result_tables},
     };
     return steps;
 }

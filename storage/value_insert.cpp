@@ -7,7 +7,7 @@ namespace {
 const std::string not_saved = "the values were not saved";
 const char* const value_columns =
     "INSERT INTO value (reading_key, quantity_key, place, phase, typed, unit_key, value_si, words, missing, "
-    "confirmed, place_typed) ";
+    "confirmed, place_typed, origin) ";
 
 // One ordinary value's keys in 63 bits: reading, quantity 12, unit 12, place 13.
 constexpr int place_bits = 13, key_bits = 12;
@@ -17,7 +17,7 @@ constexpr qint64 most_readings = (qint64{1} << (63 - place_bits - 2 * key_bits))
 bool is_ordinary(qint64 reading_key, const ValueRow& row)
 {
     return row.phase == static_cast<int>(Phase::reading) && row.missing == 0 && !row.confirmed &&
-           row.words.empty() && row.place_typed.empty() && row.quantity_key <= most_keys &&
+           row.words.empty() && row.place_typed.empty() && row.origin == 0 && row.quantity_key <= most_keys &&
            row.unit_key <= most_keys && reading_key <= most_readings;
 }
 
@@ -34,7 +34,7 @@ QString ordinary_statement(int rows)
         statement += QStringLiteral(", (?, ?, ?)");
     return statement + QStringLiteral(") ") + QLatin1String(value_columns) +
            QStringLiteral("SELECT p >> 37, (p >> 25) & 4095, p & 8191, 1, typed, nullif((p >> 13) & 4095, "
-                          "0), value_si, NULL, 0, 0, NULL FROM given");
+                          "0), value_si, NULL, 0, 0, NULL, 0 FROM given");
 }
 
 } // namespace
@@ -80,7 +80,7 @@ Done ValueInserter::add_unusual(qint64 reading_key, const ValueRow& row)
     if (!unusual_)
         unusual_.emplace(history_.database(),
                          QLatin1String(value_columns) +
-                             QStringLiteral("VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)"),
+                             QStringLiteral("VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)"),
                          not_saved);
     const auto if_any = [](const std::string& text) {
         return text.empty() ? std::nullopt : std::optional(text);
@@ -88,7 +88,7 @@ Done ValueInserter::add_unusual(qint64 reading_key, const ValueRow& row)
     const auto unit_key = row.unit_key == 0 ? std::nullopt : std::optional(row.unit_key);
     return unusual_->run(reading_key, row.quantity_key, row.place, row.phase, row.typed, unit_key,
                          row.value_si, if_any(row.words), row.missing, row.confirmed ? 1 : 0,
-                         if_any(row.place_typed));
+                         if_any(row.place_typed), row.origin);
 }
 
 Result<qint64> ReadingInserter::add(const OwnerKeys& owner, const ReadingRow& reading)

@@ -50,6 +50,7 @@ std::optional<Value> value_of(const History::Names& names, const ValueRow& row)
     value.missing = static_cast<MissingReason>(row.missing);
     value.confirmed = row.confirmed;
     value.place_typed = row.place_typed;
+    value.origin = row.origin == static_cast<int>(Origin::card) ? Origin::card : Origin::read;
     return value;
 }
 
@@ -69,6 +70,7 @@ Result<ValueRow> row_of(History::Names& names, const Value& value)
     row.missing = static_cast<int>(value.missing);
     row.confirmed = value.confirmed;
     row.place_typed = value.place_typed;
+    row.origin = static_cast<int>(value.origin);
     row.value_si = value.value_si;
     const std::string written = written_unit(value);
     const bool bare = unit(value.unit).dimension == Dimension::number && value.unit_typed.empty();

@@ -277,6 +277,11 @@ std::optional<RowProblem> ValueReader::read(const ValueTexts& texts, ValueRow& r
     row.phase = static_cast<int>(*phase);
     row.missing = 0;
     row.confirmed = false;
+    row.origin = static_cast<int>(texts.origin == "card" ? Origin::card : Origin::read);
+    if (!texts.origin.empty() && texts.origin != "card" && texts.origin != "read")
+        return RowProblem{std::string(texts.origin),
+                          "The origin " + evenstroke::quoted(texts.origin) + " is not known.",
+                          "Write card where an indicator card gave the value, or leave it empty."};
     const Quantity& q = quantity(id);
     const bool number = q.type == ValueType::number;
     if (texts.value.empty() && (texts.words.empty() || number))

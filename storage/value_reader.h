@@ -14,7 +14,7 @@ namespace evenstroke::storage {
 /// One row of readings.csv as text.
 struct ValueTexts
 {
-    std::string_view quantity, cylinder, value, unit, phase, words, missing_reason;
+    std::string_view quantity, cylinder, value, unit, phase, words, missing_reason, origin;
 };
 
 /// What stands in the way of a row.

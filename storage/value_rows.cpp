@@ -74,7 +74,7 @@ ValueRow value_row_of(const Query& row, int first)
 {
     return {row.small(first),     row.small(first + 1),      row.small(first + 2), row.small(first + 3),
             row.small(first + 4), row.small(first + 5) != 0, row.real(first + 6),  row.text(first + 7),
-            row.text(first + 8),  row.text(first + 9)};
+            row.text(first + 8),  row.text(first + 9),      row.small(first + 10)};
 }
 
 Result<std::vector<ReadingRow>> load_all_reading_rows(History& history)
@@ -130,6 +130,8 @@ std::string reading_hash(const History::Names& names, const ReadingRow& reading,
             .add(row->value_si)
             .add(row->words);
         content.add(qint64{row->missing}).add(qint64{row->confirmed}).add(row->place_typed);
+        if (row->origin != 0) // values that were read keep the hash of the time before there were others
+            content.add("origin").add(qint64{row->origin});
     }
     return content.hex();
 }

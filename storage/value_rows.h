@@ -26,6 +26,7 @@ struct ValueRow
     bool confirmed = false;
     std::optional<double> value_si;
     std::string typed, words, place_typed;
+    int origin = 0; ///< as Origin
 
     auto where() const { return std::tuple(quantity_key, place, phase); }
 };
@@ -60,11 +61,11 @@ Result<std::vector<ReadingRow>> load_all_reading_rows(History& history);
 /// A value out of a row that holds `value_row_columns` from column `first` on.
 ValueRow value_row_of(const Query& row, int first);
 inline constexpr char value_row_columns[] =
-    "quantity_key, place, phase, unit_key, missing, confirmed, value_si, typed, words, place_typed";
+    "quantity_key, place, phase, unit_key, missing, confirmed, value_si, typed, words, place_typed, origin";
 /// In the order of the file's own numbering.
 Result<std::vector<ValueRow>> load_value_rows(History& history, qint64 reading_key);
 
-/// Adds values many at a time. Ordinary ones (the reading itself, nothing missing, no words) travel as one
+/// Adds values many at a time. Ordinary ones (the reading itself, read by somebody, nothing missing, no words) travel as one
 /// packed number, the text and the SI value: binding is what costs, so few things are bound.
 class ValueInserter
 {

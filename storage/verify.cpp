@@ -6,6 +6,7 @@
 #include "storage/content_hash.h"
 #include "storage/event_rows.h"
 #include "storage/flag_note_rows.h"
+#include "storage/healthy_card_rows.h"
 #include "storage/subject_hash.h"
 #include "storage/transaction.h"
 #include "storage/value_rows.h"
@@ -43,6 +44,7 @@ private:
     Done check_events();
     Done check_flag_notes();
     Done check_cards();
+    Done check_healthy_cards();
     void compare(const std::string& kind, const std::string& id, const std::string& hash,
                  const std::string& name);
     void say(std::string sentence);
@@ -234,6 +236,16 @@ Done Verification::check_cards()
     return rows.finished();
 }
 
+Done Verification::check_healthy_cards()
+{
+    const auto sayings = load_healthy_sayings(history_);
+    if (!sayings)
+        return sayings.error();
+    for (const HealthySaying& saying : sayings.value())
+        compare("word on cards", saying.id, healthy_saying_hash(saying), "of " + date_text(saying.at));
+    return done();
+}
+
 Result<AuditFindings> Verification::run()
 {
     const ReadTransaction same_state(history_);
@@ -246,6 +258,7 @@ Result<AuditFindings> Verification::run()
     BOOST_OUTCOME_TRYV(check_events());
     BOOST_OUTCOME_TRYV(check_flag_notes());
     BOOST_OUTCOME_TRYV(check_cards());
+    BOOST_OUTCOME_TRYV(check_healthy_cards());
     BOOST_OUTCOME_TRYV(go_on());
     for (const auto& [id, claim] : claims_)
         if (!claim.met && !claim.hash.empty())
