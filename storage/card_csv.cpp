@@ -1,14 +1,17 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "storage/card_file.h"
 #include "storage/card_rows.h"
 #include "storage/card_with_gaps.h"
 
 #include "core/plain_text.h"
 #include "core/units/unit_catalogue.h"
+#include "storage/plain_number.h"
 #include "storage/sql.h"
 
 #include <QFile>
 #include <QFileInfo>
 
+#include <algorithm>
 #include <charconv>
 #include <cmath>
 
@@ -21,17 +24,8 @@ struct Layout
 {
     bool cycles = false, gauge = false;
     char separator = ',';
+    char decimal_sign = '.'; ///< of most rows: where it is another, a row takes longer
 };
-
-std::string_view take_line(std::string_view& rest)
-{
-    const std::size_t end = rest.find('\n');
-    std::string_view line = rest.substr(0, end);
-    rest.remove_prefix(end == std::string_view::npos ? rest.size() : end + 1);
-    if (line.ends_with('\r'))
-        line.remove_suffix(1);
-    return line;
-}
 
 std::string_view take_field(std::string_view& rest, char separator)
 {
@@ -82,7 +76,9 @@ public:
     qint64 line() const { return line_; } ///< the last one read: where it was refused
 
 private:
+    bool read_plain_row();
     Done read_row(std::string_view row);
+    void reserve();
 
     std::string_view rest_;
     bool gaps_; ///< pressures may be missing
@@ -90,6 +86,47 @@ private:
     CardTrace trace_;
     qint64 line_ = 1;
 };
+
+/// Takes the next row where it is written as recorders do. False: it is left to `read_row`, which takes every writing
+/// and knows what to say of the others.
+bool CardText::read_plain_row()
+{
+    const char* at = rest_.data();
+    const char* const end = at + rest_.size();
+    int cycle = 0;
+    if (layout_.cycles) {
+        const auto read = std::from_chars(at, end, cycle);
+        if (read.ec != std::errc() || read.ptr == end || *read.ptr != layout_.separator)
+            return false;
+        at = read.ptr + 1;
+    }
+    double angle = 0.0, pressure = 0.0;
+    if (!read_plain_number(at, end, layout_.decimal_sign, angle) || at == end || *at != layout_.separator ||
+        std::abs(angle) > 360.0)
+        return false;
+    ++at;
+    if (!read_plain_number(at, end, layout_.decimal_sign, pressure))
+        return false;
+    if (at != end && *at == '\r')
+        ++at;
+    if (at != end && *at != '\n')
+        return false;
+    if (layout_.cycles)
+        trace_.cycle.push_back(cycle);
+    trace_.crank_angle_deg.push_back(angle);
+    trace_.pressure_bar.push_back(pressure);
+    rest_.remove_prefix(static_cast<std::size_t>(at - rest_.data()) + (at != end ? 1 : 0));
+    return true;
+}
+
+void CardText::reserve()
+{
+    const auto rows = static_cast<std::size_t>(std::count(rest_.begin(), rest_.end(), '\n')) + 1;
+    trace_.crank_angle_deg.reserve(rows);
+    trace_.pressure_bar.reserve(rows);
+    if (layout_.cycles)
+        trace_.cycle.reserve(rows);
+}
 
 Done CardText::read_row(std::string_view row)
 {
@@ -123,19 +160,21 @@ Result<CardTrace> CardText::read()
 {
     if (rest_.starts_with("\xEF\xBB\xBF"))
         rest_.remove_prefix(3);
-    const auto layout = read_header(take_line(rest_));
+    const auto layout = read_header(take_text_line(rest_));
     if (!layout)
         return invalid_input("The header line is not one of a card.",
                              "The first line is expected to be crank_angle_deg,pressure_bar or "
                              "cycle,crank_angle_deg,pressure_bar.");
     layout_ = *layout;
+    if (layout_.separator == ';' && rest_.substr(0, rest_.find('\n')).find(',') != std::string_view::npos)
+        layout_.decimal_sign = ',';
     trace_.gauge = layout_.gauge;
-    const std::size_t likely = rest_.size() / 12;
-    trace_.crank_angle_deg.reserve(likely);
-    trace_.pressure_bar.reserve(likely);
+    reserve();
     while (!rest_.empty()) {
         ++line_;
-        const std::string_view row = take_line(rest_);
+        if (read_plain_row())
+            continue;
+        const std::string_view row = take_text_line(rest_);
         if (!trimmed(row).empty()) {
             BOOST_OUTCOME_TRYV(read_row(row));
         }
@@ -145,7 +184,14 @@ Result<CardTrace> CardText::read()
     return std::move(trace_);
 }
 
-Result<QByteArray> card_content(const QString& path)
+std::string_view as_text(const QByteArray& content)
+{
+    return {content.constData(), static_cast<std::size_t>(content.size())};
+}
+
+} // namespace
+
+Result<QByteArray> card_file_content(const QString& path)
 {
     QFile file(path);
     if (!file.exists())
@@ -160,13 +206,6 @@ Result<QByteArray> card_content(const QString& path)
     return file.readAll();
 }
 
-std::string_view as_text(const QByteArray& content)
-{
-    return {content.constData(), static_cast<std::size_t>(content.size())};
-}
-
-} // namespace
-
 Result<CardTrace> read_card_text(std::string_view text, const std::string& name)
 {
     CardText card(text);
@@ -180,7 +219,7 @@ Result<CardTrace> read_card_text(std::string_view text, const std::string& name)
 
 Result<CardTrace> read_card_file(const QString& path, qint64& line)
 {
-    const auto content = card_content(path);
+    const auto content = card_file_content(path);
     line = 0;
     if (!content)
         return content.error();
@@ -193,7 +232,7 @@ Result<CardTrace> read_card_file(const QString& path, qint64& line)
 
 Result<CardTrace> read_card_file(const QString& path)
 {
-    const auto content = card_content(path);
+    const auto content = card_file_content(path);
     if (!content)
         return content.error();
     return read_card_text(as_text(content.value()), from_qt(QFileInfo(path).fileName()));
@@ -201,7 +240,7 @@ Result<CardTrace> read_card_file(const QString& path)
 
 Result<CardTrace> read_card_with_gaps(const QString& path)
 {
-    const auto content = card_content(path);
+    const auto content = card_file_content(path);
     if (!content)
         return content.error();
     CardText card(as_text(content.value()), true);

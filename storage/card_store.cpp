@@ -5,10 +5,14 @@
 #include "storage/card_packing.h"
 #include "storage/card_rows.h"
 #include "storage/content_hash.h"
+#include "storage/reading_change.h"
 #include "storage/transaction.h"
-#include "storage/value_rows.h"
+
+#include "core/plain_text.h"
 
 #include <QUuid>
+
+#include <set>
 
 namespace evenstroke::storage {
 namespace {
@@ -101,6 +105,43 @@ Result<std::string> CardStore::add(const std::string& reading_id, int cylinder, 
                              "Keep the card to the reading it was taken with.");
     BOOST_OUTCOME_TRYV(transaction.commit());
     return added.value().id;
+}
+
+Result<AddedCards> CardStore::add_all(const std::string& reading_id, const std::vector<NewCard>& cards,
+                                      const Signature& by)
+{
+    BOOST_OUTCOME_TRYV(check_signature(by, false));
+    Transaction transaction(history_, "the cards were not saved");
+    BOOST_OUTCOME_TRYV(transaction.begin());
+    const auto reading = load_reading_row(history_, reading_id);
+    if (!reading)
+        return reading.error();
+    AuditWriter audit(history_, by);
+    AddedCards all;
+    std::set<int> cylinders;
+    for (const NewCard& card : cards) {
+        if (!cylinders.insert(card.cylinder).second)
+            return invalid_input("Two of the cards are of cylinder " + std::to_string(card.cylinder) + ".",
+                                 "Say which cylinder each is of.");
+        const auto added = add_card(history_, reading.value().key, card.cylinder, *card.trace, audit);
+        if (!added)
+            return added.error();
+        if (added.value().outcome == AddedCard::Outcome::differs)
+            return invalid_input("The reading " + evenstroke::quoted(reading.value().name) + " has another card of cylinder " +
+                                     std::to_string(card.cylinder) + ".",
+                                 "Leave this one out, or choose the reading it was taken with.");
+        ++(added.value().outcome == AddedCard::Outcome::added ? all.added : all.same);
+    }
+    if (all.added > 0) {
+        Query owner(history_.database(), "SELECT vessel_key, coalesce(engine_key, 0) FROM reading WHERE reading_key = ?",
+                    not_saved);
+        BOOST_OUTCOME_TRYV(owner.run(reading.value().key));
+        if (!owner.next())
+            return owner.problem();
+        BOOST_OUTCOME_TRYV(count_change(history_, {owner.integer(0), owner.integer(1)}));
+    }
+    BOOST_OUTCOME_TRYV(transaction.commit());
+    return all;
 }
 
 } // namespace evenstroke::storage

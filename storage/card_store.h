@@ -34,6 +34,17 @@ struct CardEntry
     int samples = 0;
 };
 
+/// A cylinder's card that is to be added to a reading.
+struct NewCard
+{
+    int cylinder = 0;
+    const CardTrace* trace = nullptr;
+};
+struct AddedCards
+{
+    int added = 0, same = 0; ///< `same`: the reading had it already
+};
+
 /// Cards of readings.
 class CardStore
 {
@@ -48,6 +59,9 @@ public:
     /// @par Problems invalid_input: the reading has another card of this cylinder
     Result<std::string> add(const std::string& reading_id, int cylinder, const CardTrace& trace,
                             const Signature& by);
+    /// Adds the cards of several cylinders to a reading: all of them, or none.
+    /// @par Problems invalid_input: the reading has another card of one of the cylinders, or two are of one cylinder
+    Result<AddedCards> add_all(const std::string& reading_id, const std::vector<NewCard>& cards, const Signature& by);
 
 private:
     History& history_;
