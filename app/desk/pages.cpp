@@ -2,6 +2,7 @@
 #include "app/desk/pages.h"
 
 #include "app/board/board_page.h"
+#include "app/cards/card_files_page.h"
 #include "app/causes/causes_page.h"
 #include "app/desk/frame.h"
 #include "app/desk/history_page.h"
@@ -71,6 +72,7 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});
     frame.add_page({QStringLiteral("workings"), Frame::tr("Workings"), u'W', maker<WorkingsPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("causes"), Frame::tr("Possible causes"), u'Y', maker<CausesPage>(), {}, {}, false, false});
+    frame.add_page({QStringLiteral("card-files"), Frame::tr("Bring in cards"), u'X', maker<CardFilesPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("detection"), Frame::tr("How good is this?"), u'I', maker<DetectionPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("sisters"), Frame::tr("Sister engines"), u'U', maker<SistersPage>(), {}, {}, false, false});
     frame.add_page({QStringLiteral("history"), Frame::tr("History"), u'H', maker<HistoryPage>(), {}, {}, true});

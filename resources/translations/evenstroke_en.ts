@@ -161,4 +161,49 @@
         </translation>
     </message>
 </context>
+<context>
+    <name>evenstroke::CardFilesPage</name>
+    <message numerus="yes">
+        <source>%n file(s)</source>
+        <translation>
+            <numerusform>1 file</numerusform>
+            <numerusform>%n files</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n card(s) are left out: they cannot be read, or nobody has said of which cylinder they are.</source>
+        <translation>
+            <numerusform>1 card is left out: it cannot be read, or nobody has said of which cylinder it is.</numerusform>
+            <numerusform>%n cards are left out: they cannot be read, or nobody has said of which cylinder they are.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>take %n card(s) into the reading of %1</source>
+        <translation>
+            <numerusform>take 1 card into the reading of %1</numerusform>
+            <numerusform>take %n cards into the reading of %1</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n card(s) are in the reading of %1 now.</source>
+        <translation>
+            <numerusform>1 card is in the reading of %1 now.</numerusform>
+            <numerusform>%n cards are in the reading of %1 now.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n were there already.</source>
+        <translation>
+            <numerusform>1 was there already.</numerusform>
+            <numerusform>%n were there already.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n sample(s) are missing.</source>
+        <translation>
+            <numerusform>1 sample is missing.</numerusform>
+            <numerusform>%n samples are missing.</numerusform>
+        </translation>
+    </message>
+</context>
 </TS>

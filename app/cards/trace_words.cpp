@@ -1,0 +1,82 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/cards/trace_words.h"
+
+#include "app/desk/number_text.h"
+
+#include <QCoreApplication>
+
+#include <map>
+
+namespace evenstroke {
+namespace {
+
+using indicator::CardResult;
+
+QString tr_(const char* words, int n = -1)
+{
+    return QCoreApplication::translate("evenstroke::CardFilesPage", words, nullptr, n);
+}
+
+QString estimate_text(const std::optional<indicator::Estimate>& estimate, int decimals)
+{
+    return estimate ? with_uncertainty(estimate->value, estimate->half_width, decimals) : QString();
+}
+
+} // namespace
+
+QString trace_results_text(const FileTrace& trace)
+{
+    if (!trace.card)
+        return trace.problem ? to_qstring(trace.problem->text()) : QString();
+    const indicator::Evaluation& card = *trace.card;
+    QStringList parts;
+    if (const QString mean = estimate_text(card[CardResult::mean_indicated_pressure], 2); !mean.isEmpty())
+        parts << tr_("MIP %1 bar").arg(mean);
+    if (const QString most = estimate_text(card[CardResult::maximum_pressure], 1); !most.isEmpty()) {
+        const QString at = estimate_text(card[CardResult::maximum_pressure_angle], 1);
+        parts << (at.isEmpty() ? tr_("maximum %1 bar abs").arg(most) : tr_("maximum %1 bar abs at %2°").arg(most, at));
+    }
+    return parts.isEmpty() ? tr_("The evaluation gives no result.") : parts.join(QStringLiteral(", "));
+}
+
+QString trace_sentences(const FileTrace& trace)
+{
+    QStringList lines{trace_results_text(trace)};
+    if (trace.card) {
+        if (const QString late = estimate_text((*trace.card)[CardResult::offset], 2); !late.isEmpty())
+            lines << tr_("Dead centre lies %1° from where the file has it.").arg(late);
+        for (const indicator::Remark& remark : trace.card->remarks)
+            lines << to_qstring(remark.text);
+    }
+    if (trace.missing > 0)
+        lines << tr_("%n sample(s) are missing.", trace.missing);
+    if (!trace.card && may_be_kept(trace))
+        lines << tr_("It can be kept all the same; it is only not evaluated.");
+    return lines.join(QStringLiteral("\n"));
+}
+
+QString trace_size_text(const FileTrace& trace)
+{
+    if (!trace.trace)
+        return {};
+    const QString samples = whole_text(static_cast<double>(trace.trace->crank_angle_deg.size()));
+    const auto& cycle = trace.trace->cycle;
+    if (cycle.empty())
+        return tr_("1 cycle, %1").arg(samples);
+    int cycles = 1;
+    for (std::size_t i = 1; i < cycle.size(); ++i)
+        cycles += cycle[i] != cycle[i - 1] ? 1 : 0;
+    return tr_("%1 cycles, %2").arg(cycles).arg(samples);
+}
+
+QString cylinders_twice(const std::vector<FileTrace>& traces, const Engine& engine)
+{
+    std::map<int, int> count;
+    for (const FileTrace& trace : traces)
+        if (can_be_taken(trace) && ++count[*trace.cylinder] == 2)
+            return tr_("Two of them are said to be of %1. Choose for each which cylinder it is of.")
+                .arg(place_title(engine, Place::cylinder(*trace.cylinder), false));
+    return {};
+}
+
+} // namespace evenstroke
