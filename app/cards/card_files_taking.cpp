@@ -57,7 +57,7 @@ void CardFilesPage::show_all()
     ui_->choose_button->setEnabled(ready);
     ui_->choose_button->setText(any ? tr("choose more (Ctrl+O)") : tr("choose files (Ctrl+O)"));
     for (QWidget* part : std::initializer_list<QWidget*>{ui_->forget_button, ui_->guess_button, ui_->lines_title, ui_->columns,
-                                                         ui_->boxes, ui_->traces, ui_->preview, ui_->in_hand})
+                                                         ui_->boxes, ui_->traces, ui_->in_hand})
         part->setVisible(any && ready);
     if (any)
         ui_->lines_title->setText((remembered_ ? tr("%1, laid out as this engine's files were the last time:")
@@ -129,6 +129,7 @@ void CardFilesPage::show_trace_in_hand()
     const int row = ui_->traces->currentRow();
     const FileTrace* const trace =
         row >= 0 && row < static_cast<int>(traces_.size()) ? &traces_[static_cast<std::size_t>(row)] : nullptr;
+    ui_->preview->setVisible(trace && trace->trace);
     ui_->preview->show_trace(trace);
     ui_->sentences->setVisible(trace != nullptr);
     ui_->sentences->setText(trace ? trace_sentences(*trace) : QString());

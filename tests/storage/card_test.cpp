@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "fixture.h"
 
+#include "storage/audit.h"
 #include "storage/card_packing.h"
 #include "storage/card_store.h"
 
@@ -128,6 +129,28 @@ TEST_F(Cards, MeasuredTracesComeBackToTheLastBit)
     const CardTrace trace = value_of_result(read_card_file(file));
     EXPECT_EQ(trace.crank_angle_deg.size(), 7200U);
     EXPECT_EQ(unpack_card(pack_card(trace))->pressure_bar, trace.pressure_bar);
+}
+
+TEST_F(Cards, OfAReadingAreAddedTogetherOrNotAtAll)
+{
+    write_engine(QStringLiteral("one"), header + "2029-01,2029-01-10T08:00Z,speed,,95,r/min\n");
+    const auto history = memory();
+    take_folder(*history, QStringLiteral("one"));
+    const std::string engine = only_engine(*history), reading = readings_of(*history).front().id;
+    CardStore store(*history);
+    const CardTrace first = smooth_trace(0.5), second = smooth_trace(1.0);
+    const qint64 before = value_of_result(VesselStore(*history).engines()).front().input_revision;
+    const auto added = value_of_result(store.add_all(reading, {{1, &first}, {2, &second}}, chief_));
+    EXPECT_EQ(added.added, 2);
+    EXPECT_GT(value_of_result(VesselStore(*history).engines()).front().input_revision, before);
+    EXPECT_EQ(value_of_result(store.add_all(reading, {{1, &first}}, chief_)).same, 1);
+    const auto contradicts = store.add_all(reading, {{3, &first}, {1, &second}}, chief_);
+    ASSERT_FALSE(contradicts.has_value());
+    EXPECT_NE(contradicts.error().what_happened.find("another card of cylinder 1"), std::string::npos);
+    EXPECT_FALSE(store.add_all(reading, {{4, &first}, {4, &second}}, chief_).has_value());
+    EXPECT_FALSE(store.add_all(reading, {{5, &first}}, {"", ""}).has_value());
+    EXPECT_EQ(value_of_result(store.list(engine)).size(), 2U);
+    EXPECT_TRUE(value_of_result(verify(*history)).sound());
 }
 
 } // namespace

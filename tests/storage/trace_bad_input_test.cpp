@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "trace_files.h"
 
+#include <random>
+
 namespace evenstroke::storage {
 namespace {
 
@@ -124,6 +126,24 @@ TEST_F(BadTraces, OfALayoutThatCannotBe)
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.angle_from = AngleFrom::time; }));
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.angle_from = AngleFrom::sample_number; layout.counts_per_revolution = 0.0; }));
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.dead_centre_at = std::nan(""); }));
+}
+
+TEST_F(BadTraces, OfRandomBytesAreNeverTaken)
+{
+    std::mt19937 dice(11);
+    const char letters[] = "0123456789.,;- \t\n\"eE+anbr\r\xC3\xB0";
+    for (int round = 0; round < 300; ++round) {
+        QByteArray text;
+        const int length = static_cast<int>(dice() % 600);
+        for (int i = 0; i < length; ++i)
+            text += round % 2 == 0 ? static_cast<char>(dice()) : letters[dice() % (sizeof letters - 1)];
+        const std::string_view bytes(text.constData(), static_cast<std::size_t>(text.size()));
+        TraceLayout layout = guess_layout(bytes).layout;
+        layout.unit = find_unit("bar").value().id;
+        const auto read = read_traces_text(bytes, "card.txt", layout, two_stroke());
+        ASSERT_FALSE(read.has_value());
+        EXPECT_FALSE(read.error().what_happened.empty());
+    }
 }
 
 TEST_F(BadTraces, ThatAreNotThere)
