@@ -35,6 +35,13 @@ std::string_view take_field(std::string_view& rest, char separator)
     return field;
 }
 
+/// One sample as it stands in a row.
+struct PlainRow
+{
+    int cycle = 0;
+    double angle = 0.0, pressure = 0.0;
+};
+
 std::optional<Layout> read_header(std::string_view line)
 {
     Layout layout;
@@ -76,7 +83,7 @@ public:
     qint64 line() const { return line_; } ///< the last one read: where it was refused
 
 private:
-    bool read_plain_row();
+    void read_plain_rows();
     Done read_row(std::string_view row);
     void reserve();
 
@@ -87,41 +94,61 @@ private:
     qint64 line_ = 1;
 };
 
-/// Takes the next row where it is written as recorders do. False: it is left to `read_row`, which takes every writing
-/// and knows what to say of the others.
-bool CardText::read_plain_row()
+/// Takes one row. @return behind it; null where it is not written plainly
+const char* read_plain_row(const char* at, const char* end, const Layout& layout, PlainRow& row)
+{
+    if (layout.cycles) {
+        const auto read = std::from_chars(at, end, row.cycle);
+        if (read.ec != std::errc() || read.ptr == end || *read.ptr != layout.separator)
+            return nullptr;
+        at = read.ptr + 1;
+    }
+    if (!read_plain_number(at, end, layout.decimal_sign, row.angle) || at == end || *at != layout.separator ||
+        std::abs(row.angle) > 360.0)
+        return nullptr;
+    ++at;
+    if (!read_plain_number(at, end, layout.decimal_sign, row.pressure))
+        return nullptr;
+    if (at != end && *at == '\r')
+        ++at;
+    if (at == end)
+        return at;
+    return *at == '\n' ? at + 1 : nullptr;
+}
+
+/// Takes the rows that are written as recorders do, up to the first that is not: that one is left to `read_row`, which
+/// takes every writing and knows what to say of the others.
+void CardText::read_plain_rows()
 {
     const char* at = rest_.data();
     const char* const end = at + rest_.size();
-    int cycle = 0;
-    if (layout_.cycles) {
-        const auto read = std::from_chars(at, end, cycle);
-        if (read.ec != std::errc() || read.ptr == end || *read.ptr != layout_.separator)
-            return false;
-        at = read.ptr + 1;
+    const Layout layout = layout_;
+    CardTrace trace = std::move(trace_); // its own, so that nothing is looked up again at every row
+    PlainRow row;
+    qint64 rows = 0;
+    while (at != end) {
+        const char* const next = read_plain_row(at, end, layout, row);
+        if (!next)
+            break;
+        at = next;
+        ++rows;
+        if (layout.cycles)
+            trace.cycle.push_back(row.cycle);
+        trace.crank_angle_deg.push_back(row.angle);
+        trace.pressure_bar.push_back(row.pressure);
     }
-    double angle = 0.0, pressure = 0.0;
-    if (!read_plain_number(at, end, layout_.decimal_sign, angle) || at == end || *at != layout_.separator ||
-        std::abs(angle) > 360.0)
-        return false;
-    ++at;
-    if (!read_plain_number(at, end, layout_.decimal_sign, pressure))
-        return false;
-    if (at != end && *at == '\r')
-        ++at;
-    if (at != end && *at != '\n')
-        return false;
-    if (layout_.cycles)
-        trace_.cycle.push_back(cycle);
-    trace_.crank_angle_deg.push_back(angle);
-    trace_.pressure_bar.push_back(pressure);
-    rest_.remove_prefix(static_cast<std::size_t>(at - rest_.data()) + (at != end ? 1 : 0));
-    return true;
+    trace_ = std::move(trace);
+    line_ += rows;
+    rest_.remove_prefix(static_cast<std::size_t>(at - rest_.data()));
 }
 
+/// As many rows as the first ones leave room for: counting all line ends would take as long as reading some of them.
 void CardText::reserve()
 {
-    const auto rows = static_cast<std::size_t>(std::count(rest_.begin(), rest_.end(), '\n')) + 1;
+    constexpr std::size_t looked_at = 2000; // bytes
+    const std::string_view first = rest_.substr(0, looked_at);
+    const auto lines = static_cast<std::size_t>(std::count(first.begin(), first.end(), '\n')) + 1;
+    const std::size_t rows = rest_.size() / std::max<std::size_t>(first.size() / lines, 4) + 16;
     trace_.crank_angle_deg.reserve(rows);
     trace_.pressure_bar.reserve(rows);
     if (layout_.cycles)
@@ -170,10 +197,8 @@ Result<CardTrace> CardText::read()
         layout_.decimal_sign = ',';
     trace_.gauge = layout_.gauge;
     reserve();
-    while (!rest_.empty()) {
+    while (read_plain_rows(), !rest_.empty()) {
         ++line_;
-        if (read_plain_row())
-            continue;
         const std::string_view row = take_text_line(rest_);
         if (!trimmed(row).empty()) {
             BOOST_OUTCOME_TRYV(read_row(row));

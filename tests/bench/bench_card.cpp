@@ -32,11 +32,14 @@ void measure(const BenchCard& row)
     what.step = row.step;
     what.cycles = row.cycles;
     const SimulatedCard card = simulate(what, dice);
-    // Instruments write thousandths of a bar at most; sixteen digits are the worst that a file may hold.
-    std::vector<double> written = card.trace.pressure;
-    for (double& pressure : written)
-        pressure = std::round(pressure * 1e3) / 1e3;
-    const std::string text = storage::card_text({card.trace.cycle, card.trace.angle, written, false});
+    // Instruments write thousandths of a bar and of a degree at most; sixteen digits are the worst that a file may hold.
+    const auto thousandths = [](std::vector<double> numbers) {
+        for (double& number : numbers)
+            number = std::round(number * 1e3) / 1e3;
+        return numbers;
+    };
+    const std::string text =
+        storage::card_text({card.trace.cycle, thousandths(card.trace.angle), thousandths(card.trace.pressure), false});
     const std::string all_digits = storage::card_text({card.trace.cycle, card.trace.angle, card.trace.pressure, false});
     bool good = true;
     const auto read = [&](const std::string& file) {
