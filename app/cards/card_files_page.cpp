@@ -92,7 +92,7 @@ void CardFilesPage::connect_parts()
     connect(ui_->take_button, &QPushButton::clicked, this, &CardFilesPage::ask_and_take);
     connect(ui_->paper_button, &QPushButton::toggled, this, [this](bool on) {
         ui_->paper->setVisible(on);
-        ui_->preview->setMaximumHeight(on ? 130 : 220);
+        ui_->preview->setMaximumHeight(on ? 150 : 220);
     });
     connect(ui_->paper, &PaperCard::put_into_reading, this, &CardFilesPage::ask_and_put);
     connect(new QShortcut(QKeySequence::Open, this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut), &QShortcut::activated, this,

@@ -98,7 +98,7 @@ void CardFilesPage::show_traces()
         const FileTrace& trace = traces_[static_cast<std::size_t>(row)];
         const QString file = QFileInfo(files_[trace.file].path).fileName();
         const bool several = layout_.pressures.size() > 1 && trace.column > 0;
-        const QString words[] = {several ? tr("%1, column %2").arg(file).arg(trace.column) : file, QString(),
+        const QString words[] = {several ? tr("column %1 of %2").arg(trace.column).arg(file) : file, QString(),
                                  trace_size_text(trace), trace_results_text(trace)};
         for (int column = 0; column < ui_->traces->columnCount(); ++column) {
             auto* item = new QTableWidgetItem(words[column]);
@@ -161,7 +161,7 @@ void CardFilesPage::show_into()
     ui_->into->setText(lines.join(QStringLiteral("\n")));
     ui_->into->setVisible(!lines.isEmpty());
     const bool may = reading && taken > 0 && twice.isEmpty() && !workplace().read_only() && !run_.busy();
-    ui_->take_button->setVisible(!traces_.empty());
+    ui_->take_button->setVisible(taken > 0);
     ui_->take_button->setEnabled(may);
     ui_->take_button->setText(reading ? tr("take %n card(s) into the reading of %1", nullptr, taken).arg(day_text(reading->taken_at.utc))
                                       : tr("take in"));

@@ -102,7 +102,7 @@ void TraceColumns::add_choice(int column, Role role, std::optional<int> cylinder
     auto* choice = new QComboBox(this);
     choice->addItems({tr("not used"), tr("angle, °"), tr("time"), tr("cycle"), tr("pressure")});
     for (int number = 1; number <= engine.cylinders; ++number)
-        choice->addItem(tr("pressure, cyl. %1").arg(to_qstring(engine.cylinder_name(number))));
+        choice->addItem(tr("cylinder %1").arg(to_qstring(engine.cylinder_name(number))));
     choice->setAccessibleName(tr("What column %1 holds").arg(column + 1));
     choice->setCurrentIndex(cylinder ? first_cylinder + *cylinder - 1 : role);
     connect(choice, &QComboBox::activated, this, [this] { emit changed(); });
