@@ -30,10 +30,12 @@ Result<Value> value_from(const ValueFromCard& given)
     value.unit = given.unit.id;
     value.kind = given.unit.kind == PressureKind::none ? q.kind : given.unit.kind;
     if (q.type != ValueType::number || q.derived() || unit(given.unit.id).dimension != unit(q.unit).dimension)
-        return invalid_input("A card cannot give " + q.name + " in " + std::string(unit(given.unit.id).symbol) + ".",
+        return invalid_input("A card cannot give " + q.name + " in " +
+                                 std::string(unit(given.unit.id).symbol) + ".",
                              "Put in another of its results.");
     if (!std::isfinite(given.number))
-        return invalid_input("The card gives no number for " + value_name(value) + ".", "Leave this result out.");
+        return invalid_input("The card gives no number for " + value_name(value) + ".",
+                             "Leave this result out.");
     value.typed = typed_number(given.number, q.decimals);
     const auto value_si = to_si_checked(parse_number(value.typed).value(), {value.unit, value.kind});
     if (!value_si)
@@ -45,7 +47,10 @@ Result<Value> value_from(const ValueFromCard& given)
 class CardValues
 {
 public:
-    CardValues(History& history, Signature by) : history_(history), by_(std::move(by)), change_(history, not_saved) {}
+    CardValues(History& history, Signature by)
+        : history_(history), by_(std::move(by)), change_(history, not_saved)
+    {
+    }
     Done begin(const std::string& reading_id);
     Done put(const ValueFromCard& given);
     Result<AcceptedFromCards> finish();
@@ -104,8 +109,8 @@ Done CardValues::write(const ValueRow& before, const ValueRow& after, const Valu
     }
     BOOST_OUTCOME_TRYV(change_.add_value(after));
     if (detail_.size() < longest_detail)
-        detail_ += (detail_.empty() ? "" : "; ") + value_name(value) + ": " + value_text(history_.names(), before) +
-                   " -> " + value_text(history_.names(), after);
+        detail_ += (detail_.empty() ? "" : "; ") + value_name(value) + ": " +
+                   value_text(history_.names(), before) + " -> " + value_text(history_.names(), after);
     return done();
 }
 

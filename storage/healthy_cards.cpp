@@ -18,7 +18,8 @@ const std::string not_read = "what was said of cards was not read";
 Result<bool> are_healthy(History& history, qint64 reading_key)
 {
     Query last(history.database(),
-               "SELECT healthy FROM healthy_cards WHERE reading_key = ? ORDER BY saying_key DESC LIMIT 1", not_read);
+               "SELECT healthy FROM healthy_cards WHERE reading_key = ? ORDER BY saying_key DESC LIMIT 1",
+               not_read);
     BOOST_OUTCOME_TRYV(last.run(reading_key));
     const bool healthy = last.next() && last.small(0) != 0;
     BOOST_OUTCOME_TRYV(last.finished());
@@ -52,10 +53,12 @@ Done find_saying_problem(History& history, const ReadingRow& reading, bool healt
 
 Done write_saying(History& history, qint64 reading_key, const HealthySaying& saying)
 {
-    Query add(history.database(),
-              "INSERT INTO healthy_cards (id, reading_key, healthy, words, said_at, who) VALUES (?, ?, ?, ?, ?, ?)",
-              not_saved);
-    return add.run(saying.id, reading_key, saying.healthy ? 1 : 0, saying.words, seconds_of(saying.at), saying.who);
+    Query add(
+        history.database(),
+        "INSERT INTO healthy_cards (id, reading_key, healthy, words, said_at, who) VALUES (?, ?, ?, ?, ?, ?)",
+        not_saved);
+    return add.run(saying.id, reading_key, saying.healthy ? 1 : 0, saying.words, seconds_of(saying.at),
+                   saying.who);
 }
 
 } // namespace
@@ -70,10 +73,11 @@ std::string healthy_saying_hash(const HealthySaying& saying)
 
 Result<std::vector<HealthySaying>> load_healthy_sayings(History& history)
 {
-    Query rows(history.database(),
-               "SELECT h.id, r.id, h.healthy, h.words, h.who, h.said_at FROM healthy_cards h JOIN reading r USING "
-               "(reading_key) ORDER BY h.saying_key",
-               not_read);
+    Query rows(
+        history.database(),
+        "SELECT h.id, r.id, h.healthy, h.words, h.who, h.said_at FROM healthy_cards h JOIN reading r USING "
+        "(reading_key) ORDER BY h.saying_key",
+        not_read);
     BOOST_OUTCOME_TRYV(rows.run());
     std::vector<HealthySaying> sayings;
     while (rows.next())
@@ -85,12 +89,13 @@ Result<std::vector<HealthySaying>> load_healthy_sayings(History& history)
 
 Result<std::vector<HealthyCards>> HealthyCardStore::list(const std::string& engine_id) const
 {
-    Query rows(history_.database(),
-               "SELECT r.id, h.who, h.words, h.said_at FROM healthy_cards h JOIN reading r USING (reading_key) "
-               "JOIN engine e USING (engine_key) WHERE e.id = ? AND r.state = 1 AND h.healthy = 1 AND NOT EXISTS "
-               "(SELECT 1 FROM healthy_cards later WHERE later.reading_key = h.reading_key AND later.saying_key > "
-               "h.saying_key) ORDER BY r.taken_at, r.reading_key",
-               not_read);
+    Query rows(
+        history_.database(),
+        "SELECT r.id, h.who, h.words, h.said_at FROM healthy_cards h JOIN reading r USING (reading_key) "
+        "JOIN engine e USING (engine_key) WHERE e.id = ? AND r.state = 1 AND h.healthy = 1 AND NOT EXISTS "
+        "(SELECT 1 FROM healthy_cards later WHERE later.reading_key = h.reading_key AND later.saying_key > "
+        "h.saying_key) ORDER BY r.taken_at, r.reading_key",
+        not_read);
     BOOST_OUTCOME_TRYV(rows.run(engine_id));
     std::vector<HealthyCards> found;
     while (rows.next())
@@ -99,7 +104,8 @@ Result<std::vector<HealthyCards>> HealthyCardStore::list(const std::string& engi
     return found;
 }
 
-Done HealthyCardStore::say(const std::string& reading_id, bool healthy, const std::string& words, const Signature& by)
+Done HealthyCardStore::say(const std::string& reading_id, bool healthy, const std::string& words,
+                           const Signature& by)
 {
     const std::string_view given = trimmed(words).empty() ? trimmed(by.why) : trimmed(words);
     const Signature signed_by{std::string(trimmed(by.who)), std::string(given)};
@@ -116,8 +122,8 @@ Done HealthyCardStore::say(const std::string& reading_id, bool healthy, const st
     BOOST_OUTCOME_TRYV(write_saying(history_, change.reading().key, saying));
     AuditWriter audit(history_, signed_by);
     const std::string detail = change.reading().name + (saying.words.empty() ? "" : ": " + saying.words);
-    BOOST_OUTCOME_TRYV(audit.add({healthy ? "cards called healthy" : "cards no longer called healthy", "word on cards",
-                                  saying.id, detail, healthy_saying_hash(saying)}));
+    BOOST_OUTCOME_TRYV(audit.add({healthy ? "cards called healthy" : "cards no longer called healthy",
+                                  "word on cards", saying.id, detail, healthy_saying_hash(saying)}));
     BOOST_OUTCOME_TRYV(count_change(history_, change.owner()));
     return change.finish();
 }

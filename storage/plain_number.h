@@ -9,11 +9,12 @@ namespace evenstroke::storage {
 
 namespace plain_number_detail {
 inline constexpr int most_digits = 18; ///< fit into 64 bits
-inline constexpr std::uint64_t exact_up_to = std::uint64_t{1} << 53; ///< whole numbers that a double holds exactly
+inline constexpr std::uint64_t exact_up_to = std::uint64_t{1}
+                                             << 53; ///< whole numbers that a double holds exactly
 /// A double holds these exactly, so that dividing an exact number by one of them rounds once, and rightly
 /// (W. D. Clinger, How to read floating point numbers accurately, ACM PLDI 1990).
-inline constexpr std::array<double, most_digits + 1> powers_of_ten = {1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9,
-                                                                1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18};
+inline constexpr std::array<double, most_digits + 1> powers_of_ten = {
+    1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18};
 inline bool take_digits(const char*& at, const char* end, std::uint64_t& whole)
 {
     const char* const from = at;
@@ -23,10 +24,11 @@ inline bool take_digits(const char*& at, const char* end, std::uint64_t& whole)
 }
 } // namespace plain_number_detail
 
-/// A number as recorders write it: an optional minus, digits, perhaps a decimal sign and more digits. The nearest double,
-/// as std::from_chars gives it, in a fraction of the time.
+/// A number as recorders write it: an optional minus, digits, perhaps a decimal sign and more digits. The
+/// nearest double, as std::from_chars gives it, in a fraction of the time.
 /// @param at  moves behind the number  @param decimal_sign  '.' or ','
-/// @return whether there was one; false too for numbers that need more care (many digits, an exponent follows), then
+/// @return whether there was one; false too for numbers that need more care (many digits, an exponent
+/// follows), then
 ///         `at` means nothing
 inline bool read_plain_number(const char*& at, const char* end, char decimal_sign, double& number)
 {

@@ -21,7 +21,8 @@ constexpr int phase_bits = 2, missing_bits = 2, confirmed_bits = 1, origin_bits 
 const char* const packed_values =
     "SELECT v.reading_key, "
     "((((((v.quantity_key << 16 | coalesce(v.unit_key, 0)) << 13 | v.place) << 1 "
-    "| (coalesce(v.words, v.place_typed) IS NOT NULL)) << 2 | (v.origin & 3)) << 1 | v.confirmed) << 2 | v.missing) << 2 | v.phase, "
+    "| (coalesce(v.words, v.place_typed) IS NOT NULL)) << 2 | (v.origin & 3)) << 1 | v.confirmed) << 2 | "
+    "v.missing) << 2 | v.phase, "
     "CASE WHEN coalesce(v.words, v.place_typed) IS NULL THEN v.typed "
     "ELSE json_array(v.typed, v.words, v.place_typed) END, "
     "v.value_si "

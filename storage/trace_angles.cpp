@@ -37,7 +37,8 @@ double TraceAngles::angle_of(double value)
             first_time_ = value;
         constexpr double degrees_per_second_at_one_rpm = 6.0;
         return layout_.first_angle - layout_.dead_centre_at +
-               (value - first_time_) * layout_.seconds_per_count * layout_.speed * degrees_per_second_at_one_rpm;
+               (value - first_time_) * layout_.seconds_per_count * layout_.speed *
+                   degrees_per_second_at_one_rpm;
     }
     return value;
 }
@@ -60,10 +61,15 @@ Problem TraceAngles::steps_back(double value) const
     const bool time = layout_.angle_from == AngleFrom::time;
     const std::string unit_text = time ? "" : "°", before = number_text(last_value_) + unit_text;
     const std::string what = time ? "The time " : "The crank angle ";
-    const std::string rise = time ? "Choose the column of the times, in rising order." : "Choose the column of the angles; if they fall while the engine runs, turn their direction.";
+    const std::string rise =
+        time ? "Choose the column of the times, in rising order."
+             : "Choose the column of the angles; if they fall while the engine runs, turn their direction.";
     if (value == last_value_)
-        return invalid_input(what + before + " stands twice.", time ? rise : "Give each angle of a cycle once, or name the column that counts the cycles.");
-    return invalid_input(what + "steps back from " + before + " to " + number_text(value) + unit_text + ".", rise);
+        return invalid_input(
+            what + before + " stands twice.",
+            time ? rise : "Give each angle of a cycle once, or name the column that counts the cycles.");
+    return invalid_input(what + "steps back from " + before + " to " + number_text(value) + unit_text + ".",
+                         rise);
 }
 
 Done TraceAngles::add(double value, std::optional<int> cycle)
@@ -80,9 +86,10 @@ Done TraceAngles::add(double value, std::optional<int> cycle)
     } else if (!(angle > angle_.back())) {
         return steps_back(value);
     } else if (angle - cycle_began_ > period_ + hair) {
-        return invalid_input("The crank angle lies " + short_number_text(angle - cycle_began_) +
-                                 "° after the first of its cycle, and the engine's cycle has " + number_text(period_) + "°.",
-                             "Check the column that counts the cycles, and whether the engine has two or four strokes.");
+        return invalid_input(
+            "The crank angle lies " + short_number_text(angle - cycle_began_) +
+                "° after the first of its cycle, and the engine's cycle has " + number_text(period_) + "°.",
+            "Check the column that counts the cycles, and whether the engine has two or four strokes.");
     } else {
         cycle_.push_back(cycle_.back());
     }
@@ -93,7 +100,8 @@ Done TraceAngles::add(double value, std::optional<int> cycle)
 }
 
 /// Brings the samples from..to into one period and turns them so that they rise.
-void TraceAngles::add_cycle(std::size_t from, std::size_t to, const std::vector<double>& pressure, CardTrace& trace) const
+void TraceAngles::add_cycle(std::size_t from, std::size_t to, const std::vector<double>& pressure,
+                            CardTrace& trace) const
 {
     struct Sample
     {
@@ -136,7 +144,8 @@ CardTrace TraceAngles::trace(const std::vector<double>& pressure, int& missing) 
         add_cycle(from, to, pressure, trace);
         from = to;
     }
-    missing = static_cast<int>(std::count_if(pressure.begin(), pressure.end(), [](double p) { return std::isnan(p); }));
+    missing = static_cast<int>(
+        std::count_if(pressure.begin(), pressure.end(), [](double p) { return std::isnan(p); }));
     const bool one = trace.cycle.empty() || trace.cycle.front() == trace.cycle.back();
     if (one)
         trace.cycle.clear();

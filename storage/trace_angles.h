@@ -24,13 +24,14 @@ private:
     double angle_of(double value);
     bool begins_cycle(double angle, std::optional<int> cycle) const;
     Problem steps_back(double value) const;
-    void add_cycle(std::size_t from, std::size_t to, const std::vector<double>& pressure, CardTrace& trace) const;
+    void add_cycle(std::size_t from, std::size_t to, const std::vector<double>& pressure,
+                   CardTrace& trace) const;
 
     const TraceLayout& layout_;
     double period_;
     std::vector<double> angle_; ///< after firing dead centre, as the file goes on
     std::vector<int> cycle_;
-    std::optional<int> named_;                            ///< cycle of the last sample, as the file counts
+    std::optional<int> named_; ///< cycle of the last sample, as the file counts
     double cycle_began_ = 0.0, first_time_ = 0.0, last_value_ = 0.0;
 };
 

@@ -55,7 +55,8 @@ bool speaks_of_cylinder(const std::string& word)
 std::optional<int> guess_cylinder(std::string_view text, const Engine& engine)
 {
     std::vector<NumberInName> numbers = numbers_in(text);
-    std::erase_if(numbers, [&](const NumberInName& name) { return name.number < 1 || name.number > engine.cylinders; });
+    std::erase_if(
+        numbers, [&](const NumberInName& name) { return name.number < 1 || name.number > engine.cylinders; });
     const auto named = std::find_if(numbers.begin(), numbers.end(),
                                     [](const NumberInName& name) { return speaks_of_cylinder(name.word); });
     if (named != numbers.end())

@@ -14,7 +14,7 @@
 namespace evenstroke::storage {
 namespace {
 
-constexpr int looked_at = 60; // lines
+constexpr int looked_at = 60;                   // lines
 constexpr qint64 longest_beginning = 256 << 10; // bytes
 
 std::string lower(std::string_view text)
@@ -41,8 +41,10 @@ bool is_number(std::string_view field)
 /// A row of numbers, a few of which may be missing.
 bool is_row(const std::vector<std::string>& fields)
 {
-    const auto numbers = std::count_if(fields.begin(), fields.end(), [](const std::string& field) { return is_number(field); });
-    return numbers >= 1 && 2 * numbers >= static_cast<std::ptrdiff_t>(fields.size()) && is_number(fields.front());
+    const auto numbers = std::count_if(fields.begin(), fields.end(),
+                                       [](const std::string& field) { return is_number(field); });
+    return numbers >= 1 && 2 * numbers >= static_cast<std::ptrdiff_t>(fields.size()) &&
+           is_number(fields.front());
 }
 
 /// The numbers of a column over the rows that were looked at.
@@ -77,8 +79,10 @@ bool is_even(const std::vector<double>& numbers)
 
 bool is_counter(const std::vector<double>& numbers)
 {
-    const bool whole = std::all_of(numbers.begin(), numbers.end(), [](double n) { return n == std::floor(n); });
-    return !numbers.empty() && whole && numbers.back() - numbers.front() >= 0.0 && numbers.back() - numbers.front() <= 1.0;
+    const bool whole =
+        std::all_of(numbers.begin(), numbers.end(), [](double n) { return n == std::floor(n); });
+    return !numbers.empty() && whole && numbers.back() - numbers.front() >= 0.0 &&
+           numbers.back() - numbers.front() <= 1.0;
 }
 
 /// Looks at one file's first lines.
@@ -207,7 +211,8 @@ void Guess::find_pressures()
     layout.pressures = {{std::min(2, std::max(1, proposed_.columns)), std::nullopt}};
 }
 
-/// A word of the header that is a unit of pressure. Only named: an instrument may write another unit than it says.
+/// A word of the header that is a unit of pressure. Only named: an instrument may write another unit than it
+/// says.
 void Guess::name_unit()
 {
     std::string word;
@@ -217,14 +222,17 @@ void Guess::name_unit()
             continue;
         }
         const auto found = find_unit(word);
-        if (!proposed_.unit && word.size() > 1 && found && unit(found.value().id).dimension == Dimension::pressure)
+        if (!proposed_.unit && word.size() > 1 && found &&
+            unit(found.value().id).dimension == Dimension::pressure)
             proposed_.unit = found.value();
         word.clear();
     }
     const std::string plain = lower(header_);
-    if (proposed_.unit && proposed_.unit->kind == PressureKind::none && plain.find("gauge") != std::string::npos)
+    if (proposed_.unit && proposed_.unit->kind == PressureKind::none &&
+        plain.find("gauge") != std::string::npos)
         proposed_.unit->kind = PressureKind::gauge;
-    if (proposed_.unit && proposed_.unit->kind == PressureKind::none && plain.find("abs") != std::string::npos)
+    if (proposed_.unit && proposed_.unit->kind == PressureKind::none &&
+        plain.find("abs") != std::string::npos)
         proposed_.unit->kind = PressureKind::absolute;
 }
 
@@ -297,7 +305,8 @@ Result<std::string> first_lines_of(const QString& path, int lines)
 {
     QFile file(path);
     if (!file.exists())
-        return Problem{Problem::Kind::not_found, "There is no file \"" + from_qt(path) + "\".", "Check its name."};
+        return Problem{Problem::Kind::not_found, "There is no file \"" + from_qt(path) + "\".",
+                       "Check its name."};
     if (!file.open(QIODevice::ReadOnly))
         return Problem{Problem::Kind::storage, "\"" + from_qt(path) + "\" cannot be read.",
                        "Check that you have the right to read it."};

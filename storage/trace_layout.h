@@ -9,8 +9,8 @@
 #include <string_view>
 #include <vector>
 
-/// Files of indicating instruments: text in columns, whatever their order, units and angles. How a file is to be read is
-/// said once by the engineer and remembered for the engine.
+/// Files of indicating instruments: text in columns, whatever their order, units and angles. How a file is to
+/// be read is said once by the engineer and remembered for the engine.
 namespace evenstroke::storage {
 
 enum class ColumnSeparator { automatic, comma, semicolon, tab, space };
@@ -55,12 +55,14 @@ struct TraceLayout
     std::vector<PressureColumn> pressures = {{}};
     std::optional<UnitId> unit; ///< of the pressures; empty: not chosen yet, and nothing is read
     bool gauge = false;         ///< over the barometer; else absolute
-    std::optional<TwoPointCalibration> calibration; ///< the columns hold a signal; its pressures are in `unit`
-    std::vector<std::string> missing_words = {"nan", "-"}; ///< whatever their case; an empty field is missing too
+    std::optional<TwoPointCalibration>
+        calibration; ///< the columns hold a signal; its pressures are in `unit`
+    std::vector<std::string> missing_words = {"nan",
+                                              "-"}; ///< whatever their case; an empty field is missing too
 };
 
-/// One cylinder's trace out of a file, angles brought to firing dead centre = 0 and within one period, pressures in bar
-/// rounded to a millionth. Samples that are missing are left out.
+/// One cylinder's trace out of a file, angles brought to firing dead centre = 0 and within one period,
+/// pressures in bar rounded to a millionth. Samples that are missing are left out.
 struct ReadTrace
 {
     int column = 0;
@@ -69,17 +71,20 @@ struct ReadTrace
     int missing = 0;
 };
 
-/// Reads all pressure columns of a file. What the evaluation could not begin with is refused here, so that nothing of it
-/// is stored: angles that stand still or step back, pressures that no cylinder has, a compression that is not there.
+/// Reads all pressure columns of a file. What the evaluation could not begin with is refused here, so that
+/// nothing of it is stored: angles that stand still or step back, pressures that no cylinder has, a
+/// compression that is not there.
 /// @par Problems invalid_input naming file, line and value; not_found; storage
-Result<std::vector<ReadTrace>> read_traces(const QString& path, const TraceLayout& layout, const Engine& engine);
+Result<std::vector<ReadTrace>> read_traces(const QString& path, const TraceLayout& layout,
+                                           const Engine& engine);
 /// The same from the text of a file; `name` is for the sentences.
-Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std::string& name, const TraceLayout& layout,
-                                                const Engine& engine);
+Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std::string& name,
+                                                const TraceLayout& layout, const Engine& engine);
 /// What is wrong with a layout by itself; `columns` of the file, 0 where they are not known.
 std::optional<Problem> find_layout_problem(const TraceLayout& layout, int columns = 0);
 
-/// What the first lines of a file look like. A proposal for the engineer, never a decision: the unit is only named.
+/// What the first lines of a file look like. A proposal for the engineer, never a decision: the unit is only
+/// named.
 struct ProposedLayout
 {
     TraceLayout layout;              ///< without a unit
@@ -93,11 +98,12 @@ ProposedLayout guess_layout(std::string_view first_lines);
 std::vector<std::string> split_line(std::string_view line, ColumnSeparator separator);
 /// What `automatic` means for these lines.
 ColumnSeparator find_separator(std::string_view first_lines);
-/// The beginning of a file, at most so many lines. @par Problems not_found; storage; invalid_input: it is no text
+/// The beginning of a file, at most so many lines. @par Problems not_found; storage; invalid_input: it is no
+/// text
 Result<std::string> first_lines_of(const QString& path, int lines);
 
-/// The cylinder that a file's name or a column's title speaks of: the number behind "cyl", "cylinder", "c" or "no", else
-/// the only number that is a cylinder, else a cylinder's own name.
+/// The cylinder that a file's name or a column's title speaks of: the number behind "cyl", "cylinder", "c" or
+/// "no", else the only number that is a cylinder, else a cylinder's own name.
 std::optional<int> guess_cylinder(std::string_view text, const Engine& engine);
 
 /// How an engine's files were laid out the last time. @return nothing where that is not known

@@ -63,12 +63,19 @@ QJsonObject object_of(const TraceLayout& layout)
 TraceLayout layout_of(const QJsonObject& object)
 {
     TraceLayout layout;
-    const auto whole = [&](const char* key, int usual) { return object.value(QLatin1String(key)).toInt(usual); };
-    const auto number = [&](const char* key, double usual) { return object.value(QLatin1String(key)).toDouble(usual); };
-    layout.separator = static_cast<ColumnSeparator>(index_of(separators, object.value(QLatin1String("separator")).toString()));
-    layout.decimal_sign = object.value(QLatin1String("decimal_sign")).toString() == QLatin1String(",") ? ',' : '.';
+    const auto whole = [&](const char* key, int usual) {
+        return object.value(QLatin1String(key)).toInt(usual);
+    };
+    const auto number = [&](const char* key, double usual) {
+        return object.value(QLatin1String(key)).toDouble(usual);
+    };
+    layout.separator = static_cast<ColumnSeparator>(
+        index_of(separators, object.value(QLatin1String("separator")).toString()));
+    layout.decimal_sign =
+        object.value(QLatin1String("decimal_sign")).toString() == QLatin1String(",") ? ',' : '.';
     layout.header_lines = whole("header_lines", layout.header_lines);
-    layout.angle_from = static_cast<AngleFrom>(index_of(angles, object.value(QLatin1String("angle_from")).toString()));
+    layout.angle_from =
+        static_cast<AngleFrom>(index_of(angles, object.value(QLatin1String("angle_from")).toString()));
     layout.angle_column = whole("angle_column", layout.angle_column);
     layout.counts_per_revolution = number("counts_per_revolution", layout.counts_per_revolution);
     layout.seconds_per_count = number("seconds_per_count", layout.seconds_per_count);
@@ -117,7 +124,8 @@ Result<std::optional<TraceLayout>> load_trace_layout(History& history, const std
 Done save_trace_layout(History& history, const std::string& engine_id, const TraceLayout& layout)
 {
     return PreferenceStore(history).set_choice(
-        engine_id, choice_name, QJsonDocument(object_of(layout)).toJson(QJsonDocument::Compact).toStdString());
+        engine_id, choice_name,
+        QJsonDocument(object_of(layout)).toJson(QJsonDocument::Compact).toStdString());
 }
 
 } // namespace evenstroke::storage

@@ -23,10 +23,14 @@ constexpr double usual_barometer = 1.013; // bar; only to look whether a gauge p
 char sign_of(ColumnSeparator separator)
 {
     switch (separator) {
-    case ColumnSeparator::semicolon: return ';';
-    case ColumnSeparator::tab: return '\t';
-    case ColumnSeparator::space: return ' ';
-    default: return ',';
+    case ColumnSeparator::semicolon:
+        return ';';
+    case ColumnSeparator::tab:
+        return '\t';
+    case ColumnSeparator::space:
+        return ' ';
+    default:
+        return ',';
     }
 }
 
@@ -61,7 +65,8 @@ private:
     bool is_missing(std::string_view field) const;
     Done read_angle();
     Done read_pressure(Column& column);
-    Result<ReadTrace> trace_of(const PressureColumn& wanted, const Column& column, const Engine& engine) const;
+    Result<ReadTrace> trace_of(const PressureColumn& wanted, const Column& column,
+                               const Engine& engine) const;
 
     std::string_view rest_;
     const TraceLayout& layout_;
@@ -80,8 +85,9 @@ TraceText::TraceText(std::string_view text, const TraceLayout& layout, bool two_
 {
     if (rest_.starts_with("\xEF\xBB\xBF"))
         rest_.remove_prefix(3);
-    separator_ = sign_of(layout.separator == ColumnSeparator::automatic ? find_separator(rest_.substr(0, 20000))
-                                                                        : layout.separator);
+    separator_ =
+        sign_of(layout.separator == ColumnSeparator::automatic ? find_separator(rest_.substr(0, 20000))
+                                                               : layout.separator);
     for (const std::string& word : layout.missing_words)
         missing_words_.push_back(lower(trimmed(word)));
     const Unit& chosen = unit(*layout.unit);
@@ -91,7 +97,9 @@ TraceText::TraceText(std::string_view text, const TraceLayout& layout, bool two_
         offset_ = factor_ * (two->pressure_1 - slope * two->signal_1);
         factor_ *= slope;
     }
-    const auto need = [this](int column) { fields_needed_ = std::max(fields_needed_, static_cast<std::size_t>(column)); };
+    const auto need = [this](int column) {
+        fields_needed_ = std::max(fields_needed_, static_cast<std::size_t>(column));
+    };
     if (layout.angle_from != AngleFrom::sample_number)
         need(layout.angle_column);
     if (layout.cycle_column)
@@ -126,7 +134,8 @@ void TraceText::take_fields(std::string_view row)
 
 bool TraceText::is_missing(std::string_view field) const
 {
-    return field.empty() || std::find(missing_words_.begin(), missing_words_.end(), lower(field)) != missing_words_.end();
+    return field.empty() ||
+           std::find(missing_words_.begin(), missing_words_.end(), lower(field)) != missing_words_.end();
 }
 
 /// @param what  begins a sentence: "The crank angle"
@@ -147,7 +156,8 @@ Result<double> TraceText::number(std::size_t index, const char* what) const
         return invalid_input(std::string(what) + " is not readable: " + read.error().what_happened,
                              "Check the column, the separator and how many lines stand above the numbers.");
     if (other_sign)
-        return invalid_input(std::string(what) + " " + quoted(field) + " has another decimal sign than was chosen.",
+        return invalid_input(std::string(what) + " " + quoted(field) +
+                                 " has another decimal sign than was chosen.",
                              layout_.decimal_sign == '.' ? "Choose the comma as decimal sign."
                                                          : "Choose the point as decimal sign.");
     return read;
@@ -200,10 +210,11 @@ Done TraceText::read_row(std::string_view row)
 {
     take_fields(row);
     if (fields_.size() < fields_needed_)
-        return invalid_input("The row " + quoted(row) + " has " + std::to_string(fields_.size()) +
-                                 (fields_.size() == 1 ? " column" : " columns") + ", and column " +
-                                 std::to_string(fields_needed_) + " is asked for.",
-                             "Check the separator and the columns, and how many lines stand above the numbers.");
+        return invalid_input(
+            "The row " + quoted(row) + " has " + std::to_string(fields_.size()) +
+                (fields_.size() == 1 ? " column" : " columns") + ", and column " +
+                std::to_string(fields_needed_) + " is asked for.",
+            "Check the separator and the columns, and how many lines stand above the numbers.");
     BOOST_OUTCOME_TRYV(read_angle());
     for (Column& column : columns_) {
         BOOST_OUTCOME_TRYV(read_pressure(column));
@@ -230,11 +241,13 @@ Done TraceText::read()
     }
     line_ = 0;
     if (angles_.samples() == 0)
-        return invalid_input("It has no row of numbers.", "Choose the file of a card, and how many lines stand above its numbers.");
+        return invalid_input("It has no row of numbers.",
+                             "Choose the file of a card, and how many lines stand above its numbers.");
     return done();
 }
 
-Result<ReadTrace> TraceText::trace_of(const PressureColumn& wanted, const Column& column, const Engine& engine) const
+Result<ReadTrace> TraceText::trace_of(const PressureColumn& wanted, const Column& column,
+                                      const Engine& engine) const
 {
     ReadTrace read;
     read.column = wanted.column;
@@ -245,8 +258,8 @@ Result<ReadTrace> TraceText::trace_of(const PressureColumn& wanted, const Column
     if (layout_.gauge)
         for (double& pressure : record.pressure)
             pressure += usual_barometer;
-    const auto clean = indicator::clean(record, {engine.kind == EngineKind::two_stroke, engine.cylinder_closes_deg,
-                                                   engine.cylinder_opens_deg});
+    const auto clean = indicator::clean(record, {engine.kind == EngineKind::two_stroke,
+                                                 engine.cylinder_closes_deg, engine.cylinder_opens_deg});
     if (!clean)
         return clean.error();
     return read;
@@ -259,7 +272,8 @@ Result<std::vector<ReadTrace>> TraceText::traces(const Engine& engine)
         auto read = trace_of(layout_.pressures[i], columns_[i], engine);
         if (!read) {
             Problem problem = read.error();
-            problem.what_happened = "Column " + std::to_string(layout_.pressures[i].column) + ": " + problem.what_happened;
+            problem.what_happened =
+                "Column " + std::to_string(layout_.pressures[i].column) + ": " + problem.what_happened;
             return problem;
         }
         found.push_back(std::move(read.value()));
@@ -276,8 +290,8 @@ Problem in_file(Problem problem, const std::string& name, qint64 line)
 
 } // namespace
 
-Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std::string& name, const TraceLayout& layout,
-                                                const Engine& engine)
+Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std::string& name,
+                                                const TraceLayout& layout, const Engine& engine)
 {
     if (auto problem = find_layout_problem(layout))
         return in_file(*std::move(problem), name, 0);
@@ -286,7 +300,8 @@ Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std
     if (const std::size_t zero = text.find('\0'); zero != std::string_view::npos)
         return in_file(invalid_input("It is no text: it holds bytes that no writing has.",
                                      "Let the instrument write the card as text, in columns."),
-                       name, 1 + std::count(text.begin(), text.begin() + static_cast<std::ptrdiff_t>(zero), '\n'));
+                       name,
+                       1 + std::count(text.begin(), text.begin() + static_cast<std::ptrdiff_t>(zero), '\n'));
     TraceText file(text, layout, engine.kind == EngineKind::two_stroke);
     if (const auto read = file.read(); !read)
         return in_file(read.error(), name, file.line());
@@ -296,7 +311,8 @@ Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std
     return traces;
 }
 
-Result<std::vector<ReadTrace>> read_traces(const QString& path, const TraceLayout& layout, const Engine& engine)
+Result<std::vector<ReadTrace>> read_traces(const QString& path, const TraceLayout& layout,
+                                           const Engine& engine)
 {
     const auto content = card_file_content(path);
     if (!content)
@@ -315,10 +331,12 @@ std::optional<Problem> find_layout_problem(const TraceLayout& layout, int column
         return invalid_input("The unit of the pressures is not chosen.",
                              "Choose it; a wrong one makes every number wrong.");
     if (unit(*layout.unit).dimension != Dimension::pressure)
-        return invalid_input(quoted(unit(*layout.unit).symbol) + " is no unit of pressure.", "Choose a pressure, such as bar.");
+        return invalid_input(quoted(unit(*layout.unit).symbol) + " is no unit of pressure.",
+                             "Choose a pressure, such as bar.");
     for (const PressureColumn& pressure : layout.pressures)
         if (!is_column(pressure.column))
-            return invalid_input("There is no column " + std::to_string(pressure.column) + " for the pressure.",
+            return invalid_input("There is no column " + std::to_string(pressure.column) +
+                                     " for the pressure.",
                                  "Choose one of columns 1 to " + std::to_string(last) + ".");
     if ((layout.angle_from != AngleFrom::sample_number && !is_column(layout.angle_column)) ||
         (layout.cycle_column && !is_column(*layout.cycle_column)))
@@ -330,7 +348,8 @@ std::optional<Problem> find_layout_problem(const TraceLayout& layout, int column
                              "Write how many the instrument takes, 60 to 36000.");
     if (layout.angle_from == AngleFrom::time &&
         !(layout.speed >= 10.0 && layout.speed <= 3000.0 && layout.seconds_per_count > 0.0))
-        return invalid_input("Times become angles only with the speed, and it is " + number_text(layout.speed) + " r/min.",
+        return invalid_input("Times become angles only with the speed, and it is " +
+                                 number_text(layout.speed) + " r/min.",
                              "Write the speed of the engine, 10 to 3000 r/min.");
     if (!std::isfinite(layout.first_angle) || !std::isfinite(layout.dead_centre_at) ||
         std::abs(layout.first_angle) > 720.0 || std::abs(layout.dead_centre_at) > 720.0)

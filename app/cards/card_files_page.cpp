@@ -24,7 +24,10 @@ namespace {
 constexpr int lines_read = 60, wait_ms = 200;
 constexpr std::size_t most_files = 200;
 
-QString folder_setting() { return QStringLiteral("cards/folder"); }
+QString folder_setting()
+{
+    return QStringLiteral("cards/folder");
+}
 
 QStringList local_files(const QMimeData& data)
 {
@@ -43,7 +46,8 @@ CardFilesPage::CardFilesPage(Workplace& place, QWidget* parent)
     ui_->setupUi(this);
     setAcceptDrops(true);
     ui_->traces->setColumnCount(4);
-    ui_->traces->setHorizontalHeaderLabels({tr("file"), tr("cylinder"), tr("samples"), tr("what the card says")});
+    ui_->traces->setHorizontalHeaderLabels(
+        {tr("file"), tr("cylinder"), tr("samples"), tr("what the card says")});
     ui_->traces->verticalHeader()->hide();
     ui_->traces->verticalHeader()->setDefaultSectionSize(26);
     ui_->traces->horizontalHeader()->setHighlightSections(false);
@@ -88,18 +92,22 @@ void CardFilesPage::connect_parts()
         ui_->progress->setRange(0, std::max(1, run_.total()));
         ui_->progress->setValue(run_.done());
     });
-    connect(ui_->traces->selectionModel(), &QItemSelectionModel::currentRowChanged, this, &CardFilesPage::show_trace_in_hand);
+    connect(ui_->traces->selectionModel(), &QItemSelectionModel::currentRowChanged, this,
+            &CardFilesPage::show_trace_in_hand);
     connect(ui_->take_button, &QPushButton::clicked, this, &CardFilesPage::ask_and_take);
     connect(ui_->paper_button, &QPushButton::toggled, this, [this](bool on) {
         ui_->paper->setVisible(on);
         ui_->preview->setMaximumHeight(on ? 150 : 220);
     });
     connect(ui_->paper, &PaperCard::put_into_reading, this, &CardFilesPage::ask_and_put);
-    connect(new QShortcut(QKeySequence::Open, this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut), &QShortcut::activated, this,
-            &CardFilesPage::choose_files);
+    connect(new QShortcut(QKeySequence::Open, this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut),
+            &QShortcut::activated, this, &CardFilesPage::choose_files);
 }
 
-QWidget* CardFilesPage::first_focus() { return ui_->choose_button; }
+QWidget* CardFilesPage::first_focus()
+{
+    return ui_->choose_button;
+}
 
 const Engine* CardFilesPage::engine() const
 {
@@ -139,8 +147,9 @@ void CardFilesPage::refresh()
 void CardFilesPage::choose_files()
 {
     const QString folder = QSettings().value(folder_setting()).toString();
-    const QStringList chosen = QFileDialog::getOpenFileNames(
-        this, tr("Files of the indicating instrument"), folder, tr("Text in columns (*.csv *.txt *.dat *.asc *.tsv);;All files (*)"));
+    const QStringList chosen =
+        QFileDialog::getOpenFileNames(this, tr("Files of the indicating instrument"), folder,
+                                      tr("Text in columns (*.csv *.txt *.dat *.asc *.tsv);;All files (*)"));
     if (chosen.isEmpty())
         return;
     QSettings().setValue(folder_setting(), QFileInfo(chosen.front()).absolutePath());
@@ -151,7 +160,8 @@ void CardFilesPage::add_files(const QStringList& paths)
 {
     const bool first = files_.empty();
     for (const QString& path : paths) {
-        const bool known = std::any_of(files_.begin(), files_.end(), [&](const CardFile& file) { return file.path == path; });
+        const bool known = std::any_of(files_.begin(), files_.end(),
+                                       [&](const CardFile& file) { return file.path == path; });
         if (!known && files_.size() < most_files)
             files_.push_back({path, std::nullopt});
     }
@@ -191,7 +201,8 @@ void CardFilesPage::begin_layout()
     remembered_ = false;
     layout_ = proposed_.layout;
     if (workplace().history()) {
-        const auto kept = storage::load_trace_layout(*workplace().history(), to_std(workplace().selection().engine));
+        const auto kept =
+            storage::load_trace_layout(*workplace().history(), to_std(workplace().selection().engine));
         if (kept && kept.value()) {
             layout_ = *kept.value();
             remembered_ = true;
@@ -199,7 +210,8 @@ void CardFilesPage::begin_layout()
     }
     if (!remembered_ && engine() && layout_.pressures.size() > 1)
         for (storage::PressureColumn& column : layout_.pressures)
-            if (const auto index = static_cast<std::size_t>(column.column - 1); index < proposed_.titles.size())
+            if (const auto index = static_cast<std::size_t>(column.column - 1);
+                index < proposed_.titles.size())
                 column.cylinder = storage::guess_cylinder(proposed_.titles[index], *engine());
     ui_->boxes->show_layout(layout_);
     show_first_lines();

@@ -18,11 +18,11 @@ namespace evenstroke {
 
 struct Judgement;
 
-/// Cards out of the files of an indicating instrument, whatever their layout, into the reading that is looked at; and
-/// cards drawn on paper.
+/// Cards out of the files of an indicating instrument, whatever their layout, into the reading that is looked
+/// at; and cards drawn on paper.
 ///
-/// The files are read and evaluated on worker threads at every change, so that what is seen is what would be taken in;
-/// storing is one transaction.
+/// The files are read and evaluated on worker threads at every change, so that what is seen is what would be
+/// taken in; storing is one transaction.
 class CardFilesPage : public Page
 {
     Q_OBJECT
@@ -32,7 +32,10 @@ public:
     ~CardFilesPage() override;
     QString name() const override { return QStringLiteral("card-files"); }
     QString title() const override { return tr("Bring in cards"); }
-    QString sentence() const override { return tr("Bring cards in for {engine} of {vessel}, reading of {reading}."); }
+    QString sentence() const override
+    {
+        return tr("Bring cards in for {engine} of {vessel}, reading of {reading}.");
+    }
     void refresh() override;
     QString foot_text() const override;
     QWidget* first_focus() override;
@@ -45,7 +48,8 @@ public:
     const std::vector<FileTrace>& traces() const { return traces_; }
     bool busy() const { return run_.busy() || soon_.isActive(); }
     void set_cylinder(std::size_t trace, std::optional<int> cylinder);
-    /// Puts all traces that can be taken into the reading in hand. False: nothing was stored, `outcome` says why.
+    /// Puts all traces that can be taken into the reading in hand. False: nothing was stored, `outcome` says
+    /// why.
     bool take_in(const storage::Signature& by);
     bool put_paper_card(int cylinder, double mean_indicated_bar, const storage::Signature& by);
     QString outcome() const;
@@ -72,7 +76,8 @@ private:
     void show_into();
     void ask_and_take();
     void ask_and_put(int cylinder, double mean_indicated_bar);
-    std::optional<storage::Signature> ask_signature(const QString& title, const QString& words, const QString& action);
+    std::optional<storage::Signature> ask_signature(const QString& title, const QString& words,
+                                                    const QString& action);
     void say(const QString& words, bool caution = false);
     const Reading* reading_in_hand_here() const;
     const Engine* engine() const;
@@ -87,7 +92,7 @@ private:
     storage::ProposedLayout proposed_; ///< of the first file
     bool remembered_ = false;          ///< `layout_` is the engine's own
     std::string first_lines_;
-    std::optional<Problem> problem_;   ///< of the layout or the first file
+    std::optional<Problem> problem_; ///< of the layout or the first file
     std::vector<FileTrace> traces_;
 };
 

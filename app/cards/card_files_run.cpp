@@ -39,8 +39,9 @@ std::optional<int> cylinder_of(const CardFilesTask& task, std::size_t file, cons
     if (task.layout.pressures.size() > 1)
         return read.cylinder;
     const CardFile& from = task.files[file];
-    return from.cylinder ? from.cylinder
-                         : storage::guess_cylinder(to_std(QFileInfo(from.path).completeBaseName()), task.engine);
+    return from.cylinder
+               ? from.cylinder
+               : storage::guess_cylinder(to_std(QFileInfo(from.path).completeBaseName()), task.engine);
 }
 
 std::vector<FileTrace> read_file(const CardFilesTask& task, std::size_t file)
@@ -78,14 +79,15 @@ void CardFilesRun::start(const CardFilesTask& task)
         QList<int> files;
         for (int i = 0; i < count; ++i)
             files << i;
-        const auto of_files = QtConcurrent::blockingMapped<QList<std::vector<FileTrace>>>(files, [&](int file) {
-            std::vector<FileTrace> found;
-            if (wanted)
-                found = read_file(task, static_cast<std::size_t>(file));
-            if (!tell(++done, count))
-                wanted = false;
-            return found;
-        });
+        const auto of_files =
+            QtConcurrent::blockingMapped<QList<std::vector<FileTrace>>>(files, [&](int file) {
+                std::vector<FileTrace> found;
+                if (wanted)
+                    found = read_file(task, static_cast<std::size_t>(file));
+                if (!tell(++done, count))
+                    wanted = false;
+                return found;
+            });
         std::vector<FileTrace> traces;
         for (const std::vector<FileTrace>& of_file : of_files)
             traces.insert(traces.end(), of_file.begin(), of_file.end());

@@ -38,7 +38,10 @@ void CardFilesPage::say(const QString& words, bool caution)
     ui_->outcome->style()->polish(ui_->outcome);
 }
 
-QString CardFilesPage::outcome() const { return ui_->outcome->text(); }
+QString CardFilesPage::outcome() const
+{
+    return ui_->outcome->text();
+}
 
 void CardFilesPage::show_all()
 {
@@ -47,8 +50,10 @@ void CardFilesPage::show_all()
     if (!ready)
         hint = empty_words(workplace());
     else if (!any) {
-        hint = tr("Choose the files that the indicating instrument wrote, or drop them here: one a cylinder, or one with a column a "
-                  "cylinder. Any text in columns will do. Nothing is stored before you have seen what the cards say.");
+        hint = tr("Choose the files that the indicating instrument wrote, or drop them here: one a cylinder, "
+                  "or one with a column a "
+                  "cylinder. Any text in columns will do. Nothing is stored before you have seen what the "
+                  "cards say.");
         if (const Caution* const cocks = find_caution("indicator_cocks"))
             hint += QStringLiteral("\n\n") + to_qstring(cocks->short_text);
     }
@@ -56,8 +61,9 @@ void CardFilesPage::show_all()
     ui_->hint->setVisible(!hint.isEmpty());
     ui_->choose_button->setEnabled(ready);
     ui_->choose_button->setText(any ? tr("choose more (Ctrl+O)") : tr("choose files (Ctrl+O)"));
-    for (QWidget* part : std::initializer_list<QWidget*>{ui_->forget_button, ui_->guess_button, ui_->lines_title, ui_->columns,
-                                                         ui_->boxes, ui_->traces, ui_->in_hand})
+    for (QWidget* part :
+         std::initializer_list<QWidget*>{ui_->forget_button, ui_->guess_button, ui_->lines_title,
+                                         ui_->columns, ui_->boxes, ui_->traces, ui_->in_hand})
         part->setVisible(any && ready);
     if (any)
         ui_->lines_title->setText((remembered_ ? tr("%1, laid out as this engine's files were the last time:")
@@ -98,8 +104,8 @@ void CardFilesPage::show_traces()
         const FileTrace& trace = traces_[static_cast<std::size_t>(row)];
         const QString file = QFileInfo(files_[trace.file].path).fileName();
         const bool several = layout_.pressures.size() > 1 && trace.column > 0;
-        const QString words[] = {several ? tr("column %1 of %2").arg(trace.column).arg(file) : file, QString(),
-                                 trace_size_text(trace), trace_results_text(trace)};
+        const QString words[] = {several ? tr("column %1 of %2").arg(trace.column).arg(file) : file,
+                                 QString(), trace_size_text(trace), trace_results_text(trace)};
         for (int column = 0; column < ui_->traces->columnCount(); ++column) {
             auto* item = new QTableWidgetItem(words[column]);
             item->setToolTip(words[column]);
@@ -127,8 +133,9 @@ void CardFilesPage::show_traces()
 void CardFilesPage::show_trace_in_hand()
 {
     const int row = ui_->traces->currentRow();
-    const FileTrace* const trace =
-        row >= 0 && row < static_cast<int>(traces_.size()) ? &traces_[static_cast<std::size_t>(row)] : nullptr;
+    const FileTrace* const trace = row >= 0 && row < static_cast<int>(traces_.size())
+                                       ? &traces_[static_cast<std::size_t>(row)]
+                                       : nullptr;
     ui_->preview->setVisible(trace && trace->trace);
     ui_->preview->show_trace(trace);
     ui_->sentences->setVisible(trace != nullptr);
@@ -155,7 +162,9 @@ void CardFilesPage::show_into()
     if (!twice.isEmpty())
         lines << twice;
     if (left > 0)
-        lines << tr("%n card(s) are left out: they cannot be read, or nobody has said of which cylinder they are.", nullptr, left);
+        lines << tr(
+            "%n card(s) are left out: they cannot be read, or nobody has said of which cylinder they are.",
+            nullptr, left);
     if (workplace().read_only())
         lines << tr("This history can only be read.");
     ui_->into->setText(lines.join(QStringLiteral("\n")));
@@ -163,12 +172,14 @@ void CardFilesPage::show_into()
     const bool may = reading && taken > 0 && twice.isEmpty() && !workplace().read_only() && !run_.busy();
     ui_->take_button->setVisible(taken > 0);
     ui_->take_button->setEnabled(may);
-    ui_->take_button->setText(reading ? tr("take %n card(s) into the reading of %1", nullptr, taken).arg(day_text(reading->taken_at.utc))
+    ui_->take_button->setText(reading ? tr("take %n card(s) into the reading of %1", nullptr, taken)
+                                            .arg(day_text(reading->taken_at.utc))
                                       : tr("take in"));
     ui_->paper->set_can_put(reading && !workplace().read_only());
 }
 
-std::optional<storage::Signature> CardFilesPage::ask_signature(const QString& title, const QString& words, const QString& action)
+std::optional<storage::Signature> CardFilesPage::ask_signature(const QString& title, const QString& words,
+                                                               const QString& action)
 {
     SignatureDialog dialog(title, words, action, {to_std(person_name()), {}}, this);
     if (dialog.exec() != QDialog::Accepted)
@@ -179,9 +190,11 @@ std::optional<storage::Signature> CardFilesPage::ask_signature(const QString& ti
 
 void CardFilesPage::ask_and_take()
 {
-    if (const auto by = ask_signature(tr("Take cards in"), tr("The cards are kept with the reading for good. The history keeps who brought "
-                                                              "them in and why."),
-                                      tr("Take in")))
+    if (const auto by =
+            ask_signature(tr("Take cards in"),
+                          tr("The cards are kept with the reading for good. The history keeps who brought "
+                             "them in and why."),
+                          tr("Take in")))
         take_in(*by);
 }
 
@@ -200,7 +213,8 @@ bool CardFilesPage::take_in(const storage::Signature& by)
         return false;
     }
     const QString day = day_text(reading->taken_at.utc);
-    const auto kept = storage::save_trace_layout(*workplace().history(), to_std(workplace().selection().engine), layout_);
+    const auto kept =
+        storage::save_trace_layout(*workplace().history(), to_std(workplace().selection().engine), layout_);
     QString words = tr("%n card(s) are in the reading of %1 now.", nullptr, added.value().added).arg(day);
     if (added.value().same > 0)
         words += QLatin1Char(' ') + tr("%n were there already.", nullptr, added.value().same);
@@ -215,7 +229,8 @@ bool CardFilesPage::take_in(const storage::Signature& by)
 void CardFilesPage::ask_and_put(int cylinder, double mean_indicated_bar)
 {
     if (const auto by = ask_signature(tr("Put into the reading"),
-                                      tr("The mean indicated pressure of a paper card becomes a value of the reading, marked as from a card. "
+                                      tr("The mean indicated pressure of a paper card becomes a value of the "
+                                         "reading, marked as from a card. "
                                          "A value that was read stays."),
                                       tr("Put in")))
         put_paper_card(cylinder, mean_indicated_bar, *by);
@@ -227,21 +242,27 @@ bool CardFilesPage::put_paper_card(int cylinder, double mean_indicated_bar, cons
     const auto quantity_id = find_quantity("mean_indicated_pressure", Place::Kind::cylinder);
     if (!reading || !workplace().history() || !quantity_id)
         return false;
-    const storage::ValueFromCard value{*quantity_id, Place::cylinder(cylinder), mean_indicated_bar,
+    const storage::ValueFromCard value{*quantity_id,
+                                       Place::cylinder(cylinder),
+                                       mean_indicated_bar,
                                        {find_unit("bar").value().id, PressureKind::none}};
-    const auto accepted = storage::ReadingStore(*workplace().history()).accept_card_values(reading->id, {value}, by);
+    const auto accepted =
+        storage::ReadingStore(*workplace().history()).accept_card_values(reading->id, {value}, by);
     if (!accepted) {
         say(to_qstring(accepted.error().text()), true);
         return false;
     }
     const QString where = place_title(*engine(), value.place, false), day = day_text(reading->taken_at.utc);
     if (!accepted.value().left_alone.empty()) {
-        say(tr("The reading of %1 has a mean indicated pressure of %2 that somebody read, and it stays.").arg(day, where), true);
+        say(tr("The reading of %1 has a mean indicated pressure of %2 that somebody read, and it stays.")
+                .arg(day, where),
+            true);
         return false;
     }
-    say(accepted.value().same > 0 ? tr("The reading of %1 has it already.").arg(day)
-                                  : tr("%1 bar is the mean indicated pressure of %2 in the reading of %3 now.")
-                                        .arg(number_text(mean_indicated_bar, 2), where, day));
+    say(accepted.value().same > 0
+            ? tr("The reading of %1 has it already.").arg(day)
+            : tr("%1 bar is the mean indicated pressure of %2 in the reading of %3 now.")
+                  .arg(number_text(mean_indicated_bar, 2), where, day));
     workplace().changed();
     return true;
 }

@@ -18,7 +18,7 @@ namespace {
 
 using storage::AngleFrom;
 
-constexpr int across = 4; // titled boxes side by side
+constexpr int across = 4;                                       // titled boxes side by side
 constexpr std::array<double, 3> time_units = {1.0, 1e-3, 1e-6}; // seconds
 
 QString plain(double number)
@@ -31,7 +31,8 @@ std::optional<Problem> read_box(const QLineEdit& box, double& into)
 {
     const auto number = parse_number(to_std(box.text()));
     if (!number)
-        return Problem{number.error().kind, to_std(box.accessibleName()) + ": " + number.error().what_happened,
+        return Problem{number.error().kind,
+                       to_std(box.accessibleName()) + ": " + number.error().what_happened,
                        number.error().what_to_do};
     into = number.value();
     return std::nullopt;
@@ -46,12 +47,16 @@ LayoutBoxes::LayoutBoxes(QWidget* parent) : QWidget(parent), grid_(new QGridLayo
     grid_->setVerticalSpacing(2);
     for (int column = 0; column < across; ++column)
         grid_->setColumnStretch(column, 1);
-    separator_ = add_choice(0, 0, tr("Columns are divided by"), {tr("find out"), tr("comma"), tr("semicolon"), tr("tab"), tr("blanks")});
+    separator_ = add_choice(0, 0, tr("Columns are divided by"),
+                            {tr("find out"), tr("comma"), tr("semicolon"), tr("tab"), tr("blanks")});
     decimal_sign_ = add_choice(0, 1, tr("Decimal sign"), {tr("point"), tr("comma")});
     header_lines_ = new QSpinBox(this);
     header_lines_->setRange(0, 1000);
     header_lines_->setButtonSymbols(QAbstractSpinBox::NoButtons);
-    connect(header_lines_, &QSpinBox::valueChanged, this, [this] { if (!showing_) emit changed(); });
+    connect(header_lines_, &QSpinBox::valueChanged, this, [this] {
+        if (!showing_)
+            emit changed();
+    });
     add_titled(0, 2, tr("Lines above the numbers"), header_lines_);
     missing_ = add_line(0, 3, tr("Missing is written"), tr("nan, -"));
 
@@ -88,7 +93,10 @@ void LayoutBoxes::make_signal_boxes()
         label->setProperty("muted", true);
         line->addWidget(label);
         line->addWidget(point_[i]);
-        connect(point_[i], &QLineEdit::editingFinished, this, [this] { if (!showing_) emit changed(); });
+        connect(point_[i], &QLineEdit::editingFinished, this, [this] {
+            if (!showing_)
+                emit changed();
+        });
     }
     line->addStretch(1);
     grid_->addWidget(points_, 6, 0, 1, across);
@@ -126,7 +134,10 @@ QLineEdit* LayoutBoxes::add_line(int row, int column, const QString& title, cons
 {
     auto* box = new QLineEdit(this);
     box->setPlaceholderText(hint);
-    connect(box, &QLineEdit::editingFinished, this, [this] { if (!showing_) emit changed(); });
+    connect(box, &QLineEdit::editingFinished, this, [this] {
+        if (!showing_)
+            emit changed();
+    });
     add_titled(row, column, title, box);
     return box;
 }

@@ -26,7 +26,8 @@ Result<double> read(const QString& text, const char* what)
         return Problem{Problem::Kind::not_found, std::string(what) + " is not entered yet.", "Write it."};
     const auto number = parse_number(to_std(text));
     if (!number)
-        return Problem{number.error().kind, std::string(what) + ": " + number.error().what_happened, number.error().what_to_do};
+        return Problem{number.error().kind, std::string(what) + ": " + number.error().what_happened,
+                       number.error().what_to_do};
     return number;
 }
 
@@ -39,9 +40,12 @@ Result<IndicatorSpring> read_spring(const PaperCardText& text)
         return invalid_input("A spring scale of " + evenstroke::number_text(number.value()) + " cannot be.",
                              "Write the number stamped on the spring.");
     switch (text.spring_in) {
-    case 0: return spring_of_millimetres_per_bar(number.value());
-    case 1: return spring_of_bar_per_millimetre(number.value());
-    default: return spring_of_psi_per_inch(number.value());
+    case 0:
+        return spring_of_millimetres_per_bar(number.value());
+    case 1:
+        return spring_of_bar_per_millimetre(number.value());
+    default:
+        return spring_of_psi_per_inch(number.value());
     }
 }
 
@@ -69,9 +73,10 @@ Result<PaperCardResult> from_heights(const PaperCardText& text, IndicatorSpring 
     if (!pressure)
         return pressure.error();
     const double mean = sum / static_cast<double>(heights.size()), bar = in_bar(pressure.value());
-    return PaperCardResult{bar, PaperCard::tr("mean of %1 heights %2 mm · %3 = %4 bar")
-                                    .arg(heights.size())
-                                    .arg(to_qstring(short_number_text(mean)), spring_words(spring), number_text(bar, 2))};
+    return PaperCardResult{
+        bar, PaperCard::tr("mean of %1 heights %2 mm · %3 = %4 bar")
+                 .arg(heights.size())
+                 .arg(to_qstring(short_number_text(mean)), spring_words(spring), number_text(bar, 2))};
 }
 
 Result<PaperCardResult> from_area(const PaperCardText& text, IndicatorSpring spring)
@@ -84,13 +89,15 @@ Result<PaperCardResult> from_area(const PaperCardText& text, IndicatorSpring spr
         return length.error();
     const double scale = text.inches ? millimetres_an_inch : 1.0;
     const double wide = length.value() * scale, covered = area.value() * scale * scale;
-    const auto pressure = planimeter_pressure(Area(covered * millimetres(1.0) * millimetres(1.0)), millimetres(wide), spring);
+    const auto pressure =
+        planimeter_pressure(Area(covered * millimetres(1.0) * millimetres(1.0)), millimetres(wide), spring);
     if (!pressure)
         return pressure.error();
     const double bar = in_bar(pressure.value());
     return PaperCardResult{bar, PaperCard::tr("%1 mm² / %2 mm · %3 = %4 bar")
-                                    .arg(to_qstring(short_number_text(covered)), to_qstring(short_number_text(wide)),
-                                         spring_words(spring), number_text(bar, 2))};
+                                    .arg(to_qstring(short_number_text(covered)),
+                                         to_qstring(short_number_text(wide)), spring_words(spring),
+                                         number_text(bar, 2))};
 }
 
 } // namespace
@@ -100,13 +107,15 @@ Result<PaperCardResult> work_out(const PaperCardText& text)
     const auto spring = read_spring(text);
     if (!spring)
         return spring.error();
-    return text.heights.trimmed().isEmpty() ? from_area(text, spring.value()) : from_heights(text, spring.value());
+    return text.heights.trimmed().isEmpty() ? from_area(text, spring.value())
+                                            : from_heights(text, spring.value());
 }
 
 PaperCard::PaperCard(QWidget* parent)
-    : QWidget(parent), cylinder_(new QComboBox(this)), length_unit_(new QComboBox(this)), way_(new QComboBox(this)),
-      area_(new QLineEdit(this)), length_(new QLineEdit(this)), heights_(new QLineEdit(this)), spring_(new QLineEdit(this)),
-      spring_unit_(new QComboBox(this)), answer_(new QLabel(this)), put_(new QPushButton(tr("put into the reading"), this))
+    : QWidget(parent), cylinder_(new QComboBox(this)), length_unit_(new QComboBox(this)),
+      way_(new QComboBox(this)), area_(new QLineEdit(this)), length_(new QLineEdit(this)),
+      heights_(new QLineEdit(this)), spring_(new QLineEdit(this)), spring_unit_(new QComboBox(this)),
+      answer_(new QLabel(this)), put_(new QPushButton(tr("put into the reading"), this))
 {
     way_->addItems({tr("area"), tr("ten heights")});
     length_unit_->addItems({tr("mm², mm"), tr("in², in")});
@@ -165,7 +174,11 @@ void PaperCard::set_can_put(bool can)
 
 PaperCardText PaperCard::text() const
 {
-    PaperCardText text{area_->text(), length_->text(), {}, spring_->text(), length_unit_->currentIndex() == 1,
+    PaperCardText text{area_->text(),
+                       length_->text(),
+                       {},
+                       spring_->text(),
+                       length_unit_->currentIndex() == 1,
                        spring_unit_->currentIndex()};
     if (way_->currentIndex() == 1)
         text.heights = heights_->text();
@@ -183,7 +196,10 @@ void PaperCard::set_text(const PaperCardText& text)
     spring_->setText(text.spring);
 }
 
-QString PaperCard::answer() const { return answer_->text(); }
+QString PaperCard::answer() const
+{
+    return answer_->text();
+}
 
 void PaperCard::show_answer()
 {
@@ -200,7 +216,9 @@ void PaperCard::show_answer()
     const auto worked = begun ? work_out(text()) : Result<PaperCardResult>(Problem{});
     if (worked)
         bar_ = worked.value().bar;
-    answer_->setText(!begun ? QString() : worked ? worked.value().workings : to_qstring(worked.error().text()));
+    answer_->setText(!begun   ? QString()
+                     : worked ? worked.value().workings
+                              : to_qstring(worked.error().text()));
     answer_->setVisible(begun);
     put_->setEnabled(bar_.has_value() && can_put_);
 }

@@ -14,12 +14,13 @@ class QPushButton;
 
 namespace evenstroke {
 
-/// What is typed of a card drawn on paper. Area and length in the units chosen, or ten heights instead of the area.
+/// What is typed of a card drawn on paper. Area and length in the units chosen, or ten heights instead of the
+/// area.
 struct PaperCardText
 {
     QString area, length, heights, spring;
-    bool inches = false;         ///< areas in in², lengths and heights in in; else mm², mm
-    int spring_in = 0;           ///< 0: mm a bar, 1: bar a mm, 2: lb/in² an inch
+    bool inches = false; ///< areas in in², lengths and heights in in; else mm², mm
+    int spring_in = 0;   ///< 0: mm a bar, 1: bar a mm, 2: lb/in² an inch
 };
 struct PaperCardResult
 {
@@ -29,7 +30,8 @@ struct PaperCardResult
 /// @par Problems invalid_input, not_found: what is not typed, or cannot be
 Result<PaperCardResult> work_out(const PaperCardText& text);
 
-/// A card drawn by a pencil: area by the planimeter or ten heights, length and spring, to the mean indicated pressure.
+/// A card drawn by a pencil: area by the planimeter or ten heights, length and spring, to the mean indicated
+/// pressure.
 class PaperCard : public QWidget
 {
     Q_OBJECT

@@ -54,7 +54,8 @@ TraceColumns::TraceColumns(QWidget* parent) : QTableWidget(parent)
     setAccessibleName(tr("The first lines of the file"));
 }
 
-void TraceColumns::show_file(const std::string& text, const storage::TraceLayout& layout, const Engine& engine)
+void TraceColumns::show_file(const std::string& text, const storage::TraceLayout& layout,
+                             const Engine& engine)
 {
     const auto lines = fields_of(text, layout.separator);
     const int columns = columns_of(lines);
@@ -65,8 +66,9 @@ void TraceColumns::show_file(const std::string& text, const storage::TraceLayout
     using storage::AngleFrom;
     const bool several = layout.pressures.size() > 1;
     for (int column = 1; column <= columns; ++column) {
-        const auto found = std::find_if(layout.pressures.begin(), layout.pressures.end(),
-                                        [&](const storage::PressureColumn& one) { return one.column == column; });
+        const auto found =
+            std::find_if(layout.pressures.begin(), layout.pressures.end(),
+                         [&](const storage::PressureColumn& one) { return one.column == column; });
         Role role = unused;
         if (found != layout.pressures.end())
             role = pressure;
@@ -82,7 +84,8 @@ void TraceColumns::show_file(const std::string& text, const storage::TraceLayout
         setRowHeight(0, 28);
 }
 
-void TraceColumns::fill_lines(const std::vector<std::vector<std::string>>& lines, int columns, int header_lines)
+void TraceColumns::fill_lines(const std::vector<std::vector<std::string>>& lines, int columns,
+                              int header_lines)
 {
     for (int row = 0; row < static_cast<int>(lines.size()); ++row) {
         const auto& line = lines[static_cast<std::size_t>(row)];

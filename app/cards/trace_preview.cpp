@@ -33,9 +33,11 @@ void TracePreview::changeEvent(QEvent* event)
     QWidget::changeEvent(event);
 }
 
-void TracePreview::add_line(const std::vector<double>& x, const std::vector<double>& y, const QColor& colour, int style)
+void TracePreview::add_line(const std::vector<double>& x, const std::vector<double>& y, const QColor& colour,
+                            int style)
 {
-    QCPCurve* const line = new QCPCurve(plot_->xAxis, plot_->yAxis); // several cycles run over the same angles
+    QCPCurve* const line =
+        new QCPCurve(plot_->xAxis, plot_->yAxis); // several cycles run over the same angles
     line->setPen(theme().pen(colour, style));
     line->setData(QVector<double>(x.begin(), x.end()), QVector<double>(y.begin(), y.end()));
 }

@@ -24,7 +24,8 @@ protected:
 
 private:
     void draw();
-    void add_line(const std::vector<double>& x, const std::vector<double>& y, const QColor& colour, int style);
+    void add_line(const std::vector<double>& x, const std::vector<double>& y, const QColor& colour,
+                  int style);
 
     QCustomPlot* plot_;
     std::optional<FileTrace> trace_;

@@ -34,7 +34,8 @@ QString trace_results_text(const FileTrace& trace)
         parts << tr_("MIP %1 bar").arg(mean);
     if (const QString most = estimate_text(card[CardResult::maximum_pressure], 1); !most.isEmpty()) {
         const QString at = estimate_text(card[CardResult::maximum_pressure_angle], 1);
-        parts << (at.isEmpty() ? tr_("maximum %1 bar abs").arg(most) : tr_("maximum %1 bar abs at %2°").arg(most, at));
+        parts << (at.isEmpty() ? tr_("maximum %1 bar abs").arg(most)
+                               : tr_("maximum %1 bar abs at %2°").arg(most, at));
     }
     return parts.isEmpty() ? tr_("The evaluation gives no result.") : parts.join(QStringLiteral(", "));
 }

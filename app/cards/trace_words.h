@@ -7,7 +7,8 @@
 
 namespace evenstroke {
 
-/// "MIP 16.23 ± 0.08 bar, maximum 142.1 ± 0.2 bar abs at 12.3°": what the evaluation says of a trace in one line.
+/// "MIP 16.23 ± 0.08 bar, maximum 142.1 ± 0.2 bar abs at 12.3°": what the evaluation says of a trace in one
+/// line.
 QString trace_results_text(const FileTrace& trace);
 /// The results, what was left out, and what the evaluation remarks, one paragraph each.
 QString trace_sentences(const FileTrace& trace);

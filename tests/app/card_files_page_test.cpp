@@ -30,8 +30,10 @@ protected:
     /// A diagram of a kind: compression and expansion, turned by a smooth combustion.
     static double pressure(double angle)
     {
-        const double closed = 3.2 * std::pow(16.0 / (1.0 + 7.5 * (1.0 - std::cos(angle * M_PI / 180.0))), 1.35);
-        return std::max(3.2, angle > 0.0 ? closed * (1.0 + 0.45 * (1.0 - std::exp(-angle * angle / 300.0))) : closed);
+        const double closed =
+            3.2 * std::pow(16.0 / (1.0 + 7.5 * (1.0 - std::cos(angle * M_PI / 180.0))), 1.35);
+        return std::max(3.2, angle > 0.0 ? closed * (1.0 + 0.45 * (1.0 - std::exp(-angle * angle / 300.0)))
+                                         : closed);
     }
     QString write(const QString& name, double scale = 1.0)
     {
@@ -61,7 +63,10 @@ protected:
         wait();
     }
     QString words(const char* label) { return page_->findChild<QLabel*>(QString::fromLatin1(label))->text(); }
-    QPushButton& button(const char* name) { return *page_->findChild<QPushButton*>(QString::fromLatin1(name)); }
+    QPushButton& button(const char* name)
+    {
+        return *page_->findChild<QPushButton*>(QString::fromLatin1(name));
+    }
     std::vector<storage::CardEntry> cards()
     {
         return storage::CardStore(*workplace_->history()).list(engine().toStdString()).value();
@@ -93,7 +98,8 @@ TEST_F(CardFilesDesk, ProposesALayoutAndWaitsForTheUnit)
     ASSERT_EQ(page_->traces().size(), 1U);
     EXPECT_EQ(page_->traces().front().cylinder, 1);
     EXPECT_EQ(page_->traces().front().trace->crank_angle_deg.size(), 720U);
-    EXPECT_NEAR(page_->traces().front().trace->pressure_bar.at(100), pressure(-130.0), 1e-3) << "four decimals of a megapascal";
+    EXPECT_NEAR(page_->traces().front().trace->pressure_bar.at(100), pressure(-130.0), 1e-3)
+        << "four decimals of a megapascal";
     EXPECT_TRUE(words("problem").isEmpty());
     EXPECT_TRUE(button("take_button").isEnabled()) << words("into").toStdString();
     EXPECT_TRUE(words("sentences").contains(QStringLiteral("MIP"))) << words("sentences").toStdString();
@@ -124,18 +130,21 @@ TEST_F(CardFilesDesk, StoresNothingWhereOneCardContradicts)
     page_->add_files({write(QStringLiteral("cyl1.csv")), write(QStringLiteral("cyl2.csv"), 1.05)});
     wait();
     EXPECT_FALSE(page_->take_in(second_));
-    EXPECT_TRUE(page_->outcome().contains(QStringLiteral("another card of cylinder 2"))) << page_->outcome().toStdString();
+    EXPECT_TRUE(page_->outcome().contains(QStringLiteral("another card of cylinder 2")))
+        << page_->outcome().toStdString();
     EXPECT_EQ(cards().size(), 1U);
 }
 
 TEST_F(CardFilesDesk, LeavesOutWhatIsNoCardAndSaysSo)
 {
-    page_->add_files({write(QStringLiteral("cyl1.csv")), write_text(QStringLiteral("letter.txt"), "Dear Sir\nno card\n"),
+    page_->add_files({write(QStringLiteral("cyl1.csv")),
+                      write_text(QStringLiteral("letter.txt"), "Dear Sir\nno card\n"),
                       write(QStringLiteral("from the port.csv"))});
     choose_megapascal();
     ASSERT_EQ(page_->traces().size(), 3U);
     EXPECT_TRUE(page_->traces()[1].problem.has_value());
-    EXPECT_TRUE(words("into").contains(QStringLiteral("2 cards are left out"))) << words("into").toStdString();
+    EXPECT_TRUE(words("into").contains(QStringLiteral("2 cards are left out")))
+        << words("into").toStdString();
     page_->set_cylinder(2, 1);
     EXPECT_FALSE(button("take_button").isEnabled()) << "two of cylinder 1";
     page_->set_cylinder(2, 3);
@@ -161,8 +170,8 @@ TEST_F(CardFilesDesk, WorksOutAPaperCardAndPutsItIntoTheReading)
     keep_picture(*page_, QStringLiteral("card_files_paper"));
     ASSERT_TRUE(page_->put_paper_card(3, worked.value().bar, second_)) << page_->outcome().toStdString();
     const auto readings = storage::ReadingStore(*workplace_->history()).load(engine().toStdString()).value();
-    const Value* const value =
-        readings.back().find(find_quantity("mean_indicated_pressure", Place::Kind::cylinder).value(), Place::cylinder(3));
+    const Value* const value = readings.back().find(
+        find_quantity("mean_indicated_pressure", Place::Kind::cylinder).value(), Place::cylinder(3));
     ASSERT_NE(value, nullptr);
     EXPECT_EQ(value->origin, Origin::card);
     EXPECT_EQ(value->typed, "20.238");
@@ -170,7 +179,8 @@ TEST_F(CardFilesDesk, WorksOutAPaperCardAndPutsItIntoTheReading)
 
 TEST(PaperCardSum, TakesInchesPoundsAndHeights)
 {
-    // 2.6 in² over 3.6 in with a 60 lb spring: 43.3 lb/in² (published in the public-domain book Steam Engines)
+    // 2.6 in² over 3.6 in with a 60 lb spring: 43.3 lb/in² (published in the public-domain book Steam
+    // Engines)
     PaperCardText text;
     text.area = QStringLiteral("2.6");
     text.length = QStringLiteral("3.6");

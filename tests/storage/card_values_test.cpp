@@ -15,10 +15,10 @@ class CardValues : public StorageTest
 protected:
     CardValues()
     {
-        write_engine(QStringLiteral("one"),
-                     header + "2029-01,2029-01-10T08:00Z,maximum_pressure,1,141.5,bar\n"
-                              "2029-01,2029-01-10T08:00Z,maximum_pressure,3,,\n"
-                              "2029-01,2029-01-10T08:00Z,speed,,95,r/min\n");
+        write_engine(QStringLiteral("one"), header +
+                                                "2029-01,2029-01-10T08:00Z,maximum_pressure,1,141.5,bar\n"
+                                                "2029-01,2029-01-10T08:00Z,maximum_pressure,3,,\n"
+                                                "2029-01,2029-01-10T08:00Z,speed,,95,r/min\n");
         take_folder(*history_, QStringLiteral("one"));
         engine_ = only_engine(*history_);
         reading_ = closed().id;
@@ -29,7 +29,8 @@ protected:
                                    std::optional<PressureKind> kind = std::nullopt)
     {
         const QuantityId id = find_quantity(name, Place::Kind::cylinder).value();
-        return {id, Place::cylinder(cylinder), number, {quantity(id).unit, kind.value_or(PressureKind::none)}};
+        return {
+            id, Place::cylinder(cylinder), number, {quantity(id).unit, kind.value_or(PressureKind::none)}};
     }
     void expect_sound() { EXPECT_TRUE(value_of_result(verify(*history_)).sound()); }
 
@@ -64,7 +65,8 @@ TEST_F(CardValues, FillWhatIsEmptyAndLeaveWhatWasRead)
 TEST_F(CardValues, AreCorrectionsInAClosedReadingWithOneRowOfTheTrail)
 {
     value_of_result(store().accept_card_values(
-        reading_, {from_card("maximum_pressure", 2, 142.0), from_card("maximum_pressure", 4, 141.0)}, second_));
+        reading_, {from_card("maximum_pressure", 2, 142.0), from_card("maximum_pressure", 4, 141.0)},
+        second_));
     const auto corrections = value_of_result(store().corrections(reading_));
     ASSERT_EQ(corrections.size(), 2U);
     EXPECT_EQ(corrections.front().by.who, "B. Second");
@@ -74,17 +76,20 @@ TEST_F(CardValues, AreCorrectionsInAClosedReadingWithOneRowOfTheTrail)
     const auto trail = value_of_result(audit_entries(*history_, reading_));
     ASSERT_EQ(trail.size(), 2U);
     EXPECT_EQ(trail.front().action, "corrected from cards");
-    EXPECT_NE(trail.front().detail.find("maximum_pressure of cylinder 2: not read -> 142 bar"), std::string::npos)
+    EXPECT_NE(trail.front().detail.find("maximum_pressure of cylinder 2: not read -> 142 bar"),
+              std::string::npos)
         << trail.front().detail;
 }
 
 TEST_F(CardValues, TakeThePlaceOfAnEarlierCards)
 {
     value_of_result(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_));
-    const auto again = value_of_result(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_));
+    const auto again = value_of_result(
+        store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_));
     EXPECT_EQ(again.same, 1);
     EXPECT_EQ(value_of_result(store().corrections(reading_)).size(), 1U) << "nothing changed";
-    const auto better = value_of_result(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 143.0)}, second_));
+    const auto better = value_of_result(
+        store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 143.0)}, second_));
     EXPECT_EQ(better.corrected, 1);
     const auto corrections = value_of_result(store().corrections(reading_));
     ASSERT_EQ(corrections.size(), 2U);
@@ -101,7 +106,10 @@ TEST_F(CardValues, GiveWayToWhatIsReadLater)
     expect_done(store().correct(reading_, read, chief_));
     const Value* const now = find_value(closed(), "maximum_pressure", Place::cylinder(2));
     EXPECT_EQ(now->origin, Origin::read);
-    EXPECT_EQ(value_of_result(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_)).left_alone.size(), 1U);
+    EXPECT_EQ(value_of_result(
+                  store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_))
+                  .left_alone.size(),
+              1U);
     expect_sound();
 }
 
@@ -114,15 +122,18 @@ TEST_F(CardValues, MakeStoredJudgementsStale)
 
 TEST_F(CardValues, StandInADraftLikeTypedOnes)
 {
-    const Reading draft = value_of_result(store().make_draft(Owner::engine(engine_), "2029-02",
-                                                             parse_time("2029-02-10T08:00Z").value(), chief_));
+    const Reading draft = value_of_result(store().make_draft(
+        Owner::engine(engine_), "2029-02", parse_time("2029-02-10T08:00Z").value(), chief_));
     Value half_typed = *find_value(closed(), "maximum_pressure", Place::cylinder(1));
     half_typed.typed = "14x";
     half_typed.number.reset();
     half_typed.value_si.reset();
     expect_done(store().save_value(draft.id, half_typed));
-    const auto accepted = value_of_result(store().accept_card_values(
-        draft.id, {from_card("maximum_pressure", 1, 141.0), from_card("maximum_pressure", 2, 142.0, PressureKind::absolute)}, second_));
+    const auto accepted = value_of_result(
+        store().accept_card_values(draft.id,
+                                   {from_card("maximum_pressure", 1, 141.0),
+                                    from_card("maximum_pressure", 2, 142.0, PressureKind::absolute)},
+                                   second_));
     EXPECT_EQ(accepted.added, 1);
     EXPECT_EQ(accepted.left_alone.size(), 1U) << "somebody is typing there";
     EXPECT_TRUE(value_of_result(store().corrections(draft.id)).empty());
@@ -138,23 +149,37 @@ TEST_F(CardValues, StandInADraftLikeTypedOnes)
 
 TEST_F(CardValues, AreTakenAllOrNone)
 {
-    EXPECT_FALSE(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0), from_card("maximum_pressure", 4, -5.0, PressureKind::absolute)}, second_).has_value());
-    EXPECT_FALSE(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0), from_card("maximum_pressure", 4, std::nan(""))}, second_).has_value());
+    EXPECT_FALSE(store()
+                     .accept_card_values(reading_,
+                                         {from_card("maximum_pressure", 2, 142.0),
+                                          from_card("maximum_pressure", 4, -5.0, PressureKind::absolute)},
+                                         second_)
+                     .has_value());
+    EXPECT_FALSE(store()
+                     .accept_card_values(reading_,
+                                         {from_card("maximum_pressure", 2, 142.0),
+                                          from_card("maximum_pressure", 4, std::nan(""))},
+                                         second_)
+                     .has_value());
     ValueFromCard wrong = from_card("maximum_pressure", 2, 142.0);
     wrong.unit = find_unit("degC").value();
     EXPECT_FALSE(store().accept_card_values(reading_, {wrong}, second_).has_value());
-    EXPECT_FALSE(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, {"", ""}).has_value());
+    EXPECT_FALSE(store()
+                     .accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, {"", ""})
+                     .has_value());
     EXPECT_FALSE(store().accept_card_values("no such reading", {}, second_).has_value());
     EXPECT_EQ(find_value(closed(), "maximum_pressure", Place::cylinder(2)), nullptr);
     expect_done(store().withdraw(reading_, chief_));
-    EXPECT_FALSE(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_).has_value());
+    EXPECT_FALSE(
+        store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_).has_value());
 }
 
 TEST_F(CardValues, AreHandedOutAndTakenInWithTheirOrigin)
 {
     const std::string vessel = value_of_result(VesselStore(*history_).vessels()).front().id;
     value_of_result(hand_out(*history_, vessel, path(QStringLiteral("plain"))));
-    EXPECT_FALSE(read(QStringLiteral("plain/main-engine/readings.csv")).contains("origin")) << "only where there is one";
+    EXPECT_FALSE(read(QStringLiteral("plain/main-engine/readings.csv")).contains("origin"))
+        << "only where there is one";
     value_of_result(store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_));
     value_of_result(hand_out(*history_, vessel, path(QStringLiteral("out"))));
     const QByteArray written = read(QStringLiteral("out/main-engine/readings.csv"));
@@ -173,8 +198,9 @@ TEST_F(CardValues, AreHandedOutAndTakenInWithTheirOrigin)
 
 TEST_F(CardValues, OfAnUnknownOriginAreRefusedInWords)
 {
-    write_engine(QStringLiteral("two"), "reading,taken_at,quantity,cylinder,value,unit,origin\n"
-                                        "2029-03,2029-03-10T08:00Z,maximum_pressure,1,141.5,bar,gauge glass\n");
+    write_engine(QStringLiteral("two"),
+                 "reading,taken_at,quantity,cylinder,value,unit,origin\n"
+                 "2029-03,2029-03-10T08:00Z,maximum_pressure,1,141.5,bar,gauge glass\n");
     const TakeReport report = take_folder(*history_, QStringLiteral("two"));
     ASSERT_EQ(report.folders.front().refused.size(), 1U);
     EXPECT_NE(report.folders.front().refused.front().reason.find("gauge glass"), std::string::npos);

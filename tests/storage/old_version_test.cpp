@@ -19,7 +19,8 @@ namespace {
 class OldVersion : public StorageTest
 {
 protected:
-    /// A file as an earlier version wrote it: its own tables, and of a filled history the columns that it knew.
+    /// A file as an earlier version wrote it: its own tables, and of a filled history the columns that it
+    /// knew.
     void write_old(int version)
     {
         QSqlDatabase old = QSqlDatabase::addDatabase(QStringLiteral("QSQLITE"), QStringLiteral("old"));
@@ -28,9 +29,12 @@ protected:
         expect_done(migrate(old, 0, version));
         run(old, QStringLiteral("PRAGMA foreign_keys = OFF"));
         run(old, QStringLiteral("ATTACH '%1' AS filled").arg(path(QStringLiteral("ship.evenstroke"))));
-        for (const QString& table : first_columns(old, QStringLiteral("SELECT name FROM main.sqlite_master WHERE type = 'table'"))) {
+        for (const QString& table :
+             first_columns(old, QStringLiteral("SELECT name FROM main.sqlite_master WHERE type = 'table'"))) {
             const QString columns =
-                first_columns(old, QStringLiteral("SELECT name FROM pragma_table_info('%1', 'main')").arg(table)).join(QLatin1Char(','));
+                first_columns(old,
+                              QStringLiteral("SELECT name FROM pragma_table_info('%1', 'main')").arg(table))
+                    .join(QLatin1Char(','));
             run(old, QStringLiteral("INSERT INTO main.%1 (%2) SELECT %2 FROM filled.%1").arg(table, columns));
         }
     }
@@ -94,8 +98,8 @@ TEST_F(OldVersion, ThreeIsBroughtUpToDateAndStaysSound)
 TEST_F(OldVersion, HashesOfValuesThatWereReadStayAsTheTrailHasThem)
 {
     const auto history = memory();
-    const ReadingRow reading{1, "r", "2029-01", {TimePoint(std::chrono::seconds(1'800'000'000)), 60},
-                             ReadingState::closed, {}};
+    const ReadingRow reading{
+        1, "r", "2029-01", {TimePoint(std::chrono::seconds(1'800'000'000)), 60}, ReadingState::closed, {}};
     ValueRow row;
     row.quantity_key = 999; // no quantity of this file: hashed as "?"
     row.place = 2004;

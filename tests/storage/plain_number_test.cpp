@@ -79,7 +79,8 @@ TEST(PlainNumber, StopsBehindTheNumber)
 
 TEST(PlainNumber, LeavesWhatNeedsMoreCare)
 {
-    for (const char* text : {"", "-", ".", "-.", "+1", "1e3", "1.5E-3", "nan", "abc", "9007199254740993", "1234567890123456789012"})
+    for (const char* text : {"", "-", ".", "-.", "+1", "1e3", "1.5E-3", "nan", "abc", "9007199254740993",
+                             "1234567890123456789012"})
         EXPECT_FALSE(read(text).taken) << text;
 }
 

@@ -12,7 +12,8 @@ class BadTraces : public StorageTest
 protected:
     Problem refused(const QByteArray& text, const TraceLayout& layout = in_bar())
     {
-        const auto read = read_traces_text({text.constData(), static_cast<std::size_t>(text.size())}, "card.txt", layout, two_stroke());
+        const auto read = read_traces_text({text.constData(), static_cast<std::size_t>(text.size())},
+                                           "card.txt", layout, two_stroke());
         EXPECT_FALSE(read.has_value()) << text.left(60).toStdString();
         const Problem problem = read ? Problem{} : read.error();
         EXPECT_NE(problem.what_happened.find("card.txt"), std::string::npos) << problem.what_happened;
@@ -73,8 +74,10 @@ TEST_F(BadTraces, WhoseAnglesStandOrFall)
 
 TEST_F(BadTraces, WithoutAnyPressure)
 {
-    EXPECT_TRUE(says(refused("angle,p\n" + rows(-180.0, 180.0, [](double a) { return number(a) + ",0"; })), "0 bar"));
-    EXPECT_TRUE(says(refused("angle,p\n" + rows(-180.0, 180.0, [](double a) { return number(a) + ",nan"; })), "Column 2"));
+    EXPECT_TRUE(
+        says(refused("angle,p\n" + rows(-180.0, 180.0, [](double a) { return number(a) + ",0"; })), "0 bar"));
+    EXPECT_TRUE(says(refused("angle,p\n" + rows(-180.0, 180.0, [](double a) { return number(a) + ",nan"; })),
+                     "Column 2"));
 }
 
 TEST_F(BadTraces, InAnotherUnitThanChosen)
@@ -122,9 +125,14 @@ TEST_F(BadTraces, OfALayoutThatCannotBe)
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.pressures = {{4, std::nullopt}}; }));
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.angle_column = 0; }));
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.cycle_column = 9; }));
-    EXPECT_TRUE(problem([](TraceLayout& layout) { layout.calibration = TwoPointCalibration{1.0, 0.0, 1.0, 5.0}; }));
+    EXPECT_TRUE(problem([](TraceLayout& layout) {
+        layout.calibration = TwoPointCalibration{1.0, 0.0, 1.0, 5.0};
+    }));
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.angle_from = AngleFrom::time; }));
-    EXPECT_TRUE(problem([](TraceLayout& layout) { layout.angle_from = AngleFrom::sample_number; layout.counts_per_revolution = 0.0; }));
+    EXPECT_TRUE(problem([](TraceLayout& layout) {
+        layout.angle_from = AngleFrom::sample_number;
+        layout.counts_per_revolution = 0.0;
+    }));
     EXPECT_TRUE(problem([](TraceLayout& layout) { layout.dead_centre_at = std::nan(""); }));
 }
 
@@ -148,7 +156,8 @@ TEST_F(BadTraces, OfRandomBytesAreNeverTaken)
 
 TEST_F(BadTraces, ThatAreNotThere)
 {
-    EXPECT_EQ(read_traces(path(QStringLiteral("none.txt")), in_bar(), two_stroke()).error().kind, Problem::Kind::not_found);
+    EXPECT_EQ(read_traces(path(QStringLiteral("none.txt")), in_bar(), two_stroke()).error().kind,
+              Problem::Kind::not_found);
     EXPECT_FALSE(first_lines_of(path(QStringLiteral("none.txt")), 5).has_value());
 }
 

@@ -6,9 +6,10 @@ namespace {
 
 TEST(TraceGuess, FindsColumnsByTheirTitles)
 {
-    const auto proposed = guess_layout("Card of 12 March\n"
-                                       "Crank angle [deg];Cyl 1 [bar];Cyl 2 [bar];cycle\n"
-                                       "-180,0;3,25;3,30;1\n-179,5;3,26;3,31;1\n-179,0;3,27;3,33;1\n-178,5;3,28;3,32;1\n");
+    const auto proposed =
+        guess_layout("Card of 12 March\n"
+                     "Crank angle [deg];Cyl 1 [bar];Cyl 2 [bar];cycle\n"
+                     "-180,0;3,25;3,30;1\n-179,5;3,26;3,31;1\n-179,0;3,27;3,33;1\n-178,5;3,28;3,32;1\n");
     EXPECT_EQ(proposed.columns, 4);
     EXPECT_EQ(proposed.layout.separator, ColumnSeparator::semicolon);
     EXPECT_EQ(proposed.layout.decimal_sign, ',');
@@ -55,7 +56,8 @@ TEST(TraceGuess, SeesTimesFallingAnglesAndFilesOfPressuresOnly)
 
 TEST(TraceGuess, SaysLittleOfWhatIsNoTable)
 {
-    for (const char* text : {"", "\n\n", "Dear Sir,\n\nthe card follows.\n", ";;;;\n;;;;\n", "\xff\xfe\xfd"}) {
+    for (const char* text :
+         {"", "\n\n", "Dear Sir,\n\nthe card follows.\n", ";;;;\n;;;;\n", "\xff\xfe\xfd"}) {
         const auto proposed = guess_layout(text);
         EXPECT_EQ(proposed.columns, 0) << text;
         EXPECT_EQ(proposed.layout.pressures.size(), 1U);

@@ -10,7 +10,8 @@ class Traces : public StorageTest
 protected:
     ReadTrace one(const QByteArray& text, const TraceLayout& layout, const Engine& engine = two_stroke())
     {
-        const auto read = value_of_result(read_traces_text({text.constData(), static_cast<std::size_t>(text.size())}, "card.txt", layout, engine));
+        const auto read = value_of_result(read_traces_text(
+            {text.constData(), static_cast<std::size_t>(text.size())}, "card.txt", layout, engine));
         EXPECT_EQ(read.size(), 1U);
         return read.front();
     }
@@ -20,7 +21,8 @@ protected:
         ASSERT_EQ(trace.crank_angle_deg.size(), static_cast<std::size_t>(2.0 * period));
         EXPECT_TRUE(trace.cycle.empty());
         for (std::size_t i = 0; i < trace.crank_angle_deg.size(); ++i) {
-            ASSERT_NEAR(trace.pressure_bar[i], hump(trace.crank_angle_deg[i]), tolerance) << trace.crank_angle_deg[i];
+            ASSERT_NEAR(trace.pressure_bar[i], hump(trace.crank_angle_deg[i]), tolerance)
+                << trace.crank_angle_deg[i];
             if (i > 0) {
                 ASSERT_NEAR(trace.crank_angle_deg[i] - trace.crank_angle_deg[i - 1], 0.5, tolerance);
             }
@@ -39,11 +41,13 @@ TEST_F(Traces, AreReadWhateverTheSeparatorAndDecimalSign)
         char decimal;
     };
     using enum ColumnSeparator;
-    for (const Writing& writing : {Writing{comma, ',', '.'}, {semicolon, ';', ','}, {tab, '\t', ','}, {space, ' ', '.'}}) {
-        const QByteArray text = "angle" + QByteArray(1, writing.sign) + "p\r\n" + rows(-180.0, 180.0, [&](double angle) {
-            QByteArray row = number(angle) + "|" + number(hump(angle)) + "\r";
-            return row.replace('.', writing.decimal).replace('|', writing.sign);
-        });
+    for (const Writing& writing :
+         {Writing{comma, ',', '.'}, {semicolon, ';', ','}, {tab, '\t', ','}, {space, ' ', '.'}}) {
+        const QByteArray text =
+            "angle" + QByteArray(1, writing.sign) + "p\r\n" + rows(-180.0, 180.0, [&](double angle) {
+                QByteArray row = number(angle) + "|" + number(hump(angle)) + "\r";
+                return row.replace('.', writing.decimal).replace('|', writing.sign);
+            });
         TraceLayout layout = in_bar();
         layout.decimal_sign = writing.decimal;
         for (const ColumnSeparator chosen : {writing.separator, automatic}) {
@@ -55,9 +59,10 @@ TEST_F(Traces, AreReadWhateverTheSeparatorAndDecimalSign)
 
 TEST_F(Traces, HaveOneTraceAPressureColumn)
 {
-    const QByteArray text = "2031 instrument\nangle,A,B,cycle\n" + rows(-180.0, 180.0, [&](double angle) {
-        return number(angle) + "," + number(hump(angle, 1)) + "," + number(hump(angle, 5)) + ",7";
-    });
+    const QByteArray text =
+        "2031 instrument\nangle,A,B,cycle\n" + rows(-180.0, 180.0, [&](double angle) {
+            return number(angle) + "," + number(hump(angle, 1)) + "," + number(hump(angle, 5)) + ",7";
+        });
     TraceLayout layout = in_bar();
     layout.header_lines = 2;
     layout.cycle_column = 4;
@@ -76,20 +81,28 @@ TEST_F(Traces, ComeFromAnyAngleTheFileStartsAt)
     layout.header_lines = 0;
     // 0 to 360 with the firing dead centre at 180, then with it at 0, then counted backwards.
     layout.dead_centre_at = 180.0;
-    expect_whole(one(rows(0.0, 360.0, [](double a) { return number(a) + "," + number(hump(a - 180.0)); }), layout).trace);
+    expect_whole(
+        one(rows(0.0, 360.0, [](double a) { return number(a) + "," + number(hump(a - 180.0)); }), layout)
+            .trace);
     layout.dead_centre_at = 0.0;
-    expect_whole(one(rows(0.0, 360.0, [](double a) { return number(a) + "," + number(hump(a)); }), layout).trace);
+    expect_whole(
+        one(rows(0.0, 360.0, [](double a) { return number(a) + "," + number(hump(a)); }), layout).trace);
     layout.backwards = true;
-    expect_whole(one(rows(0.0, 360.0, [](double a) { return number(360.0 - a) + "," + number(hump(a)); }), layout).trace);
+    expect_whole(
+        one(rows(0.0, 360.0, [](double a) { return number(360.0 - a) + "," + number(hump(a)); }), layout)
+            .trace);
 }
 
 TEST_F(Traces, HoldAPlaceOnceThatBothEndsOfTheRecordHave)
 {
     TraceLayout layout = in_bar();
     layout.header_lines = 0;
-    const ReadTrace read = one(rows(0.0, 360.5, [](double a) { return number(a) + "," + number(a == 360.0 ? 95.0 : hump(a)); }), layout);
+    const ReadTrace read =
+        one(rows(0.0, 360.5, [](double a) { return number(a) + "," + number(a == 360.0 ? 95.0 : hump(a)); }),
+            layout);
     EXPECT_EQ(read.trace.crank_angle_deg.size(), 720U);
-    EXPECT_NEAR(read.trace.pressure_bar[359], 94.5, 1e-4) << "the mean of 94 and 95; the period begins at -179.5";
+    EXPECT_NEAR(read.trace.pressure_bar[359], 94.5, 1e-4)
+        << "the mean of 94 and 95; the period begins at -179.5";
 }
 
 TEST_F(Traces, TakeTheAngleFromTheNumberOfTheSample)
@@ -114,7 +127,12 @@ TEST_F(Traces, TakeTheAngleFromTimesAtEvenSpeed)
     layout.speed = 100.0; // 0.6 degrees a millisecond
     layout.first_angle = -180.0;
     // The times carry four decimals of a millisecond: 6e-5 degrees, below 1e-3 bar on the steepest part
-    expect_whole(one(rows(-180.0, 180.0, [](double a) { return number(5000.0 + (a + 180.0) / 0.6) + "," + number(hump(a)); }), layout).trace, 360.0, 1e-3);
+    expect_whole(
+        one(rows(-180.0, 180.0,
+                 [](double a) { return number(5000.0 + (a + 180.0) / 0.6) + "," + number(hump(a)); }),
+            layout)
+            .trace,
+        360.0, 1e-3);
 }
 
 TEST_F(Traces, CountCyclesThatFollowEachOther)
@@ -140,7 +158,8 @@ TEST_F(Traces, OfAFourStrokeHaveTwoRevolutions)
     TraceLayout layout = in_bar();
     layout.header_lines = 0;
     layout.dead_centre_at = 360.0;
-    const ReadTrace read = one(rows(0.0, 720.0, [](double a) { return number(a) + "," + number(hump(a - 360.0)); }), layout, engine);
+    const ReadTrace read = one(
+        rows(0.0, 720.0, [](double a) { return number(a) + "," + number(hump(a - 360.0)); }), layout, engine);
     EXPECT_EQ(read.trace.crank_angle_deg.size(), 1440U);
     EXPECT_EQ(read.trace.crank_angle_deg.front(), -360.0);
     EXPECT_NEAR(read.trace.pressure_bar[720], 94.0, 1e-4);
@@ -152,12 +171,19 @@ TEST_F(Traces, AreBroughtToBarFromAnyUnitAndSignal)
     layout.header_lines = 0;
     layout.unit = find_unit("MPa").value().id;
     layout.gauge = true;
-    const ReadTrace read = one(rows(-180.0, 180.0, [](double a) { return number(a) + "," + QByteArray::number(hump(a) / 10.0, 'f', 6); }), layout);
+    const ReadTrace read =
+        one(rows(-180.0, 180.0,
+                 [](double a) { return number(a) + "," + QByteArray::number(hump(a) / 10.0, 'f', 6); }),
+            layout);
     EXPECT_TRUE(read.trace.gauge);
     expect_whole(read.trace);
     layout.unit = find_unit("bar").value().id;
     layout.calibration = TwoPointCalibration{1.0, 0.0, 5.0, 250.0}; // volts: 62.5 bar a volt
-    expect_whole(one(rows(-180.0, 180.0, [](double a) { return number(a) + "," + QByteArray::number(1.0 + hump(a) / 62.5, 'f', 8); }), layout).trace);
+    expect_whole(
+        one(rows(-180.0, 180.0,
+                 [](double a) { return number(a) + "," + QByteArray::number(1.0 + hump(a) / 62.5, 'f', 8); }),
+            layout)
+            .trace);
 }
 
 TEST_F(Traces, LeaveOutSamplesThatAreMissing)
@@ -165,9 +191,15 @@ TEST_F(Traces, LeaveOutSamplesThatAreMissing)
     TraceLayout layout = in_bar();
     layout.header_lines = 0;
     layout.missing_words = {"NaN", "lost"};
-    const ReadTrace read = one(rows(-180.0, 180.0, [](double a) {
-        return number(a) + "," + (a == -100.0 ? "nan" : a == 100.0 ? " Lost" : a == 150.0 ? "" : number(hump(a)));
-    }), layout);
+    const ReadTrace read = one(rows(-180.0, 180.0,
+                                    [](double a) {
+                                        return number(a) + "," +
+                                               (a == -100.0  ? "nan"
+                                                : a == 100.0 ? " Lost"
+                                                : a == 150.0 ? ""
+                                                             : number(hump(a)));
+                                    }),
+                               layout);
     EXPECT_EQ(read.missing, 3);
     EXPECT_EQ(read.trace.crank_angle_deg.size(), 717U);
 }
