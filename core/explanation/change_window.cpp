@@ -5,6 +5,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 namespace evenstroke {
 namespace {
@@ -46,6 +47,15 @@ struct Estimate
     std::size_t count = 0;
 };
 
+/// What an odd value is pulled in to: the middle; of two values the one nearer to the level before, since either may
+/// be the odd one.
+double centre_of(std::vector<double> values)
+{
+    if (values.size() == 2)
+        return std::abs(values[0]) < std::abs(values[1]) ? values[0] : values[1];
+    return drift::median_in_place(values);
+}
+
 std::optional<Estimate> estimate_step(const QuantitySeries& series, const Level& level, std::size_t onset)
 {
     std::vector<double> values;
@@ -54,31 +64,43 @@ std::optional<Estimate> estimate_step(const QuantitySeries& series, const Level&
             values.push_back(*series.values[i] - level.mean);
     if (values.empty())
         return std::nullopt;
-    std::vector<double> copy = values;
-    const double middle = drift::median_in_place(copy), count = static_cast<double>(values.size());
+    const double centre = centre_of(values), count = static_cast<double>(values.size());
     double sum = 0.0;
     for (const double value : values)
-        sum += values.size() > 2 ? drift::pull_in(value, middle, pull_to * series.noise) : value;
+        sum += drift::pull_in(value, centre, pull_to * series.noise);
     return Estimate{sum / count, 1.0 / count + 1.0 / level.count, values.size()};
+}
+
+/// Slope of a ramp that starts from nothing at the reading before the onset.
+/// @param from the slope towards which odd values are pulled in; nothing: they are taken as they are
+double ramp_slope(const std::vector<std::pair<double, double>>& points, std::optional<double> from, double reach)
+{
+    double product = 0.0, squares = 0.0;
+    for (const auto& [months, value] : points) {
+        product += months * (from ? drift::pull_in(value, *from * months, reach) : value);
+        squares += square(months);
+    }
+    return product / squares;
 }
 
 std::optional<Estimate> estimate_ramp(const SubjectSeries& of, const QuantitySeries& series, const Level& level,
                                       std::size_t onset)
 {
     const double from = of.months[onset - 1], whole = of.months.back() - from;
-    double product = 0.0, squares = 0.0, sum = 0.0;
-    std::size_t count = 0;
+    std::vector<std::pair<double, double>> points;
+    double squares = 0.0, sum = 0.0;
     for (std::size_t i = onset; i < series.values.size(); ++i)
         if (series.values[i]) {
             const double months = of.months[i] - from;
-            product += months * (*series.values[i] - level.mean);
+            points.emplace_back(months, *series.values[i] - level.mean);
             squares += square(months);
             sum += months;
-            ++count;
         }
-    if (count < ramp_needs || !(squares > 0.0))
+    if (points.size() < ramp_needs || !(squares > 0.0))
         return std::nullopt;
-    return Estimate{whole * product / squares, square(whole) * (1.0 / squares + square(sum / squares) / level.count), count};
+    const double plain = ramp_slope(points, std::nullopt, 0.0);
+    const double slope = ramp_slope(points, plain, pull_to * series.noise);
+    return Estimate{whole * slope, square(whole) * (1.0 / squares + square(sum / squares) / level.count), points.size()};
 }
 
 /// Maximum less compression pressure: it is not read by itself.
@@ -104,6 +126,38 @@ ChangeVector claiming(const SubjectSeries& series, ChangeVector changes)
         if (series.quantities[k].gauge_of_engine)
             changes[k].reset();
     return changes;
+}
+
+/// How well the shape goes with a fault that creeps or comes at once.
+double log_of_course(Fault::Course course, bool ramp)
+{
+    constexpr double as_said = 0.75; // of three times out of four (estimate)
+    const bool creeping = course == Fault::Course::creeping;
+    const double share = course == Fault::Course::any ? 0.5 : creeping == ramp ? as_said : 1.0 - as_said;
+    return std::log(share);
+}
+
+/// Each fault's weight, averaged over the windows. Those that fit far worse than the best add nothing that counts, and a
+/// single reading carries no pattern.
+std::vector<double> weigh_over(const std::vector<ChangeWindow>& windows, double best, std::span<const Fault* const> faults)
+{
+    constexpr double counts = 6.0; // logarithm of the odds against the best
+    std::vector<std::vector<double>> weights(faults.size());
+    double tried = 0.0;
+    for (const ChangeWindow& window : windows) {
+        if (window.readings < 2)
+            continue;
+        tried += 0.5; // step and ramp of one onset share one chance
+        if (square(best) - square(window.likelihood) > 2.0 * counts)
+            continue;
+        for (std::size_t f = 0; f < faults.size(); ++f)
+            weights[f].push_back(log_likelihood(*faults[f], window.changes) + log_of_course(faults[f]->course, window.ramp));
+    }
+    std::vector<double> found;
+    for (std::size_t f = 0; f < faults.size(); ++f)
+        if (!weights[f].empty())
+            found.push_back(log_sum(weights[f]) - std::log(tried) + log_commonness(*faults[f]));
+    return found;
 }
 
 } // namespace
@@ -144,7 +198,7 @@ std::optional<ChangeWindow> change_since(const SubjectSeries& series, std::size_
 std::optional<ChangeWindow> find_change(const SubjectSeries& series, std::span<const Fault* const> faults,
                                         std::size_t earliest)
 {
-    std::optional<ChangeWindow> best;
+    std::vector<ChangeWindow> windows;
     const std::size_t count = series.months.size();
     const std::size_t first = std::max({earliest, std::size_t{1}, count > longest_window ? count - longest_window : 1});
     for (std::size_t onset = first; onset < count; ++onset)
@@ -153,14 +207,18 @@ std::optional<ChangeWindow> find_change(const SubjectSeries& series, std::span<c
             if (!window)
                 continue;
             window->likelihood = strongest_sign(faults, claiming(series, window->without_wander));
-            if (!best || window->likelihood > best->likelihood)
-                best = std::move(window);
+            windows.push_back(std::move(*window));
         }
-    if (best) {
-        best->at_edge = best->onset == first && first > earliest;
-        best->strength = strongest_sign(faults, claiming(series, best->changes));
-    }
-    return best;
+    if (windows.empty())
+        return std::nullopt;
+    const auto best = std::max_element(windows.begin(), windows.end(),
+                                 [](const ChangeWindow& a, const ChangeWindow& b) { return a.likelihood < b.likelihood; });
+    const std::vector<double> log_weights = weigh_over(windows, best->likelihood, faults);
+    ChangeWindow found = std::move(*best);
+    found.at_edge = found.onset == first && first > earliest;
+    found.strength = strongest_sign(faults, claiming(series, found.changes));
+    found.log_weights = log_weights;
+    return found;
 }
 
 } // namespace evenstroke

@@ -18,6 +18,9 @@ struct ChangeWindow
     ChangeVector changes;   ///< as they stand at the last reading
     ChangeVector without_wander; ///< the same with the errors of averaging alone
     std::vector<std::optional<double>> amounts; ///< the same in the unit of the deviation
+    /// One a fault that was asked for: logarithm of its probability over "nothing happened", averaged over every onset
+    /// and shape, common faults favoured. Empty where one change was asked for by itself.
+    std::vector<double> log_weights;
 };
 
 /// Readings before the change that a quantity's own usual level needs.

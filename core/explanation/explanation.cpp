@@ -2,8 +2,10 @@
 #include "core/explanation/explanation.h"
 
 #include "core/explanation/cautions.h"
+#include "core/explanation/change_course.h"
 #include "core/explanation/explanation_words.h"
 #include "core/explanation/hypotheses.h"
+#include "core/explanation/soonest_limit.h"
 #include "core/sentence_words.h"
 #include "core/trend/flag_text.h"
 
@@ -15,11 +17,10 @@ namespace evenstroke {
 namespace {
 
 /// From which evidence on something is called out of the usual: logarithm of how much likelier some fault makes the
-/// pattern than nothing does, or, for a pattern that no fault has, standard deviations of the strongest sign. Settled
+/// readings than nothing does, or, for a pattern that no fault has, standard deviations of the strongest sign. Settled
 /// by simulation of sound engines (tests/core/fault_statistics_test.cpp).
-constexpr double claim_from = 5.8, claim_without_fault_from = 5.2;
+constexpr double claim_on_any_cylinder_from = 3.4, claim_where_known_from = 3.0, claim_without_fault_from = 5.2;
 constexpr double claim_one_reading_from = 6.0; ///< standard deviations: one reading may be odd by itself
-constexpr double claim_with_flag_from = 3.0;   ///< standard deviations, where a flag of the drift method stands
 /// After so many readings an unanswered question about work is taken as work done, as the drift method takes it.
 constexpr std::size_t question_lasts = 12;
 constexpr double misread_from = 4.0, others_below = 1.5; ///< noise units, of one value that stands alone
@@ -51,6 +52,13 @@ const Flag* last_question(const Judgement& judgement, const Place& subject)
         if (flag.severity == Level::ask && flag.subject == subject && !flag.carrying.empty())
             last = &flag;
     return last;
+}
+
+/// The same while nobody has answered it.
+const Flag* open_question(const Judgement& judgement, const Place& subject)
+{
+    const Flag* question = last_question(judgement, subject);
+    return question && question->level_now == Level::ask ? question : nullptr;
 }
 
 class Explainer
@@ -101,16 +109,18 @@ private:
         return question && last - question->reading > question_lasts ? question->carrying.front() + level_needs : 1;
     }
 
-    static bool is_out_of_usual(std::span<const Fault* const> faults, const ChangeWindow& window, bool flagged)
+    /// A flag, or a question, of the drift method says which cylinder; otherwise there are many to choose from.
+    static double claim_from(const Place& subject, bool marked)
     {
-        if (flagged)
-            return window.strength >= claim_with_flag_from;
-        if (window.readings == 1)
-            return window.strength >= claim_one_reading_from;
-        if (window.strength >= claim_without_fault_from)
+        return marked || subject.kind != Place::Kind::cylinder ? claim_where_known_from : claim_on_any_cylinder_from;
+    }
+
+    static bool is_out_of_usual(const Place& subject, const ChangeWindow& window, bool marked)
+    {
+        if (window.strength >= claim_one_reading_from || (window.readings > 1 && window.strength >= claim_without_fault_from))
             return true;
-        const auto matches = match_faults(faults, window.changes);
-        return !matches.empty() && matches.front().log_weight >= claim_from;
+        const auto likeliest = std::max_element(window.log_weights.begin(), window.log_weights.end());
+        return (window.readings > 1 || marked) && likeliest != window.log_weights.end() && *likeliest >= claim_from(subject, marked);
     }
 
     /// @return whether it is out of the usual
@@ -120,8 +130,12 @@ private:
         const auto window = find_change(series, faults, earliest_onset(series.subject));
         comparable_ = comparable_ || window.has_value();
         const Flag* flag = standing_drift(judgement_, series.subject);
-        if (!window || !is_out_of_usual(faults, *window, flag != nullptr))
+        const bool marked = flag || open_question(judgement_, series.subject);
+        if (!window || !is_out_of_usual(series.subject, *window, marked)) {
+            if (flag)
+                add_unsupported_flag(*flag);
             return false;
+        }
         SubjectExplanation subject;
         subject.subject = series.subject;
         subject.flagged = flag != nullptr;
@@ -131,6 +145,7 @@ private:
         subject.months = window->months;
         subject.causes = rank_causes(faults, *window);
         consider_misreading(subject, *window);
+        consider_work(subject, *window);
         for (Hypothesis& cause : subject.causes)
             word_hypothesis(cause, &*window, record_.engine.two_stroke());
         word_subject(subject, record_, &*window);
@@ -138,6 +153,20 @@ private:
         add_limit(subject);
         result_.subjects.push_back(std::move(subject));
         return true;
+    }
+
+    /// A flag stands until a reading shows that it is over; a cause is another matter.
+    void add_unsupported_flag(const Flag& flag)
+    {
+        SubjectExplanation subject;
+        subject.subject = flag.subject;
+        subject.flagged = true;
+        subject.since = flag.since;
+        subject.months = flag.months;
+        subject.answer = subject_text(record_.engine, flag.subject) +
+                         " has a flag, and the readings up to now bear no cause out: no fault on the list is much likelier "
+                         "than chance, and the next readings will tell.";
+        result_.subjects.push_back(std::move(subject));
     }
 
     /// One value far out at the last reading alone, with all linked to it as usual.
@@ -159,6 +188,28 @@ private:
         if (!subject.causes.empty())
             subject.causes.front().as_likely_as_first = true;
         put_first(subject, std::move(slip));
+    }
+
+    /// Work that nobody entered: where the drift method asks about it, or what moved, moved as after work. Parts of their
+    /// own take levels of their own, so it comes before the faults only where no pattern of theirs accounts for more.
+    void consider_work(SubjectExplanation& subject, const ChangeWindow& window) const
+    {
+        const Flag* question = open_question(judgement_, subject.subject);
+        if (!question && !looks_like_work(window))
+            return;
+        Hypothesis work;
+        work.fault = find_fault("work_not_recorded");
+        work.fits.push_back(question ? question->sentence
+                                     : "It came at once, and what moved clearly moved as after an overhaul or a cleaning.");
+        const bool before_faults =
+            subject.causes.empty() ||
+            (question && log_weight_of_no_pattern(window.changes) > match_faults({&subject.causes.front().fault, 1}, window.changes).front().log_weight);
+        if (before_faults) {
+            put_first(subject, std::move(work));
+            return;
+        }
+        work.rank = static_cast<int>(subject.causes.size()) + 1;
+        subject.causes.push_back(std::move(work));
     }
 
     static void put_first(SubjectExplanation& subject, Hypothesis first)
@@ -257,8 +308,7 @@ private:
         const Flag* flag = standing_drift(judgement_, subject.subject);
         if (flag && subject.causes.empty() && !flag->pattern_words.empty())
             subject.remarks.push_back("The flag that stands here goes by the pattern of " + flag->pattern_words + ".");
-        const Flag* question = last_question(judgement_, subject.subject);
-        if (question && question->level_now == Level::ask)
+        if (const Flag* question = open_question(judgement_, subject.subject))
             subject.remarks.push_back(question->sentence + " If so, enter it, and the comparison starts anew.");
         const ReadingJudgement& last = judgement_.readings.back();
         if (last.poor || last.steadiness == Steadiness::unsteady)
@@ -268,10 +318,11 @@ private:
     void add_limit(SubjectExplanation& subject) const
     {
         for (const Flag* flag : judgement_.standing_flags())
-            if (is_drift(*flag) && flag->subject == subject.subject && flag->time_to_limit && !subject.time_to_limit) {
-                subject.time_to_limit = flag->time_to_limit;
-                subject.limit_quantity = flag->quantity;
-            }
+            if (is_drift(*flag) && flag->subject == subject.subject && !subject.time_to_limit)
+                if (const auto soonest = find_soonest_limit(judgement_, *flag)) {
+                    subject.time_to_limit = soonest->time;
+                    subject.limit_quantity = soonest->quantity;
+                }
     }
 
     const Judgement& judgement_;

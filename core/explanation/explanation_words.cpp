@@ -2,6 +2,7 @@
 #include "core/explanation/explanation_words.h"
 
 #include "core/explanation/cautions.h"
+#include "core/explanation/change_course.h"
 #include "core/sentence_words.h"
 #include "core/trend/flag_text.h"
 
@@ -92,19 +93,24 @@ std::string history_sentence(const SubjectExplanation& subject, const EngineReco
     return text;
 }
 
-/// Clearly out: by one and a half noise units and three of its own standard errors.
 std::vector<std::string> moved_words(const ChangeWindow& window)
 {
     std::vector<std::pair<double, std::string>> moved;
     for (std::size_t k = 0; k < window.changes.size(); ++k)
         if (const auto& change = window.changes[k];
-            change && std::abs(change->amount) >= 1.5 && std::abs(change->amount) >= 3.0 * change->error)
+            change && moved_clearly(*change))
             moved.emplace_back(-std::abs(change->amount), fault_quantity_words(k) + " " + change_words(k, *window.amounts[k]));
     std::sort(moved.begin(), moved.end());
     std::vector<std::string> words;
     for (const auto& one : moved)
         words.push_back(one.second);
     return words;
+}
+
+/// A flag of the drift method stands, and nothing here supports a cause.
+bool is_only_flagged(const SubjectExplanation& subject)
+{
+    return subject.flagged && subject.history.empty() && subject.causes.empty() && subject.cautions.empty();
 }
 
 std::string cannot_tell_sentence(const SubjectExplanation& subject)
@@ -192,12 +198,13 @@ std::string whole_sentence(const Explanation& explanation)
         return "There is no reading yet.";
     const EngineRecord& record = *explanation.record;
     const std::string at = " at reading " + record.readings[*explanation.reading].name + ".";
-    if (!explanation.subjects.empty()) {
-        std::vector<std::string> who;
-        for (const SubjectExplanation& subject : explanation.subjects)
-            who.push_back(lower_first(subject_text(record.engine, subject.subject)));
+    std::vector<std::string> who, only_flagged;
+    for (const SubjectExplanation& subject : explanation.subjects)
+        (is_only_flagged(subject) ? only_flagged : who).push_back(lower_first(subject_text(record.engine, subject.subject)));
+    if (!who.empty())
         return upper_first(and_list(who)) + (who.size() == 1 ? " is" : " are") + " out of the usual" + at;
-    }
+    if (!only_flagged.empty())
+        return "No cause is borne out" + at + " A flag stands on " + and_list(only_flagged) + ".";
     if (explanation.too_few_readings)
         return "There are too few readings to say what is usual" + at;
     return "Nothing is out of the usual" + at;

@@ -27,9 +27,10 @@ constexpr std::array<std::pair<std::string_view, Urgency>, 5> urgencies = {
      {"emergency", Urgency::emergency}}};
 constexpr std::array<std::pair<std::string_view, Fault::Group>, 3> groups = {
     {{"measurement", Fault::Group::measurement}, {"engine", Fault::Group::engine}, {"cylinder", Fault::Group::cylinder}}};
-constexpr std::array<std::pair<std::string_view, Fault::Test>, 5> tests = {
+constexpr std::array<std::pair<std::string_view, Fault::Test>, 6> tests = {
     {{"signature", Fault::Test::signature}, {"unit_test", Fault::Test::unit}, {"swap_test", Fault::Test::swap},
-     {"single_value_test", Fault::Test::single_value}, {"alarm_only", Fault::Test::alarm_only}}};
+     {"single_value_test", Fault::Test::single_value}, {"work_test", Fault::Test::work},
+     {"alarm_only", Fault::Test::alarm_only}}};
 constexpr std::array<std::pair<std::string_view, Fault::Course>, 3> courses = {
     {{"any", Fault::Course::any}, {"sudden", Fault::Course::sudden}, {"creeping", Fault::Course::creeping}}};
 constexpr std::array<std::pair<std::string_view, int>, 3> commonness = {{{"frequent", 2}, {"occasional", 1}, {"rare", 0}}};
@@ -40,6 +41,8 @@ constexpr std::array<std::pair<std::string_view, FaultQuantity::Form>, 4> forms 
      {"percent_absolute", FaultQuantity::Form::percent_absolute},
      {"speed_at_power", FaultQuantity::Form::speed_at_power}}};
 
+constexpr std::array<std::pair<std::string_view, int>, 3> ways = {{{"up", 1}, {"down", -1}, {"", 0}}};
+
 std::vector<FaultQuantity> load_quantities()
 {
     const CatalogueTable table(catalogue_text::fault_noise);
@@ -47,7 +50,8 @@ std::vector<FaultQuantity> load_quantities()
     for (std::size_t row = 0; row < table.rows(); ++row)
         quantities.push_back({table.cell(row, "quantity"), table.cell(row, "read_as"), meaning(pers, table.cell(row, "per")),
                               table.number(row, "noise").value(), table.cell(row, "unit"),
-                              meaning(forms, table.cell(row, "form")), table.cell(row, "compare") == "baseline"});
+                              meaning(forms, table.cell(row, "form")), table.cell(row, "compare") == "baseline",
+                              meaning(ways, table.cell(row, "after_work"))});
     return quantities;
 }
 

@@ -29,6 +29,7 @@ struct FaultQuantity
     std::string unit;
     Form form = Form::difference;
     bool needs_baseline = true; ///< false: it hardly moves with the load, so its own usual level is enough
+    int after_work = 0;         ///< the way in which an overhaul or a cleaning moves it: 1 up, -1 down, 0 not known
 };
 
 enum class Urgency { remember, plan, soon, now, emergency };
@@ -40,7 +41,7 @@ struct Fault
 {
     enum class Group { measurement, engine, cylinder };
     /// Which test looks for it; `alarm_only`: never raised from readings.
-    enum class Test { signature, unit, swap, single_value, alarm_only };
+    enum class Test { signature, unit, swap, single_value, work, alarm_only };
     enum class Course { any, sudden, creeping };
     std::string id;
     bool variant = false; ///< a second pattern of a fault listed before

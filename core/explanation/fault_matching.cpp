@@ -45,7 +45,7 @@ double log_density(double value, double variance) { return -0.5 * (square(value)
 /// Logarithm of the likelihood of one size over that of nothing.
 double log_ratio(const Fault& fault, double size, const ChangeVector& changes)
 {
-    double sum = 0.0;
+    double sum = 0.0, spread = 1.0; // one logarithm of the product is cheaper than the sum of many
     for (std::size_t k = 0; k < changes.size(); ++k) {
         if (!changes[k] || redundant().at(k, changes))
             continue;
@@ -55,42 +55,11 @@ double log_ratio(const Fault& fault, double size, const ChangeVector& changes)
         const double own = !level          ? unstated_spread * std::min(std::abs(size), 1.0)
                            : *level == 0.0 ? rounding_spread * size
                                            : std::max(part_spread * std::abs(expected), rounding_spread * std::abs(size));
-        sum += log_density(d - expected, noise + square(own)) - log_density(d, noise);
+        const double whole = noise + square(own);
+        sum += square(d) / noise - square(d - expected) / whole;
+        spread *= whole / noise;
     }
-    return sum;
-}
-
-double log_sum(std::span<const double> logarithms)
-{
-    const double most = *std::max_element(logarithms.begin(), logarithms.end());
-    double sum = 0.0;
-    for (const double one : logarithms)
-        sum += std::exp(one - most);
-    return most + std::log(sum);
-}
-
-double log_prior(const Fault& fault)
-{
-    // How often a cause is met, as the catalogue's three words have it (estimates): 1, 0.7 and 0.4.
-    constexpr std::array<double, 3> shares = {0.4, 0.7, 1.0};
-    double share = shares[static_cast<std::size_t>(fault.commonness)];
-    if (fault.reference_size.empty()) // a pattern in outline only
-        share *= 0.5;
-    if (fault.urgency == Urgency::emergency) // seen by the alarm, long before a monthly sheet
-        share *= 0.25;
-    return std::log(share);
-}
-
-double log_weight(const Fault& fault, const ChangeVector& changes)
-{
-    std::vector<double> ratios;
-    for (std::size_t i = 0; i < sizes.size(); ++i) {
-        const double share = std::log(size_shares[i] * (fault.either_sign ? 0.5 : 1.0));
-        ratios.push_back(log_ratio(fault, sizes[i], changes) + share);
-        if (fault.either_sign)
-            ratios.push_back(log_ratio(fault, -sizes[i], changes) + share);
-    }
-    return log_sum(ratios) + log_prior(fault);
+    return 0.5 * (sum - std::log(spread));
 }
 
 struct Sums
@@ -149,6 +118,39 @@ double observed_share(const Fault& fault, const ChangeVector& changes)
 
 } // namespace
 
+double log_sum(std::span<const double> logarithms)
+{
+    const double most = *std::max_element(logarithms.begin(), logarithms.end());
+    double sum = 0.0;
+    for (const double one : logarithms)
+        sum += std::exp(one - most);
+    return most + std::log(sum);
+}
+
+double log_commonness(const Fault& fault)
+{
+    // How often a cause is met, as the catalogue's three words have it (estimates): 1, 0.7 and 0.4.
+    constexpr std::array<double, 3> shares = {0.4, 0.7, 1.0};
+    double share = shares[static_cast<std::size_t>(fault.commonness)];
+    if (fault.reference_size.empty()) // a pattern in outline only
+        share *= 0.5;
+    if (fault.urgency == Urgency::emergency) // seen by the alarm, long before a monthly sheet
+        share *= 0.25;
+    return std::log(share);
+}
+
+double log_likelihood(const Fault& fault, const ChangeVector& changes)
+{
+    std::vector<double> ratios;
+    for (std::size_t i = 0; i < sizes.size(); ++i) {
+        const double share = std::log(size_shares[i] * (fault.either_sign ? 0.5 : 1.0));
+        ratios.push_back(log_ratio(fault, sizes[i], changes) + share);
+        if (fault.either_sign)
+            ratios.push_back(log_ratio(fault, -sizes[i], changes) + share);
+    }
+    return log_sum(ratios);
+}
+
 std::optional<PlainMatch> match_plainly(const Fault& fault, const ChangeVector& changes)
 {
     const Sums sums = sums_of(fault, changes, false);
@@ -179,7 +181,7 @@ std::vector<FaultMatch> match_faults(std::span<const Fault* const> faults, const
         if (beyond_scatter > 0.0)
             match.explained =
                 std::clamp(1.0 - std::max(residual.left - residual.scatter, 0.0) / beyond_scatter, 0.0, 1.0);
-        match.log_weight = log_weight(*fault, changes);
+        match.log_weight = log_likelihood(*fault, changes) + log_commonness(*fault);
         matches.push_back(match);
     }
     std::stable_sort(matches.begin(), matches.end(),

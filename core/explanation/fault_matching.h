@@ -49,6 +49,13 @@ struct FaultMatch
 /// better than the share explained alone: tests/bench/bench_explanation.cpp shows both.
 std::vector<FaultMatch> match_faults(std::span<const Fault* const> faults, const ChangeVector& changes);
 
+/// The same logarithm for one fault, its commonness left out.
+double log_likelihood(const Fault& fault, const ChangeVector& changes);
+/// Logarithm of how often a fault is met, as the catalogue's words have it.
+double log_commonness(const Fault& fault);
+/// Logarithm of the sum of exponentials; not for an empty span.
+double log_sum(std::span<const double> logarithms);
+
 /// Logarithm of the probability of the pattern if every quantity may have moved by itself, against "nothing
 /// happened": what a fault on the list has to beat.
 double log_weight_of_no_pattern(const ChangeVector& changes);

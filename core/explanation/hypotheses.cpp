@@ -122,6 +122,21 @@ QuantityEvidence::Says what_it_says(double moved, double expected)
     return has_moved && (!far_off || std::abs(expected) >= largest_level) ? Says::fits : Says::partly_fits;
 }
 
+/// Size and share explained as the best window has them, ordered by the weight over all windows.
+std::vector<FaultMatch> matches_over_windows(std::span<const Fault* const> faults, const ChangeWindow& window)
+{
+    std::vector<FaultMatch> matches = match_faults(faults, window.changes);
+    if (window.log_weights.size() != faults.size())
+        return matches;
+    for (FaultMatch& match : matches) {
+        const auto at = std::find(faults.begin(), faults.end(), match.fault) - faults.begin();
+        match.log_weight = window.log_weights[static_cast<std::size_t>(at)];
+    }
+    std::stable_sort(matches.begin(), matches.end(),
+                     [](const FaultMatch& a, const FaultMatch& b) { return a.log_weight > b.log_weight; });
+    return matches;
+}
+
 } // namespace
 
 std::vector<const Fault*> possible_faults(const Engine& engine, const Place& subject,
@@ -159,7 +174,7 @@ std::vector<QuantityEvidence> weigh_evidence(const Fault& fault, double size, co
 
 std::vector<Hypothesis> rank_causes(std::span<const Fault* const> faults, const ChangeWindow& window)
 {
-    const std::vector<FaultMatch> all = match_faults(faults, window.changes);
+    const std::vector<FaultMatch> all = matches_over_windows(faults, window);
     std::vector<FaultMatch> matches;
     for (const FaultMatch& match : all) {
         const bool known = std::any_of(matches.begin(), matches.end(),

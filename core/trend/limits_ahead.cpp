@@ -93,6 +93,34 @@ void add_own_marks(drift::Marks& marks, const Engine& engine, std::string_view q
         enter(marks.own_low, reading, readings, form.of(*limit->low));
 }
 
+namespace {
+
+struct Leading
+{
+    std::size_t channel;
+    std::optional<std::size_t> cylinder;
+    std::size_t reading, onset;
+    QuantityId quantity;
+    bool rising, percent;
+};
+
+std::optional<TimeToLimit> find_limit_ahead(const Engine& engine, const drift::Input& input, const drift::Output& output,
+                                            const Leading& of)
+{
+    const auto mark = drift::mark_ahead(input, output, of.channel, of.cylinder, of.reading, of.onset, of.rising);
+    const auto found =
+        mark ? drift::time_to_limit(input, output, of.channel, of.cylinder, of.reading, mark->distance) : std::nullopt;
+    if (!found)
+        return std::nullopt;
+    const Quantity& q = quantity(of.quantity);
+    const std::string symbol = of.percent ? "%" : std::string(unit(q.unit).symbol);
+    return TimeToLimit{mark->distance,
+                       mark->own ? own_limit_text(engine, q, of.rising) : customary_text(mark->distance, symbol),
+                       found->months_5, found->months_50, found->months_95};
+}
+
+} // namespace
+
 std::optional<TimeToLimit> limit_ahead(const Engine& engine, const drift::Input& input, const drift::Output& output,
                                        const Flag& flag, const drift::Flag& from)
 {
@@ -103,20 +131,25 @@ std::optional<TimeToLimit> limit_ahead(const Engine& engine, const drift::Input&
     });
     if (leading == from.now.changes.end())
         return std::nullopt;
-    const std::size_t channel = drift::channel_of(input, output, leading->quantity, from.cylinder.has_value());
-    const bool rising = leading->size > 0.0;
-    const auto mark =
-        drift::mark_ahead(input, output, channel, from.cylinder, from.last_reading, from.now.onset, rising);
-    const auto found = mark ? drift::time_to_limit(input, output, channel, from.cylinder, from.last_reading,
-                                                   mark->distance)
-                            : std::nullopt;
-    if (!found)
+    return find_limit_ahead(engine, input, output,
+                            {drift::channel_of(input, output, leading->quantity, from.cylinder.has_value()), from.cylinder,
+                             from.last_reading, from.now.onset, flag.quantity, leading->size > 0.0,
+                             !flag.moved.empty() && flag.moved.front().percent});
+}
+
+std::optional<TimeToLimit> limit_ahead_of(const Engine& engine, const drift::Input& input, const drift::Output& output,
+                                          std::optional<std::size_t> cylinder, std::size_t reading, std::size_t onset,
+                                          const MovedQuantity& moved)
+{
+    const std::string& name = quantity(moved.quantity).name;
+    const std::size_t channels = cylinder ? input.channels.size() : output.engine_quantities.size();
+    std::size_t channel = drift::channel_of(input, output, name, cylinder.has_value());
+    if (channel >= channels && !cylinder)
+        channel = drift::channel_of(input, output, "median " + name, false);
+    if (channel >= channels)
         return std::nullopt;
-    const Quantity& q = quantity(flag.quantity);
-    const bool percent = !flag.moved.empty() && flag.moved.front().percent;
-    const std::string symbol = percent ? "%" : std::string(unit(q.unit).symbol);
-    return TimeToLimit{mark->distance, mark->own ? own_limit_text(engine, q, rising) : customary_text(mark->distance, symbol),
-                       found->months_5, found->months_50, found->months_95};
+    return find_limit_ahead(engine, input, output,
+                            {channel, cylinder, reading, onset, moved.quantity, moved.amount > 0.0, moved.percent});
 }
 
 } // namespace evenstroke

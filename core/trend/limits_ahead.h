@@ -26,4 +26,11 @@ void add_own_marks(drift::Marks& marks, const Engine& engine, std::string_view q
 std::optional<TimeToLimit> limit_ahead(const Engine& engine, const drift::Input& input, const drift::Output& output,
                                        const Flag& flag, const drift::Flag& from);
 
+/// The same for any quantity that moves with a flag.
+/// @param cylinder from 0; nothing: the engine
+/// @param reading  the last that carries the flag
+std::optional<TimeToLimit> limit_ahead_of(const Engine& engine, const drift::Input& input, const drift::Output& output,
+                                          std::optional<std::size_t> cylinder, std::size_t reading, std::size_t onset,
+                                          const MovedQuantity& moved);
+
 } // namespace evenstroke

@@ -247,6 +247,69 @@ TEST(Explanation, WhatMovedTheOtherWaySpeaksAgainst)
             }
 }
 
+bool names(const SubjectExplanation& subject, const char* id)
+{
+    return std::any_of(subject.causes.begin(), subject.causes.end(), [&](const Hypothesis& one) { return one.fault->id == id; });
+}
+
+TEST(Explanation, AStepToTheBetterMayBeWorkThatNobodyEntered)
+{
+    EngineRecord record = example_record(readings);
+    const Place fourth = Place::cylinder(4);
+    change(record, "exhaust_temperature", fourth, -30.0);
+    change(record, "compression_pressure", fourth, 5.0);
+    change(record, "maximum_pressure", fourth, 6.0);
+    const Explanation explanation = explained(record);
+    const SubjectExplanation* found = subject_at(explanation, fourth);
+    ASSERT_NE(found, nullptr);
+    EXPECT_TRUE(names(*found, "work_not_recorded")) << all_words(explanation);
+    EXPECT_TRUE(contains(all_words(explanation), "enter it under events"));
+    // What went for the worse is no work.
+    EXPECT_FALSE(names(*subject_at(explained(with_leaking_valve()), fourth), "work_not_recorded"));
+}
+
+TEST(Explanation, WhereTheDriftMethodAsksAboutWorkThatComesFirst)
+{
+    EngineRecord record = example_record(readings);
+    const Place fourth = Place::cylinder(4); // new levels everywhere, and no pattern in them
+    change(record, "exhaust_temperature", fourth, 30.0);
+    change(record, "compression_pressure", fourth, 6.0);
+    change(record, "maximum_pressure", fourth, -7.0);
+    change(record, "fuel_index", fourth, -4.0);
+    change(record, "jacket_outlet_temperature", fourth, 6.0);
+    const auto judgement = judge(std::make_shared<const EngineRecord>(record));
+    const bool asked = std::any_of(judgement.flags.begin(), judgement.flags.end(), [&](const Flag& flag) {
+        return flag.subject == fourth && flag.level_now == Level::ask;
+    });
+    ASSERT_TRUE(asked);
+    const Explanation explanation = explain(judgement);
+    const SubjectExplanation* found = subject_at(explanation, fourth);
+    ASSERT_NE(found, nullptr);
+    ASSERT_FALSE(found->causes.empty());
+    EXPECT_EQ(found->causes.front().fault->id, "work_not_recorded") << all_words(explanation);
+    EXPECT_EQ(found->causes.front().rank, 1);
+}
+
+TEST(Explanation, OfAllLimitsAheadTheSoonestIsNamed)
+{
+    EngineRecord record = example_record(readings);
+    const Place third = Place::cylinder(3);
+    change(record, "exhaust_temperature", third, 28.0, true);
+    change(record, "compression_pressure", third, -9.0, true);
+    change(record, "maximum_pressure", third, -9.0, true);
+    const auto judgement = judge(std::make_shared<const EngineRecord>(record));
+    const SubjectExplanation* found = nullptr;
+    const Explanation explanation = explain(judgement);
+    found = subject_at(explanation, third);
+    ASSERT_NE(found, nullptr);
+    ASSERT_TRUE(found->time_to_limit.has_value());
+    for (const Flag* flag : judgement.standing_flags())
+        if (flag->subject == third && flag->time_to_limit && flag->time_to_limit->months_50) {
+            EXPECT_LE(found->time_to_limit->months_50.value_or(1e6), *flag->time_to_limit->months_50);
+        }
+    EXPECT_TRUE(found->limit_quantity.has_value());
+}
+
 TEST(Explanation, OddEnginesGetAnAnswerAndNoCrash)
 {
     for (const int cylinders : {1, 2, 20}) {

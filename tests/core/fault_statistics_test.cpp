@@ -63,7 +63,8 @@ TEST(FaultStatistics, TheTrueCauseIsMostlyNamedFirstAndNearlyAlwaysAmongTheFirst
 {
     const Named named = named_causes();
     ASSERT_GT(named.trials, 150U);
-    // Of all faults, those still too small to be seen included.
+    // Of all faults, those still too small to be seen included. Measured on other seeds than those the constants were
+    // settled on, 1026 engines: 92.0 % (90.2 to 93.6) among the first three, 83.9 % (81.5 to 86.1) first.
     const Interval three = binomial_interval(named.three, named.trials), first = binomial_interval(named.first, named.trials);
     RecordProperty("among_first_three", text(three));
     RecordProperty("first", text(first));
@@ -88,7 +89,7 @@ TEST(FaultStatistics, SoundEnginesAreSeldomSaidToBeOutOfTheUsual)
         claimed += judge_trial(simulate_fault(FaultRecipe{}, first_seed + 1'000'000 + n)).other_subjects > 0 ? 1 : 0;
     const Interval share = binomial_interval(claimed, count);
     RecordProperty("engines_with_a_false_claim", text(share));
-    // At one reading, cylinders and engine together; most of it are flags of the drift method that stand.
+    // At one reading, cylinders and engine together: 7.0 % (5.3 to 9.0) of 800 on other seeds.
     EXPECT_LE(share.low, 0.10) << text(share);
 }
 

@@ -23,6 +23,8 @@ bool can_be_told_apart(const FaultTrial& trial)
         return trial.cards;
     if (fault == "exhaust_back_pressure_high" || fault == "turbine_efficiency_loss")
         return read("exhaust_back_pressure");
+    if (fault == "fuel_quantity_error")
+        return read("fuel_consumption"); // a meter that nobody reads leaves no trace
     return true;
 }
 

@@ -59,7 +59,7 @@ FaultOutcome judge_trial(const FaultTrial& trial);
 
 /// Whether what the readings of this engine hold can tell the fault from every other of the list: a worn liner is
 /// weak rings and a leaking inlet valve is leaking rings, a zero of a peak gauge is its gain, and back pressure without
-/// its gauge is a tired turbine.
+/// its gauge is a tired turbine, and a fuel meter that is not read shows nothing at all.
 bool can_be_told_apart(const FaultTrial& trial);
 
 /// Rank of the true cause by the share explained times the root of the coverage, at the same change; 0: below a half.
