@@ -104,8 +104,8 @@ TEST_F(CardValues, GiveWayToWhatIsReadLater)
     Value read = *find_value(closed(), "maximum_pressure", Place::cylinder(1));
     read.place = Place::cylinder(2);
     expect_done(store().correct(reading_, read, chief_));
-    const Value* const now = find_value(closed(), "maximum_pressure", Place::cylinder(2));
-    EXPECT_EQ(now->origin, Origin::read);
+    const Reading later = closed();
+    EXPECT_EQ(find_value(later, "maximum_pressure", Place::cylinder(2))->origin, Origin::read);
     EXPECT_EQ(value_of_result(
                   store().accept_card_values(reading_, {from_card("maximum_pressure", 2, 142.0)}, second_))
                   .left_alone.size(),
