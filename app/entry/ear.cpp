@@ -171,6 +171,8 @@ void Ear::show_doubt(const LogSheetModel& model, const LogBox& box, const EntryO
         sentences << to_qstring(opinion->sentence);
     for (const SheetNote* note : opinions.notes_of(box))
         sentences << note->sentence;
+    if (value && value->origin == Origin::card)
+        sentences << tr("From the indicator card; a number typed here takes its place.");
     if (confirmed)
         sentences << tr("Read again and confirmed.");
     else if (model.sheet().lent(box))

@@ -35,7 +35,8 @@ bool says_something(const Value& value)
 bool same_value(const Value& a, const Value& b)
 {
     return box_of(a) == box_of(b) && a.typed == b.typed && a.unit == b.unit && a.kind == b.kind &&
-           a.number == b.number && a.words == b.words && a.missing == b.missing && a.confirmed == b.confirmed;
+           a.number == b.number && a.words == b.words && a.missing == b.missing && a.confirmed == b.confirmed &&
+           a.origin == b.origin;
 }
 
 void EntrySheet::start(SheetStart start)

@@ -190,6 +190,8 @@ QString LogSheetModel::accessible_text(const LogBox& described, const QString& s
     QString text = tr("%1: %2").arg(box_name(described), shown.isEmpty() ? tr("empty") : shown);
     if (value && value->number)
         text = with_unit(text, to_qstring(row_unit_text(described.quantity, {value->unit, value->kind})));
+    if (value && value->origin == Origin::card)
+        text += tr(", from the card");
     switch (mark_of(described, value)) {
     case BoxMark::asked:
         return text + tr(", please look again");

@@ -86,8 +86,14 @@ ReviewSection entry_section(const ReviewContext& context)
         }
         section.lines.push_back(std::move(line));
     }
-    if (section.lines.empty())
+    const auto from_cards = static_cast<std::size_t>(std::count_if(context.reading.values.begin(), context.reading.values.end(), [](const Value& value) {
+        return value.origin == Origin::card && value.number;
+    }));
+    const std::string cards = from_cards == 0 ? "" : count_words(from_cards, "value comes", "values come") + " from indicator cards.";
+    if (section.lines.empty()) {
+        section.sentence = upper_first(cards);
         return section;
+    }
     section.level = Level::note;
     const std::size_t relations = section.lines.size() - doubts;
     std::vector<std::string> what;
@@ -95,7 +101,7 @@ ReviewSection entry_section(const ReviewContext& context)
         what.push_back(count_words(doubts, "value is in doubt", "values are in doubt"));
     if (relations > 0)
         what.push_back(count_words(relations, "comparison between values does not fit", "comparisons between values do not fit"));
-    section.sentence = upper_first(and_list(what)) + ". Settle this first: it spoils everything below.";
+    section.sentence = upper_first(and_list(what)) + ". Settle this first: it spoils everything below." + (cards.empty() ? "" : " " + upper_first(cards));
     return section;
 }
 

@@ -42,7 +42,7 @@ std::string part_words(const Engine& engine, const Place& place)
 
 std::string words_as_typed(const Value& value)
 {
-    std::string text = "typed ";
+    std::string text = value.origin == Origin::card ? "from the indicator card " : "typed ";
     text += value.typed.empty() && value.number ? number_text(*value.number) : value.typed;
     const std::string symbol = value.unit_typed.empty() ? std::string(unit(value.unit).symbol) : value.unit_typed;
     if (symbol != "1" && !symbol.empty())

@@ -207,6 +207,22 @@ TEST(ReadingReview, FuelIsNotJudgedWhileThePowerIsInDoubt)
     EXPECT_NE(entry->sentence.find("Settle this first"), std::string::npos);
 }
 
+TEST(ReadingReview, SaysHowManyValuesComeFromCards)
+{
+    EngineRecord record = sound_record();
+    int cards = 0;
+    for (Value& value : record.readings.back().values)
+        if (quantity(value.quantity).name == "maximum_pressure") {
+            value.origin = Origin::card;
+            ++cards;
+        }
+    ASSERT_EQ(cards, 6);
+    const ReadingReview review = review_reading(judged(std::move(record)), 23);
+    const ReviewSection* entry = find(review, ReviewTopic::entry);
+    ASSERT_TRUE(entry);
+    EXPECT_NE(entry->sentence.find("6 values come from indicator cards."), std::string::npos) << entry->sentence;
+}
+
 TEST(ReadingReview, WhatWasNotReadIsNamed)
 {
     EngineRecord record = sound_record();
