@@ -203,8 +203,8 @@ void ReadingPage::keyPressEvent(QKeyEvent* event)
     case Qt::Key_PageUp: walk_readings(-1); return;
     case Qt::Key_PageDown: walk_readings(1); return;
     case Qt::Key_A: ui_->table_button->toggle(); return;
-    case Qt::Key_I: ui_->iron_button->toggle(); return;
-    case Qt::Key_X: ui_->part_button->click(); return;
+    case Qt::Key_Z: ui_->iron_button->toggle(); return;
+    case Qt::Key_J: ui_->part_button->click(); return;
     default: Page::keyPressEvent(event);
     }
 }

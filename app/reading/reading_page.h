@@ -23,7 +23,7 @@ class ReviewView;
 /// row in hand.
 ///
 /// Keys: up and down the row, Enter its trend, W or Space its workings, Page Up and Page Down the reading before and
-/// after, 1 to 5 what stands beside it, A its numbers as a table, X the next part of the wall, I the wall as iron.
+/// after, 1 to 5 what stands beside it, A its numbers as a table, J the next part of the wall, Z the wall as iron.
 class ReadingPage : public Page
 {
     Q_OBJECT
