@@ -83,7 +83,7 @@ private:
     const Engine* engine() const;
 
     std::unique_ptr<Ui::CardFilesPage> ui_;
-    CardFilesRun run_;
+    CardFilesRun run_{this};
     QTimer soon_; ///< the preview waits for the end of typing
     std::shared_ptr<const Judgement> judgement_;
     QString shown_engine_;

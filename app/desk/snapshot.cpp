@@ -2,6 +2,8 @@
 #include "app/desk/snapshot.h"
 
 #include "app/desk/frame.h"
+#include "app/desk/page.h"
+#include "app/desk/worker_run.h"
 #include "app/desk/workplace.h"
 
 #include <QApplication>
@@ -10,7 +12,23 @@
 #include <QTextStream>
 #include <QThread>
 
+#include <algorithm>
+
 namespace evenstroke {
+
+namespace {
+
+/// Whether the page is still at work on what it is going to show.
+bool at_work(const Frame& frame)
+{
+    const Page* page = frame.current_page();
+    if (!page)
+        return false;
+    const auto runs = page->findChildren<WorkerRun*>();
+    return std::any_of(runs.begin(), runs.end(), [](const WorkerRun* run) { return run->busy(); });
+}
+
+} // namespace
 
 int take_snapshot(Frame& frame, Workplace& workplace, const QString& file)
 {
@@ -26,7 +44,7 @@ int take_snapshot(Frame& frame, Workplace& workplace, const QString& file)
         QApplication::processEvents(QEventLoop::AllEvents, 20);
         QThread::msleep(5);
         ++rounds;
-        if (!workplace.activity().isEmpty()) {
+        if (!workplace.activity().isEmpty() || at_work(frame)) {
             quiet.restart();
             rounds = 0;
         }

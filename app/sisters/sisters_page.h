@@ -31,7 +31,7 @@ private:
     std::vector<QStringList> rows() const;
     QString below() const;
 
-    SisterRun run_;
+    SisterRun run_{this};
     std::shared_ptr<const Judgement> asked_for_; ///< the judgement at which the sisters were looked for
 };
 
