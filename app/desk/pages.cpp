@@ -3,6 +3,7 @@
 
 #include "app/board/board_page.h"
 #include "app/cards/card_files_page.h"
+#include "app/cards/cards_page.h"
 #include "app/causes/causes_page.h"
 #include "app/desk/frame.h"
 #include "app/desk/history_page.h"
@@ -67,6 +68,7 @@ void add_all_pages(Frame& frame)
     frame.add_page({QStringLiteral("trend"), Frame::tr("Trend"), u'T', maker<TrendPage>()});
     frame.add_page({QStringLiteral("reading"), Frame::tr("One reading"), u'R', maker<ReadingPage>()});
     frame.add_page({QStringLiteral("enter"), Frame::tr("Enter"), u'E', maker<EntryPage>(), {}, open_draft});
+    frame.add_page({QStringLiteral("cards"), Frame::tr("Cards"), u'C', maker<CardsPage>()});
     frame.add_page({QStringLiteral("events"), Frame::tr("Events"), u'D', maker<EventsPage>()});
     frame.add_page({QStringLiteral("engine"), Frame::tr("Engine"), u'G', maker<EnginePage>()});
     frame.add_page({QStringLiteral("survey"), Frame::tr("Survey"), u'S', maker<SurveyPage>()});

@@ -109,6 +109,12 @@ QPen Theme::pen(const QColor& colour, int style_index) const
                                          : Qt::SolidLine};
 }
 
+QColor mixed(const QColor& from, const QColor& to, double share)
+{
+    const auto mix = [share](int a, int b) { return static_cast<int>(a + share * (b - a)); };
+    return {mix(from.red(), to.red()), mix(from.green(), to.green()), mix(from.blue(), to.blue())};
+}
+
 const Theme& theme_of(ThemeKind kind)
 {
     static const Theme day = make_day(), night = make_night(), print = make_print();

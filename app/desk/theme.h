@@ -39,6 +39,9 @@ struct Theme
     QPen pen(const QColor& colour, int style_index = 0) const;
 };
 
+/// A solid colour between two. @param share 0 gives `from`, 1 gives `to`
+QColor mixed(const QColor& from, const QColor& to, double share);
+
 const Theme& theme_of(ThemeKind kind);
 /// The one in force on the screen (day or night).
 const Theme& theme();

@@ -13,7 +13,7 @@ namespace evenstroke {
 
 SignatureDialog::SignatureDialog(const QString& title, const QString& words, const QString& action,
                                  const storage::Signature& before, QWidget* parent)
-    : QDialog(parent), who_(new QLineEdit(to_qstring(before.who), this)), why_(new QLineEdit(this))
+    : QDialog(parent), who_(new QLineEdit(to_qstring(before.who), this)), why_(new QLineEdit(to_qstring(before.why), this))
 {
     setWindowTitle(title);
     auto* explained = new QLabel(words, this);
@@ -34,7 +34,7 @@ SignatureDialog::SignatureDialog(const QString& title, const QString& words, con
     connect(buttons, &QDialogButtonBox::accepted, this, &QDialog::accept);
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     look();
-    (before.who.empty() ? who_ : why_)->setFocus();
+    (before.who.empty() ? static_cast<QWidget*>(who_) : before.why.empty() ? static_cast<QWidget*>(why_) : go_on)->setFocus();
 }
 
 storage::Signature SignatureDialog::signature() const

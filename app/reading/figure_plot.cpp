@@ -14,12 +14,6 @@ constexpr double dot_size = 6.0, old_dot_size = 4.0, bar_end = 4.0, reach = 10.0
 constexpr int plain_margin = 12, bottom_margin = 40, top_margin = 24, number_column = 44;
 constexpr int paleness_steps = 5;
 
-QColor mixed(const QColor& from, const QColor& to, double share)
-{
-    const auto mix = [share](int a, int b) { return static_cast<int>(a + share * (b - a)); };
-    return {mix(from.red(), to.red()), mix(from.green(), to.green()), mix(from.blue(), to.blue())};
-}
-
 } // namespace
 
 FigurePlot::FigurePlot(QWidget* parent) : QCustomPlot(parent), theme_(&theme())

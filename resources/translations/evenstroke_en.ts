@@ -4,7 +4,52 @@
 <!-- English words that count: one and many. The other texts stand in the sources. -->
 <TS version="2.1" language="en" sourcelanguage="en">
 <context>
+    <name>evenstroke::CardsPage</name>
+    <message numerus="yes">
+        <source>%n value(s) put in</source>
+        <translation>
+            <numerusform>1 value put in</numerusform>
+            <numerusform>%n values put in</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n earlier value(s) of a card corrected</source>
+        <translation>
+            <numerusform>1 earlier value of a card corrected</numerusform>
+            <numerusform>%n earlier values of cards corrected</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n stood there already</source>
+        <translation>
+            <numerusform>1 stood there already</numerusform>
+            <numerusform>%n stood there already</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n read by hand left as they are</source>
+        <translation>
+            <numerusform>1 read by hand left as it is</numerusform>
+            <numerusform>%n read by hand left as they are</numerusform>
+        </translation>
+    </message>
+</context>
+<context>
     <name>evenstroke</name>
+    <message numerus="yes">
+        <source>%1: %n remark(s).</source>
+        <translation>
+            <numerusform>%1: one remark.</numerusform>
+            <numerusform>%1: %n remarks.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n remark(s)</source>
+        <translation>
+            <numerusform>1 remark</numerusform>
+            <numerusform>%n remarks</numerusform>
+        </translation>
+    </message>
     <message numerus="yes">
         <source>carried by %n reading(s) since %1</source>
         <translation>

@@ -1,0 +1,117 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// What the page Cards writes: results into the reading, and which cards are the healthy ones.
+#include "app/cards/cards_page.h"
+#include "app/desk/number_text.h"
+#include "app/desk/reading_in_hand.h"
+#include "app/desk/workplace.h"
+#include "app/entry/signature_dialog.h"
+#include "app/settings/person.h"
+#include "storage/healthy_cards.h"
+#include "storage/reading_store.h"
+#include "ui_cards_page.h"
+
+#include <QPushButton>
+
+#include <algorithm>
+
+namespace evenstroke {
+
+namespace {
+
+std::vector<storage::ValueFromCard> values_of(const CardsInHand& cards)
+{
+    std::vector<storage::ValueFromCard> values;
+    for (const indicator::ReviewedCard& card : cards.review.cards)
+        for (const indicator::CardValue& value : card.values)
+            values.push_back({value.quantity, Place::cylinder(card.cylinder), value.number, {quantity(value.quantity).unit, PressureKind::none}});
+    return values;
+}
+
+} // namespace
+
+bool CardsPage::called_healthy() const
+{
+    return reading_ && std::find(stored_.called_healthy.begin(), stored_.called_healthy.end(), *reading_) != stored_.called_healthy.end();
+}
+
+void CardsPage::show_deeds()
+{
+    const bool writable = !workplace().read_only();
+    ui_->accept_button->setVisible(writable && cards_ && !values_of(*cards_).empty());
+    ui_->healthy_button->setVisible(writable && cards_);
+    ui_->healthy_button->setText(called_healthy() ? tr("no longer healthy… (J)") : tr("these cards are healthy… (J)"));
+    ui_->bring_button->setVisible(writable);
+}
+
+void CardsPage::ask_accept()
+{
+    if (!cards_ || !reading_ || workplace().read_only())
+        return;
+    SignatureDialog dialog(tr("Results into the reading"),
+                           tr("Mean indicated, maximum, compression and expansion pressure and the angle of the maximum of all cards go into the "
+                              "reading of %1, marked as from the card. What was read by hand stays as it is.")
+                               .arg(reading_title(*judgement_, *reading_)),
+                           tr("Put them in"), {to_std(person_name()), to_std(tr("from the cards"))}, this);
+    if (dialog.exec() == QDialog::Accepted)
+        accept_results(dialog.signature());
+}
+
+bool CardsPage::accept_results(const storage::Signature& by)
+{
+    if (!cards_ || !reading_ || !workplace().history())
+        return false;
+    const auto accepted = storage::ReadingStore(*workplace().history())
+                              .accept_card_values(judgement_->record->readings[*reading_].id, values_of(*cards_), by);
+    if (!accepted) {
+        say(to_qstring(accepted.error().text()));
+        return false;
+    }
+    set_person_name(to_qstring(by.who));
+    const storage::AcceptedFromCards& result = accepted.value();
+    QStringList words;
+    if (result.added > 0)
+        words.append(tr("%n value(s) put in", nullptr, result.added));
+    if (result.corrected > 0)
+        words.append(tr("%n earlier value(s) of a card corrected", nullptr, result.corrected));
+    if (result.same > 0)
+        words.append(tr("%n stood there already", nullptr, result.same));
+    if (!result.left_alone.empty())
+        words.append(tr("%n read by hand left as they are", nullptr, static_cast<int>(result.left_alone.size())));
+    say(words.join(QStringLiteral(", ")) + u'.');
+    workplace().changed();
+    return true;
+}
+
+void CardsPage::ask_healthy()
+{
+    if (!cards_ || !reading_ || workplace().read_only())
+        return;
+    const QString day = reading_title(*judgement_, *reading_);
+    const bool take_back = called_healthy();
+    SignatureDialog dialog(take_back ? tr("No longer the healthy cards") : tr("The healthy cards"),
+                           take_back ? tr("The cards of %1 are no longer what others are compared with. They stay with their reading.").arg(day)
+                                     : tr("Later cards at nearly this load are compared with those of %1, and dead centre of the installation is "
+                                          "taken from them. Choose a reading at steady load with every cylinder in order; the shop trial's or the "
+                                          "first after an overhaul are usual.").arg(day),
+                           take_back ? tr("Take back") : tr("Call them healthy"), {to_std(person_name()), {}}, this);
+    if (dialog.exec() == QDialog::Accepted)
+        call_healthy(!take_back, dialog.signature());
+}
+
+bool CardsPage::call_healthy(bool healthy, const storage::Signature& by)
+{
+    if (!reading_ || !workplace().history())
+        return false;
+    const auto said = storage::HealthyCardStore(*workplace().history()).say(judgement_->record->readings[*reading_].id, healthy, by.why, by);
+    if (!said) {
+        say(to_qstring(said.error().text()));
+        return false;
+    }
+    set_person_name(to_qstring(by.who));
+    say(healthy ? tr("Later cards are compared with these.") : tr("These cards are no longer compared with."));
+    workplace().changed();
+    refresh();
+    return true;
+}
+
+} // namespace evenstroke
