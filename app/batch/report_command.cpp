@@ -3,6 +3,7 @@
 
 #include "app/batch/engines.h"
 #include "app/batch/long_work.h"
+#include "app/cards/card_shelf.h"
 #include "app/survey/report_sources.h"
 #include "app/survey/report_writer.h"
 
@@ -55,7 +56,9 @@ int run_report(const QCommandLineParser& parser, Streams& streams)
     details.date = date;
     details.program_version = EVENSTROKE_VERSION;
     const ReportPeriod period{*from, *to + 24h - 1s};
-    const SurveyReport report = make_survey_report(judge(sources.value().record), period, details);
+    const Judgement judgement = judge(sources.value().record);
+    details.cards = review_newest_cards(*history.value(), judgement, period.from, period.to);
+    const SurveyReport report = make_survey_report(judgement, period, details);
     const QString path = parser.value(QStringLiteral("out"));
     const auto written = write_survey_pdf(report, path);
     if (!written.has_value())

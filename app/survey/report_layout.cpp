@@ -201,7 +201,7 @@ private:
 
     void put(const Table& table) { set_table(table, setter_); }
 
-    /// Plots over load stand beside each other, two on a standing page and three on a lying one.
+    /// Plots over load or angle stand beside each other, two on a standing page and three on a lying one.
     void put(const Plot& plot)
     {
         if (plot.across == Plot::Across::time) {
@@ -222,7 +222,7 @@ private:
         setter_.need(small_plot_height);
         for (int column = 0; column < beside; ++column) {
             const Plot* next = at_ < section_.blocks.size() ? std::get_if<Plot>(&section_.blocks[at_]) : nullptr;
-            if (!next || next->across != Plot::Across::load)
+            if (!next || next->across != plot.across)
                 break;
             setter_.item(PlotItem{QRectF(Typesetter::left + (wide + between) * column, setter_.y(), wide, small_plot_height), next});
             ++at_;

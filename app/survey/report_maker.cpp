@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/survey/report_maker.h"
 
+#include "app/cards/card_shelf.h"
 #include "app/survey/report_sources.h"
 #include "storage/history.h"
 
@@ -17,8 +18,9 @@ Result<std::shared_ptr<const ReportLayout>> make_layout(const ReportWish& wish)
     auto sources = load_report_sources(*history.value(), wish.engine_id.toStdString());
     if (!sources.has_value())
         return sources.error();
-    const ReportDetails details = with_found(wish.details, sources.value().details);
+    ReportDetails details = with_found(wish.details, sources.value().details);
     const Judgement judgement = judge(sources.value().record);
+    details.cards = review_newest_cards(*history.value(), judgement, wish.period.from, wish.period.to);
     auto report = std::make_shared<const SurveyReport>(make_survey_report(judgement, wish.period, details));
     return std::make_shared<const ReportLayout>(lay_out(std::move(report)));
 }

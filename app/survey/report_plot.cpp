@@ -210,7 +210,7 @@ void add_line(QCustomPlot& widget, const PlotLine& line, int style, double label
         graph->setAdaptiveSampling(true);
         graph->setData(across, value, true);
     }
-    if (line.in_question) {
+    if (line.in_question && !line.without_marks) {
         add_points(widget, line, PlotPoint::Mark::filled, {QCPScatterStyle::ssDisc, 2.6});
         add_points(widget, line, PlotPoint::Mark::hollow, {QCPScatterStyle::ssCircle, colour, Qt::white, 4.0});
         add_points(widget, line, PlotPoint::Mark::crossed, {QCPScatterStyle::ssCross, 4.0});
@@ -305,7 +305,9 @@ void add_title(QCustomPlot& widget, const Plot& plot)
     unit->position->setType(QCPItemPosition::ptAbsolute);
     unit->position->setCoords(0.0, 11.5);
     unit->setPositionAlignment(Qt::AlignLeft | Qt::AlignTop);
-    unit->setText(words_of(plot.value_title) + (plot.across == Plot::Across::load ? QStringLiteral(" over load, %") : QString())
+    unit->setText(words_of(plot.value_title) + (plot.across == Plot::Across::load    ? QStringLiteral(" over load, %")
+                                                : plot.across == Plot::Across::angle ? QStringLiteral(" over crank angle, °")
+                                                                                     : QString())
                   + (plot.band ? QStringLiteral("; grey: usual range") : QString())
                   + (plot.learning.empty() ? QString() : QStringLiteral("; hatched: learning, no flag possible yet")));
     unit->setFont(report_font(ReportFont::body));

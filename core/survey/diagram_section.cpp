@@ -10,7 +10,7 @@ Section diagrams_section(const Context& context)
     Section section{"Indicator diagrams", false, {}};
     Table table{"Kept in the history with the readings of the period",
                 {{"Reading", Column::Kind::words}, {"Date", Column::Kind::words}, {"Cylinders", Column::Kind::remark}}, {}, 1,
-                "The traces are kept as they were taken; this report does not draw them."};
+                "The traces are kept as they were taken."};
     for (const std::size_t i : context.readings) {
         const Reading& reading = context.record.readings[i];
         std::string cylinders;
@@ -24,6 +24,7 @@ Section diagrams_section(const Context& context)
         section.blocks.push_back(Paragraph{"None in this period: the history holds no indicator diagram with its readings.", {}});
     else
         section.blocks.push_back(std::move(table));
+    add_cards(context, section);
     return section;
 }
 

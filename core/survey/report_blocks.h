@@ -79,7 +79,7 @@ struct Table
 struct PlotPoint
 {
     enum class Mark { filled, hollow, crossed };
-    double across = 0.0; ///< seconds since 1970 UTC, or load in per cent
+    double across = 0.0; ///< seconds since 1970 UTC, load in per cent, or degrees after firing dead centre
     double value = 0.0;
     Mark mark = Mark::filled;
 };
@@ -90,12 +90,13 @@ struct PlotLine
     std::vector<PlotPoint> points;
     bool in_question = false; ///< drawn strong and labelled; the others are quiet
     bool points_only = false;
+    bool without_marks = false; ///< a curve of many points
 };
 
-/// A curve over time or load with what belongs to it.
+/// A curve over time, load or crank angle with what belongs to it.
 struct Plot
 {
-    enum class Across { time, load };
+    enum class Across { time, load, angle };
     struct At
     {
         double across = 0.0;

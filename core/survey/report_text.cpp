@@ -13,6 +13,8 @@ std::string across_text(const Plot& plot, double across)
 {
     if (plot.across == Plot::Across::load)
         return rounded_text(across, 1) + " %";
+    if (plot.across == Plot::Across::angle)
+        return rounded_text(across, 0) + "°";
     return date_text(TimePoint(std::chrono::seconds(static_cast<long long>(across))));
 }
 

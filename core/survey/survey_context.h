@@ -71,6 +71,9 @@ std::string flag_line(const Judgement& judgement, const Flag& flag);
 /// "Cylinder 4, compression pressure"
 std::string flag_subject(const Judgement& judgement, const Flag& flag);
 
+/// The results, remarks and differences of the cards that were evaluated for the report.
+void add_cards(const Context&, Section&);
+
 // The sections, in the order of print.
 Section title_section(const Context&);
 Section summary_section(const Context&);

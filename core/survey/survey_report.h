@@ -1,9 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/card/card_review.h"
 #include "core/survey/report_blocks.h"
 #include "core/trend/judgement.h"
 
+#include <memory>
 #include <optional>
 #include <string>
 #include <vector>
@@ -59,6 +61,7 @@ struct ReportDetails
     std::optional<std::size_t> revisions;
     std::vector<CorrectionLine> corrections;
     std::vector<DiagramLine> diagrams;
+    std::shared_ptr<const indicator::CardReview> cards; ///< of the newest reading of the period that has any; null: not evaluated
     std::vector<EngineChangeLine> engine_changes;
     std::string chief_engineer, chief_licence, superintendent; ///< empty: left blank for the pen
 };
