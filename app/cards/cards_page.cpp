@@ -23,7 +23,7 @@ namespace evenstroke {
 
 namespace {
 
-constexpr int result_row = 20, narrow_left = 448, widest_left = 600;
+constexpr int result_row = 20, narrow_left = 488, widest_left = 600;
 constexpr double zoom_step = 0.7;
 
 /// On a narrow window the words of a row go on in the next line.
