@@ -137,6 +137,13 @@ QCPItemText* CardPlot::add_text(const QString& text, const QColor& colour, Qt::A
     return item;
 }
 
+void CardPlot::stand_over_x(QCPItemPosition& position)
+{
+    position.setTypeX(QCPItemPosition::ptPlotCoords);
+    position.setTypeY(QCPItemPosition::ptAxisRectRatio);
+    position.setAxisRect(axisRect());
+}
+
 /// Shaded from top to bottom; the names stand at the top within the plot.
 void CardPlot::add_parts()
 {
@@ -146,11 +153,8 @@ void CardPlot::add_parts()
             area->setLayer(QStringLiteral("background"));
             area->setPen(QPen(Qt::NoPen));
             area->setBrush(theme_->print() ? QBrush(theme_->rule) : QBrush(theme_->sheet));
-            for (auto* corner : {area->topLeft, area->bottomRight}) {
-                corner->setTypeX(QCPItemPosition::ptPlotCoords);
-                corner->setTypeY(QCPItemPosition::ptAxisRectRatio);
-                corner->setAxisRect(axisRect());
-            }
+            for (auto* corner : {area->topLeft, area->bottomRight})
+                stand_over_x(*corner);
             area->topLeft->setCoords(part.from, 0.0);
             area->bottomRight->setCoords(part.to, 1.0);
         }
@@ -158,18 +162,13 @@ void CardPlot::add_parts()
             continue;
         QCPItemText* name = add_text(part.name, part.shaded ? theme_->ink : theme_->muted, Qt::AlignHCenter | Qt::AlignTop);
         name->setClipToAxisRect(true);
-        name->position->setTypeX(QCPItemPosition::ptPlotCoords);
-        name->position->setTypeY(QCPItemPosition::ptAxisRectRatio);
-        name->position->setAxisRect(axisRect());
+        stand_over_x(*name->position);
         name->position->setCoords(0.5 * (std::max(part.from, picture_.x_low) + std::min(part.to, picture_.x_high)), 0.0);
         name->setPadding(QMargins(0, 3, 0, 0));
         auto* edge = new QCPItemLine(this);
         edge->setPen(theme_->pen(theme_->rule));
-        for (auto* end : {edge->start, edge->end}) {
-            end->setTypeX(QCPItemPosition::ptPlotCoords);
-            end->setTypeY(QCPItemPosition::ptAxisRectRatio);
-            end->setAxisRect(axisRect());
-        }
+        for (auto* end : {edge->start, edge->end})
+            stand_over_x(*end);
         edge->start->setCoords(part.to, 0.0);
         edge->end->setCoords(part.to, 1.0);
     }
@@ -232,18 +231,13 @@ void CardPlot::add_marks()
         QPen pen = theme_->pen(mark.role == FigureRole::guide ? theme_->others : theme_->muted);
         pen.setStyle(Qt::DashLine);
         line->setPen(pen);
-        for (auto* end : {line->start, line->end}) {
-            end->setTypeX(QCPItemPosition::ptPlotCoords);
-            end->setTypeY(QCPItemPosition::ptAxisRectRatio);
-            end->setAxisRect(axisRect());
-        }
+        for (auto* end : {line->start, line->end})
+            stand_over_x(*end);
         line->start->setCoords(mark.at, 0.0);
         line->end->setCoords(mark.at, 1.0);
         QCPItemText* label = add_text(mark.label, theme_->muted, Qt::AlignLeft | Qt::AlignBottom);
         label->setClipToAxisRect(true);
-        label->position->setTypeX(QCPItemPosition::ptPlotCoords);
-        label->position->setTypeY(QCPItemPosition::ptAxisRectRatio);
-        label->position->setAxisRect(axisRect());
+        stand_over_x(*label->position);
         label->position->setCoords(mark.at, 1.0 - 0.07 * static_cast<double>(&mark - picture_.marks.data()));
         label->setPadding(QMargins(4, 0, 0, 2));
     }

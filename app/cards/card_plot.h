@@ -56,6 +56,7 @@ private:
     void add_titles();
     void keep_within();
     QColor colour_of(FigureRole role) const;
+    void stand_over_x(QCPItemPosition& position); ///< at a value of x, at a share of the plot's height
     QCPItemText* add_text(const QString& text, const QColor& colour, Qt::Alignment alignment);
 
     CardPicture picture_;

@@ -45,11 +45,8 @@ void CardPlot::set_cursor(std::optional<double> x)
         cursor_line_ = new QCPItemLine(this);
         cursor_line_->setLayer(QStringLiteral("overlay"));
         cursor_line_->setPen(theme_->pen(theme_->ink));
-        for (auto* end : {cursor_line_->start, cursor_line_->end}) {
-            end->setTypeX(QCPItemPosition::ptPlotCoords);
-            end->setTypeY(QCPItemPosition::ptAxisRectRatio);
-            end->setAxisRect(axisRect());
-        }
+        for (auto* end : {cursor_line_->start, cursor_line_->end})
+            stand_over_x(*end);
     }
     if (cursor_line_) {
         cursor_line_->setVisible(cursor_.has_value());

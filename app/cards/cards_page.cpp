@@ -26,20 +26,6 @@ namespace {
 constexpr int result_row = 20, narrow_left = 488, widest_left = 600;
 constexpr double zoom_step = 0.7;
 
-/// On a narrow window the words of a row go on in the next line.
-void let_flow(QHBoxLayout& row)
-{
-    auto* words = new QWidget;
-    auto* flow = new FlowLayout(words, row.spacing());
-    flow->setContentsMargins(0, 0, 0, 0);
-    while (QLayoutItem* item = row.takeAt(0)) {
-        if (QWidget* button = item->widget())
-            flow->addWidget(button);
-        delete item;
-    }
-    row.addWidget(words);
-}
-
 } // namespace
 
 CardsPage::CardsPage(Workplace& place, QWidget* parent) : Page(place, parent), ui_(std::make_unique<Ui::CardsPage>())

@@ -1,6 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/desk/flow_layout.h"
 
+#include <QBoxLayout>
+#include <QWidget>
+
 #include <algorithm>
 
 namespace evenstroke {
@@ -60,6 +63,19 @@ int FlowLayout::lay_out(const QRect& area, bool place) const
         line_height = std::max(line_height, size.height());
     }
     return y + line_height - area.top() + margins.bottom();
+}
+
+void let_flow(QHBoxLayout& row)
+{
+    auto* words = new QWidget;
+    auto* flow = new FlowLayout(words, row.spacing());
+    flow->setContentsMargins(0, 0, 0, 0);
+    while (QLayoutItem* item = row.takeAt(0)) {
+        if (QWidget* button = item->widget())
+            flow->addWidget(button);
+        delete item;
+    }
+    row.addWidget(words);
 }
 
 } // namespace evenstroke

@@ -5,6 +5,8 @@
 
 #include <vector>
 
+class QHBoxLayout;
+
 namespace evenstroke {
 
 /// Sets its items side by side like words, on the next line where the width is used up.
@@ -32,5 +34,8 @@ private:
     std::vector<QLayoutItem*> items_;
     int gap_;
 };
+
+/// On a narrow window the words of a row go on in the next line.
+void let_flow(QHBoxLayout& row);
 
 } // namespace evenstroke

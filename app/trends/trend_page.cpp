@@ -28,20 +28,6 @@ std::array<QPushButton*, 4> view_buttons(const Ui::TrendPage& ui)
     return {ui.raw_button, ui.corrected_button, ui.deviation_button, ui.apart_button};
 }
 
-/// On a narrow window the words of a row go on in the next line.
-void let_flow(QHBoxLayout& row)
-{
-    auto* words = new QWidget;
-    auto* flow = new FlowLayout(words, row.spacing());
-    flow->setContentsMargins(0, 0, 0, 0);
-    while (QLayoutItem* item = row.takeAt(0)) {
-        if (QWidget* button = item->widget())
-            flow->addWidget(button);
-        delete item;
-    }
-    row.addWidget(words);
-}
-
 } // namespace
 
 TrendPage::TrendPage(Workplace& place, QWidget* parent) : Page(place, parent), ui_(std::make_unique<Ui::TrendPage>())
