@@ -164,12 +164,18 @@ QString spread_sentence(const Evaluation& card)
 
 QString exponent_sentence(const Evaluation& card)
 {
-    QStringList words;
+    QStringList exponents;
     if (card.compression_exponent)
-        words.append(tr_("compression %1 (usual 1.28 to 1.42)").arg(number_text(*card.compression_exponent, 3)));
+        exponents.append(tr_("compression %1 (usual 1.28 to 1.42)").arg(number_text(*card.compression_exponent, 3)));
     if (card.expansion_exponent)
-        words.append(tr_("expansion %1 (usual 1.15 to 1.40)").arg(number_text(*card.expansion_exponent, 3)));
-    return words.isEmpty() ? tr_("The exponents are not known.") : tr_("Polytropic exponents: %1; usual values are common practice.").arg(words.join(QStringLiteral(", ")));
+        exponents.append(tr_("expansion %1 (usual 1.15 to 1.40)").arg(number_text(*card.expansion_exponent, 3)));
+    QString words = exponents.isEmpty() ? tr_("The exponents are not known.")
+                                        : tr_("Polytropic exponents: %1; usual values are common practice.").arg(exponents.join(QStringLiteral(", ")));
+    if (card.forces)
+        words += u' ' + tr_("The cylinder turns the shaft with %1 kNm on average and %2 at most, and presses sideways with up to %3 kN%4.")
+                            .arg(whole_text(card.forces->mean_moment), whole_text(card.forces->largest_moment), whole_text(card.forces->largest_guide),
+                                 card.forces->gas_force_only ? tr_(" (gas force only: no moving mass is entered)") : QString());
+    return words;
 }
 
 QString heat_sentence(const Evaluation& card)

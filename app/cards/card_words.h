@@ -19,7 +19,7 @@ QString difference_sentence(const CardsInHand& cards, const indicator::ReviewedC
 
 QString fit_sentence(const indicator::Evaluation& card);      ///< what the compression says of dead centre and zero
 QString spread_sentence(const indicator::Evaluation& card);   ///< from cycle to cycle
-QString exponent_sentence(const indicator::Evaluation& card); ///< polytropic exponents
+QString exponent_sentence(const indicator::Evaluation& card); ///< polytropic exponents, and what the crank gear gets
 QString heat_sentence(const indicator::Evaluation& card);
 QString temperature_sentence(const indicator::Evaluation& card);
 
