@@ -210,7 +210,7 @@ private:
     {
         picture_.x_low = around_from;
         picture_.x_high = around_to;
-        picture_.y_title = tr_("bar abs: this card; dashed: the compression carried on as without combustion; shaded: where it was fitted");
+        picture_.y_title = tr_("bar abs; dashed: as without combustion; light: where it was fitted");
         if (evaluation_.window_to > evaluation_.window_from)
             picture_.parts.push_back({std::max(evaluation_.window_from, around_from), evaluation_.window_to, QString(), true});
         picture_.cycles = envelope_;
