@@ -6,6 +6,7 @@
 #include "core/plain_text.h"
 #include "core/units/unit_catalogue.h"
 #include "storage/plain_number.h"
+#include "storage/named_file.h"
 #include "storage/sql.h"
 
 #include <QFile>
@@ -219,12 +220,8 @@ std::string_view as_text(const QByteArray& content)
 Result<QByteArray> card_file_content(const QString& path)
 {
     QFile file(path);
-    if (!file.exists())
-        return Problem{Problem::Kind::not_found, "There is no file \"" + from_qt(path) + "\".",
-                       "Check its name."};
-    if (!file.open(QIODevice::ReadOnly))
-        return Problem{Problem::Kind::storage, "\"" + from_qt(path) + "\" cannot be read.",
-                       "Check that you have the right to read it."};
+    if (const auto problem = open_named(file))
+        return *problem;
     if (file.size() > largest_file)
         return invalid_input("\"" + from_qt(path) + "\" is larger than 256 MB, which no card is.",
                              "Choose the file of one cylinder's card.");

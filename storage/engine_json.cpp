@@ -3,6 +3,7 @@
 
 #include "core/plain_text.h"
 #include "storage/engine_json_checks.h"
+#include "storage/named_file.h"
 #include "storage/sql.h"
 
 #include <QFile>
@@ -171,12 +172,8 @@ Result<EngineDocument> read_engine_file(const QString& path)
 {
     QFile file(path);
     const std::string name = from_qt(QFileInfo(path).fileName());
-    if (!file.exists())
-        return Problem{Problem::Kind::not_found, "There is no file \"" + from_qt(path) + "\".",
-                       "Check its name."};
-    if (!file.open(QIODevice::ReadOnly))
-        return Problem{Problem::Kind::storage, "\"" + from_qt(path) + "\" cannot be read.",
-                       "Check that you have the right to read it."};
+    if (const auto problem = open_named(file))
+        return *problem;
     const QByteArray content = file.read(largest_document + 1);
     return read_engine_document(
         std::string_view(content.constData(), static_cast<std::size_t>(content.size())), name);

@@ -3,6 +3,7 @@
 
 #include "core/plain_text.h"
 #include "storage/card_file.h"
+#include "storage/named_file.h"
 #include "storage/sql.h"
 
 #include <QFile>
@@ -304,12 +305,8 @@ std::vector<std::string> split_line(std::string_view line, ColumnSeparator separ
 Result<std::string> first_lines_of(const QString& path, int lines)
 {
     QFile file(path);
-    if (!file.exists())
-        return Problem{Problem::Kind::not_found, "There is no file \"" + from_qt(path) + "\".",
-                       "Check its name."};
-    if (!file.open(QIODevice::ReadOnly))
-        return Problem{Problem::Kind::storage, "\"" + from_qt(path) + "\" cannot be read.",
-                       "Check that you have the right to read it."};
+    if (const auto problem = open_named(file))
+        return *problem;
     const QByteArray beginning = file.read(longest_beginning);
     std::string_view rest(beginning.constData(), static_cast<std::size_t>(beginning.size()));
     if (rest.find('\0') != std::string_view::npos)

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "storage/trace_layout.h"
 
+#include "core/card/card_values.h"
 #include "core/card/trace.h"
 #include "core/plain_text.h"
 #include "storage/card_file.h"
@@ -18,7 +19,6 @@ namespace evenstroke::storage {
 namespace {
 
 constexpr int most_columns = 200;
-constexpr double usual_barometer = 1.013; // bar; only to look whether a gauge pressure can be
 
 char sign_of(ColumnSeparator separator)
 {
@@ -257,7 +257,7 @@ Result<ReadTrace> TraceText::trace_of(const PressureColumn& wanted, const Column
     indicator::Trace record{read.trace.cycle, read.trace.crank_angle_deg, read.trace.pressure_bar};
     if (layout_.gauge)
         for (double& pressure : record.pressure)
-            pressure += usual_barometer;
+            pressure += indicator::usual_barometer; // only to look whether a gauge pressure can be
     const auto clean = indicator::clean(record, {engine.kind == EngineKind::two_stroke,
                                                  engine.cylinder_closes_deg, engine.cylinder_opens_deg});
     if (!clean)

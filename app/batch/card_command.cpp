@@ -2,6 +2,7 @@
 #include "app/batch/card_command.h"
 
 #include "app/batch/long_work.h"
+#include "core/card/card_values.h"
 #include "core/card/evaluation.h"
 #include "core/plain_text.h"
 #include "core/units/unit_catalogue.h"
@@ -24,8 +25,6 @@ namespace {
 using indicator::CardResult;
 using indicator::Conditions;
 using indicator::Evaluation;
-
-constexpr double usual_barometer = 1.013; // bar
 
 /// A number typed after an option, within what can be.
 struct NumberOption
@@ -109,7 +108,7 @@ Answer evaluate_file(const Engine& engine, Conditions conditions, const QString&
     conditions.barometer_assumed = recorded.gauge;
     if (recorded.gauge)
         for (double& pressure : trace.pressure)
-            pressure += usual_barometer;
+            pressure += indicator::usual_barometer;
     const auto card = indicator::evaluate(engine, conditions, trace);
     if (card)
         return {as_json(file, card.value()), {}};

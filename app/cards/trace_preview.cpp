@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/cards/trace_preview.h"
 
+#include "app/desk/plain_axes.h"
 #include "app/desk/theme.h"
 
 #include <qcustomplot.h>
@@ -52,22 +53,7 @@ void TracePreview::draw()
     } else if (trace_ && trace_->trace) {
         add_line(trace_->trace->crank_angle_deg, trace_->trace->pressure_bar, theme().line, 0);
     }
-    for (QCPAxis* axis : {plot_->xAxis, plot_->yAxis}) {
-        axis->setTickLabelFont(type(TypeSize::label));
-        axis->setLabelFont(type(TypeSize::label));
-        axis->setTickLabelColor(theme().muted);
-        axis->setLabelColor(theme().muted);
-        axis->setBasePen(axis == plot_->xAxis ? QPen(theme().muted) : QPen(Qt::NoPen));
-        axis->setTickPen(axis->basePen());
-        axis->setSubTicks(false);
-        axis->setTickLengthIn(0);
-        axis->setTickLengthOut(axis == plot_->xAxis ? 4 : 0);
-        axis->ticker()->setTickCount(4);
-        axis->setNumberFormat(QStringLiteral("gb"));
-        axis->grid()->setPen(QPen(theme().rule));
-        axis->grid()->setZeroLinePen(QPen(theme().rule));
-    }
-    plot_->xAxis->grid()->setVisible(false);
+    style_plain_axes(*plot_, 4);
     plot_->xAxis->setLabel(tr("crank angle, °"));
     plot_->yAxis->setLabel(tr("pressure, bar"));
     plot_->rescaleAxes();

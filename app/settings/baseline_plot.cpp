@@ -2,6 +2,7 @@
 #include "app/settings/baseline_plot.h"
 
 #include "app/desk/number_text.h"
+#include "app/desk/plain_axes.h"
 #include "app/desk/theme.h"
 #include "core/engine/baseline.h"
 
@@ -98,22 +99,7 @@ void BaselinePlot::draw()
     plot_->setBackground(theme().page);
     draw_readings();
     draw_curve();
-    for (QCPAxis* axis : {plot_->xAxis, plot_->yAxis}) {
-        axis->setTickLabelFont(type(TypeSize::label));
-        axis->setLabelFont(type(TypeSize::label));
-        axis->setTickLabelColor(theme().muted);
-        axis->setLabelColor(theme().muted);
-        axis->setBasePen(axis == plot_->xAxis ? QPen(theme().muted) : QPen(Qt::NoPen));
-        axis->setTickPen(axis->basePen());
-        axis->setSubTicks(false);
-        axis->setTickLengthIn(0);
-        axis->setTickLengthOut(axis == plot_->xAxis ? 4 : 0);
-        axis->ticker()->setTickCount(5);
-        axis->setNumberFormat(QStringLiteral("gb"));
-        axis->grid()->setPen(QPen(theme().rule));
-        axis->grid()->setZeroLinePen(QPen(theme().rule));
-    }
-    plot_->xAxis->grid()->setVisible(false);
+    style_plain_axes(*plot_, 5);
     plot_->xAxis->setLabel(tr("load, %"));
     const auto id = find_quantity(quantity_);
     plot_->yAxis->setLabel(id ? tr("%1, %2").arg(quantity_title(*id), unit_text(*id)) : to_qstring(quantity_));
