@@ -5,6 +5,7 @@
 #include "sample_vessel/chance.h"
 #include "sample_vessel/cylinder_state.h"
 #include "sample_vessel/decimal_text.h"
+#include "sample_vessel/reading_maker.h"
 
 #include <algorithm>
 #include <charconv>
@@ -19,9 +20,9 @@ constexpr double noise_bar = 0.06;     // mean of 20 cycles; invented
 constexpr double trace_step_deg = 0.5;
 constexpr double closing_over_receiver_k = 32.0; // warmed by walls and old gas; common practice
 
-double typed(Sheet sheet, const std::string& quantity, int cylinder)
+double typed(Sheet sheet, const std::string& quantity)
 {
-    const Line* line = sheet.find(quantity, cylinder);
+    const Line* line = sheet.find(quantity, 0);
     double number = 0.0;
     if (line) // from_chars knows no locale
         std::from_chars(line->value.data(), line->value.data() + line->value.size(), number);
@@ -38,17 +39,17 @@ double lost_by_leak(const Scenario& scenario, int engine, int cylinder, const Sh
     return 0.0;
 }
 
-CardTarget target_of(const Scenario& scenario, int engine, const Sheet& sheet, int cylinder,
-                     double barometer_bar)
+CardTarget target_of(const SheetInputs& in, const Sheet& sheet, int cylinder, double barometer_bar)
 {
+    const auto true_value = [&](const std::string& quantity) { return cylinder_as_read(in, quantity, cylinder); };
     CardTarget target;
-    target.scavenge = typed(sheet, "scavenge_pressure", 0) + barometer_bar;
-    target.compression = typed(sheet, "compression_pressure", cylinder) + barometer_bar;
-    target.maximum = typed(sheet, "maximum_pressure", cylinder) + barometer_bar;
-    target.mean_indicated = typed(sheet, "mean_indicated_pressure", cylinder);
-    target.lost_by_leak = lost_by_leak(scenario, engine, cylinder, sheet.time);
-    target.speed_rpm = typed(sheet, "speed", 0);
-    target.closing_temperature_k = typed(sheet, "scavenge_temperature", 0) + 273.15 + closing_over_receiver_k;
+    target.scavenge = typed(sheet, "scavenge_pressure") + barometer_bar;
+    target.compression = true_value("compression_pressure") + barometer_bar;
+    target.maximum = true_value("maximum_pressure") + barometer_bar;
+    target.mean_indicated = true_value("mean_indicated_pressure");
+    target.lost_by_leak = lost_by_leak(*in.moment.scenario, in.moment.engine->number, cylinder, sheet.time);
+    target.speed_rpm = typed(sheet, "speed");
+    target.closing_temperature_k = typed(sheet, "scavenge_temperature") + 273.15 + closing_over_receiver_k;
     return target;
 }
 
@@ -81,15 +82,16 @@ std::vector<SampleFile> card_files(const Scenario& scenario, std::uint64_t seed,
                                    const std::vector<Sheet>& sheets)
 {
     const EngineDesign& design = scenario.engines[static_cast<std::size_t>(engine)];
-    const Chance chance(seed, scenario.scatter);
+    const Chance weather(seed), chance(seed, scenario.scatter);
     constexpr double barometer_bar = 1.014; // the usual one; the cards were taken in fair weather
     std::vector<SampleFile> files;
     for (const Sheet& sheet : sheets)
         for (const MonthOf& wanted : scenario.cards) {
             if (wanted.engine != engine || wanted.reading != sheet.name)
                 continue;
+            const SheetInputs in = true_inputs(scenario, weather, chance, engine, sheet.name);
             for (int cylinder = 1; cylinder <= design.cylinders; ++cylinder) {
-                const CardTarget target = target_of(scenario, engine, sheet, cylinder, barometer_bar);
+                const CardTarget target = target_of(in, sheet, cylinder, barometer_bar);
                 files.push_back(
                     {design.folder + "/cards/" + sheet.name + "/" + std::to_string(cylinder) + ".csv",
                      trace_csv(card_pressures(design, target), chance, engine, cylinder,

@@ -157,11 +157,12 @@ double cylinder_value(const EngineMoment& moment, const std::string& quantity, i
     // More turns at the same power: less work in each stroke. The rack feels it too.
     if (quantity == "mean_indicated_pressure" || quantity == "fuel_index")
         value /= 1.0 + light_running(moment);
-    const double apart = lasting_difference(moment, quantity, cylinder, spread.after_work) +
-                         fault_effect(moment, quantity, cylinder) +
-                         spread.shared * moment.chance->scatter(
-                                             {"shared " + quantity, moment.engine->number, 0, moment.month}) +
-                         spread.own * deviate(moment, quantity, cylinder);
+    const double shared =
+        moment.chance->scatter({"shared " + quantity, moment.engine->number, 0, moment.month});
+    const double apart =
+        lasting_difference(moment, quantity, cylinder, spread.after_work) +
+        fault_effect(moment, quantity, cylinder) +
+        moment.scatter * (spread.shared * shared + spread.own * deviate(moment, quantity, cylinder));
     return spread.percent ? value * (1.0 + apart / 100.0) : value + apart;
 }
 

@@ -16,6 +16,7 @@ struct EngineMoment
     ShipTime time;
     double load_percent = 0.0;
     bool unsteady = false;
+    double scatter = 1.0; ///< of the cylinder values; 0: as the cylinders truly were, before gauges and hands
 };
 
 /// Months since the newest of the named kinds of work on the engine, or since before the first reading.

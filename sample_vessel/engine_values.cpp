@@ -33,18 +33,6 @@ const Coefficients& coefficients(const SheetInputs& in, const std::string& quant
     return found != own.end() ? found->second : own.at("exhaust_temperature");
 }
 
-double cylinder_as_read(const SheetInputs& in, const std::string& quantity, int cylinder)
-{
-    const double value = cylinder_value(in.moment, quantity, cylinder);
-    if (quantity == "maximum_pressure" || quantity == "compression_pressure")
-        return pressure_as_read(value, coefficients(in, quantity), in.around);
-    if (quantity == "exhaust_temperature")
-        return temperature_as_read(value, coefficients(in, quantity), in.around);
-    if (quantity == "scavenge_box_temperature")
-        return scavenge_temperature_as_read(value, in.around);
-    return value;
-}
-
 /// Hours since the cylinder was last opened.
 double hours_since_overhaul(const EngineMoment& moment, int cylinder)
 {
@@ -63,6 +51,18 @@ double hours_since_overhaul(const EngineMoment& moment, int cylinder)
 }
 
 } // namespace
+
+double cylinder_as_read(const SheetInputs& in, const std::string& quantity, int cylinder)
+{
+    const double value = cylinder_value(in.moment, quantity, cylinder);
+    if (quantity == "maximum_pressure" || quantity == "compression_pressure")
+        return pressure_as_read(value, coefficients(in, quantity), in.around);
+    if (quantity == "exhaust_temperature")
+        return temperature_as_read(value, coefficients(in, quantity), in.around);
+    if (quantity == "scavenge_box_temperature")
+        return scavenge_temperature_as_read(value, in.around);
+    return value;
+}
 
 double as_read(const SheetInputs& in, const std::string& quantity)
 {

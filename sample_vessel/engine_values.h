@@ -26,6 +26,8 @@ void write_fuel(Sheet& sheet, const SheetInputs& in);
 /// The lines just before and just after the walk.
 void write_quick_lines(Sheet& sheet, const SheetInputs& in);
 
+/// Cylinder value as its gauge shows it under the surroundings of the day.
+double cylinder_as_read(const SheetInputs& in, const std::string& quantity, int cylinder);
 /// Engine value as its instrument shows it under the surroundings of the day.
 double as_read(const SheetInputs& in, const std::string& quantity);
 

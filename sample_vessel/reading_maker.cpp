@@ -148,6 +148,14 @@ std::vector<Sheet> engine_sheets(const Scenario& scenario, std::uint64_t seed, i
     return sheets;
 }
 
+SheetInputs true_inputs(const Scenario& scenario, const Chance& weather, const Chance& chance, int engine,
+                        const std::string& reading)
+{
+    SheetInputs in = inputs_of(scenario, weather, chance, engine, month_number(reading));
+    in.moment.scatter = 0.0;
+    return in;
+}
+
 std::vector<Sheet> ship_sheets(const Scenario& scenario, std::uint64_t seed)
 {
     const Chance weather(seed), chance(seed, scenario.scatter);

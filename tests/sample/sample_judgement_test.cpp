@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/sample/sample_record.h"
 
+#include "core/explanation/explanation.h"
 #include "sample_vessel/sample_vessel.h"
 
 #include <gtest/gtest.h>
@@ -67,6 +68,23 @@ TEST(SampleJudgement, FlagsTheTwoDevelopingFaultsAndNothingElse)
         EXPECT_EQ(flag.pattern, fault->cause == "ring_blow_by" ? "blow_by" : "fuel_nozzle") << name;
         EXPECT_GE(date_text(judgement.record->readings[flag.reading].taken_at.utc), fault->onset) << name;
     }
+}
+
+TEST(SampleJudgement, NamesTheTrueCauseOfEachFaultFirst)
+{
+    for (const sample::SampleFault& fault : sample::sample_truth().faults)
+        for (int engine = 0; engine < 3; ++engine) {
+            const Explanation explanation = explain(judged(engine));
+            if (explanation.record->engine.name != fault.engine)
+                continue;
+            const auto subject = std::find_if(explanation.subjects.begin(), explanation.subjects.end(), [&](const auto& one) {
+                return one.subject == Place::cylinder(fault.cylinder);
+            });
+            ASSERT_NE(subject, explanation.subjects.end()) << fault.engine;
+            ASSERT_FALSE(subject->causes.empty()) << fault.engine;
+            EXPECT_EQ(subject->causes.front().fault->id, fault.cause) << fault.engine;
+            EXPECT_FALSE(subject->sudden) << fault.engine;
+        }
 }
 
 TEST(SampleJudgement, DoubtsTheSlipsAndTheUnsteadyReadingsAndNothingElse)
