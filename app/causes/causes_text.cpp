@@ -80,6 +80,12 @@ public:
                                  .arg(to_qstring(lower_first(quantity(*subject.limit_quantity).title)), to_qstring(time.limit_text)));
             return;
         }
+        if (time.months_50 && *time.months_50 < 0.5) {
+            add(Kind::plain, tr_("%1 has reached %2 about now, or will within %3 months if it goes on (nine times in ten).")
+                                 .arg(to_qstring(quantity(*subject.limit_quantity).title), to_qstring(time.limit_text),
+                                      months(time.months_95)));
+            return;
+        }
         add(Kind::plain, tr_("If it goes on, %1 reaches %2 in %3 months (nine times in ten: %4 to %5).")
                              .arg(to_qstring(lower_first(quantity(*subject.limit_quantity).title)), to_qstring(time.limit_text),
                                   months(time.months_50), months(time.months_5), months(time.months_95)));

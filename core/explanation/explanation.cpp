@@ -3,6 +3,7 @@
 
 #include "core/explanation/cautions.h"
 #include "core/explanation/change_course.h"
+#include "core/explanation/comes_and_goes.h"
 #include "core/explanation/explanation_words.h"
 #include "core/explanation/hypotheses.h"
 #include "core/explanation/soonest_limit.h"
@@ -149,6 +150,8 @@ private:
         for (Hypothesis& cause : subject.causes)
             word_hypothesis(cause, &*window, record_.engine.two_stroke());
         word_subject(subject, record_, &*window);
+        if (const std::string course = comes_and_goes_sentence(series, *window, judgement_); !course.empty())
+            subject.history += " " + course;
         add_remarks(subject, *window);
         add_limit(subject);
         result_.subjects.push_back(std::move(subject));

@@ -10,6 +10,7 @@ namespace {
 
 constexpr double most_size = 1.5;        ///< of the reference size: beyond it levels of 3 are "3 or more" all the same
 constexpr double unstated_weight = 0.8;  ///< of a movement that the signature does not speak of
+constexpr double most_full_size = 3.5;   ///< a little beyond the largest size that is met (estimate)
 constexpr double cut = 15.0;             ///< noise units: changes beyond it say no more about the pattern
 /// How well the pattern's proportions are known: a third of each part (estimate), a tenth of a noise unit where
 /// "should not move" was rounded, and 1.2 noise units where the signature says nothing. Settled by simulation.
@@ -88,6 +89,21 @@ Sums sums_of(const Fault& fault, const ChangeVector& changes, bool weighted)
 double size_from(const Fault& fault, const Sums& sums)
 {
     return std::clamp(sums.product / sums.levels, fault.either_sign ? -most_size : 0.0, most_size);
+}
+
+/// Each quantity weighted by its error and by how well its part in the pattern is known.
+double full_size_of(const Fault& fault, const ChangeVector& changes)
+{
+    double product = 0.0, levels = 0.0;
+    for (std::size_t k = 0; k < changes.size(); ++k) {
+        const auto& level = fault.full_levels[k];
+        if (!level || !changes[k] || redundant().at(k, changes))
+            continue;
+        const double weight = 1.0 / (square(changes[k]->error) + square(part_spread * *level));
+        product += weight * *level * cut_at(changes[k]->amount, cut);
+        levels += weight * square(*level);
+    }
+    return levels > 0.0 ? std::clamp(product / levels, fault.either_sign ? -most_full_size : 0.0, most_full_size) : 0.0;
 }
 
 struct Residual
@@ -175,6 +191,7 @@ std::vector<FaultMatch> match_faults(std::span<const Fault* const> faults, const
         FaultMatch match;
         match.fault = fault;
         match.size = size_from(*fault, sums);
+        match.full_size = full_size_of(*fault, changes);
         match.coverage = observed_share(*fault, changes);
         const Residual residual = residual_of(*fault, match.size, changes, false);
         const double beyond_scatter = residual.whole - residual.scatter;

@@ -38,6 +38,9 @@ struct FaultMatch
 {
     const Fault* fault = nullptr;
     double size = 0.0;      ///< as in PlainMatch, weighted with the errors
+    /// The same from the levels in full and changes that are not cut at "3 or more": what the words about each
+    /// quantity are held against. At most 3.5 either way.
+    double full_size = 0.0;
     double explained = 0.0; ///< 0 to 1: share of what scatter alone does not explain
     double coverage = 0.0;
     double log_weight = 0.0; ///< logarithm of its probability against "nothing happened", common faults favoured

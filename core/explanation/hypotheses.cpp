@@ -18,6 +18,8 @@ constexpr double plain_first_odds = 0.4;
 constexpr double rest_needed = 2.5; ///< noise units, in some quantity, for a second cause to be looked for
 constexpr double rest_explained = 0.7, pair_explained = 0.5; ///< share of that rest, beside a first cause that stands alone or not
 constexpr double moved_from = 1.0, contradicts_from = 1.5; ///< noise units
+/// Of what is expected: a part of a pattern that is known to a third may be off by half. Common practice, no source.
+constexpr double contradicts_from_share = 0.5;
 
 Hypothesis made_from(const FaultMatch& match, const ChangeWindow& window)
 {
@@ -25,7 +27,7 @@ Hypothesis made_from(const FaultMatch& match, const ChangeWindow& window)
     hypothesis.fault = match.fault;
     hypothesis.explained = match.explained;
     hypothesis.size = match.size;
-    hypothesis.evidence = weigh_evidence(*match.fault, match.size, window);
+    hypothesis.evidence = weigh_evidence(*match.fault, match.full_size, window);
     return hypothesis;
 }
 
@@ -110,16 +112,18 @@ const FaultMatch* first_shown(const std::vector<FaultMatch>& matches, const std:
     return &*std::find_if(matches.begin(), matches.end(), [&](const FaultMatch& match) { return match.fault == shown.front().fault; });
 }
 
-QuantityEvidence::Says what_it_says(double moved, double expected)
+/// @param open_ended the signature says "so much or more"
+QuantityEvidence::Says what_it_says(double moved, double expected, bool open_ended)
 {
     using Says = QuantityEvidence::Says;
     const bool should_move = std::abs(expected) >= moved_from, has_moved = std::abs(moved) >= moved_from;
-    const bool far_off = std::abs(moved - expected) >= contradicts_from, same_way = moved * expected > 0.0;
+    const double allowed = std::max(contradicts_from, contradicts_from_share * std::abs(expected));
+    const bool far_off = std::abs(moved - expected) >= allowed, same_way = moved * expected > 0.0;
     if (!should_move)
         return far_off ? Says::against : Says::as_usual;
     if (!same_way || (far_off && !has_moved))
         return Says::against;
-    return has_moved && (!far_off || std::abs(expected) >= largest_level) ? Says::fits : Says::partly_fits;
+    return has_moved && (!far_off || (open_ended && std::abs(moved) >= std::abs(expected))) ? Says::fits : Says::partly_fits;
 }
 
 /// Size and share explained as the best window has them, ordered by the weight over all windows.
@@ -151,18 +155,18 @@ std::vector<const Fault*> possible_faults(const Engine& engine, const Place& sub
     return faults;
 }
 
-std::vector<QuantityEvidence> weigh_evidence(const Fault& fault, double size, const ChangeWindow& window)
+std::vector<QuantityEvidence> weigh_evidence(const Fault& fault, double full_size, const ChangeWindow& window)
 {
     std::vector<QuantityEvidence> evidence;
     for (std::size_t k = 0; k < window.changes.size(); ++k) {
         if (!fault.levels[k])
             continue;
-        const double table = fault_quantities()[k].noise, expected = size * *fault.levels[k];
+        const double table = fault_quantities()[k].noise, expected = full_size * *fault.full_levels[k];
         QuantityEvidence one;
         one.quantity = k;
         if (window.changes[k]) {
             one.amount = window.amounts[k];
-            one.says = what_it_says(window.changes[k]->amount, expected);
+            one.says = what_it_says(window.changes[k]->amount, expected, std::abs(*fault.levels[k]) >= largest_level);
         } else if (*fault.levels[k] == 0.0) {
             continue; // that something was not read which should not have moved is no news
         }

@@ -20,6 +20,6 @@ std::vector<const Fault*> possible_faults(const Engine& engine, const Place& sub
 std::vector<Hypothesis> rank_causes(std::span<const Fault* const> faults, const ChangeWindow& window);
 
 /// What each quantity says about one cause.
-std::vector<QuantityEvidence> weigh_evidence(const Fault& fault, double size, const ChangeWindow& window);
+std::vector<QuantityEvidence> weigh_evidence(const Fault& fault, double full_size, const ChangeWindow& window);
 
 } // namespace evenstroke
