@@ -3,6 +3,7 @@
 
 #include "app/cards/card_words.h"
 #include "app/desk/number_text.h"
+#include "core/card/true_curve.h"
 #include "core/engine/slider_crank.h"
 
 #include <QCoreApplication>
@@ -25,22 +26,6 @@ constexpr double room_above = 0.10, room_below = 0.05;  // of the span of values
 constexpr double litres = 1000.0, kilojoules = 1e-3;
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
-
-/// The mean cycle with dead centre and zero taken out.
-struct TrueCycle
-{
-    std::vector<double> angle, pressure;
-};
-TrueCycle true_cycle(const Evaluation& card)
-{
-    TrueCycle cycle;
-    for (std::size_t i = 0; i < card.trace.angle.size() && i < card.trace.mean.size(); ++i)
-        if (std::isfinite(card.trace.mean[i])) {
-            cycle.angle.push_back(card.trace.angle[i] - card.unknowns[indicator::offset]);
-            cycle.pressure.push_back(card.trace.mean[i] - card.unknowns[indicator::zero]);
-        }
-    return cycle;
-}
 
 double at(const std::vector<double>& x, const std::vector<double>& y, double where)
 {
@@ -189,14 +174,14 @@ private:
                 picture_.others.push_back(envelope);
         picture_.cycles = envelope_;
         add_healthy();
-        const TrueCycle cycle = true_cycle(evaluation_);
+        const indicator::TrueSamples cycle = indicator::true_samples(evaluation_);
         add(cycle.angle, cycle.pressure, FigureRole::in_hand, tr_("this card, bar"));
         add_spots(cycle);
         fit_values();
         picture_.sentence = spread_sentence(evaluation_);
     }
 
-    void add_spots(const TrueCycle& cycle)
+    void add_spots(const indicator::TrueSamples& cycle)
     {
         int number = 0;
         for (const indicator::Remark& remark : card_.remarks) {
@@ -215,7 +200,7 @@ private:
             picture_.parts.push_back({std::max(evaluation_.window_from, around_from), evaluation_.window_to, QString(), true});
         picture_.cycles = envelope_;
         add(evaluation_.line_angle, evaluation_.line_pressure, FigureRole::other, tr_("without combustion, bar")).dashed = true;
-        const TrueCycle cycle = true_cycle(evaluation_);
+        const indicator::TrueSamples cycle = indicator::true_samples(evaluation_);
         add(cycle.angle, cycle.pressure, FigureRole::in_hand, tr_("this card, bar"));
         add_spots(cycle);
         fit_values();
@@ -268,7 +253,7 @@ private:
         }
         if (card_.comparison)
             add_over_volume(card_.comparison->angle, card_.comparison->healthy, FigureRole::other, QString());
-        const TrueCycle cycle = true_cycle(evaluation_);
+        const indicator::TrueSamples cycle = indicator::true_samples(evaluation_);
         add_over_volume(cycle.angle, cycle.pressure, FigureRole::in_hand, QString());
         const auto& x = picture_.lines.back().x;
         const auto [low, high] = std::minmax_element(x.begin(), x.end());
@@ -360,7 +345,7 @@ FigureTable card_table(const CardsInHand& cards, int cylinder)
     const ReviewedCard* card = cards.find(cylinder);
     if (!card || !card->card)
         return table;
-    const TrueCycle cycle = true_cycle(*card->card);
+    const indicator::TrueSamples cycle = indicator::true_samples(*card->card);
     const auto& heat = card->card->heat;
     table.heading = {tr_("Crank angle, °"), tr_("Pressure, bar abs")};
     if (card->comparison)

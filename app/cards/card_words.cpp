@@ -240,14 +240,8 @@ std::vector<CardRow> card_rows(const ReviewedCard& card)
     if (!card.card)
         return rows;
     const auto hand_read = [&](CardResult result) -> QString {
-        const char* name = result == CardResult::mean_indicated_pressure ? "mean_indicated_pressure"
-                           : result == CardResult::maximum_pressure      ? "maximum_pressure"
-                           : result == CardResult::compression_pressure  ? "compression_pressure"
-                           : result == CardResult::expansion_pressure    ? "expansion_pressure"
-                           : result == CardResult::maximum_pressure_angle ? "angle_of_maximum_pressure"
-                                                                          : nullptr;
         for (const indicator::CardValue& value : card.values)
-            if (name && value.hand_read && quantity(value.quantity).name == name)
+            if (value.result == result && value.hand_read)
                 return number_text(*value.hand_read, evenstroke::decimals_of(value.quantity));
         return {};
     };

@@ -23,6 +23,8 @@ std::optional<CardForces> card_forces(const Engine& engine, const Conditions& co
     load.speed = conditions.speed;
     if (load.speed)
         load.moving_mass = engine.moving_mass;
+    // As with the mean indicated pressure the drift stays in: what the compression says of it does not hold for a whole cycle,
+    // and the mean moment is to be that of the stated work.
     std::vector<double> angle, pressure;
     for (std::size_t i = 0; i < card.trace.angle.size(); ++i) {
         if (!std::isfinite(card.trace.mean[i]))

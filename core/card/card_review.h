@@ -37,6 +37,7 @@ struct CardShelf
 /// A result of a card as a value of the reading, beside the one read by hand.
 struct CardValue
 {
+    CardResult result{};
     QuantityId quantity = 0;      ///< mean indicated, maximum, compression, expansion pressure, angle of the maximum
     double number = 0.0;          ///< in the unit that the catalogue gives the quantity, of its kind (gauge over the barometer)
     std::optional<double> half_width;

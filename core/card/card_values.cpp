@@ -32,7 +32,7 @@ std::vector<CardValue> card_values(const Engine& engine, const Reading& reading,
         const auto& estimate = card[line.result];
         if (!id || !estimate || !std::isfinite(estimate->value))
             continue;
-        CardValue value{*id, estimate->value, estimate->half_width, std::nullopt};
+        CardValue value{line.result, *id, estimate->value, estimate->half_width, std::nullopt};
         if (quantity(*id).kind == PressureKind::gauge) {
             value.number -= read.barometer.value_or(usual_barometer);
             if (!read.barometer && value.half_width)

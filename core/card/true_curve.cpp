@@ -78,4 +78,20 @@ double TrueCurve::unfired(double true_angle) const
     return angle <= card_->line_angle.back() ? line_at(angle) : end_ratio_ * line_at(-angle);
 }
 
+TrueSamples true_samples(const Evaluation& card)
+{
+    const TrueCurve curve(card);
+    TrueSamples samples;
+    samples.angle.reserve(card.trace.angle.size());
+    samples.pressure.reserve(card.trace.angle.size());
+    for (std::size_t i = 0; i < card.trace.angle.size() && i < card.trace.mean.size(); ++i)
+        if (std::isfinite(card.trace.mean[i])) {
+            const double angle = card.trace.angle[i] - card.unknowns[offset];
+            samples.angle.push_back(angle);
+            samples.pressure.push_back(card.trace.mean[i] - card.unknowns[zero] -
+                                       card.unknowns[drift] * curve.drift_share(angle));
+        }
+    return samples;
+}
+
 } // namespace evenstroke::indicator

@@ -38,4 +38,11 @@ private:
     double end_ratio_ = 1.0; // of the line at its end and as far before dead centre
 };
 
+/// The recorded samples of the mean cycle with dead centre, zero and its drift taken out; gaps are left out.
+struct TrueSamples
+{
+    std::vector<double> angle, pressure; ///< degrees, rising; bar abs
+};
+TrueSamples true_samples(const Evaluation& card);
+
 } // namespace evenstroke::indicator

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // A card against the healthy one: what is taken for it, and how often the stated band and half-widths hold the truth on
 // simulated ships (card_ship.h says what they assume). Seeded.
+#include "core/card/true_curve.h"
 #include "core/simulation/exact_intervals.h"
 #include "tests/core/card_ship.h"
 
@@ -53,6 +54,22 @@ double true_pressure(const SimulatedCard& card, double angle)
 }
 
 } // namespace
+
+TEST(TrueSamples, AreThePointsOfTheTrueCurveAndGoThroughTheStatedMaximum)
+{
+    SimulatedCase what = plain_case();
+    what.offset = 0.8;
+    what.zero = 0.6;
+    what.drift = 0.3;
+    const auto card = evaluated(what, 5);
+    const TrueCurve curve(*card);
+    const TrueSamples samples = true_samples(*card);
+    ASSERT_EQ(samples.angle.size(), card->trace.angle.size());
+    for (std::size_t i = 4; i + 4 < samples.angle.size(); ++i) // at a sample the cubic is the sample
+        ASSERT_NEAR(samples.pressure[i], curve.pressure(samples.angle[i]), 1e-9) << samples.angle[i];
+    const double highest = *std::max_element(samples.pressure.begin(), samples.pressure.end());
+    EXPECT_NEAR(highest, (*card)[CardResult::maximum_pressure]->value, 0.3); // the noise of one mean sample
+}
 
 TEST(CardComparison, TheSameCylinderAtTheSameLoadDoesNotDiffer)
 {
