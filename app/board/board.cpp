@@ -24,19 +24,35 @@ TimePoint time_of(const Judgement& judgement, std::size_t reading)
     return judgement.record->readings.at(reading).taken_at.utc;
 }
 
-/// What a strip is made of: apart for cylinders, else the deviation; without a baseline what was read.
-struct Shown
+/// What a strip is made of: apart for cylinders, else the deviation; without a baseline what was read. One strip holds
+/// one of them: a reading that could not be corrected has none of the first two, and its value as read lies far off.
+enum class Shown { apart, deviation, as_read };
+
+Shown shown_of(const Trend& trend)
 {
-    double value = 0.0;
-    bool difference = false;
-};
-Shown shown_value(const Trend& trend, const TrendPoint& point)
+    const auto any = [&](auto member) {
+        return std::any_of(trend.points.begin(), trend.points.end(), [&](const TrendPoint& point) { return (point.*member).has_value(); });
+    };
+    if (trend.place.kind == Place::Kind::cylinder && any(&TrendPoint::apart))
+        return Shown::apart;
+    return any(&TrendPoint::deviation) ? Shown::deviation : Shown::as_read;
+}
+
+std::optional<double> value_of(Shown shown, const TrendPoint& point)
 {
-    if (trend.place.kind == Place::Kind::cylinder && point.apart)
-        return {*point.apart, true};
-    if (point.deviation)
-        return {*point.deviation, true};
-    return {point.corrected.value_or(point.raw), false};
+    switch (shown) {
+    case Shown::apart: return point.apart;
+    case Shown::deviation: return point.deviation;
+    case Shown::as_read: break;
+    }
+    return point.corrected.value_or(point.raw);
+}
+
+/// The newest point that the strip can show; there is one, since `shown_of` found it.
+const TrendPoint& newest_shown(const Trend& trend, Shown shown)
+{
+    return *std::find_if(trend.points.rbegin(), trend.points.rend(),
+                         [&](const TrendPoint& point) { return value_of(shown, point).has_value(); });
 }
 
 struct Window
@@ -77,14 +93,15 @@ Window make_window(const Judgement& judgement, TimeRange range)
     return window;
 }
 
-void add_points(BoardCell& cell, const Trend& trend, const Judgement& judgement, TimeRange range, const Window& window)
+void add_points(BoardCell& cell, const Trend& trend, Shown shown, const Judgement& judgement, TimeRange range, const Window& window)
 {
     for (std::size_t i = first_point(trend, range); i < trend.points.size(); ++i) {
         const TrendPoint& point = trend.points[i];
         const double x = window.place(time_of(judgement, point.reading));
-        if (x < 0.0 || point.doubtful)
+        const auto value = value_of(shown, point);
+        if (x < 0.0 || point.doubtful || !value)
             continue;
-        cell.points.emplace_back(x, shown_value(trend, point).value);
+        cell.points.emplace_back(x, *value);
         cell.unsteady.push_back(point.unsteady ? 1 : 0);
     }
 }
@@ -106,12 +123,12 @@ void choose_scale(BoardCell& cell, double typical_half)
         cell.half = std::max(cell.half, 1.05 * std::abs(point.y() - cell.middle));
 }
 
-QString cell_word(const Trend& trend, const BoardCell& cell, const Judgement& judgement)
+QString cell_word(const Trend& trend, const TrendPoint& newest, const BoardCell& cell, const Judgement& judgement)
 {
     if (has_mark(trend.level))
         return level_text(trend.level);
     if (cell.old_value)
-        return day_text(time_of(judgement, trend.points.back().reading));
+        return day_text(time_of(judgement, newest.reading));
     if (trend.level == Level::learning)
         return tr_("learning, %1 of %2").arg(trend.learned).arg(trend.needed);
     return {};
@@ -126,22 +143,26 @@ BoardCell make_cell(const Judgement& judgement, const Trend& trend, TimeRange ra
     if (trend.points.empty())
         return cell;
     cell.present = true;
-    add_points(cell, trend, judgement, range, window);
-    const TrendPoint& newest = trend.points.back();
-    const Shown shown = shown_value(trend, newest);
-    if (shown.difference) { // the usual range is one of differences
+    const Shown shown = shown_of(trend);
+    const TrendPoint& newest = newest_shown(trend, shown);
+    const bool difference = shown != Shown::as_read;
+    add_points(cell, trend, shown, judgement, range, window);
+    if (difference) { // the usual range is one of differences
         cell.usual_low = trend.usual_low;
         cell.usual_high = trend.usual_high;
     }
     const int decimals = decimals_of(trend.quantity);
-    cell.number = shown.difference ? signed_text(shown.value, decimals) : number_text(shown.value, decimals);
+    const double value = *value_of(shown, newest);
+    cell.number = difference ? signed_text(value, decimals) : number_text(value, decimals);
     cell.old_value = newest.reading != judgement.readings.back().reading;
-    cell.word = cell_word(trend, cell, judgement);
+    cell.word = cell_word(trend, newest, cell, judgement);
     if (trend.level == Level::learning && !cell.old_value)
         cell.short_word = tr_("learning %1/%2").arg(trend.learned).arg(trend.needed);
-    const QString what = !shown.difference ? tr_("as read")
-                         : trend.place.kind == Place::Kind::cylinder ? tr_("apart from the others")
-                                                                     : tr_("from the baseline");
+    const bool not_compared = newest.reading != trend.points.back().reading;
+    const QString what = shown == Shown::as_read ? tr_("as read")
+                         : not_compared          ? tr_("the newest that can be compared; what was read later could not be corrected")
+                         : shown == Shown::apart ? tr_("apart from the others")
+                                                 : tr_("from the baseline");
     cell.spoken = tr_("%1, %2: %3 %4, %5")
                       .arg(place_title(judgement.record->engine, trend.place), quantity_title(trend.quantity),
                            with_unit(cell.number, unit_text(trend.quantity)), what,
@@ -167,8 +188,7 @@ bool belongs_on_board(const Trend& trend)
     const std::string& group = quantity(trend.quantity).group;
     if (trend.points.empty() || group == "heading" || group == "ship_weather")
         return false;
-    const TrendPoint& newest = trend.points.back();
-    return newest.apart || newest.deviation || trend.usual_low || has_mark(trend.level);
+    return shown_of(trend) != Shown::as_read || trend.usual_low || has_mark(trend.level);
 }
 
 void add_rows(Board& board, const Judgement& judgement, TimeRange range, const Window& window)

@@ -131,11 +131,9 @@ private:
         picture_.band = std::move(band);
         add(with.angle, with.difference, FigureRole::in_hand, tr_("difference, bar"));
         add(with.angle, with.half_width, FigureRole::limit, tr_("±")); // told by the cursor; the band draws it
-        for (const indicator::PartDifference& part : with.parts) {
+        for (const indicator::PartDifference& part : with.parts)
             picture_.parts.push_back({part.from, part.to, part_name(part.part), part.clear});
-            if (part.clear)
-                picture_.beyond.push_back(beyond(with, part));
-        }
+        picture_.beyond.push_back(beyond(with));
         fit_values();
         const double most = std::max(std::abs(picture_.y_low), std::abs(picture_.y_high));
         picture_.y_low = std::min(picture_.y_low, -0.25 * most);
@@ -143,16 +141,13 @@ private:
         picture_.sentence = difference_sentence(cards_, card_);
     }
 
-    /// What the uncertainty does not explain of one part.
-    static CardBand beyond(const indicator::Comparison& with, const indicator::PartDifference& part)
+    /// What the uncertainty does not explain.
+    static CardBand beyond(const indicator::Comparison& with)
     {
-        CardBand area;
+        CardBand area{with.angle, {}, {}};
         for (std::size_t i = 0; i < with.angle.size(); ++i) {
-            if (with.angle[i] < part.from || with.angle[i] > part.to)
-                continue;
             const double difference = with.difference[i], edge = std::copysign(with.half_width[i], difference);
             const bool outside = std::abs(difference) > with.half_width[i];
-            area.x.push_back(with.angle[i]);
             area.low.push_back(outside ? std::min(difference, edge) : edge);
             area.high.push_back(outside ? std::max(difference, edge) : edge);
         }
@@ -319,8 +314,8 @@ QString card_view_name(CardView view)
     case CardView::difference: return tr_("difference");
     case CardView::pressure: return tr_("pressure");
     case CardView::dead_centre: return tr_("dead centre");
-    case CardView::volume: return tr_("volume");
-    case CardView::logarithms: return tr_("logarithms");
+    case CardView::volume: return tr_("p–V");
+    case CardView::logarithms: return tr_("log p–V");
     case CardView::heat: return tr_("heat");
     case CardView::temperature: break;
     }
@@ -355,7 +350,9 @@ FigureTable card_table(const CardsInHand& cards, int cylinder)
     if (cycle.angle.empty())
         return table;
     for (double angle = std::ceil(cycle.angle.front()); angle <= cycle.angle.back(); angle += 1.0) {
-        QStringList row{number_text(angle, 0), number_text(at(cycle.angle, cycle.pressure, angle), 2)};
+        // Beside the healthy card the pressure of the compared curve, so that the difference is that of the two columns.
+        const double pressure = card->comparison ? at(card->comparison->angle, card->comparison->now, angle) : at(cycle.angle, cycle.pressure, angle);
+        QStringList row{number_text(angle, 0), number_text(pressure, 2)};
         const auto known = [](double value, const QString& words) { return std::isfinite(value) ? words : QString(); };
         if (card->comparison) {
             const indicator::Comparison& with = *card->comparison;

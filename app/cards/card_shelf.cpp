@@ -68,10 +68,19 @@ std::shared_ptr<const indicator::CardReview> review_newest_cards(storage::Histor
     if (!stored)
         return nullptr;
     const auto with_cards = stored.value().readings();
-    const auto newest = std::find_if(with_cards.rbegin(), with_cards.rend(), [&](std::size_t reading) {
+    const auto count = [&](std::size_t reading) {
         const TimePoint taken = judgement.record->readings[reading].taken_at.utc;
-        return taken >= std::chrono::floor<std::chrono::days>(from) && taken < std::chrono::floor<std::chrono::days>(to) + std::chrono::days(1);
-    });
+        if (taken < std::chrono::floor<std::chrono::days>(from) || taken >= std::chrono::floor<std::chrono::days>(to) + std::chrono::days(1))
+            return std::ptrdiff_t{0};
+        const auto& cards = stored.value().cards;
+        return std::count_if(cards.begin(), cards.end(), [&](const auto& card) { return card.place.reading == reading; });
+    };
+    std::ptrdiff_t most = 0;
+    for (const std::size_t reading : with_cards)
+        most = std::max(most, count(reading));
+    // A single card taken later does not stand for the engine.
+    const auto newest = std::find_if(with_cards.rbegin(), with_cards.rend(),
+                                     [&](std::size_t reading) { return count(reading) > 0 && 2 * count(reading) >= most; });
     if (newest == with_cards.rend())
         return nullptr;
     return std::make_shared<const indicator::CardReview>(review_cards(judgement, *newest, make_shelf(history, stored.value())));

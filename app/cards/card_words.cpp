@@ -242,7 +242,7 @@ std::vector<CardRow> card_rows(const ReviewedCard& card)
     const auto hand_read = [&](CardResult result) -> QString {
         for (const indicator::CardValue& value : card.values)
             if (value.result == result && value.hand_read)
-                return number_text(*value.hand_read, evenstroke::decimals_of(value.quantity));
+                return number_text(*value.hand_read + value.taken_off, evenstroke::decimals_of(value.quantity));
         return {};
     };
     for (std::size_t i = 0; i < indicator::result_count; ++i) {

@@ -138,6 +138,8 @@ void CardsPage::refresh()
     // The same cards judged anew stay up until the new evaluation is there.
     if (reading_ != reading || (cards_ && cards_->engine().id != judgement_->record->engine.id))
         cards_.reset();
+    if (reading_ != reading)
+        say({}); // what was said of another reading
     reading_ = reading;
     run_.start(workplace().path(), judgement_, *reading, stored_);
     show_progress();

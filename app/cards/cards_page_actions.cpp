@@ -48,7 +48,7 @@ QString as_csv(const FigureTable& table)
 void CardsPage::copy_picture()
 {
     if (cards_ && ui_->plot->picture().empty.isEmpty())
-        QGuiApplication::clipboard()->setPixmap(ui_->plot->toPixmap(0, 0, 2.0));
+        QGuiApplication::clipboard()->setPixmap(ui_->plot->toPixmap(0, 0, 2.0)), say(tr("The picture is copied."));
 }
 
 /// Remarks, results and curves of the card in hand, as words and tables.
@@ -64,6 +64,7 @@ void CardsPage::copy()
     if (ui_->plot->isVisible())
         copied->setImageData(ui_->plot->toPixmap(0, 0, 2.0).toImage());
     QGuiApplication::clipboard()->setMimeData(copied);
+    say(tr("Copied: remarks, results and curves of this cylinder."));
 }
 
 void CardsPage::ask_file()
@@ -130,7 +131,13 @@ void CardsPage::print(QPrinter& printer)
     std::vector<QStringList> rows;
     for (const CardRow& row : card_rows(*card))
         rows.push_back({row.title, row.now, row.healthy, row.difference, row.hand_read});
-    write(sheet_table({tr("Result"), tr("card"), tr("healthy"), tr("difference"), tr("by hand")}, rows));
+    const QString table = sheet_table({tr("Result"), tr("card"), tr("healthy"), tr("difference"), tr("by hand")}, rows);
+    words.setHtml(QStringLiteral("<body>%1</body>").arg(table));
+    if (painter.transform().dy() + words.size().height() > page.height()) {
+        printer.newPage();
+        painter.resetTransform();
+    }
+    write(table);
 }
 
 } // namespace evenstroke

@@ -88,11 +88,17 @@ void CardsPage::ask_healthy()
         return;
     const QString day = reading_title(*judgement_, *reading_);
     const bool take_back = called_healthy();
+    QStringList remarked;
+    for (const indicator::ReviewedCard& card : cards_->review.cards)
+        if (card.problem || !card.remarks.empty())
+            remarked.append(place_title(cards_->engine(), Place::cylinder(card.cylinder)));
+    const QString doubts = remarked.isEmpty() ? QString()
+                                              : u' ' + tr("There are remarks on %1: read them first.").arg(remarked.join(QStringLiteral(", ")).toLower());
     SignatureDialog dialog(take_back ? tr("No longer the healthy cards") : tr("The healthy cards"),
                            take_back ? tr("The cards of %1 are no longer what others are compared with. They stay with their reading.").arg(day)
                                      : tr("Later cards at nearly this load are compared with those of %1, and dead centre of the installation is "
                                           "taken from them. Choose a reading at steady load with every cylinder in order; the shop trial's or the "
-                                          "first after an overhaul are usual.").arg(day),
+                                          "first after an overhaul are usual.").arg(day) + doubts,
                            take_back ? tr("Take back") : tr("Call them healthy"), {to_std(person_name()), {}}, this);
     if (dialog.exec() == QDialog::Accepted)
         call_healthy(!take_back, dialog.signature());

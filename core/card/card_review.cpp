@@ -2,6 +2,7 @@
 #include "core/card/card_review.h"
 
 #include "core/card/card_values.h"
+#include "core/card/hand_readings.h"
 #include "core/card/reading_conditions.h"
 #include "core/card/remarks_review.h"
 #include "core/trend/conditions.h"
@@ -237,6 +238,8 @@ void Reviewer::remark()
         for (Remark& said : remarks_against_healthy(engine_, reading, cards, i))
             review_.cards[i].remarks.push_back(std::move(said));
     review_.remarks = remarks_of_all(engine_, cards);
+    if (auto said = remark_on_hand_readings(review_.cards))
+        review_.remarks.push_back(*std::move(said));
     std::vector<PlacedCard> recorded;
     for (const auto& [place, card] : recorded_)
         if (card)

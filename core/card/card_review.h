@@ -42,6 +42,7 @@ struct CardValue
     double number = 0.0;          ///< in the unit that the catalogue gives the quantity, of its kind (gauge over the barometer)
     std::optional<double> half_width;
     std::optional<double> hand_read; ///< in the same unit; empty: not read
+    double taken_off = 0.0;       ///< what the card's own result is above `number`: the barometer of a gauge pressure, bar
 };
 
 struct ReviewedCard

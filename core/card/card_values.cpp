@@ -32,9 +32,10 @@ std::vector<CardValue> card_values(const Engine& engine, const Reading& reading,
         const auto& estimate = card[line.result];
         if (!id || !estimate || !std::isfinite(estimate->value))
             continue;
-        CardValue value{line.result, *id, estimate->value, estimate->half_width, std::nullopt};
+        CardValue value{line.result, *id, estimate->value, estimate->half_width, std::nullopt, 0.0};
         if (quantity(*id).kind == PressureKind::gauge) {
-            value.number -= read.barometer.value_or(usual_barometer);
+            value.taken_off = read.barometer.value_or(usual_barometer);
+            value.number -= value.taken_off;
             if (!read.barometer && value.half_width)
                 value.half_width = std::hypot(*value.half_width, usual_barometer_half_width);
         }

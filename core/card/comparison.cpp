@@ -46,8 +46,18 @@ struct Part
     double from, to;
 };
 
-std::vector<Part> lay_out_parts(const Evaluation& now, const Estimates& healthy, double period)
+/// Whether the compression pressure itself is another one.
+bool compression_differs(const Comparison& comparison)
 {
+    const auto& difference = comparison.differences[static_cast<std::size_t>(CardResult::compression_pressure)];
+    return difference && difference->half_width && std::abs(difference->value) > *difference->half_width;
+}
+
+std::vector<Part> lay_out_parts(const Evaluation& now, const Comparison& comparison, double period)
+{
+    // Just after dead centre the flame has hardly lifted the pressure yet: what the compression lacks still shows most there.
+    constexpr double compression_shows_to = 3.0; // degrees; common practice, no source
+    const Estimates& healthy = comparison.healthy_results;
     constexpr double usual_end = 40.0, longest_end = 80.0, unknown_close = -90.0, unknown_open = 100.0;
     const double close = now.closes.value_or(unknown_close), open = now.opens.value_or(unknown_open);
     double start = 0.0, end = usual_end;
@@ -55,6 +65,8 @@ std::vector<Part> lay_out_parts(const Evaluation& now, const Estimates& healthy,
     const auto& of_healthy = healthy[static_cast<std::size_t>(CardResult::start_of_combustion)];
     if (of_now || of_healthy)
         start = std::min(of_now ? of_now->value : 1e9, of_healthy ? of_healthy->value : 1e9);
+    if (compression_differs(comparison))
+        start = std::max(start, compression_shows_to);
     if (const auto& late = healthy[static_cast<std::size_t>(CardResult::ca90)])
         end = std::clamp(late->value, start + 10.0, std::min(longest_end, open - 10.0));
     std::vector<Part> parts{{CyclePart::compression, close, start}, {CyclePart::combustion, start, end},
@@ -245,7 +257,7 @@ std::optional<PartDifference> Comparer::over_part(const Part& part, const Compar
 
 void Comparer::fill_parts(Comparison& comparison) const
 {
-    for (const Part& part : lay_out_parts(*now().card, comparison.healthy_results, now().curve.period()))
+    for (const Part& part : lay_out_parts(*now().card, comparison, now().curve.period()))
         if (const auto found = over_part(part, comparison))
             comparison.parts.push_back(*found);
 }

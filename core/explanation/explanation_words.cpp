@@ -122,7 +122,7 @@ std::string cannot_tell_sentence(const SubjectExplanation& subject)
             continue;
         equals.push_back(one.fault->title);
         const std::string found = telling_observation(subject.causes.front().fault->id, one.fault->id);
-        const std::string observation = found.empty() ? one.fault->sets_apart : found;
+        const std::string observation = found.empty() ? one.fault->title + ": " + lower_first(one.fault->sets_apart) : found;
         if (observations.find(observation) == std::string::npos)
             observations += " " + observation;
     }

@@ -55,7 +55,7 @@ std::string healthy_words(const Context& context, const indicator::CardReview& r
         from += (from.empty() ? "" : " and ") + date_text(context.record.readings[one.reading].taken_at.utc) + " at "
                 + rounded_text(one.load_percent, 0) + " % load";
     return "After the semicolon: difference from the healthy card of " + from
-           + (review.provisional ? ", the earliest that is stored; nobody has called it healthy" : "") + "; * beyond what the uncertainty explains.";
+           + (review.provisional ? ", the earliest that is stored; nobody has called it healthy" : "") + "; * beyond its half-width at 95 %: among many results one in twenty is so by chance.";
 }
 
 Table results_table(const Context& context, const indicator::CardReview& review)
@@ -152,7 +152,7 @@ void add_cards(const Context& context, Section& section)
         if (differs(card))
             section.blocks.push_back(difference_plot(context, card));
     if (!as_healthy.empty())
-        section.blocks.push_back(Paragraph{"As the healthy card within the uncertainty: cylinder " + as_healthy + ".", {}});
+        section.blocks.push_back(Paragraph{"No part of the cycle differs clearly from the healthy card (three standard deviations): cylinder " + as_healthy + ".", {}});
 }
 
 } // namespace evenstroke::report

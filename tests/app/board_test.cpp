@@ -16,6 +16,8 @@
 #include <QTemporaryDir>
 #include <QTest>
 
+#include <cmath>
+
 namespace evenstroke {
 namespace {
 
@@ -62,6 +64,29 @@ TEST(StripBoard, AFlagThatRoseIsNotDatedBackToItsBeginning)
     flag.raised_at = flag.reading + 1;
     EXPECT_EQ(make_board(judgement, TimeRange::all).level_words,
               QStringLiteral("act since %1 (began %2 as watch)").arg(day_of(flag.reading + 1), day_of(flag.reading)));
+}
+
+TEST(StripBoard, AReadingThatCannotBeComparedLeavesNoPointAmongTheDifferences)
+{
+    Judgement judgement = *invented::judgement();
+    std::size_t before = 0;
+    for (Trend& trend : judgement.trends)
+        if (quantity(trend.quantity).name == "compression_pressure" && trend.place == Place::cylinder(3)) {
+            trend.points.resize(trend.points.size() - 1);
+            before = trend.points.size();
+            TrendPoint uncorrected; // the coolant temperature was not read
+            uncorrected.reading = judgement.readings.size() - 1;
+            uncorrected.raw = 149.4;
+            trend.points.push_back(uncorrected);
+        }
+    const Board board = make_board(judgement, TimeRange::all);
+    const BoardCell& cell = cell_of(board, "compression_pressure", 3);
+    EXPECT_EQ(cell.points.size(), before);
+    for (const QPointF& point : cell.points)
+        EXPECT_LT(std::abs(point.y()), 30.0);
+    EXPECT_TRUE(cell.old_value);
+    EXPECT_NE(cell.number, QStringLiteral("149.4"));
+    EXPECT_TRUE(cell.spoken.contains(QStringLiteral("could not be corrected"))) << cell.spoken.toStdString();
 }
 
 TEST(StripBoard, AQuietEngineHasNoMarkAndNoLevelWord)

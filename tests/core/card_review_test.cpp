@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // What a review of a reading's cards chooses, says and leaves alone.
+#include "core/card/hand_readings.h"
 #include "tests/core/card_ship.h"
 
 #include <gtest/gtest.h>
@@ -167,6 +168,27 @@ TEST(CardReview, TheSameSamplesOnTwoCylindersAreNamed)
     EXPECT_NE(within.remarks.front().text.find("cylinder 3"), std::string::npos);
     (*ship.cards)[{1, 3}] = (*ship.cards)[{0, 3}];
     EXPECT_TRUE(says(reviewed(ship).remarks, "same_card_twice"));
+}
+
+TEST(CardReview, CardsOfAnotherDayAreAskedAboutByWhatWasReadByHand)
+{
+    std::vector<ReviewedCard> cards(6);
+    const auto set = [&](double over) {
+        for (std::size_t i = 0; i < cards.size(); ++i) {
+            cards[i].cylinder = static_cast<int>(i) + 1;
+            const double read = 140.0 + static_cast<double>(i), scatter = i % 2 == 0 ? 1.0 : -1.0;
+            cards[i].values = {{CardResult::maximum_pressure, 0, read + over + scatter, 0.5, read, 1.0}};
+        }
+    };
+    set(0.0);
+    EXPECT_FALSE(remark_on_hand_readings(cards));
+    set(6.0);
+    const auto remark = remark_on_hand_readings(cards);
+    ASSERT_TRUE(remark);
+    EXPECT_EQ(remark->code, "cards_off_readings");
+    EXPECT_NE(remark->text.find("On 6 of 6 cylinders the cards' maximum pressure lies about 6 bar above"), std::string::npos) << remark->text;
+    cards.resize(2);
+    EXPECT_FALSE(remark_on_hand_readings(cards)) << "two cylinders say nothing of all";
 }
 
 TEST(CardReview, TheMeanTurningMomentIsTheIndicatedWork)
