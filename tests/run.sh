@@ -3,7 +3,7 @@
 # Installs what is missing, builds with the address and undefined-behaviour sanitizers, runs all tests.
 #   sh tests/run.sh           all of it
 #   sh tests/run.sh install   only the packages
-#   sh tests/run.sh NAME...   only the tests whose names match (ctest -R)
+#   sh tests/run.sh NAME...   only the suites whose names match (ctest -R)
 set -eu
 source_dir=$(cd "$(dirname "$0")/.." && pwd)
 build_dir=${EVENSTROKE_TEST_BUILD_DIR:-${XDG_CACHE_HOME:-$HOME/.cache}/evenstroke/build-tests}

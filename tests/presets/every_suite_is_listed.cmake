@@ -1,0 +1,20 @@
+# SPDX-License-Identifier: GPL-3.0-or-later
+# Use: cmake -D PROGRAM=test-program -D LISTED="suite;suite" -P every_suite_is_listed.cmake
+# The entries of CTest are read from the sources; a suite written in a way that is overlooked there would never run.
+cmake_minimum_required(VERSION 3.25)
+execute_process(COMMAND ${PROGRAM} --gtest_list_tests OUTPUT_VARIABLE listing RESULT_VARIABLE code)
+if(NOT code EQUAL 0)
+    message(FATAL_ERROR "${PROGRAM} does not list its tests: ${code}")
+endif()
+string(REGEX MATCHALL "[A-Za-z0-9_/]+\\.[\r\n]" heads "${listing}")
+list(LENGTH heads count)
+if(count EQUAL 0)
+    message(FATAL_ERROR "${PROGRAM} lists no tests.")
+endif()
+foreach(head IN LISTS heads)
+    string(REGEX REPLACE "^(.*/)?([A-Za-z0-9_]+)\\..*" "\\2" suite "${head}")
+    if(NOT suite IN_LIST LISTED)
+        message(FATAL_ERROR "The suite ${suite} is not among the entries of CTest: begin its first line with TEST(${suite}, ...)")
+    endif()
+endforeach()
+message(STATUS "${count} suites")
