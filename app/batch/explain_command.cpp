@@ -3,6 +3,7 @@
 
 #include "app/batch/engines.h"
 #include "app/batch/table_output.h"
+#include "app/cards/card_shelf.h"
 #include "app/causes/causes_text.h"
 #include "core/explanation/explanation.h"
 #include "storage/engine_record.h"
@@ -59,11 +60,11 @@ const char* indent(CausesLine::Kind kind)
     return "";
 }
 
-void write_text(QTextStream& out, const Explanation& explanation)
+void write_text(QTextStream& out, const Explanation& explanation, const CardsStored& cards)
 {
     const EngineRecord& record = *explanation.record;
     out << QString::fromStdString(record.vessel.name) << ", " << QString::fromStdString(record.engine.name) << "\n";
-    for (const CausesLine& line : causes_lines(explanation)) {
+    for (const CausesLine& line : causes_lines(explanation, cards)) {
         out << indent(line.kind);
         if (line.kind == CausesLine::Kind::caution)
             out << "  Caution: ";
@@ -110,9 +111,13 @@ int run_explain(const QCommandLineParser& parser, Streams& streams)
         streams.err << "The engine has no reading \"" << wanted << "\". Leave --reading out for the newest.\n";
         return data_refused;
     }
-    const Explanation explanation = explain(judge(record));
+    const Judgement judgement = judge(record);
+    const Explanation explanation = explain(judgement);
     if (as_text) {
-        write_text(streams.out, explanation);
+        const auto cards = find_cards(*history.value(), judgement);
+        if (!cards)
+            return refuse(streams, cards.error());
+        write_text(streams.out, explanation, cards.value());
         return done;
     }
     TableOutput table(streams, format == QStringLiteral("json") ? TableOutput::Format::json : TableOutput::Format::csv,

@@ -74,6 +74,7 @@ void CardPlot::draw_all()
     clearPlottables();
     clearItems();
     cursor_line_ = nullptr;
+    part_names_.clear();
     setBackground(QBrush(theme_->page));
     xAxis->setVisible(picture_.empty.isEmpty());
     yAxis->setVisible(picture_.empty.isEmpty());
@@ -163,14 +164,24 @@ void CardPlot::add_parts()
         QCPItemText* name = add_text(part.name, part.shaded ? theme_->ink : theme_->muted, Qt::AlignHCenter | Qt::AlignTop);
         name->setClipToAxisRect(true);
         stand_over_x(*name->position);
-        name->position->setCoords(0.5 * (std::max(part.from, picture_.x_low) + std::min(part.to, picture_.x_high)), 0.0);
         name->setPadding(QMargins(0, 3, 0, 0));
+        part_names_.push_back({name, part.from, part.to});
         auto* edge = new QCPItemLine(this);
         edge->setPen(theme_->pen(theme_->rule));
         for (auto* end : {edge->start, edge->end})
             stand_over_x(*end);
         edge->start->setCoords(part.to, 0.0);
         edge->end->setCoords(part.to, 1.0);
+    }
+    place_part_names();
+}
+
+void CardPlot::place_part_names()
+{
+    for (const PartName& name : part_names_) {
+        const double from = std::max(name.from, xAxis->range().lower), to = std::min(name.to, xAxis->range().upper);
+        name.text->setVisible(to > from);
+        name.text->position->setCoords(0.5 * (from + to), 0.0);
     }
 }
 
@@ -297,6 +308,7 @@ void CardPlot::keep_within()
     keep(xAxis, picture_.x_low, picture_.x_high);
     keep(yAxis, picture_.y_low, picture_.y_high);
     keeping_ = false;
+    place_part_names();
 }
 
 void CardPlot::paint(const CardPicture& picture, QCPPainter& painter, const QSize& size)

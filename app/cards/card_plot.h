@@ -55,6 +55,7 @@ private:
     void add_spots();
     void add_titles();
     void keep_within();
+    void place_part_names(); ///< over what is seen of each part
     QColor colour_of(FigureRole role) const;
     void stand_over_x(QCPItemPosition& position); ///< at a value of x, at a share of the plot's height
     QCPItemText* add_text(const QString& text, const QColor& colour, Qt::Alignment alignment);
@@ -63,6 +64,12 @@ private:
     const Theme* theme_;
     std::optional<double> cursor_;
     QCPItemLine* cursor_line_ = nullptr;
+    struct PartName
+    {
+        QCPItemText* text;
+        double from, to;
+    };
+    std::vector<PartName> part_names_;
     bool keeping_ = false; ///< the ranges are being put back within the picture
 };
 

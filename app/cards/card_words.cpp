@@ -277,7 +277,7 @@ QString cylinder_words(const CardsInHand& cards, int cylinder)
     if (!card->card)
         return tr_("not evaluated");
     if (!card->comparison)
-        return tr_("no healthy card");
+        return tr_("not compared");
     const indicator::PartDifference* most = nullptr;
     for (const indicator::PartDifference& part : card->comparison->parts)
         if (part.clear && part.part != CyclePart::gas_exchange && (!most || std::abs(shown_difference(part)) > std::abs(shown_difference(*most))))

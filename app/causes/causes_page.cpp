@@ -48,6 +48,8 @@ void CausesPage::refresh()
     if (judgement != judgement_) {
         judgement_ = judgement;
         explanation_ = explain(*judgement_);
+        auto cards = workplace().history() ? find_cards(*workplace().history(), *judgement_) : Result<CardsStored>(CardsStored{});
+        cards_ = cards ? std::move(cards.value()) : CardsStored{}; // what cannot be read is said on the page Cards
     }
     show_sheet();
 }
@@ -55,7 +57,7 @@ void CausesPage::refresh()
 void CausesPage::fill(QTextDocument& document, const Theme& colours) const
 {
     QString html = QStringLiteral("<body>") + sheet_paragraph(title(), "title");
-    for (const CausesLine& line : causes_lines(*explanation_))
+    for (const CausesLine& line : causes_lines(*explanation_, cards_))
         html += html_of(line, colours);
     document.setDefaultStyleSheet(sheet_style(colours));
     document.setHtml(html + QStringLiteral("</body>"));
@@ -66,7 +68,7 @@ QString CausesPage::plain_text() const
     if (!explanation_)
         return {};
     QString plain = title() + u'\n';
-    for (const CausesLine& line : causes_lines(*explanation_))
+    for (const CausesLine& line : causes_lines(*explanation_, cards_))
         plain += (line.kind == Kind::caution ? tr("Caution: ") : line.lead.isEmpty() ? QString() : line.lead + QStringLiteral(": ")) +
                  line.words + u'\n';
     return plain;

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "app/cards/card_shelf.h"
 #include "app/desk/sheet_page.h"
 #include "core/explanation/explanation.h"
 
@@ -27,6 +28,7 @@ protected:
 private:
     std::shared_ptr<const Judgement> judgement_;
     std::optional<Explanation> explanation_; ///< of `judgement_`
+    CardsStored cards_;
 };
 
 } // namespace evenstroke

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/causes/causes_text.h"
 
+#include "app/cards/card_shelf.h"
 #include "app/desk/number_text.h"
 #include "core/explanation/cautions.h"
 #include "core/sentence_words.h"
@@ -109,9 +110,18 @@ private:
     std::set<std::string> warned_; ///< cautions of the subject in hand
 };
 
+std::optional<std::size_t> newest_card(const CardsStored& cards, const Place& place)
+{
+    std::optional<std::size_t> newest;
+    for (const CardsStored::Entry& card : cards.cards)
+        if (place == Place::cylinder(card.place.cylinder) && (!newest || card.place.reading > *newest))
+            newest = card.place.reading;
+    return newest;
+}
+
 } // namespace
 
-std::vector<CausesLine> causes_lines(const Explanation& explanation)
+std::vector<CausesLine> causes_lines(const Explanation& explanation, const CardsStored& cards)
 {
     std::vector<CausesLine> lines;
     Writer writer(lines);
@@ -126,6 +136,10 @@ std::vector<CausesLine> causes_lines(const Explanation& explanation)
             writer.add(Kind::plain, to_qstring(remark));
         writer.add(Kind::plain, to_qstring(subject.cannot_tell));
         writer.add_time(subject);
+        if (const auto reading = newest_card(cards, subject.subject); reading && !subject.causes.empty())
+            writer.add(Kind::plain, tr_("An indicator card of %1 is stored: what it says of leak, timing and burning, and whether it "
+                                        "bears one of these causes out, stands on the page Cards (key C).")
+                                        .arg(day_text(explanation.record->readings[*reading].taken_at.utc)));
         for (const Hypothesis& cause : subject.causes)
             writer.add_cause(cause);
     }

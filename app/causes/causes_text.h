@@ -24,7 +24,10 @@ struct CausesLine
     QString lead, words;
 };
 
+struct CardsStored;
+
 /// The sheet from top to bottom.
-std::vector<CausesLine> causes_lines(const Explanation& explanation);
+/// @param cards those that are stored with the engine: a cylinder that has one is pointed to it
+std::vector<CausesLine> causes_lines(const Explanation& explanation, const CardsStored& cards);
 
 } // namespace evenstroke

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/causes/causes_page.h"
+#include "app/cards/card_shelf.h"
 #include "app/causes/causes_text.h"
 #include "core/explanation/cautions.h"
 #include "tests/app/invented_judgement.h"
@@ -17,7 +18,7 @@ namespace {
 TEST(CausesText, ACautionStandsBeforeWhatItWarnsOfAndTheLastWordIsNotOurs)
 {
     const Explanation explanation = explain(*invented::judgement());
-    const auto lines = causes_lines(explanation);
+    const auto lines = causes_lines(explanation, {});
     ASSERT_FALSE(lines.empty());
     for (const SubjectExplanation& subject : explanation.subjects)
         for (const Hypothesis& cause : subject.causes) {
