@@ -164,6 +164,23 @@ std::string date_cell(const Context& context, std::size_t i, bool& unsteady, boo
     return date;
 }
 
+/// Nobody entered anything, not even why not.
+bool is_blank(const ValueCell* cell)
+{
+    return !cell || !cell->value ||
+           (cell->value->typed.empty() && cell->value->words.empty() &&
+            (cell->value->missing == MissingReason::none || cell->value->missing == MissingReason::not_read));
+}
+
+std::vector<const ValueCell*> cells_of(const Context& context, std::size_t i, QuantityId id)
+{
+    std::vector<const ValueCell*> cells;
+    for (int number = 1; number <= context.engine.cylinders; ++number)
+        cells.push_back(find_cell(context, i, id, Place::cylinder(number)));
+    return cells;
+}
+
+/// Readings at which a quantity was read on no cylinder stand in one line under its table instead of a row each.
 Table cylinder_table(const Context& context, const Quantity& of, const Extent& extent, const std::vector<std::size_t>& readings)
 {
     Table table;
@@ -177,12 +194,15 @@ Table cylinder_table(const Context& context, const Quantity& of, const Extent& e
     for (int number = 1; number <= context.engine.cylinders; ++number)
         table.columns.push_back({context.engine.cylinder_name(number), Column::Kind::number});
     bool unsteady = false;
-    for (const std::size_t i : readings)
+    std::string not_read;
+    for (const std::size_t i : readings) {
+        const std::vector<const ValueCell*> cells = cells_of(context, i, of.id);
+        if (std::all_of(cells.begin(), cells.end(), is_blank)) {
+            not_read += (not_read.empty() ? "Not read on any cylinder: " : ", ") + date_text(context.record.readings[context.readings[i]].taken_at.utc);
+            continue;
+        }
         for (const Line line : extent.lines) {
             const bool first = line == Line::read;
-            std::vector<const ValueCell*> cells;
-            for (int number = 1; number <= context.engine.cylinders; ++number)
-                cells.push_back(find_cell(context, i, of.id, Place::cylinder(number)));
             const auto unit = row_unit(cells);
             const std::string in = first && extent.unit.mixed && unit ? ", " + unit_words(unit->first, unit->second) : "";
             Row row{{first ? date_cell(context, i, unsteady) : "",
@@ -192,7 +212,9 @@ Table cylinder_table(const Context& context, const Quantity& of, const Extent& e
                 row.cells.push_back(cell_text(of, cell, line, unit));
             table.rows.push_back(std::move(row));
         }
-    table.note = notes(of, extent, unsteady);
+    }
+    const std::string others = notes(of, extent, unsteady);
+    table.note = not_read.empty() ? others : not_read + "." + (others.empty() ? "" : " " + others);
     return table;
 }
 
