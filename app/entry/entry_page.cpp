@@ -69,6 +69,7 @@ void EntryPage::connect_sheet()
         time_problem_.reset();
         close_problem_.reset();
         asked_at_closing_.clear();
+        closing_wanted_ = false;
         typed_lately_.clear();
         notice_.clear();
         opinions_.forget();

@@ -113,6 +113,7 @@ private:
     std::optional<PastePlan> paste_plan_;
     std::optional<Problem> time_problem_, close_problem_;
     std::vector<OpenMatter> asked_at_closing_; ///< empty: closing was not asked for, or nothing was open
+    bool closing_wanted_ = false;              ///< closing was asked for: what is empty is listed from then on
     QStringList kept_doubtful_;                ///< what the last closing kept although it was doubted
     std::vector<LogBox> typed_lately_;         ///< newest last
     QString notice_;                           ///< what was just done, until the next change

@@ -16,6 +16,8 @@
 namespace evenstroke {
 namespace {
 
+/// Height of the lines under the sheet, px: a few while typing, more once closing is asked for.
+constexpr int notes_while_typing = 92, notes_at_closing = 220;
 /// More lines than these are no help at the foot; the marks in the boxes show the rest.
 constexpr std::size_t single_values_listed = 12;
 
@@ -44,6 +46,7 @@ void EntryPage::show_notes()
     add_paste_line(lines);
     add_matter_lines(lines);
     ui_->notes->show_lines(lines);
+    ui_->notes_area->setMaximumHeight(closing_wanted_ ? notes_at_closing : notes_while_typing);
     ui_->notes_area->setVisible(!lines.empty());
 }
 
@@ -66,11 +69,8 @@ void EntryPage::add_closing_line(std::vector<NoteLines::Line>& lines)
 {
     if (asked_at_closing_.empty())
         return;
-    const OpenMatter& first = asked_at_closing_.front();
-    const QString count = asked_at_closing_.size() == 1
-                              ? tr("Before closing: one matter is open.")
-                              : tr("Before closing: %1 matters are open. The first:").arg(asked_at_closing_.size());
-    NoteLines::Line line{count + u' ' + first.sentence, true, {}};
+    const OpenMatter first = asked_at_closing_.front();
+    NoteLines::Line line{tr("Before closing: %1. Each is named below.").arg(open_in_short(asked_at_closing_)), true, {}};
     if (first.time || !first.boxes.empty())
         line.actions.push_back({tr("Go there"), [this, first] { go_to_matter(first); }});
     line.actions.push_back({tr("Close all the same"), [this] { close_reading(); }});
@@ -79,6 +79,9 @@ void EntryPage::add_closing_line(std::vector<NoteLines::Line>& lines)
 
 void EntryPage::add_matter_lines(std::vector<NoteLines::Line>& lines)
 {
+    if (closing_wanted_)
+        for (const OpenMatter& matter : find_lacking_matters(model_, opinions_))
+            lines.push_back({matter.sentence, false, {{tr("Go there"), [this, matter] { go_to_matter(matter); }}}});
     std::size_t single = 0;
     for (const OpenMatter& matter : find_open_matters(model_, opinions_)) {
         if (matter.one_box && ++single > single_values_listed)
@@ -193,6 +196,8 @@ bool EntryPage::may_close()
         return true;
     judge_now();
     asked_at_closing_ = find_open_matters(model_, opinions_);
+    for (OpenMatter& lacking : find_lacking_matters(model_, opinions_))
+        asked_at_closing_.push_back(std::move(lacking));
     if (asked_at_closing_.empty())
         return true;
     ui_->notes_area->verticalScrollBar()->setValue(0);
@@ -203,10 +208,14 @@ bool EntryPage::may_close()
 void EntryPage::keep_doubts()
 {
     kept_doubtful_.clear();
+    std::vector<OpenMatter> doubts;
     for (const OpenMatter& matter : asked_at_closing_)
+        if (matter.lacking == 0 && !matter.quick)
+            doubts.push_back(matter); // what is empty, the closed page says anyway
+    for (const OpenMatter& matter : doubts)
         kept_doubtful_ << matter.sentence;
     std::vector<Value> confirmed;
-    for (const LogBox& box : doubted_boxes(model_, asked_at_closing_)) {
+    for (const LogBox& box : doubted_boxes(model_, doubts)) {
         const Value* value = session_.sheet().value(box);
         if (!value || !value->number || value->confirmed || session_.sheet().lent(box))
             continue;
@@ -226,6 +235,7 @@ void EntryPage::close_reading()
     if (session_.state() != EntrySession::State::writing)
         return;
     ui_->grid->finish_editing();
+    closing_wanted_ = true;
     if (!model_.unreadable().empty()) {
         go_to_unreadable();
         return;
@@ -241,8 +251,9 @@ void EntryPage::close_reading()
         return;
     }
     keep_doubts();
+    const QString open = open_in_short(asked_at_closing_);
     asked_at_closing_.clear();
-    close_problem_ = session_.close();
+    close_problem_ = session_.close(open.isEmpty() ? QString() : tr("closed all the same with %1").arg(open));
     if (close_problem_) {
         show_notes();
         return;

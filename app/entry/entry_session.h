@@ -74,7 +74,8 @@ public:
     const std::optional<Problem>& problem() const { return problem_; }
 
     /// Closes the reading, and the ship's with it. What is missing does not stand in the way.
-    std::optional<Problem> close();
+    /// @param why what was open and is kept as it is; the audit trail keeps it
+    std::optional<Problem> close(const QString& why = {});
     /// Throws the draft away; what was typed stays in the audit trail only.
     std::optional<Problem> discard();
     /// Takes the closed reading that is being corrected out of use; it stays in the history with the reason.

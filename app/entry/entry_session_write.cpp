@@ -200,7 +200,7 @@ std::optional<Problem> EntrySession::bring_back(const QString& reading_id, const
     return std::nullopt;
 }
 
-std::optional<Problem> EntrySession::close()
+std::optional<Problem> EntrySession::close(const QString& why)
 {
     if (!flush() && problem_)
         return problem_;
@@ -213,7 +213,10 @@ std::optional<Problem> EntrySession::close()
             if (const auto closed = store().close(ship_reading_id_, by); !closed)
                 return closed.error();
     }
-    if (const auto closed = store().close(sheet_.reading().id, by); !closed)
+    storage::Signature with_reason = by;
+    if (!why.isEmpty())
+        with_reason.why = to_std(why);
+    if (const auto closed = store().close(sheet_.reading().id, with_reason); !closed)
         return closed.error();
     state_ = State::closed;
     undo_.clear();

@@ -37,6 +37,27 @@
 <context>
     <name>evenstroke</name>
     <message numerus="yes">
+        <source>%1, %n required box(es) empty: %2.</source>
+        <translation>
+            <numerusform>%1, 1 required box empty: %2.</numerusform>
+            <numerusform>%1, %n required boxes empty: %2.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n matter(s) in doubt</source>
+        <translation>
+            <numerusform>1 matter in doubt</numerusform>
+            <numerusform>%n matters in doubt</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n required box(es) empty</source>
+        <translation>
+            <numerusform>1 required box empty</numerusform>
+            <numerusform>%n required boxes empty</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
         <source>%1: %n remark(s).</source>
         <translation>
             <numerusform>%1: one remark.</numerusform>

@@ -52,6 +52,40 @@ TEST_F(EntryClosing, StopsOnceForADoubtAndKeepsItAsConfirmed)
     EXPECT_FALSE(words.contains(QStringLiteral("what the ship shares is already entered")));
 }
 
+TEST_F(EntryClosing, StopsOnceForAllThatIsEmptyBesideWhatIsInDoubt)
+{
+    open(14);
+    type_load_and_exhausts(QStringLiteral("533"));
+    page->close_reading();
+    ASSERT_EQ(state(), EntrySession::State::writing);
+    EXPECT_TRUE(foot().contains(QStringLiteral("matter in doubt"))) << foot().toStdString();
+    EXPECT_TRUE(foot().contains(QStringLiteral("required boxes empty"))) << foot().toStdString();
+    EXPECT_TRUE(foot().contains(QStringLiteral("the quick lines not filled in"))) << foot().toStdString();
+    EXPECT_TRUE(foot().contains(QStringLiteral("Running hours"))) << foot().toStdString();
+    EXPECT_TRUE(foot().contains(QStringLiteral("Maximum pressure of all cylinders"))) << foot().toStdString();
+    page->close_reading();
+    EXPECT_EQ(state(), EntrySession::State::closed);
+}
+
+TEST_F(EntryClosing, EmptyBoxesAloneStopClosingAndTheWayLeadsToTheFirst)
+{
+    open(2);
+    page->set_time(QStringLiteral("2021-04-01"), QStringLiteral("9:10"), QStringLiteral("+02:00"));
+    enter(box("load_percent"), QStringLiteral("75"));
+    page->close_reading();
+    ASSERT_EQ(state(), EntrySession::State::writing);
+    EXPECT_FALSE(foot().contains(QStringLiteral("in doubt"))) << foot().toStdString();
+    EXPECT_TRUE(const_cast<NoteLines&>(page->notes()).act(QStringLiteral("Go there")));
+    ASSERT_TRUE(page->view().current_box().has_value());
+    EXPECT_NE(page->view().current_box()->phase, Phase::reading) << "the quick lines come first";
+    enter(box("engine_running_hours"), QStringLiteral("22000"));
+    page->close_reading();
+    EXPECT_EQ(state(), EntrySession::State::writing) << "what was typed since is looked at again";
+    EXPECT_FALSE(foot().contains(QStringLiteral("Running hours"))) << foot().toStdString();
+    page->close_reading();
+    EXPECT_EQ(state(), EntrySession::State::closed);
+}
+
 TEST_F(EntryClosing, StopsForATimeToComeAndForRunningHoursThatFell)
 {
     open(3);

@@ -101,6 +101,8 @@ TEST(EntryPictures, OfRealData)
     keep("entry_night");
     set_theme(ThemeKind::day);
     page->close_reading();
+    keep("entry_before_closing");
+    page->close_reading();
     ASSERT_TRUE(QTest::qWaitFor([&] { return workplace.activity().isEmpty(); }, 60000));
     page->refresh();
     keep("entry_closed");
