@@ -4,6 +4,7 @@
 #include "core/trend/drift_input.h"
 #include "core/trend/drift_results.h"
 #include "core/trend/flag_text.h"
+#include "core/trend/meant_number.h"
 #include "core/trend/other_unit.h"
 
 #include <algorithm>
@@ -109,8 +110,47 @@ void judge_unit(ValueOpinion& one, const Value& value, std::optional<double> own
     if (one.verdict != ValueOpinion::Verdict::impossible)
         one.verdict = ValueOpinion::Verdict::doubtful;
     one.sentence += (one.sentence.empty() ? "" : " ") + other->sentence;
-    if (!one.suggestion)
+    if (!one.suggestion) {
         one.suggestion = other->suggestion;
+        one.second_suggestion = other->second;
+    }
+}
+
+/// What the same draft says a number is about: the quick lines, for the load the power. Then earlier readings, which
+/// count only where the number is doubted already: the load may have changed since.
+std::vector<NumberReference> references_of(const Reading& draft, const Value& value, const ValueOpinion& one,
+                                           const Engine& engine, const Conditions& conditions)
+{
+    std::vector<NumberReference> references;
+    for (const Value& quick : draft.values)
+        if (quick.quantity == value.quantity && quick.place == value.place && quick.phase != Phase::reading)
+            if (const auto own = own_value(quick, conditions))
+                references.push_back({own->value, "The quick lines say"});
+    const double rated = engine.rated_power.value();
+    if (quantity(value.quantity).name == "load_percent" && conditions.shaft_power && rated > 0.0)
+        references.push_back({100.0 * 1000.0 * *conditions.shaft_power / rated, "By shaft power it is"});
+    const bool out_of_range =
+        one.verdict == ValueOpinion::Verdict::unlikely || one.verdict == ValueOpinion::Verdict::impossible;
+    if (out_of_range && one.expected)
+        references.push_back({*one.expected, "Expected is"});
+    if (out_of_range && one.previous)
+        references.push_back({*one.previous, "Last time it was"});
+    return references;
+}
+
+/// A point in the wrong place is offered for what the drift check does not look at, such as the load.
+void judge_slip(ValueOpinion& one, const Value& value, std::optional<double> own,
+                std::span<const NumberReference> references)
+{
+    if (!own || one.suggestion || value.confirmed || value.phase != Phase::reading)
+        return;
+    const auto meant = guess_meant_number(value, *own, references);
+    if (!meant)
+        return;
+    if (one.verdict != ValueOpinion::Verdict::impossible)
+        one.verdict = ValueOpinion::Verdict::doubtful;
+    one.sentence += (one.sentence.empty() ? "" : " ") + meant->sentence;
+    one.suggestion = meant->suggestion;
 }
 
 } // namespace
@@ -161,7 +201,9 @@ DraftOpinion judge_draft(const Judgement& history, const Reading& draft)
             one.suggestion = doubt.suggestion;
             one.sentence = doubt.sentence;
         }
-        judge_unit(one, value, own ? std::optional<double>(own->value) : std::nullopt);
+        const std::optional<double> own_number = own ? std::optional<double>(own->value) : std::nullopt;
+        judge_slip(one, value, own_number, references_of(draft, value, one, engine, conditions));
+        judge_unit(one, value, own_number);
         opinion.values.push_back(std::move(one));
     }
     const SteadinessVerdict steadiness = judge_steadiness(draft, !engine.two_stroke());

@@ -208,6 +208,7 @@ struct ValueOpinion
     std::optional<double> usual_low, usual_high; ///< raw values inside the usual scatter
     Verdict verdict = Verdict::nothing_to_compare;
     std::optional<std::string> suggestion; ///< the value probably meant, in the typed unit
+    std::optional<std::string> second_suggestion; ///< what else it may be: the same number in yet another unit
     std::string sentence;                  ///< empty where there is nothing to say
 };
 struct DraftOpinion

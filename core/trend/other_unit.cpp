@@ -3,9 +3,11 @@
 
 #include "core/reading/typed_box.h"
 
+#include <algorithm>
 #include <array>
 #include <charconv>
 #include <cmath>
+#include <vector>
 
 namespace evenstroke {
 namespace {
@@ -13,6 +15,9 @@ namespace {
 /// How near the value must come, and how far apart two units must be to be told from a change of the engine.
 /// Invented.
 constexpr double near_enough = 0.05, units_apart = 1.5;
+/// Beside a unit that comes near enough, others are named that would do as well. Invented.
+constexpr double near_enough_beside = 0.10;
+constexpr double same_unit = 1e-6;
 
 double apart(double value, double reference)
 {
@@ -30,6 +35,36 @@ std::string short_number(double number)
     return written.ec == std::errc{} ? std::string(buffer.data(), written.ptr) : std::string();
 }
 
+struct Candidate
+{
+    UnitId id;
+    double would_be; ///< in the quantity's own unit
+};
+
+/// Every other unit of the quantity in which the number would be plausible, nearest to the reference first.
+std::vector<Candidate> fitting_units(const Value& value, double reference)
+{
+    const Quantity& meant = quantity(value.quantity);
+    std::vector<Candidate> candidates;
+    for (const WrittenUnit& written : possible_units(value.quantity)) {
+        if (written.kind != meant.kind || written.id == value.unit ||
+            unit(written.id).dimension != unit(meant.unit).dimension)
+            continue;
+        const double would_be = unit(meant.unit).from_si(unit(written.id).to_si(*value.number));
+        const bool twice = std::any_of(candidates.begin(), candidates.end(), [&](const Candidate& one) {
+            return apart(one.would_be, would_be) < same_unit; // kilopascal and the like under another name
+        });
+        if (!twice && apart(would_be, reference) <= near_enough_beside)
+            candidates.push_back({written.id, would_be});
+    }
+    std::stable_sort(candidates.begin(), candidates.end(), [&](const Candidate& a, const Candidate& b) {
+        return apart(a.would_be, reference) < apart(b.would_be, reference);
+    });
+    if (!candidates.empty() && apart(candidates.front().would_be, reference) > near_enough)
+        candidates.clear();
+    return candidates;
+}
+
 } // namespace
 
 std::optional<OtherUnit> guess_other_unit(const Value& value, double own, double reference,
@@ -43,27 +78,22 @@ std::optional<OtherUnit> guess_other_unit(const Value& value, double own, double
     const double ratio = own / reference;
     if (ratio < units_apart && ratio > 1.0 / units_apart)
         return std::nullopt;
-    std::optional<double> best;
-    UnitId found = value.unit;
-    for (const WrittenUnit& written : possible_units(value.quantity)) {
-        if (written.kind != meant.kind || written.id == value.unit ||
-            unit(written.id).dimension != unit(meant.unit).dimension)
-            continue;
-        const double would_be = unit(meant.unit).from_si(unit(written.id).to_si(*value.number));
-        if (apart(would_be, reference) <= near_enough && (!best || apart(would_be, reference) < apart(*best, reference))) {
-            best = would_be;
-            found = written.id;
-        }
-    }
-    if (!best)
+    const std::vector<Candidate> candidates = fitting_units(value, reference);
+    if (candidates.empty())
         return std::nullopt;
     const std::string typed = value.typed.empty() ? short_number(*value.number) : value.typed;
-    const std::string other = typed + " " + std::string(unit(found).symbol),
-                      own_symbol = " " + std::string(unit(meant.unit).symbol);
-    return OtherUnit{other, "In another unit? " + typed + " " + std::string(unit(value.unit).symbol) +
-                                " stands here; " + other + " would be " + short_number(*best) + own_symbol +
-                                ", " + reference_words + " " + short_number(reference) + own_symbol +
-                                ". Look at the gauge's face."};
+    const std::string own_symbol = " " + std::string(unit(meant.unit).symbol);
+    const auto in_other = [&](const Candidate& one) { return typed + " " + std::string(unit(one.id).symbol); };
+    std::string would_be;
+    for (const Candidate& one : candidates)
+        would_be += (would_be.empty() ? "" : ", ") + in_other(one) + " would be " + short_number(one.would_be) + own_symbol;
+    OtherUnit found;
+    found.suggestion = in_other(candidates.front());
+    if (candidates.size() > 1)
+        found.second = in_other(candidates[1]);
+    found.sentence = "In another unit? " + typed + " " + std::string(unit(value.unit).symbol) + " stands here; " + would_be +
+                     ", " + reference_words + " " + short_number(reference) + own_symbol + ". Look at the gauge's face.";
+    return found;
 }
 
 } // namespace evenstroke

@@ -11,7 +11,8 @@ namespace evenstroke {
 /// A value that would be what it should be if it had been read in another of the quantity's units.
 struct OtherUnit
 {
-    std::string suggestion; ///< as it would be typed: "72 mmH2O"
+    std::string suggestion; ///< as it would be typed: "72 mmH2O"; the unit that comes nearest to what is expected
+    std::optional<std::string> second; ///< the next one that would do, as "585 °F" beside "585 K"
     std::string sentence;
 };
 

@@ -37,6 +37,20 @@ TEST(OtherUnit, DegreesFahrenheitInTheCelsiusBoxAreSeen)
     EXPECT_NE(other->suggestion.find("662"), std::string::npos);
 }
 
+TEST(OtherUnit, EveryUnitThatWouldDoIsNamedNearestFirst)
+{
+    // 585 K are 311.85 °C and 585 °F are 307.2 °C, both by definition
+    const auto kelvin = guess("exhaust_temperature", Place::cylinder(4), "585", 585, 312);
+    ASSERT_TRUE(kelvin && kelvin->second);
+    EXPECT_EQ(kelvin->suggestion, "585 K");
+    EXPECT_EQ(*kelvin->second, "585 °F");
+    EXPECT_NE(kelvin->sentence.find("585 °F would be 307"), std::string::npos) << kelvin->sentence;
+    const auto fahrenheit = guess("exhaust_temperature", Place::cylinder(4), "585", 585, 307);
+    ASSERT_TRUE(fahrenheit && fahrenheit->second);
+    EXPECT_EQ(fahrenheit->suggestion, "585 °F");
+    EXPECT_EQ(*fahrenheit->second, "585 K");
+}
+
 TEST(OtherUnit, UnitsTooNearEachOtherAndPlainChangesSayNothing)
 {
     EXPECT_FALSE(guess("scavenge_pressure", Place::engine(), "2.04", 2.04, 2.0)); // kgf/cm² is 2 % from bar
