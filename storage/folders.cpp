@@ -39,7 +39,9 @@ FoundFolders FolderSearch::run(const QStringList& given)
 {
     for (const QString& path : given) {
         const std::string shown = from_qt(QDir::cleanPath(path));
-        if (!QFileInfo(path).isDir())
+        if (QFileInfo(path).isFile())
+            found_.files.push_back(shown);
+        else if (!QFileInfo(path).isDir())
             found_.not_there.push_back(shown);
         else if (look_into(path, shown, 0).empty())
             found_.without_engine.push_back(shown);

@@ -31,6 +31,7 @@ struct FoundFolders
     std::vector<EngineFolder> engines;
     std::vector<ShipFolder> ships;
     std::vector<std::string> not_there;      ///< of the folders given, those that do not exist
+    std::vector<std::string> files;          ///< of the folders given, those that are files
     std::vector<std::string> without_engine; ///< of the folders given, those that hold none
     std::vector<std::string> ignored;        ///< files that belong to no engine
     qint64 bytes = 0;                        ///< of all files that will be read

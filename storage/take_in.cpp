@@ -22,6 +22,10 @@ FolderReport refused_whole(const std::string& folder, std::string reason, std::s
 
 void report_useless(const FoundFolders& found, std::vector<FolderReport>& folders)
 {
+    for (const std::string& file : found.files)
+        folders.push_back(refused_whole(file, "This is a file, not a folder.",
+                                        "Take the folder that holds it: what its ship_readings.csv says of the whole ship "
+                                        "is taken only with that folder, not with the engines' folders one by one."));
     for (const std::string& folder : found.not_there)
         folders.push_back(
             refused_whole(folder, "There is no folder of this name.", "Check the name of the folder."));

@@ -24,6 +24,20 @@ std::optional<TimePoint> read_day(const QCommandLineParser& parser, const char* 
     return std::nullopt;
 }
 
+/// "usual" where nothing is said, as in the window; a sentence on err and nothing where it is none of the words.
+std::optional<ReportDepth> read_depth(const QCommandLineParser& parser, Streams& streams)
+{
+    const QString word = parser.value(QStringLiteral("depth"));
+    if (word.isEmpty() || word == QLatin1String("usual"))
+        return ReportDepth::usual;
+    if (word == QLatin1String("brief"))
+        return ReportDepth::brief;
+    if (word == QLatin1String("full"))
+        return ReportDepth::full;
+    streams.err << "--depth: “" << word << "” is no depth of a report. Write brief, usual or full.\n";
+    return std::nullopt;
+}
+
 } // namespace
 
 int run_report(const QCommandLineParser& parser, Streams& streams)
@@ -36,6 +50,9 @@ int run_report(const QCommandLineParser& parser, Streams& streams)
                     << parser.value(QStringLiteral("from")) << ". Give the earlier day to --from.\n";
         return wrong_use;
     }
+    const auto depth = read_depth(parser, streams);
+    if (!depth)
+        return wrong_use;
     TimePoint date = *to;
     if (parser.isSet(QStringLiteral("date"))) {
         const auto given = read_day(parser, "date", streams);
@@ -54,6 +71,7 @@ int run_report(const QCommandLineParser& parser, Streams& streams)
         return refuse(streams, sources.error());
     ReportDetails details = sources.value().details;
     details.date = date;
+    details.depth = *depth;
     details.program_version = EVENSTROKE_VERSION;
     const ReportPeriod period{*from, *to + 24h - 1s};
     const Judgement judgement = judge(sources.value().record);

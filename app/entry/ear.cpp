@@ -6,6 +6,9 @@
 #include "core/reading/typed_number.h"
 #include "ui_ear.h"
 
+#include <array>
+#include <utility>
+
 namespace evenstroke {
 namespace {
 
@@ -43,6 +46,7 @@ Ear::Ear(QWidget* parent) : QWidget(parent), ui_(std::make_unique<Ui::Ear>())
 {
     ui_->setupUi(this);
     connect(ui_->take_button, &QPushButton::clicked, this, &Ear::take_suggestion);
+    connect(ui_->second_button, &QPushButton::clicked, this, &Ear::take_second);
     connect(ui_->confirm_button, &QPushButton::clicked, this, &Ear::confirm);
     connect(ui_->newest_button, &QPushButton::clicked, this, &Ear::newest_wanted);
     show_nothing();
@@ -61,6 +65,32 @@ void Ear::show_newest(const QString& sentence)
     ui_->newest->setText(sentence);
     ui_->newest->setVisible(!sentence.isEmpty());
     ui_->newest_button->setVisible(!sentence.isEmpty());
+    fit();
+}
+
+void Ear::resizeEvent(QResizeEvent* event)
+{
+    QWidget::resizeEvent(event);
+    fit();
+}
+
+void Ear::fit()
+{
+    // What is said of the reading so far stands on the closed page too, and the doubt elsewhere under the sheet.
+    const std::array<std::pair<QWidget*, bool>, 5> least_first{
+        {{ui_->keys, true},
+         {ui_->steadiness, true},
+         {ui_->completeness, true},
+         {ui_->whole_label, true},
+         {ui_->newest, !ui_->newest->text().isEmpty()}}};
+    for (const auto& [part, wanted] : least_first)
+        part->setVisible(wanted);
+    for (const auto& [part, wanted] : least_first) {
+        layout()->invalidate();
+        if (layout()->totalHeightForWidth(width()) <= height())
+            return;
+        part->hide();
+    }
 }
 
 QString Ear::newest() const
@@ -71,6 +101,8 @@ QString Ear::newest() const
 void Ear::show_nothing()
 {
     suggestion_.clear();
+    second_suggestion_.clear();
+    ui_->second_button->hide();
     ui_->box_name->clear();
     for (QWidget* part : {static_cast<QWidget*>(ui_->numbers), static_cast<QWidget*>(ui_->scale),
                           static_cast<QWidget*>(ui_->sentence), static_cast<QWidget*>(ui_->take_button),
@@ -92,6 +124,7 @@ void Ear::show_box(const LogSheetModel& model, const LogBox& box, const EntryOpi
         ui_->sentence->setText(sentences.join(QStringLiteral("\n\n")));
         ui_->sentence->show();
     }
+    fit();
 }
 
 /// What may be written where it is no number, and the words that stood there last time.
@@ -188,6 +221,11 @@ void Ear::show_doubt(const LogSheetModel& model, const LogBox& box, const EntryO
         ui_->take_button->setText(tr("F3  take %1 instead").arg(suggestion_));
         ui_->take_button->show();
     }
+    if (doubts && !confirmed && opinion->suggestion && opinion->second_suggestion) {
+        second_suggestion_ = to_qstring(*opinion->second_suggestion);
+        ui_->second_button->setText(tr("Shift+F3  take %1 instead").arg(second_suggestion_));
+        ui_->second_button->show();
+    }
     const bool asked = (doubts || !opinions.notes_of(box).empty()) && value && !confirmed;
     ui_->confirm_button->setVisible(asked);
 }
@@ -198,6 +236,7 @@ void Ear::show_whole(const EntrySheet& sheet, const EntryOpinions& opinions)
     ui_->completeness->setText(
         tr("%1 of %2 required boxes answered").arg(state.answered).arg(state.required));
     ui_->steadiness->setText(to_qstring(opinions.steadiness().sentence));
+    fit();
 }
 
 } // namespace evenstroke

@@ -36,14 +36,22 @@ public:
 
     /// What F3 would type; empty where nothing is offered.
     const QString& suggestion() const { return suggestion_; }
+    /// What Shift+F3 would type; empty where no second value is offered.
+    const QString& second_suggestion() const { return second_suggestion_; }
     QString sentence() const;
 
 signals:
     void take_suggestion();
+    void take_second();
     void confirm();
     void newest_wanted(); ///< back to the box of the newest doubt
 
+protected:
+    void resizeEvent(QResizeEvent* event) override;
+
 private:
+    /// Leaves out what matters least where the height is short, so that no text is cut through its lines.
+    void fit();
     void show_numbers(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions,
                       std::optional<double> typed);
     QStringList choices_of(const LogSheetModel& model, const LogBox& box, const EntryOpinions& opinions);
@@ -51,7 +59,7 @@ private:
                     QStringList& sentences);
 
     std::unique_ptr<Ui::Ear> ui_;
-    QString suggestion_;
+    QString suggestion_, second_suggestion_;
 };
 
 } // namespace evenstroke

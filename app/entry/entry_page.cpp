@@ -115,12 +115,14 @@ void EntryPage::connect_sheet()
     });
     connect(ui_->grid, &LogSheetView::unit_wanted, this, &EntryPage::choose_unit);
     connect(ui_->grid, &LogSheetView::suggestion_wanted, this, &EntryPage::take_suggestion);
+    connect(ui_->grid, &LogSheetView::second_wanted, this, &EntryPage::take_second);
     connect(ui_->grid, &LogSheetView::confirm_wanted, this, &EntryPage::confirm_boxes);
 }
 
 void EntryPage::connect_actions()
 {
     connect(ui_->ear, &Ear::take_suggestion, this, &EntryPage::take_suggestion);
+    connect(ui_->ear, &Ear::take_second, this, &EntryPage::take_second);
     connect(ui_->ear, &Ear::confirm, this, &EntryPage::confirm_boxes);
     connect(ui_->ear, &Ear::newest_wanted, this, &EntryPage::go_to_doubt);
     for (QLineEdit* field : {ui_->date_field, ui_->clock_field, ui_->offset_field})

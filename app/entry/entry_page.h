@@ -62,7 +62,8 @@ public:
     /// The newest doubt that has no answer yet, else the next one behind the box in hand.
     void go_to_doubt();
     void go_to_date();
-    void take_suggestion();
+    void take_suggestion() { take_offered(false); }
+    void take_second() { take_offered(true); } ///< where a number may have been read in either of two units
     void confirm_boxes();
     void take_paste_that_can_be_read();
     void copy_all();
@@ -74,6 +75,7 @@ protected:
     void hideEvent(QHideEvent* event) override;
 
 private:
+    void take_offered(bool second);
     void connect_sheet();
     void connect_actions();
     void show_state();

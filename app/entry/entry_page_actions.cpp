@@ -38,16 +38,17 @@ void EntryPage::correct(const QString& reading_id)
     (ui_->who_field->text().trimmed().isEmpty() ? ui_->who_field : ui_->why_field)->setFocus();
 }
 
-void EntryPage::take_suggestion()
+void EntryPage::take_offered(bool second)
 {
     const auto box = ui_->grid->current_box();
-    if (!box || ui_->ear->suggestion().isEmpty())
+    const QString offered = second ? ui_->ear->second_suggestion() : ui_->ear->suggestion();
+    if (!box || offered.isEmpty())
         return;
     const Value* value = session_.sheet().value(*box);
     const WrittenUnit written = value ? WrittenUnit{value->unit, value->kind} : session_.sheet().row_unit(box->quantity);
-    const auto read = read_box(*box, to_std(ui_->ear->suggestion()), written);
+    const auto read = read_box(*box, to_std(offered), written);
     if (read)
-        model_.put(read.value(), tr("take %1 for %2").arg(ui_->ear->suggestion(), model_.box_name(*box)));
+        model_.put(read.value(), tr("take %1 for %2").arg(offered, model_.box_name(*box)));
     judge_now();
 }
 

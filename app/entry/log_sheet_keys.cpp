@@ -150,7 +150,10 @@ void LogSheetView::keyPressEvent(QKeyEvent* event)
         begin_edit({});
         return;
     case Qt::Key_F3:
-        emit suggestion_wanted();
+        if (event->modifiers() & Qt::ShiftModifier)
+            emit second_wanted();
+        else
+            emit suggestion_wanted();
         return;
     case Qt::Key_F4:
         emit confirm_wanted();

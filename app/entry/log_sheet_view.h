@@ -52,6 +52,7 @@ signals:
     void pasted(int values);
     void unit_wanted(int row);
     void suggestion_wanted(); ///< F3
+    void second_wanted();     ///< Shift+F3
     void confirm_wanted();    ///< F4
     void unreadable(const QModelIndex& index);
     void left_sheet(bool forward); ///< Tab behind the last box, Shift+Tab before the first

@@ -7,6 +7,8 @@
 #include <QMouseEvent>
 #include <QPainter>
 
+#include <algorithm>
+
 namespace evenstroke {
 namespace {
 
@@ -54,15 +56,18 @@ void RowHeader::paintSection(QPainter* painter, const QRect& rect, int section) 
         return;
     }
     const QRect unit_area(rect.right() - unit_width - room, rect.top(), unit_width, rect.height());
-    const QRect title_area(rect.left(), rect.top(), unit_area.left() - rect.left() - 4, rect.height());
+    // A short unit leaves its room to a long title, bold in the row in hand: "Hours since cylinder overhaul".
+    const QString unit_words = model()->headerData(section, Qt::Vertical, Qt::UserRole).toString();
+    const int unit_room = QFontMetrics(type(TypeSize::label)).horizontalAdvance(unit_words);
+    const int title_end = std::max(unit_area.left(), unit_area.right() - unit_room - room);
+    const QRect title_area(rect.left(), rect.top(), title_end - rect.left() - 4, rect.height());
     painter->setFont(type(TypeSize::body, section == current_));
     painter->setPen(theme().ink);
     painter->drawText(title_area, Qt::AlignLeft | Qt::AlignVCenter,
                       painter->fontMetrics().elidedText(text, Qt::ElideRight, title_area.width()));
     painter->setFont(type(TypeSize::label));
     painter->setPen(theme().muted);
-    painter->drawText(unit_area, Qt::AlignRight | Qt::AlignVCenter,
-                      model()->headerData(section, Qt::Vertical, Qt::UserRole).toString());
+    painter->drawText(unit_area, Qt::AlignRight | Qt::AlignVCenter, unit_words);
     painter->restore();
 }
 

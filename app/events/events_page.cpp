@@ -16,7 +16,7 @@
 namespace evenstroke {
 namespace {
 
-constexpr int kinds_across = 5;
+constexpr int kinds_across = 4;
 
 void fill_quantities(QComboBox& box)
 {
@@ -52,6 +52,8 @@ EventsPage::EventsPage(Workplace& place, QWidget* parent)
     fill_quantities(*ui_->quantity_field);
     make_kind_buttons();
     keep_room_for_bold(*this);
+    for (QPushButton* button : kind_buttons_) // in smaller type than the others; bold while chosen
+        button->setMinimumWidth(QFontMetrics(type(TypeSize::label, true)).horizontalAdvance(button->text()) + 2);
     connect_fields();
     connect_diary();
 }

@@ -29,6 +29,7 @@ CorrectionLine correction_line(const Engine& engine, const storage::Correction& 
     line.reason = correction.by.why;
     line.old_value = value_text(correction.old_value);
     line.new_value = value_text(correction.new_value);
+    line.from_card = correction.new_value.origin == Origin::card;
     line.what = quantity(correction.new_value.quantity).title;
     if (correction.new_value.place.kind == Place::Kind::cylinder)
         line.what += ", cylinder " + engine.cylinder_name(correction.new_value.place.number);

@@ -127,8 +127,8 @@ void add_flag(const Context& context, const Flag& flag, int number, Section& sec
         fields.fields.push_back({"Evidence", rounded_text(flag.evidence, 1) + ", threshold " + rounded_text(flag.threshold, 2)});
     if (flag.time_to_limit)
         fields.fields.push_back({"Time to limit", limit_sentence(*flag.time_to_limit)});
-    if (!flag.next_check.empty())
-        fields.fields.push_back({"To check next", flag.next_check});
+    if (const std::string check = next_check_words(context, flag); !check.empty())
+        fields.fields.push_back({"To check next", check});
     if (flag.note)
         fields.fields.push_back({"Noted on board", note_text(*flag.note)});
     fields.fields.push_back({"Work recorded since", work_since(context, flag)});
@@ -160,6 +160,24 @@ void add_cautions(const Context& context, Section& section)
 }
 
 } // namespace
+
+std::string next_check_words(const Context& context, const Flag& flag)
+{
+    constexpr std::string_view take_a_card = "Take a card";
+    const std::string& check = flag.next_check;
+    if (check.rfind(take_a_card, 0) != 0 || context.readings.empty() || flag.subject.kind != Place::Kind::cylinder)
+        return check;
+    const std::string& newest = context.record.readings[context.readings.back()].id;
+    const auto& diagrams = context.details.diagrams;
+    const bool taken = std::any_of(diagrams.begin(), diagrams.end(), [&](const DiagramLine& one) {
+        return one.reading_id == newest && one.cylinder == flag.subject.number;
+    });
+    if (!taken)
+        return check;
+    const std::size_t end = check.find_first_of(";.");
+    const std::size_t rest = end == std::string::npos ? end : check.find_first_not_of(' ', end + 1);
+    return rest == std::string::npos ? std::string() : upper_first(check.substr(rest));
+}
 
 std::string work_since(const Context& context, const Flag& flag)
 {

@@ -71,6 +71,7 @@ void add_once(std::string& list, const std::string& words)
 /// One line a value, in the order of their first corrections.
 std::vector<CorrectionChain> correction_chains(std::vector<CorrectionLine> lines)
 {
+    lines.erase(std::remove_if(lines.begin(), lines.end(), [](const CorrectionLine& line) { return line.adds(); }), lines.end());
     std::stable_sort(lines.begin(), lines.end(), [](const CorrectionLine& a, const CorrectionLine& b) { return a.when < b.when; });
     std::vector<CorrectionChain> chains;
     for (const CorrectionLine& line : lines) {
@@ -162,6 +163,12 @@ Section events_section(const Context& context)
     return section;
 }
 
+std::size_t added_from_cards(const ReportDetails& details)
+{
+    return static_cast<std::size_t>(std::count_if(details.corrections.begin(), details.corrections.end(),
+                                                  [](const CorrectionLine& line) { return line.adds(); }));
+}
+
 Section gaps_section(const Context& context)
 {
     Section section{"Missing and unsteady readings, doubts and corrections", false, {}};
@@ -171,6 +178,9 @@ Section gaps_section(const Context& context)
     add_or_say(section, doubts_table(context), "No value of the period looked mistyped.");
     add_or_say(section, confirmed_table(context), "No doubted value of the period was confirmed as read.");
     add_or_say(section, corrections_table(context), "No value was corrected after its reading was closed.");
+    if (const std::size_t added = added_from_cards(context.details); added > 0)
+        section.blocks.push_back(Paragraph{(added == 1 ? std::string("1 value was added") : std::to_string(added) + " values were added") +
+                                               " from indicator cards after the reading was closed; nothing had stood there before.", {}});
     return section;
 }
 

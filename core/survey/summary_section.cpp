@@ -88,6 +88,7 @@ FieldList changes(const Context& context)
     std::size_t settings = 0;
     for (const EngineChangeLine& change : context.details.engine_changes)
         settings += context.contains(change.when) ? 1 : 0;
+    const std::size_t added = added_from_cards(context.details);
     FieldList fields;
     fields.fields = {{"Flags, questions begun", flags_listed(context, [](const Flag& flag) { return Reading(flag.reading); })},
                      {"Raised in level", flags_listed(context, [](const Flag& flag) { return flag.raised_at; })},
@@ -95,7 +96,8 @@ FieldList changes(const Context& context)
                           return stands(flag) || flag.carrying.empty() ? Reading() : Reading(flag.carrying.back());
                       })},
                      {"Work and other events", listed(work)},
-                     {"Values corrected later", std::to_string(context.details.corrections.size())},
+                     {"Values corrected later", std::to_string(context.details.corrections.size() - added)},
+                     {"Values added later", added == 0 ? "none" : std::to_string(added) + " from indicator cards"},
                      {"Settings of the engine", settings == 0 ? "no change recorded" : std::to_string(settings) + (settings == 1 ? " change" : " changes") + ", under \u201cLimits in force\u201d"}};
     return fields;
 }
@@ -109,7 +111,7 @@ Table actions(const Context& context)
                 "Derived from flags and events. Actions agreed elsewhere, and who is to do them, are not recorded here."};
     int number = 0;
     for (const Flag* flag : context.flags)
-        table.rows.push_back({{std::to_string(++number), flag_subject(context.judgement, *flag), flag->next_check,
+        table.rows.push_back({{std::to_string(++number), flag_subject(context.judgement, *flag), next_check_words(context, *flag),
                                work_since(context, *flag), stands(*flag) ? "open" : "closed"}, true});
     return table;
 }

@@ -50,6 +50,10 @@ std::string unit_of(const Quantity& quantity);
 std::string deviation_unit(const Quantity& quantity);
 /// Events at the flag's subject since it began, in one line: what was done about it; "none recorded".
 std::string work_since(const Context& context, const Flag& flag);
+/// What the flag asks to be checked; without the card to be taken where the newest reading of the period has one of this cylinder.
+std::string next_check_words(const Context& context, const Flag& flag);
+/// Values that cards added to closed readings, where nothing had stood before; the rest of the changes are corrections.
+std::size_t added_from_cards(const ReportDetails& details);
 /// "2.5 months"
 std::string months_words(double months);
 /// "76 %"; a dash where the load is not known.

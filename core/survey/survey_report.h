@@ -31,6 +31,9 @@ struct CorrectionLine
 {
     TimePoint when{};
     std::string who, what, old_value, new_value, reason;
+    bool from_card = false; ///< the new value comes from an indicator card
+    /// Nothing stood there before: the card added the value, and corrected none.
+    bool adds() const { return from_card && old_value.empty(); }
 };
 
 /// An indicator diagram that the history keeps with a reading.

@@ -184,6 +184,50 @@ TEST_F(EntryDesk, NamesRangesAndRelationsBeforeTheFirstReadingToo)
         << page->ear().sentence().toStdString();
 }
 
+TEST_F(EntryDesk, APointInTheWrongPlaceOfTheLoadIsOfferedRightBesideTheQuickLines)
+{
+    open(14);
+    page->set_time(QStringLiteral("2021-04-01"), QStringLiteral("9:10"), QStringLiteral("+02:00"));
+    const LogBox load = box("load_percent");
+    enter({load.quantity, load.place, Phase::before}, QStringLiteral("75"));
+    enter(load, QStringLiteral("7.54"));
+    page->judge_now();
+    page->view().go_to(load);
+    EXPECT_EQ(page->ear().suggestion(), QStringLiteral("75.4")) << page->ear().sentence().toStdString();
+    page->take_suggestion();
+    EXPECT_EQ(shown(load), QStringLiteral("75.4"));
+}
+
+TEST_F(EntryDesk, ANumberThatTwoUnitsExplainIsOfferedInBoth)
+{
+    open(14);
+    page->set_time(QStringLiteral("2021-04-01"), QStringLiteral("9:10"), QStringLiteral("+02:00"));
+    enter(box("load_percent"), QStringLiteral("75"));
+    const LogBox exhaust = box("exhaust_temperature", Place::cylinder(4));
+    enter(exhaust, QStringLiteral("644")); // 644 °F are 340 °C and 644 K are 371 °C; about 353 is expected
+    page->judge_now();
+    page->view().go_to(exhaust);
+    const QStringList offered{page->ear().suggestion(), page->ear().second_suggestion()};
+    EXPECT_TRUE(offered.contains(QStringLiteral("644 K"))) << page->ear().sentence().toStdString();
+    EXPECT_TRUE(offered.contains(QStringLiteral("644 °F"))) << page->ear().sentence().toStdString();
+}
+
+TEST_F(EntryDesk, NoTextBesideTheSheetIsCutWhereTheHeightIsShort)
+{
+    open(14);
+    enter(box("load_percent"), QStringLiteral("75"));
+    enter(box("exhaust_temperature", Place::cylinder(3)), QStringLiteral("533"));
+    enter(box("exhaust_temperature", Place::cylinder(4)), QStringLiteral("533"));
+    page->resize(1190, 480);
+    page->judge_now();
+    page->view().go_to(box("exhaust_temperature", Place::cylinder(4)));
+    QApplication::processEvents();
+    for (const QLabel* label : page->ear().findChildren<QLabel*>()) {
+        const bool wraps = label->isVisible() && label->wordWrap() && label->hasHeightForWidth();
+        EXPECT_TRUE(!wraps || label->height() >= label->heightForWidth(label->width())) << label->objectName().toStdString();
+    }
+}
+
 TEST_F(EntryDesk, WhatTheShipSharesIsEnteredOnce)
 {
     open(2);

@@ -379,6 +379,42 @@ TEST(SurveyReportContents, DoubtsAndCorrectionsAreListed)
     EXPECT_TRUE(contains(text, "112\t121\t1\tchief engineer\tmisread"));
 }
 
+TEST(SurveyReportContents, ValuesAddedFromCardsAreNoCorrections)
+{
+    ReportDetails details = make_details();
+    CorrectionLine added{day("2031-01-20"), "chief engineer", "2030-12, maximum pressure, cylinder 1", "", "121", "from the card"};
+    added.from_card = true;
+    CorrectionLine replaced = added;
+    replaced.what = "2030-12, maximum pressure, cylinder 2";
+    replaced.old_value = "118";
+    details.corrections = {added, replaced};
+    const SurveyReport report = make_survey_report(make_judgement(), year_to_march(), details);
+    const std::string text = report_as_text(report);
+    EXPECT_TRUE(contains(text, "1 from indicator cards"));
+    EXPECT_TRUE(contains(text, "1 value was added from indicator cards"));
+    const Table* table = find_table(find_section(report, "Missing"), "corrected after");
+    ASSERT_NE(table, nullptr);
+    ASSERT_EQ(table->rows.size(), 1u);
+    EXPECT_EQ(table->rows[0].cells[2], "118");
+}
+
+TEST(SurveyReportContents, ACardIsNotAskedForWhereTheNewestReadingHasOne)
+{
+    Judgement judgement = make_judgement();
+    ASSERT_FALSE(judgement.flags.empty());
+    judgement.flags.front().subject = Place::cylinder(2);
+    judgement.flags.front().next_check = "Take a card; look at the smoke. Then test the fuel valves.";
+    ReportDetails details = make_details();
+    details.diagrams.clear();
+    const std::string without = report_as_text(make_survey_report(judgement, year_to_march(), details));
+    EXPECT_TRUE(contains(without, "Take a card; look at the smoke."));
+    for (const Reading& reading : judgement.record->readings)
+        details.diagrams.push_back({reading.id, 2});
+    const std::string with = report_as_text(make_survey_report(judgement, year_to_march(), details));
+    EXPECT_FALSE(contains(with, "Take a card; look at the smoke."));
+    EXPECT_TRUE(contains(with, "Look at the smoke. Then test the fuel valves."));
+}
+
 TEST(SurveyReportContents, CorrectionsOfOneValueAreOneLine)
 {
     ReportDetails details = make_details();

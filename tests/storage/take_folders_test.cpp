@@ -118,6 +118,18 @@ TEST_F(TakingFolders, SaysWhichFoldersHoldNoEngine)
     EXPECT_FALSE(report.folders.front().taken);
 }
 
+TEST_F(TakingFolders, SaysThatAFileIsNoFolderAndWhatIsLostWithoutTheFolderAroundIt)
+{
+    write_ship();
+    const auto history = memory();
+    const std::string file = path(QStringLiteral("ship/ship_readings.csv")).toStdString();
+    const TakeReport report = value_of_result(take(*history, {path(QStringLiteral("ship/ship_readings.csv")), path(QStringLiteral("ship/main"))}));
+    ASSERT_FALSE(report.folders.empty());
+    const std::string said = report.folders[report.folders.size() - 1].refused.front().text();
+    EXPECT_EQ(said.rfind(file + ": This is a file, not a folder. Take the folder that holds it", 0), 0u) << said;
+    EXPECT_NE(said.find("the whole ship"), std::string::npos) << said;
+}
+
 TEST_F(TakingFolders, RefusesAFolderThatIsNotThereAndTakesTheOthers)
 {
     write_engine(QStringLiteral("good"), header + "2029-01,2029-01-12T08:30Z,speed,,95.4,r/min\n");
