@@ -9,17 +9,15 @@
 #include <QPainter>
 #include <QStyledItemDelegate>
 
-#include <array>
+#include <algorithm>
 
 namespace evenstroke {
 
 namespace {
 
-constexpr int row_height = 24, heading_top = 12, sentence_gap = 2, mark_side = 12, indent = 12;
-/// Pixels at 96 dots an inch; words and verdict share what is left.
-constexpr std::array<int, ReviewModel::column_count> widths{0, 22, 66, 54, 62, 62, 62, 50, 0};
-constexpr int fewest_words = 184, fraction_room = 30;
-constexpr double share_of_words = 0.6;
+using namespace review_sizes;
+
+constexpr int heading_top = 12, sentence_gap = 2, head_padding = 4;
 
 QFont heading_font() { return type(TypeSize::body, true); }
 
@@ -52,7 +50,7 @@ public:
         const bool in_hand = index.row() == view_.currentIndex().row();
         // Words may reach into the column of numbers of places: both have their ground painted at once.
         const QRect ground = index.column() == ReviewModel::words && row->line
-                                 ? option.rect.adjusted(0, 0, widths[ReviewModel::place], 0)
+                                 ? option.rect.adjusted(0, 0, view_.columns().width[ReviewModel::place], 0)
                                  : option.rect;
         const bool painted = index.column() == ReviewModel::place && row->line;
         if (in_hand && !painted)
@@ -64,7 +62,8 @@ public:
                 paint_heading(*painter, option.rect, *row->section, t);
             return;
         }
-        paint_cell(*painter, option.rect, index, *row, t);
+        paint_cell(*painter, QRect(option.rect.left(), option.rect.top(), option.rect.width(), row_height), index, *row, t);
+        paint_note(*painter, option.rect, index.row(), *row->line, t);
         if (in_hand && view_.hasFocus() && index.column() == 0)
             painter->fillRect(QRect(option.rect.left(), option.rect.top(), 2, option.rect.height()), t.line);
     }
@@ -101,7 +100,10 @@ private:
         const QString words = index.data().toString();
         switch (index.column()) {
         case ReviewModel::words: paint_words(painter, area, row, t); return;
-        case ReviewModel::verdict: paint_verdict(painter, with_free_room(area, *row.line), words, row.line->level, t); return;
+        case ReviewModel::verdict:
+            if (note_of(index.row()) == 0)
+                paint_verdict(painter, with_free_room(area, *row.line), words, row.line->level, t);
+            return;
         case ReviewModel::value:
         case ReviewModel::corrected:
         case ReviewModel::expected:
@@ -110,16 +112,40 @@ private:
         }
         painter.setFont(type(TypeSize::label));
         painter.setPen(index.column() == ReviewModel::place ? t.ink : t.muted);
-        painter.drawText(area.adjusted(2, 0, index.column() == ReviewModel::place ? -4 : -6, 0),
+        painter.drawText(area.adjusted(4, 0, index.column() == ReviewModel::place ? -4 : 0, 0),
                          (index.column() == ReviewModel::place ? Qt::AlignRight : Qt::AlignLeft) | Qt::AlignVCenter, words);
+    }
+
+    int note_of(int row) const
+    {
+        const std::vector<int>& notes = view_.columns().note;
+        return row < static_cast<int>(notes.size()) ? notes[static_cast<std::size_t>(row)] : 0;
+    }
+
+    /// A verdict without room in its row stands under it. Every cell draws its own part, as cells are painted one by one.
+    void paint_note(QPainter& painter, const QRect& cell, int row, const ReviewLine& line, const Theme& t) const
+    {
+        if (note_of(row) == 0)
+            return;
+        const QString words = view_.review_model().index(row, ReviewModel::verdict).data().toString();
+        QRect room = note_room(view_.viewport()->width()).translated(view_.columnViewportPosition(0), cell.top() + row_height - 3);
+        painter.save();
+        painter.setClipRect(cell);
+        if (has_mark(line.level)) {
+            draw_mark(painter, QRectF(room.left(), room.top() + 1, mark_side, mark_side), line.level, t);
+            room.setLeft(room.left() + mark_side + 6);
+        }
+        painter.setFont(type(TypeSize::label));
+        painter.setPen(has_mark(line.level) ? t.level_colour(line.level) : t.muted);
+        painter.drawText(room, Qt::TextWordWrap | Qt::AlignLeft | Qt::AlignTop, words);
+        painter.restore();
     }
 
     /// Where nothing is compared, the verdict has the room of the comparison.
     QRect with_free_room(const QRect& area, const ReviewLine& line) const
     {
-        if (line.corrected || line.expected || line.deviation)
-            return area;
-        return area.adjusted(view_.columnViewportPosition(ReviewModel::corrected) - view_.columnViewportPosition(ReviewModel::verdict), 0, 0, 0);
+        return area.adjusted(view_.columnViewportPosition(first_column_of_verdict(line)) -
+                                 view_.columnViewportPosition(ReviewModel::verdict), 0, 0, 0);
     }
 
     void paint_words(QPainter& painter, const QRect& area, const ReviewRow& row, const Theme& t) const
@@ -127,7 +153,7 @@ private:
         if (row.repeats)
             return;
         const bool no_number = row.line->place.kind == Place::Kind::engine && !row.line->spread;
-        const QRect room = area.adjusted(indent, 0, no_number ? widths[ReviewModel::place] - 4 : -4, 0);
+        const QRect room = area.adjusted(indent, 0, no_number ? view_.columns().width[ReviewModel::place] - 4 : -4, 0);
         const QString unit = to_qstring(row.line->unit);
         const QFontMetrics small(type(TypeSize::label));
         const int unit_width = unit.isEmpty() ? 0 : small.horizontalAdvance(unit) + 6;
@@ -147,15 +173,15 @@ private:
         painter.setFont(type(TypeSize::body, tells));
         painter.setPen(column == ReviewModel::value || column == ReviewModel::deviation ? t.ink : t.muted);
         const auto [left, right] = at_decimal_sign(words);
-        const int sign = area.right() - fraction_room;
-        painter.drawText(QRect(area.left() - 20, area.top(), sign - area.left() + 20, area.height()),
-                         Qt::AlignRight | Qt::AlignVCenter, left);
-        painter.drawText(QRect(sign, area.top(), fraction_room + 10, area.height()), Qt::AlignLeft | Qt::AlignVCenter, right);
+        const int fraction = view_.columns().fraction[static_cast<std::size_t>(column)];
+        const int sign = area.right() - head_padding - fraction;
+        painter.drawText(QRect(area.left(), area.top(), sign - area.left(), area.height()), Qt::AlignRight | Qt::AlignVCenter, left);
+        painter.drawText(QRect(sign, area.top(), fraction + 4, area.height()), Qt::AlignLeft | Qt::AlignVCenter, right);
     }
 
     void paint_verdict(QPainter& painter, const QRect& area, const QString& words, Level level, const Theme& t) const
     {
-        QRect room = area.adjusted(8, 0, -4, 0);
+        QRect room = area.adjusted(4, 0, -4, 0);
         if (has_mark(level)) {
             draw_mark(painter, QRectF(room.left(), room.center().y() - mark_side / 2, mark_side, mark_side), level, t);
             room.setLeft(room.left() + mark_side + 6);
@@ -182,7 +208,7 @@ ReviewView::ReviewView(QWidget* parent) : QTableView(parent)
     horizontalHeader()->setMinimumSectionSize(10);
     horizontalHeader()->setSectionsClickable(false);
     horizontalHeader()->setHighlightSections(false);
-    horizontalHeader()->setStyleSheet(QStringLiteral("QHeaderView::section { padding: 4px 1px; }"));
+    horizontalHeader()->setStyleSheet(QStringLiteral("QHeaderView::section { padding: 4px 4px; }"));
     setShowGrid(false);
     setWordWrap(false);
     setFrameShape(QFrame::NoFrame);
@@ -225,17 +251,12 @@ void ReviewView::go_to(int row)
 
 void ReviewView::set_sizes()
 {
-    int fixed = 0;
-    for (const int width : widths)
-        fixed += width;
-    const int left = std::max(0, viewport()->width() - fixed);
-    const int for_words = std::max(fewest_words, static_cast<int>(share_of_words * left));
+    columns_ = measure_columns(model_, viewport()->width());
     for (int column = 0; column < ReviewModel::column_count; ++column)
-        setColumnWidth(column, column == ReviewModel::words     ? for_words
-                               : column == ReviewModel::verdict ? std::max(60, left - for_words)
-                                                                : widths[static_cast<std::size_t>(column)]);
+        setColumnWidth(column, columns_.width[static_cast<std::size_t>(column)]);
     for (int row = 0; row < model_.rowCount(); ++row)
-        setRowHeight(row, model_.row(row)->line ? row_height : heading_height(*model_.row(row)->section, viewport()->width() - 8));
+        setRowHeight(row, model_.row(row)->line ? row_height + columns_.note[static_cast<std::size_t>(row)]
+                                                : heading_height(*model_.row(row)->section, viewport()->width() - 8));
 }
 
 void ReviewView::keyPressEvent(QKeyEvent* event)

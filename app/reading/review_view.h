@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "app/reading/review_columns.h"
 #include "app/reading/review_model.h"
 
 #include <QTableView>
@@ -19,6 +20,8 @@ public:
     ReviewModel& review_model() { return model_; }
     const ReviewRow* row_in_hand() const { return model_.row(currentIndex().row()); }
     void go_to(int row);
+    /// How the columns share the width, and which verdicts stand under their rows.
+    const ReviewColumns& columns() const { return columns_; }
 
 signals:
     void row_chosen();
@@ -34,6 +37,7 @@ protected:
 private:
     void set_sizes();
     ReviewModel model_;
+    ReviewColumns columns_;
     bool filling_ = false;
 };
 

@@ -8,6 +8,7 @@
 #include "app/desk/number_text.h"
 #include "app/desk/pages.h"
 #include "app/desk/reading_in_hand.h"
+#include "app/desk/theme.h"
 #include "app/reading/review_view.h"
 #include "app/reading/sheet_number.h"
 #include "app/reading/workings_page.h"
@@ -65,6 +66,34 @@ protected:
 
     std::unique_ptr<Frame> frame_;
 };
+
+TEST_F(ReadingDesk, NothingIsCutWhereThePageHasRoom)
+{
+    begin("reading");
+    ReviewModel& model = view().review_model();
+    const ReviewColumns& columns = view().columns();
+    ASSERT_EQ(static_cast<int>(columns.note.size()), model.rowCount());
+    const QFontMetrics body(type(TypeSize::body)), label(type(TypeSize::label));
+    for (int row = 0; row < model.rowCount(); ++row) {
+        const ReviewLine* line = model.row(row)->line;
+        if (!line)
+            continue;
+        const std::string& words = line->words;
+        for (const int column : {ReviewModel::value, ReviewModel::corrected, ReviewModel::expected, ReviewModel::deviation})
+            EXPECT_LE(body.horizontalAdvance(model.index(row, column).data().toString()), view().columnWidth(column)) << words;
+        for (const int column : {ReviewModel::place, ReviewModel::half_width, ReviewModel::deviation_half_width})
+            EXPECT_LE(label.horizontalAdvance(model.index(row, column).data().toString()), view().columnWidth(column)) << words;
+        const int reach = line->place.kind == Place::Kind::engine && !line->spread ? view().columnWidth(ReviewModel::place) : 0;
+        const int unit = line->unit.empty() ? 0 : label.horizontalAdvance(QString::fromStdString(line->unit)) + 6;
+        if (!model.row(row)->repeats) {
+            EXPECT_LE(body.horizontalAdvance(QString::fromStdString(words)) + unit, view().columnWidth(ReviewModel::words) + reach) << words;
+        }
+        const int room = columns.between(first_column_of_verdict(*line), ReviewModel::column_count);
+        const int verdict = label.horizontalAdvance(model.index(row, ReviewModel::verdict).data().toString());
+        EXPECT_TRUE(verdict <= room || columns.note[static_cast<std::size_t>(row)] > 0) << words;
+        EXPECT_EQ(view().rowHeight(row), review_sizes::row_height + columns.note[static_cast<std::size_t>(row)]) << words;
+    }
+}
 
 TEST_F(ReadingDesk, StandsOnTheRailAndShowsTheNewestReading)
 {

@@ -1,0 +1,123 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/reading/review_columns.h"
+
+#include "app/desk/number_text.h"
+#include "app/desk/theme.h"
+#include "app/reading/sheet_number.h"
+
+#include <QFontMetrics>
+#include <QRect>
+
+#include <algorithm>
+
+namespace evenstroke {
+namespace {
+
+using namespace review_sizes;
+
+constexpr int fewest_words = 184, fewest_verdict = 40, verdict_margins = 12, head_margins = 10;
+
+bool is_number(int column)
+{
+    return column == ReviewModel::value || column == ReviewModel::corrected || column == ReviewModel::expected ||
+           column == ReviewModel::deviation;
+}
+
+/// Width of the quantity's name with its unit; a line without a number of its place may reach into that column.
+int width_of_words(const ReviewRow& row, int place_width)
+{
+    if (!row.line || row.repeats)
+        return 0;
+    const QString unit = to_qstring(row.line->unit);
+    const int unit_width = unit.isEmpty() ? 0 : QFontMetrics(type(TypeSize::label)).horizontalAdvance(unit) + 6;
+    const bool no_number = row.line->place.kind == Place::Kind::engine && !row.line->spread;
+    return indent + QFontMetrics(type(TypeSize::body)).horizontalAdvance(to_qstring(row.line->words)) + unit_width + 6 +
+           (no_number ? -place_width + 4 : 4);
+}
+
+void measure_number(const ReviewModel& model, int column, ReviewColumns& columns)
+{
+    const QFontMetrics metrics(type(TypeSize::body, column == ReviewModel::deviation)); // bold where it tells
+    int whole = 0, fraction = 0;
+    for (int row = 0; row < model.rowCount(); ++row) {
+        if (!model.row(row)->line)
+            continue;
+        const auto [left, right] = at_decimal_sign(model.index(row, column).data().toString());
+        whole = std::max(whole, metrics.horizontalAdvance(left));
+        fraction = std::max(fraction, metrics.horizontalAdvance(right));
+    }
+    const std::size_t at = static_cast<std::size_t>(column);
+    columns.fraction[at] = fraction;
+    columns.width[at] = std::max(columns.width[at], whole + fraction + gap);
+}
+
+void measure_small(const ReviewModel& model, int column, ReviewColumns& columns)
+{
+    const QFontMetrics metrics(type(TypeSize::label));
+    int& width = columns.width[static_cast<std::size_t>(column)];
+    for (int row = 0; row < model.rowCount(); ++row)
+        if (model.row(row)->line)
+            width = std::max(width, metrics.horizontalAdvance(model.index(row, column).data().toString()) + 8);
+}
+
+/// Height of the line under a row that its verdict needs; 0 where it has room in the row.
+int note_height(const ReviewModel& model, int row, const ReviewColumns& columns, int room)
+{
+    const ReviewLine* line = model.row(row)->line;
+    const QString words = line ? model.index(row, ReviewModel::verdict).data().toString() : QString();
+    if (words.isEmpty())
+        return 0;
+    const QFontMetrics metrics(type(TypeSize::label));
+    const int mark = has_mark(line->level) ? mark_side + 6 : 0;
+    const int in_row = columns.between(first_column_of_verdict(*line), ReviewModel::column_count) - verdict_margins - mark;
+    if (metrics.horizontalAdvance(words) <= in_row)
+        return 0;
+    const QRect under = note_room(room).adjusted(mark, 0, 0, 0);
+    return metrics.boundingRect(under, Qt::TextWordWrap, words).height() + 4;
+}
+
+} // namespace
+
+int ReviewColumns::between(int from, int to) const
+{
+    int sum = 0;
+    for (int column = from; column < to; ++column)
+        sum += width[static_cast<std::size_t>(column)];
+    return sum;
+}
+
+int first_column_of_verdict(const ReviewLine& line)
+{
+    return line.corrected || line.expected || line.deviation ? ReviewModel::verdict : ReviewModel::corrected;
+}
+
+QRect note_room(int room)
+{
+    return {2 * review_sizes::indent, 0, std::max(80, room - 2 * review_sizes::indent - 4), 1000};
+}
+
+ReviewColumns measure_columns(const ReviewModel& model, int room)
+{
+    ReviewColumns columns;
+    const QFontMetrics heads(type(TypeSize::label));
+    for (int column = ReviewModel::place; column < ReviewModel::verdict; ++column)
+        columns.width[static_cast<std::size_t>(column)] =
+            heads.horizontalAdvance(model.headerData(column, Qt::Horizontal).toString()) + head_margins;
+    for (int column = ReviewModel::place; column < ReviewModel::verdict; ++column)
+        if (is_number(column))
+            measure_number(model, column, columns);
+        else
+            measure_small(model, column, columns);
+    const int place_width = columns.width[ReviewModel::place];
+    int words = fewest_words;
+    for (int row = 0; row < model.rowCount(); ++row)
+        words = std::max(words, width_of_words(*model.row(row), place_width));
+    const int left = room - columns.between(ReviewModel::place, ReviewModel::verdict);
+    columns.width[ReviewModel::words] = std::clamp(words, fewest_words, std::max(fewest_words, left - fewest_verdict));
+    columns.width[ReviewModel::verdict] = std::max(fewest_verdict, left - columns.width[ReviewModel::words]);
+    for (int row = 0; row < model.rowCount(); ++row)
+        columns.note.push_back(note_height(model, row, columns, room));
+    return columns;
+}
+
+} // namespace evenstroke

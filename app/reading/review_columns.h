@@ -1,0 +1,36 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "app/reading/review_model.h"
+
+#include <array>
+#include <vector>
+
+/// How much room the columns of the page One reading take: what stands in them, so that nothing is cut while the
+/// page is wide enough.
+namespace evenstroke {
+
+namespace review_sizes {
+inline constexpr int row_height = 24, mark_side = 12, indent = 12;
+/// Between a number and what follows it, px at 96 dots an inch.
+inline constexpr int gap = 12;
+} // namespace review_sizes
+
+struct ReviewColumns
+{
+    std::array<int, ReviewModel::column_count> width{};
+    std::array<int, ReviewModel::column_count> fraction{}; ///< room behind the decimal sign, the sign included
+    std::vector<int> note; ///< height of a line under the row for a verdict that has no room in it; 0: none. One a row
+    /// From the left edge of one column to that of another.
+    int between(int from, int to) const;
+};
+
+/// @param room width that is there for all columns
+ReviewColumns measure_columns(const ReviewModel& model, int room);
+
+/// The first column of the room a verdict has: where nothing is compared, that of the comparison.
+int first_column_of_verdict(const ReviewLine& line);
+/// The room of a verdict under its row, its top at 0.
+QRect note_room(int room);
+
+} // namespace evenstroke
