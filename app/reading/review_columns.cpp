@@ -15,7 +15,7 @@ namespace {
 
 using namespace review_sizes;
 
-constexpr int fewest_words = 184, fewest_verdict = 40, verdict_margins = 12, head_margins = 10;
+constexpr int fewest_words = 184, fewest_verdict = 110, name_margin = 4, verdict_margins = 12, head_margins = 10;
 
 bool is_number(int column)
 {
@@ -23,16 +23,22 @@ bool is_number(int column)
            column == ReviewModel::deviation;
 }
 
-/// Width of the quantity's name with its unit; a line without a number of its place may reach into that column.
+/// What the column of names must be wide for this row to have its name in one line.
 int width_of_words(const ReviewRow& row, int place_width)
 {
     if (!row.line || row.repeats)
         return 0;
-    const QString unit = to_qstring(row.line->unit);
-    const int unit_width = unit.isEmpty() ? 0 : QFontMetrics(type(TypeSize::label)).horizontalAdvance(unit) + 6;
     const bool no_number = row.line->place.kind == Place::Kind::engine && !row.line->spread;
-    return indent + QFontMetrics(type(TypeSize::body)).horizontalAdvance(to_qstring(row.line->words)) + unit_width + 6 +
-           (no_number ? -place_width + 4 : 4);
+    return indent + QFontMetrics(type(TypeSize::body)).horizontalAdvance(to_qstring(row.line->words)) +
+           width_of_unit(*row.line) + name_margin + (no_number ? -place_width : 0);
+}
+
+int further_lines(const ReviewRow& row, const ReviewColumns& columns)
+{
+    if (!row.line || row.repeats)
+        return 0;
+    const int room = room_of_name(*row.line, columns) - width_of_unit(*row.line);
+    return static_cast<int>(name_lines(to_qstring(row.line->words), room).size() - 1) * name_line;
 }
 
 void measure_number(const ReviewModel& model, int column, ReviewColumns& columns)
@@ -86,6 +92,38 @@ int ReviewColumns::between(int from, int to) const
     return sum;
 }
 
+int ReviewColumns::height(int row) const
+{
+    const std::size_t at = static_cast<std::size_t>(row);
+    return row_height + (at < name.size() ? name[at] : 0) + (at < note.size() ? note[at] : 0);
+}
+
+QStringList name_lines(const QString& name, int width)
+{
+    const QFontMetrics metrics(type(TypeSize::body));
+    QStringList lines;
+    for (const QString& word : name.split(u' ')) {
+        const bool fits = !lines.isEmpty() && metrics.horizontalAdvance(lines.back() + u' ' + word) <= width;
+        if (fits)
+            lines.back() += u' ' + word;
+        else
+            lines << word;
+    }
+    return lines;
+}
+
+int width_of_unit(const ReviewLine& line)
+{
+    const QString unit = to_qstring(line.unit);
+    return unit.isEmpty() ? 0 : QFontMetrics(type(TypeSize::label)).horizontalAdvance(unit) + 6;
+}
+
+int room_of_name(const ReviewLine& line, const ReviewColumns& columns)
+{
+    const bool no_number = line.place.kind == Place::Kind::engine && !line.spread;
+    return columns.width[ReviewModel::words] - indent - name_margin + (no_number ? columns.width[ReviewModel::place] : 0);
+}
+
 int first_column_of_verdict(const ReviewLine& line)
 {
     return line.corrected || line.expected || line.deviation ? ReviewModel::verdict : ReviewModel::corrected;
@@ -115,8 +153,10 @@ ReviewColumns measure_columns(const ReviewModel& model, int room)
     const int left = room - columns.between(ReviewModel::place, ReviewModel::verdict);
     columns.width[ReviewModel::words] = std::clamp(words, fewest_words, std::max(fewest_words, left - fewest_verdict));
     columns.width[ReviewModel::verdict] = std::max(fewest_verdict, left - columns.width[ReviewModel::words]);
-    for (int row = 0; row < model.rowCount(); ++row)
+    for (int row = 0; row < model.rowCount(); ++row) {
+        columns.name.push_back(further_lines(*model.row(row), columns));
         columns.note.push_back(note_height(model, row, columns, room));
+    }
     return columns;
 }
 

@@ -122,7 +122,10 @@ QVariant ReviewModel::data(const QModelIndex& index, int role) const
 QVariant ReviewModel::headerData(int section, Qt::Orientation orientation, int role) const
 {
     if (orientation == Qt::Horizontal && role == Qt::TextAlignmentRole)
-        return static_cast<int>((section == words || section == half_width || section == deviation_half_width || section == verdict ? Qt::AlignLeft : Qt::AlignRight) | Qt::AlignVCenter);
+        return static_cast<int>((section == words || section == half_width || section == deviation_half_width || section == verdict
+                                     ? Qt::AlignLeft
+                                     : Qt::AlignRight) |
+                                Qt::AlignVCenter);
     if (orientation != Qt::Horizontal || role != Qt::DisplayRole)
         return {};
     switch (section) {

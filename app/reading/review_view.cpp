@@ -128,7 +128,8 @@ private:
         if (note_of(row) == 0)
             return;
         const QString words = view_.review_model().index(row, ReviewModel::verdict).data().toString();
-        QRect room = note_room(view_.viewport()->width()).translated(view_.columnViewportPosition(0), cell.top() + row_height - 3);
+        const int top = cell.top() + view_.columns().height(row) - note_of(row) - 3;
+        QRect room = note_room(view_.viewport()->width()).translated(view_.columnViewportPosition(0), top);
         painter.save();
         painter.setClipRect(cell);
         if (has_mark(line.level)) {
@@ -152,19 +153,22 @@ private:
     {
         if (row.repeats)
             return;
-        const bool no_number = row.line->place.kind == Place::Kind::engine && !row.line->spread;
-        const QRect room = area.adjusted(indent, 0, no_number ? view_.columns().width[ReviewModel::place] - 4 : -4, 0);
-        const QString unit = to_qstring(row.line->unit);
-        const QFontMetrics small(type(TypeSize::label));
-        const int unit_width = unit.isEmpty() ? 0 : small.horizontalAdvance(unit) + 6;
+        const QRect room(area.left() + indent, area.top(), room_of_name(*row.line, view_.columns()), area.height());
+        const int unit_width = width_of_unit(*row.line);
         painter.setFont(type(TypeSize::body));
         painter.setPen(t.ink);
         const QFontMetrics metrics(painter.font());
-        const QString title = metrics.elidedText(to_qstring(row.line->words), Qt::ElideRight, room.width() - unit_width);
-        painter.drawText(room, Qt::AlignLeft | Qt::AlignVCenter, title);
+        const QStringList lines = name_lines(to_qstring(row.line->words), room.width() - unit_width);
+        QRect last = room;
+        for (const QString& line : lines) {
+            last.moveTop(room.top() + static_cast<int>(&line - lines.data()) * name_line);
+            painter.drawText(last, Qt::AlignLeft | Qt::AlignVCenter, line);
+        }
+        const QString& title = lines.back();
         painter.setFont(type(TypeSize::label));
         painter.setPen(t.muted);
-        painter.drawText(room.adjusted(metrics.horizontalAdvance(title) + 6, 1, 0, 0), Qt::AlignLeft | Qt::AlignVCenter, unit);
+        painter.drawText(last.adjusted(metrics.horizontalAdvance(title) + 6, 1, 0, 0), Qt::AlignLeft | Qt::AlignVCenter,
+                         to_qstring(row.line->unit));
     }
 
     void paint_number(QPainter& painter, const QRect& area, const QString& words, int column, const ReviewRow& row, const Theme& t) const
@@ -255,7 +259,7 @@ void ReviewView::set_sizes()
     for (int column = 0; column < ReviewModel::column_count; ++column)
         setColumnWidth(column, columns_.width[static_cast<std::size_t>(column)]);
     for (int row = 0; row < model_.rowCount(); ++row)
-        setRowHeight(row, model_.row(row)->line ? row_height + columns_.note[static_cast<std::size_t>(row)]
+        setRowHeight(row, model_.row(row)->line ? columns_.height(row)
                                                 : heading_height(*model_.row(row)->section, viewport()->width() - 8));
 }
 

@@ -111,7 +111,7 @@ ReviewSection steadiness_section(const ReviewContext& context)
     for (const SteadinessFinding& finding : steadiness_findings(context.reading, context.generating_set)) {
         const Quantity& q = quantity(finding.quantity);
         ReviewLine line;
-        line.words = finding.before ? q.title + ", change between the two lines" : q.title;
+        line.words = finding.before ? q.title + ", change" : q.title;
         line.quantity = finding.quantity;
         line.unit = finding.unit;
         line.decimals = finding.unit == "%" ? 2 : finding.unit == "min" ? 0 : q.decimals;

@@ -83,15 +83,16 @@ TEST_F(ReadingDesk, NothingIsCutWhereThePageHasRoom)
             EXPECT_LE(body.horizontalAdvance(model.index(row, column).data().toString()), view().columnWidth(column)) << words;
         for (const int column : {ReviewModel::place, ReviewModel::half_width, ReviewModel::deviation_half_width})
             EXPECT_LE(label.horizontalAdvance(model.index(row, column).data().toString()), view().columnWidth(column)) << words;
-        const int reach = line->place.kind == Place::Kind::engine && !line->spread ? view().columnWidth(ReviewModel::place) : 0;
-        const int unit = line->unit.empty() ? 0 : label.horizontalAdvance(QString::fromStdString(line->unit)) + 6;
-        if (!model.row(row)->repeats) {
-            EXPECT_LE(body.horizontalAdvance(QString::fromStdString(words)) + unit, view().columnWidth(ReviewModel::words) + reach) << words;
-        }
+        const int name_room = room_of_name(*line, columns) - width_of_unit(*line);
+        const QStringList lines = name_lines(QString::fromStdString(words), name_room);
+        for (const QString& part : lines)
+            EXPECT_LE(body.horizontalAdvance(part), name_room) << words;
+        EXPECT_EQ(columns.name[static_cast<std::size_t>(row)],
+                  model.row(row)->repeats ? 0 : static_cast<int>(lines.size() - 1) * review_sizes::name_line) << words;
         const int room = columns.between(first_column_of_verdict(*line), ReviewModel::column_count);
         const int verdict = label.horizontalAdvance(model.index(row, ReviewModel::verdict).data().toString());
         EXPECT_TRUE(verdict <= room || columns.note[static_cast<std::size_t>(row)] > 0) << words;
-        EXPECT_EQ(view().rowHeight(row), review_sizes::row_height + columns.note[static_cast<std::size_t>(row)]) << words;
+        EXPECT_EQ(view().rowHeight(row), columns.height(row)) << words;
     }
 }
 
