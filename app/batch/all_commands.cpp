@@ -43,7 +43,7 @@ const std::vector<Command>& all_commands()
          {history, {"engine", "E", "the engine", true}, vessel, {"from", "D", "first day, 2026-01-31", true},
           {"to", "D", "last day", true}, {"out", "FILE.pdf", "the file to write", true},
           {"date", "D", "date of the report; the last day where nothing is said"},
-          {"depth", "WORD", "brief, usual or full: the values of no, the last twelve or all readings; usual, as in the window"}},
+          {"depth", "WORD", "brief, usual or full: the values of no, the last twelve or all readings; full where nothing is said, while the window proposes usual"}},
          run_report},
         {"verify", "checks file and audit chain", nullptr, {history}, run_verify},
         {"backup", "writes a whole copy", nullptr, {history, {"to", "FILE", "the copy", true}}, run_backup},

@@ -24,16 +24,16 @@ std::optional<TimePoint> read_day(const QCommandLineParser& parser, const char* 
     return std::nullopt;
 }
 
-/// "usual" where nothing is said, as in the window; a sentence on err and nothing where it is none of the words.
+/// All readings of the period where nothing is said, since whoever writes a period wants it; a sentence on err and nothing where it is none of the words.
 std::optional<ReportDepth> read_depth(const QCommandLineParser& parser, Streams& streams)
 {
     const QString word = parser.value(QStringLiteral("depth"));
-    if (word.isEmpty() || word == QLatin1String("usual"))
+    if (word.isEmpty() || word == QLatin1String("full"))
+        return ReportDepth::full;
+    if (word == QLatin1String("usual"))
         return ReportDepth::usual;
     if (word == QLatin1String("brief"))
         return ReportDepth::brief;
-    if (word == QLatin1String("full"))
-        return ReportDepth::full;
     streams.err << "--depth: “" << word << "” is no depth of a report. Write brief, usual or full.\n";
     return std::nullopt;
 }
