@@ -102,7 +102,9 @@ std::string quoted(std::string_view text)
             return result + "…\"";
         }
         const std::size_t length = character_length(text, position);
-        if (length == 0 || is_control(text.substr(position, length))) {
+        if (text[position] == '\t') {
+            result += ' '; // between the columns of a file
+        } else if (length == 0 || is_control(text.substr(position, length))) {
             result += '?';
         } else {
             result += text.substr(position, length);

@@ -5,26 +5,21 @@
 #include "storage/card_file.h"
 #include "storage/named_file.h"
 #include "storage/sql.h"
+#include "storage/trace_samples.h"
+#include "storage/trace_titles.h"
 
 #include <QFile>
 
 #include <algorithm>
 #include <cmath>
+#include <functional>
 
 // What a file of an instrument looks like: the proposal that the engineer then confirms or changes.
 namespace evenstroke::storage {
 namespace {
 
 constexpr int looked_at = 60;                   // lines
-constexpr qint64 longest_beginning = 256 << 10; // bytes
-
-std::string lower(std::string_view text)
-{
-    std::string plain(text);
-    std::transform(plain.begin(), plain.end(), plain.begin(),
-                   [](unsigned char letter) { return static_cast<char>(std::tolower(letter)); });
-    return plain;
-}
+constexpr qint64 longest_beginning = 2 << 20; // bytes: a cycle of six fine columns
 
 std::vector<std::string_view> lines_of(std::string_view text)
 {
@@ -59,11 +54,10 @@ std::vector<double> column_of(const std::vector<std::vector<std::string>>& rows,
     return numbers;
 }
 
-bool names_any(const std::string& title, std::initializer_list<const char*> words)
+bool rises(const std::vector<double>& numbers)
 {
-    const std::string plain = lower(title);
-    return std::any_of(words.begin(), words.end(),
-                       [&](const char* word) { return plain.find(word) != std::string::npos; });
+    return numbers.size() > 3 &&
+           std::adjacent_find(numbers.begin(), numbers.end(), std::greater_equal<>()) == numbers.end();
 }
 
 /// Steps evenly up or down, as angles and times do.
@@ -90,25 +84,33 @@ bool is_counter(const std::vector<double>& numbers)
 class Guess
 {
 public:
-    explicit Guess(std::string_view text);
+    Guess(std::string_view text, double cycle_degrees);
     ProposedLayout answer();
 
 private:
     void find_titles();
     void find_decimal_sign();
     void find_angle();
+    bool find_index_by_title();
+    void find_even_column();
+    void choose_index(int column);
+    bool is_index(int column) const;
     void find_cycle();
     void find_pressures();
+    void find_counts();
     void name_unit();
     std::string title(int column) const;
 
     ProposedLayout proposed_;
+    std::string_view text_;
+    double cycle_degrees_;
     std::vector<std::string_view> lines_;
     std::vector<std::vector<std::string>> rows_;
     std::string header_;
 };
 
-Guess::Guess(std::string_view text) : lines_(lines_of(text))
+Guess::Guess(std::string_view text, double cycle_degrees)
+    : text_(text), cycle_degrees_(cycle_degrees), lines_(lines_of(text))
 {
     TraceLayout& layout = proposed_.layout;
     layout.separator = find_separator(text);
@@ -166,25 +168,88 @@ void Guess::find_angle()
 {
     TraceLayout& layout = proposed_.layout;
     layout.angle_column = 0;
+    if (find_index_by_title())
+        return;
     for (int column = 1; column <= proposed_.columns && layout.angle_column == 0; ++column)
-        if (names_any(title(column), {"angle", "deg", "°", "crank", "phi", "theta"}))
+        if (names_angle(title(column)))
             layout.angle_column = column;
-    for (int column = 1; column <= proposed_.columns && layout.angle_column == 0; ++column) {
-        if (!is_even(column_of(rows_, static_cast<std::size_t>(column - 1))))
+    if (layout.angle_column == 0)
+        find_even_column();
+    if (layout.angle_column == 0)
+        layout.angle_from = AngleFrom::sample_number;
+    if (layout.angle_from != AngleFrom::column)
+        return;
+    const auto angles = column_of(rows_, static_cast<std::size_t>(layout.angle_column - 1));
+    layout.backwards = angles.size() > 1 && angles[1] < angles[0];
+}
+
+bool Guess::find_index_by_title()
+{
+    for (int column = 1; column <= proposed_.columns; ++column) {
+        const std::string words = title(column);
+        if (names_angle(words) || !names_any(words, {"index", "sample", "point", "count"}))
+            continue;
+        if (!steps_by_one(column_of(rows_, static_cast<std::size_t>(column - 1))))
+            continue;
+        choose_index(column);
+        return true;
+    }
+    return false;
+}
+
+void Guess::choose_index(int column)
+{
+    proposed_.layout.angle_from = AngleFrom::sample_number;
+    proposed_.layout.angle_column = column;
+}
+
+/// Without a title that says it: what steps evenly is the angle, a time, or counts the samples.
+void Guess::find_even_column()
+{
+    TraceLayout& layout = proposed_.layout;
+    for (int column = 1; column <= proposed_.columns; ++column) {
+        const auto numbers = column_of(rows_, static_cast<std::size_t>(column - 1));
+        const auto seconds = time_unit_of(title(column));
+        const bool time = seconds && rises(numbers); // written with few digits it does not step evenly
+        if (!time && !is_even(numbers))
             continue;
         layout.angle_column = column;
-        if (names_any(title(column), {"time", "[s]", "(s)", "[ms]", "(ms)", "sec"}))
+        if (time) {
             layout.angle_from = AngleFrom::time;
-        if (names_any(title(column), {"[ms]", "(ms)"}))
-            layout.seconds_per_count = 0.001;
-    }
-    if (layout.angle_column == 0) {
-        layout.angle_from = AngleFrom::sample_number;
-        layout.angle_column = 1;
+            layout.seconds_per_count = *seconds;
+        } else if (is_index(column)) {
+            choose_index(column);
+        }
         return;
     }
-    const auto angles = column_of(rows_, static_cast<std::size_t>(layout.angle_column - 1));
-    layout.backwards = layout.angle_from == AngleFrom::column && angles.size() > 1 && angles[1] < angles[0];
+}
+
+/// Whole numbers from 0 or 1 that step by one beyond what angles of one cycle do.
+bool Guess::is_index(int column) const
+{
+    constexpr double last_angle = 720.0;
+    const auto index = static_cast<std::size_t>(column - 1);
+    const auto begun = column_of(rows_, index);
+    if (begun.empty() || (begun.front() != 0.0 && begun.front() != 1.0) || !steps_by_one(begun))
+        return false;
+    auto numbers = column_of_text(text_, proposed_.layout, index);
+    if (numbers.size() > begun.size() && !text_.ends_with('\n'))
+        numbers.pop_back(); // the beginning of a long file ends within a line
+    return steps_by_one(numbers) &&
+           (static_cast<double>(numbers.size()) > cycle_degrees_ + 1.0 || numbers.back() > last_angle);
+}
+
+/// How many samples a revolution has, where the rows are evenly spaced in angle: whole cycles fit the file.
+void Guess::find_counts()
+{
+    TraceLayout& layout = proposed_.layout;
+    if (layout.angle_from != AngleFrom::sample_number)
+        return;
+    const auto column = static_cast<std::size_t>(layout.pressures.front().column - 1);
+    const double a_cycle = samples_a_cycle(column_of_text(text_, layout, column));
+    const double counts = a_cycle * 360.0 / cycle_degrees_;
+    if (counts >= 60.0 && counts <= 36000.0)
+        layout.counts_per_revolution = counts;
 }
 
 void Guess::find_cycle()
@@ -198,16 +263,24 @@ void Guess::find_cycle()
 void Guess::find_pressures()
 {
     TraceLayout& layout = proposed_.layout;
-    const bool has_angle = layout.angle_from != AngleFrom::sample_number;
-    for (const bool only_named : {true, false}) {
+    const auto names_pressure = [](const std::string& words) {
+        return names_any(words, {"press", "bar", "pa]", "pa)", "psi", "cyl"});
+    };
+    enum Asked { of_pressures, of_signals, of_all };
+    for (const Asked asked : {of_pressures, of_signals, of_all}) {
         for (int column = 1; column <= proposed_.columns; ++column) {
-            if ((has_angle && column == layout.angle_column) || column == layout.cycle_column)
+            if (column == layout.angle_column || column == layout.cycle_column)
                 continue;
-            if (!only_named || names_any(title(column), {"press", "bar", "pa]", "pa)", "psi", "cyl"}))
+            const std::string words = title(column);
+            if (asked == of_all || (asked == of_pressures ? names_pressure(words) : names_signal(words)))
                 layout.pressures.push_back({column, std::nullopt});
         }
-        if (!layout.pressures.empty())
-            return;
+        if (layout.pressures.empty())
+            continue;
+        const std::string first = title(layout.pressures.front().column);
+        if (has_word(first, {"v", "mv", "volt", "volts", "voltage"}) || asked == of_signals)
+            layout.calibration = TwoPointCalibration{0.0, 0.0, 0.0, 0.0}; // what it means is to be written
+        return;
     }
     layout.pressures = {{std::min(2, std::max(1, proposed_.columns)), std::nullopt}};
 }
@@ -248,17 +321,18 @@ ProposedLayout Guess::answer()
     find_angle();
     find_cycle();
     find_pressures();
+    find_counts();
     name_unit();
     return std::move(proposed_);
 }
 
 } // namespace
 
-ProposedLayout guess_layout(std::string_view first_lines)
+ProposedLayout guess_layout(std::string_view first_lines, double cycle_degrees)
 {
     if (first_lines.starts_with("\xEF\xBB\xBF"))
         first_lines.remove_prefix(3);
-    return Guess(first_lines).answer();
+    return Guess(first_lines, cycle_degrees).answer();
 }
 
 ColumnSeparator find_separator(std::string_view first_lines)

@@ -43,7 +43,7 @@ struct TraceLayout
     int header_lines = 1;
 
     AngleFrom angle_from = AngleFrom::column;
-    int angle_column = 1;                 ///< of degrees, or of times
+    int angle_column = 1; ///< of degrees, or of times; for `sample_number` the one that counts them, 0: none
     double counts_per_revolution = 720.0; ///< samples, for `sample_number`
     double seconds_per_count = 1.0;       ///< of the time column: 1 for seconds, 0.001 for milliseconds
     double speed = 0.0;                   ///< r/min, for `time`
@@ -84,7 +84,7 @@ Result<std::vector<ReadTrace>> read_traces_text(std::string_view text, const std
 std::optional<Problem> find_layout_problem(const TraceLayout& layout, int columns = 0);
 
 /// What the first lines of a file look like. A proposal for the engineer, never a decision: the unit is only
-/// named.
+/// named, and a column titled as a signal gets a calibration whose points are yet to be written.
 struct ProposedLayout
 {
     TraceLayout layout;              ///< without a unit
@@ -92,7 +92,9 @@ struct ProposedLayout
     std::vector<std::string> titles; ///< of the columns, where a header line has them
     int columns = 0;
 };
-ProposedLayout guess_layout(std::string_view first_lines);
+/// @param first_lines  the more of them, the better an index of samples is told from whole degrees
+/// @param cycle_degrees  of the engine's working cycle, 360 or 720
+ProposedLayout guess_layout(std::string_view first_lines, double cycle_degrees = 360.0);
 
 /// The fields of one line; quotation marks and blanks around them are taken off.
 std::vector<std::string> split_line(std::string_view line, ColumnSeparator separator);

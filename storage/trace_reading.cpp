@@ -8,6 +8,7 @@
 #include "storage/plain_number.h"
 #include "storage/sql.h"
 #include "storage/trace_angles.h"
+#include "storage/trace_titles.h"
 
 #include <QFileInfo>
 
@@ -32,14 +33,6 @@ char sign_of(ColumnSeparator separator)
     default:
         return ',';
     }
-}
-
-std::string lower(std::string_view text)
-{
-    std::string plain(text);
-    std::transform(plain.begin(), plain.end(), plain.begin(),
-                   [](unsigned char letter) { return static_cast<char>(std::tolower(letter)); });
-    return plain;
 }
 
 /// The samples of a file as its layout says them, before they are traces.
@@ -355,6 +348,10 @@ std::optional<Problem> find_layout_problem(const TraceLayout& layout, int column
         std::abs(layout.first_angle) > 720.0 || std::abs(layout.dead_centre_at) > 720.0)
         return invalid_input("The angle of the first sample or of dead centre is beyond one working cycle.",
                              "Write -720 to 720 degrees.");
+    if (const auto& two = layout.calibration; two && two->signal_1 == 0.0 && two->pressure_1 == 0.0 &&
+                                              two->signal_2 == 0.0 && two->pressure_2 == 0.0)
+        return invalid_input("The file holds a signal, and what pressure it stands for is not written yet.",
+                             "Write two values of the signal and the pressure at each.");
     if (const auto& two = layout.calibration)
         if (!(two->signal_1 != two->signal_2) || !(two->pressure_1 != two->pressure_2) ||
             !std::isfinite(two->signal_1 + two->signal_2 + two->pressure_1 + two->pressure_2))

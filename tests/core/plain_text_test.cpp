@@ -57,6 +57,7 @@ TEST(Quoted, LetsNoControlCharacterAndNoBrokenByteThrough)
     EXPECT_EQ(evenstroke::quoted("\xF4\x90\x80\x80"), "\"????\""); // beyond U+10FFFF
     EXPECT_EQ(evenstroke::quoted("5\xE2\x82"), "\"5??\"");         // cut off
     EXPECT_EQ(evenstroke::quoted(std::string_view("a\0b", 3)), "\"a?b\"");
+    EXPECT_EQ(evenstroke::quoted("1\t2"), "\"1 2\"") << "a line of a file in columns";
 }
 
 TEST(NumberText, KeepsEveryDigitAndNoMore)

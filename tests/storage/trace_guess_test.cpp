@@ -54,6 +54,54 @@ TEST(TraceGuess, SeesTimesFallingAnglesAndFilesOfPressuresOnly)
     EXPECT_EQ(pressures.layout.pressures.front().column, 1);
 }
 
+/// Rows "index,pressure" of so many cycles.
+std::string counted_file(int first, int samples, int cycles, const char* title = "n,p")
+{
+    std::string text = std::string(title) + "\n";
+    for (int i = 0; i < samples * cycles; ++i)
+        text += std::to_string(first + i) + "," + number(hump(360.0 * i / samples)).toStdString() + "\n";
+    return text;
+}
+
+TEST(TraceGuess, TellsAnIndexOfSamplesFromAnAngle)
+{
+    const auto one = guess_layout(counted_file(0, 720, 1));
+    EXPECT_EQ(one.layout.angle_from, AngleFrom::sample_number);
+    EXPECT_EQ(one.layout.angle_column, 1);
+    EXPECT_EQ(one.layout.counts_per_revolution, 720.0);
+    ASSERT_EQ(one.layout.pressures.size(), 1U) << "the index is no pressure";
+    EXPECT_EQ(one.layout.pressures.front().column, 2);
+    const auto several = guess_layout(counted_file(1, 1024, 3));
+    EXPECT_EQ(several.layout.angle_from, AngleFrom::sample_number);
+    EXPECT_EQ(several.layout.counts_per_revolution, 1024.0);
+    const auto four_stroke = guess_layout(counted_file(0, 3600, 1), 720.0);
+    EXPECT_EQ(four_stroke.layout.counts_per_revolution, 1800.0) << "two revolutions a cycle";
+    EXPECT_EQ(guess_layout(counted_file(0, 360, 1)).layout.angle_from, AngleFrom::column)
+        << "0 to 359 are whole degrees";
+    EXPECT_EQ(guess_layout(counted_file(0, 720, 1), 720.0).layout.angle_from, AngleFrom::column);
+    EXPECT_EQ(guess_layout(counted_file(0, 100, 1, "sample,p")).layout.angle_from, AngleFrom::sample_number)
+        << "its title says so";
+}
+
+TEST(TraceGuess, TakesTheUnitOfTimeAndTheSignalFromTheTitles)
+{
+    const auto file = guess_layout("time_ms,signal_V\n0,1.1\n0.1,1.2\n0.3,1.3\n0.4,1.5\n0.5,1.4\n");
+    EXPECT_EQ(file.layout.angle_from, AngleFrom::time) << "rounded times do not step evenly";
+    EXPECT_EQ(file.layout.seconds_per_count, 0.001);
+    ASSERT_EQ(file.layout.pressures.size(), 1U);
+    EXPECT_EQ(file.layout.pressures.front().column, 2);
+    ASSERT_TRUE(file.layout.calibration.has_value());
+    TraceLayout layout = file.layout;
+    layout.unit = find_unit("bar").value().id;
+    layout.speed = 100.0;
+    const auto problem = find_layout_problem(layout, 2);
+    ASSERT_TRUE(problem.has_value()) << "volts are never taken for bar";
+    EXPECT_NE(problem->what_happened.find("signal"), std::string::npos) << problem->text();
+    EXPECT_EQ(guess_layout("time,p\n0,3\n1,3\n2,3\n3,4\n").layout.seconds_per_count, 1.0);
+    EXPECT_EQ(guess_layout("time us;volt\n0;3\n1;3\n2;3\n3;4\n").layout.seconds_per_count, 1e-6);
+    EXPECT_FALSE(guess_layout("angle,p [bar]\n0,3\n1,3\n2,3\n").layout.calibration.has_value());
+}
+
 TEST(TraceGuess, SaysLittleOfWhatIsNoTable)
 {
     for (const char* text :
