@@ -18,7 +18,7 @@
 namespace evenstroke::storage {
 namespace {
 
-constexpr int looked_at = 60;                   // lines
+constexpr int looked_at = 60;                 // lines
 constexpr qint64 longest_beginning = 2 << 20; // bytes: a cycle of six fine columns
 
 std::vector<std::string_view> lines_of(std::string_view text)

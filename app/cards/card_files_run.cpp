@@ -2,6 +2,7 @@
 #include "app/cards/card_files_run.h"
 
 #include "app/desk/number_text.h"
+#include "core/card/card_values.h"
 #include "core/card/reading_conditions.h"
 #include "core/trend/conditions.h"
 
@@ -14,19 +15,16 @@
 namespace evenstroke {
 namespace {
 
-/// The barometer of the reading in bar; 1 bar where it was not read, as everywhere else.
-double barometer_of(const CardFilesTask& task)
-{
-    return find_conditions(task.engine, task.reading).barometer_or_one_bar();
-}
-
 void evaluate_trace(const CardFilesTask& task, FileTrace& found)
 {
     indicator::Trace trace{found.trace->cycle, found.trace->crank_angle_deg, found.trace->pressure_bar};
-    const indicator::Conditions conditions = indicator::conditions_at(task.engine, task.reading);
+    indicator::Conditions conditions = indicator::conditions_at(task.engine, task.reading);
+    const auto barometer = find_conditions(task.engine, task.reading).barometer;
+    // Of the card: that the scavenge pressure was read over an unknown barometer is no matter of its own zero.
+    conditions.barometer_assumed = found.trace->gauge && !barometer;
     if (found.trace->gauge)
         for (double& pressure : trace.pressure)
-            pressure += barometer_of(task);
+            pressure += barometer.value_or(indicator::usual_barometer);
     auto card = indicator::evaluate(task.engine, conditions, trace);
     if (card)
         found.card = std::make_shared<indicator::Evaluation>(std::move(card.value()));

@@ -65,7 +65,7 @@ LayoutBoxes::LayoutBoxes(QWidget* parent) : QWidget(parent), grid_(new QGridLayo
         if (unit.dimension == Dimension::pressure)
             units << to_qstring(unit.symbol);
     unit_ = add_choice(1, 0, tr("Pressure in"), units);
-    kind_ = add_choice(1, 1, tr("Counted from"), {tr("vacuum (absolute)"), tr("the air outside (gauge)")});
+    kind_ = add_choice(1, 1, tr("Counted from"), {tr("vacuum (absolute)"), tr("open air (gauge)")});
     dead_centre_ = add_line(1, 2, tr("Firing dead centre at, °"));
     direction_ = add_choice(1, 3, tr("Running ahead, angles"), {tr("rise"), tr("fall")});
     counts_ = add_line(2, 0, tr("Samples a revolution"));

@@ -32,6 +32,18 @@ std::vector<std::vector<std::string>> fields_of(const std::string& text, storage
     return lines;
 }
 
+TraceColumns::Role role_of(storage::AngleFrom from)
+{
+    switch (from) {
+    case storage::AngleFrom::sample_number:
+        return TraceColumns::sample_index;
+    case storage::AngleFrom::time:
+        return TraceColumns::time;
+    default:
+        return TraceColumns::angle;
+    }
+}
+
 int columns_of(const std::vector<std::vector<std::string>>& lines)
 {
     std::size_t most = 0;
@@ -63,7 +75,6 @@ void TraceColumns::show_file(const std::string& text, const storage::TraceLayout
     choices_.clear();
     setColumnCount(columns);
     setRowCount(columns > 0 ? static_cast<int>(lines.size()) + 1 : 0);
-    using storage::AngleFrom;
     const bool several = layout.pressures.size() > 1;
     for (int column = 1; column <= columns; ++column) {
         const auto found =
@@ -74,8 +85,8 @@ void TraceColumns::show_file(const std::string& text, const storage::TraceLayout
             role = pressure;
         else if (layout.cycle_column == column)
             role = cycle;
-        else if (layout.angle_from != AngleFrom::sample_number && layout.angle_column == column)
-            role = layout.angle_from == AngleFrom::time ? time : angle;
+        else if (layout.angle_column == column)
+            role = role_of(layout.angle_from);
         add_choice(column - 1, role, role == pressure && several ? found->cylinder : std::nullopt, engine);
         setColumnWidth(column - 1, column_width);
     }
@@ -91,7 +102,9 @@ void TraceColumns::fill_lines(const std::vector<std::vector<std::string>>& lines
         const auto& line = lines[static_cast<std::size_t>(row)];
         for (int column = 0; column < columns; ++column) {
             const auto index = static_cast<std::size_t>(column);
-            auto* item = new QTableWidgetItem(index < line.size() ? to_qstring(line[index]) : QString());
+            QString field = index < line.size() ? to_qstring(line[index]) : QString();
+            field.replace(QLatin1Char('\t'), QStringLiteral("    ")); // no font has a sign for it
+            auto* item = new QTableWidgetItem(field);
             item->setFlags(Qt::ItemIsEnabled);
             if (row < header_lines)
                 item->setForeground(theme().muted);
@@ -103,7 +116,8 @@ void TraceColumns::fill_lines(const std::vector<std::vector<std::string>>& lines
 void TraceColumns::add_choice(int column, Role role, std::optional<int> cylinder, const Engine& engine)
 {
     auto* choice = new QComboBox(this);
-    choice->addItems({tr("not used"), tr("angle, °"), tr("time"), tr("cycle"), tr("pressure")});
+    choice->addItems(
+        {tr("not used"), tr("angle, °"), tr("time"), tr("sample index"), tr("cycle"), tr("pressure")});
     for (int number = 1; number <= engine.cylinders; ++number)
         choice->addItem(tr("cylinder %1").arg(to_qstring(engine.cylinder_name(number))));
     choice->setAccessibleName(tr("What column %1 holds").arg(column + 1));
@@ -125,6 +139,7 @@ void TraceColumns::read_into(storage::TraceLayout& layout) const
     layout.pressures.clear();
     layout.cycle_column.reset();
     layout.angle_from = AngleFrom::sample_number;
+    layout.angle_column = 0;
     for (int column = 1; column <= columns_shown(); ++column) {
         const int role = choices_[static_cast<std::size_t>(column - 1)]->currentIndex();
         if (role == cycle)
@@ -133,6 +148,8 @@ void TraceColumns::read_into(storage::TraceLayout& layout) const
             layout.angle_column = column;
             layout.angle_from = role == angle ? AngleFrom::column : AngleFrom::time;
         }
+        if (role == sample_index && layout.angle_from == AngleFrom::sample_number)
+            layout.angle_column = column;
         if (role == pressure)
             layout.pressures.push_back({column, std::nullopt});
         if (role >= first_cylinder)

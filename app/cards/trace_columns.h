@@ -25,7 +25,7 @@ public:
     /// For tests: as if somebody had chosen it.
     void choose(int column, int role);
 
-    enum Role { unused, angle, time, cycle, pressure, first_cylinder };
+    enum Role { unused, angle, time, sample_index, cycle, pressure, first_cylinder };
 
 signals:
     void changed();

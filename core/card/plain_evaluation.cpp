@@ -142,6 +142,27 @@ DirectReadings read_directly(Evaluation& card, const SliderCrank& gear)
     return direct;
 }
 
+namespace {
+
+/// A compression that does not rise as it should is no matter of units where the whole card is turned.
+Problem angle_first(Problem problem, const ThinTrace& thin)
+{
+    constexpr double far = 60.0; // degrees from dead centre: no combustion is as early or late
+    const auto most = std::max_element(thin.pressure.begin(), thin.pressure.end());
+    if (most == thin.pressure.end())
+        return problem;
+    const double at = thin.angle[static_cast<std::size_t>(most - thin.pressure.begin())];
+    if (std::abs(at) <= far)
+        return problem;
+    problem.what_happened = "The largest pressure lies at " + short_number_text(std::round(at)) +
+                            "°, far from firing dead centre at 0°: most likely the angles are wrong. " + problem.what_happened;
+    problem.what_to_do = "Check first what the file calls dead centre, the angle of its first sample, and which way the angles run; "
+                         "if they are right, the units of the pressures.";
+    return problem;
+}
+
+} // namespace
+
 std::optional<Problem> find_unit_problem(const Engine& engine, const Conditions& conditions, const SliderCrank& gear,
                                          const ThinTrace& thin)
 {
@@ -161,19 +182,19 @@ std::optional<Problem> find_unit_problem(const Engine& engine, const Conditions&
     if (!line || !std::isfinite(line->values[1]))
         return std::nullopt;
     const double charge = line->values[1];
+    const std::string rising =
+        "The compression of the card rises as from a charge of " + short_number_text(std::round(charge * 100.0) / 100.0);
     if (conditions.scavenge_pressure) {
         const double given = in_bar(*conditions.scavenge_pressure), times = charge / given;
         if (times > 1.0 / far && times < far)
             return std::nullopt;
-        return invalid_input("The compression of the card rises as from a charge of " + short_number_text(std::round(charge * 100.0) / 100.0) +
-                                 " bar, but the scavenge pressure given is " + short_number_text(given) + " bar abs.",
-                             "Check the unit of the card's pressures and of the scavenge pressure, and the engine's angles.");
+        return angle_first(invalid_input(rising + " bar, but the scavenge pressure given is " + short_number_text(given) + " bar abs.",
+                             "Check the unit of the card's pressures and of the scavenge pressure, and the engine's angles."), thin);
     }
     if (charge > lowest_charge && charge < highest_charge)
         return std::nullopt;
-    return invalid_input("The compression of the card rises as from a charge of " + short_number_text(std::round(charge * 100.0) / 100.0) +
-                             " bar, which no engine has.",
-                         "Check the unit of the card's pressures (bar is expected), and the engine's angles.");
+    return angle_first(invalid_input(rising + " bar, which no engine has.",
+                         "Check the unit of the card's pressures (bar is expected), and the engine's angles."), thin);
 }
 
 bool fires_where_it_should(const DirectReadings& direct)

@@ -4,6 +4,7 @@
 
 #include <gtest/gtest.h>
 
+#include <algorithm>
 #include <cmath>
 #include <limits>
 
@@ -61,6 +62,14 @@ TEST_F(CardBadInput, ACompressionThatIsNotThere)
         }
     card.trace = half;
     refused("does not cover the compression");
+}
+
+TEST_F(CardBadInput, ACardTurnedByHalfARevolutionSpeaksOfTheAngleFirst)
+{
+    std::vector<double>& pressure = card.trace.pressure;
+    std::rotate(pressure.begin(), pressure.begin() + static_cast<std::ptrdiff_t>(pressure.size() / 2), pressure.end());
+    refused("The largest pressure lies at -1");
+    refused("most likely the angles are wrong");
 }
 
 TEST_F(CardBadInput, PressuresThatAreAllTheSameOrNone)
