@@ -19,6 +19,36 @@ namespace {
 
 const std::string not_saved = "the card was not saved";
 
+/// Another version of the packing may make other bytes of the same samples.
+bool holds(const QByteArray& packed, const CardTrace& trace)
+{
+    const auto known = unpack_card(packed);
+    return known && known->cycle == trace.cycle && known->gauge == trace.gauge &&
+           known->crank_angle_deg == trace.crank_angle_deg && known->pressure_bar == trace.pressure_bar;
+}
+
+Problem another_card(const std::string& reading_name, int cylinder)
+{
+    return invalid_input("The reading " + evenstroke::quoted(reading_name) + " has another card of cylinder " +
+                             std::to_string(cylinder) + ".",
+                         "Leave this one out, or choose the reading it was taken with.");
+}
+
+Problem two_of(int cylinder)
+{
+    return invalid_input("Two of the cards are of cylinder " + std::to_string(cylinder) + ".",
+                         "Say which cylinder each is of.");
+}
+
+Result<int> cards_of(History& history, qint64 reading_key)
+{
+    Query count(history.database(), "SELECT count(*) FROM card WHERE reading_key = ?", "the cards were not counted");
+    BOOST_OUTCOME_TRYV(count.run(reading_key));
+    if (!count.next())
+        return count.problem();
+    return count.small(0);
+}
+
 } // namespace
 
 std::string packed_card_hash(const std::string& id, int cylinder, const QByteArray& packed)
@@ -37,14 +67,9 @@ Result<AddedCard> add_card(History& history, qint64 reading_key, int cylinder, c
     Query there(history.database(), "SELECT id, trace FROM card WHERE reading_key = ? AND cylinder = ?",
                 not_saved);
     BOOST_OUTCOME_TRYV(there.run(reading_key, cylinder));
-    if (there.next()) {
-        // Another version of the packing may make other bytes of the same samples.
-        const auto known = unpack_card(there.bytes(1));
-        const bool same = known && known->cycle == trace.cycle && known->gauge == trace.gauge &&
-                          known->crank_angle_deg == trace.crank_angle_deg &&
-                          known->pressure_bar == trace.pressure_bar;
-        return AddedCard{there.text(0), same ? AddedCard::Outcome::same : AddedCard::Outcome::differs};
-    }
+    if (there.next())
+        return AddedCard{there.text(0), holds(there.bytes(1), trace) ? AddedCard::Outcome::same
+                                                                     : AddedCard::Outcome::differs};
     BOOST_OUTCOME_TRYV(there.finished());
     const std::string id = from_qt(QUuid::createUuid().toString(QUuid::WithoutBraces));
     Query add(history.database(),
@@ -107,6 +132,34 @@ Result<std::string> CardStore::add(const std::string& reading_id, int cylinder, 
     return added.value().id;
 }
 
+Result<AddedCards> CardStore::foresee(const std::string& reading_id, const std::vector<NewCard>& cards) const
+{
+    const auto reading = load_reading_row(history_, reading_id);
+    if (!reading)
+        return reading.error();
+    AddedCards all;
+    std::set<int> cylinders;
+    for (const NewCard& card : cards) {
+        if (!cylinders.insert(card.cylinder).second)
+            return two_of(card.cylinder);
+        Query there(history_.database(), "SELECT trace FROM card WHERE reading_key = ? AND cylinder = ?",
+                    "the card was not read");
+        BOOST_OUTCOME_TRYV(there.run(reading.value().key, card.cylinder));
+        const bool any = there.next();
+        if (any && !holds(there.bytes(0), *card.trace))
+            return another_card(reading.value().name, card.cylinder);
+        if (!any) {
+            BOOST_OUTCOME_TRYV(there.finished());
+        }
+        ++(any ? all.same : all.added);
+    }
+    const auto before = cards_of(history_, reading.value().key);
+    if (!before)
+        return before.error();
+    all.in_all = before.value() + all.added;
+    return all;
+}
+
 Result<AddedCards> CardStore::add_all(const std::string& reading_id, const std::vector<NewCard>& cards,
                                       const Signature& by)
 {
@@ -121,17 +174,18 @@ Result<AddedCards> CardStore::add_all(const std::string& reading_id, const std::
     std::set<int> cylinders;
     for (const NewCard& card : cards) {
         if (!cylinders.insert(card.cylinder).second)
-            return invalid_input("Two of the cards are of cylinder " + std::to_string(card.cylinder) + ".",
-                                 "Say which cylinder each is of.");
+            return two_of(card.cylinder);
         const auto added = add_card(history_, reading.value().key, card.cylinder, *card.trace, audit);
         if (!added)
             return added.error();
         if (added.value().outcome == AddedCard::Outcome::differs)
-            return invalid_input("The reading " + evenstroke::quoted(reading.value().name) + " has another card of cylinder " +
-                                     std::to_string(card.cylinder) + ".",
-                                 "Leave this one out, or choose the reading it was taken with.");
+            return another_card(reading.value().name, card.cylinder);
         ++(added.value().outcome == AddedCard::Outcome::added ? all.added : all.same);
     }
+    const auto in_all = cards_of(history_, reading.value().key);
+    if (!in_all)
+        return in_all.error();
+    all.in_all = in_all.value();
     if (all.added > 0) {
         Query owner(history_.database(), "SELECT vessel_key, coalesce(engine_key, 0) FROM reading WHERE reading_key = ?",
                     not_saved);

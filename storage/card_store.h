@@ -43,6 +43,7 @@ struct NewCard
 struct AddedCards
 {
     int added = 0, same = 0; ///< `same`: the reading had it already
+    int in_all = 0;          ///< cards of the reading afterwards
 };
 
 /// Cards of readings.
@@ -59,6 +60,8 @@ public:
     /// @par Problems invalid_input: the reading has another card of this cylinder
     Result<std::string> add(const std::string& reading_id, int cylinder, const CardTrace& trace,
                             const Signature& by);
+    /// What `add_all` would answer; nothing is changed and nobody need sign.
+    Result<AddedCards> foresee(const std::string& reading_id, const std::vector<NewCard>& cards) const;
     /// Adds the cards of several cylinders to a reading: all of them, or none.
     /// @par Problems invalid_input: the reading has another card of one of the cylinders, or two are of one cylinder
     Result<AddedCards> add_all(const std::string& reading_id, const std::vector<NewCard>& cards, const Signature& by);
