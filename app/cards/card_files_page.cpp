@@ -6,6 +6,7 @@
 #include "app/desk/reading_in_hand.h"
 #include "app/desk/theme.h"
 #include "app/desk/workplace.h"
+#include "core/card/usual_mean_indicated.h"
 #include "ui_card_files_page.h"
 
 #include <QComboBox>
@@ -21,7 +22,7 @@
 namespace evenstroke {
 namespace {
 
-constexpr int lines_read = 60, wait_ms = 200;
+constexpr int wait_ms = 200;
 constexpr std::size_t most_files = 200;
 
 QString folder_setting()
@@ -99,9 +100,17 @@ void CardFilesPage::connect_parts()
         ui_->paper->setVisible(on);
         ui_->preview->setMaximumHeight(on ? 150 : 220);
     });
+    connect(ui_->doubtful_button, &QPushButton::clicked, this, [this] {
+        all_the_same_ = true;
+        show_into();
+    });
+    connect(ui_->paper, &PaperCard::changed, this, [this] { say({}); });
     connect(ui_->paper, &PaperCard::put_into_reading, this, &CardFilesPage::ask_and_put);
     connect(new QShortcut(QKeySequence::Open, this, nullptr, nullptr, Qt::WidgetWithChildrenShortcut),
             &QShortcut::activated, this, &CardFilesPage::choose_files);
+    connect(new QShortcut(QKeySequence(Qt::CTRL | Qt::Key_L), this, nullptr, nullptr,
+                          Qt::WidgetWithChildrenShortcut),
+            &QShortcut::activated, this, &CardFilesPage::look_anew);
 }
 
 QWidget* CardFilesPage::first_focus()
@@ -132,13 +141,19 @@ void CardFilesPage::refresh()
     judgement_ = workplace().judgement();
     if (shown_engine_ != workplace().selection().engine) {
         shown_engine_ = workplace().selection().engine;
+        say({});
         if (!files_.empty())
             begin_layout();
     }
+    follow_choice();
     if (engine())
         ui_->paper->set_engine(*engine());
-    if (engine() && ui_->columns->columns_shown() == 0)
-        show_first_lines(); // files that were dropped before the engine was judged
+    ui_->paper->set_usual([this](int cylinder) {
+        const Reading* const reading = reading_in_hand_here();
+        return reading ? indicator::usual_mean_indicated(*engine(), *reading, cylinder) : std::nullopt;
+    });
+    if (engine() && !files_.empty() && ui_->columns->columns_shown() == 0)
+        begin_layout(); // files that were dropped before the engine was judged
     if (!files_.empty())
         preview_soon(); // another reading has other conditions
     show_all();
@@ -181,53 +196,10 @@ void CardFilesPage::forget_files()
     traces_.clear();
     problem_.reset();
     first_lines_.clear();
+    all_the_same_ = false;
     say({});
     show_all();
     emit foot_changed();
-}
-
-/// The layout of the engine's last files, else what the first file looks like.
-void CardFilesPage::begin_layout()
-{
-    problem_.reset();
-    const auto lines = storage::first_lines_of(files_.front().path, lines_read);
-    if (!lines) {
-        problem_ = lines.error();
-        first_lines_.clear();
-        return;
-    }
-    first_lines_ = lines.value();
-    proposed_ = storage::guess_layout(first_lines_);
-    remembered_ = false;
-    layout_ = proposed_.layout;
-    if (workplace().history()) {
-        const auto kept =
-            storage::load_trace_layout(*workplace().history(), to_std(workplace().selection().engine));
-        if (kept && kept.value()) {
-            layout_ = *kept.value();
-            remembered_ = true;
-        }
-    }
-    if (!remembered_ && engine() && layout_.pressures.size() > 1)
-        for (storage::PressureColumn& column : layout_.pressures)
-            if (const auto index = static_cast<std::size_t>(column.column - 1);
-                index < proposed_.titles.size())
-                column.cylinder = storage::guess_cylinder(proposed_.titles[index], *engine());
-    ui_->boxes->show_layout(layout_);
-    show_first_lines();
-}
-
-void CardFilesPage::look_anew()
-{
-    const auto unit = layout_.unit;
-    const bool gauge = layout_.gauge;
-    proposed_ = storage::guess_layout(first_lines_);
-    set_layout_in_hand(proposed_.layout);
-    layout_.unit = unit;
-    layout_.gauge = gauge;
-    remembered_ = false;
-    ui_->boxes->show_layout(layout_);
-    show_all();
 }
 
 void CardFilesPage::set_layout_in_hand(const storage::TraceLayout& layout)
@@ -247,6 +219,7 @@ void CardFilesPage::show_first_lines()
 
 void CardFilesPage::take_boxes()
 {
+    remembered_ = false; // somebody says how this file is laid out
     ui_->columns->read_into(layout_);
     problem_ = ui_->boxes->read_into(layout_);
     ui_->boxes->show_layout(layout_);
@@ -276,12 +249,15 @@ void CardFilesPage::preview()
 void CardFilesPage::take_traces(const std::vector<FileTrace>& traces)
 {
     traces_ = traces;
+    all_the_same_ = false;
     ui_->progress->hide();
     show_all();
 }
 
 void CardFilesPage::set_cylinder(std::size_t index, std::optional<int> cylinder)
 {
+    say({});
+    all_the_same_ = false;
     FileTrace& trace = traces_[index];
     trace.cylinder = cylinder;
     if (layout_.pressures.size() == 1)

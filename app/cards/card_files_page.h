@@ -62,19 +62,29 @@ protected:
 private:
     void connect_parts();
     void choose_files();
+    bool read_first_file();
     void begin_layout();
+    void propose_layout();
     void look_anew();
+    double speed_to_propose() const;
+    void follow_choice();
     void show_first_lines();
     void take_boxes();
     void preview_soon() { soon_.start(); }
     void preview();
     void take_traces(const std::vector<FileTrace>& traces);
     void show_all();
+    QString problem_words() const;
     void show_unit_words();
     void show_traces();
     void show_trace_in_hand();
     void show_into();
+    bool is_wanted(const FileTrace& trace) const;
+    void show_doubtful(QStringList& lines);
+    std::vector<storage::NewCard> cards_to_take() const;
+    bool says_already();
     void ask_and_take();
+    QString read_value_stays(int cylinder) const;
     void ask_and_put(int cylinder, double mean_indicated_bar);
     std::optional<storage::Signature> ask_signature(const QString& title, const QString& words,
                                                     const QString& action);
@@ -87,10 +97,13 @@ private:
     QTimer soon_; ///< the preview waits for the end of typing
     std::shared_ptr<const Judgement> judgement_;
     QString shown_engine_;
+    std::string shown_reading_; ///< id of the last one that was looked at
     std::vector<CardFile> files_;
     storage::TraceLayout layout_;
     storage::ProposedLayout proposed_; ///< of the first file
     bool remembered_ = false;          ///< `layout_` is the engine's own
+    double proposed_speed_ = 0.0;      ///< r/min: follows the reading until somebody writes another
+    bool all_the_same_ = false;        ///< doubtful cards are wanted too, somebody said
     std::string first_lines_;
     std::optional<Problem> problem_; ///< of the layout or the first file
     std::vector<FileTrace> traces_;

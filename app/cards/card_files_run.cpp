@@ -20,7 +20,8 @@ void evaluate_trace(const CardFilesTask& task, FileTrace& found)
     indicator::Trace trace{found.trace->cycle, found.trace->crank_angle_deg, found.trace->pressure_bar};
     indicator::Conditions conditions = indicator::conditions_at(task.engine, task.reading);
     const auto barometer = find_conditions(task.engine, task.reading).barometer;
-    // Of the card: that the scavenge pressure was read over an unknown barometer is no matter of its own zero.
+    // Of the card: that the scavenge pressure was read over an unknown barometer is no matter of its own
+    // zero.
     conditions.barometer_assumed = found.trace->gauge && !barometer;
     if (found.trace->gauge)
         for (double& pressure : trace.pressure)

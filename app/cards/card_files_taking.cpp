@@ -72,8 +72,8 @@ void CardFilesPage::show_all()
     ui_->paper_button->setVisible(ready);
     ui_->paper->setVisible(ready && ui_->paper_button->isChecked());
     show_unit_words();
-    ui_->problem->setText(problem_ && any ? to_qstring(problem_->text()) : QString());
-    ui_->problem->setVisible(problem_ && any);
+    ui_->problem->setText(problem_words());
+    ui_->problem->setVisible(!ui_->problem->text().isEmpty());
     show_traces();
     show_into();
 }
@@ -153,8 +153,10 @@ void CardFilesPage::show_trace_in_hand()
 void CardFilesPage::show_into()
 {
     const Reading* const reading = reading_in_hand_here();
-    const auto taken = static_cast<int>(std::count_if(traces_.begin(), traces_.end(), can_be_taken));
-    const auto left = static_cast<int>(traces_.size()) - taken;
+    const auto of_cylinders = static_cast<int>(std::count_if(traces_.begin(), traces_.end(), can_be_taken));
+    const auto left = static_cast<int>(traces_.size()) - of_cylinders;
+    const auto taken = static_cast<int>(std::count_if(
+        traces_.begin(), traces_.end(), [this](const FileTrace& trace) { return is_wanted(trace); }));
     const QString twice = engine() ? cylinders_twice(traces_, *engine()) : QString();
     QStringList lines;
     if (!traces_.empty() && !reading)
@@ -165,6 +167,7 @@ void CardFilesPage::show_into()
         lines << tr(
             "%n card(s) are left out: they cannot be read, or nobody has said of which cylinder they are.",
             nullptr, left);
+    show_doubtful(lines);
     if (workplace().read_only())
         lines << tr("This history can only be read.");
     ui_->into->setText(lines.join(QStringLiteral("\n")));
@@ -176,6 +179,60 @@ void CardFilesPage::show_into()
                                             .arg(day_text(reading->taken_at.utc))
                                       : tr("take in"));
     ui_->paper->set_can_put(reading && !workplace().read_only());
+}
+
+bool CardFilesPage::is_wanted(const FileTrace& trace) const
+{
+    return can_be_taken(trace) && (all_the_same_ || trace_doubt(trace).isEmpty());
+}
+
+/// Cards that only a second step takes in, and what speaks against each.
+void CardFilesPage::show_doubtful(QStringList& lines)
+{
+    int doubtful = 0;
+    for (const FileTrace& trace : traces_) {
+        const QString doubt = can_be_taken(trace) && engine() ? trace_doubt(trace) : QString();
+        if (doubt.isEmpty())
+            continue;
+        ++doubtful;
+        lines << tr("The card of %1 is doubtful: %2.")
+                     .arg(place_title(*engine(), Place::cylinder(*trace.cylinder), false), doubt);
+    }
+    if (doubtful > 0)
+        lines << (all_the_same_
+                      ? tr("%n doubtful card(s) go in all the same, as you said.", nullptr, doubtful)
+                      : tr("%n doubtful card(s) stay out unless you say that they go in all the same.",
+                           nullptr, doubtful));
+    ui_->doubtful_button->setVisible(doubtful > 0 && !all_the_same_ && !workplace().read_only());
+}
+
+std::vector<storage::NewCard> CardFilesPage::cards_to_take() const
+{
+    std::vector<storage::NewCard> cards;
+    for (const FileTrace& trace : traces_)
+        if (is_wanted(trace))
+            cards.push_back({*trace.cylinder, trace.trace.get()});
+    return cards;
+}
+
+/// What needs no name and no reason: the reading has another card of a cylinder, or has them all. True: it is
+/// said.
+bool CardFilesPage::says_already()
+{
+    const Reading* const reading = reading_in_hand_here();
+    if (!reading || !workplace().history())
+        return true;
+    const auto would = storage::CardStore(*workplace().history()).foresee(reading->id, cards_to_take());
+    if (!would) {
+        say(to_qstring(would.error().text()), true);
+        return true;
+    }
+    if (would.value().added > 0)
+        return false;
+    say(tr("Nothing is new: %n card(s) were there already.", nullptr, would.value().same) + QLatin1Char(' ') +
+        tr("The reading of %1 has %n card(s) in all.", nullptr, would.value().in_all)
+            .arg(day_text(reading->taken_at.utc)));
+    return true;
 }
 
 std::optional<storage::Signature> CardFilesPage::ask_signature(const QString& title, const QString& words,
@@ -190,6 +247,8 @@ std::optional<storage::Signature> CardFilesPage::ask_signature(const QString& ti
 
 void CardFilesPage::ask_and_take()
 {
+    if (says_already())
+        return;
     if (const auto by =
             ask_signature(tr("Take cards in"),
                           tr("The cards are kept with the reading for good. The history keeps who brought "
@@ -203,10 +262,9 @@ bool CardFilesPage::take_in(const storage::Signature& by)
     const Reading* const reading = reading_in_hand_here();
     if (!reading || !workplace().history())
         return false;
-    std::vector<storage::NewCard> cards;
-    for (const FileTrace& trace : traces_)
-        if (can_be_taken(trace))
-            cards.push_back({*trace.cylinder, trace.trace.get()});
+    const auto cards = cards_to_take();
+    if (cards.empty())
+        return false;
     const auto added = storage::CardStore(*workplace().history()).add_all(reading->id, cards, by);
     if (!added) {
         say(to_qstring(added.error().text()), true);
@@ -215,9 +273,13 @@ bool CardFilesPage::take_in(const storage::Signature& by)
     const QString day = day_text(reading->taken_at.utc);
     const auto kept =
         storage::save_trace_layout(*workplace().history(), to_std(workplace().selection().engine), layout_);
-    QString words = tr("%n card(s) are in the reading of %1 now.", nullptr, added.value().added).arg(day);
-    if (added.value().same > 0)
-        words += QLatin1Char(' ') + tr("%n were there already.", nullptr, added.value().same);
+    const int fresh = added.value().added, same = added.value().same;
+    QString words = fresh > 0 ? tr("%n card(s) are taken in.", nullptr, fresh)
+                              : tr("Nothing is new: %n card(s) were there already.", nullptr, same);
+    if (fresh > 0 && same > 0)
+        words += QLatin1Char(' ') + tr("%n were there already.", nullptr, same);
+    words += QLatin1Char(' ') +
+             tr("The reading of %1 has %n card(s) in all.", nullptr, added.value().in_all).arg(day);
     if (!kept)
         words += QLatin1Char(' ') + to_qstring(kept.error().text());
     forget_files();
@@ -226,8 +288,23 @@ bool CardFilesPage::take_in(const storage::Signature& by)
     return true;
 }
 
+/// Empty where the cylinder's mean indicated pressure is not read yet, or is of a card.
+QString CardFilesPage::read_value_stays(int cylinder) const
+{
+    const Reading* const reading = reading_in_hand_here();
+    const auto quantity_id = find_quantity("mean_indicated_pressure", Place::Kind::cylinder);
+    const Value* const value =
+        reading && quantity_id ? reading->find(*quantity_id, Place::cylinder(cylinder)) : nullptr;
+    if (!value || value->missing != MissingReason::none || value->origin == Origin::card)
+        return {};
+    return tr("The reading of %1 has a mean indicated pressure of %2 that somebody read, and it stays.")
+        .arg(day_text(reading->taken_at.utc), place_title(*engine(), value->place, false));
+}
+
 void CardFilesPage::ask_and_put(int cylinder, double mean_indicated_bar)
 {
+    if (const QString stays = read_value_stays(cylinder); !stays.isEmpty())
+        return say(stays, true);
     if (const auto by = ask_signature(tr("Put into the reading"),
                                       tr("The mean indicated pressure of a paper card becomes a value of the "
                                          "reading, marked as from a card. "

@@ -12,6 +12,7 @@
 #include <QLineEdit>
 #include <QPushButton>
 #include <QRegularExpression>
+#include <QSignalBlocker>
 
 #include <vector>
 
@@ -146,19 +147,17 @@ PaperCard::PaperCard(QWidget* parent)
     add(2, 1, tr("Stamped in"), spring_unit_);
     grid->addWidget(answer_, 6, 0, 1, 3);
     grid->addWidget(put_, 7, 0, 1, 3, Qt::AlignLeft);
-    for (QComboBox* box : {way_, length_unit_, spring_unit_})
-        connect(box, &QComboBox::currentIndexChanged, this, &PaperCard::show_answer);
+    for (QComboBox* box : {cylinder_, way_, length_unit_, spring_unit_})
+        connect(box, &QComboBox::currentIndexChanged, this, &PaperCard::take_input);
     for (QLineEdit* box : {area_, length_, heights_, spring_})
-        connect(box, &QLineEdit::textChanged, this, &PaperCard::show_answer);
-    connect(put_, &QPushButton::clicked, this, [this] {
-        if (bar_ && cylinder_->currentIndex() >= 0)
-            emit put_into_reading(cylinder_->currentIndex() + 1, *bar_);
-    });
+        connect(box, &QLineEdit::textChanged, this, &PaperCard::take_input);
+    connect(put_, &QPushButton::clicked, this, &PaperCard::put);
     show_answer();
 }
 
 void PaperCard::set_engine(const Engine& engine)
 {
+    const QSignalBlocker quiet(cylinder_); // nobody chose anything
     const int before = cylinder_->currentIndex();
     cylinder_->clear();
     for (int number = 1; number <= engine.cylinders; ++number)
@@ -170,6 +169,48 @@ void PaperCard::set_can_put(bool can)
 {
     can_put_ = can;
     show_answer();
+}
+
+void PaperCard::set_usual(FindUsual find)
+{
+    find_usual_ = std::move(find);
+    asked_ = false;
+    show_answer();
+}
+
+void PaperCard::take_input()
+{
+    asked_ = false;
+    show_answer();
+    emit changed();
+}
+
+void PaperCard::put()
+{
+    if (!bar_ || cylinder_->currentIndex() < 0)
+        return;
+    if (!asked_ && !question().isEmpty()) {
+        asked_ = true;
+        show_answer();
+        return;
+    }
+    emit put_into_reading(cylinder_->currentIndex() + 1, *bar_);
+}
+
+/// Empty where the result is one that this engine has, or where that is not known.
+QString PaperCard::question() const
+{
+    const auto usual = bar_ && find_usual_ && cylinder_->currentIndex() >= 0
+                           ? find_usual_(cylinder_->currentIndex() + 1)
+                           : std::nullopt;
+    if (!usual || !far_from(*usual, *bar_))
+        return {};
+    const QString words =
+        usual->of_baseline ? tr("The baseline of this engine has %1 bar at this load. Are spring, area and "
+                                "length written as they are?")
+                           : tr("The other cylinders of this reading have about %1 bar. Are spring, area and "
+                                "length written as they are?");
+    return words.arg(number_text(usual->bar, 1));
 }
 
 PaperCardText PaperCard::text() const
@@ -216,9 +257,13 @@ void PaperCard::show_answer()
     const auto worked = begun ? work_out(text()) : Result<PaperCardResult>(Problem{});
     if (worked)
         bar_ = worked.value().bar;
-    answer_->setText(!begun   ? QString()
-                     : worked ? worked.value().workings
-                              : to_qstring(worked.error().text()));
+    QStringList lines;
+    if (begun)
+        lines << (worked ? worked.value().workings : to_qstring(worked.error().text()));
+    if (const QString doubt = question(); !doubt.isEmpty())
+        lines << doubt;
+    answer_->setText(lines.join(QLatin1Char('\n')));
+    put_->setText(asked_ ? tr("it is right: put it into the reading") : tr("put into the reading"));
     answer_->setVisible(begun);
     put_->setEnabled(bar_.has_value() && can_put_);
 }

@@ -1,10 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/engine/engine.h"
+#include "core/card/usual_mean_indicated.h"
 
 #include <QWidget>
 
+#include <functional>
 #include <optional>
 
 class QComboBox;
@@ -40,15 +41,22 @@ public:
     explicit PaperCard(QWidget* parent = nullptr);
     void set_engine(const Engine& engine);
     void set_can_put(bool can);
+    using FindUsual = std::function<std::optional<indicator::UsualMeanIndicated>(int cylinder)>;
+    /// A result far from the usual one is put into the reading only when asked for twice.
+    void set_usual(FindUsual find);
     PaperCardText text() const;
     void set_text(const PaperCardText& text); ///< for tests
     QString answer() const;
 
 signals:
+    void changed(); ///< by a person: another card than the one before
     void put_into_reading(int cylinder, double mean_indicated_bar);
 
 private:
     void show_answer();
+    void take_input();
+    void put();
+    QString question() const;
 
     QComboBox* cylinder_;
     QComboBox* length_unit_;
@@ -62,6 +70,8 @@ private:
     QPushButton* put_;
     std::optional<double> bar_;
     bool can_put_ = false;
+    FindUsual find_usual_;
+    bool asked_ = false; ///< the question was seen, and the button pressed once
 };
 
 } // namespace evenstroke

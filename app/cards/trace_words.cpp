@@ -5,7 +5,10 @@
 
 #include <QCoreApplication>
 
+#include <algorithm>
+#include <cmath>
 #include <map>
+#include <string_view>
 
 namespace evenstroke {
 namespace {
@@ -22,7 +25,47 @@ QString estimate_text(const std::optional<indicator::Estimate>& estimate, int de
     return estimate ? with_uncertainty(estimate->value, estimate->half_width, decimals) : QString();
 }
 
+bool remarks(const indicator::Evaluation& card, std::string_view code)
+{
+    return std::any_of(card.remarks.begin(), card.remarks.end(),
+                       [code](const indicator::Remark& remark) { return remark.code == code; });
+}
+
+/// An engine without a compression ratio gives no card's dead centre: that is no fault of the card.
+bool has_no_dead_centre(const indicator::Evaluation& card)
+{
+    return remarks(card, "tdc_not_determined") || remarks(card, "wrong_cylinder_or_mark") ||
+           !card[CardResult::mean_indicated_pressure] ||
+           (remarks(card, "tdc_assumed") && !remarks(card, "compression_ratio_not_known"));
+}
+
+/// Standard deviation of the cycles' mean indicated pressure in per cent; empty where that is usual.
+std::optional<double> absurd_scatter(const indicator::Evaluation& card)
+{
+    constexpr double most = 20.0; // per cent; sound cycles differ by one or two (common practice, no source)
+    if (!card.spread)
+        return std::nullopt;
+    const auto& result = card[CardResult::mean_indicated_pressure];
+    const double mean = std::abs(result ? result->value : card.plain_mean_indicated);
+    if (!(mean > 0.0))
+        return std::nullopt;
+    const double share = 100.0 * card.spread->mean_indicated / mean;
+    return share > most ? std::optional(share) : std::nullopt;
+}
+
 } // namespace
+
+QString trace_doubt(const FileTrace& trace)
+{
+    if (!trace.card)
+        return {};
+    if (const auto scatter = absurd_scatter(*trace.card))
+        return tr_("its cycles scatter by %1 % in mean indicated pressure, which no engine's do")
+            .arg(whole_text(*scatter));
+    if (has_no_dead_centre(*trace.card))
+        return tr_("its dead centre is not determined");
+    return {};
+}
 
 QString trace_results_text(const FileTrace& trace)
 {
@@ -48,6 +91,10 @@ QString trace_sentences(const FileTrace& trace)
             lines << tr_("Dead centre lies %1° from where the file has it.").arg(late);
         for (const indicator::Remark& remark : trace.card->remarks)
             lines << to_qstring(remark.text);
+        lines << tr_(
+            "This is the card taken by itself. The page Cards also weighs in what the other cylinders' "
+            "and the healthy cards say of dead centre: where the two differ, its numbers are the surer "
+            "ones.");
     }
     if (trace.missing > 0)
         lines << tr_("%n sample(s) are missing.", trace.missing);

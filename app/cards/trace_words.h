@@ -15,6 +15,10 @@ QString trace_sentences(const FileTrace& trace);
 /// "720 samples" or "20 cycles, 72 000 samples"; empty where there is no trace.
 QString trace_size_text(const FileTrace& trace);
 
+/// Why a card should not be kept without a second look: its dead centre is not determined, or its cycles
+/// scatter absurdly. Empty where nothing speaks against it.
+QString trace_doubt(const FileTrace& trace);
+
 /// Why traces cannot be taken in as they are: two of one cylinder. Empty where they can.
 QString cylinders_twice(const std::vector<FileTrace>& traces, const Engine& engine);
 /// Whether a trace may be kept: it was evaluated, or only the engine's description lacks what that takes.

@@ -31,13 +31,15 @@ std::optional<double> middle_of_the_others(const Engine& engine, const Reading& 
 
 } // namespace
 
-std::optional<UsualMeanIndicated> usual_mean_indicated(const Engine& engine, const Reading& reading, int cylinder)
+std::optional<UsualMeanIndicated> usual_mean_indicated(const Engine& engine, const Reading& reading,
+                                                       int cylinder)
 {
     const evenstroke::Conditions conditions = find_conditions(engine, reading);
     if (conditions.load_percent) {
         const Baseline baseline(engine);
         const BaselineCurve* const curve = baseline.curve(conditions.mode, quantity_name);
-        if (const auto usual = curve ? curve->at(*conditions.load_percent) : std::nullopt; usual && *usual > 0.0)
+        if (const auto usual = curve ? curve->at(*conditions.load_percent) : std::nullopt;
+            usual && *usual > 0.0)
             return UsualMeanIndicated{*usual, true};
     }
     if (const auto usual = middle_of_the_others(engine, reading, cylinder, conditions); usual && *usual > 0.0)

@@ -16,10 +16,11 @@ struct UsualMeanIndicated
 };
 
 /// Nothing where neither the baseline speaks at this load nor another cylinder was read.
-std::optional<UsualMeanIndicated> usual_mean_indicated(const Engine& engine, const Reading& reading, int cylinder);
+std::optional<UsualMeanIndicated> usual_mean_indicated(const Engine& engine, const Reading& reading,
+                                                       int cylinder);
 
-/// Below half or above twice the usual: a spring or an area that was written wrong, and no cylinder that still
-/// runs with the others (common practice, no source).
+/// Below half or above twice the usual: a spring or an area that was written wrong, and no cylinder that
+/// still runs with the others (common practice, no source).
 bool far_from(const UsualMeanIndicated& usual, double bar);
 
 } // namespace evenstroke::indicator

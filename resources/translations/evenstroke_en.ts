@@ -251,10 +251,38 @@
         </translation>
     </message>
     <message numerus="yes">
-        <source>%n card(s) are in the reading of %1 now.</source>
+        <source>%n card(s) are taken in.</source>
         <translation>
-            <numerusform>1 card is in the reading of %1 now.</numerusform>
-            <numerusform>%n cards are in the reading of %1 now.</numerusform>
+            <numerusform>1 card is taken in.</numerusform>
+            <numerusform>%n cards are taken in.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>The reading of %1 has %n card(s) in all.</source>
+        <translation>
+            <numerusform>The reading of %1 has 1 card in all.</numerusform>
+            <numerusform>The reading of %1 has %n cards in all.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>Nothing is new: %n card(s) were there already.</source>
+        <translation>
+            <numerusform>Nothing is new: the card was there already.</numerusform>
+            <numerusform>Nothing is new: all %n cards were there already.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n doubtful card(s) go in all the same, as you said.</source>
+        <translation>
+            <numerusform>1 doubtful card goes in all the same, as you said.</numerusform>
+            <numerusform>%n doubtful cards go in all the same, as you said.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
+        <source>%n doubtful card(s) stay out unless you say that they go in all the same.</source>
+        <translation>
+            <numerusform>1 doubtful card stays out unless you say that it goes in all the same.</numerusform>
+            <numerusform>%n doubtful cards stay out unless you say that they go in all the same.</numerusform>
         </translation>
     </message>
     <message numerus="yes">

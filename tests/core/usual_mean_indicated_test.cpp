@@ -31,12 +31,14 @@ TEST(UsualMeanIndicated, IsTheBaselinesWhereItSpeaksElseTheOtherCylinders)
     ASSERT_TRUE(others.has_value());
     EXPECT_FALSE(others->of_baseline);
     EXPECT_NEAR(others->bar, 14.2, 1e-9) << "the middle of cylinders 1 to 3, without its own";
-    engine.baseline = {{50.0, "", {{"mean_indicated_pressure", 12.0}}}, {75.0, "", {{"mean_indicated_pressure", 16.0}}}};
+    engine.baseline = {{50.0, "", {{"mean_indicated_pressure", 12.0}}},
+                       {75.0, "", {{"mean_indicated_pressure", 16.0}}}};
     const auto usual = usual_mean_indicated(engine, reading, 4);
     ASSERT_TRUE(usual.has_value());
     EXPECT_TRUE(usual->of_baseline);
     EXPECT_NEAR(usual->bar, 16.0, 1e-9) << "a point of the curve";
-    EXPECT_FALSE(usual_mean_indicated(engine, at_load(20.0).done(), 4).has_value()) << "the curve begins at 50 %";
+    EXPECT_FALSE(usual_mean_indicated(engine, at_load(20.0).done(), 4).has_value())
+        << "the curve begins at 50 %";
     EXPECT_FALSE(usual_mean_indicated(six_cylinders(), at_load(75.0).done(), 4).has_value());
 }
 

@@ -152,8 +152,10 @@ TEST_F(Cards, OfAReadingAreAddedTogetherOrNotAtAll)
     EXPECT_EQ(foreseen.added, 1);
     EXPECT_EQ(foreseen.same, 1);
     EXPECT_EQ(foreseen.in_all, 3) << "two are kept";
-    EXPECT_FALSE(store.foresee(reading, {{3, &first}, {1, &second}}).has_value()) << "another card of cylinder 1";
-    EXPECT_EQ(value_of_result(store.add_all(reading, {{1, &first}}, chief_)).in_all, 2) << "nothing came in by foreseeing";
+    EXPECT_FALSE(store.foresee(reading, {{3, &first}, {1, &second}}).has_value())
+        << "another card of cylinder 1";
+    EXPECT_EQ(value_of_result(store.add_all(reading, {{1, &first}}, chief_)).in_all, 2)
+        << "nothing came in by foreseeing";
     EXPECT_FALSE(store.add_all(reading, {{5, &first}}, {"", ""}).has_value());
     EXPECT_EQ(value_of_result(store.list(engine)).size(), 2U);
     EXPECT_TRUE(value_of_result(verify(*history)).sound());
