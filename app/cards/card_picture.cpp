@@ -319,7 +319,7 @@ QString card_view_name(CardView view)
     case CardView::heat: return tr_("heat");
     case CardView::temperature: break;
     }
-    return tr_("temperature");
+    return tr_("gas");
 }
 
 CardPicture make_card_picture(const CardsInHand& cards, int cylinder, CardView view)

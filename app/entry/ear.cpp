@@ -88,9 +88,11 @@ void Ear::fit()
     for (const auto& [part, wanted] : least_first) {
         layout()->invalidate();
         if (layout()->totalHeightForWidth(width()) <= height())
-            return;
+            break;
         part->hide();
     }
+    layout()->invalidate(); // so that the parts take their new places at once
+    layout()->activate();
 }
 
 QString Ear::newest() const

@@ -27,7 +27,7 @@ std::optional<std::size_t> surest(const SubjectSeries& series, const ChangeWindo
     std::optional<std::size_t> best;
     const auto sureness = [&](std::size_t k) { return std::abs(window.changes[k]->amount) / window.changes[k]->error; };
     for (std::size_t k = 0; k < series.quantities.size(); ++k)
-        if (window.changes[k] && !series.quantities[k].values.empty() && !series.quantities[k].gauge_of_engine &&
+        if (window.changes[k] && !fault_quantities()[k].read_as.empty() && !series.quantities[k].gauge_of_engine &&
             (!best || sureness(k) > sureness(*best)))
             best = k;
     return best;

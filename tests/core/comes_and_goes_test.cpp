@@ -20,10 +20,12 @@ template <typename Rule> SubjectSeries series_of(std::mt19937_64& source, Rule a
     SubjectSeries series;
     series.subject = Place::cylinder(2);
     series.quantities.resize(fault_quantities().size());
+    for (QuantitySeries& not_read : series.quantities)
+        not_read.values.resize(readings);
     QuantitySeries& read = series.quantities[*find_fault_quantity("mean_indicated_pressure")];
     for (std::size_t i = 0; i < readings; ++i) {
         series.months.push_back(static_cast<double>(i));
-        read.values.push_back(scatter(source) + (i >= onset ? amount_at(i - onset) : 0.0));
+        read.values[i] = scatter(source) + (i >= onset ? amount_at(i - onset) : 0.0);
     }
     return series;
 }
@@ -64,9 +66,10 @@ TEST(ComesAndGoes, StandsInTheHistoryOfTheExplanation)
 {
     EngineRecord record = example_record(readings);
     for (std::size_t i = onset; i < readings; ++i) {
-        const bool off = i % 2 == 0;
-        move_value(record.readings[i], "mean_indicated_pressure", Place::cylinder(2), off ? -3.0 : 0.0);
-        move_value(record.readings[i], "exhaust_temperature", Place::cylinder(2), off ? -40.0 : 0.0);
+        const bool off = (i - onset) % 4 != 2; // a needle that sticks now and then
+        move_value(record.readings[i], "mean_indicated_pressure", Place::cylinder(2), off ? -1.6 : 0.0);
+        move_value(record.readings[i], "maximum_pressure", Place::cylinder(2), off ? -5.0 : 0.0);
+        move_value(record.readings[i], "exhaust_temperature", Place::cylinder(2), off ? -20.0 : 0.0);
     }
     const Explanation explanation = explained(record);
     ASSERT_FALSE(explanation.subjects.empty());
@@ -100,9 +103,8 @@ TEST(ComesAndGoes, SaysNothingOfTooFewReadings)
     std::mt19937_64 source(1);
     SubjectSeries series = series_of(source, [](std::size_t) { return -7.0; });
     for (QuantitySeries& of : series.quantities)
-        if (!of.values.empty())
-            for (std::size_t i = 3; i < onset; ++i)
-                of.values[i].reset();
+        for (std::size_t i = 3; i < onset; ++i)
+            of.values[i].reset();
     ChangeWindow window;
     window.onset = onset;
     window.changes.resize(series.quantities.size());

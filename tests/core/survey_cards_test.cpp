@@ -71,7 +71,7 @@ TEST(SurveyCards, OnlyCylindersThatDifferAreDrawn)
     const std::string text = text_with();
     EXPECT_TRUE(contains(text, "Cylinder 2 (bar from the healthy card)"));
     EXPECT_FALSE(contains(text, "Cylinder 1 (bar from the healthy card)"));
-    EXPECT_TRUE(contains(text, "As the healthy card within the uncertainty: cylinder 1."));
+    EXPECT_TRUE(contains(text, "No part of the cycle differs clearly from the healthy card (three standard deviations): cylinder 1."));
     EXPECT_TRUE(contains(text, "Charge leaks, so this test says."));
 }
 
