@@ -75,7 +75,10 @@ int note_height(const ReviewModel& model, int row, const ReviewColumns& columns,
         return 0;
     const QFontMetrics metrics(type(TypeSize::label));
     const int mark = has_mark(line->level) ? mark_side + 6 : 0;
-    const int in_row = columns.between(first_column_of_verdict(*line), ReviewModel::column_count) - verdict_margins - mark;
+    const int first = first_column_of_verdict(*line);
+    // The columns may be wider than the view, which shows the first of them.
+    const int seen = std::min(columns.between(first, ReviewModel::column_count), room - columns.between(0, first));
+    const int in_row = seen - verdict_margins - mark;
     if (metrics.horizontalAdvance(words) <= in_row)
         return 0;
     const QRect under = note_room(room).adjusted(mark, 0, 0, 0);
