@@ -2,6 +2,7 @@
 #include "core/trend/scan.h"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 
 namespace evenstroke::drift {
@@ -51,23 +52,32 @@ RunningSums::Sums RunningSums::between(std::size_t first, std::size_t last) cons
 
 namespace {
 
-/// Sums of one fit: over the segment, and of the shape where it is not 0.
-std::optional<Fit> fit(const RunningSums::Sums& all, double shape_sum, double shape_squares,
-                       double shape_values, double noise)
+/// A shape's sums: over the readings where it is not 0.
+struct ShapeSums
 {
-    const double shape_squared = shape_squares - shape_sum * shape_sum / all.count;
-    // Readings of one day make a ramp flat; the bound only has to keep rounding away.
-    if (!(shape_squared > 1e-9 * (1.0 + shape_squares)))
-        return std::nullopt;
-    return Fit{shape_squared, (shape_values - shape_sum * all.value / all.count) / noise};
+    double sum, squares, values;
+};
+
+ShapeSums step_sums(const RunningSums::Sums& after) { return {after.count, after.count, after.value}; }
+
+ShapeSums ramp_sums(const RunningSums::Sums& after, double from)
+{
+    return {after.time - after.count * from, after.time_squared - from * (2.0 * after.time - after.count * from),
+            after.value_time - from * after.value};
 }
 
-std::optional<Fit> ramp(const RunningSums::Sums& all, const RunningSums::Sums& after, double noise,
-                        double from)
+Fit fit_shape(const RunningSums::Sums& all, const ShapeSums& shape, double noise)
 {
-    return fit(all, after.time - after.count * from,
-               after.time_squared - from * (2.0 * after.time - after.count * from),
-               after.value_time - from * after.value, noise);
+    return {shape.squares - shape.sum * shape.sum / all.count, (shape.values - shape.sum * all.value / all.count) / noise};
+}
+
+/// Readings of one day make a ramp flat; the bound only has to keep rounding away.
+bool is_flat(double shape_squared, double squares) { return !(shape_squared > 1e-9 * (1.0 + squares)); }
+
+std::optional<Fit> unless_flat(const RunningSums::Sums& all, const ShapeSums& shape, double noise)
+{
+    const Fit found = fit_shape(all, shape, noise);
+    return is_flat(found.shape_squared, shape.squares) ? std::nullopt : std::optional(found);
 }
 
 bool enough(const RunningSums& sums, const RunningSums::Sums& all, const RunningSums::Sums& after,
@@ -85,7 +95,7 @@ std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::siz
     const RunningSums::Sums all = sums.between(first, last), after = sums.between(onset, last);
     if (!enough(sums, all, after, last))
         return std::nullopt;
-    return fit(all, after.count, after.count, after.value, noise);
+    return unless_flat(all, step_sums(after), noise);
 }
 
 std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last,
@@ -94,7 +104,7 @@ std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::siz
     const RunningSums::Sums all = sums.between(first, last), after = sums.between(onset, last);
     if (!enough(sums, all, after, last))
         return std::nullopt;
-    return ramp(all, after, noise, from);
+    return unless_flat(all, ramp_sums(after, from), noise);
 }
 
 void ScanResult::consider(double new_strength, double prior, std::size_t new_candidate, std::size_t new_onset,
@@ -114,65 +124,89 @@ void ScanResult::consider(double new_strength, double prior, std::size_t new_can
 
 namespace {
 
-/// Fits all series at one onset after the other; the sums over the whole segments stay the same.
-class RowFitter
+/// Fits of all series at all onsets in the window; the sums over the whole segments stay the same.
+class OnsetFits
 {
 public:
-    RowFitter(std::span<const ScanSeries> series, std::size_t last) : series_(series), last_(last)
+    OnsetFits(std::span<const ScanSeries> series, std::size_t last) : series_(series), last_(last)
     {
+        first_onset_ = last;
         for (const ScanSeries& one : series) {
             const RunningSums::Sums all = one.sums->between(one.first, last);
             all_.push_back(all);
             constexpr double needed = static_cast<double>(readings_before_onset + readings_after_onset);
             possible_ = possible_ || (one.sums->has(last) && all.count >= needed);
+            first_onset_ = std::min(first_onset_, one.first);
         }
-        for (FitRow* row : {&steps, &ramps})
-            row->entries.resize(series.size());
+        first_onset_ = std::max(first_onset_ + readings_before_onset, last > onset_window ? last - onset_window : 0);
+        onsets_ = last > first_onset_ ? last - first_onset_ : 0;
     }
 
     bool possible() const { return possible_; }
+    std::size_t onsets() const { return onsets_; }
+    std::size_t first_onset() const { return first_onset_; }
 
-    /// @param from time of the reading before the onset
-    void fit(std::size_t onset, double from)
+    void fit_all(std::span<const double> months)
     {
-        steps.taken = ramps.taken = 0;
-        for (std::size_t k = 0; k < series_.size(); ++k) {
-            const ScanSeries& one = series_[k];
-            steps.entries[k].taken = ramps.entries[k].taken = false;
-            if (onset <= one.first || !one.sums->has(last_))
-                continue;
-            const RunningSums::Sums after = one.sums->before(last_ + 1) - one.sums->before(onset);
-            const RunningSums::Sums& all = all_[k];
-            if (all.count - after.count < static_cast<double>(readings_before_onset) ||
-                after.count < static_cast<double>(readings_after_onset))
-                continue;
-            enter(steps, k, drift::fit(all, after.count, after.count, after.value, one.noise));
-            enter(ramps, k, ramp(all, after, one.noise, from));
-        }
+        entries_.resize(2 * onsets_ * series_.size());
+        alike_.fill(true);
+        for (std::size_t k = 0; k < series_.size(); ++k)
+            fit(k, months);
+    }
+    /// @param i  of the onset, from the first on
+    FitRow row(std::size_t i, Shape shape) const
+    {
+        const std::size_t at = place(i, shape);
+        return {std::span(entries_.data() + at * series_.size(), series_.size()), alike_[at]};
     }
 
-    FitRow steps, ramps;
-
 private:
-    static void enter(FitRow& row, std::size_t k, const std::optional<Fit>& found)
+    static std::size_t place(std::size_t i, Shape shape) { return 2 * i + (shape == Shape::step ? 0 : 1); }
+
+    /// Over all onsets at once, number by number, which a processor does several of together.
+    void fit(std::size_t k, std::span<const double> months)
     {
-        if (!found)
-            return;
-        const double root = std::sqrt(found->shape_squared);
-        row.entries[k] = {true, root, found->projection / root};
-        ++row.taken;
+        const ScanSeries& one = series_[k];
+        std::array<double, onset_window> root[2]{}, strength[2]{}; // of step and ramp
+        std::array<bool, onset_window> taken[2]{};
+        if (one.sums->has(last_)) {
+            const RunningSums::Sums& all = all_[k];
+            const RunningSums::Sums& end = one.sums->before(last_ + 1);
+            for (std::size_t i = 0; i < onsets_; ++i) {
+                const std::size_t onset = first_onset_ + i;
+                const RunningSums::Sums after = end - one.sums->before(onset);
+                const ShapeSums shapes[2] = {step_sums(after), ramp_sums(after, months[onset - 1])};
+                const bool enough = onset > one.first && all.count - after.count >= static_cast<double>(readings_before_onset) &&
+                                    after.count >= static_cast<double>(readings_after_onset);
+                for (std::size_t s = 0; s < 2; ++s) {
+                    const Fit found = fit_shape(all, shapes[s], one.noise);
+                    taken[s][i] = enough && !is_flat(found.shape_squared, shapes[s].squares);
+                    root[s][i] = std::sqrt(found.shape_squared);
+                    strength[s][i] = found.projection / root[s][i];
+                }
+            }
+        }
+        for (std::size_t s = 0; s < 2; ++s)
+            for (std::size_t i = 0; i < onsets_; ++i) {
+                FitEntry* const row = entries_.data() + (2 * i + s) * series_.size();
+                if (taken[s][i])
+                    row[k] = {true, root[s][i], strength[s][i]};
+                alike_[2 * i + s] = alike_[2 * i + s] && taken[s][i] && root[s][i] == row[0].root;
+            }
     }
 
     std::span<const ScanSeries> series_;
-    std::size_t last_;
+    std::size_t last_, first_onset_ = 0, onsets_ = 0;
     std::vector<RunningSums::Sums> all_;
+    std::vector<FitEntry> entries_; ///< by onset, then shape, then quantity
+    std::array<bool, 2 * onset_window> alike_{};
     bool possible_ = false;
 };
 
-/// @param any_change u' C^-1 u of these fits. No signature can exceed its root (Cauchy-Schwarz), so most
-/// onsets need no look at them.
-void weigh_candidates(const FitRow& fits, const SignatureMatcher& matcher, double any_change,
-                      std::size_t onset, Shape shape, ScanResult& result)
+/// What is tried at one onset with one shape. A chi-square of any change below what is to be beaten leaves no room for a
+/// signature (Cauchy-Schwarz).
+void weigh(const FitRow& fits, const SignatureMatcher& matcher, double any_change, std::size_t onset, Shape shape,
+           ScanResult& result)
 {
     for (std::size_t k = 0; k < fits.entries.size(); ++k)
         if (fits.entries[k].taken)
@@ -193,26 +227,21 @@ ScanResult scan(std::span<const ScanSeries> series, const SignatureMatcher& matc
                 std::span<const double> months, std::size_t reading)
 {
     ScanResult result;
-    RowFitter fitter(series, reading);
-    if (!fitter.possible())
+    OnsetFits fits(series, reading);
+    if (!fits.possible())
         return result;
-    std::size_t first = reading;
-    for (const ScanSeries& one : series)
-        first = std::min(first, one.first);
-    const std::size_t earliest =
-        std::max(first + readings_before_onset, reading > onset_window ? reading - onset_window : 0);
-    for (std::size_t onset = earliest; onset < reading; ++onset) {
-        fitter.fit(onset, months[onset - 1]);
-        if (fitter.steps.taken == 0)
-            continue;
-        const double any_step = matcher.any_change(fitter.steps);
-        weigh_candidates(fitter.steps, matcher, any_step, onset, Shape::step, result);
-        if (any_step > result.any_change) {
-            result.any_change = any_step;
-            result.any_change_onset = onset;
+    fits.fit_all(months);
+    for (std::size_t i = 0; i < fits.onsets(); ++i)
+        for (const Shape shape : {Shape::step, Shape::ramp}) {
+            const std::size_t onset = fits.first_onset() + i;
+            const FitRow row = fits.row(i, shape);
+            const double any_change = matcher.any_change(row);
+            weigh(row, matcher, any_change, onset, shape, result);
+            if (shape == Shape::step && any_change > result.any_change) {
+                result.any_change = any_change;
+                result.any_change_onset = onset;
+            }
         }
-        weigh_candidates(fitter.ramps, matcher, matcher.any_change(fitter.ramps), onset, Shape::ramp, result);
-    }
     return result;
 }
 

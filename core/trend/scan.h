@@ -63,17 +63,20 @@ std::optional<Fit> fit_step(const RunningSums& sums, std::size_t first, std::siz
 std::optional<Fit> fit_ramp(const RunningSums& sums, std::size_t first, std::size_t onset, std::size_t last,
                             double noise, double from);
 
-/// The fits of all quantities at one onset and shape.
+/// One quantity's fit at one onset and shape; all zero where there is none.
+struct FitEntry
+{
+    bool taken = false;
+    double root = 0.0;     ///< square root of gg
+    double strength = 0.0; ///< u = gy / root
+};
+/// Those of all quantities, in the order of the channels.
 struct FitRow
 {
-    struct Entry
-    {
-        bool taken = false;
-        double root = 0.0;     ///< square root of gg
-        double strength = 0.0; ///< u = gy / root
-    };
-    std::vector<Entry> entries;
-    std::size_t taken = 0;
+    explicit FitRow(std::span<const FitEntry> fits);
+    FitRow(std::span<const FitEntry> fits, bool are_alike) : entries(fits), alike(are_alike) {}
+    std::span<const FitEntry> entries;
+    bool alike = true; ///< all are taken with one root, as where every quantity was read every time
 };
 
 /// Fault signatures and correlations for the quantities of one engine.
@@ -109,6 +112,7 @@ private:
         std::vector<Term> variance;                          ///< w C w
         std::vector<std::size_t> named;                      ///< channels that the signature names
         double prior = 0.0;                                  ///< twice the log of its weight
+        double alike_deviation = 0.0;                        ///< square root of w C w where all roots are 1
     };
     Prepared prepare(const Signature& signature, std::span<const std::string> quantities,
                      const std::vector<double>& inverse) const;

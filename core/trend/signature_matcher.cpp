@@ -63,7 +63,7 @@ SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature,
                                                      const std::vector<double>& inverse) const
 {
     const std::size_t n = quantities.size();
-    Prepared prepared{&signature, {}, {}, {}, 2.0 * std::log(signature.weight)};
+    Prepared prepared{&signature, {}, {}, {}, 2.0 * std::log(signature.weight), 0.0};
     std::vector<double> weight(n, 0.0);
     for (const Signature::Move& move : signature.moves) {
         const auto found = std::find(quantities.begin(), quantities.end(), move.quantity);
@@ -84,24 +84,40 @@ SignatureMatcher::Prepared SignatureMatcher::prepare(const Signature& signature,
                 term != 0.0)
                 prepared.variance.push_back({k, l, term});
     }
+    double variance = 0.0;
+    for (const Term& term : prepared.variance)
+        variance += term.weight;
+    prepared.alike_deviation = std::sqrt(std::max(variance, 0.0));
     return prepared;
+}
+
+FitRow::FitRow(std::span<const FitEntry> fits) : entries(fits)
+{
+    for (const FitEntry& entry : fits)
+        alike = alike && entry.taken && entry.root == fits.front().root;
 }
 
 double SignatureMatcher::strength(std::size_t index, const FitRow& fits, double worth_more) const
 {
     const Prepared& signature = signatures_[index];
+    if (fits.alike) { // the root is in the sum and in its deviation
+        double sum = 0.0;
+        for (const auto& [k, weight] : signature.weights)
+            sum += weight * fits.entries[k].strength;
+        if (signature.weights.size() < 2 || sum <= 0.0 || !(signature.alike_deviation > 0.0))
+            return 0.0;
+        return sum / signature.alike_deviation;
+    }
     double sum = 0.0, variance = 0.0;
     std::size_t taking_part = 0;
-    for (const auto& [k, weight] : signature.weights)
-        if (const FitRow::Entry& entry = fits.entries[k]; entry.taken) {
-            ++taking_part;
-            sum += weight * entry.root * entry.strength;
-        }
+    for (const auto& [k, weight] : signature.weights) {
+        taking_part += fits.entries[k].taken ? 1 : 0;
+        sum += weight * fits.entries[k].root * fits.entries[k].strength;
+    }
     if (taking_part < 2 || sum <= 0.0)
         return 0.0;
     for (const Term& term : signature.variance)
-        if (fits.entries[term.row].taken && fits.entries[term.column].taken)
-            variance += term.weight * fits.entries[term.row].root * fits.entries[term.column].root;
+        variance += term.weight * fits.entries[term.row].root * fits.entries[term.column].root;
     constexpr double rounding = 1e-9; // a bound that is met to the last digits is left to the caller
     if (!(variance > 0.0) || sum * sum < (1.0 - rounding) * worth_more * variance)
         return 0.0;
@@ -112,8 +128,7 @@ double SignatureMatcher::any_change(const FitRow& fits) const
 {
     double sum = 0.0;
     for (const Term& term : inverse_terms_)
-        if (fits.entries[term.row].taken && fits.entries[term.column].taken)
-            sum += term.weight * fits.entries[term.row].strength * fits.entries[term.column].strength;
+        sum += term.weight * fits.entries[term.row].strength * fits.entries[term.column].strength;
     return sum;
 }
 

@@ -150,18 +150,23 @@ TEST(WorkedSignatures, AgreeWithTheFigures)
                                          "exhaust_temperature",     "jacket_outlet_temperature", "piston_coolant_outlet_temperature",
                                          "fuel_index"};
     const SignatureMatcher matcher(names);
-    FitRow fits;
+    std::vector<FitEntry> fits;
     for (const double strength : {0.0, -2.0, -3.0, 1.5, 0.0, 0.0, 0.0})
-        fits.entries.push_back({true, 2.0, strength}); // all gg are 4
-    fits.taken = names.size();
+        fits.push_back({true, 2.0, strength}); // all gg are 4
+    const FitRow row(fits);
+    EXPECT_TRUE(row.alike);
     ASSERT_EQ(matcher.count(), 3U);
     EXPECT_EQ(matcher.signature(0).name, "blow_by");
-    EXPECT_NEAR(matcher.strength(0, fits), 3.468819, 5e-7);
+    EXPECT_NEAR(matcher.strength(0, row), 3.468819, 5e-7);
     EXPECT_EQ(matcher.signature(1).name, "fuel_nozzle");
-    EXPECT_NEAR(matcher.strength(1, fits), 1.669584, 5e-7);
+    EXPECT_NEAR(matcher.strength(1, row), 1.669584, 5e-7);
     EXPECT_EQ(matcher.signature(2).name, "fuel_pump");
-    EXPECT_NEAR(matcher.strength(2, fits), 0.348529, 5e-7);
-    EXPECT_NEAR(matcher.any_change(fits), 12.103333, 5e-7);
+    EXPECT_NEAR(matcher.strength(2, row), 0.348529, 5e-7);
+    EXPECT_NEAR(matcher.any_change(row), 12.103333, 5e-7);
+    FitRow long_way(fits); // as where the roots differ
+    long_way.alike = false;
+    for (std::size_t s = 0; s < matcher.count(); ++s)
+        EXPECT_NEAR(matcher.strength(s, long_way), matcher.strength(s, row), 1e-12);
 }
 
 TEST(WorkedSignatures, NoSignatureExceedsTheRootOfAnyChange)
@@ -171,14 +176,13 @@ TEST(WorkedSignatures, NoSignatureExceedsTheRootOfAnyChange)
                                          "exhaust_temperature"};
     const SignatureMatcher matcher(names);
     for (int missing = -1; missing < 4; ++missing) {
-        FitRow fits;
+        std::vector<FitEntry> fits;
         for (const double strength : {-1.3, -2.4, -2.9, 2.2})
-            fits.entries.push_back({true, 1.7, strength});
+            fits.push_back({true, 1.7, strength});
         if (missing >= 0)
-            fits.entries[static_cast<std::size_t>(missing)] = {};
-        fits.taken = missing < 0 ? 4 : 3;
+            fits[static_cast<std::size_t>(missing)] = {};
         for (std::size_t s = 0; s < matcher.count(); ++s)
-            EXPECT_LE(matcher.strength(s, fits), std::sqrt(matcher.any_change(fits)) + 1e-12);
+            EXPECT_LE(matcher.strength(s, FitRow(fits)), std::sqrt(matcher.any_change(FitRow(fits))) + 1e-12);
     }
 }
 
