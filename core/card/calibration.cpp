@@ -15,19 +15,26 @@ constexpr Unknowns quotient_step{0.02, 0.02, 0.05, 1.0, 0.002, 2.0, 0.02};
 constexpr Unknowns largest_step{1.0, 3.0, 0.5, 1e9, 0.02, 20.0, 0.3};
 constexpr Unknowns small_enough{1e-4, 1e-4, 1e-3, 1e9, 1e-5, 0.02, 1e-4};
 
+/// Where the crank gear stands at every sample, with dead centre as of x.
+void follow_crank(const Cylinder& cylinder, const CompressionWindow& window, const Unknowns& x, std::vector<CrankMotion>& crank)
+{
+    crank.clear();
+    for (const double angle : window.angle)
+        crank.push_back(cylinder.gear.motion((angle - x[offset]) * radians_per_degree));
+}
+
 /// f of every sample, without the constant.
 void balance_of(const Cylinder& cylinder, const WallLoss& walls, const CompressionWindow& window, const Unknowns& x,
-                std::vector<double>& f)
+                const std::vector<CrankMotion>& crank, std::vector<double>& f)
 {
     const double clearance = cylinder.clearance(cylinder.compression_ratio * (1.0 + x[ratio]));
     const UnfiredBalance balance(cylinder, walls, clearance, trapped_mass(cylinder, window.closing_pressure, x), x[wall_loss]);
     f.resize(window.angle.size());
     double sum = 0.0, before = 0.0;
     for (std::size_t i = 0; i < f.size(); ++i) {
-        const double angle = window.angle[i] - x[offset];
-        const double pressure = std::max(window.pressure[i] - zero_at(cylinder, x, angle), lowest_pressure);
+        const double pressure = std::max(window.pressure[i] - zero_at(cylinder, x, window.angle[i] - x[offset]), lowest_pressure);
         const double log_pressure = std::log(pressure);
-        const double slope = balance.slope(angle, pressure, log_pressure).per_degree;
+        const double slope = balance.slope(crank[i], pressure, log_pressure).per_degree;
         if (i > 0)
             sum += 0.5 * (slope + before) * (window.angle[i] - window.angle[i - 1]);
         before = slope;
@@ -47,6 +54,7 @@ public:
 private:
     bool free(std::size_t unknown) const { return !beliefs_[unknown].held; }
     bool counts(std::size_t unknown) const { return free(unknown) || beliefs_[unknown].spread.value_or(0.0) > 0.0; }
+    void find_balance(const Unknowns& x);
     void find_slopes(const Unknowns& x, bool held_too);
     void find_weights(const Unknowns& x);
     std::optional<LeastSquares<unknown_count>::Solution> solve(const Unknowns& x) const;
@@ -56,9 +64,16 @@ private:
     const WallLoss& walls_;
     const CompressionWindow& window_;
     const Beliefs& beliefs_;
+    std::vector<CrankMotion> crank_, moved_crank_;
     std::vector<double> f_, moved_, weight_;
     std::array<std::vector<double>, unknown_count> slope_; // of f, by unknown
 };
+
+void Fit::find_balance(const Unknowns& x)
+{
+    follow_crank(cylinder_, window_, x, crank_);
+    balance_of(cylinder_, walls_, window_, x, crank_, f_);
+}
 
 void Fit::find_slopes(const Unknowns& x, bool held_too)
 {
@@ -67,7 +82,9 @@ void Fit::find_slopes(const Unknowns& x, bool held_too)
             continue;
         Unknowns beside = x;
         beside[unknown] += quotient_step[unknown];
-        balance_of(cylinder_, walls_, window_, beside, moved_);
+        if (unknown == offset)
+            follow_crank(cylinder_, window_, beside, moved_crank_);
+        balance_of(cylinder_, walls_, window_, beside, unknown == offset ? moved_crank_ : crank_, moved_);
         slope_[unknown].resize(f_.size());
         for (std::size_t i = 0; i < f_.size(); ++i)
             slope_[unknown][i] = (moved_[i] - f_[i]) / quotient_step[unknown];
@@ -143,7 +160,7 @@ std::optional<Calibration> Fit::run(const Unknowns& start)
         if (!free(unknown))
             found.values[unknown] = beliefs_[unknown].mean;
     for (int round = 0; round < most_rounds && !found.converged; ++round) {
-        balance_of(cylinder_, walls_, window_, found.values, f_);
+        find_balance(found.values);
         if (round == 0) {
             found.values[level] = 0.0;
             for (const double f : f_)
@@ -162,7 +179,7 @@ std::optional<Calibration> Fit::run(const Unknowns& start)
         }
         found.covariance = step->covariance;
     }
-    balance_of(cylinder_, walls_, window_, found.values, f_);
+    find_balance(found.values);
     double squares = 0.0;
     for (std::size_t i = 0; i < f_.size(); ++i) {
         const double residual = weight_[i] * (f_[i] - found.values[level]);
@@ -230,8 +247,10 @@ std::vector<double> carry_line(const Cylinder& cylinder, const WallLoss& walls, 
 
 LineEnd line_end(const Cylinder& cylinder, const WallLoss& walls, const CompressionWindow& window, const Unknowns& x)
 {
+    std::vector<CrankMotion> crank;
+    follow_crank(cylinder, window, x, crank);
     std::vector<double> f;
-    balance_of(cylinder, walls, window, x, f);
+    balance_of(cylinder, walls, window, x, crank, f);
     const double last = window.angle.back() - x[offset];
     const double pressure = std::max(window.pressure.back() - zero_at(cylinder, x, last), lowest_pressure);
     // f = ln p + integral and f = level on the line: the integral up to the end is f - ln p.

@@ -3,6 +3,7 @@
 
 #include "core/card/cylinder_model.h"
 #include "core/card/least_squares.h"
+#include "core/engine/even_motion.h"
 
 #include <algorithm>
 #include <cmath>
@@ -85,10 +86,10 @@ Range samples_within(std::span<const double> angle, double from, double to)
 std::vector<double> work_weights(const SliderCrank& gear, std::span<const double> angle, double step, double offset)
 {
     const double scale = step * radians_per_degree / (2.0 * gear.radius()); // dV/V_s = dx/S
-    std::vector<double> weights;
-    weights.reserve(angle.size());
-    for (const double at : angle)
-        weights.push_back(scale * gear.motion((at - offset) * radians_per_degree).slope);
+    std::vector<double> weights(angle.size());
+    if (!angle.empty())
+        follow_evenly(gear, (angle.front() - offset) * radians_per_degree, step * radians_per_degree, angle.size(),
+                      [&](std::size_t i, const CrankMotion& crank) { weights[i] = scale * crank.slope; });
     return weights;
 }
 

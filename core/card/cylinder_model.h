@@ -63,7 +63,10 @@ public:
     /// @param angle true, degrees  @param pressure bar absolute, above 0
     UnfiredSlope slope(double angle, double pressure, double log_pressure) const
     {
-        const CrankMotion crank = gear_.motion(angle * radians_per_degree);
+        return slope(gear_.motion(angle * radians_per_degree), pressure, log_pressure);
+    }
+    UnfiredSlope slope(const CrankMotion& crank, double pressure, double log_pressure) const
+    {
         const double volume = clearance_ + gear_.area() * crank.position;
         const GasMoment moment = gas_moment(gas_, pressure * 1e5, volume, mass_);
         const double compression = gear_.area() * crank.slope * radians_per_degree / volume;

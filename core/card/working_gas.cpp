@@ -143,15 +143,23 @@ Virial virial(double kelvin)
             -square * inverse * (2.0 * b1 + 6.0 * b2 * inverse)};
 }
 
+namespace {
+
+/// 1/T, in which the rounds need no division. @param thin  what 1/T would be without the virial
+double inverse_temperature(double thin, double density)
+{
+    double inverse = thin;
+    for (int round = 0; round < 3; ++round)
+        inverse = thin * (1.0 + density * (b0 - inverse * (b1 + b2 * inverse)));
+    return inverse;
+}
+
+} // namespace
+
 double gas_temperature(const WorkingGas& gas, double pressure, double volume, double mass)
 {
-    const double density = mass / volume, ideal = pressure / (density * gas.gas_constant());
-    double kelvin = ideal;
-    for (int round = 0; round < 3; ++round) {
-        const double inverse = 1.0 / kelvin;
-        kelvin = ideal / (1.0 + density * (b0 - inverse * (b1 + b2 * inverse)));
-    }
-    return kelvin;
+    const double density = mass / volume;
+    return 1.0 / inverse_temperature(density * gas.gas_constant() / pressure, density);
 }
 
 double gas_energy(const WorkingGas& gas, double kelvin, double density)
@@ -162,15 +170,14 @@ double gas_energy(const WorkingGas& gas, double kelvin, double density)
 GasMoment gas_moment(const WorkingGas& gas, double pressure, double volume, double mass)
 {
     const double density = mass / volume, r = gas.gas_constant();
-    const double t = gas_temperature(gas, pressure, volume, mass);
+    const double t = 1.0 / inverse_temperature(density * r / pressure, density);
     const Virial b = virial(t);
     const double capacity =
         gas.heat_capacity(t) - density * r * t * (2.0 * b.slope + t * b.curvature);
     const double by_temperature = density * r * (1.0 + density * (b.value + t * b.slope));
     const double by_density = r * t * (1.0 + 2.0 * b.value * density);
     const double stiffness = by_temperature / (density * capacity);
-    return {t, density / pressure * (by_density + t * by_temperature * by_temperature / (density * density * capacity)),
-            stiffness};
+    return {t, (density * by_density + t * by_temperature * stiffness) / pressure, stiffness};
 }
 
 } // namespace evenstroke::indicator

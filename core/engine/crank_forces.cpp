@@ -12,6 +12,27 @@ namespace {
 constexpr double pi = 3.14159265358979323846;
 constexpr double highest_pressure = 500e5; // Pa
 
+bool is_possible(double angle, double pressure)
+{
+    return std::isfinite(angle) && pressure > 0.0 && pressure <= highest_pressure;
+}
+
+Problem bad_sample(double angle, double pressure, const std::string& where)
+{
+    return invalid_input(
+        "The card" + where + " has " + short_number_text(pressure / 1e5) + " bar abs at " +
+            short_number_text(angle * 180.0 / pi) +
+            "°, and a pressure is above 0 and at most 500 bar abs at an angle that is a number.",
+        "Check the card, its unit and whether it is gauge or absolute.");
+}
+
+bool is_whole_cycle(double span)
+{
+    return std::abs(span - 2.0 * pi) <= 1e-6 || std::abs(span - 4.0 * pi) <= 1e-6;
+}
+
+} // namespace
+
 std::optional<Problem> find_problem(const CrankLoad& load)
 {
     if (!load.below_piston) {
@@ -42,55 +63,14 @@ std::optional<Problem> find_problem(const CrankLoad& load)
     return std::nullopt;
 }
 
-bool is_possible(double angle, double pressure)
+CrankForceRule::CrankForceRule(const SliderCrank& gear, const CrankLoad& load)
+    : area_(gear.area()), below_(load.below_piston->value())
 {
-    return std::isfinite(angle) && pressure > 0.0 && pressure <= highest_pressure;
-}
-
-Problem bad_sample(double angle, double pressure, const std::string& where)
-{
-    return invalid_input(
-        "The card" + where + " has " + short_number_text(pressure / 1e5) + " bar abs at " +
-            short_number_text(angle * 180.0 / pi) +
-            "°, and a pressure is above 0 and at most 500 bar abs at an angle that is a number.",
-        "Check the card, its unit and whether it is gauge or absolute.");
-}
-
-struct PlainForces
-{
-    double piston, guide, turning_moment;
-};
-
-/// All that does not change over the card. SI.
-class ForceRule
-{
-public:
-    ForceRule(const SliderCrank& gear, const CrankLoad& load)
-        : gear_(gear), below_(load.below_piston->value())
-    {
-        if (load.moving_mass && load.speed) {
-            const double omega = 2.0 * pi * load.speed->value();
-            inertia_ = load.moving_mass->value() * omega * omega;
-        }
+    if (load.moving_mass && load.speed) {
+        const double omega = 2.0 * pi * load.speed->value();
+        inertia_ = load.moving_mass->value() * omega * omega;
     }
-    PlainForces at(double angle, double pressure) const
-    {
-        const CrankMotion here = gear_.motion(angle);
-        const double force = (pressure - below_) * gear_.area() - inertia_ * here.curvature;
-        return {force, force * here.sine_of_rod / here.cosine_of_rod, force * here.slope};
-    }
-
-private:
-    const SliderCrank& gear_;
-    double below_, inertia_ = 0.0; // Pa; kg rad²/s²
-};
-
-bool is_whole_cycle(double span)
-{
-    return std::abs(span - 2.0 * pi) <= 1e-6 || std::abs(span - 4.0 * pi) <= 1e-6;
 }
-
-} // namespace
 
 Result<CrankForces> crank_forces(const SliderCrank& gear, PlaneAngle crank_angle, AbsolutePressure cylinder,
                                  const CrankLoad& load)
@@ -101,7 +81,7 @@ Result<CrankForces> crank_forces(const SliderCrank& gear, PlaneAngle crank_angle
     if (!is_possible(crank_angle.value(), cylinder.value())) {
         return bad_sample(crank_angle.value(), cylinder.value(), "");
     }
-    const PlainForces forces = ForceRule(gear, load).at(crank_angle.value(), cylinder.value());
+    const PlainCrankForces forces = CrankForceRule(gear, load).at(gear.motion(crank_angle.value()), cylinder.value());
     return CrankForces{forces.piston * si::newtons, forces.guide * si::newtons,
                        Torque::from_value(forces.turning_moment)};
 }
@@ -117,7 +97,7 @@ Result<CrankForceCurve> crank_forces(const SliderCrank& gear, std::span<const do
                                  std::to_string(pressure.size()) + " pressures.",
                              "Give each sample of the card its angle and its pressure.");
     }
-    const ForceRule rule(gear, load);
+    const CrankForceRule rule(gear, load);
     CrankForceCurve curve;
     curve.gas_force_only = !load.moving_mass.has_value();
     for (std::vector<double>* column : {&curve.piston, &curve.guide, &curve.turning_moment}) {
@@ -127,7 +107,7 @@ Result<CrankForceCurve> crank_forces(const SliderCrank& gear, std::span<const do
         if (!is_possible(angle[i], pressure[i])) {
             return bad_sample(angle[i], pressure[i], ", sample " + std::to_string(i + 1) + ",");
         }
-        const PlainForces forces = rule.at(angle[i], pressure[i]);
+        const PlainCrankForces forces = rule.at(gear.motion(angle[i]), pressure[i]);
         curve.piston.push_back(forces.piston);
         curve.guide.push_back(forces.guide);
         curve.turning_moment.push_back(forces.turning_moment);

@@ -29,6 +29,9 @@ struct CrankLoad
     std::optional<Frequency> speed; ///< needed with a mass only
 };
 
+/// What is wrong with a load; nothing where it can be used.
+std::optional<Problem> find_problem(const CrankLoad& load);
+
 struct CrankForces
 {
     Force piston{};
@@ -42,6 +45,28 @@ struct CrankForces
 ///      invalid_input: a pressure outside its range, negative mass or speed, angle no number
 Result<CrankForces> crank_forces(const SliderCrank& gear, PlaneAngle crank_angle, AbsolutePressure cylinder,
                                  const CrankLoad& load);
+
+/// Forces at one place of the crank gear in plain numbers, for loops over a card: N, N, N·m.
+struct PlainCrankForces
+{
+    double piston, guide, turning_moment;
+};
+
+/// All that does not change over the card. The load must be one without a problem.
+class CrankForceRule
+{
+public:
+    CrankForceRule(const SliderCrank& gear, const CrankLoad& load);
+    /// @param pressure absolute [Pa]
+    PlainCrankForces at(const CrankMotion& here, double pressure) const
+    {
+        const double force = (pressure - below_) * area_ - inertia_ * here.curvature;
+        return {force, force * here.sine_of_rod / here.cosine_of_rod, force * here.slope};
+    }
+
+private:
+    double area_, below_, inertia_ = 0.0; // m², Pa, kg rad²/s²
+};
 
 /// Forces over a whole card in plain numbers, one entry a sample: N, N, N·m.
 struct CrankForceCurve

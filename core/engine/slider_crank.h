@@ -84,7 +84,11 @@ public:
     ///@{
     CrankMotion motion(double angle) const
     {
-        const double sine = std::sin(angle), cosine = std::cos(angle);
+        return motion(std::sin(angle), std::cos(angle));
+    }
+    /// The same from the sine and the cosine of the angle, for who has them.
+    CrankMotion motion(double sine, double cosine) const
+    {
         const double side = radius_ * sine, along = radius_ * cosine;
         const double q = std::sqrt((rod_ - side) * (rod_ + side));
         const double slope = side * (1.0 + along / q);

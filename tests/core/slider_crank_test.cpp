@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/engine/crank_forces.h"
+#include "core/engine/even_motion.h"
 #include "core/engine/slider_crank.h"
 #include "tests/core/refusal.h"
 
@@ -49,6 +50,21 @@ INSTANTIATE_TEST_SUITE_P(SeparateCalculation, SliderCrankTable,
                                          PositionRow{90, 1.512536380, 1.2, 0.465358698, 29.196404},
                                          PositionRow{120, 2.030291499, 0.759580346, 0.611750509, 24.989453},
                                          PositionRow{180, 2.4, 0, 0.716283125, 0}));
+
+TEST(SliderCrank, FollowedEvenlyIsWhatEachAngleGivesByItself)
+{
+    const SliderCrank gear = slow_two_stroke();
+    const double first = -2.0 * pi + 0.0123, step = 0.1 * pi / 180.0;
+    std::size_t followed = 0;
+    follow_evenly(gear, first, step, 7200, [&](std::size_t i, const CrankMotion& crank) {
+        const CrankMotion alone = gear.motion(first + static_cast<double>(i) * step);
+        EXPECT_NEAR(crank.position, alone.position, 1e-13);
+        EXPECT_NEAR(crank.slope, alone.slope, 1e-13);
+        EXPECT_NEAR(crank.curvature, alone.curvature, 1e-13);
+        EXPECT_EQ(i, followed++);
+    });
+    EXPECT_EQ(followed, 7200U);
+}
 
 TEST(SliderCrank, CompressionAndSpeedAgreeWithASeparateCalculation)
 {
