@@ -133,7 +133,7 @@ private:
         add(with.angle, with.half_width, FigureRole::limit, tr_("±")); // told by the cursor; the band draws it
         for (const indicator::PartDifference& part : with.parts)
             picture_.parts.push_back({part.from, part.to, part_name(part.part), part.clear});
-        picture_.beyond.push_back(beyond(with));
+        picture_.beyond = beyond(with);
         fit_values();
         const double most = std::max(std::abs(picture_.y_low), std::abs(picture_.y_high));
         picture_.y_low = std::min(picture_.y_low, -0.25 * most);

@@ -51,7 +51,7 @@ struct CardPicture
     double x_low = 0.0, x_high = 1.0, y_low = 0.0, y_high = 1.0;
     std::vector<CardLine> lines;
     std::optional<CardBand> band;
-    std::vector<CardBand> beyond; ///< where a part clearly differs: from the band's edge to the curve
+    std::optional<CardBand> beyond; ///< where a part clearly differs: from the band's edge to the curve
     std::vector<std::shared_ptr<const CycleEnvelope>> others; ///< cycles of the other cylinders
     std::shared_ptr<const CycleEnvelope> cycles;              ///< of the cylinder in hand
     std::vector<CardPart> parts;

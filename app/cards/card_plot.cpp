@@ -189,8 +189,8 @@ void CardPlot::add_band()
 {
     if (picture_.band)
         fill_between(*picture_.band, theme_->band_brush(), theme_->print() ? theme_->pen(theme_->muted, 2) : QPen(Qt::NoPen));
-    for (const CardBand& area : picture_.beyond)
-        fill_between(area, QBrush(mixed(theme_->line, theme_->page, 0.55)), QPen(Qt::NoPen));
+    if (picture_.beyond)
+        fill_between(*picture_.beyond, QBrush(mixed(theme_->line, theme_->page, 0.55)), QPen(Qt::NoPen));
 }
 
 void CardPlot::fill_between(const CardBand& band, const QBrush& brush, const QPen& edge)

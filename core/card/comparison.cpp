@@ -50,7 +50,7 @@ struct Part
 bool compression_differs(const Comparison& comparison)
 {
     const auto& difference = comparison.differences[static_cast<std::size_t>(CardResult::compression_pressure)];
-    return difference && difference->half_width && std::abs(difference->value) > *difference->half_width;
+    return difference && difference->is_clear();
 }
 
 std::vector<Part> lay_out_parts(const Evaluation& now, const Comparison& comparison, double period)

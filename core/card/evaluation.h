@@ -7,6 +7,7 @@
 #include "core/engine/engine.h"
 
 #include <array>
+#include <cmath>
 #include <optional>
 #include <string>
 #include <string_view>
@@ -64,6 +65,9 @@ struct Estimate
 {
     double value = 0.0;
     std::optional<double> half_width; ///< at 95 %, without the transducer's own gain
+
+    /// Of a difference: whether it is farther from 0 than its half-width; not where that is not known.
+    bool is_clear() const { return half_width && std::abs(value) > *half_width; }
 };
 using Estimates = std::array<std::optional<Estimate>, result_count>;
 

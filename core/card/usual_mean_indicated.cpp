@@ -2,8 +2,8 @@
 #include "core/card/usual_mean_indicated.h"
 
 #include "core/trend/conditions.h"
+#include "core/trend/robust.h"
 
-#include <algorithm>
 #include <vector>
 
 namespace evenstroke::indicator {
@@ -24,9 +24,7 @@ std::optional<double> middle_of_the_others(const Engine& engine, const Reading& 
     }
     if (others.empty())
         return std::nullopt;
-    const auto middle = others.begin() + static_cast<std::ptrdiff_t>(others.size() / 2);
-    std::nth_element(others.begin(), middle, others.end());
-    return *middle;
+    return drift::median_in_place(others);
 }
 
 } // namespace

@@ -39,7 +39,7 @@ std::string result_words(const ReviewedCard& card, const Shown& column)
         return words;
     const indicator::Estimate& difference = *card.comparison->differences[index];
     words += "; " + rounded_text(difference.value, column.decimals, Sign::always);
-    return difference.half_width && std::abs(difference.value) > *difference.half_width ? words + " *" : words;
+    return difference.is_clear() ? words + " *" : words;
 }
 
 std::string healthy_words(const Context& context, const indicator::CardReview& review)
