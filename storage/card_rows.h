@@ -16,8 +16,19 @@ Result<CardTrace> read_card_file(const QString& path, qint64& line);
 struct AddedCard
 {
     std::string id;
-    enum class Outcome { added, same, differs } outcome = Outcome::added;
+    enum class Outcome {
+        added,
+        same,      ///< the reading has it already
+        differs,   ///< the reading has another one of the cylinder
+        withdrawn, ///< the same card was withdrawn from this reading and cylinder before
+    } outcome = Outcome::added;
 };
+/// Whether packed samples are those of a trace; another version of the packing may make other bytes of them.
+bool holds(const QByteArray& packed, const CardTrace& trace);
+/// The id of a withdrawn card of this reading and cylinder with the same samples; empty where there is none.
+Result<std::string> find_withdrawn(History& history, qint64 reading_key, int cylinder, const CardTrace& trace);
+/// Removes the cards of a draft that is thrown away, and says so in the trail.
+Done throw_cards_away(History& history, qint64 reading_key, AuditWriter& audit);
 /// Adds a card to a reading that is there, within the caller's transaction.
 Result<AddedCard> add_card(History& history, qint64 reading_key, int cylinder, const CardTrace& trace,
                            AuditWriter& audit);

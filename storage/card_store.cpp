@@ -19,19 +19,18 @@ namespace {
 
 const std::string not_saved = "the card was not saved";
 
-/// Another version of the packing may make other bytes of the same samples.
-bool holds(const QByteArray& packed, const CardTrace& trace)
-{
-    const auto known = unpack_card(packed);
-    return known && known->cycle == trace.cycle && known->gauge == trace.gauge &&
-           known->crank_angle_deg == trace.crank_angle_deg && known->pressure_bar == trace.pressure_bar;
-}
-
 Problem another_card(const std::string& reading_name, int cylinder)
 {
     return invalid_input("The reading " + evenstroke::quoted(reading_name) + " has another card of cylinder " +
                              std::to_string(cylinder) + ".",
                          "Leave this one out, or choose the reading it was taken with.");
+}
+
+Problem withdrawn_before(const std::string& reading_name, int cylinder)
+{
+    return invalid_input("This card of cylinder " + std::to_string(cylinder) + " was withdrawn from the reading " +
+                             evenstroke::quoted(reading_name) + ".",
+                         "Leave it out, or bring it back on the page Cards.");
 }
 
 Problem two_of(int cylinder)
@@ -50,6 +49,13 @@ Result<int> cards_of(History& history, qint64 reading_key)
 }
 
 } // namespace
+
+bool holds(const QByteArray& packed, const CardTrace& trace)
+{
+    const auto known = unpack_card(packed);
+    return known && known->cycle == trace.cycle && known->gauge == trace.gauge &&
+           known->crank_angle_deg == trace.crank_angle_deg && known->pressure_bar == trace.pressure_bar;
+}
 
 std::string packed_card_hash(const std::string& id, int cylinder, const QByteArray& packed)
 {
@@ -71,6 +77,11 @@ Result<AddedCard> add_card(History& history, qint64 reading_key, int cylinder, c
         return AddedCard{there.text(0), holds(there.bytes(1), trace) ? AddedCard::Outcome::same
                                                                      : AddedCard::Outcome::differs};
     BOOST_OUTCOME_TRYV(there.finished());
+    const auto withdrawn = find_withdrawn(history, reading_key, cylinder, trace);
+    if (!withdrawn)
+        return withdrawn.error();
+    if (!withdrawn.value().empty())
+        return AddedCard{withdrawn.value(), AddedCard::Outcome::withdrawn};
     const std::string id = from_qt(QUuid::createUuid().toString(QUuid::WithoutBraces));
     Query add(history.database(),
               "INSERT INTO card (id, reading_key, cylinder, samples, trace) VALUES (?, ?, ?, ?, ?)",
@@ -113,6 +124,20 @@ Result<CardTrace> CardStore::load(const std::string& card_id) const
     return std::move(*trace);
 }
 
+Result<std::vector<CardEntry>> CardStore::find_same(const std::string& engine_id, const CardTrace& trace) const
+{
+    Query rows(history_.database(),
+               "SELECT c.id, r.id, c.cylinder, c.samples FROM card c JOIN reading r USING (reading_key) JOIN engine e USING "
+               "(engine_key) WHERE e.id = ? AND c.samples = ? AND c.trace = ? ORDER BY r.taken_at, c.cylinder",
+               "the cards of the engine were not compared");
+    BOOST_OUTCOME_TRYV(rows.run(engine_id, static_cast<qint64>(trace.crank_angle_deg.size()), pack_card(trace)));
+    std::vector<CardEntry> same;
+    while (rows.next())
+        same.push_back({rows.text(0), rows.text(1), rows.small(2), rows.small(3)});
+    BOOST_OUTCOME_TRYV(rows.finished());
+    return same;
+}
+
 Result<std::string> CardStore::add(const std::string& reading_id, int cylinder, const CardTrace& trace,
                                    const Signature& by)
 {
@@ -128,6 +153,8 @@ Result<std::string> CardStore::add(const std::string& reading_id, int cylinder, 
     if (added.value().outcome == AddedCard::Outcome::differs)
         return invalid_input("The reading has another card of cylinder " + std::to_string(cylinder) + ".",
                              "Keep the card to the reading it was taken with.");
+    if (added.value().outcome == AddedCard::Outcome::withdrawn)
+        return withdrawn_before(reading.value().name, cylinder);
     BOOST_OUTCOME_TRYV(transaction.commit());
     return added.value().id;
 }
@@ -150,6 +177,11 @@ Result<AddedCards> CardStore::foresee(const std::string& reading_id, const std::
             return another_card(reading.value().name, card.cylinder);
         if (!any) {
             BOOST_OUTCOME_TRYV(there.finished());
+            const auto withdrawn = find_withdrawn(history_, reading.value().key, card.cylinder, *card.trace);
+            if (!withdrawn)
+                return withdrawn.error();
+            if (!withdrawn.value().empty())
+                return withdrawn_before(reading.value().name, card.cylinder);
         }
         ++(any ? all.same : all.added);
     }
@@ -180,6 +212,8 @@ Result<AddedCards> CardStore::add_all(const std::string& reading_id, const std::
             return added.error();
         if (added.value().outcome == AddedCard::Outcome::differs)
             return another_card(reading.value().name, card.cylinder);
+        if (added.value().outcome == AddedCard::Outcome::withdrawn)
+            return withdrawn_before(reading.value().name, card.cylinder);
         ++(added.value().outcome == AddedCard::Outcome::added ? all.added : all.same);
     }
     const auto in_all = cards_of(history_, reading.value().key);

@@ -34,6 +34,14 @@ struct CardEntry
     int samples = 0;
 };
 
+/// A card that was taken out of use; it stays in the file.
+struct WithdrawnCard
+{
+    CardEntry card;
+    TimePoint at{};
+    std::string who, why;
+};
+
 /// A cylinder's card that is to be added to a reading.
 struct NewCard
 {
@@ -56,6 +64,8 @@ public:
     list(const std::string& engine_id) const; ///< by time of reading, then cylinder
     /// @par Problems not_found
     Result<CardTrace> load(const std::string& card_id) const;
+    /// Cards of the engine with exactly these samples, wherever they stand: files of another day come in by mistake.
+    Result<std::vector<CardEntry>> find_same(const std::string& engine_id, const CardTrace& trace) const;
     /// Adds a cylinder's card to a reading. Answers its id; the same card again is the same id.
     /// @par Problems invalid_input: the reading has another card of this cylinder
     Result<std::string> add(const std::string& reading_id, int cylinder, const CardTrace& trace,
@@ -65,6 +75,17 @@ public:
     /// Adds the cards of several cylinders to a reading: all of them, or none.
     /// @par Problems invalid_input: the reading has another card of one of the cylinders, or two are of one cylinder
     Result<AddedCards> add_all(const std::string& reading_id, const std::vector<NewCard>& cards, const Signature& by);
+
+    /// Takes a card out of use with a reason: wrong cylinder, choked cock. It stays in the file and can be brought back;
+    /// its place is free for another. What it gave its reading is taken out too, as a correction where that is closed.
+    /// Answers how many values that were.
+    /// @par Problems invalid_input: nobody signed or no reason, the reading is withdrawn; not_found
+    Result<int> withdraw(const std::string& card_id, const Signature& by);
+    /// Puts a withdrawn card back; its results are put into the reading by whoever wants them there.
+    /// @par Problems invalid_input: nobody signed or no reason, the reading has another card of the cylinder by now; not_found
+    Done restore(const std::string& card_id, const Signature& by);
+    Result<std::vector<WithdrawnCard>>
+    withdrawn(const std::string& engine_id) const; ///< by time of reading, cylinder, then when it was withdrawn
 
 private:
     History& history_;

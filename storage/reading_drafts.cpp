@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "storage/card_rows.h"
 #include "storage/reading_change.h"
 #include "storage/reading_store.h"
 
@@ -122,13 +123,13 @@ Done ReadingStore::discard_draft(const std::string& reading_id, const Signature&
         return invalid_input("The reading " + evenstroke::quoted(row.value().name) +
                                  " is closed and cannot be thrown away.",
                              "Withdraw it with a reason; it then stays in the file.");
+    AuditWriter audit(history_, by);
+    BOOST_OUTCOME_TRYV(throw_cards_away(history_, row.value().key, audit));
     for (const char* const statement :
-         {"DELETE FROM value WHERE reading_key = ?", "DELETE FROM card WHERE reading_key = ?",
-          "DELETE FROM reading WHERE reading_key = ?"}) {
+         {"DELETE FROM value WHERE reading_key = ?", "DELETE FROM reading WHERE reading_key = ?"}) {
         Query remove(history_.database(), statement, "the draft was not thrown away");
         BOOST_OUTCOME_TRYV(remove.run(row.value().key));
     }
-    AuditWriter audit(history_, by);
     BOOST_OUTCOME_TRYV(audit.add({"thrown away", "reading", reading_id, row.value().name, ""}));
     return transaction.commit();
 }

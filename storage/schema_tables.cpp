@@ -143,6 +143,15 @@ const std::vector<const char*> card_result_tables = {
         BEGIN SELECT RAISE(ABORT, 'what was said of cards is only added to'); END)",
 };
 
+// Tables of their own, so that whoever asks for a reading's cards never meets one that was taken out of use.
+const std::vector<const char*> withdrawn_card_tables = {
+    R"(CREATE TABLE withdrawn_card (
+        withdrawn_key INTEGER PRIMARY KEY, id TEXT NOT NULL UNIQUE, reading_key INTEGER NOT NULL REFERENCES reading,
+        cylinder INTEGER NOT NULL, samples INTEGER NOT NULL, trace BLOB NOT NULL, -- as in card
+        withdrawn_at INTEGER NOT NULL, who TEXT NOT NULL, why TEXT NOT NULL) STRICT)",
+    R"(CREATE INDEX withdrawn_card_of_reading ON withdrawn_card (reading_key))",
+};
+
 } // namespace
 
 std::span<const Migration> all_migrations()
@@ -152,6 +161,7 @@ std::span<const Migration> all_migrations()
         {2, "indicator cards", card_tables},
         {3, "notes on flags", flag_note_tables},
         {4, "values that come from cards, and cards called healthy", card_result_tables},
+        {5, "cards that were withdrawn", withdrawn_card_tables},
     };
     return steps;
 }

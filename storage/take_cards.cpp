@@ -57,7 +57,7 @@ Done FolderTaking::take_card(const QFileInfo& file, const std::string& reading, 
     if (added.value().outcome == AddedCard::Outcome::differs)
         refusals.add(0, "", "The history has another card of this cylinder in this reading.",
                      "Keep the card to the reading it was taken with.");
-    else
+    else // one that was withdrawn stays so: the file says nothing new
         ++(added.value().outcome == AddedCard::Outcome::added ? report_.cards.fresh : report_.cards.same);
     return done();
 }

@@ -227,7 +227,8 @@ Done Verification::check_flag_notes()
 Done Verification::check_cards()
 {
     Query rows(history_.database(),
-               "SELECT c.id, r.name, c.cylinder, c.trace FROM card c JOIN reading r USING (reading_key)",
+               "SELECT c.id, r.name, c.cylinder, c.trace FROM card c JOIN reading r USING (reading_key) UNION ALL "
+               "SELECT w.id, r.name, w.cylinder, w.trace FROM withdrawn_card w JOIN reading r USING (reading_key)",
                not_verified);
     BOOST_OUTCOME_TRYV(rows.run());
     while (rows.next())

@@ -7,6 +7,7 @@
 #include "app/desk/theme.h"
 #include "app/desk/workplace.h"
 #include "core/card/usual_mean_indicated.h"
+#include "storage/card_store.h"
 #include "ui_card_files_page.h"
 
 #include <QComboBox>
@@ -249,9 +250,21 @@ void CardFilesPage::preview()
 void CardFilesPage::take_traces(const std::vector<FileTrace>& traces)
 {
     traces_ = traces;
+    find_stored();
     all_the_same_ = false;
     ui_->progress->hide();
     show_all();
+}
+
+/// Files of another day are the usual mistake: their cards are stored already, in another reading.
+void CardFilesPage::find_stored()
+{
+    for (FileTrace& trace : traces_) {
+        if (!trace.trace || !engine() || !workplace().history())
+            continue;
+        if (auto same = storage::CardStore(*workplace().history()).find_same(engine()->id, *trace.trace))
+            trace.same = std::move(same.value()); // what cannot be compared is refused when it is stored
+    }
 }
 
 void CardFilesPage::set_cylinder(std::size_t index, std::optional<int> cylinder)

@@ -79,7 +79,9 @@ private:
     void show_traces();
     void show_trace_in_hand();
     void show_into();
+    QString doubt_of(const FileTrace& trace) const;
     bool is_wanted(const FileTrace& trace) const;
+    void find_stored();
     void show_doubtful(QStringList& lines);
     std::vector<storage::NewCard> cards_to_take() const;
     bool says_already();

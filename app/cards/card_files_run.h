@@ -4,6 +4,7 @@
 #include "app/desk/worker_run.h"
 #include "core/card/evaluation.h"
 #include "core/reading/reading.h"
+#include "storage/card_store.h"
 #include "storage/trace_layout.h"
 
 #include <QString>
@@ -31,6 +32,7 @@ struct FileTrace
     int missing = 0;
     std::shared_ptr<const indicator::Evaluation> card;
     std::optional<Problem> problem; ///< with `trace`: it can be kept and not be evaluated
+    std::vector<storage::CardEntry> same; ///< stored cards of the engine with exactly these samples, as the page found them
 };
 
 /// Everything that reading and evaluating files needs, apart from the window.

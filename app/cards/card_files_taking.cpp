@@ -181,9 +181,25 @@ void CardFilesPage::show_into()
     ui_->paper->set_can_put(reading && !workplace().read_only());
 }
 
+/// What speaks against taking a card in; empty where nothing does.
+QString CardFilesPage::doubt_of(const FileTrace& trace) const
+{
+    const QString doubt = trace_doubt(trace);
+    const Reading* const here = reading_in_hand_here();
+    const auto is_here = [&](const storage::CardEntry& card) { return card.reading_id == here->id && card.cylinder == trace.cylinder; };
+    if (!doubt.isEmpty() || trace.same.empty() || !here || std::any_of(trace.same.begin(), trace.same.end(), is_here))
+        return doubt;
+    const storage::CardEntry& first = trace.same.front();
+    const auto& readings = judgement_->record->readings;
+    const auto other = std::find_if(readings.begin(), readings.end(), [&](const Reading& one) { return one.id == first.reading_id; });
+    const QString day = other == readings.end() ? tr("another reading") : tr("the reading of %1").arg(day_text(other->taken_at.utc));
+    return tr("the same samples stand already as the card of %1 in %2")
+        .arg(place_title(*engine(), Place::cylinder(first.cylinder), false), day);
+}
+
 bool CardFilesPage::is_wanted(const FileTrace& trace) const
 {
-    return can_be_taken(trace) && (all_the_same_ || trace_doubt(trace).isEmpty());
+    return can_be_taken(trace) && (all_the_same_ || doubt_of(trace).isEmpty());
 }
 
 /// Cards that only a second step takes in, and what speaks against each.
@@ -191,7 +207,7 @@ void CardFilesPage::show_doubtful(QStringList& lines)
 {
     int doubtful = 0;
     for (const FileTrace& trace : traces_) {
-        const QString doubt = can_be_taken(trace) && engine() ? trace_doubt(trace) : QString();
+        const QString doubt = can_be_taken(trace) && engine() ? doubt_of(trace) : QString();
         if (doubt.isEmpty())
             continue;
         ++doubtful;

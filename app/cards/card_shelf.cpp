@@ -19,6 +19,18 @@ std::vector<std::size_t> CardsStored::readings() const
     return all;
 }
 
+const CardsStored::Entry* CardsStored::find(const indicator::CardPlace& place) const
+{
+    const auto found = std::find_if(cards.begin(), cards.end(), [&](const Entry& entry) { return entry.place == place; });
+    return found == cards.end() ? nullptr : &*found;
+}
+
+const CardsStored::Withdrawn* CardsStored::find_withdrawn(const indicator::CardPlace& place) const
+{
+    const auto found = std::find_if(withdrawn.rbegin(), withdrawn.rend(), [&](const Withdrawn& entry) { return entry.card.place == place; });
+    return found == withdrawn.rend() ? nullptr : &*found;
+}
+
 Result<CardsStored> find_cards(storage::History& history, const Judgement& judgement)
 {
     const auto entries = storage::CardStore(history).list(judgement.record->engine.id);
@@ -33,6 +45,12 @@ Result<CardsStored> find_cards(storage::History& history, const Judgement& judge
             stored.cards.push_back({entry.id, {reading->second, entry.cylinder}});
     std::stable_sort(stored.cards.begin(), stored.cards.end(),
                      [](const CardsStored::Entry& a, const CardsStored::Entry& b) { return a.place < b.place; });
+    const auto withdrawn = storage::CardStore(history).withdrawn(judgement.record->engine.id);
+    if (!withdrawn)
+        return withdrawn.error();
+    for (const storage::WithdrawnCard& entry : withdrawn.value())
+        if (const auto reading = places.find(entry.card.reading_id); reading != places.end())
+            stored.withdrawn.push_back({{entry.card.id, {reading->second, entry.card.cylinder}}, entry.at, entry.who, entry.why});
     const auto healthy = storage::HealthyCardStore(history).list(judgement.record->engine.id);
     if (!healthy)
         return healthy.error();
@@ -67,23 +85,18 @@ std::shared_ptr<const indicator::CardReview> review_newest_cards(storage::Histor
     const auto stored = find_cards(history, judgement);
     if (!stored)
         return nullptr;
-    const auto with_cards = stored.value().readings();
-    const auto count = [&](std::size_t reading) {
-        const TimePoint taken = judgement.record->readings[reading].taken_at.utc;
-        if (taken < std::chrono::floor<std::chrono::days>(from) || taken >= std::chrono::floor<std::chrono::days>(to) + std::chrono::days(1))
-            return std::ptrdiff_t{0};
-        const auto& cards = stored.value().cards;
-        return std::count_if(cards.begin(), cards.end(), [&](const auto& card) { return card.place.reading == reading; });
-    };
-    std::ptrdiff_t most = 0;
-    for (const std::size_t reading : with_cards)
-        most = std::max(most, count(reading));
+    std::map<std::size_t, std::size_t> counts; // cards by reading
+    std::size_t most = 0;
+    for (const CardsStored::Entry& card : stored.value().cards) {
+        const TimePoint taken = judgement.record->readings[card.place.reading].taken_at.utc;
+        if (taken >= std::chrono::floor<std::chrono::days>(from) && taken < std::chrono::floor<std::chrono::days>(to) + std::chrono::days(1))
+            most = std::max(most, ++counts[card.place.reading]);
+    }
     // A single card taken later does not stand for the engine.
-    const auto newest = std::find_if(with_cards.rbegin(), with_cards.rend(),
-                                     [&](std::size_t reading) { return count(reading) > 0 && 2 * count(reading) >= most; });
-    if (newest == with_cards.rend())
+    const auto newest = std::find_if(counts.rbegin(), counts.rend(), [&](const auto& reading) { return 2 * reading.second >= most; });
+    if (newest == counts.rend())
         return nullptr;
-    return std::make_shared<const indicator::CardReview>(review_cards(judgement, *newest, make_shelf(history, stored.value())));
+    return std::make_shared<const indicator::CardReview>(review_cards(judgement, newest->first, make_shelf(history, stored.value())));
 }
 
 } // namespace evenstroke

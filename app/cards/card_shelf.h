@@ -21,11 +21,23 @@ struct CardsStored
         indicator::CardPlace place;
         friend bool operator==(const Entry&, const Entry&) = default;
     };
+    /// A card that was taken out of use.
+    struct Withdrawn
+    {
+        Entry card;
+        TimePoint at{};
+        std::string who, why;
+        friend bool operator==(const Withdrawn&, const Withdrawn&) = default;
+    };
     std::vector<Entry> cards;                ///< by reading, then cylinder
+    std::vector<Withdrawn> withdrawn;        ///< the same, then as they were withdrawn
     std::vector<std::size_t> called_healthy; ///< readings
 
     /// Readings that have cards, each once, by time.
     std::vector<std::size_t> readings() const;
+    const Entry* find(const indicator::CardPlace& place) const;
+    /// The card withdrawn last at a place.
+    const Withdrawn* find_withdrawn(const indicator::CardPlace& place) const;
     friend bool operator==(const CardsStored&, const CardsStored&) = default;
 };
 Result<CardsStored> find_cards(storage::History& history, const Judgement& judgement);

@@ -258,10 +258,9 @@ std::vector<CardRow> card_rows(const ReviewedCard& card)
                 row.healthy = number_text(card.comparison->healthy_results[i]->value, decimals);
             if (difference) {
                 row.difference = signed_text(difference->value, decimals);
-                if (difference->half_width) {
+                if (difference->half_width)
                     row.difference += QStringLiteral(" ± ") + number_text(*difference->half_width, decimals);
-                    row.clear = std::abs(difference->value) > *difference->half_width;
-                }
+                row.clear = difference->is_clear();
             }
         }
         rows.push_back(row);
@@ -283,6 +282,13 @@ QString cylinder_words(const CardsInHand& cards, int cylinder)
         if (part.clear && part.part != CyclePart::gas_exchange && (!most || std::abs(shown_difference(part)) > std::abs(shown_difference(*most))))
             most = &part;
     return most ? tr_("%1 %2").arg(part_name(most->part), signed_text(shown_difference(*most), 1)) : tr_("as healthy");
+}
+
+QString withdrawn_words(const Judgement& judgement, const CardsStored::Withdrawn& withdrawn)
+{
+    return tr_("The card of %1 was withdrawn on %2 by %3: %4")
+        .arg(place_title(judgement.record->engine, Place::cylinder(withdrawn.card.place.cylinder), false), day_text(withdrawn.at),
+             to_qstring(withdrawn.who), to_qstring(withdrawn.why));
 }
 
 std::optional<int> worst_cylinder(const CardsInHand& cards)

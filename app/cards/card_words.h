@@ -39,6 +39,8 @@ std::vector<CardRow> card_rows(const indicator::ReviewedCard& card);
 
 /// Short words under a cylinder's small picture: the largest clear difference, or what stands in the way.
 QString cylinder_words(const CardsInHand& cards, int cylinder);
+/// Why a cylinder has no card any more: "The card of cylinder 4 was withdrawn on 14 Mar 2031 by A. First: choked cock".
+QString withdrawn_words(const Judgement& judgement, const CardsStored::Withdrawn& withdrawn);
 /// The cylinder that most asks to be looked at: one that a flag speaks of, else by its card; nothing where none does.
 std::optional<int> worst_cylinder(const CardsInHand& cards);
 

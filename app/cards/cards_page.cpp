@@ -79,6 +79,8 @@ void CardsPage::connect_all()
     connect(ui_->save_button, &QPushButton::clicked, this, &CardsPage::ask_file);
     connect(ui_->accept_button, &QPushButton::clicked, this, &CardsPage::ask_accept);
     connect(ui_->healthy_button, &QPushButton::clicked, this, &CardsPage::ask_healthy);
+    for (QPushButton* button : {ui_->withdraw_button, ui_->empty_restore_button})
+        connect(button, &QPushButton::clicked, this, &CardsPage::ask_withdraw);
     connect(ui_->newest_button, &QPushButton::clicked, this, &CardsPage::open_newest);
     for (QPushButton* button : {ui_->bring_button, ui_->empty_bring_button})
         connect(button, &QPushButton::clicked, this, &CardsPage::bring_in);
@@ -122,7 +124,8 @@ void CardsPage::refresh()
     if (!reading || std::find(with_cards.begin(), with_cards.end(), *reading) == with_cards.end()) {
         run_.stop();
         reading_.reset();
-        show_instead(stored_.cards.empty()
+        show_instead(withdrawn_in_hand() ? tr("This reading has no cards in use.") + u' ' + withdrawn_words(*judgement_, *withdrawn_in_hand())
+                     : stored_.cards.empty()
                          ? tr("Here stand the indicator cards of a reading: pressure over crank angle, one a cylinder. No cards of this "
                               "engine are stored yet. Bring in the files of the indicator with key X, or put them as "
                               "cards/READING/CYLINDER.csv into the engine's folder and take it in on the page History (key H).")
@@ -154,6 +157,7 @@ void CardsPage::show_progress()
     ui_->empty->hide();
     ui_->newest_button->hide();
     ui_->empty_bring_button->hide();
+    ui_->empty_restore_button->hide();
     ui_->cautions->hide();
     ui_->progress->setMaximum(std::max(1, run_.total()));
     ui_->progress->setValue(run_.done());
@@ -183,12 +187,13 @@ void CardsPage::show_instead(const QString& words, bool offer_newest)
     ui_->empty->show();
     ui_->newest_button->setVisible(offer_newest);
     ui_->empty_bring_button->setVisible(judgement_ && !judgement_->readings.empty() && !workplace().read_only());
+    ui_->empty_restore_button->setVisible(!workplace().read_only() && withdrawn_in_hand());
 }
 
 void CardsPage::show_cards()
 {
-    for (QWidget* widget : std::initializer_list<QWidget*>{ui_->empty, ui_->newest_button, ui_->empty_bring_button, ui_->progress,
-                                                           ui_->progress_words})
+    for (QWidget* widget : std::initializer_list<QWidget*>{ui_->empty, ui_->newest_button, ui_->empty_bring_button,
+                                                           ui_->empty_restore_button, ui_->progress, ui_->progress_words})
         widget->hide();
     ui_->body->show();
     const Place place = workplace().selection().place;
@@ -202,7 +207,6 @@ void CardsPage::show_cards()
         workplace().step_to(selection);
     }
     show_cylinder();
-    show_deeds();
 }
 
 void CardsPage::show_cylinder()
@@ -213,7 +217,9 @@ void CardsPage::show_cylinder()
     font.setPointSizeF(11.0);
     ui_->headline->setFont(font);
     ui_->headline->setText(card ? trust_headline(*cards_, *card)
-                                : tr("%1 has no card with this reading.").arg(place_title(cards_->engine(), Place::cylinder(cylinder_))));
+                           : withdrawn_in_hand()
+                               ? withdrawn_words(*judgement_, *withdrawn_in_hand())
+                               : tr("%1 has no card with this reading.").arg(place_title(cards_->engine(), Place::cylinder(cylinder_))));
     ui_->trust->document()->setDocumentMargin(0);
     ui_->trust->document()->setDefaultStyleSheet(sheet_style(theme()) + QStringLiteral("a { color: %1; }").arg(theme().watch.name()));
     ui_->trust->setHtml(card ? QStringLiteral("<body>%1</body>").arg(trust_html(*cards_, *card)) : QString());
@@ -227,6 +233,7 @@ void CardsPage::show_cylinder()
     ui_->results->setColumnHidden(CardRowsModel::difference, !compared);
     ui_->results->setFixedHeight(ui_->results->horizontalHeader()->sizeHint().height() + rows_.rowCount() * result_row + 2);
     show_view();
+    show_deeds();
 }
 
 void CardsPage::show_view()
@@ -342,6 +349,7 @@ void CardsPage::keyPressEvent(QKeyEvent* event)
     case Qt::Key_Z: ask_accept(); return;
     case Qt::Key_J: ask_healthy(); return;
     case Qt::Key_X: bring_in(); return;
+    case Qt::Key_Delete: ask_withdraw(); return;
     default: Page::keyPressEvent(event);
     }
 }

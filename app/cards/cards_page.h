@@ -24,7 +24,8 @@ class CardPlot;
 /// differs from the healthy one, where in the cycle and on which cylinders.
 ///
 /// Keys: 1 to 7 the views; arrows the cylinders; Page Up and Page Down the readings that have cards; comma and full stop
-/// the cursor; + - 0 the zoom; A the table; Z the results into the reading; J calls the cards healthy; X brings in cards.
+/// the cursor; + - 0 the zoom; A the table; Z the results into the reading; J calls the cards healthy; X brings in cards;
+/// Delete withdraws the card in hand, or brings back the one that was withdrawn.
 class CardsPage : public Page
 {
     Q_OBJECT
@@ -45,6 +46,8 @@ public:
     bool accept_results(const storage::Signature& by);
     /// Calls the cards that are shown healthy, or takes that back.
     bool call_healthy(bool healthy, const storage::Signature& by);
+    /// Takes the card in hand out of use, or brings the one withdrawn last back where the cylinder has none.
+    bool withdraw_or_bring_back(const storage::Signature& by);
     /// By the file's ending: png, pdf or csv. Says under the results what stood in the way.
     bool save_as(const QString& path);
 
@@ -80,6 +83,9 @@ private:
     void ask_accept();
     void ask_healthy();
     bool called_healthy() const;
+    void ask_withdraw();
+    const CardsStored::Entry* card_in_hand() const;
+    const CardsStored::Withdrawn* withdrawn_in_hand() const;
     void ask_file();
 
     std::unique_ptr<Ui::CardsPage> ui_;

@@ -7,6 +7,7 @@
 #include "app/desk/number_text.h"
 #include "app/desk/reading_in_hand.h"
 #include "app/desk/sheet_page.h"
+#include "app/desk/suggested_file.h"
 #include "app/desk/workplace.h"
 #include "ui_cards_page.h"
 
@@ -17,7 +18,6 @@
 #include <QMimeData>
 #include <QPrinter>
 #include <QSaveFile>
-#include <QStandardPaths>
 #include <QTextDocument>
 
 namespace evenstroke {
@@ -69,8 +69,14 @@ void CardsPage::copy()
 
 void CardsPage::ask_file()
 {
-    const QString folder = QStandardPaths::writableLocation(QStandardPaths::DocumentsLocation);
-    const QString path = QFileDialog::getSaveFileName(this, tr("Save the card"), folder + QStringLiteral("/card.pdf"),
+    if (!cards_ || !reading_)
+        return;
+    const EngineRecord& record = *judgement_->record;
+    const QString proposed = suggested_file({to_qstring(record.vessel.name), to_qstring(record.engine.name),
+                                             to_qstring(date_text(record.readings[*reading_].taken_at.utc)),
+                                             place_title(record.engine, Place::cylinder(cylinder_))},
+                                            QStringLiteral(".pdf"));
+    const QString path = QFileDialog::getSaveFileName(this, tr("Save the card"), proposed,
                                                       tr("Picture for paper (*.pdf);;Picture (*.png);;Table (*.csv)"));
     if (!path.isEmpty())
         save_as(path);

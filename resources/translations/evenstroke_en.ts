@@ -6,6 +6,13 @@
 <context>
     <name>evenstroke::CardsPage</name>
     <message numerus="yes">
+        <source>%n value(s) it gave the reading are taken out.</source>
+        <translation>
+            <numerusform>The one value it gave the reading is taken out.</numerusform>
+            <numerusform>The %n values it gave the reading are taken out.</numerusform>
+        </translation>
+    </message>
+    <message numerus="yes">
         <source>%n value(s) put in</source>
         <translation>
             <numerusform>1 value put in</numerusform>

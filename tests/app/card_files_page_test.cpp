@@ -210,6 +210,25 @@ TEST_F(CardFilesDesk, TakesADoubtfulCardOnlyByASecondStep)
     EXPECT_EQ(cards().front().cylinder, 2);
 }
 
+TEST_F(CardFilesDesk, AsksWhereTheSameSamplesStandInAnotherReading)
+{
+    page_->add_files({write(QStringLiteral("cyl1.csv"))});
+    choose_megapascal();
+    ASSERT_TRUE(page_->take_in(second_)) << page_->outcome().toStdString();
+    page_->forget_files();
+    workplace_->select(with_reading_step(workplace_->selection(), *workplace_->judgement(), -1));
+    page_->refresh();
+    page_->add_files({write(QStringLiteral("cyl1.csv"))});
+    wait();
+    EXPECT_TRUE(words("into").contains(QStringLiteral("the same samples stand already as the card of cylinder 1 in the reading of")))
+        << words("into").toStdString();
+    EXPECT_TRUE(button("doubtful_button").isVisible());
+    workplace_->select(with_reading_step(workplace_->selection(), *workplace_->judgement(), 1));
+    page_->refresh();
+    wait();
+    EXPECT_FALSE(button("doubtful_button").isVisible()) << "that is the card itself";
+}
+
 TEST_F(CardFilesDesk, SaysThatAKeptLayoutDoesNotFitAndLooksAnew)
 {
     page_->add_files({write(QStringLiteral("cyl1.csv"))});

@@ -245,6 +245,42 @@ TEST_F(CardsDesk, CardsCalledHealthyAreWhatOthersAreComparedWith)
     EXPECT_TRUE(widget<QPushButton>("healthy_button").text().contains(QStringLiteral("are healthy")));
 }
 
+TEST_F(CardsDesk, AWithdrawnCardSaysWhyAndComesBack)
+{
+    show();
+    const int cylinder = page_->cylinder();
+    EXPECT_TRUE(widget<QPushButton>("withdraw_button").text().contains(QStringLiteral("withdraw")));
+    ASSERT_TRUE(page_->withdraw_or_bring_back({"A. Tester", "the cock was choked"})) << widget<QLabel>("done").text().toStdString();
+    const auto gone = [&] { return page_->cards() && !page_->evaluating() && !page_->cards()->find(cylinder); };
+    ASSERT_TRUE(QTest::qWaitFor(gone, patience));
+    page_->refresh();
+    EXPECT_EQ(page_->cylinder(), cylinder) << "the eye stays where it was";
+    const QString headline = widget<QLabel>("headline").text();
+    EXPECT_TRUE(headline.contains(QStringLiteral("was withdrawn on")) && headline.contains(QStringLiteral("A. Tester: the cock was choked")))
+        << headline.toStdString();
+    EXPECT_TRUE(widget<QPushButton>("withdraw_button").text().contains(QStringLiteral("back")));
+    ASSERT_TRUE(page_->withdraw_or_bring_back({"A. Tester", "it was another cock"})) << widget<QLabel>("done").text().toStdString();
+    ASSERT_TRUE(QTest::qWaitFor([&] { return page_->cards() && !page_->evaluating() && page_->cards()->find(cylinder); }, patience));
+}
+
+TEST_F(CardsDesk, AReadingWhoseCardsAreAllWithdrawnSaysSoAndGivesThemBack)
+{
+    show();
+    const std::string name = reading_name();
+    for (int left = judgement().record->engine.cylinders; left > 0; --left) {
+        for (int step = 0; step < judgement().record->engine.cylinders && !page_->cards()->find(page_->cylinder()); ++step)
+            key(Qt::Key_Right);
+        ASSERT_TRUE(page_->withdraw_or_bring_back({"A. Tester", "the indicator was out of order"}));
+        ASSERT_TRUE(QTest::qWaitFor([&] { page_->refresh(); return !page_->evaluating() && (left == 1 ? !page_->cards() : page_->cards() && static_cast<int>(page_->cards()->review.cards.size()) == left - 1); }, patience)) << left;
+    }
+    EXPECT_EQ(reading_name(), name);
+    EXPECT_TRUE(widget<QLabel>("empty").text().contains(QStringLiteral("no cards in use"))) << widget<QLabel>("empty").text().toStdString();
+    EXPECT_TRUE(widget<QPushButton>("empty_restore_button").isVisible());
+    ASSERT_TRUE(page_->withdraw_or_bring_back({"A. Tester", "it was in order"}));
+    ASSERT_TRUE(QTest::qWaitFor([&] { page_->refresh(); return page_->cards() && !page_->evaluating(); }, patience));
+    EXPECT_EQ(page_->cards()->review.cards.size(), 1U);
+}
+
 TEST_F(CardsDesk, AReadingWithoutCardsSaysSoAndLeadsToOneThatHasThem)
 {
     Selection selection = workplace_.selection();
