@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/desk/number_text.h"
+#include "app/desk/suggested_file.h"
 #include "app/desk/workplace.h"
 #include "app/survey/survey_page.h"
 #include "ui_survey_page.h"
@@ -9,7 +10,6 @@
 #include <QFileInfo>
 #include <QPrintDialog>
 #include <QPrinter>
-#include <QStandardPaths>
 
 /// Saving and printing: page by page, so that the window stays alive and can stop it.
 namespace evenstroke {
@@ -17,9 +17,10 @@ namespace evenstroke {
 QString SurveyPage::suggested_path(const QString& ending) const
 {
     const auto layout = maker_.layout();
-    QString name = layout ? to_qstring(layout->report->ship + " " + layout->report->engine + " " + date_text(layout->report->period.to)) : tr("report");
-    name.replace(QLatin1Char(' '), QLatin1Char('_')).replace(QLatin1Char('/'), QLatin1Char('-'));
-    return QDir(QStandardPaths::writableLocation(QStandardPaths::DocumentsLocation)).filePath(name.toLower() + ending);
+    return suggested_file(layout ? QStringList{to_qstring(layout->report->ship), to_qstring(layout->report->engine),
+                                               to_qstring(date_text(layout->report->period.to))}
+                                 : QStringList{tr("report")},
+                          ending);
 }
 
 void SurveyPage::ask_save()

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // The column beside the plot, and what leaves the page: copies, files, paper.
 #include "app/desk/number_text.h"
+#include "app/desk/suggested_file.h"
 #include "app/desk/workplace.h"
 #include "app/trends/flag_note_dialog.h"
 #include "app/trends/trend_page.h"
@@ -16,7 +17,6 @@
 #include <QMimeData>
 #include <QPrinter>
 #include <QSaveFile>
-#include <QStandardPaths>
 
 namespace evenstroke {
 
@@ -142,8 +142,14 @@ void TrendPage::copy()
 
 void TrendPage::ask_file()
 {
-    const QString folder = QStandardPaths::writableLocation(QStandardPaths::DocumentsLocation);
-    const QString path = QFileDialog::getSaveFileName(this, tr("Save the trend"), folder + QStringLiteral("/trend.pdf"),
+    const auto judgement = workplace().judgement();
+    if (!judgement)
+        return;
+    const EngineRecord& record = *judgement->record;
+    const Selection& selection = workplace().selection();
+    const QString proposed = suggested_file({to_qstring(record.vessel.name), to_qstring(record.engine.name), selection.quantity ? to_qstring(quantity(*selection.quantity).name) : tr("trend"),
+                                             place_title(record.engine, selection.place)}, QStringLiteral(".pdf"));
+    const QString path = QFileDialog::getSaveFileName(this, tr("Save the trend"), proposed,
                                                       tr("Picture for paper (*.pdf);;Picture (*.png);;Table (*.csv)"));
     if (!path.isEmpty())
         save_as(path);
