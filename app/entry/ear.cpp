@@ -76,6 +76,9 @@ void Ear::resizeEvent(QResizeEvent* event)
 
 void Ear::fit()
 {
+    if (fitting_) // showing a part lays out what is around it at once
+        return;
+    fitting_ = true;
     // What is said of the reading so far stands on the closed page too, and the doubt elsewhere under the sheet.
     const std::array<std::pair<QWidget*, bool>, 5> least_first{
         {{ui_->keys, true},
@@ -93,6 +96,7 @@ void Ear::fit()
     }
     layout()->invalidate(); // so that the parts take their new places at once
     layout()->activate();
+    fitting_ = false;
 }
 
 QString Ear::newest() const

@@ -40,6 +40,12 @@ public:
     const QString& second_suggestion() const { return second_suggestion_; }
     QString sentence() const;
 
+    // What stands in it never asks for more or less room: the height is what the window leaves, and fit() fills it. Else
+    // each part shown or hidden would lay the window out anew, and so the ear, for ever.
+    QSize sizeHint() const override { return {QWidget::sizeHint().width(), 0}; }
+    QSize minimumSizeHint() const override { return {QWidget::minimumSizeHint().width(), 0}; }
+    bool hasHeightForWidth() const override { return false; }
+
 signals:
     void take_suggestion();
     void take_second();
@@ -60,6 +66,7 @@ private:
 
     std::unique_ptr<Ui::Ear> ui_;
     QString suggestion_, second_suggestion_;
+    bool fitting_ = false;
 };
 
 } // namespace evenstroke
