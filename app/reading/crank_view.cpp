@@ -211,8 +211,8 @@ SideView crank_view(const Judgement& judgement, std::size_t reading, const Cards
     SideView view;
     const Engine& engine = judgement.record->engine;
     if (cards.empty()) {
-        view.empty = tr_("No indicator cards are stored with this reading. Put them as cards/READING/CYLINDER.csv into the engine's "
-                         "folder and take it in on the page History (key H).");
+        view.empty = tr_("No indicator cards are stored with this reading. Key X brings in the files of the indicator; or put them as "
+                         "cards/READING/CYLINDER.csv into the engine's folder and take it in on the page History (key H).");
         return view;
     }
     const int shown = cards.contains(cylinder) ? cylinder : cards.begin()->first;

@@ -3,7 +3,6 @@
 
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
-#include "app/reading/sheet_number.h"
 
 #include <QFontMetrics>
 #include <QRect>
@@ -15,7 +14,7 @@ namespace {
 
 using namespace review_sizes;
 
-constexpr int fewest_words = 184, fewest_verdict = 110, name_margin = 4, verdict_margins = 12, head_margins = 10;
+constexpr int fewest_words = 170, fewest_verdict = 96, name_margin = 4, verdict_margins = 12, head_margins = 10;
 
 bool is_number(int column)
 {
@@ -41,20 +40,14 @@ int further_lines(const ReviewRow& row, const ReviewColumns& columns)
     return static_cast<int>(name_lines(to_qstring(row.line->words), room).size() - 1) * name_line;
 }
 
+/// Rows of one quantity have the same decimals: right-aligned they stand on the decimal sign.
 void measure_number(const ReviewModel& model, int column, ReviewColumns& columns)
 {
     const QFontMetrics metrics(type(TypeSize::body, column == ReviewModel::deviation)); // bold where it tells
-    int whole = 0, fraction = 0;
-    for (int row = 0; row < model.rowCount(); ++row) {
-        if (!model.row(row)->line)
-            continue;
-        const auto [left, right] = at_decimal_sign(model.index(row, column).data().toString());
-        whole = std::max(whole, metrics.horizontalAdvance(left));
-        fraction = std::max(fraction, metrics.horizontalAdvance(right));
-    }
-    const std::size_t at = static_cast<std::size_t>(column);
-    columns.fraction[at] = fraction;
-    columns.width[at] = std::max(columns.width[at], whole + fraction + gap);
+    int& width = columns.width[static_cast<std::size_t>(column)];
+    for (int row = 0; row < model.rowCount(); ++row)
+        if (model.row(row)->line)
+            width = std::max(width, metrics.horizontalAdvance(model.index(row, column).data().toString()) + gap);
 }
 
 void measure_small(const ReviewModel& model, int column, ReviewColumns& columns)
@@ -149,6 +142,10 @@ ReviewColumns measure_columns(const ReviewModel& model, int room)
             measure_number(model, column, columns);
         else
             measure_small(model, column, columns);
+    // Where the room is short, what the workings beside the table say too goes first.
+    for (const int spare : {ReviewModel::deviation_half_width, ReviewModel::corrected, ReviewModel::half_width, ReviewModel::expected})
+        if (room - columns.between(ReviewModel::place, ReviewModel::verdict) < fewest_words + fewest_verdict)
+            columns.width[static_cast<std::size_t>(spare)] = 0;
     const int place_width = columns.width[ReviewModel::place];
     int words = fewest_words;
     for (int row = 0; row < model.rowCount(); ++row)

@@ -22,8 +22,7 @@ inline constexpr int name_line = 16;
 
 struct ReviewColumns
 {
-    std::array<int, ReviewModel::column_count> width{};
-    std::array<int, ReviewModel::column_count> fraction{}; ///< room behind the decimal sign, the sign included
+    std::array<int, ReviewModel::column_count> width{}; ///< 0: left out, as the page is too narrow for it
     std::vector<int> note; ///< height of a line under the row for a verdict that has no room in it; 0: none. One a row
     std::vector<int> name; ///< height of the further lines of a long name; 0: it has one. One a row
     /// Height of a row of this number.

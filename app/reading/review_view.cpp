@@ -2,7 +2,6 @@
 #include "app/reading/review_view.h"
 
 #include "app/desk/theme.h"
-#include "app/reading/sheet_number.h"
 
 #include <QHeaderView>
 #include <QKeyEvent>
@@ -71,7 +70,7 @@ public:
 private:
     void paint_heading(QPainter& painter, const QRect& area, const ReviewSection& section, const Theme& t) const
     {
-        const QRect top(area.left() + 4, area.top() + heading_top, area.width() - 8, row_height);
+        const QRect top(area.left() + 4, area.top() + heading_top, std::min(area.width(), view_.viewport()->width()) - 8, row_height);
         painter.setFont(heading_font());
         painter.setPen(t.ink);
         const QString title = to_qstring(section.title);
@@ -176,11 +175,7 @@ private:
         const bool tells = column == ReviewModel::deviation && has_mark(row.line->level);
         painter.setFont(type(TypeSize::body, tells));
         painter.setPen(column == ReviewModel::value || column == ReviewModel::deviation ? t.ink : t.muted);
-        const auto [left, right] = at_decimal_sign(words);
-        const int fraction = view_.columns().fraction[static_cast<std::size_t>(column)];
-        const int sign = area.right() - head_padding - fraction;
-        painter.drawText(QRect(area.left(), area.top(), sign - area.left(), area.height()), Qt::AlignRight | Qt::AlignVCenter, left);
-        painter.drawText(QRect(sign, area.top(), fraction + 4, area.height()), Qt::AlignLeft | Qt::AlignVCenter, right);
+        painter.drawText(area.adjusted(0, 0, -head_padding, 0), Qt::AlignRight | Qt::AlignVCenter, words);
     }
 
     void paint_verdict(QPainter& painter, const QRect& area, const QString& words, Level level, const Theme& t) const
@@ -256,8 +251,12 @@ void ReviewView::go_to(int row)
 void ReviewView::set_sizes()
 {
     columns_ = measure_columns(model_, viewport()->width());
-    for (int column = 0; column < ReviewModel::column_count; ++column)
-        setColumnWidth(column, columns_.width[static_cast<std::size_t>(column)]);
+    for (int column = 0; column < ReviewModel::column_count; ++column) {
+        const int wide = columns_.width[static_cast<std::size_t>(column)];
+        setColumnHidden(column, wide == 0);
+        if (wide > 0)
+            setColumnWidth(column, wide);
+    }
     for (int row = 0; row < model_.rowCount(); ++row)
         setRowHeight(row, model_.row(row)->line ? columns_.height(row)
                                                 : heading_height(*model_.row(row)->section, viewport()->width() - 8));

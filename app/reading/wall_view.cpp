@@ -196,8 +196,19 @@ void add_iron_rows(FigureTable& table, const std::vector<EquivalentIron>& parts)
     table.rows.push_back({tr_("all as iron, mm"), QString(), number_text(total, 1), QString()});
 }
 
-QString result_words(const WallDescription& wall, const WallChange& change)
+/// Whether the reading was taken at another load than the wall was described at.
+bool is_other_load(const std::optional<double>& load, const WallDescription& wall)
 {
+    return load && std::abs(*load - wall.load_percent) > other_load_percent;
+}
+
+QString result_words(const WallDescription& wall, const WallChange& change, const std::optional<double>& load)
+{
+    if (is_other_load(load, wall)) // the gas is another one there, and nobody has said how
+        return tr_("Hottest point of the %1: not known at %2 % load, since it is described at %3 %. What this reading's coolant would make "
+                   "of it at %3 %: %4, %5 K against its description.")
+            .arg(to_qstring(wall.part), number_text(*load, 0), number_text(wall.load_percent, 0), degrees(in_celsius(change.after.inner_wall)),
+                 signed_text(change.inner_wall.value(), 0));
     HottestPoint point;
     point.wall = change.after.inner_wall;
     point.flux_ratio = change.flux_ratio;
@@ -258,7 +269,7 @@ QString assumption_words(const Judgement& judgement, std::size_t reading, const 
 {
     QStringList words{tr_("Relative to the description, no claim of its own.")};
     const auto& load = judgement.readings[reading].load_percent;
-    if (load && std::abs(*load - wall.load_percent) > other_load_percent)
+    if (is_other_load(load, wall))
         words.append(tr_("It was described at %1 % load; this reading was taken at %2 %.")
                          .arg(number_text(wall.load_percent, 0), number_text(*load, 0)));
     if (trial.coolant)
@@ -300,7 +311,7 @@ SideView wall_view(const Judgement& judgement, std::size_t reading, std::size_t 
         view.empty = to_qstring(change.error().text());
         return view;
     }
-    view.sentence = result_words(wall, change.value());
+    view.sentence = result_words(wall, change.value(), judgement.readings[reading].load_percent);
     view.second_sentence = assumption_words(judgement, reading, wall, now, trial) + u' ' + gas_words;
     view.table = wall_table(before, after, change.value());
     const auto iron_before = equivalent_iron(before), iron_after = equivalent_iron(after);

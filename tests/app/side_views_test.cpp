@@ -188,6 +188,15 @@ TEST(WallView, SaysWhatTheCoreSaysOfTheTrial)
     keep(iron, QStringLiteral("wall_iron"));
 }
 
+TEST(WallView, ClaimsNoTemperatureAtAnotherLoadThanTheDescriptions)
+{
+    Described engine = described();
+    engine.judgement.readings[engine.newest].load_percent = 40.0;
+    const SideView view = wall_view(engine.judgement, engine.newest, 0, {});
+    EXPECT_TRUE(view.sentence.contains(QStringLiteral("not known at 40 % load"))) << view.sentence.toStdString();
+    EXPECT_FALSE(view.sentence.contains(QStringLiteral("weakens")));
+}
+
 TEST(WallView, SaysWhatBelongsThereWhereNoWallIsDescribed)
 {
     EXPECT_TRUE(wall_view(described(true, false).judgement, 0, 0, {}).empty.contains(QStringLiteral("walls")));
