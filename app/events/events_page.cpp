@@ -18,6 +18,9 @@ namespace {
 
 constexpr int kinds_across = 4;
 
+/// As the field for the date holds it.
+QString date_of(const Event& event) { return to_qstring(event.date_only ? date_text(event.date.utc) : utc_text(event.date.utc)); }
+
 void fill_quantities(QComboBox& box)
 {
     box.addItem(EventsPage::tr("not said"), QString());
@@ -221,12 +224,21 @@ std::optional<Event> EventsPage::in_hand() const
     return selected ? std::optional<Event>(*selected) : std::nullopt;
 }
 
+/// What an event does to the comparison, and on which side of it a reading of the same day stands.
+QString EventsPage::effect_words(const Event& event) const
+{
+    const QString effect = to_qstring(event_effect_sentence(event, engine_));
+    const auto judgement = workplace().judgement();
+    const QString same_day = judgement ? to_qstring(same_day_sentence(event, *judgement->record)) : QString();
+    return same_day.isEmpty() ? effect : effect + u' ' + same_day;
+}
+
 void EventsPage::show_in_hand()
 {
     const auto event = in_hand();
     const bool row = event && !typing();
     ui_->in_hand->setText(typing() ? tr("The event being typed") : row ? tr("The event in hand") : tr("No event in hand"));
-    ui_->effect->setText(event ? to_qstring(event_effect_sentence(*event, engine_)) : QString());
+    ui_->effect->setText(event ? effect_words(*event) : QString());
     ui_->effect->setVisible(event.has_value());
     const QString reminder = event ? to_qstring(record_book_reminder(*event)) : QString();
     ui_->reminder->setText(reminder);
@@ -236,7 +248,7 @@ void EventsPage::show_in_hand()
     ui_->why_field->setEnabled(row);
     ui_->remove_button->setEnabled(row && !workplace().read_only());
     ui_->save_button->setEnabled(event.has_value() && !workplace().read_only());
-    ui_->date_field->setText(event ? to_qstring(date_text(event->date.utc)) : QString());
+    ui_->date_field->setText(event ? date_of(*event) : QString());
     if (typing())
         return;
     ui_->hours_field->setText(row && event->running_hours ? number_text(*event->running_hours, 0) : QString());
@@ -248,12 +260,13 @@ void EventsPage::show_in_hand()
 
 Result<Event> EventsPage::with_fields(Event event) const
 {
-    const auto day = parse_date(ui_->date_field->text().trimmed().toStdString());
+    const QString written = ui_->date_field->text().trimmed();
+    const auto day = parse_date(written.toStdString());
     if (!day.has_value())
         return day.error();
-    if (date_text(event.date.utc) != date_text(day.value().utc)) {
+    if (written != date_of(event)) {
         event.date = day.value();
-        event.date_only = true;
+        event.date_only = !written.contains(u'T', Qt::CaseInsensitive);
     }
     event.running_hours.reset();
     if (const QString hours = ui_->hours_field->text().trimmed(); !hours.isEmpty() && ui_->hours_field->isEnabled()) {
@@ -312,7 +325,7 @@ void EventsPage::say_added(const Event& event)
     QStringList parts;
     for (const int column : {EventModel::what, EventModel::part, EventModel::date})
         parts.append(model_.text_of(event, column));
-    ui_->added->setText(tr("Added: %1. %2").arg(parts.join(QStringLiteral(", ")), to_qstring(event_effect_sentence(event, engine_))));
+    ui_->added->setText(tr("Added: %1. %2").arg(parts.join(QStringLiteral(", ")), effect_words(event)));
     ui_->added_line->show();
 }
 

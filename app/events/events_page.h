@@ -58,6 +58,7 @@ private:
     bool typing() const { return !typing_.empty(); }
     std::optional<Event> in_hand() const;
     Result<Event> with_fields(Event event) const;
+    QString effect_words(const Event& event) const;
     void show_in_hand();
     void show_line();
     void say(const QString& words);

@@ -2,6 +2,7 @@
 #include "core/explanation/event_effect.h"
 
 #include "core/sentence_words.h"
+#include "core/trend/drift_input.h"
 
 #include <algorithm>
 
@@ -74,6 +75,26 @@ std::string event_effect_sentence(const Event& event, const Engine& engine)
     if (kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_offset)
         return instrument_sentence(*kind, event, engine);
     return "A mark on the trends; the comparison goes on.";
+}
+
+std::string same_day_sentence(const Event& event, const EngineRecord& record)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    if (!kind || !event.date_only || (kind->effect != EventKind::Effect::new_segment && kind->effect != EventKind::Effect::new_offset))
+        return {};
+    const auto day = std::chrono::floor<std::chrono::days>(event.date.utc);
+    const std::size_t first_after = first_reading_after(record, event);
+    for (std::size_t i = record.readings.size(); i-- > 0;) {
+        const TimePoint taken = record.readings[i].taken_at.utc;
+        if (std::chrono::floor<std::chrono::days>(taken) != day)
+            continue;
+        const bool after = i >= first_after;
+        const TimePoint other = after ? taken + std::chrono::hours(1) : taken - std::chrono::hours(1);
+        return "A reading was taken on that day, at " + utc_text(taken) + ". It counts as taken " +
+               (after ? "after" : "before") + " this, since a day without a time stands for noon. If it was " +
+               (after ? "before" : "after") + ", write the time into the date, such as " + utc_text(other) + ".";
+    }
+    return {};
 }
 
 std::string record_book_reminder(const Event& event)

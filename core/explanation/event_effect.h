@@ -3,6 +3,7 @@
 
 #include "core/engine/engine.h"
 #include "core/reading/reading.h"
+#include "core/trend/judgement.h"
 
 #include <string>
 
@@ -13,6 +14,9 @@ namespace evenstroke {
 std::string event_effect_word(const Event& event);
 /// One sentence: "From here on cylinder 4 is compared anew: eight usable readings are needed before it can be flagged."
 std::string event_effect_sentence(const Event& event, const Engine& engine);
+/// Where an event without a time of day has a reading of the engine on its day: on which side of the work that counts, and
+/// how to say otherwise. Empty where there is none, or where the kind starts nothing anew.
+std::string same_day_sentence(const Event& event, const EngineRecord& record);
 /// For kinds that touch the engine's technical file: where the entry belongs. Empty for the others.
 /// @par Source NOx Technical Code 2008, 6.2.2 and 6.2.3 (record book of engine parameters)
 std::string record_book_reminder(const Event& event);

@@ -94,6 +94,20 @@ TEST_F(EventsDesk, SaysWhatWasAddedAndTakesItBackAtOnce)
     EXPECT_FALSE(undo->isVisible());
 }
 
+TEST_F(EventsDesk, ADayMayBeGivenItsTime)
+{
+    auto& date = *page_->findChild<QLineEdit*>("date_field");
+    QTest::keyClick(box_, Qt::Key_O);
+    QTest::keyClick(box_, Qt::Key_4);
+    date.setText(QStringLiteral("2031-03-12T15:00Z"));
+    QTest::keyClick(&date, Qt::Key_Return);
+    ASSERT_EQ(stored().size(), 1u) << words("problem").toStdString();
+    EXPECT_FALSE(stored()[0].date_only);
+    EXPECT_EQ(utc_text(stored()[0].date.utc), "2031-03-12T15:00Z");
+    diary().setCurrentIndex(diary().model()->index(0, 0));
+    EXPECT_EQ(date.text(), QStringLiteral("2031-03-12T15:00Z")) << "and keeps it when another field is changed";
+}
+
 TEST_F(EventsDesk, ArrowKeysMoveTheDay)
 {
     QTest::keyClick(box_, Qt::Key_W);

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/explanation/event_effect.h"
 #include "core/reading/running_hours.h"
+#include "core/trend/drift_input.h"
 #include "tests/core/survey_fixture.h"
 
 #include <gtest/gtest.h>
@@ -54,6 +55,26 @@ TEST(EventEffect, WashAndDockingAreMarks)
         EXPECT_EQ(event_effect_word(event_of(kind, Place::engine())), "mark only") << kind;
         EXPECT_TRUE(contains(event_effect_sentence(event_of(kind, Place::engine()), make_engine(6)), "goes on")) << kind;
     }
+}
+
+TEST(EventEffect, SaysOnWhichSideOfItAReadingOfTheSameDayStands)
+{
+    const Judgement judgement = make_judgement();
+    const EngineRecord& record = *judgement.record;
+    const TimePoint taken = record.readings[4].taken_at.utc;
+    Event event = event_of("overhaul", Place::cylinder(4));
+    event.date.utc = std::chrono::floor<std::chrono::days>(taken);
+    const bool after = first_reading_after(record, event) <= 4;
+    const std::string words = same_day_sentence(event, record);
+    EXPECT_TRUE(contains(words, utc_text(taken))) << words;
+    EXPECT_TRUE(contains(words, after ? "counts as taken after this" : "counts as taken before this")) << words;
+    event.date.utc = taken + (after ? std::chrono::hours(1) : std::chrono::hours(-1));
+    event.date_only = false;
+    EXPECT_TRUE(same_day_sentence(event, record).empty()) << "a time leaves nothing open";
+    EXPECT_EQ(first_reading_after(record, event) <= 4, !after) << "and puts the reading on the other side";
+    event = event_of("overhaul", Place::cylinder(4));
+    event.date.utc = std::chrono::floor<std::chrono::days>(taken) + std::chrono::days(3);
+    EXPECT_TRUE(same_day_sentence(event, record).empty());
 }
 
 TEST(EventEffect, RemindsOfTheRecordBookWhereTheTechnicalFileIsTouched)
