@@ -113,6 +113,15 @@ bool is_only_flagged(const SubjectExplanation& subject)
     return subject.flagged && subject.history.empty() && subject.causes.empty() && subject.cautions.empty();
 }
 
+bool was_read(const SubjectExplanation& subject, const std::string& quantity_name)
+{
+    for (const Hypothesis& cause : subject.causes)
+        for (const QuantityEvidence& evidence : cause.evidence)
+            if (fault_quantities()[evidence.quantity].name == quantity_name && evidence.says != QuantityEvidence::Says::not_read)
+                return true;
+    return false;
+}
+
 std::string cannot_tell_sentence(const SubjectExplanation& subject)
 {
     std::vector<std::string> equals;
@@ -121,8 +130,10 @@ std::string cannot_tell_sentence(const SubjectExplanation& subject)
         if (!one.as_likely_as_first)
             continue;
         equals.push_back(one.fault->title);
-        const std::string found = telling_observation(subject.causes.front().fault->id, one.fault->id);
-        const std::string observation = found.empty() ? one.fault->title + ": " + lower_first(one.fault->sets_apart) : found;
+        const TellingObservation found = telling_observation(subject.causes.front().fault->id, one.fault->id);
+        std::string observation = found.words.empty() ? one.fault->title + ": " + lower_first(one.fault->sets_apart) : found.words;
+        if (was_read(subject, found.quantity))
+            observation += " It was read and does not part them clearly: read it again with the next reading.";
         if (observations.find(observation) == std::string::npos)
             observations += " " + observation;
     }

@@ -106,7 +106,8 @@ std::vector<Fault> load_faults()
 
 struct FaultPair
 {
-    std::string first, second, observation;
+    std::string first, second;
+    TellingObservation observation;
 };
 
 const std::vector<FaultPair>& fault_pairs()
@@ -115,7 +116,8 @@ const std::vector<FaultPair>& fault_pairs()
         const CatalogueTable table(catalogue_text::fault_pairs);
         std::vector<FaultPair> loaded;
         for (std::size_t row = 0; row < table.rows(); ++row)
-            loaded.push_back({table.cell(row, "first"), table.cell(row, "second"), table.cell(row, "observation")});
+            loaded.push_back({table.cell(row, "first"), table.cell(row, "second"),
+                              {table.cell(row, "observation"), table.cell(row, "quantity")}});
         return loaded;
     }();
     return pairs;
@@ -177,7 +179,7 @@ const Fault* find_fault(std::string_view id)
     return nullptr;
 }
 
-std::string telling_observation(std::string_view one, std::string_view other)
+TellingObservation telling_observation(std::string_view one, std::string_view other)
 {
     for (const FaultPair& pair : fault_pairs())
         if ((pair.first == one && pair.second == other) || (pair.first == other && pair.second == one))

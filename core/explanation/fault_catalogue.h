@@ -65,12 +65,19 @@ struct Fault
     bool possible_on(const Engine& engine) const;
 };
 
+/// The cheapest observation that would tell two faults apart.
+struct TellingObservation
+{
+    std::string words;    ///< empty: none is known
+    std::string quantity; ///< fault quantity that it is about; empty: nothing that a reading holds
+};
+
 std::span<const FaultQuantity> fault_quantities();
 /// Index of a column; none where there is no such quantity.
 std::optional<std::size_t> find_fault_quantity(std::string_view name);
 std::span<const Fault> all_faults();
 const Fault* find_fault(std::string_view id);
 /// The cheapest observation that would tell two causes apart; empty where the catalogue has none.
-std::string telling_observation(std::string_view one, std::string_view other);
+TellingObservation telling_observation(std::string_view one, std::string_view other);
 
 } // namespace evenstroke

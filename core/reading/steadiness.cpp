@@ -164,6 +164,9 @@ Finding judge_change(const Criterion& criterion, const Reading& reading, double 
                     limit_words(plain_number(steady, 0) + unit_words, plain_number(care, 0) + unit_words,
                                 finding.verdict) +
                     ")";
+    constexpr double no_engine_changes_so = 40.0; // per cent between the quick lines (estimate)
+    if (relative && amount > no_engine_changes_so)
+        finding.words += "; one of the two is probably miswritten: read both again";
     finding.before = pair->first;
     finding.after = pair->second;
     finding.amount = amount;

@@ -136,11 +136,11 @@ TEST(FaultCatalogue, EveryColumnIsReadFromSomethingThatReadingsHold)
 
 TEST(FaultCatalogue, LookAlikesHaveAnObservationThatTellsThemApart)
 {
-    EXPECT_NE(telling_observation("turbine_efficiency_loss", "exhaust_back_pressure_high").find("back-pressure gauge"),
+    EXPECT_NE(telling_observation("turbine_efficiency_loss", "exhaust_back_pressure_high").words.find("back-pressure gauge"),
               std::string::npos);
-    EXPECT_EQ(telling_observation("exhaust_back_pressure_high", "turbine_efficiency_loss"),
-              telling_observation("turbine_efficiency_loss", "exhaust_back_pressure_high"));
-    EXPECT_TRUE(telling_observation("misfire", "heavy_running").empty());
+    EXPECT_EQ(telling_observation("exhaust_back_pressure_high", "turbine_efficiency_loss").words,
+              telling_observation("turbine_efficiency_loss", "exhaust_back_pressure_high").words);
+    EXPECT_TRUE(telling_observation("misfire", "heavy_running").words.empty());
 }
 
 std::vector<const Fault*> of_cylinder()

@@ -93,6 +93,14 @@ TEST(Steadiness, NamesTheCriterionThatDecidedWithBothValues)
     EXPECT_NE(verdict.sentence.find("3.00 %"), std::string::npos) << verdict.sentence;
 }
 
+TEST(Steadiness, AsksForASlipOfThePenWhereNoEngineChangesSo)
+{
+    const Reading slip = ReadingMaker().pair("turbocharger_speed", 12370, 23.8).done();
+    EXPECT_NE(judge_steadiness(slip, false).sentence.find("probably miswritten"), std::string::npos) << judge_steadiness(slip, false).sentence;
+    const Reading real = ReadingMaker().pair("turbocharger_speed", 12370, 10200).done();
+    EXPECT_EQ(judge_steadiness(real, false).sentence.find("miswritten"), std::string::npos) << judge_steadiness(real, false).sentence;
+}
+
 TEST(Steadiness, OfASteadyEngineNamesWhatWasNearestToItsLimit)
 {
     const SteadinessVerdict verdict =
