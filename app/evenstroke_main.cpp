@@ -13,6 +13,8 @@
 #include <QSettings>
 #include <QTextStream>
 
+#include <string_view>
+
 namespace {
 
 using namespace evenstroke;
@@ -55,10 +57,24 @@ int wrong_use(const QString& words)
     return 2;
 }
 
+/// Help and version need no screen.
+void answer_without_screen(int argc, char** argv)
+{
+    for (int i = 1; i < argc; ++i)
+        for (const char* const asked : {"--help", "-h", "--help-all", "--version", "-v"})
+            if (std::string_view(argv[i]) == asked) {
+                QCoreApplication application(argc, argv);
+                QCoreApplication::setApplicationName(QStringLiteral("evenstroke"));
+                QCoreApplication::setApplicationVersion(program_version());
+                read_command_line(QCoreApplication::arguments()); // answers and ends the program
+            }
+}
+
 } // namespace
 
 int main(int argc, char** argv)
 {
+    answer_without_screen(argc, argv);
     QApplication application(argc, argv);
     QApplication::setApplicationName(QStringLiteral("evenstroke"));
     QApplication::setOrganizationName(QStringLiteral("evenstroke"));

@@ -7,7 +7,8 @@
 #include "app/survey/report_sources.h"
 #include "app/survey/report_writer.h"
 
-#include <QDate>
+#include <algorithm>
+#include <chrono>
 
 namespace evenstroke::batch {
 namespace {
@@ -22,6 +23,14 @@ std::optional<TimePoint> read_day(const QCommandLineParser& parser, const char* 
         return day.value().utc;
     streams.err << "--" << option << ": " << QString::fromStdString(day.error().text()) << "\n";
     return std::nullopt;
+}
+
+/// Nobody can report of days to come. A ship whose clock is ahead of this machine's has its readings all the same.
+TimePoint end_of_period(TimePoint to, const std::vector<Reading>& readings)
+{
+    const TimePoint today = std::chrono::floor<std::chrono::seconds>(std::chrono::system_clock::now());
+    const TimePoint known = readings.empty() ? today : std::max(today, readings.back().taken_at.utc);
+    return std::min(to, TimePoint(std::chrono::floor<std::chrono::days>(known)));
 }
 
 /// All readings of the period where nothing is said, since whoever writes a period wants it; a sentence on err and nothing where it is none of the words.
@@ -53,7 +62,7 @@ int run_report(const QCommandLineParser& parser, Streams& streams)
     const auto depth = read_depth(parser, streams);
     if (!depth)
         return wrong_use;
-    TimePoint date = *to;
+    std::optional<TimePoint> date;
     if (parser.isSet(QStringLiteral("date"))) {
         const auto given = read_day(parser, "date", streams);
         if (!given)
@@ -70,10 +79,14 @@ int run_report(const QCommandLineParser& parser, Streams& streams)
     if (!sources.has_value())
         return refuse(streams, sources.error());
     ReportDetails details = sources.value().details;
-    details.date = date;
+    const TimePoint end = end_of_period(*to, sources.value().record->readings);
+    if (end < *to)
+        streams.err << "The period ends on " << QString::fromStdString(date_text(end)) << ": the days to "
+                    << QString::fromStdString(date_text(*to)) << " are still to come.\n";
+    details.date = date.value_or(end);
     details.depth = *depth;
     details.program_version = EVENSTROKE_VERSION;
-    const ReportPeriod period{*from, *to + 24h - 1s};
+    const ReportPeriod period{*from, end + 24h - 1s};
     const Judgement judgement = judge(sources.value().record);
     details.cards = review_newest_cards(*history.value(), judgement, period.from, period.to);
     const SurveyReport report = make_survey_report(judgement, period, details);

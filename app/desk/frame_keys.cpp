@@ -8,6 +8,7 @@
 
 #include <QAbstractButton>
 #include <QApplication>
+#include <QComboBox>
 #include <QDateTime>
 #include <QFileInfo>
 #include <QKeyEvent>
@@ -131,7 +132,8 @@ bool Frame::eventFilter(QObject* watched, QEvent* event)
     }
     if (!with_alt && (key->modifiers() & ~Qt::ShiftModifier) != Qt::NoModifier)
         return QWidget::eventFilter(watched, event);
-    const bool typing = widget->testAttribute(Qt::WA_InputMethodEnabled) || (current_ && current_->takes_letters());
+    // A closed list takes the first letters of its entries.
+    const bool typing = widget->testAttribute(Qt::WA_InputMethodEnabled) || qobject_cast<QComboBox*>(widget) || (current_ && current_->takes_letters());
     if (typing && !with_alt)
         return QWidget::eventFilter(watched, event);
     if (key->key() >= Qt::Key_A && key->key() <= Qt::Key_Z && take_letter(QChar(key->key())))
