@@ -61,18 +61,13 @@ private:
     History& history_;
     Signature by_;
     ReadingChange change_;
-    bool draft_ = false;
     AcceptedFromCards accepted_;
     std::string detail_;
 };
 
 Done CardValues::begin(const std::string& reading_id)
 {
-    const auto head = load_reading_row(history_, reading_id);
-    if (!head)
-        return head.error();
-    draft_ = head.value().state == ReadingState::draft;
-    return change_.begin(reading_id, draft_ ? ReadingState::draft : ReadingState::closed);
+    return change_.begin_unless_withdrawn(reading_id);
 }
 
 Done CardValues::put(const ValueFromCard& given)
@@ -104,7 +99,7 @@ Done CardValues::put(const ValueFromCard& given)
 
 Done CardValues::write(const ValueRow& before, const ValueRow& after, const Value& value)
 {
-    if (!draft_) {
+    if (!change_.is_draft()) {
         BOOST_OUTCOME_TRYV(keep_correction(history_, change_.reading().key, before, after, by_));
     }
     BOOST_OUTCOME_TRYV(change_.add_value(after));
@@ -118,7 +113,7 @@ Result<AcceptedFromCards> CardValues::finish()
 {
     if (accepted_.added + accepted_.corrected == 0)
         return std::move(accepted_); // nothing to commit
-    if (draft_) {
+    if (change_.is_draft()) {
         AuditWriter audit(history_, by_);
         BOOST_OUTCOME_TRYV(audit.add({"taken from cards", "reading", change_.reading().id, detail_, ""}));
         BOOST_OUTCOME_TRYV(change_.finish());

@@ -58,6 +58,14 @@ Done ReadingChange::begin(const std::string& reading_id, ReadingState state)
     return done();
 }
 
+Done ReadingChange::begin_unless_withdrawn(const std::string& reading_id)
+{
+    const auto row = load_reading_row(history_, reading_id);
+    if (!row)
+        return row.error();
+    return begin(reading_id, row.value().state == ReadingState::draft ? ReadingState::draft : ReadingState::closed);
+}
+
 ValueRow* ReadingChange::find(const ValueRow& where)
 {
     const auto found = std::find_if(values_.begin(), values_.end(),

@@ -18,6 +18,9 @@ public:
 
     /// Opens the transaction and reads the reading. @par Problems invalid_input: it is in another state
     Done begin(const std::string& reading_id, ReadingState state);
+    /// The same for a draft or a closed reading, whichever it is. @par Problems invalid_input: it is withdrawn
+    Done begin_unless_withdrawn(const std::string& reading_id);
+    bool is_draft() const { return reading_.state == ReadingState::draft; }
     const ReadingRow& reading() const { return reading_; }
     const OwnerKeys& owner() const { return owner_; }
     std::vector<ValueRow>& values() { return values_; }

@@ -92,12 +92,8 @@ Done ReadingStore::set_confirmed(const std::string& reading_id, const ValuePlace
                                  const Signature& by)
 {
     BOOST_OUTCOME_TRYV(check_signature(by, false));
-    const auto entry = load_reading_row(history_, reading_id);
-    if (!entry)
-        return entry.error();
-    const bool draft = entry.value().state == ReadingState::draft;
     ReadingChange change(history_, "the confirmation was not saved");
-    BOOST_OUTCOME_TRYV(change.begin(reading_id, draft ? ReadingState::draft : ReadingState::closed));
+    BOOST_OUTCOME_TRYV(change.begin_unless_withdrawn(reading_id));
     Value where;
     where.quantity = place.quantity;
     where.place = place.place;
@@ -115,8 +111,8 @@ Done ReadingStore::set_confirmed(const std::string& reading_id, const ValuePlace
     ValueRow confirmed_row = *found;
     confirmed_row.confirmed = confirmed;
     BOOST_OUTCOME_TRYV(change.add_value(confirmed_row));
-    return draft ? change.finish()
-                 : change.finish(confirmed ? "confirmed" : "no longer confirmed", value_name(where), by);
+    return change.is_draft() ? change.finish()
+                             : change.finish(confirmed ? "confirmed" : "no longer confirmed", value_name(where), by);
 }
 
 Done ReadingStore::withdraw(const std::string& reading_id, const Signature& by)

@@ -1,12 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Cards that are taken out of use, and brought back.
-#include "storage/card_packing.h"
 #include "storage/card_rows.h"
 #include "storage/reading_change.h"
 
 #include "core/plain_text.h"
-
-#include <optional>
 
 namespace evenstroke::storage {
 namespace {
@@ -36,19 +33,15 @@ Result<CardRow> find_card_row(History& history, const char* table, const std::st
                    "Look at the cards again; another window may have changed them."};
 }
 
-/// Begins the change of the reading that a card is of; answers whether that is a draft.
-Result<bool> begin(History& history, ReadingChange& change, const char* table, const std::string& card_id, const std::string& undone)
+/// Begins the change of the reading that a card is of; answers the card as it stands within the transaction, since another
+/// window may have been quicker.
+Result<CardRow> begin(History& history, ReadingChange& change, const char* table, const std::string& card_id, const std::string& undone)
 {
     const auto card = find_card_row(history, table, card_id, undone);
     if (!card)
         return card.error();
-    const std::string& reading_id = card.value().reading_id;
-    const auto reading = load_reading_row(history, reading_id);
-    if (!reading)
-        return reading.error();
-    const bool draft = reading.value().state == ReadingState::draft;
-    BOOST_OUTCOME_TRYV(change.begin(reading_id, draft ? ReadingState::draft : ReadingState::closed));
-    return draft;
+    BOOST_OUTCOME_TRYV(change.begin_unless_withdrawn(card.value().reading_id));
+    return find_card_row(history, table, card_id, undone);
 }
 
 /// The values that cards of a cylinder gave a reading.
@@ -63,9 +56,9 @@ std::vector<ValueRow> values_of_card(ReadingChange& change, const History::Names
     return found;
 }
 
-Done take_out(History& history, ReadingChange& change, const ValueRow& value, bool draft, const Signature& by)
+Done take_out(History& history, ReadingChange& change, const ValueRow& value, const Signature& by)
 {
-    if (draft)
+    if (change.is_draft())
         return change.remove_value(value);
     ValueRow none = value;
     none.typed.clear();
@@ -78,7 +71,6 @@ Done take_out(History& history, ReadingChange& change, const ValueRow& value, bo
     BOOST_OUTCOME_TRYV(keep_correction(history, change.reading().key, value, none, by));
     return change.add_value(none);
 }
-
 
 Done finish(History& history, ReadingChange& change, bool values_changed, const char* action, const CardRow& card, const Signature& by)
 {
@@ -126,16 +118,12 @@ Result<int> CardStore::withdraw(const std::string& card_id, const Signature& by)
 {
     BOOST_OUTCOME_TRYV(check_signature(by, true));
     ReadingChange change(history_, not_withdrawn);
-    const auto draft = begin(history_, change, "card", card_id, not_withdrawn);
-    if (!draft)
-        return draft.error();
-    // Once more within the transaction: another window may have been quicker.
-    const auto card = find_card_row(history_, "card", card_id, not_withdrawn);
+    const auto card = begin(history_, change, "card", card_id, not_withdrawn);
     if (!card)
         return card.error();
     const auto values = values_of_card(change, history_.names(), card.value().cylinder);
     for (const ValueRow& value : values) {
-        BOOST_OUTCOME_TRYV(take_out(history_, change, value, draft.value(), by));
+        BOOST_OUTCOME_TRYV(take_out(history_, change, value, by));
     }
     Query note(history_.database(),
                "INSERT INTO withdrawn_card (id, reading_key, cylinder, samples, trace, withdrawn_at, who, why) "
@@ -144,7 +132,7 @@ Result<int> CardStore::withdraw(const std::string& card_id, const Signature& by)
     BOOST_OUTCOME_TRYV(note.run(seconds_of(history_.now()), by.who, by.why, card_id));
     Query remove(history_.database(), "DELETE FROM card WHERE id = ?", not_withdrawn);
     BOOST_OUTCOME_TRYV(remove.run(card_id));
-    BOOST_OUTCOME_TRYV(finish(history_, change, !values.empty() && !draft.value(), "withdrawn", card.value(), by));
+    BOOST_OUTCOME_TRYV(finish(history_, change, !values.empty() && !change.is_draft(), "withdrawn", card.value(), by));
     return static_cast<int>(values.size());
 }
 
@@ -152,9 +140,7 @@ Done CardStore::restore(const std::string& card_id, const Signature& by)
 {
     BOOST_OUTCOME_TRYV(check_signature(by, true));
     ReadingChange change(history_, not_restored);
-    if (const auto begun = begin(history_, change, "withdrawn_card", card_id, not_restored); !begun)
-        return begun.error();
-    const auto card = find_card_row(history_, "withdrawn_card", card_id, not_restored);
+    const auto card = begin(history_, change, "withdrawn_card", card_id, not_restored);
     if (!card)
         return card.error();
     Query there(history_.database(), "SELECT 1 FROM card WHERE reading_key = ? AND cylinder = ?", not_restored);
