@@ -14,13 +14,7 @@ namespace {
 
 using namespace review_sizes;
 
-constexpr int fewest_words = 170, fewest_verdict = 96, name_margin = 4, verdict_margins = 12, head_margins = 10;
-
-bool is_number(int column)
-{
-    return column == ReviewModel::value || column == ReviewModel::corrected || column == ReviewModel::expected ||
-           column == ReviewModel::deviation;
-}
+constexpr int fewest_words = 168, fewest_verdict = 88, name_margin = 4, verdict_margins = 12, head_margins = 10;
 
 /// What the column of names must be wide for this row to have its name in one line.
 int width_of_words(const ReviewRow& row, int place_width)
@@ -43,7 +37,7 @@ int further_lines(const ReviewRow& row, const ReviewColumns& columns)
 /// Rows of one quantity have the same decimals: right-aligned they stand on the decimal sign.
 void measure_number(const ReviewModel& model, int column, ReviewColumns& columns)
 {
-    const QFontMetrics metrics(type(TypeSize::body, column == ReviewModel::deviation)); // bold where it tells
+    const QFontMetrics metrics(type(TypeSize::body, column == ReviewModel::deviation || column == ReviewModel::from_usual)); // bold where it tells
     int& width = columns.width[static_cast<std::size_t>(column)];
     for (int row = 0; row < model.rowCount(); ++row)
         if (model.row(row)->line)
@@ -138,7 +132,7 @@ ReviewColumns measure_columns(const ReviewModel& model, int room)
         columns.width[static_cast<std::size_t>(column)] =
             heads.horizontalAdvance(model.headerData(column, Qt::Horizontal).toString()) + head_margins;
     for (int column = ReviewModel::place; column < ReviewModel::verdict; ++column)
-        if (is_number(column))
+        if (ReviewModel::is_number(column))
             measure_number(model, column, columns);
         else
             measure_small(model, column, columns);

@@ -33,6 +33,11 @@ bool same_quantity(const ReviewLine& a, const ReviewLine& b)
 
 } // namespace
 
+bool ReviewModel::is_number(int column)
+{
+    return column == value || column == corrected || column == expected || column == deviation || column == from_usual;
+}
+
 void ReviewModel::show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement)
 {
     beginResetModel();
@@ -87,6 +92,7 @@ QString ReviewModel::text(const ReviewRow& row, int column) const
     case expected: return value_text(line.expected, line.decimals);
     case deviation: return line.deviation ? signed_text(*line.deviation, line.decimals) : QString();
     case deviation_half_width: return line.deviation ? half_width_text(line.deviation_half_width, line.decimals) : QString();
+    case from_usual: return line.from_usual ? signed_text(*line.from_usual, line.decimals) : QString();
     case verdict: {
         QStringList said;
         if (line.low && line.high)
@@ -126,6 +132,10 @@ QVariant ReviewModel::headerData(int section, Qt::Orientation orientation, int r
                                      ? Qt::AlignLeft
                                      : Qt::AlignRight) |
                                 Qt::AlignVCenter);
+    if (orientation == Qt::Horizontal && role == Qt::ToolTipRole && section == from_usual)
+        return tr("What the mark goes by. A cylinder: its deviation without what all cylinders share, less its own usual\n"
+                  "distance from the others. The engine: its deviation less its own usual one. A cylinder that always ran\n"
+                  "hot can be low here while its deviation is still above zero.");
     if (orientation != Qt::Horizontal || role != Qt::DisplayRole)
         return {};
     switch (section) {
@@ -137,6 +147,7 @@ QVariant ReviewModel::headerData(int section, Qt::Orientation orientation, int r
     case expected: return tr("expected");
     case deviation: return tr("deviation");
     case deviation_half_width: return QStringLiteral("±");
+    case from_usual: return tr("from usual");
     case verdict: return tr("says");
     default: return {};
     }

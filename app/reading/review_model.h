@@ -25,9 +25,11 @@ class ReviewModel : public QAbstractTableModel
     Q_OBJECT
 
 public:
-    enum Column { words, place, value, half_width, corrected, expected, deviation, deviation_half_width, verdict, column_count };
+    enum Column { words, place, value, half_width, corrected, expected, deviation, deviation_half_width, from_usual, verdict, column_count };
 
     using QAbstractTableModel::QAbstractTableModel;
+    /// Columns whose numbers stand on the decimal sign, at full size.
+    static bool is_number(int column);
     /// @param review as `review_reading` makes it; null: nothing to show
     void show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement);
     int rowCount(const QModelIndex& parent = {}) const override;

@@ -13,15 +13,9 @@ namespace evenstroke {
 
 namespace {
 
-constexpr int columns_on_paper = ReviewModel::column_count + 4; // four numbers stand in two cells each
+constexpr int columns_on_paper = ReviewModel::column_count + 5; // five numbers stand in two cells each
 
 QString tr_(const char* text) { return QCoreApplication::translate("evenstroke", text); }
-
-bool number_column(int column)
-{
-    return column == ReviewModel::value || column == ReviewModel::corrected || column == ReviewModel::expected
-           || column == ReviewModel::deviation;
-}
 
 QString level_words(Level level, const QString& verdict)
 {
@@ -35,7 +29,7 @@ QString line_row(const ReviewModel& model, int number)
     QString html = QStringLiteral("<tr>");
     for (int column = 0; column < ReviewModel::column_count; ++column) {
         QString words = model.index(number, column).data().toString();
-        if (number_column(column)) {
+        if (ReviewModel::is_number(column)) {
             const auto [left, right] = at_decimal_sign(words);
             html += QStringLiteral("<td align=\"right\" style=\"padding-left: 12px;\">%1</td><td>%2</td>").arg(left, right);
             continue;
@@ -63,7 +57,7 @@ QString heading_row(const ReviewModel& model)
     QString html = QStringLiteral("<tr>");
     for (int column = 0; column < ReviewModel::column_count; ++column)
         html += QStringLiteral("<td%1 class=\"muted\" style=\"padding-left: 6px;\">%2</td>")
-                    .arg(number_column(column) ? QStringLiteral(" colspan=\"2\" align=\"right\"") : QString(),
+                    .arg(ReviewModel::is_number(column) ? QStringLiteral(" colspan=\"2\" align=\"right\"") : QString(),
                          model.headerData(column, Qt::Horizontal).toString().toHtmlEscaped());
     return html + QStringLiteral("</tr>");
 }

@@ -106,7 +106,8 @@ private:
         case ReviewModel::value:
         case ReviewModel::corrected:
         case ReviewModel::expected:
-        case ReviewModel::deviation: paint_number(painter, area, words, index.column(), row, t); return;
+        case ReviewModel::deviation:
+        case ReviewModel::from_usual: paint_number(painter, area, words, index.column(), row, t); return;
         default: break;
         }
         painter.setFont(type(TypeSize::label));
@@ -172,9 +173,10 @@ private:
 
     void paint_number(QPainter& painter, const QRect& area, const QString& words, int column, const ReviewRow& row, const Theme& t) const
     {
-        const bool tells = column == ReviewModel::deviation && has_mark(row.line->level);
+        const bool tells = has_mark(row.line->level) &&
+                           column == (row.line->from_usual ? ReviewModel::from_usual : ReviewModel::deviation);
         painter.setFont(type(TypeSize::body, tells));
-        painter.setPen(column == ReviewModel::value || column == ReviewModel::deviation ? t.ink : t.muted);
+        painter.setPen(column == ReviewModel::value || column == ReviewModel::deviation || tells ? t.ink : t.muted);
         painter.drawText(area.adjusted(0, 0, -head_padding, 0), Qt::AlignRight | Qt::AlignVCenter, words);
     }
 

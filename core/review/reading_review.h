@@ -23,6 +23,9 @@ struct ReviewLine
     int decimals = 1;
     std::optional<double> value, half_width;
     std::optional<double> corrected, expected, deviation, deviation_half_width, apart;
+    /// What `verdict` and `level` go by: `apart` (cylinders) or `deviation` (engine) less its own usual level of the
+    /// stretch; none where that is not known. A cylinder that always ran hot is low while its deviation is still above 0.
+    std::optional<double> from_usual;
     Level level = Level::no_data; ///< of the trend that this number belongs to, as of this reading
     std::string verdict;          ///< few words: "usual", "high", "not known: no barometer"; empty: nothing to say
     bool has_workings = false;    ///< find_workings or the estimate has a sheet for it

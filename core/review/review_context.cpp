@@ -102,7 +102,7 @@ Level ReviewContext::level(QuantityId quantity, Place place) const
     return limit ? level : Level::no_data;
 }
 
-std::string ReviewContext::against_band(QuantityId quantity, Place place) const
+ReviewContext::AgainstUsual ReviewContext::against_usual(QuantityId quantity, Place place) const
 {
     const Trend* trend = judgement.find_trend(quantity, place);
     const TrendPoint* here = point(quantity, place);
@@ -111,7 +111,10 @@ std::string ReviewContext::against_band(QuantityId quantity, Place place) const
     const auto value = place.kind == Place::Kind::cylinder ? here->apart : here->deviation;
     if (!value)
         return {};
-    return *value > *trend->usual_high ? "high" : *value < *trend->usual_low ? "low" : "usual";
+    return {*value - 0.5 * (*trend->usual_low + *trend->usual_high),
+            *value > *trend->usual_high  ? "high"
+            : *value < *trend->usual_low ? "low"
+                                         : "usual"};
 }
 
 std::vector<const JudgedValue*> ReviewContext::values(std::string_view name) const

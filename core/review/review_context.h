@@ -40,8 +40,13 @@ public:
     Level level(QuantityId quantity, Place place) const;
     /// The trend's point of this reading, or null.
     const TrendPoint* point(QuantityId quantity, Place place) const;
-    /// "usual", "high", "low" against the usual band; empty where nothing is known.
-    std::string against_band(QuantityId quantity, Place place) const;
+    /// How far this reading is from the place's own usual level, and what the usual band says of it: "usual", "high", "low".
+    struct AgainstUsual
+    {
+        std::optional<double> by; ///< none: nothing is known
+        std::string word;
+    };
+    AgainstUsual against_usual(QuantityId quantity, Place place) const;
     std::vector<const JudgedValue*> values(std::string_view quantity) const;
     std::optional<double> number(std::string_view quantity) const { return engine_mean(reading, quantity, conditions); }
     /// Whether any reading of the record holds a number of this quantity.

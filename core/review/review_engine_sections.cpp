@@ -92,6 +92,16 @@ std::optional<ReviewLine> derived_mean_line(const ReviewContext& context, std::s
     return line;
 }
 
+/// " 6.4 bar below its usual": the number that made the mark; " low" where the usual level is not known.
+std::string departure(const ReviewLine& line)
+{
+    const std::string way = direction(line);
+    if (way.empty() || !line.from_usual)
+        return way.empty() ? "" : " " + way;
+    return " " + plain_number(std::abs(*line.from_usual), line.decimals) + (line.unit.empty() ? "" : " " + line.unit) +
+           (way == "low" ? " below" : " above") + " its usual";
+}
+
 std::string cylinder_words(const ReviewContext& context, int number, const std::vector<ReviewLine>& lines)
 {
     std::vector<std::string> parts;
@@ -100,11 +110,7 @@ std::string cylinder_words(const ReviewContext& context, int number, const std::
         if (line.place != Place::cylinder(number) || line.level < Level::note)
             continue;
         own.push_back(line);
-        const std::string way = direction(line);
-        const std::string apart =
-            line.apart ? plain_number(std::abs(*line.apart), line.decimals) + (line.unit.empty() ? "" : " " + line.unit) : "";
-        parts.push_back(lower_first(line.words) + (way.empty() ? "" : " " + (apart.empty() ? "" : apart + " ") + way) + " (" +
-                        level_word(line.level) + ")");
+        parts.push_back(lower_first(line.words) + departure(line) + " (" + level_word(line.level) + ")");
     }
     if (parts.empty())
         return {};

@@ -59,7 +59,7 @@ std::string verdict(const ReviewContext& context, const ReviewLine& line)
     if (line.level >= Level::note)
         word = direction(line);
     else if (line.quantity)
-        word = context.against_band(*line.quantity, line.place);
+        word = context.against_usual(*line.quantity, line.place).word;
     const bool departs = word == "high" || word == "low";
     if (departs && line.level < Level::note)
         word = "a little " + word;
@@ -123,7 +123,8 @@ std::optional<std::string> missing_input(const ReviewContext& context, const Der
 
 std::string direction(const ReviewLine& line)
 {
-    const auto& by = line.place.kind == Place::Kind::cylinder && line.apart ? line.apart : line.deviation;
+    const bool beside_others = line.place.kind == Place::Kind::cylinder && line.apart;
+    const auto& by = line.from_usual ? line.from_usual : beside_others ? line.apart : line.deviation;
     return !by || *by == 0.0 ? "" : *by > 0.0 ? "high" : "low";
 }
 
@@ -140,6 +141,7 @@ ReviewLine typed_line(const ReviewContext& context, const JudgedValue& value)
     if (value.deviation)
         line.deviation_half_width = value.uncertainty;
     take_own_level(context, line);
+    line.from_usual = context.against_usual(value.quantity, value.place).by;
     line.level = context.level(value.quantity, value.place);
     const bool in_baseline = context.baseline.has(q.name);
     if (value.doubtful)
@@ -193,6 +195,7 @@ std::optional<ReviewLine> derived_line(const ReviewContext& context, std::string
     line.expected = row->expected;
     line.deviation = row->deviation;
     take_own_level(context, line);
+    line.from_usual = id ? context.against_usual(*id, place).by : std::nullopt;
     line.level = id ? context.level(*id, place) : Level::no_data;
     const bool without_barometer = known && known->uses_barometer && !context.conditions.barometer;
     line.verdict = without_barometer ? "1 bar taken: no barometer was read" : verdict(context, line);

@@ -79,7 +79,8 @@ TEST_F(ReadingDesk, NothingIsCutWhereThePageHasRoom)
         if (!line)
             continue;
         const std::string& words = line->words;
-        for (const int column : {ReviewModel::value, ReviewModel::corrected, ReviewModel::expected, ReviewModel::deviation})
+        for (const int column : {ReviewModel::value, ReviewModel::corrected, ReviewModel::expected, ReviewModel::deviation,
+                                 ReviewModel::from_usual})
             EXPECT_LE(body.horizontalAdvance(model.index(row, column).data().toString()), view().columnWidth(column)) << words;
         for (const int column : {ReviewModel::place, ReviewModel::half_width, ReviewModel::deviation_half_width})
             EXPECT_LE(label.horizontalAdvance(model.index(row, column).data().toString()), view().columnWidth(column)) << words;

@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/reading/typed_number.h"
 #include "core/review/reading_review.h"
 
 #include "tests/core/example_engine.h"
@@ -149,6 +150,31 @@ TEST(ReadingReview, OnlyTheCylinderThatDepartsIsSpelledOut)
     const ReadingReview before = review_reading(judgement, 24);
     EXPECT_EQ(find(before, ReviewTopic::cylinders)->sentence, "");
     EXPECT_TRUE(before.cautions.empty());
+}
+
+TEST(ReadingReview, ACylinderIsMeasuredFromItsOwnUsualLevel)
+{
+    // Indicated 15 bar above the others since it was new: after the leak it still stands above them, and it is low.
+    EngineRecord record = record_with_a_leak();
+    for (Reading& reading : record.readings)
+        move_value(reading, "compression_pressure", Place::cylinder(3), 15.0);
+    const Judgement judgement = judged(std::move(record));
+    const ReadingReview review = review_reading(judgement, 39);
+    const ReviewSection& cylinders = *find(review, ReviewTopic::cylinders);
+    const ReviewLine* line = find(cylinders, "compression_pressure", Place::cylinder(3));
+    ASSERT_TRUE(line && line->apart && line->from_usual);
+    EXPECT_GT(*line->apart, 0.0);
+    // 14 readings of 0.9 bar; tolerance: the noise of a pressure, twice.
+    EXPECT_NEAR(*line->from_usual, -0.9 * 14.0, 3.0);
+    EXPECT_EQ(line->verdict, "low");
+    const std::string amount = plain_number(-*line->from_usual, line->decimals);
+    EXPECT_NE(cylinders.sentence.find("compression pressure " + amount + " bar below its usual ("), std::string::npos)
+        << cylinders.sentence;
+    for (int sound : {1, 2, 4, 5, 6}) {
+        const ReviewLine* other = find(cylinders, "compression_pressure", Place::cylinder(sound));
+        ASSERT_TRUE(other && other->from_usual) << sound;
+        EXPECT_LT(std::abs(*other->from_usual), 6.0) << sound;
+    }
 }
 
 TEST(ReadingReview, UnsteadyReadingsAreShownAndNothingInThemIsCalledAFault)
