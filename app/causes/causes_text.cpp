@@ -53,11 +53,9 @@ public:
 
     void add_cause(const Hypothesis& cause)
     {
-        QString what = tr_("%1. %2").arg(cause.rank).arg(to_qstring(cause.what));
-        if (cause.explained)
-            what += tr_(" (%1 % of the pattern)").arg(std::lround(100.0 * *cause.explained));
-        add(Kind::cause, what);
+        add(Kind::cause, tr_("%1. %2").arg(cause.rank).arg(to_qstring(cause.what)));
         add_cautions(cause.cautions);
+        add(Kind::label, to_qstring(cause.order), tr_("order"));
         for (const QuantityEvidence& evidence : cause.evidence)
             if (const QString lead = lead_of(evidence.says); !lead.isEmpty())
                 add(Kind::label, to_qstring(evidence.words), lead);
@@ -130,6 +128,7 @@ std::vector<CausesLine> causes_lines(const Explanation& explanation, const Cards
         writer.add(Kind::subject, to_qstring(subject.answer));
         writer.add_emergencies(subject);
         writer.add_cautions(subject.cautions);
+        writer.add(Kind::label, to_qstring(subject.flag_sentence), tr_("flag"));
         writer.add(Kind::plain, to_qstring(subject.history));
         writer.add(Kind::label, to_qstring(comma_list(subject.moved)), tr_("moved"));
         for (const std::string& remark : subject.remarks)

@@ -15,7 +15,7 @@ struct CausesLine
     enum class Kind {
         subject, ///< what can be said at all of one cylinder or the engine
         caution, ///< stands before what it warns of
-        cause,   ///< "1. This looks like ... (62 % of the pattern)"
+        cause,   ///< "1. The readings fit: ..."
         plain,   ///< a sentence
         label,   ///< `lead` and words: "speaks against", "..."
         last,    ///< who decides

@@ -9,7 +9,7 @@ namespace evenstroke {
 struct ChangeWindow
 {
     std::size_t onset = 0;  ///< the first changed reading
-    bool ramp = false;      ///< crept up since then; else it came at once
+    bool ramp = false;      ///< little by little since then; else it came at once
     std::size_t readings = 0; ///< that carry it
     bool at_edge = false;   ///< the earliest onset that was tried: it may have begun before
     double months = 0.0;    ///< from the reading before the onset to the last

@@ -140,6 +140,8 @@ private:
         SubjectExplanation subject;
         subject.subject = series.subject;
         subject.flagged = flag != nullptr;
+        if (flag)
+            subject.flag_sentence = flag->sentence;
         subject.sudden = !window->ramp;
         subject.last_reading_only = window->readings == 1;
         subject.since = record_.readings[window->onset - 1].taken_at.utc;
@@ -164,6 +166,7 @@ private:
         SubjectExplanation subject;
         subject.subject = flag.subject;
         subject.flagged = true;
+        subject.flag_sentence = flag.sentence;
         subject.since = flag.since;
         subject.months = flag.months;
         subject.answer = subject_text(record_.engine, flag.subject) +

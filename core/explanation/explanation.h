@@ -36,6 +36,7 @@ struct Hypothesis
     const Fault* fault = nullptr;
     int rank = 0;                    ///< 1 is the likeliest
     std::optional<double> explained; ///< share of the pattern, 0 to 1; nothing for slips of the pen
+    std::optional<double> odds;      ///< over those of the first, by every reading since it began; nothing for slips of the pen
     double size = 0.0;               ///< over the fault's reference size
     bool as_likely_as_first = false; ///< these readings cannot tell it from the first
     bool only_for_its_urgency = false; ///< further down the list, and shown because it would not wait
@@ -44,6 +45,7 @@ struct Hypothesis
     // Words, ready for a page or a report:
     std::string what;                ///< "This looks like ...", "This partly looks like ..."
     std::vector<std::string> fits, against, not_read;
+    std::string order;               ///< why it stands where it does: "accounts for 87 % of what moved; ..."
     std::string course;              ///< whether the course over time fits; empty where it says nothing
     std::string check_next, urgency; ///< sentences
     std::vector<std::string> cautions; ///< catalogue names, most urgent first
@@ -55,7 +57,8 @@ struct SubjectExplanation
     Place subject;
     std::vector<Hypothesis> causes;  ///< in order of rank; none: no fault on the list looks like it
     bool flagged = false;            ///< a flag of the drift method stands on it
-    bool sudden = true;              ///< came at once; else it crept up
+    std::string flag_sentence;       ///< of that flag, which goes by what moved most and dates that alone
+    bool sudden = true;              ///< came at once; else little by little
     bool last_reading_only = false;  ///< no earlier reading shows it
     TimePoint since{};
     double months = 0.0;

@@ -38,7 +38,7 @@ std::string words_of(const QuantityEvidence& evidence)
     const std::string seen = name + " " + (moved ? change_words(evidence.quantity, *evidence.amount) : "as usual");
     if (evidence.says == Says::fits)
         return seen;
-    return seen + (should_move ? ", where about " + change_words(evidence.quantity, expected) + " would go with it"
+    return seen + (should_move ? ", where about " + change_words(evidence.quantity, expected) + " would go with the rest of it"
                                : ", which should not move with it");
 }
 
@@ -47,7 +47,7 @@ std::string course_sentence(const Fault& fault, const ChangeWindow& window)
     if (fault.course == Fault::Course::any || window.readings < course_needs)
         return {};
     const bool fits = (fault.course == Fault::Course::creeping) == window.ramp;
-    return std::string("That it ") + (window.ramp ? "crept up" : "came at once") + (fits ? " fits this cause." : " speaks rather against this cause.");
+    return std::string("That it ") + (window.ramp ? "came little by little" : "came at once") + (fits ? " fits this cause." : " speaks rather against this cause.");
 }
 
 std::string event_words(const Event& event)
@@ -85,8 +85,13 @@ std::string history_sentence(const SubjectExplanation& subject, const EngineReco
     const std::string since = short_date(record.readings[window.onset - 1].taken_at.utc);
     std::string text = window.at_edge ? "It stands for " + readings_words(window.readings) + " or more."
                        : window.readings == 1 ? "Only the last reading shows it; before that nothing did."
-                       : window.ramp ? "It crept up since " + since + ", over " + readings_words(window.readings) + "."
+                       : window.ramp ? "It came little by little since " + since + ", over " + readings_words(window.readings) + "."
                                      : "It came at once after " + since + " and stands for " + readings_words(window.readings) + ".";
+    // The flag beside it goes by the drift of what moved most, and dates and measures that alone.
+    if (window.readings > 1)
+        text += std::string(" This is all that moved taken together; sizes are ") +
+                (window.ramp ? "what a straight line from there has reached by now."
+                             : "the mean of those readings against the level before.");
     const auto events = events_before(record, subject.subject, window.onset);
     if (!events.empty())
         text += " Entered about then: " + and_list(events) + ".";
@@ -140,7 +145,10 @@ std::string cannot_tell_sentence(const SubjectExplanation& subject)
     if (equals.empty())
         return {};
     equals.insert(equals.begin(), subject.causes.front().fault->title);
-    return "These readings cannot tell " + and_list(equals) + " apart. What would:" + observations;
+    std::string all;
+    for (const std::string& one : equals)
+        all += (all.empty() ? "" : "; ") + one;
+    return "These readings cannot tell apart: " + all + ". What would:" + observations;
 }
 
 } // namespace
@@ -187,6 +195,27 @@ void word_hypothesis(Hypothesis& hypothesis, const ChangeWindow* window, bool tw
     hypothesis.cautions = cautions_for(fault.id, {}, two_stroke);
 }
 
+/// Why the causes stand in this order: the share explained alone would often give another.
+void word_order(std::vector<Hypothesis>& causes)
+{
+    for (Hypothesis& cause : causes) {
+        if (!cause.explained)
+            continue;
+        const std::string share = "accounts for " + std::to_string(std::lround(100.0 * *cause.explained)) + " % of what moved";
+        if (cause.in_the_rest)
+            cause.order = share + " once the first is taken off";
+        else if (&cause == &causes.front())
+            cause.order = share + (causes.size() > 1 ? "; first by how well sizes, dates and what stayed as usual go with it, and how often it is met" : "");
+        else if (cause.as_likely_as_first)
+            cause.order = share + "; as likely as the first, as far as these readings can tell";
+        else if (cause.odds && *cause.odds < 1.0)
+            cause.order = share + "; about 1 to " + two_digits(1.0 / std::max(*cause.odds, 1e-3)) +
+                          (*cause.odds < 1e-3 ? " or less" : "") + " against the first";
+        else
+            cause.order = share;
+    }
+}
+
 void word_subject(SubjectExplanation& subject, const EngineRecord& record, const ChangeWindow* window)
 {
     const std::string who = subject_text(record.engine, subject.subject);
@@ -201,6 +230,7 @@ void word_subject(SubjectExplanation& subject, const EngineRecord& record, const
         subject.answer = who + " has a value that belongs to the alarms and not to a trend.";
     }
     subject.cannot_tell = cannot_tell_sentence(subject);
+    word_order(subject.causes);
 }
 
 std::string whole_sentence(const Explanation& explanation)
@@ -208,7 +238,8 @@ std::string whole_sentence(const Explanation& explanation)
     if (!explanation.reading)
         return "There is no reading yet.";
     const EngineRecord& record = *explanation.record;
-    const std::string at = " at reading " + record.readings[*explanation.reading].name + ".";
+    const std::string at = " at reading " + record.readings[*explanation.reading].name + " (" +
+                           short_date(record.readings[*explanation.reading].taken_at.utc) + ").";
     std::vector<std::string> who, only_flagged;
     for (const SubjectExplanation& subject : explanation.subjects)
         (is_only_flagged(subject) ? only_flagged : who).push_back(lower_first(subject_text(record.engine, subject.subject)));

@@ -100,6 +100,7 @@ std::vector<Hypothesis> shown_of(std::vector<FaultMatch> matches, const ChangeWi
         if (i >= most_shown && !(equal && will_not_wait(*matches[i].fault)))
             continue;
         Hypothesis hypothesis = made_from(matches[i], window);
+        hypothesis.odds = std::exp(matches[i].log_weight - matches.front().log_weight);
         hypothesis.as_likely_as_first = i > 0 && equal;
         hypothesis.only_for_its_urgency = i >= most_shown;
         shown.push_back(std::move(hypothesis));

@@ -36,9 +36,9 @@ std::string all_words(const Explanation& explanation)
 {
     std::string words = explanation.sentence;
     for (const SubjectExplanation& subject : explanation.subjects) {
-        words += subject.answer + subject.history + subject.cannot_tell;
+        words += subject.answer + subject.flag_sentence + subject.history + subject.cannot_tell;
         for (const Hypothesis& cause : subject.causes) {
-            words += cause.what + cause.course + cause.check_next + cause.urgency;
+            words += cause.what + cause.order + cause.course + cause.check_next + cause.urgency;
             for (const auto* lines : {&cause.fits, &cause.against, &cause.not_read})
                 for (const std::string& line : *lines)
                     words += line + "; ";
@@ -65,7 +65,8 @@ TEST(Explanation, SaysPlainlyThatNothingIsOutOfTheUsual)
     const Explanation explanation = explained(example_record(readings));
     EXPECT_TRUE(explanation.subjects.empty());
     EXPECT_FALSE(explanation.too_few_readings);
-    EXPECT_EQ(explanation.sentence, "Nothing is out of the usual at reading r26.");
+    const std::string day = short_date(explanation.record->readings.back().taken_at.utc);
+    EXPECT_EQ(explanation.sentence, "Nothing is out of the usual at reading r26 (" + day + ").");
 }
 
 TEST(Explanation, SaysThatTooFewReadingsAreThere)
@@ -102,6 +103,34 @@ TEST(Explanation, NamesALeakingExhaustValveWithItsEvidence)
     EXPECT_LE(fourth->causes.size(), 4U);
 }
 
+TEST(Explanation, EveryCauseSaysWhyItStandsWhereItDoes)
+{
+    const Explanation explanation = explained(with_leaking_valve());
+    const SubjectExplanation* fourth = subject_at(explanation, Place::cylinder(4));
+    ASSERT_NE(fourth, nullptr);
+    ASSERT_GE(fourth->causes.size(), 2U);
+    for (const Hypothesis& cause : fourth->causes) {
+        if (!cause.explained)
+            continue;
+        const std::string share = "accounts for " + std::to_string(std::lround(100.0 * *cause.explained)) + " % of what moved";
+        EXPECT_EQ(cause.order.find(share), 0U) << cause.order;
+        if (cause.in_the_rest || cause.rank == 1)
+            continue;
+        ASSERT_TRUE(cause.odds);
+        // Three to one is where causes stop being equals.
+        EXPECT_EQ(contains(cause.order, "as likely as the first"), cause.as_likely_as_first) << cause.order;
+        EXPECT_EQ(contains(cause.order, "against the first"), !cause.as_likely_as_first) << cause.order;
+        if (!cause.as_likely_as_first) {
+            EXPECT_LT(*cause.odds, 1.0 / 3.0 + 0.01) << cause.order;
+        }
+    }
+    // What the flag says of the same cylinder stands beside it, with its own dates and sizes.
+    if (fourth->flagged) {
+        EXPECT_TRUE(contains(fourth->flag_sentence, "Cylinder 4")) << fourth->flag_sentence;
+        EXPECT_TRUE(contains(fourth->history, "taken together")) << fourth->history;
+    }
+}
+
 TEST(Explanation, NeverSpeaksAVerdict)
 {
     const std::string words = all_words(explained(with_leaking_valve()));
@@ -118,7 +147,7 @@ TEST(Explanation, AThermometerComesBeforeTheMachineWhereOnlyItMoved)
     ASSERT_NE(second, nullptr);
     EXPECT_EQ(second->causes.front().fault->id, "thermocouple_drift");
     EXPECT_FALSE(second->sudden);
-    EXPECT_TRUE(contains(second->history, "crept up"));
+    EXPECT_TRUE(contains(second->history, "little by little"));
 }
 
 EngineRecord with_weak_turbine()
