@@ -31,7 +31,7 @@ QString explanation(const Flag& flag)
 } // namespace
 
 FlagNoteDialog::FlagNoteDialog(const EngineRecord& record, const Flag& flag, const QString& who, QWidget* parent)
-    : QDialog(parent), words_(new QLineEdit(this)), who_(new QLineEdit(who, this)), event_(new QComboBox(this))
+    : QDialog(parent), words_(new QLineEdit(this)), event_(new QComboBox(this)), who_(new QLineEdit(who, this)) // order of Tab
 {
     wanted_.subject = flag.subject;
     wanted_.flagged_at = record.readings.at(flag.reading).taken_at.utc;
@@ -54,6 +54,9 @@ FlagNoteDialog::FlagNoteDialog(const EngineRecord& record, const Flag& flag, con
     else
         event_->hide();
     form->addRow(tr("Name"), who_);
+    auto* missing = new QLabel(this);
+    missing->setObjectName(QStringLiteral("missing"));
+    form->addRow(missing);
     auto* buttons = new QDialogButtonBox(QDialogButtonBox::Cancel, this);
     const FlagNote::Said said = question ? FlagNote::Said::no_work : FlagNote::Said::seen;
     QPushButton* keep = buttons->addButton(question ? tr("No work was done") : tr("Keep the note"), QDialogButtonBox::ActionRole);
@@ -65,8 +68,13 @@ FlagNoteDialog::FlagNoteDialog(const EngineRecord& record, const Flag& flag, con
     }
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     form->addRow(buttons);
-    const auto look = [this, keep, question] {
-        keep->setEnabled(!who_->text().trimmed().isEmpty() && (question || !words_->text().trimmed().isEmpty()));
+    const auto look = [this, keep, missing, question] {
+        const bool no_words = !question && words_->text().trimmed().isEmpty(), no_name = who_->text().trimmed().isEmpty();
+        missing->setText(no_words && no_name ? tr("Still needed: what was found or done, and your name.")
+                         : no_words          ? tr("Still needed: what was found or done.")
+                         : no_name           ? tr("Still needed: your name.")
+                                             : QStringLiteral(" ")); // the dialog keeps its height
+        keep->setEnabled(!no_words && !no_name);
     };
     connect(words_, &QLineEdit::textChanged, this, look);
     connect(who_, &QLineEdit::textChanged, this, look);

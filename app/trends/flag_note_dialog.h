@@ -34,8 +34,8 @@ private:
     FlagNote wanted_;
     std::optional<FlagNote> note_;
     QLineEdit* words_;
-    QLineEdit* who_;
     QComboBox* event_;
+    QLineEdit* who_;
 };
 
 } // namespace evenstroke

@@ -65,7 +65,16 @@ void add_second_opinions(TrendPicture& picture, const Judgement& judgement)
     const SecondOpinions opinions = second_opinions(judgement, picture.quantity, picture.place);
     if (opinions.fixed) {
         if (picture.view == ValueView::apart)
-            picture.fixed_limit = opinions.fixed->own_limit;
+            for (const FixedLimitOpinion::Edge& edge : opinions.fixed->edges) {
+                const auto time = static_cast<double>(
+                    judgement.record->readings.at(judgement.readings[edge.reading].reading).taken_at.utc.time_since_epoch().count());
+                if (time < picture.first_time)
+                    continue;
+                for (PictureLine* line : {&picture.fixed_low, &picture.fixed_high}) {
+                    line->times.push_back(time);
+                    line->values.push_back(line == &picture.fixed_low ? edge.low : edge.high);
+                }
+            }
         picture.second_opinions.append(fixed_words(*opinions.fixed, judgement));
     }
     if (opinions.slope && opinions.values >= 3)

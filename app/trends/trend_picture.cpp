@@ -4,6 +4,8 @@
 #include "app/desk/number_text.h"
 #include "app/trends/second_opinion_words.h"
 #include "app/trends/trend_words.h"
+#include "core/sentence_words.h"
+#include "core/trend/flag_text.h"
 
 #include <QCoreApplication>
 
@@ -185,6 +187,7 @@ void add_evidence(TrendPicture& picture, const Judgement& judgement)
     const Evidence* evidence = judgement.find_evidence(subject);
     if (!evidence)
         return;
+    picture.evidence_of = to_qstring(lower_first(subject_text(judgement.record->engine, subject)));
     picture.threshold = evidence->threshold;
     for (std::size_t i = 0; i < evidence->amount.size() && i < judgement.readings.size(); ++i) {
         const double time = time_of(judgement, judgement.readings[i].reading);

@@ -67,9 +67,10 @@ struct TrendPicture
     std::vector<PictureEvent> events;
     std::vector<PictureFlag> flags;
     std::vector<double> evidence_times, evidence; ///< NaN where nothing could be said
+    QString evidence_of; ///< "cylinder 4", "the engine"
     std::optional<double> threshold;
     QString threshold_words; ///< "watch from here,\nact since 11 May 2031"
-    std::optional<double> fixed_limit; ///< the customary distance from the others, either way; only where apart is shown
+    PictureLine fixed_low, fixed_high; ///< where the customary distance from the others begins; only where apart is shown
     QStringList second_opinions;       ///< what well-known rules would have said, a sentence each
     double first_time = 0.0, last_time = 0.0; ///< of the axis
     // Words

@@ -176,9 +176,10 @@ void TrendPlot::set_ranges()
             widen(*point.band_high);
         }
     }
-    if (extras_.fixed_limits && picture_.fixed_limit)
-        for (const double side : {-1.0, 1.0})
-            widen(side * *picture_.fixed_limit);
+    if (extras_.fixed_limits)
+        for (const PictureLine* edge : {&picture_.fixed_low, &picture_.fixed_high})
+            for (const double value : edge->values)
+                widen(value);
     for (const PictureLine& line : picture_.others)
         for (const double value : line.values)
             widen(value);

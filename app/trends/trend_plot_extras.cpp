@@ -43,17 +43,18 @@ void TrendPlot::add_uncertainty()
 
 void TrendPlot::add_fixed_limits()
 {
-    if (!extras_.fixed_limits || !picture_.fixed_limit)
+    if (!extras_.fixed_limits || picture_.fixed_high.times.empty())
         return;
     QCPAxis* x = values_->axis(QCPAxis::atBottom);
-    for (const double side : {-1.0, 1.0}) {
+    for (const PictureLine* edge : {&picture_.fixed_low, &picture_.fixed_high}) {
         QCPGraph* line = addGraph(x, values_->axis(QCPAxis::atLeft));
-        line->setData({x->range().lower, x->range().upper}, {side * *picture_.fixed_limit, side * *picture_.fixed_limit}, true);
+        line->setData(QVector<double>(edge->times.begin(), edge->times.end()),
+                      QVector<double>(edge->values.begin(), edge->values.end()), true);
         line->setPen(theme_->pen(theme_->muted));
         line->setLayer(QStringLiteral("background"));
     }
     QCPItemText* name = add_text(tr("customary fixed limit"), values_, theme_->muted, false);
-    name->position->setCoords(x->range().lower, *picture_.fixed_limit);
+    name->position->setCoords(x->range().lower, picture_.fixed_high.values.front());
     name->setPositionAlignment(Qt::AlignLeft | Qt::AlignBottom);
     name->setPadding(QMargins(6, 0, 0, 2));
 }

@@ -119,8 +119,9 @@ void TrendPlot::add_evidence()
         line->setLayer(QStringLiteral("background"));
     };
     add_line_at(0.0, theme_->rule, 0);
-    QCPItemText* title = add_text(tr("evidence for a change, growing with each reading that supports it"), evidence_,
-                                  theme_->muted, false);
+    QCPItemText* title = add_text(tr("evidence for a change of %1, all its quantities together, growing with each reading "
+                                     "that supports it")
+                                      .arg(picture_.evidence_of), evidence_, theme_->muted, false);
     title->position->setType(QCPItemPosition::ptAxisRectRatio);
     title->position->setCoords(0.0, 0.0);
     title->setPositionAlignment(Qt::AlignLeft | Qt::AlignBottom);

@@ -5,6 +5,7 @@
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
 #include "core/explanation/cautions.h"
+#include "core/sentence_words.h"
 #include "core/trend/limit_passed.h"
 
 #include <QCoreApplication>
@@ -91,7 +92,26 @@ const Flag* leading_flag(const TrendPicture& picture, const Judgement& judgement
     return found == standing.end() ? nullptr : *found;
 }
 
-void add_quiet_words(TrendPicture& picture, const Trend& trend)
+/// A drift that stands on this cylinder or engine, whatever moved.
+const Flag* flag_of_subject(const TrendPicture& picture, const Judgement& judgement)
+{
+    const Place subject = picture.place.kind == Place::Kind::cylinder ? picture.place : Place::engine();
+    for (const Flag* flag : judgement.standing_flags())
+        if (flag->subject == subject && !flag->absolute_limit && !flag->moved.empty())
+            return flag;
+    return nullptr;
+}
+
+std::vector<std::string> names_of(const Flag& flag)
+{
+    constexpr std::size_t most = 3;
+    std::vector<std::string> names;
+    for (std::size_t i = 0; i < std::min(most, flag.moved.size()); ++i)
+        names.push_back(lower_first(quantity(flag.moved[i].quantity).title));
+    return names;
+}
+
+void add_quiet_words(TrendPicture& picture, const Trend& trend, const Judgement& judgement)
 {
     picture.level = trend.level;
     switch (trend.level) {
@@ -106,6 +126,9 @@ void add_quiet_words(TrendPicture& picture, const Trend& trend)
         break;
     default: picture.headline = tr_("Within its usual range.");
     }
+    if (const Flag* of_others = flag_of_subject(picture, judgement))
+        picture.second_line = tr_("The flag on %1 goes by other quantities: %2. The evidence below is of all together.")
+                                  .arg(picture.evidence_of, to_qstring(and_list(names_of(*of_others))));
     if (has_mark(trend.level))
         picture.level_words = level_text(trend.level);
 }
@@ -174,9 +197,9 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
 {
     add_flags(picture, judgement);
     const Flag* flag = leading_flag(picture, judgement);
-    picture.threshold_words = threshold_words(judgement, flag);
+    picture.threshold_words = threshold_words(judgement, flag ? flag : flag_of_subject(picture, judgement));
     if (!flag) {
-        add_quiet_words(picture, trend);
+        add_quiet_words(picture, trend, judgement);
         return;
     }
     picture.level = flag->level_now;

@@ -33,7 +33,7 @@ const Custom* custom_for(const std::string& quantity_name)
 /// One reading: this cylinder's value and the others' sum, as corrected as they are.
 struct Row
 {
-    std::optional<double> own;
+    std::optional<double> own, apart;
     double sum = 0.0;
     int others = 0;
 };
@@ -56,6 +56,7 @@ std::optional<FixedLimitOpinion> fixed_limit_opinion(const Judgement& judgement,
             const double value = point.corrected.value_or(point.raw);
             if (trend.place == place) {
                 row.own = value;
+                row.apart = point.apart;
             } else {
                 row.sum += value;
                 ++row.others;
@@ -72,15 +73,18 @@ std::optional<FixedLimitOpinion> fixed_limit_opinion(const Judgement& judgement,
         if (!rows[i].own || rows[i].others == 0)
             continue;
         const double mean = rows[i].sum / rows[i].others;
-        const double away = std::abs(*rows[i].own - mean);
-        const bool beyond = opinion.percent ? mean != 0.0 && 100.0 * away / std::abs(mean) > custom->limit : away > custom->limit;
+        const double limit = opinion.percent ? custom->limit / 100.0 * std::abs(mean) : custom->limit;
+        const bool beyond = limit > 0.0 && std::abs(*rows[i].own - mean) > limit;
         if (beyond) {
             ++opinion.beyond;
             if (!speaking)
                 opinion.began.push_back(i);
         }
         speaking = beyond;
-        opinion.own_limit = opinion.percent ? custom->limit / 100.0 * std::abs(mean) : custom->limit;
+        if (const auto& apart = rows[i].apart) {
+            const double of_mean = mean - (*rows[i].own - *apart);
+            opinion.edges.push_back({i, of_mean - limit, of_mean + limit});
+        }
     }
     opinion.now = speaking;
     return opinion;

@@ -15,7 +15,14 @@ namespace evenstroke {
 struct FixedLimitOpinion
 {
     double limit = 0.0;     ///< in `unit`, either way
-    double own_limit = 0.0; ///< the same in the quantity's own unit, at the newest reading
+    /// Where the rule begins to speak at one reading, on the scale of `apart`. It moves from reading to reading: a share of
+    /// the mean changes with the load, and the rule goes by the others' mean where `apart` goes by their median.
+    struct Edge
+    {
+        std::size_t reading = 0;
+        double low = 0.0, high = 0.0;
+    };
+    std::vector<Edge> edges; ///< in order of reading
     std::string unit;       ///< "bar", "°C", "%"
     bool percent = false;   ///< of the mean of the others
     std::string source;

@@ -227,7 +227,11 @@ TEST_F(Desk, WhatWasFoundIsKeptWithItsFlag)
     auto* page = static_cast<TrendPage*>(frame_.current_page());
     ASSERT_TRUE(page->plot().picture().flag_index);
     FlagNoteDialog dialog(*judgement->record, judgement->flags[*page->plot().picture().flag_index], QString());
+    auto* missing = dialog.findChild<QLabel*>(QStringLiteral("missing"));
+    ASSERT_NE(missing, nullptr);
+    EXPECT_TRUE(missing->text().contains(QStringLiteral("your name"))) << missing->text().toStdString();
     dialog.write(QStringLiteral("rings looked at through the ports"), QStringLiteral("A. Chief"));
+    EXPECT_TRUE(missing->text().trimmed().isEmpty()) << missing->text().toStdString();
     dialog.press(FlagNote::Said::seen);
     ASSERT_TRUE(dialog.note());
     EXPECT_TRUE(page->keep_note(*dialog.note()));

@@ -5,6 +5,9 @@
 
 #include <gtest/gtest.h>
 
+#include <algorithm>
+#include <string_view>
+
 using namespace evenstroke;
 
 namespace {
@@ -30,6 +33,36 @@ TEST(FixedLimits, SpeakWhereACylinderIsFartherFromTheOthersThanCustomAllows)
     const auto other = opinion_on(record, "compression_pressure", Place::cylinder(4));
     ASSERT_TRUE(other);
     EXPECT_TRUE(other->began.empty()) << "a fifth of six bar is not three";
+}
+
+TEST(FixedLimits, TheEdgesShownPartTheReadingsThatItSpeaksOf)
+{
+    // A share of the mean, at loads that change from reading to reading.
+    EngineRecord record = example_record(16);
+    for (std::size_t i = 8; i < record.readings.size(); ++i)
+        move_value(record.readings[i], "mean_indicated_pressure", Place::cylinder(2), -0.25 * static_cast<double>(i - 7));
+    const Judgement judgement = judge(std::make_shared<EngineRecord>(std::move(record)));
+    for (const char* name : {"mean_indicated_pressure", "exhaust_temperature", "maximum_pressure"})
+        for (const int cylinder : {1, 2, 3}) {
+            const QuantityId id = *find_quantity(name);
+            const auto opinion = fixed_limit_opinion(judgement, id, Place::cylinder(cylinder));
+            if (!opinion)
+                continue;
+            const Trend* trend = judgement.find_trend(id, Place::cylinder(cylinder));
+            ASSERT_FALSE(opinion->edges.empty()) << name;
+            std::size_t outside = 0;
+            for (const auto& edge : opinion->edges) {
+                EXPECT_LT(edge.low, edge.high);
+                const auto point = std::find_if(trend->points.begin(), trend->points.end(),
+                                                [&](const TrendPoint& one) { return one.reading == edge.reading; });
+                ASSERT_NE(point, trend->points.end());
+                outside += *point->apart < edge.low || *point->apart > edge.high ? 1U : 0U;
+            }
+            EXPECT_EQ(outside, opinion->beyond) << name << " " << cylinder;
+            if (std::string_view(name) == "mean_indicated_pressure" && cylinder == 2) {
+                EXPECT_GT(outside, 0U);
+            }
+        }
 }
 
 TEST(FixedLimits, HoldForTheQuantitiesThatCustomKnows)
