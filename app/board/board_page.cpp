@@ -134,7 +134,7 @@ void BoardPage::changeEvent(QEvent* event)
 QString BoardPage::foot_text() const
 {
     const QString last = ui_->view->board_model().board().last_reading;
-    return last.isEmpty() ? QString() : tr("shaded: usual range · %1").arg(last);
+    return last.isEmpty() ? QString() : tr("number: the last reading alone · shaded: usual range · %1").arg(last);
 }
 
 QWidget* BoardPage::first_focus() { return ui_->view; }

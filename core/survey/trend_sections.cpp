@@ -20,6 +20,12 @@ std::optional<double> amount_of(const TrendPoint& point, View view)
     return point.apart;
 }
 
+/// "bar, as read"; a number without a unit: "As read".
+std::string with_unit_before(const std::string& unit, const std::string& words)
+{
+    return unit.empty() ? upper_first(words) : unit + ", " + words;
+}
+
 bool flagged(const Context& context, QuantityId id, const Place& place)
 {
     return std::any_of(context.flags.begin(), context.flags.end(), [&](const Flag* flag) {
@@ -105,8 +111,10 @@ Plot trend_plot(const Context& context, const Trend& trend, View view)
     const Quantity& of = quantity(trend.quantity);
     Plot plot = empty_plot(context);
     plot.title = of.title + (trend.place.number > 0 ? ", " + place_words(context.engine, trend.place) : "");
-    plot.value_title = view == View::raw ? unit_of(of) + ", as read"
-                                         : deviation_unit(of) + (view == View::apart ? ", apart from the other cylinders" : trend.own_level ? ", deviation from its own level" : ", deviation from the baseline");
+    plot.value_title = view == View::raw     ? with_unit_before(unit_of(of), "as read")
+                       : view == View::apart ? with_unit_before(deviation_unit(of), "apart from the other cylinders")
+                       : trend.own_level     ? with_unit_before(deviation_unit(of), "deviation from its own level")
+                                             : with_unit_before(deviation_unit(of), "deviation from the baseline");
     plot.lines = {trend_line(context, trend, view)};
     plot.lines.front().in_question = true;
     const bool banded = (view == View::apart && trend.place.kind == Place::Kind::cylinder)
@@ -127,7 +135,8 @@ Plot cylinders_plot(const Context& context, const Quantity& of, const std::vecto
 {
     Plot plot = empty_plot(context);
     plot.title = of.title + ", all cylinders";
-    plot.value_title = view == View::raw ? unit_of(of) + ", as read" : deviation_unit(of) + ", apart from the other cylinders";
+    plot.value_title = view == View::raw ? with_unit_before(unit_of(of), "as read")
+                                         : with_unit_before(deviation_unit(of), "apart from the other cylinders");
     for (const Trend* trend : trends) {
         PlotLine line = trend_line(context, *trend, view);
         line.in_question = flagged(context, of.id, trend->place);

@@ -123,6 +123,21 @@ TEST_F(CardFilesDesk, ProposesALayoutAndWaitsForTheUnit)
     keep_picture(*page_, QStringLiteral("card_files_preview"));
 }
 
+TEST_F(CardFilesDesk, SaysWhereTheHeaderCountsFromTheOpenAirAndTheChoiceDoesNot)
+{
+    page_->add_files({write_bar(QStringLiteral("cyl1.csv"), "crank angle,pressure [bar gauge]",
+                                [](int i) { return 0.5 * i - 180.0; })});
+    wait();
+    choose_unit("bar"); // the unit alone: counted from vacuum as nothing else was said
+    EXPECT_FALSE(page_->layout_in_hand().gauge);
+    EXPECT_TRUE(words("unit_words").contains(QStringLiteral("gauge"))) << words("unit_words").toStdString();
+    EXPECT_FALSE(button("unit_button").isHidden());
+    button("unit_button").click();
+    wait();
+    EXPECT_TRUE(page_->layout_in_hand().gauge);
+    EXPECT_TRUE(button("unit_button").isHidden());
+}
+
 TEST_F(CardFilesDesk, TakesAllCardsInOneStepAndRemembersTheLayout)
 {
     page_->add_files({write(QStringLiteral("cyl1.csv")), write(QStringLiteral("cyl2.csv"), 1.01)});
