@@ -91,7 +91,7 @@ void ReadingPage::refresh()
         judgement_ = judgement;
         reading_ = reading;
         review_ = std::make_shared<const ReadingReview>(review_reading(*judgement_, *reading_));
-        ui_->view->show_review(review_, judgement_);
+        ui_->view->show_review(review_, judgement_, corrections_here());
         emit foot_changed();
     }
     QStringList cautions;
@@ -112,6 +112,15 @@ void ReadingPage::refresh()
             ui_->view->go_to(row);
     seen_ = named;
     show_side();
+}
+
+/// Of this engine's own reading; what the ship shares is corrected with the ship's.
+std::vector<storage::Correction> ReadingPage::corrections_here() const
+{
+    if (!workplace().history())
+        return {};
+    auto corrections = storage::ReadingStore(*workplace().history()).corrections(judgement_->record->readings[*reading_].id);
+    return corrections ? std::move(corrections).value() : std::vector<storage::Correction>();
 }
 
 void ReadingPage::show_nothing()

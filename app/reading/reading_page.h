@@ -6,6 +6,7 @@
 #include "app/reading/figure_table_model.h"
 #include "app/reading/side_views.h"
 #include "core/review/reading_review.h"
+#include "storage/reading_store.h"
 
 #include <array>
 #include <memory>
@@ -57,6 +58,7 @@ protected:
 
 private:
     void connect_all();
+    std::vector<storage::Correction> corrections_here() const;
     void show_nothing();
     void take_row();
     void open_trend();

@@ -38,9 +38,11 @@ bool ReviewModel::is_number(int column)
     return column == value || column == corrected || column == expected || column == deviation || column == from_usual;
 }
 
-void ReviewModel::show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement)
+void ReviewModel::show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement,
+                              std::vector<storage::Correction> corrections)
 {
     beginResetModel();
+    corrections_ = std::move(corrections);
     review_ = std::move(review);
     judgement_ = std::move(judgement);
     rows_.clear();
@@ -75,6 +77,17 @@ QString ReviewModel::place_words(const ReviewLine& line) const
     }
 }
 
+const storage::Correction* ReviewModel::correction_of(const ReviewLine& line) const
+{
+    if (!line.quantity || !line.value || line.spread || line.estimate)
+        return nullptr;
+    for (auto one = corrections_.rbegin(); one != corrections_.rend(); ++one)
+        if (one->new_value.quantity == *line.quantity && one->new_value.place == line.place &&
+            one->new_value.phase == Phase::reading && !one->old_value.typed.empty())
+            return &*one;
+    return nullptr;
+}
+
 QString ReviewModel::text(const ReviewRow& row, int column) const
 {
     if (!row.line)
@@ -99,6 +112,8 @@ QString ReviewModel::text(const ReviewRow& row, int column) const
             said.append(tr("%1 to %2").arg(number_text(*line.low, line.decimals), number_text(*line.high, line.decimals)));
         if (!line.verdict.empty())
             said.append(to_qstring(line.verdict));
+        if (const storage::Correction* correction = correction_of(line))
+            said.append(tr("corrected, was %1").arg(to_qstring(correction->old_value.typed)));
         return said.join(QStringLiteral(", "));
     }
     default: return {};
@@ -120,7 +135,11 @@ QVariant ReviewModel::data(const QModelIndex& index, int role) const
             return has_mark(level) ? QStringLiteral("%1: %2").arg(level_text(level), text(shown, index.column()))
                                    : text(shown, index.column());
         return text(shown, index.column());
-    case Qt::ToolTipRole: return index.column() == verdict || index.column() == words || !shown.line ? text(shown, index.column()) : QVariant();
+    case Qt::ToolTipRole:
+        if (const storage::Correction* correction = shown.line && index.column() == verdict ? correction_of(*shown.line) : nullptr)
+            return tr("%1\nCorrected on %2 by %3: %4")
+                .arg(text(shown, verdict), day_text(correction->at), to_qstring(correction->by.who), to_qstring(correction->by.why));
+        return index.column() == verdict || index.column() == words || !shown.line ? text(shown, index.column()) : QVariant();
     default: return {};
     }
 }

@@ -3,6 +3,7 @@
 
 #include "core/review/reading_review.h"
 #include "core/trend/judgement.h"
+#include "storage/reading_store.h"
 
 #include <QAbstractTableModel>
 
@@ -31,7 +32,9 @@ public:
     /// Columns whose numbers stand on the decimal sign, at full size.
     static bool is_number(int column);
     /// @param review as `review_reading` makes it; null: nothing to show
-    void show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement);
+    /// @param corrections of this reading, in order of time: a line says what it was before
+    void show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement,
+                     std::vector<storage::Correction> corrections = {});
     int rowCount(const QModelIndex& parent = {}) const override;
     int columnCount(const QModelIndex& parent = {}) const override;
     QVariant data(const QModelIndex& index, int role = Qt::DisplayRole) const override;
@@ -49,8 +52,11 @@ public:
 private:
     QString text(const ReviewRow& row, int column) const;
     QString place_words(const ReviewLine& line) const;
+    /// The newest correction of the value in this line; null where it stands as it was typed.
+    const storage::Correction* correction_of(const ReviewLine& line) const;
     std::shared_ptr<const ReadingReview> review_;
     std::shared_ptr<const Judgement> judgement_;
+    std::vector<storage::Correction> corrections_;
     std::vector<ReviewRow> rows_;
 };
 

@@ -223,7 +223,8 @@ ReviewView::ReviewView(QWidget* parent) : QTableView(parent)
     connect(this, &QTableView::doubleClicked, this, [this] { emit trend_asked(); });
 }
 
-void ReviewView::show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement)
+void ReviewView::show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement,
+                             std::vector<storage::Correction> corrections)
 {
     filling_ = true;
     // The row in hand stays the same quantity at the same place; the old review is alive until the model has let go.
@@ -232,7 +233,7 @@ void ReviewView::show_review(std::shared_ptr<const ReadingReview> review, std::s
     ReviewSection section_was;
     if (was.section)
         section_was.topic = was.section->topic;
-    model_.show_review(std::move(review), std::move(judgement));
+    model_.show_review(std::move(review), std::move(judgement), std::move(corrections));
     clearSpans();
     for (int row = 0; row < model_.rowCount(); ++row)
         if (!model_.row(row)->line)

@@ -16,7 +16,8 @@ class ReviewView : public QTableView
 
 public:
     explicit ReviewView(QWidget* parent = nullptr);
-    void show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement);
+    void show_review(std::shared_ptr<const ReadingReview> review, std::shared_ptr<const Judgement> judgement,
+                     std::vector<storage::Correction> corrections = {});
     ReviewModel& review_model() { return model_; }
     const ReviewRow* row_in_hand() const { return model_.row(currentIndex().row()); }
     void go_to(int row);

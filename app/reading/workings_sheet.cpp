@@ -107,6 +107,7 @@ private:
         add(sheet_.expected, tr_("expected"), false);
         add(sheet_.deviation, tr_("deviation"), true);
         add(sheet_.apart, tr_("apart from the others"), true);
+        add(sheet_.from_usual, tr_("from its own usual level"), true);
         if (!became.isEmpty())
             line("", became.join(QStringLiteral(" · ")).toHtmlEscaped());
     }

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/review/review_context.h"
 
+#include "core/trend/usual_level.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -104,17 +106,10 @@ Level ReviewContext::level(QuantityId quantity, Place place) const
 
 ReviewContext::AgainstUsual ReviewContext::against_usual(QuantityId quantity, Place place) const
 {
-    const Trend* trend = judgement.find_trend(quantity, place);
-    const TrendPoint* here = point(quantity, place);
-    if (!trend || !here || !trend->usual_low || !trend->usual_high || here->stretch != trend->points.back().stretch)
+    const auto usual = usual_level(judgement, index, quantity, place);
+    if (!usual)
         return {};
-    const auto value = place.kind == Place::Kind::cylinder ? here->apart : here->deviation;
-    if (!value)
-        return {};
-    return {*value - 0.5 * (*trend->usual_low + *trend->usual_high),
-            *value > *trend->usual_high  ? "high"
-            : *value < *trend->usual_low ? "low"
-                                         : "usual"};
+    return {usual->from_usual(), usual->value > usual->high ? "high" : usual->value < usual->low ? "low" : "usual"};
 }
 
 std::vector<const JudgedValue*> ReviewContext::values(std::string_view name) const

@@ -2,10 +2,24 @@
 #include "core/workings/find_workings.h"
 
 #include "core/workings/derived_workings.h"
+#include "core/trend/usual_level.h"
 #include "core/workings/typed_workings.h"
 
 namespace evenstroke {
 namespace {
+
+/// The last step, from the others or the baseline to the place's own usual level: what the marks go by.
+void add_usual_level(Workings& sheet, const Judgement& judgement, std::size_t reading, QuantityId id)
+{
+    const auto usual = sheet.value ? usual_level(judgement, reading, id, sheet.place) : std::nullopt;
+    if (!usual)
+        return;
+    sheet.from_usual = usual->from_usual();
+    const std::string in = difference_unit(quantity(id));
+    sheet.steps.push_back({"Its own usual level, the middle of up to 12 readings before any change", usual->middle(), in});
+    sheet.steps.push_back({"Usual range about it, either way", usual->high - usual->middle(), in});
+    sheet.steps.push_back({"From its own usual level", usual->from_usual(), in});
+}
 
 bool has_place(const Engine& engine, Place place)
 {
@@ -38,11 +52,13 @@ std::optional<Workings> find_workings(const Judgement& judgement, std::size_t re
         return std::nullopt;
     const Baseline baseline(record.engine);
     const DerivedQuantity* derived = find_derived(id, place.kind);
-    if (derived && (q.derived() || !was_typed(record.readings[reading], id, place)))
-        return derived_workings(DerivedReading(record.engine, baseline, record.readings[reading]), *derived, place);
-    if (!can_be_typed(q, place))
+    const bool worked_out = derived && (q.derived() || !was_typed(record.readings[reading], id, place));
+    if (!worked_out && !can_be_typed(q, place))
         return std::nullopt;
-    return typed_workings(judgement, baseline, reading, q, place);
+    Workings sheet = worked_out ? derived_workings(DerivedReading(record.engine, baseline, record.readings[reading]), *derived, place)
+                                : typed_workings(judgement, baseline, reading, q, place);
+    add_usual_level(sheet, judgement, reading, id);
+    return sheet;
 }
 
 } // namespace evenstroke

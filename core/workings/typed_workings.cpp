@@ -231,7 +231,7 @@ private:
     void add_rest()
     {
         if (sheet_.deviation) {
-            step("Deviation", *sheet_.deviation, difference_unit());
+            step("Deviation", *sheet_.deviation, difference_unit(q_));
             sheet_.formula += std::string(sheet_.formula.empty() ? "" : "; ") + "deviation = " +
                               (judged_->applied == Applied::none ? "value" : "corrected") + " − expected";
         }
@@ -240,14 +240,9 @@ private:
         const std::optional<double> compared = sheet_.deviation ? sheet_.deviation : sheet_.corrected;
         if (compared)
             step(sheet_.deviation ? "Median of the other cylinders' deviations" : "Median of the other cylinders",
-                 *compared - *sheet_.apart, sheet_.deviation ? difference_unit() : unit_words(q_));
-        step("Apart from the others", *sheet_.apart, difference_unit());
+                 *compared - *sheet_.apart, sheet_.deviation ? difference_unit(q_) : unit_words(q_));
+        step("Apart from the others", *sheet_.apart, difference_unit(q_));
         sheet_.formula += std::string(sheet_.formula.empty() ? "" : "; ") + "apart = deviation − median of the others' deviations";
-    }
-
-    std::string difference_unit() const
-    {
-        return unit(q_.unit).dimension == Dimension::temperature ? "K" : std::string(unit(q_.unit).symbol == "1" ? "" : unit(q_.unit).symbol);
     }
 
     void say_what_was_assumed(const OwnValue& own)

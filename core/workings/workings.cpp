@@ -78,6 +78,12 @@ std::string input_line(const WorkingInput& input)
 
 } // namespace
 
+std::string difference_unit(const Quantity& of)
+{
+    const Unit& in = unit(of.unit);
+    return in.dimension == Dimension::temperature ? "K" : in.symbol == "1" ? "" : std::string(in.symbol);
+}
+
 std::string workings_text(const Workings& workings, const std::string& heading)
 {
     Lines lines;
@@ -98,6 +104,7 @@ std::string workings_text(const Workings& workings, const std::string& heading)
     further("Expected", workings.expected);
     further("Deviation", workings.deviation);
     further("Apart from the others", workings.apart);
+    further("From its own usual level", workings.from_usual);
     if (!workings.missing.empty())
         lines.add(workings.missing);
     if (!workings.formula.empty())

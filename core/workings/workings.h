@@ -40,7 +40,7 @@ struct Workings
     std::string unit;
     int decimals = 1;                       ///< as the result is shown
     std::optional<double> value, half_width;
-    std::optional<double> corrected, expected, deviation, apart; ///< where the number has them
+    std::optional<double> corrected, expected, deviation, apart, from_usual; ///< where the number has them
     std::string formula;                    ///< with the symbols of the inputs
     std::string source, validity;           ///< of the formula
     std::vector<WorkingInput> inputs;
@@ -48,6 +48,9 @@ struct Workings
     std::vector<std::string> remarks;       ///< what was assumed, whole sentences
     std::string missing; ///< whole sentences: why the number is not known and what to read; empty where it is known
 };
+
+/// Of a difference between two values of the quantity: "K" for temperatures; empty for a bare number.
+std::string difference_unit(const Quantity& quantity);
 
 /// The sheet as plain text, lines of at most 100 characters, for the clipboard and for screen readers.
 std::string workings_text(const Workings& workings, const std::string& heading);

@@ -97,6 +97,33 @@ TEST_F(ReadingDesk, NothingIsCutWhereThePageHasRoom)
     }
 }
 
+TEST_F(ReadingDesk, AValueThatWasCorrectedSaysWhatItWas)
+{
+    begin("reading");
+    const QuantityId exhaust = *find_quantity("exhaust_temperature", Place::Kind::cylinder);
+    const int row = view().review_model().row_of(exhaust, Place::cylinder(2));
+    ASSERT_GE(row, 0);
+    EXPECT_FALSE(view().review_model().index(row, ReviewModel::verdict).data().toString().contains(QStringLiteral("corrected")));
+    const Reading& shown = workplace_->judgement()->record->readings[reading()];
+    const Value* before = shown.find(exhaust, Place::cylinder(2));
+    ASSERT_NE(before, nullptr);
+    const std::string typed = before->typed, id = shown.id;
+    Value after = *before;
+    after.number = *before->number + 3.0;
+    after.typed = std::to_string(std::lround(*after.number));
+    const auto done = storage::ReadingStore(*workplace_->history()).correct(id, after, {"A. Chief", "gauge read again"});
+    ASSERT_TRUE(done.has_value()) << done.error().text();
+    workplace_->changed();
+    ASSERT_TRUE(QTest::qWaitFor([&] {
+        return view().review_model().index(view().review_model().row_of(exhaust, Place::cylinder(2)), ReviewModel::verdict)
+            .data().toString().contains(QStringLiteral("corrected, was ") + QString::fromStdString(typed));
+    }, patience));
+    const QString tip = view().review_model()
+                            .index(view().review_model().row_of(exhaust, Place::cylinder(2)), ReviewModel::verdict)
+                            .data(Qt::ToolTipRole).toString();
+    EXPECT_TRUE(tip.contains(QStringLiteral("A. Chief")) && tip.contains(QStringLiteral("gauge read again"))) << tip.toStdString();
+}
+
 TEST_F(ReadingDesk, StandsOnTheRailAndShowsTheNewestReading)
 {
     begin("board");

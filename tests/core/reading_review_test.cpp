@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/reading/typed_number.h"
 #include "core/review/reading_review.h"
+#include "core/workings/find_workings.h"
 
 #include "tests/core/example_engine.h"
 
@@ -167,6 +168,12 @@ TEST(ReadingReview, ACylinderIsMeasuredFromItsOwnUsualLevel)
     // 14 readings of 0.9 bar; tolerance: the noise of a pressure, twice.
     EXPECT_NEAR(*line->from_usual, -0.9 * 14.0, 3.0);
     EXPECT_EQ(line->verdict, "low");
+    // The sheet of workings ends at the same number.
+    const auto sheet = find_workings(judgement, 39, *line->quantity, Place::cylinder(3));
+    ASSERT_TRUE(sheet && sheet->from_usual && !sheet->steps.empty());
+    EXPECT_EQ(sheet->from_usual, line->from_usual);
+    EXPECT_EQ(sheet->steps.back().value, *line->from_usual);
+    EXPECT_EQ(sheet->steps.back().unit, "bar");
     const std::string amount = plain_number(-*line->from_usual, line->decimals);
     EXPECT_NE(cylinders.sentence.find("compression pressure " + amount + " bar below its usual ("), std::string::npos)
         << cylinders.sentence;
