@@ -124,13 +124,13 @@ Result<CardTrace> CardStore::load(const std::string& card_id) const
     return std::move(*trace);
 }
 
-Result<std::vector<CardEntry>> CardStore::find_same(const std::string& engine_id, const CardTrace& trace) const
+Result<std::vector<CardEntry>> CardStore::find_same(const std::string& engine_id, const QByteArray& packed) const
 {
     Query rows(history_.database(),
                "SELECT c.id, r.id, c.cylinder, c.samples FROM card c JOIN reading r USING (reading_key) JOIN engine e USING "
-               "(engine_key) WHERE e.id = ? AND c.samples = ? AND c.trace = ? ORDER BY r.taken_at, c.cylinder",
+               "(engine_key) WHERE e.id = ? AND length(c.trace) = ? AND c.trace = ? ORDER BY r.taken_at, c.cylinder",
                "the cards of the engine were not compared");
-    BOOST_OUTCOME_TRYV(rows.run(engine_id, static_cast<qint64>(trace.crank_angle_deg.size()), pack_card(trace)));
+    BOOST_OUTCOME_TRYV(rows.run(engine_id, static_cast<qint64>(packed.size()), packed));
     std::vector<CardEntry> same;
     while (rows.next())
         same.push_back({rows.text(0), rows.text(1), rows.small(2), rows.small(3)});

@@ -65,7 +65,8 @@ public:
     /// @par Problems not_found
     Result<CardTrace> load(const std::string& card_id) const;
     /// Cards of the engine with exactly these samples, wherever they stand: files of another day come in by mistake.
-    Result<std::vector<CardEntry>> find_same(const std::string& engine_id, const CardTrace& trace) const;
+    /// @param packed of `pack_card`, which takes its time: on a worker where there are many
+    Result<std::vector<CardEntry>> find_same(const std::string& engine_id, const QByteArray& packed) const;
     /// Adds a cylinder's card to a reading. Answers its id; the same card again is the same id.
     /// @par Problems invalid_input: the reading has another card of this cylinder
     Result<std::string> add(const std::string& reading_id, int cylinder, const CardTrace& trace,

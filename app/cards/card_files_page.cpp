@@ -61,6 +61,12 @@ CardFilesPage::CardFilesPage(Workplace& place, QWidget* parent)
     soon_.setSingleShot(true);
     soon_.setInterval(wait_ms);
     connect_parts();
+    for (const Qt::Key enter : {Qt::Key_Return, Qt::Key_Enter}) {
+        auto* take = new QShortcut(QKeySequence(Qt::CTRL | enter), this);
+        take->setContext(Qt::WidgetWithChildrenShortcut);
+        take->setAutoRepeat(false);
+        connect(take, &QShortcut::activated, ui_->take_button, &QPushButton::click); // nothing while it is disabled
+    }
     keep_room_for_bold(*this);
     say({});
 }
@@ -262,7 +268,7 @@ void CardFilesPage::find_stored()
     for (FileTrace& trace : traces_) {
         if (!trace.trace || !engine() || !workplace().history())
             continue;
-        if (auto same = storage::CardStore(*workplace().history()).find_same(engine()->id, *trace.trace))
+        if (auto same = storage::CardStore(*workplace().history()).find_same(engine()->id, trace.packed))
             trace.same = std::move(same.value()); // what cannot be compared is refused when it is stored
     }
 }

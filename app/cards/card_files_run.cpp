@@ -5,6 +5,7 @@
 #include "core/card/card_values.h"
 #include "core/card/reading_conditions.h"
 #include "core/trend/conditions.h"
+#include "storage/card_packing.h"
 
 #include <QFileInfo>
 #include <QtConcurrentMap>
@@ -61,6 +62,7 @@ std::vector<FileTrace> read_file(const CardFilesTask& task, std::size_t file)
         trace.cylinder = cylinder_of(task, file, one);
         trace.missing = one.missing;
         trace.trace = std::make_shared<storage::CardTrace>(std::move(one.trace));
+        trace.packed = storage::pack_card(*trace.trace);
         evaluate_trace(task, trace);
         found.push_back(std::move(trace));
     }

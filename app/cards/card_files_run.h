@@ -7,6 +7,7 @@
 #include "storage/card_store.h"
 #include "storage/trace_layout.h"
 
+#include <QByteArray>
 #include <QString>
 
 #include <memory>
@@ -32,6 +33,7 @@ struct FileTrace
     int missing = 0;
     std::shared_ptr<const indicator::Evaluation> card;
     std::optional<Problem> problem; ///< with `trace`: it can be kept and not be evaluated
+    QByteArray packed; ///< the samples as a history keeps them
     std::vector<storage::CardEntry> same; ///< stored cards of the engine with exactly these samples, as the page found them
 };
 

@@ -177,7 +177,7 @@ void CardFilesPage::show_into()
     const bool may = reading && taken > 0 && twice.isEmpty() && !workplace().read_only() && !run_.busy();
     ui_->take_button->setVisible(taken > 0);
     ui_->take_button->setEnabled(may);
-    ui_->take_button->setText(reading ? tr("take %n card(s) into the reading of %1", nullptr, taken)
+    ui_->take_button->setText(reading ? tr("take %n card(s) into the reading of %1 (Ctrl+Enter)", nullptr, taken)
                                             .arg(day_text(reading->taken_at.utc))
                                       : tr("take in"));
     ui_->paper->set_can_put(reading && !workplace().read_only());

@@ -163,9 +163,9 @@ void CardsPage::ask_healthy()
     QStringList remarked;
     for (const indicator::ReviewedCard& card : cards_->review.cards)
         if (card.problem || !card.remarks.empty())
-            remarked.append(place_title(cards_->engine(), Place::cylinder(card.cylinder)));
+            remarked.append(place_title(cards_->engine(), Place::cylinder(card.cylinder), false));
     const QString doubts = remarked.isEmpty() ? QString()
-                                              : u' ' + tr("There are remarks on %1: read them first.").arg(remarked.join(QStringLiteral(", ")).toLower());
+                                              : u' ' + tr("There are remarks on %1: read them first.").arg(remarked.join(QStringLiteral(", ")));
     SignatureDialog dialog(take_back ? tr("No longer the healthy cards") : tr("The healthy cards"),
                            take_back ? tr("The cards of %1 are no longer what others are compared with. They stay with their reading.").arg(day)
                                      : tr("Later cards at nearly this load are compared with those of %1, and dead centre of the installation is "

@@ -251,10 +251,10 @@
         </translation>
     </message>
     <message numerus="yes">
-        <source>take %n card(s) into the reading of %1</source>
+        <source>take %n card(s) into the reading of %1 (Ctrl+Enter)</source>
         <translation>
-            <numerusform>take 1 card into the reading of %1</numerusform>
-            <numerusform>take %n cards into the reading of %1</numerusform>
+            <numerusform>take 1 card into the reading of %1 (Ctrl+Enter)</numerusform>
+            <numerusform>take %n cards into the reading of %1 (Ctrl+Enter)</numerusform>
         </translation>
     </message>
     <message numerus="yes">
