@@ -129,6 +129,7 @@ std::vector<CausesLine> causes_lines(const Explanation& explanation, const Cards
         writer.add_emergencies(subject);
         writer.add_cautions(subject.cautions);
         writer.add(Kind::label, to_qstring(subject.flag_sentence), tr_("flag"));
+        writer.add(Kind::label, to_qstring(subject.flag_note), tr_("noted"));
         writer.add(Kind::plain, to_qstring(subject.history));
         writer.add(Kind::label, to_qstring(comma_list(subject.moved)), tr_("moved"));
         for (const std::string& remark : subject.remarks)

@@ -96,7 +96,7 @@ private:
     void connect_keys();
     void leave_sheet(bool forward);
     void show_newest();
-    std::optional<LogBox> newest_doubt() const;
+    std::optional<LogBox> newest_doubt(bool with_remedy) const;
     void go_to_matter(const OpenMatter& matter);
     bool may_close();
     void keep_doubts();

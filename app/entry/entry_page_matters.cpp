@@ -152,18 +152,20 @@ void EntryPage::go_to_matter(const OpenMatter& matter)
     }
 }
 
-std::optional<LogBox> EntryPage::newest_doubt() const
+std::optional<LogBox> EntryPage::newest_doubt(bool with_remedy) const
 {
     const auto here = ui_->grid->current_box();
-    for (auto box = typed_lately_.rbegin(); box != typed_lately_.rend(); ++box)
-        if (*box != here && !open_sentence(model_, opinions_, *box).isEmpty())
+    for (auto box = typed_lately_.rbegin(); box != typed_lately_.rend(); ++box) {
+        const ValueOpinion* opinion = with_remedy ? opinions_.of(*box) : nullptr;
+        if (*box != here && (!with_remedy || (opinion && opinion->suggestion)) && !open_sentence(model_, opinions_, *box).isEmpty())
             return *box;
+    }
     return std::nullopt;
 }
 
 void EntryPage::show_newest()
 {
-    const auto box = newest_doubt();
+    const auto box = newest_doubt(false);
     ui_->ear->show_newest(box ? open_sentence(model_, opinions_, *box) : QString());
 }
 
@@ -174,7 +176,10 @@ void EntryPage::go_to_doubt()
     const auto here = ui_->grid->current_box();
     const std::vector<LogBox> boxes = doubted_boxes(model_, find_open_matters(model_, opinions_));
     const bool in_one = here && std::find(boxes.begin(), boxes.end(), *here) != boxes.end();
-    auto target = in_one ? std::nullopt : newest_doubt();
+    // A slip that has a likely remedy comes before what only contradicts it.
+    auto target = in_one ? std::nullopt : newest_doubt(true);
+    if (!target && !in_one)
+        target = newest_doubt(false);
     if (!target && !boxes.empty()) {
         const auto at = here ? std::find(boxes.begin(), boxes.end(), *here) : boxes.end();
         target = at == boxes.end() || at + 1 == boxes.end() ? boxes.front() : *(at + 1);

@@ -141,7 +141,7 @@ private:
         subject.subject = series.subject;
         subject.flagged = flag != nullptr;
         if (flag)
-            subject.flag_sentence = flag->sentence;
+            tell_of_flag(subject, *flag);
         subject.sudden = !window->ramp;
         subject.last_reading_only = window->readings == 1;
         subject.since = record_.readings[window->onset - 1].taken_at.utc;
@@ -160,13 +160,25 @@ private:
         return true;
     }
 
+    static void tell_of_flag(SubjectExplanation& subject, const Flag& flag)
+    {
+        subject.flag_sentence = flag.sentence;
+        if (!flag.note)
+            return;
+        subject.flag_note = note_text(*flag.note, short_date(flag.note->written_at));
+        if (!subject.flag_note.ends_with('.'))
+            subject.flag_note += '.';
+        if (flag.reopened)
+            subject.flag_note += " New evidence came since.";
+    }
+
     /// A flag stands until a reading shows that it is over; a cause is another matter.
     void add_unsupported_flag(const Flag& flag)
     {
         SubjectExplanation subject;
         subject.subject = flag.subject;
         subject.flagged = true;
-        subject.flag_sentence = flag.sentence;
+        tell_of_flag(subject, flag);
         subject.since = flag.since;
         subject.months = flag.months;
         subject.answer = subject_text(record_.engine, flag.subject) +

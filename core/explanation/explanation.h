@@ -58,6 +58,7 @@ struct SubjectExplanation
     std::vector<Hypothesis> causes;  ///< in order of rank; none: no fault on the list looks like it
     bool flagged = false;            ///< a flag of the drift method stands on it
     std::string flag_sentence;       ///< of that flag, which goes by what moved most and dates that alone
+    std::string flag_note;           ///< what was last said of it on board; empty: nothing that still counts
     bool sudden = true;              ///< came at once; else little by little
     bool last_reading_only = false;  ///< no earlier reading shows it
     TimePoint since{};

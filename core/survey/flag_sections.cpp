@@ -2,6 +2,7 @@
 #include "core/survey/trend_plots.h"
 
 #include "core/explanation/cautions.h"
+#include "core/trend/flag_text.h"
 
 #include <algorithm>
 #include <cmath>
@@ -48,14 +49,6 @@ Table moved_table(const Flag& flag)
                                flag.ramp ? "month" : "once", rounded_text(std::abs(moved.strength), 1)}, true});
     }
     return table;
-}
-
-std::string note_text(const FlagNote& note)
-{
-    std::string text = date_text(note.written_at) + ", " + note.who + ": ";
-    if (note.said == FlagNote::Said::no_work)
-        text += note.words.empty() ? "no work was done" : "no work was done; ";
-    return text + note.words;
 }
 
 /// "the customary limit (not the maker's), 5.0 bar below its earlier level," as the subject of a sentence.
@@ -130,7 +123,7 @@ void add_flag(const Context& context, const Flag& flag, int number, Section& sec
     if (const std::string check = next_check_words(context, flag); !check.empty())
         fields.fields.push_back({"To check next", check});
     if (flag.note)
-        fields.fields.push_back({"Noted on board", note_text(*flag.note)});
+        fields.fields.push_back({"Noted on board", note_text(*flag.note, date_text(flag.note->written_at))});
     fields.fields.push_back({"Work recorded since", work_since(context, flag)});
     blocks.push_back(std::move(fields));
     for (const std::string& name : flag.cautions)

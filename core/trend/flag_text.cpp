@@ -108,6 +108,14 @@ std::string two_digits(double amount)
     return {buffer, result.ptr};
 }
 
+std::string note_text(const FlagNote& note, const std::string& day)
+{
+    std::string text = day + ", " + note.who + ": ";
+    if (note.said == FlagNote::Said::no_work)
+        text += note.words.empty() ? "no work was done" : "no work was done; ";
+    return text + note.words;
+}
+
 std::string subject_text(const Engine& engine, const Place& subject)
 {
     if (subject.kind == Place::Kind::cylinder)

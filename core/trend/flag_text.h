@@ -18,6 +18,9 @@ void word_flag(Flag& flag, const Engine& engine, double years_by_chance);
 /// For lists: what moved most, and the pattern.
 std::string short_sentence(const Flag& flag, const Engine& engine);
 
+/// "2 Dec 2026, A. Chief: rings looked at". @param day on which it was written, as the page or paper writes days
+std::string note_text(const FlagNote& note, const std::string& day);
+
 /// Sentence for a limit of the maker that a reading passed.
 std::string limit_sentence(const Engine& engine, const Place& place, const Quantity& quantity, double value,
                            double limit, bool above, const std::string& source);

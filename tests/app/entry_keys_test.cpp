@@ -135,6 +135,20 @@ TEST_F(EntryKeys, TheDateTheDoubtAndTheClosingHaveKeys)
         EXPECT_TRUE(button->text().contains(QStringLiteral("Ctrl+Enter")));
 }
 
+TEST_F(EntryKeys, TheSlipItselfComesBeforeWhatOnlyContradictsIt)
+{
+    open(14);
+    page->set_time(QStringLiteral("2021-04-01"), QStringLiteral("9:10"), QStringLiteral("+02:00"));
+    enter(box("load_percent"), QStringLiteral("75"));
+    const LogBox peak = box("maximum_pressure", Place::cylinder(2)), compression = box("compression_pressure", Place::cylinder(2));
+    enter(peak, QStringLiteral("14.2")); // 142
+    enter(compression, QStringLiteral("118")); // as usual, and above the peak as typed
+    page->judge_now();
+    page->view().go_to(box("load_percent"));
+    press(Qt::Key_N, Qt::ControlModifier);
+    EXPECT_EQ(page->view().current_box(), peak);
+}
+
 TEST_F(EntryKeys, TheDoubtAboutTheValueJustLeftStaysReadable)
 {
     open(14);

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // What people say of flags: it stays beside them, and new evidence brings them up again. All readings invented.
+#include "core/explanation/explanation.h"
 #include "core/trend/judgement.h"
 #include "tests/core/example_engine.h"
 
@@ -69,6 +70,13 @@ TEST(FlagNotes, AFlagThatWasSeenKeepsItsLevelAndItsNote)
     EXPECT_EQ(seen.level_now, flag.level_now) << "nothing is taken out of the record";
     EXPECT_EQ(seen.note->words, "rings looked at through the ports");
     EXPECT_EQ(after.level, before.level);
+    // What may lie behind it says what was found, beside the flag's own sentence.
+    const Explanation explanation = explain(after);
+    const auto fourth = std::find_if(explanation.subjects.begin(), explanation.subjects.end(),
+                                     [&](const SubjectExplanation& one) { return one.subject == flag.subject; });
+    ASSERT_NE(fourth, explanation.subjects.end());
+    EXPECT_EQ(fourth->flag_sentence, seen.sentence);
+    EXPECT_NE(fourth->flag_note.find("A. Chief: rings looked at through the ports."), std::string::npos) << fourth->flag_note;
 }
 
 TEST(FlagNotes, NewEvidenceOrAHigherLevelBringsAFlagUpAgain)
