@@ -4,11 +4,13 @@
 #include "app/desk/flag_words.h"
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
+#include "core/explanation/work_outcome.h"
 
 #include <QCoreApplication>
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 namespace evenstroke {
 
@@ -272,9 +274,14 @@ void add_words(Board& board, const Judgement& judgement)
 {
     board.level = judgement.level;
     board.last_reading = last_reading_text(judgement);
+    const QString not_read_yet = to_qstring(work_not_read_yet(judgement)), without_effect = to_qstring(work_without_effect(judgement));
     const std::vector<const Flag*> flags = judgement.standing_flags();
     if (flags.empty()) {
         add_quiet_words(board, judgement);
+        if (!without_effect.isEmpty())
+            board.second_line = std::exchange(board.headline, without_effect);
+        if (!not_read_yet.isEmpty())
+            board.second_line = QStringList{not_read_yet, board.second_line}.join(u' ').trimmed();
         return;
     }
     const Flag& worst = *flags.front();
@@ -283,7 +290,7 @@ void add_words(Board& board, const Judgement& judgement)
     board.level = worst.level_now;
     board.headline = to_qstring(worst.sentence);
     board.level_words = standing_words(judgement, worst);
-    QStringList second;
+    QStringList second{not_read_yet, without_effect};
     second.append(to_qstring(worst.chance_sentence));
     if (!worst.pattern_words.empty())
         second.append(tr_("Fits: %1.").arg(to_qstring(worst.pattern_words)));

@@ -2,6 +2,7 @@
 #include "app/fleet/fleet_summary.h"
 
 #include "app/desk/number_text.h"
+#include "core/explanation/work_outcome.h"
 #include "core/trend/flag_text.h"
 #include "core/trend/fleet_strips.h"
 
@@ -110,6 +111,9 @@ FleetSummary summarise(const Judgement& judgement)
             summary.sentence = tr_("Seen %1: %2").arg(day_text(worst.note->written_at), summary.sentence);
         summary.worsening = worst.ramp;
         summary.excess = worst.threshold > 0.0 ? worst.evidence / worst.threshold : 0.0;
+    } else if (const QString without_effect = to_qstring(work_without_effect(judgement)); !without_effect.isEmpty()) {
+        summary.level = std::max(summary.level, Level::note); // the comparison began anew, and nothing else would say it
+        summary.sentence = without_effect;
     } else if (summary.level == Level::note) {
         summary.sentence = note_sentence(judgement);
     }

@@ -5,6 +5,7 @@
 #include "app/desk/number_text.h"
 #include "app/desk/theme.h"
 #include "core/explanation/cautions.h"
+#include "core/explanation/work_outcome.h"
 #include "core/sentence_words.h"
 #include "core/trend/limit_passed.h"
 
@@ -193,6 +194,16 @@ QString spoken_point(const TrendPicture& picture, const PicturePoint& shown)
     return words.join(QStringLiteral(", "));
 }
 
+/// What recorded work has to do with what is seen: none of it read yet, or no effect of it to be seen.
+void add_work_words(TrendPicture& picture, const Judgement& judgement)
+{
+    if (picture.place.kind != Place::Kind::cylinder)
+        return;
+    QStringList lines{to_qstring(work_not_read_yet(judgement)), to_qstring(work_without_effect(judgement, picture.place)), picture.second_line};
+    lines.removeAll(QString());
+    picture.second_line = lines.join(u' ');
+}
+
 void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Trend& trend)
 {
     add_flags(picture, judgement);
@@ -200,11 +211,13 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     picture.threshold_words = threshold_words(judgement, flag ? flag : flag_of_subject(picture, judgement));
     if (!flag) {
         add_quiet_words(picture, trend, judgement);
+        add_work_words(picture, judgement);
         return;
     }
     picture.level = flag->level_now;
     picture.headline = to_qstring(flag->sentence);
     picture.second_line = to_qstring(flag->chance_sentence);
+    add_work_words(picture, judgement);
     picture.level_words = standing_words(judgement, *flag);
     if (flag->time_to_limit) {
         const bool passed = limit_is_passed(judgement, *flag);
@@ -216,7 +229,7 @@ void add_trend_words(TrendPicture& picture, const Judgement& judgement, const Tr
     for (const MovedQuantity& moved : flag->moved)
         picture.moved.append(moved_text(moved, flag->ramp));
     if (!flag->carrying.empty())
-        picture.moved.append(tr_("carried by %n reading(s) since %1", static_cast<int>(flag->carrying.size()))
+        picture.moved.append(tr_("carried by %n reading(s), the first of %1", static_cast<int>(flag->carrying.size()))
                                  .arg(day_text(time_of(judgement, flag->carrying.front()))));
     picture.next_check = to_qstring(flag->next_check);
     picture.flag_index = static_cast<std::size_t>(flag - judgement.flags.data());

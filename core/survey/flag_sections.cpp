@@ -2,6 +2,7 @@
 #include "core/survey/trend_plots.h"
 
 #include "core/explanation/cautions.h"
+#include "core/explanation/work_outcome.h"
 #include "core/trend/flag_text.h"
 
 #include <algorithm>
@@ -125,6 +126,8 @@ void add_flag(const Context& context, const Flag& flag, int number, Section& sec
     if (flag.note)
         fields.fields.push_back({"Noted on board", note_text(*flag.note, date_text(flag.note->written_at))});
     fields.fields.push_back({"Work recorded since", work_since(context, flag)});
+    if (const std::string outcome = work_without_effect(context.judgement, flag); !outcome.empty())
+        fields.fields.push_back({"After the work", outcome});
     blocks.push_back(std::move(fields));
     for (const std::string& name : flag.cautions)
         if (const Caution* caution = find_caution(name))

@@ -79,10 +79,10 @@
         </translation>
     </message>
     <message numerus="yes">
-        <source>carried by %n reading(s) since %1</source>
+        <source>carried by %n reading(s), the first of %1</source>
         <translation>
             <numerusform>carried by the reading of %1</numerusform>
-            <numerusform>carried by %n readings since %1</numerusform>
+            <numerusform>carried by %n readings, the first of %1</numerusform>
         </translation>
     </message>
     <message numerus="yes">
