@@ -106,6 +106,9 @@ private:
         add(sheet_.corrected, tr_("corrected"), false);
         add(sheet_.expected, tr_("expected"), false);
         add(sheet_.deviation, tr_("deviation"), true);
+        if (sheet_.deviation && sheet_.deviation_half_width)
+            became.back() = tr_("deviation %1").arg(with_unit(
+                with_uncertainty(*sheet_.deviation, sheet_.deviation_half_width, sheet_.decimals), difference_unit(sheet_.unit)));
         add(sheet_.apart, tr_("apart from the others"), true);
         add(sheet_.from_usual, tr_("from its own usual level"), true);
         if (!became.isEmpty())
@@ -129,7 +132,8 @@ private:
     {
         if (sheet_.inputs.empty())
             return;
-        head(tr_("What went into it, and its share of the uncertainty"));
+        head(sheet_.deviation_half_width ? tr_("What went into it, and its share of the deviation's ±")
+                                         : tr_("What went into it, and its share of the uncertainty"));
         begin_table();
         for (const WorkingInput& input : sheet_.inputs)
             add_input(input);

@@ -42,7 +42,9 @@ public:
         sheet_.expected = judged_->expected;
         sheet_.deviation = judged_->deviation;
         sheet_.apart = judged_->apart;
-        sheet_.half_width = budget_.half_width();
+        sheet_.half_width = instrument_uncertainty(engine_, q_, judged_->raw);
+        if (sheet_.deviation || sheet_.corrected)
+            sheet_.deviation_half_width = budget_.half_width();
         add_typed(*own);
         add_correction();
         add_expected();
@@ -77,8 +79,8 @@ private:
             }
         if (in.origin == "mean of what was read")
             in.place = Place::engine();
-        if (sheet_.half_width && *sheet_.half_width > 0.0)
-            in.share = moved * moved / (*sheet_.half_width * *sheet_.half_width);
+        if (const auto half_width = budget_.half_width(); half_width && *half_width > 0.0)
+            in.share = moved * moved / (*half_width * *half_width);
         sheet_.inputs.push_back(std::move(in));
         return sheet_.inputs.back();
     }

@@ -102,7 +102,10 @@ std::string workings_text(const Workings& workings, const std::string& heading)
     };
     further("Corrected", workings.corrected);
     further("Expected", workings.expected);
-    further("Deviation", workings.deviation);
+    if (workings.deviation)
+        lines.add(with_unit("Deviation: " + number(*workings.deviation) +
+                                (workings.deviation_half_width ? " ± " + short_number_text(*workings.deviation_half_width) : ""),
+                            workings.unit));
     further("Apart from the others", workings.apart);
     further("From its own usual level", workings.from_usual);
     if (!workings.missing.empty())

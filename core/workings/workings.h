@@ -39,8 +39,9 @@ struct Workings
     Place place;
     std::string unit;
     int decimals = 1;                       ///< as the result is shown
-    std::optional<double> value, half_width;
+    std::optional<double> value, half_width; ///< of a typed value the instrument's alone
     std::optional<double> corrected, expected, deviation, apart, from_usual; ///< where the number has them
+    std::optional<double> deviation_half_width; ///< of a typed value: load and ambient conditions come into it
     std::string formula;                    ///< with the symbols of the inputs
     std::string source, validity;           ///< of the formula
     std::vector<WorkingInput> inputs;

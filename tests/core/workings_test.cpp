@@ -162,7 +162,8 @@ TEST(Workings, OfATypedValueFollowTheWholeChain)
     const auto& judged_value = *std::find_if(judgement.readings[0].values.begin(), judgement.readings[0].values.end(), [](const JudgedValue& v) {
         return v.place == Place::cylinder(1);
     });
-    EXPECT_EQ(sheet.half_width, judged_value.uncertainty);
+    EXPECT_EQ(sheet.deviation_half_width, judged_value.uncertainty);
+    EXPECT_LT(*sheet.half_width, *sheet.deviation_half_width) << "the gauge's own, without load and ambient";
     EXPECT_EQ(sheet.apart, judged_value.apart);
     const auto median = std::find_if(sheet.steps.begin(), sheet.steps.end(), [](const WorkingStep& step) {
         return step.words == "Median of the other cylinders' deviations";
