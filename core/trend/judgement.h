@@ -17,7 +17,7 @@
 /// is of the quantity's own kind, whatever kind was typed.
 namespace evenstroke {
 
-inline constexpr int method_version = 2;
+inline constexpr int method_version = 3;
 
 /// Worst last. A level is always shown as word and mark, never as colour alone.
 enum class Level { no_data, learning, quiet, note, ask, watch, act };

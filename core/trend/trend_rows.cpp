@@ -142,18 +142,24 @@ CellsOfTrend find_cells(const Trend& trend, const drift::Input& input, const dri
     return found;
 }
 
-/// The first reading of a standing flag's change on this trend: the band stays at the level before it.
+/// The first reading of a standing flag's change on this trend: the band stays at the level before it. Of a cylinder that
+/// holds for all its quantities: what follows a fault slowly must not become usual on the way (a compression ratio beside
+/// the compression pressure that it is made of).
 std::optional<std::size_t> standing_onset(const Judgement& judgement, const Trend& trend)
 {
-    const Place subject = trend.place.kind == Place::Kind::cylinder ? trend.place : Place::engine();
+    const bool of_cylinder = trend.place.kind == Place::Kind::cylinder;
+    const Place subject = of_cylinder ? trend.place : Place::engine();
+    std::optional<std::size_t> of_another;
     for (const Flag* flag : judgement.standing_flags()) {
         if (flag->subject != subject || flag->absolute_limit || flag->severity == Level::ask || flag->carrying.empty())
             continue;
         for (const MovedQuantity& moved : flag->moved)
             if (moved.quantity == trend.quantity)
                 return flag->carrying.front();
+        if (of_cylinder && !of_another)
+            of_another = flag->carrying.front();
     }
-    return std::nullopt;
+    return of_another;
 }
 
 /// A quantity of the engine that is judged although no baseline speaks of it (the difference over the coolant

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/reading/typed_number.h"
 #include "core/review/reading_review.h"
+#include "core/trend/usual_level.h"
 #include "core/workings/find_workings.h"
 
 #include "tests/core/example_engine.h"
@@ -182,6 +183,18 @@ TEST(ReadingReview, ACylinderIsMeasuredFromItsOwnUsualLevel)
         ASSERT_TRUE(other && other->from_usual) << sound;
         EXPECT_LT(std::abs(*other->from_usual), 6.0) << sound;
     }
+}
+
+TEST(ReadingReview, WhatFollowsTheFaultOfACylinderDoesNotBecomeUsualOnTheWay)
+{
+    // The ratio is made of the compression pressure that leaks: both are measured from the level before the leak.
+    const Judgement judgement = judged(record_with_a_leak());
+    const auto pressure = usual_level(judgement, 39, *find_quantity("compression_pressure"), Place::cylinder(3));
+    const auto ratio = usual_level(judgement, 39, *find_quantity("compression_pressure_ratio"), Place::cylinder(3));
+    ASSERT_TRUE(pressure);
+    ASSERT_TRUE(ratio);
+    EXPECT_LT(pressure->value, pressure->low);
+    EXPECT_LT(ratio->value, ratio->low);
 }
 
 TEST(ReadingReview, UnsteadyReadingsAreShownAndNothingInThemIsCalledAFault)
