@@ -45,7 +45,7 @@ struct Hypothesis
     // Words, ready for a page or a report:
     std::string what;                ///< "This looks like ...", "This partly looks like ..."
     std::vector<std::string> fits, against, not_read;
-    std::string order;               ///< why it stands where it does: "accounts for 87 % of what moved; ..."
+    std::string order;               ///< why it stands where it does: "odds of about 1 to 6 against the first"
     std::string course;              ///< whether the course over time fits; empty where it says nothing
     std::string check_next, urgency; ///< sentences
     std::vector<std::string> cautions; ///< catalogue names, most urgent first

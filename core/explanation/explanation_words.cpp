@@ -195,24 +195,22 @@ void word_hypothesis(Hypothesis& hypothesis, const ChangeWindow* window, bool tw
     hypothesis.cautions = cautions_for(fault.id, {}, two_stroke);
 }
 
-/// Why the causes stand in this order: the share explained alone would often give another.
+/// Why the causes stand in this order. The share explained is no part of it: it is cut where a change is far beyond the
+/// noise, and says little of causes that move the same things.
 void word_order(std::vector<Hypothesis>& causes)
 {
     for (Hypothesis& cause : causes) {
         if (!cause.explained)
             continue;
-        const std::string share = "accounts for " + std::to_string(std::lround(100.0 * *cause.explained)) + " % of what moved";
         if (cause.in_the_rest)
-            cause.order = share + " once the first is taken off";
+            cause.order = "after the first is taken off what moved";
         else if (&cause == &causes.front())
-            cause.order = share + (causes.size() > 1 ? "; first by how well sizes, dates and what stayed as usual go with it, and how often it is met" : "");
+            cause.order = causes.size() > 1 ? "first by sizes, dates, what stayed as usual and how often such a fault is met" : "";
         else if (cause.as_likely_as_first)
-            cause.order = share + "; as likely as the first, as far as these readings can tell";
+            cause.order = "as likely as the first, as far as these readings can tell";
         else if (cause.odds && *cause.odds < 1.0)
-            cause.order = share + "; about 1 to " + two_digits(1.0 / std::max(*cause.odds, 1e-3)) +
+            cause.order = "odds of about 1 to " + two_digits(std::min(1.0 / *cause.odds, 1000.0)) +
                           (*cause.odds < 1e-3 ? " or less" : "") + " against the first";
-        else
-            cause.order = share;
     }
 }
 
