@@ -44,6 +44,19 @@ std::optional<int> cylinder_of(const CardFilesTask& task, std::size_t file, cons
                : storage::guess_cylinder(to_std(QFileInfo(from.path).completeBaseName()), task.engine);
 }
 
+/// One layout holds for all files; a header that speaks of another unit, or counts from elsewhere, is asked about.
+std::optional<WrittenUnit> contradicting_unit(const CardFilesTask& task, const QString& path)
+{
+    constexpr int some = 40;
+    const auto lines = storage::first_lines_of(path, some);
+    const auto unit = lines && task.layout.unit && !task.layout.calibration ? storage::guess_layout(lines.value()).unit : std::nullopt;
+    if (!unit)
+        return std::nullopt;
+    const bool other_kind = (unit->kind == PressureKind::gauge && !task.layout.gauge) ||
+                            (unit->kind == PressureKind::absolute && task.layout.gauge);
+    return unit->id != *task.layout.unit || other_kind ? unit : std::nullopt;
+}
+
 std::vector<FileTrace> read_file(const CardFilesTask& task, std::size_t file)
 {
     auto read = storage::read_traces(task.files[file].path, task.layout, task.engine);
@@ -55,8 +68,10 @@ std::vector<FileTrace> read_file(const CardFilesTask& task, std::size_t file)
         none.cylinder = task.files[file].cylinder;
         return {none};
     }
+    const auto header_unit = contradicting_unit(task, task.files[file].path);
     for (storage::ReadTrace& one : read.value()) {
         FileTrace trace;
+        trace.header_unit = header_unit;
         trace.file = file;
         trace.column = one.column;
         trace.cylinder = cylinder_of(task, file, one);

@@ -33,6 +33,7 @@ struct FileTrace
     int missing = 0;
     std::shared_ptr<const indicator::Evaluation> card;
     std::optional<Problem> problem; ///< with `trace`: it can be kept and not be evaluated
+    std::optional<WrittenUnit> header_unit; ///< of its own header, where that contradicts the layout
     QByteArray packed; ///< the samples as a history keeps them
     std::vector<storage::CardEntry> same; ///< stored cards of the engine with exactly these samples, as the page found them
 };

@@ -89,12 +89,9 @@ void CardFilesPage::show_unit_words()
     ui_->unit_button->setVisible(differs);
     if (!differs)
         return;
-    const QString symbol = to_qstring(unit(proposed_.unit->id).symbol);
-    const QString kind = proposed_.unit->kind == PressureKind::gauge      ? tr(" gauge")
-                         : proposed_.unit->kind == PressureKind::absolute ? tr(" absolute")
-                                                                          : QString();
-    ui_->unit_words->setText(tr("The file's header speaks of %1%2.").arg(symbol, kind));
-    ui_->unit_button->setText(tr("it is %1%2").arg(symbol, kind));
+    const QString words = unit_in_words(*proposed_.unit);
+    ui_->unit_words->setText(tr("The file's header speaks of %1.").arg(words));
+    ui_->unit_button->setText(tr("it is %1").arg(words));
 }
 
 void CardFilesPage::show_traces()

@@ -125,7 +125,7 @@ QString difference_sentence(const CardsInHand& cards, const ReviewedCard& card)
         if (part.clear)
             apart.append(tr_("%1 %2 (%3)").arg(part_name(part.part), part_words(part), part_meaning(part.part, shown_difference(part) > 0.0)));
     const QString with = healthy_words(cards, *card.comparison);
-    QString words = apart.isEmpty() ? tr_("Nothing differs beyond the uncertainty from %1.").arg(with)
+    QString words = apart.isEmpty() ? tr_("No part of the cycle differs clearly (three standard deviations) from %1; results in bold are beyond their ± (95 of 100).").arg(with)
                                     : tr_("Different from %1: %2.").arg(with, apart.join(QStringLiteral("; ")));
     if (card.comparison->dead_centre_assumed)
         words += u' ' + tr_("Dead centre of one of the two is not known: the uncertainty is wide.");

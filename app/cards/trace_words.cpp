@@ -55,8 +55,18 @@ std::optional<double> absurd_scatter(const indicator::Evaluation& card)
 
 } // namespace
 
+QString unit_in_words(const WrittenUnit& written)
+{
+    const QString kind = written.kind == PressureKind::gauge      ? tr_(" gauge")
+                         : written.kind == PressureKind::absolute ? tr_(" absolute")
+                                                                  : QString();
+    return to_qstring(unit(written.id).symbol) + kind;
+}
+
 QString trace_doubt(const FileTrace& trace)
 {
+    if (trace.header_unit)
+        return tr_("its header speaks of %1, and it is read otherwise").arg(unit_in_words(*trace.header_unit));
     if (!trace.card)
         return {};
     if (const auto scatter = absurd_scatter(*trace.card))

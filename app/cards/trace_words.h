@@ -15,6 +15,9 @@ QString trace_sentences(const FileTrace& trace);
 /// "720 samples" or "20 cycles, 72 000 samples"; empty where there is no trace.
 QString trace_size_text(const FileTrace& trace);
 
+/// "bar gauge"
+QString unit_in_words(const WrittenUnit& written);
+
 /// Why a card should not be kept without a second look: its dead centre is not determined, or its cycles
 /// scatter absurdly. Empty where nothing speaks against it.
 QString trace_doubt(const FileTrace& trace);

@@ -148,6 +148,7 @@ void check_compression_ratio(const Engine& engine, const Numbers& numbers, const
     const QuantityId compression_id = id_of("compression_pressure", Place::Kind::cylinder);
     std::vector<int> off;
     double ratio_off = 0.0, usual_off = 0.0;
+    bool any_low = false, any_high = false;
     int compared = 0;
     for (int cylinder = 1; cylinder <= engine.cylinders; ++cylinder) {
         const auto ratio = ratio_at(numbers, Place::cylinder(cylinder));
@@ -160,6 +161,7 @@ void check_compression_ratio(const Engine& engine, const Numbers& numbers, const
         off.push_back(cylinder);
         ratio_off = *ratio;
         usual_off = *usual;
+        (*ratio < *usual ? any_low : any_high) = true;
     }
     if (off.empty())
         return;
@@ -182,7 +184,11 @@ void check_compression_ratio(const Engine& engine, const Numbers& numbers, const
             ": compression over scavenge pressure is more than 5 % off its "
             "usual ratio" +
             (off.size() == 1 ? ", " + change : std::string()) +
-            ". Read the compression pressure again; if it stays, rings or exhaust valve come to mind.",
+            ". Read the compression pressure again" +
+            (any_low ? std::string("; if it stays ") + (any_high ? "where it is " : "") + "low, rings or exhaust valve come to mind." : std::string()) +
+            (any_high ? std::string(any_low ? " A" : ". A") +
+                            " higher one is no leak: a figure misread, an indicator gone wrong, or work that made the compression space smaller."
+                      : std::string()),
         {},
         false};
     for (const int cylinder : off)
