@@ -46,6 +46,7 @@ void ReadingPage::connect_all()
     const auto buttons = side_buttons();
     for (std::size_t i = 0; i < buttons.size(); ++i)
         connect(buttons[i], &QPushButton::clicked, this, [this, i] { choose_side(static_cast<Side>(i)); });
+    connect(&workplace(), &Workplace::history_changed, this, [this] { cards_of_.clear(); }); // cards come and go
     connect(ui_->view, &ReviewView::row_chosen, this, &ReadingPage::take_row);
     connect(ui_->view, &ReviewView::trend_asked, this, &ReadingPage::open_trend);
     connect(ui_->view, &ReviewView::workings_asked, this, &ReadingPage::open_workings);

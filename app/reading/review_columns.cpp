@@ -14,7 +14,7 @@ namespace {
 
 using namespace review_sizes;
 
-constexpr int fewest_words = 168, fewest_verdict = 88, name_margin = 4, verdict_margins = 12, head_margins = 10;
+constexpr int fewest_words = 168, fewest_words_narrow = 130, fewest_verdict = 88, name_margin = 4, verdict_margins = 12, head_margins = 10;
 
 /// What the column of names must be wide for this row to have its name in one line.
 int width_of_words(const ReviewRow& row, int place_width)
@@ -65,7 +65,7 @@ int note_height(const ReviewModel& model, int row, const ReviewColumns& columns,
     const int first = first_column_of_verdict(*line);
     // The columns may be wider than the view, which shows the first of them.
     const int seen = std::min(columns.between(first, ReviewModel::column_count), room - columns.between(0, first));
-    const int in_row = seen - verdict_margins - mark;
+    const int in_row = columns.width[ReviewModel::verdict] == 0 ? 0 : seen - verdict_margins - mark;
     if (metrics.horizontalAdvance(words) <= in_row)
         return 0;
     const QRect under = note_room(room).adjusted(mark, 0, 0, 0);
@@ -140,13 +140,16 @@ ReviewColumns measure_columns(const ReviewModel& model, int room)
     for (const int spare : {ReviewModel::deviation_half_width, ReviewModel::corrected, ReviewModel::half_width, ReviewModel::expected})
         if (room - columns.between(ReviewModel::place, ReviewModel::verdict) < fewest_words + fewest_verdict)
             columns.width[static_cast<std::size_t>(spare)] = 0;
+    // Where that is not enough, every verdict stands under its row.
+    const bool narrow = room - columns.between(ReviewModel::place, ReviewModel::verdict) < fewest_words + fewest_verdict;
+    const int least_words = narrow ? fewest_words_narrow : fewest_words, least_verdict = narrow ? 0 : fewest_verdict;
     const int place_width = columns.width[ReviewModel::place];
-    int words = fewest_words;
+    int words = least_words;
     for (int row = 0; row < model.rowCount(); ++row)
         words = std::max(words, width_of_words(*model.row(row), place_width));
     const int left = room - columns.between(ReviewModel::place, ReviewModel::verdict);
-    columns.width[ReviewModel::words] = std::clamp(words, fewest_words, std::max(fewest_words, left - fewest_verdict));
-    columns.width[ReviewModel::verdict] = std::max(fewest_verdict, left - columns.width[ReviewModel::words]);
+    columns.width[ReviewModel::words] = std::clamp(words, least_words, std::max(least_words, left - least_verdict));
+    columns.width[ReviewModel::verdict] = narrow ? 0 : std::max(least_verdict, left - columns.width[ReviewModel::words]);
     for (int row = 0; row < model.rowCount(); ++row) {
         columns.name.push_back(further_lines(*model.row(row), columns));
         columns.note.push_back(note_height(model, row, columns, room));

@@ -149,10 +149,21 @@ private:
     void put(const Heading& heading)
     {
         setter_.move_down(setter_.at_page_top() ? 0.0 : 6.0);
-        const Table* below = at_ + 1 < section_.blocks.size() ? std::get_if<Table>(&section_.blocks[at_ + 1]) : nullptr;
-        setter_.need(std::max(90.0, below ? line_height(ReportFont::heading) + 4.0 + least_height(*below, setter_) : 0.0));
+        setter_.need(std::max(90.0, line_height(ReportFont::heading) + 4.0 + least_height_below()));
         setter_.paragraph(words_of(heading.text), ReportFont::heading, Typesetter::left, setter_.width());
         setter_.move_down(4.0);
+    }
+
+    /// Of the table or plot that a heading stands over, and stays with.
+    double least_height_below() const
+    {
+        if (at_ + 1 >= section_.blocks.size())
+            return 0.0;
+        const Block& below = section_.blocks[at_ + 1];
+        if (const Table* table = std::get_if<Table>(&below))
+            return least_height(*table, setter_);
+        const Plot* plot = std::get_if<Plot>(&below);
+        return !plot ? 0.0 : plot->across == Plot::Across::time ? plot_height : small_plot_height;
     }
 
     void put(const FieldList& list)

@@ -64,6 +64,8 @@ void add_second_opinions(TrendPicture& picture, const Judgement& judgement)
 {
     const SecondOpinions opinions = second_opinions(judgement, picture.quantity, picture.place);
     if (opinions.fixed) {
+        picture.fixed_high.name = tr_("fixed limit of %1 from the mean of the others")
+                                      .arg(with_unit(number_text(opinions.fixed->limit, 0), to_qstring(opinions.fixed->unit)));
         if (picture.view == ValueView::apart)
             for (const FixedLimitOpinion::Edge& edge : opinions.fixed->edges) {
                 const auto time = static_cast<double>(

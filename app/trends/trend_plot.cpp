@@ -277,7 +277,7 @@ void TrendPlot::add_points()
     add(unsteady_times, unsteady_values,
         QCPScatterStyle(QCPScatterStyle::ssCircle, theme_->line, theme_->page, point_size + 1.0));
     add(doubtful_times, doubtful_values,
-        QCPScatterStyle(QCPScatterStyle::ssCross, theme_->muted, Qt::NoBrush, point_size + 3.0));
+        QCPScatterStyle(QCPScatterStyle::ssCross, theme_->muted, QColor(Qt::transparent), point_size + 3.0));
 }
 
 void TrendPlot::add_chosen()
@@ -285,7 +285,7 @@ void TrendPlot::add_chosen()
     if (!ring_) {
         ring_ = addGraph(values_->axis(QCPAxis::atBottom), values_->axis(QCPAxis::atLeft));
         ring_->setLineStyle(QCPGraph::lsNone);
-        ring_->setScatterStyle(QCPScatterStyle(QCPScatterStyle::ssCircle, theme_->ink, Qt::NoBrush, ring_size));
+        ring_->setScatterStyle(QCPScatterStyle(QCPScatterStyle::ssCircle, theme_->ink, QColor(Qt::transparent), ring_size));
         ring_whiskers_ = add_whiskers(ring_);
         ring_whiskers_->setPen(theme_->pen(theme_->ink));
     }

@@ -53,7 +53,7 @@ void TrendPlot::add_fixed_limits()
         line->setPen(theme_->pen(theme_->muted));
         line->setLayer(QStringLiteral("background"));
     }
-    QCPItemText* name = add_text(tr("customary fixed limit"), values_, theme_->muted, false);
+    QCPItemText* name = add_text(picture_.fixed_high.name, values_, theme_->muted, false);
     name->position->setCoords(x->range().lower, picture_.fixed_high.values.front());
     name->setPositionAlignment(Qt::AlignLeft | Qt::AlignBottom);
     name->setPadding(QMargins(6, 0, 0, 2));

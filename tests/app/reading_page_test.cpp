@@ -97,6 +97,21 @@ TEST_F(ReadingDesk, NothingIsCutWhereThePageHasRoom)
     }
 }
 
+TEST_F(ReadingDesk, TheNumberTheMarkGoesByIsSeenOnASmallScreenToo)
+{
+    begin("reading");
+    frame_->resize(1024, 700);
+    QTest::qWait(10);
+    const int last = ReviewModel::from_usual;
+    EXPECT_LE(view().columnViewportPosition(last) + view().columnWidth(last), view().viewport()->width());
+    const ReviewColumns& columns = view().columns();
+    for (int row = 0; row < view().review_model().rowCount(); ++row) {
+        const bool says = view().review_model().row(row)->line &&
+                          !view().review_model().index(row, ReviewModel::verdict).data().toString().isEmpty();
+        EXPECT_TRUE(!says || columns.width[ReviewModel::verdict] > 0 || columns.note[static_cast<std::size_t>(row)] > 0) << row;
+    }
+}
+
 TEST_F(ReadingDesk, AValueThatWasCorrectedSaysWhatItWas)
 {
     begin("reading");
