@@ -14,7 +14,7 @@ namespace {
 
 using namespace review_sizes;
 
-constexpr int fewest_words = 168, fewest_words_narrow = 130, fewest_verdict = 88, name_margin = 4, verdict_margins = 12, head_margins = 10;
+constexpr int fewest_words = 168, fewest_words_narrow = 116, fewest_verdict = 88, name_margin = 4, verdict_margins = 12, head_margins = 10;
 
 /// What the column of names must be wide for this row to have its name in one line.
 int width_of_words(const ReviewRow& row, int place_width)

@@ -60,6 +60,8 @@ private:
 /// The flag says something of this quantity: it leads, or moved so far that the trend carries a note for it.
 bool speaks_of(const Flag& flag, QuantityId quantity);
 
+inline constexpr const char* one_bar_taken = "1 bar taken: no barometer was read";
+
 /// "high", "low": which way the line departs.
 std::string direction(const ReviewLine& line);
 

@@ -74,6 +74,11 @@ std::optional<ReviewLine> derived_mean_line(const ReviewContext& context, std::s
             line->spread = true;
             line->has_workings = false;
             line->low = line->high = row.value;
+            // What was said of that one cylinder is not said of all.
+            line->apart = line->from_usual = std::nullopt;
+            line->level = context.held.empty() ? Level::quiet : Level::no_data;
+            if (line->verdict != one_bar_taken)
+                line->verdict = context.held.empty() ? "" : "not judged: " + context.held;
         }
         line->low = std::min(*line->low, row.value);
         line->high = std::max(*line->high, row.value);

@@ -198,7 +198,7 @@ std::optional<ReviewLine> derived_line(const ReviewContext& context, std::string
     line.from_usual = id ? context.against_usual(*id, place).by : std::nullopt;
     line.level = id ? context.level(*id, place) : Level::no_data;
     const bool without_barometer = known && known->uses_barometer && !context.conditions.barometer;
-    line.verdict = without_barometer ? "1 bar taken: no barometer was read" : verdict(context, line);
+    line.verdict = without_barometer ? one_bar_taken : verdict(context, line);
     return line;
 }
 

@@ -185,6 +185,22 @@ TEST(ReadingReview, ACylinderIsMeasuredFromItsOwnUsualLevel)
     }
 }
 
+TEST(ReadingReview, AMeanDoesNotSpeakForItsFirstCylinder)
+{
+    EngineRecord record = sound_record(40);
+    for (std::size_t i = 26; i < record.readings.size(); ++i)
+        move_value(record.readings[i], "compression_pressure", Place::cylinder(1), -0.9 * static_cast<double>(i - 25));
+    const ReadingReview review = review_reading(judged(std::move(record)), 39);
+    int means = 0;
+    for (const ReviewLine& line : find(review, ReviewTopic::means)->lines) {
+        EXPECT_FALSE(line.from_usual) << line.words;
+        EXPECT_FALSE(line.apart) << line.words;
+        EXPECT_EQ(line.verdict.find("low"), std::string::npos) << line.words << ": " << line.verdict;
+        means += line.spread && line.quantity && quantity(*line.quantity).derived() ? 1 : 0;
+    }
+    EXPECT_GE(means, 1) << "a ratio of compression over scavenge pressure";
+}
+
 TEST(ReadingReview, WhatFollowsTheFaultOfACylinderDoesNotBecomeUsualOnTheWay)
 {
     // The ratio is made of the compression pressure that leaks: both are measured from the level before the leak.
