@@ -10,7 +10,6 @@
 
 #include <algorithm>
 #include <cmath>
-#include <utility>
 
 namespace evenstroke {
 
@@ -278,8 +277,13 @@ void add_words(Board& board, const Judgement& judgement)
     const std::vector<const Flag*> flags = judgement.standing_flags();
     if (flags.empty()) {
         add_quiet_words(board, judgement);
-        if (!without_effect.isEmpty())
-            board.second_line = std::exchange(board.headline, without_effect);
+        if (!without_effect.isEmpty()) {
+            const bool nothing_else = board.level_words.isEmpty() && board.level != Level::learning;
+            board.second_line = nothing_else ? tr_("Nothing else stands out.") : board.headline;
+            board.headline = without_effect;
+            board.level = std::max(board.level, Level::note);
+            board.level_words = level_text(board.level);
+        }
         if (!not_read_yet.isEmpty())
             board.second_line = QStringList{not_read_yet, board.second_line}.join(u' ').trimmed();
         return;

@@ -24,11 +24,16 @@ bool starts_anew(const Event& event)
     return kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_segment;
 }
 
-std::string work_words(const Event& event, const Engine& engine)
+std::string title_of(const Event& event)
 {
     const EventKind* kind = find_event_kind(event.kind);
+    return lower_first(kind ? kind->title : event.kind);
+}
+
+std::string work_words(const Event& event, const Engine& engine)
+{
     const std::string place = event.place.kind == Place::Kind::cylinder ? " of " + place_words(engine, event.place) : "";
-    return lower_first(kind ? kind->title : event.kind) + place + " on " + short_date(event.date.utc);
+    return title_of(event) + place + " on " + short_date(event.date.utc);
 }
 
 struct Outcome
@@ -83,7 +88,7 @@ std::string outcome_sentence(const Judgement& judgement, const Flag& flag, const
     const Engine& engine = judgement.record->engine;
     const Quantity& q = quantity(flag.quantity);
     const std::string in = unit(q.unit).symbol == "1" ? "" : " " + std::string(unit(q.unit).symbol);
-    return subject_text(engine, flag.subject) + " " + lower_first(q.title) + " reads as before the " + work_words(work, engine) + ": " +
+    return subject_text(engine, flag.subject) + " " + lower_first(q.title) + " reads as before (" + title_of(work) + " on " + short_date(work.date.utc) + "): " +
            two_digits(std::abs(outcome.after)) + in + (outcome.after < 0.0 ? " below" : " above") + " its earlier level, " +
            two_digits(std::abs(outcome.before)) + " before the work (" + std::to_string(outcome.readings) +
            (outcome.readings == 1 ? " reading" : " readings") + " since). Look again before that counts as usual.";

@@ -13,7 +13,7 @@ namespace evenstroke {
 /// where every reading that work could be seen in is there.
 std::string work_not_read_yet(const Judgement& judgement);
 
-/// "Cylinder 4 compression pressure reads as before the overhaul of 27 Nov 2026: 5.9 bar below its earlier level, 5.8
+/// "Cylinder 4 compression pressure reads as before (overhaul on 27 Nov 2026): 5.9 bar below its earlier level, 5.8
 /// before the work. ..." for a cylinder's flag that the work closed, while too few readings have come since to learn what is
 /// usual. Empty where the work has mended it, or where that cannot be said.
 std::string work_without_effect(const Judgement& judgement, const Flag& flag);
