@@ -4,6 +4,7 @@
 #include "app/desk/number_text.h"
 #include "tests/app/invented_judgement.h"
 #include "tests/app/pictures.h"
+#include "tests/core/example_engine.h"
 
 #include <gtest/gtest.h>
 
@@ -16,7 +17,9 @@
 #include <QTemporaryDir>
 #include <QTest>
 
+#include <chrono>
 #include <cmath>
+#include <memory>
 
 namespace evenstroke {
 namespace {
@@ -64,6 +67,37 @@ TEST(StripBoard, AFlagThatRoseIsNotDatedBackToItsBeginning)
     flag.raised_at = flag.reading + 1;
     EXPECT_EQ(make_board(judgement, TimeRange::all).level_words,
               QStringLiteral("act since %1 (began %2 as watch)").arg(day_of(flag.reading + 1), day_of(flag.reading)));
+}
+
+/// Compression pressure of cylinder 3 falls 0.7 bar a month until an overhaul that mends nothing, or has no reading yet.
+Judgement judged_with_work(std::size_t readings_since)
+{
+    constexpr std::size_t onset = 26, work_at = 38;
+    EngineRecord record = example_record(work_at + readings_since);
+    for (std::size_t i = onset; i < record.readings.size(); ++i) {
+        const double fallen = i < work_at ? 0.7 * static_cast<double>(i - onset + 1) : 8.0;
+        move_value(record.readings[i], "compression_pressure", Place::cylinder(3), -fallen);
+        move_value(record.readings[i], "maximum_pressure", Place::cylinder(3), -0.9 * fallen);
+    }
+    Event work;
+    work.kind = "overhaul";
+    work.place = Place::cylinder(3);
+    work.date.utc = record.readings[work_at - 1].taken_at.utc + std::chrono::hours(24);
+    record.events.push_back(work);
+    return judge(std::make_shared<const EngineRecord>(std::move(record)));
+}
+
+TEST(StripBoard, SaysWhatRecordedWorkHasToDoWithWhatIsShown)
+{
+    const Board before = make_board(judged_with_work(0), TimeRange::all);
+    EXPECT_TRUE(before.headline.contains(QStringLiteral("Cylinder 3"))) << before.headline.toStdString();
+    EXPECT_TRUE(before.second_line.startsWith(QStringLiteral("Entered since the newest reading: overhaul of cylinder 3")))
+        << before.second_line.toStdString();
+    const Board after = make_board(judged_with_work(2), TimeRange::all);
+    EXPECT_TRUE(after.headline.contains(QStringLiteral("reads as before (overhaul on "))) << after.headline.toStdString();
+    EXPECT_EQ(after.level, Level::note);
+    EXPECT_EQ(after.level_words, level_text(Level::note));
+    EXPECT_FALSE(after.second_line.contains(QStringLiteral("Entered since"))) << after.second_line.toStdString();
 }
 
 TEST(StripBoard, AReadingThatCannotBeComparedLeavesNoPointAmongTheDifferences)
