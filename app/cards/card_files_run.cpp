@@ -50,11 +50,7 @@ std::optional<WrittenUnit> contradicting_unit(const CardFilesTask& task, const Q
     constexpr int some = 40;
     const auto lines = storage::first_lines_of(path, some);
     const auto unit = lines && task.layout.unit && !task.layout.calibration ? storage::guess_layout(lines.value()).unit : std::nullopt;
-    if (!unit)
-        return std::nullopt;
-    const bool other_kind = (unit->kind == PressureKind::gauge && !task.layout.gauge) ||
-                            (unit->kind == PressureKind::absolute && task.layout.gauge);
-    return unit->id != *task.layout.unit || other_kind ? unit : std::nullopt;
+    return unit && contradicts(*unit, task.layout) ? unit : std::nullopt;
 }
 
 std::vector<FileTrace> read_file(const CardFilesTask& task, std::size_t file)
@@ -85,6 +81,12 @@ std::vector<FileTrace> read_file(const CardFilesTask& task, std::size_t file)
 }
 
 } // namespace
+
+bool contradicts(const WrittenUnit& header, const storage::TraceLayout& layout)
+{
+    const PressureKind other = layout.gauge ? PressureKind::absolute : PressureKind::gauge;
+    return header.id != layout.unit.value() || header.kind == other;
+}
 
 void CardFilesRun::start(const CardFilesTask& task)
 {

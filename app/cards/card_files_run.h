@@ -47,6 +47,9 @@ struct CardFilesTask
     Reading reading; ///< for speed, charge pressure and temperature
 };
 
+/// Whether a header speaks of another unit than the layout, or counts from elsewhere; both name one.
+bool contradicts(const WrittenUnit& header, const storage::TraceLayout& layout);
+
 /// Reads the files of a task and evaluates their cards, a few at a time.
 class CardFilesRun : public WorkerRun
 {

@@ -82,9 +82,7 @@ void CardFilesPage::show_all()
 void CardFilesPage::show_unit_words()
 {
     const bool names = !files_.empty() && engine() && proposed_.unit && !first_lines_.empty();
-    const bool other_kind = names && ((proposed_.unit->kind == PressureKind::gauge && !layout_.gauge) ||
-                                      (proposed_.unit->kind == PressureKind::absolute && layout_.gauge));
-    const bool differs = names && (!layout_.unit || *layout_.unit != proposed_.unit->id || other_kind);
+    const bool differs = names && (!layout_.unit || contradicts(*proposed_.unit, layout_));
     ui_->unit_words->setVisible(differs);
     ui_->unit_button->setVisible(differs);
     if (!differs)

@@ -57,12 +57,24 @@ std::string count_words(const Engine& engine)
 
 } // namespace
 
+bool starts_anew(const Event& event)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    return kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_segment;
+}
+
+std::string event_words(const Event& event, const std::string& place)
+{
+    const EventKind* kind = find_event_kind(event.kind);
+    return (kind ? lower_first(kind->title) : event.kind) + place + " on " + short_date(event.date.utc);
+}
+
 std::string event_effect_word(const Event& event)
 {
     const EventKind* kind = find_event_kind(event.kind);
     if (!kind || kind->concerns == "ship")
         return "mark only";
-    if (kind->effect == EventKind::Effect::new_segment)
+    if (starts_anew(event))
         return "compared anew";
     return kind->effect == EventKind::Effect::new_offset ? "instrument anew" : "mark only";
 }
@@ -70,7 +82,7 @@ std::string event_effect_word(const Event& event)
 std::string event_effect_sentence(const Event& event, const Engine& engine)
 {
     const EventKind* kind = find_event_kind(event.kind);
-    if (kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_segment)
+    if (starts_anew(event))
         return work_sentence(*kind, event, engine);
     if (kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_offset)
         return instrument_sentence(*kind, event, engine);

@@ -10,6 +10,10 @@
 /// What an event does to the comparison, in words: the same that the judging does with it.
 namespace evenstroke {
 
+/// Whether what it concerns is compared anew from here on.
+bool starts_anew(const Event& event);
+/// "overhaul on 2 Dec 2026". @param place " of cylinder 4", or empty
+std::string event_words(const Event& event, const std::string& place = {});
 /// "compared anew", "its instrument anew", "mark only": for a table's cell.
 std::string event_effect_word(const Event& event);
 /// One sentence: "From here on cylinder 4 is compared anew: eight usable readings are needed before it can be flagged."

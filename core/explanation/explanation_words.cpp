@@ -3,6 +3,7 @@
 
 #include "core/explanation/cautions.h"
 #include "core/explanation/change_course.h"
+#include "core/explanation/event_effect.h"
 #include "core/sentence_words.h"
 #include "core/trend/flag_text.h"
 
@@ -48,12 +49,6 @@ std::string course_sentence(const Fault& fault, const ChangeWindow& window)
         return {};
     const bool fits = (fault.course == Fault::Course::creeping) == window.ramp;
     return std::string("That it ") + (window.ramp ? "came little by little" : "came at once") + (fits ? " fits this cause." : " speaks rather against this cause.");
-}
-
-std::string event_words(const Event& event)
-{
-    const EventKind* kind = find_event_kind(event.kind);
-    return (kind ? lower_first(kind->title) : event.kind) + " on " + short_date(event.date.utc);
 }
 
 bool concerns(const Event& event, const Place& subject)

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/explanation/work_outcome.h"
 
+#include "core/explanation/event_effect.h"
+#include "core/reading/typed_number.h"
 #include "core/sentence_words.h"
 #include "core/trend/drift_input.h"
 #include "core/trend/flag_text.h"
@@ -18,22 +20,9 @@ namespace {
 constexpr double still_there = 0.6;
 constexpr std::size_t level_of = 12, last_before = 3; ///< readings
 
-bool starts_anew(const Event& event)
-{
-    const EventKind* kind = find_event_kind(event.kind);
-    return kind && kind->concerns != "ship" && kind->effect == EventKind::Effect::new_segment;
-}
-
-std::string title_of(const Event& event)
-{
-    const EventKind* kind = find_event_kind(event.kind);
-    return lower_first(kind ? kind->title : event.kind);
-}
-
 std::string work_words(const Event& event, const Engine& engine)
 {
-    const std::string place = event.place.kind == Place::Kind::cylinder ? " of " + place_words(engine, event.place) : "";
-    return title_of(event) + place + " on " + short_date(event.date.utc);
+    return event_words(event, event.place.kind == Place::Kind::cylinder ? " of " + place_words(engine, event.place) : "");
 }
 
 struct Outcome
@@ -87,8 +76,8 @@ std::string outcome_sentence(const Judgement& judgement, const Flag& flag, const
 {
     const Engine& engine = judgement.record->engine;
     const Quantity& q = quantity(flag.quantity);
-    const std::string in = unit(q.unit).symbol == "1" ? "" : " " + std::string(unit(q.unit).symbol);
-    return subject_text(engine, flag.subject) + " " + lower_first(q.title) + " reads as before (" + title_of(work) + " on " + short_date(work.date.utc) + "): " +
+    const std::string symbol = unit_behind(q.unit), in = symbol.empty() ? "" : " " + symbol;
+    return subject_text(engine, flag.subject) + " " + lower_first(q.title) + " reads as before (" + event_words(work) + "): " +
            two_digits(std::abs(outcome.after)) + in + (outcome.after < 0.0 ? " below" : " above") + " its earlier level, " +
            two_digits(std::abs(outcome.before)) + " before the work (" + std::to_string(outcome.readings) +
            (outcome.readings == 1 ? " reading" : " readings") + " since). Look again before that counts as usual.";

@@ -17,7 +17,6 @@
 #include <QTemporaryDir>
 #include <QTest>
 
-#include <chrono>
 #include <cmath>
 #include <memory>
 
@@ -69,22 +68,9 @@ TEST(StripBoard, AFlagThatRoseIsNotDatedBackToItsBeginning)
               QStringLiteral("act since %1 (began %2 as watch)").arg(day_of(flag.reading + 1), day_of(flag.reading)));
 }
 
-/// Compression pressure of cylinder 3 falls 0.7 bar a month until an overhaul that mends nothing, or has no reading yet.
 Judgement judged_with_work(std::size_t readings_since)
 {
-    constexpr std::size_t onset = 26, work_at = 38;
-    EngineRecord record = example_record(work_at + readings_since);
-    for (std::size_t i = onset; i < record.readings.size(); ++i) {
-        const double fallen = i < work_at ? 0.7 * static_cast<double>(i - onset + 1) : 8.0;
-        move_value(record.readings[i], "compression_pressure", Place::cylinder(3), -fallen);
-        move_value(record.readings[i], "maximum_pressure", Place::cylinder(3), -0.9 * fallen);
-    }
-    Event work;
-    work.kind = "overhaul";
-    work.place = Place::cylinder(3);
-    work.date.utc = record.readings[work_at - 1].taken_at.utc + std::chrono::hours(24);
-    record.events.push_back(work);
-    return judge(std::make_shared<const EngineRecord>(std::move(record)));
+    return judge(std::make_shared<const EngineRecord>(overhauled_record(readings_since, 8.0)));
 }
 
 TEST(StripBoard, SaysWhatRecordedWorkHasToDoWithWhatIsShown)

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/core/example_engine.h"
 
+#include <chrono>
 #include <cstdint>
 #include <cstdio>
 #include <stdexcept>
@@ -137,6 +138,23 @@ void move_value(Reading& reading, std::string_view name, Place place, double amo
         value.value_si = unit(value.unit).to_si(*value.number);
         value.typed = decimal_text(*value.number, quantity(id).decimals);
     }
+}
+
+EngineRecord overhauled_record(std::size_t readings_since, double left)
+{
+    constexpr std::size_t onset = 26, work_at = 38; // work_at: the first reading after the work
+    EngineRecord record = example_record(work_at + readings_since);
+    for (std::size_t i = onset; i < record.readings.size(); ++i) {
+        const double fallen = i < work_at ? 0.7 * static_cast<double>(i - onset + 1) : left;
+        move_value(record.readings[i], "compression_pressure", Place::cylinder(3), -fallen);
+        move_value(record.readings[i], "maximum_pressure", Place::cylinder(3), -0.9 * fallen);
+    }
+    Event work;
+    work.kind = "overhaul";
+    work.place = Place::cylinder(3);
+    work.date.utc = record.readings[work_at - 1].taken_at.utc + std::chrono::hours(24);
+    record.events.push_back(work);
+    return record;
 }
 
 } // namespace evenstroke

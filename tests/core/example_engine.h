@@ -22,4 +22,8 @@ EngineRecord example_record(std::size_t count);
 /// Adds `amount` to the typed number of a quantity at a place of one reading.
 void move_value(Reading& reading, std::string_view quantity, Place place, double amount);
 
+/// Compression and maximum pressure of cylinder 3 fall from the 27th reading on, the former by 0.7 bar a month; after the 38th
+/// comes an overhaul of it, with so many readings since in which `left` bar of the fall remain.
+EngineRecord overhauled_record(std::size_t readings_since, double left);
+
 } // namespace evenstroke
